@@ -1,0 +1,97 @@
+import type { SeriesKind } from "../readings/reading-columns";
+
+/**
+ * A recipe says how to read one logger file: everything the bytes do not say by themselves.
+ * Recognition proposes one, a person settles what could not be proved, preview and import use it alike.
+ */
+export interface FileRecipe {
+  readonly dialect: Dialect;
+  readonly columns: readonly ColumnRecipe[];
+  readonly time: TimeRecipe;
+  readonly seriesKind: SeriesKind;
+}
+
+export type TextEncoding = "utf-8" | "utf-16le" | "utf-16be" | "windows-1252";
+export type Separator = "," | ";" | "\t" | "|" | " ";
+
+export interface Dialect {
+  readonly encoding: TextEncoding;
+  readonly separator: Separator;
+  readonly quote: '"' | "'" | null;
+  /** 1-based line numbers in the file as written; null where there is none. */
+  readonly headerLine: number | null;
+  readonly unitsLine: number | null;
+  readonly firstDataLine: number;
+}
+
+export type ColumnMeaning =
+  "time" | "date" | "timeOfDay" | "flow" | "supply" | "return" | "signal" | "skip";
+
+export type FlowUnit = "m3/h" | "L/s" | "L/min" | "US gpm";
+export type TemperatureUnit = "degC" | "degF" | "K";
+export type ColumnUnit = FlowUnit | TemperatureUnit | "%";
+
+export type DecimalMark = "." | ",";
+
+export interface ColumnRecipe {
+  /** 0-based position in the row. */
+  readonly index: number;
+  /** As the header line has it, or "" where there is none. */
+  readonly header: string;
+  readonly meaning: ColumnMeaning;
+  /** Null for times and skipped columns, and for a quantity whose unit is still to be chosen. */
+  readonly unit: ColumnUnit | null;
+  readonly decimalMark: DecimalMark;
+}
+
+export type DateOrder = "dayMonthYear" | "monthDayYear" | "yearMonthDay";
+
+/** How a timestamp cell is written. `order` null means nothing in the file proves it: ask. */
+export type TimeFormat =
+  | { readonly kind: "calendar"; readonly order: DateOrder | null }
+  | { readonly kind: "epochSeconds" }
+  | { readonly kind: "epochMilliseconds" }
+  | { readonly kind: "spreadsheetDays" };
+
+/** Which clock the logger was set to. Ignored for cells that carry their own offset, and for epochs. */
+export type LoggerClock =
+  | { readonly kind: "site" }
+  | { readonly kind: "utc" }
+  | { readonly kind: "fixedOffset"; readonly offsetMinutes: number }
+  | { readonly kind: "zone"; readonly zone: string };
+
+export interface TimeRecipe {
+  readonly format: TimeFormat;
+  /** Null until somebody says; never needed when every cell carries its own offset or the format is an epoch. */
+  readonly clock: LoggerClock | null;
+}
+
+/** What to do with each kind of defect. A null is a question that stops the import when the defect occurs. */
+export interface RepairChoices {
+  /** Rows that repeat an instant with the same values. */
+  readonly identicalRepeats: "dropRepeats" | "leaveOutAll";
+  /** Rows that repeat an instant with other values. */
+  readonly conflictingRepeats: "keepFirst" | "keepLast" | "leaveOutAll" | null;
+  /** Rows earlier than the row before. */
+  readonly outOfOrder: "sort" | "leaveOut";
+  /** Tokens and numbers that mean "no reading". */
+  readonly sentinels: "noReading" | "asWritten";
+  /** Local times that do not exist on the day clocks go forward. */
+  readonly missingHour: "leaveOut" | "readAsBeforeChange";
+  /** Rows whose signal is under the threshold. */
+  readonly weakSignal: "exclude" | "keep" | null;
+  readonly weakSignalBelowPercent: number;
+  /** Instants that an earlier import of this point already holds with other values. */
+  readonly overlap: "keepEarlier" | "useThis" | null;
+}
+
+export const DEFAULT_REPAIR_CHOICES: RepairChoices = {
+  identicalRepeats: "dropRepeats",
+  conflictingRepeats: null,
+  outOfOrder: "sort",
+  sentinels: "noReading",
+  missingHour: "leaveOut",
+  weakSignal: null,
+  weakSignalBelowPercent: 40,
+  overlap: null,
+};

@@ -1,0 +1,50 @@
+import type { ColumnMeaning, FileRecipe, FlowUnit } from "./recipe";
+
+/** What recognition found in a file: a proposed recipe, the proof of each guess, and what it must ask. */
+export interface Recognition {
+  readonly recipe: FileRecipe;
+  /** One entry a guess, in the order a person would check them. */
+  readonly proofs: readonly Proof[];
+  /** What nothing in the file proves. The import waits for every answer. */
+  readonly questions: readonly Question[];
+  /** First lines as written, decoded, for the File step. */
+  readonly firstLines: readonly string[];
+  /** Rows from across the file, cells as written, for the Columns step. */
+  readonly sampleRows: readonly SampleRow[];
+  readonly dataRowCount: number;
+  readonly columnCount: number;
+  /** Serial number, interval and the like that the lines above the header name. */
+  readonly preamble: readonly { readonly line: number; readonly label: string; readonly value: string }[];
+}
+
+export interface SampleRow {
+  readonly line: number;
+  readonly cells: readonly string[];
+}
+
+export interface Proof {
+  readonly about:
+    "encoding" | "separator" | "headerLine" | "unitsLine" | "decimalMark" | "dateOrder" | "columnMeaning" | "columnUnit" | "seriesKind";
+  readonly columnIndex: number | null;
+  /** 1-based line of the row that proves it, with the cell that does; null where the whole file speaks. */
+  readonly line: number | null;
+  readonly cell: string | null;
+  readonly certainty: "proved" | "likely";
+}
+
+export type Question =
+  | { readonly code: "dateOrder"; readonly choices: readonly ("dayMonthYear" | "monthDayYear" | "yearMonthDay")[]; readonly firstCell: string; readonly lastCell: string;
+      /** Typical step in seconds under each choice, in the order of `choices`, so that a person can see which is likely. */
+      readonly stepSeconds: readonly (number | null)[] }
+  | { readonly code: "flowUnit"; readonly columnIndex: number; readonly minValue: number; readonly maxValue: number; readonly choices: readonly FlowUnit[] }
+  | { readonly code: "temperatureUnit"; readonly columnIndex: number; readonly minValue: number; readonly maxValue: number }
+  | { readonly code: "decimalMark"; readonly columnIndex: number; readonly cell: string; readonly line: number }
+  | { readonly code: "columnMeaning"; readonly meaning: ColumnMeaning }
+  | { readonly code: "loggerClock" };
+
+/** Why a file cannot be read at all. `remedy` codes are translated on screen. */
+export interface Unreadable {
+  readonly code: "empty" | "notText" | "noTimes" | "noRows" | "tooManyColumns";
+  readonly line: number | null;
+  readonly cell: string | null;
+}
