@@ -3,7 +3,7 @@
  *
  * Registers are both ≥ 0 and never netted. Integrals are what makes every mean reproducible:
  * flow-weighted ΔT = Σ flowDeltaT / Σ volume, energy-weighted ΔT = Σ powerDeltaT / Σ energy,
- * time mean ΔT = Σ deltaT / covered seconds. Heating ΔT is supply − return, cooling is return − supply.
+ * time mean ΔT = Σ deltaT / Σ running seconds. Heating ΔT is supply − return, cooling is return − supply.
  */
 
 /** Length of a stored interval. Every zone in use today starts its days on a quarter hour. */
@@ -21,6 +21,8 @@ export interface RegisterColumns {
   readonly powerDeltaTKwhK: Float64Array;
   /** ∫ Δθ dt in K·s over the time this register ran. */
   readonly deltaTKs: Float64Array;
+  /** Seconds this register ran: what `deltaTKs` is divided by. */
+  readonly runningS: Float64Array;
 }
 
 export interface IntervalEnergyColumns {
