@@ -1,0 +1,334 @@
+import { z } from "zod";
+import { contract, id, instant, nothing } from "./contract";
+
+/*
+ * Energy and readings of one metering point. Ranges are half-open. A range may be given as UTC
+ * instants, or as days of the site's zone; both ends in the same manner.
+ */
+const pointId = z.object({ pointId: id });
+const edge = z.union([z.iso.datetime({ offset: true }), z.iso.date()]);
+const range = z.object({ from: edge, to: edge.describe("exclusive") });
+
+const register = z.object({
+  energyKwh: z.number(),
+  volumeM3: z.number(),
+  /** Seconds this register ran. */
+  runningS: z.number(),
+  flowWeightedDeltaTK: z.number().nullable(),
+  energyWeightedDeltaTK: z.number().nullable(),
+  timeMeanDeltaTK: z.number().nullable(),
+});
+
+export const energyTotals = z.object({
+  heating: register,
+  cooling: register,
+  volumeM3: z.number(),
+  suppressedKwh: z.number(),
+  suppressedS: z.number(),
+  coveredS: z.number(),
+  expectedS: z.number(),
+  coverage: z.number().nullable().describe("covered / expected, 0 to 1"),
+  rows: z.object({
+    measured: z.number(),
+    excluded: z.number(),
+    noReading: z.number(),
+    expected: z.number().nullable(),
+  }),
+  apportioned: z.boolean(),
+});
+export type EnergyTotals = z.infer<typeof energyTotals>;
+
+export const energyBasis = z.object({
+  engineVersion: z.number().int().nullable(),
+  pressure: z.object({ absoluteMPa: z.number(), assumed: z.boolean() }),
+  meterSide: z.enum(["supply", "return"]),
+  blockedBy: z.enum(["glycol", "noTemperature", "noFlow", "outsideWater"]).nullable(),
+  recalculating: z.boolean(),
+});
+
+/** Columns, one entry a row, all the same length; null where nothing is covered. */
+const energyColumns = z.object({
+  startMs: z.array(z.number()),
+  lengthS: z.array(z.number()),
+  coveredS: z.array(z.number()),
+  heatingKwh: z.array(z.number().nullable()),
+  coolingKwh: z.array(z.number().nullable()),
+  volumeM3: z.array(z.number().nullable()),
+  meanSupplyC: z.array(z.number().nullable()),
+  meanReturnC: z.array(z.number().nullable()),
+  suppressedKwh: z.array(z.number()),
+  minPowerKw: z.array(z.number().nullable()),
+  maxPowerKw: z.array(z.number().nullable()),
+});
+
+export const getEnergy = contract({
+  operationId: "getEnergy",
+  summary: "Energy of a metering point by quarter-hour, hour, local day or as one total",
+  tag: "Energy",
+  method: "get",
+  path: "/points/:pointId/energy",
+  params: pointId,
+  query: range.extend({ step: z.enum(["quarterHour", "hour", "day", "total"]).default("day") }),
+  answer: z.object({
+    zone: z.string(),
+    from: instant,
+    to: instant,
+    basis: energyBasis,
+    totals: energyTotals,
+    /** Absent for `total`. */
+    columns: energyColumns.nullable(),
+  }),
+});
+export type EnergyAnswer = z.infer<(typeof getEnergy)["answer"]>;
+
+export const loadCard = z.object({
+  from: instant,
+  to: instant,
+  supplyC: z.number(),
+  returnC: z.number(),
+  flowM3PerHour: z.number(),
+  deltaTK: z.number(),
+  powerKw: z.number().describe("≥ 0, of the register named"),
+  register: z.enum(["heating", "cooling"]),
+});
+
+/** What the loop page shows of a range, in one answer. */
+export const getPointSummary = contract({
+  operationId: "getPointSummary",
+  summary:
+    "Totals, days, busiest half hour, night base and what was left out, over a range of local days",
+  tag: "Energy",
+  method: "get",
+  path: "/points/:pointId/summary",
+  params: pointId,
+  query: z.object({ from: z.iso.date(), to: z.iso.date() }),
+  answer: z.object({
+    zone: z.string(),
+    from: instant,
+    to: instant,
+    basis: energyBasis,
+    totals: energyTotals,
+    days: z.array(
+      z.object({
+        date: z.iso.date(),
+        heatingKwh: z.number().nullable(),
+        coolingKwh: z.number().nullable(),
+        volumeM3: z.number().nullable(),
+        coveredS: z.number(),
+        lengthS: z.number(),
+      }),
+    ),
+    busiest: loadCard.nullable().describe("busiest fully covered half hour"),
+    busiestDay: z.object({ date: z.iso.date(), energyKwh: z.number() }).nullable(),
+    nightBase: z
+      .object({
+        fromHour: z.number(),
+        toHour: z.number(),
+        powerKw: z.number(),
+        coverage: z.number(),
+      })
+      .nullable()
+      .describe("mean power over the named night hours of the range"),
+    leftOut: z.array(
+      z.object({
+        kind: z.enum(["filled", "excluded", "noReading", "missing"]),
+        from: instant,
+        to: instant,
+        rows: z.number().nullable(),
+        reason: z.enum(["weakSignal", "noReading", "noRows", "noTemperature"]),
+      }),
+    ),
+    leftOutCount: z.number().int(),
+    firstReadingAt: instant.nullable(),
+    lastReadingAt: instant.nullable(),
+  }),
+});
+export type PointSummary = z.infer<(typeof getPointSummary)["answer"]>;
+
+/** At most two points a pixel: per pixel column the least and the greatest value, in time order. */
+const screenSeries = z.object({
+  /** Offsets from `t0Ms` in ms; drawn as one line, null is a hole. */
+  tMs: z.array(z.number()),
+  value: z.array(z.number().nullable()),
+});
+export const getSeries = contract({
+  operationId: "getSeries",
+  summary: "What a chart of the given width can draw of the readings",
+  tag: "Energy",
+  method: "get",
+  path: "/points/:pointId/series",
+  params: pointId,
+  query: range.extend({ pixels: z.coerce.number().int().min(50).max(4000) }),
+  answer: z.object({
+    zone: z.string(),
+    t0Ms: z.number(),
+    t1Ms: z.number(),
+    nominalStepS: z.number().nullable(),
+    rows: z.number().int().describe("rows behind the picture"),
+    /** Means are shown where a pixel column holds more than one row. */
+    averagedOverS: z.number().nullable(),
+    supplyC: screenSeries,
+    returnC: screenSeries,
+    /** Flow bars: the mean of each column. */
+    flow: z.object({
+      startMs: z.array(z.number()),
+      endMs: z.array(z.number()),
+      meanM3PerHour: z.array(z.number().nullable()),
+    }),
+    powerKw: screenSeries,
+    quality: z.array(
+      z.object({
+        fromMs: z.number(),
+        toMs: z.number(),
+        kind: z.enum(["measured", "filled", "excluded", "missing"]),
+      }),
+    ),
+    yExtent: z.object({
+      temperatureC: z.tuple([z.number(), z.number()]).nullable(),
+      flowM3PerHour: z.tuple([z.number(), z.number()]).nullable(),
+    }),
+  }),
+});
+export type SeriesAnswer = z.infer<(typeof getSeries)["answer"]>;
+
+export const getReadings = contract({
+  operationId: "getReadings",
+  summary: "Cleaned readings as rows, a page at a time, for the table view",
+  tag: "Energy",
+  method: "get",
+  path: "/points/:pointId/readings",
+  params: pointId,
+  query: range.extend({
+    cursor: z.string().max(40).optional(),
+    limit: z.coerce.number().int().min(1).max(1000).default(200),
+  }),
+  answer: z.object({
+    zone: z.string(),
+    items: z.array(
+      z.object({
+        at: instant,
+        flowM3PerHour: z.number().nullable(),
+        supplyC: z.number().nullable(),
+        returnC: z.number().nullable(),
+        powerKw: z.number().nullable(),
+        quality: z.enum(["measured", "excluded", "noReading"]),
+      }),
+    ),
+    nextCursor: z.string().nullable(),
+  }),
+});
+
+export const downloadIntervals = contract({
+  operationId: "downloadIntervals",
+  summary: "Energy intervals as CSV: UTC and local time, units in the headers",
+  tag: "Energy",
+  method: "get",
+  path: "/points/:pointId/energy.csv",
+  params: pointId,
+  query: range.extend({ step: z.enum(["quarterHour", "hour", "day"]).default("quarterHour") }),
+  answer: nothing,
+  answerKind: "csv",
+});
+export const downloadReadings = contract({
+  operationId: "downloadReadings",
+  summary: "Cleaned readings as CSV: UTC and local time, units in the headers",
+  tag: "Energy",
+  method: "get",
+  path: "/points/:pointId/readings.csv",
+  params: pointId,
+  query: range,
+  answer: nothing,
+  answerKind: "csv",
+});
+
+/** A week picker's month: one mark a day. */
+export const getDayMarks = contract({
+  operationId: "getDayMarks",
+  summary: "How well each local day of a range is covered",
+  tag: "Energy",
+  method: "get",
+  path: "/points/:pointId/days",
+  params: pointId,
+  query: z.object({ from: z.iso.date(), to: z.iso.date() }),
+  answer: z.object({
+    zone: z.string(),
+    days: z.array(
+      z.object({
+        date: z.iso.date(),
+        kind: z.enum(["measured", "filled", "excluded", "missing", "none"]),
+        coverage: z.number(),
+      }),
+    ),
+    firstReadingAt: instant.nullable(),
+    lastReadingAt: instant.nullable(),
+  }),
+});
+
+// Today ---------------------------------------------------------------------------------------
+export const needsALook = z.object({
+  weight: z.enum(["stop", "look", "note"]),
+  code: z.enum([
+    "importAsks",
+    "importFailed",
+    "importDone",
+    "noRecentReadings",
+    "lowCoverage",
+    "excludedRows",
+    "energyBlocked",
+    "pumpWithoutDeltaT",
+    "unmeteredRemainder",
+  ]),
+  loop: z
+    .object({ id, tag: z.string(), service: z.enum(["chilled", "hot", "changeover"]) })
+    .nullable(),
+  /** Values for the sentence, by name; the client has the words. */
+  values: z.record(z.string(), z.union([z.string(), z.number()])),
+  link: z.discriminatedUnion("to", [
+    z.object({
+      to: z.literal("loop"),
+      loopId: id,
+      from: z.iso.date().nullable(),
+      until: z.iso.date().nullable(),
+    }),
+    z.object({ to: z.literal("import"), importId: id }),
+    z.object({ to: z.literal("site"), siteId: id }),
+  ]),
+});
+export const getToday = contract({
+  operationId: "getToday",
+  summary: "What needs a look at a site, and each loop's last whole day",
+  tag: "Energy",
+  method: "get",
+  path: "/sites/:siteId/today",
+  params: z.object({ siteId: id }),
+  answer: z.object({
+    site: z.object({ id, name: z.string(), zone: z.string(), isDemo: z.boolean() }),
+    now: instant,
+    today: z.iso.date().describe("in the site's zone"),
+    needsALook: z.array(needsALook),
+    /** The last local day that any loop has readings for. */
+    day: z.iso.date().nullable(),
+    loops: z.array(
+      z.object({
+        loop: z.object({
+          id,
+          tag: z.string(),
+          name: z.string(),
+          service: z.enum(["chilled", "hot", "changeover"]),
+          buildingName: z.string().nullable(),
+          isMain: z.boolean(),
+        }),
+        pointId: id.nullable(),
+        nominalSizeDn: z.number().nullable(),
+        meterSide: z.enum(["supply", "return"]).nullable(),
+        card: loadCard.nullable().describe("means over the day"),
+        energyKwh: z.number().nullable(),
+        emptyReason: z
+          .enum(["noPoint", "noReadings", "noReadingsThatDay", "noReadingInFile", "glycol"])
+          .nullable(),
+        lastReadingAt: instant.nullable(),
+      }),
+    ),
+  }),
+});
+export type TodayAnswer = z.infer<(typeof getToday)["answer"]>;
