@@ -1,0 +1,117 @@
+import type { WaterAtPressure } from "../fluids/water-at-pressure";
+import { RowQuality, type ReadingColumns } from "../readings/reading-columns";
+
+/**
+ * Thermal power of each row, before anything is summed.
+ *
+ * P = q·ρ(θ_m)/3600·[h(θ_s) − h(θ_r)] in kW, with q in m³/h, ρ at the side where the flow meter
+ * sits, and h at the loop's pressure. The water gives off heat where P > 0 (heating) and takes it up
+ * where P < 0 (cooling). Example: 28.8 m³/h on the return, 6.90 → 12.80 °C → −197.798 kW.
+ */
+export type MeterSide = "supply" | "return";
+export type LoopService = "heating" | "cooling" | "changeover";
+
+/** Below either, a sample counts in no register; null means the cut-off is not set on the loop. */
+export interface CutOffs {
+  readonly flowM3PerHour: number | null;
+  readonly deltaTK: number | null;
+}
+
+export const NO_CUT_OFFS: CutOffs = { flowM3PerHour: null, deltaTK: null };
+
+export interface PowerOptions {
+  readonly water: WaterAtPressure;
+  readonly meterSide: MeterSide;
+  readonly service: LoopService;
+  readonly cutOffs: CutOffs;
+}
+
+/** Where the power of a sample goes. */
+export const Register = {
+  /** The row cannot be used: excluded, without a reading, or outside liquid water. */
+  unusable: 0,
+  /** Usable, and no heat moves. */
+  idle: 1,
+  heating: 2,
+  cooling: 3,
+  /** A cut-off keeps it out of both registers. */
+  suppressed: 4,
+} as const;
+
+export interface SamplePower {
+  /** Signed, heating positive, before cut-offs; NaN where the row is unusable. */
+  readonly powerKw: Float64Array;
+  /** One {@link Register} code a row. */
+  readonly register: Uint8Array;
+}
+
+/** 0.50 K from two readings in hundredths is not below a cut-off of 0.5 K. */
+const DECIMAL_NOISE = 1e-9;
+
+/** Power in kW of one state; temperatures must be liquid water at the water's pressure. */
+export function thermalPowerKw(
+  flowM3PerHour: number,
+  supplyC: number,
+  returnC: number,
+  water: WaterAtPressure,
+  meterSide: MeterSide,
+): number {
+  const density = water.density(meterSide === "supply" ? supplyC : returnC);
+  return (flowM3PerHour * density * (water.enthalpy(supplyC) - water.enthalpy(returnC))) / 3600;
+}
+
+export function samplePower(columns: ReadingColumns, options: PowerOptions): SamplePower {
+  const { flowM3PerHour, supplyC, returnC, quality } = columns;
+  const count = quality.length;
+  const powerKw = new Float64Array(count).fill(NaN);
+  const register = new Uint8Array(count);
+  if (!flowM3PerHour || !supplyC || !returnC) return { powerKw, register };
+  const { water, meterSide, service, cutOffs } = options;
+  const { lowestC, highestC } = water;
+  const flowCut = (cutOffs.flowM3PerHour ?? -Infinity) - DECIMAL_NOISE;
+  const deltaTCut = (cutOffs.deltaTK ?? 0) - DECIMAL_NOISE;
+  const home =
+    service === "heating"
+      ? Register.heating
+      : service === "cooling"
+        ? Register.cooling
+        : Register.idle;
+  for (let i = 0; i < count; i++) {
+    if (quality[i] !== RowQuality.measured) continue;
+    const flow = flowM3PerHour[i]!;
+    const supply = supplyC[i]!;
+    const back = returnC[i]!;
+    // NaN fails every comparison.
+    const liquid = supply >= lowestC && supply <= highestC && back >= lowestC && back <= highestC;
+    if (!liquid || flow !== flow) continue;
+    const power = thermalPowerKw(flow, supply, back, water, meterSide);
+    powerKw[i] = power;
+    if (flow < flowCut || Math.abs(supply - back) < deltaTCut) register[i] = Register.suppressed;
+    else if (power > 0) register[i] = Register.heating;
+    else if (power < 0) register[i] = Register.cooling;
+    // Flow without a temperature difference is still flow of the loop's own service.
+    else register[i] = flow !== 0 ? home : Register.idle;
+  }
+  return { powerKw, register };
+}
+
+/** How many usable samples each cut-off holds back; one below both counts as below the flow's. */
+export interface CutOffCounts {
+  readonly belowFlow: number;
+  readonly belowDeltaTOnly: number;
+}
+
+export function countCutOffs(columns: ReadingColumns, options: PowerOptions): CutOffCounts {
+  const { register } = samplePower(columns, options);
+  const flowOnly = samplePower(columns, {
+    ...options,
+    cutOffs: { ...options.cutOffs, deltaTK: null },
+  }).register;
+  let belowFlow = 0;
+  let belowDeltaTOnly = 0;
+  for (let i = 0; i < register.length; i++) {
+    if (flowOnly[i] === Register.suppressed) belowFlow++;
+    else if (register[i] === Register.suppressed) belowDeltaTOnly++;
+  }
+  return { belowFlow, belowDeltaTOnly };
+}

@@ -1,0 +1,194 @@
+import { alignTemperatures, type TemperatureSeries } from "./align-temperatures";
+import { mergeSeries, sameSeries, type MergeSource, type Run } from "./merge-series";
+import { nominalStepMs as medianStepMs } from "./nominal-step";
+import {
+  RowQuality,
+  type ReadingColumns,
+  type ReadingSegment,
+  type SeriesKind,
+} from "./reading-columns";
+
+/** The rows that one file holds for one point. */
+export interface ReadingSource {
+  /** Greater wins where two files hold the same instant. */
+  readonly precedence: number;
+  readonly kind: SeriesKind;
+  /** The logger's step; null where the file does not know it: then the median step is used. */
+  readonly nominalStepMs: number | null;
+  readonly columns: ReadingColumns;
+}
+
+type Channel = "flowM3PerHour" | "supplyC" | "returnC" | "signalPercent";
+const CHANNELS: readonly Channel[] = ["flowM3PerHour", "supplyC", "returnC", "signalPercent"];
+
+interface Prepared extends MergeSource {
+  readonly columns: ReadingColumns;
+}
+
+/**
+ * Many files' rows of one point as segments that never overlap, ready to integrate.
+ *
+ * Files that carry flow give the instants, the kind and the step. A temperature that such a file
+ * does not carry is taken from the files that hold only temperatures, through
+ * {@link alignTemperatures}. Where no file carries flow, the temperatures stand alone. Rows may come
+ * in any order. See {@link mergeSeries} for which file wins.
+ */
+export function resolveSegments(sources: readonly ReadingSource[]): ReadingSegment[] {
+  const prepared = sources.filter((s) => s.columns.instantMs.length > 0).map(prepare);
+  const withFlow = prepared.filter((source) => source.columns.flowM3PerHour !== null);
+  const withoutFlow = prepared.filter((source) => source.columns.flowM3PerHour === null);
+  if (withFlow.length === 0) return toSegments(withoutFlow);
+  return toSegments(completeTemperatures(withFlow, withoutFlow));
+}
+
+function prepare(source: ReadingSource): Prepared {
+  const columns = ascending(source.columns);
+  return {
+    precedence: source.precedence,
+    kind: source.kind,
+    // A single row knows no step: it speaks for no time of its own, only with its neighbours.
+    nominalStepMs: source.nominalStepMs ?? medianStepMs(columns.instantMs) ?? 0,
+    instantMs: columns.instantMs,
+    columns,
+  };
+}
+
+function completeTemperatures(withFlow: Prepared[], withoutFlow: Prepared[]): Prepared[] {
+  const needs = (channel: Channel) => withFlow.some((source) => source.columns[channel] === null);
+  const supply = needs("supplyC") ? joinSeries(withoutFlow, "supplyC") : null;
+  const returned = needs("returnC") ? joinSeries(withoutFlow, "returnC") : null;
+  return withFlow.map((source) => {
+    const { columns } = source;
+    const supplyC = columns.supplyC ?? (supply && alignTemperatures(columns.instantMs, supply));
+    const returnC = columns.returnC ?? (returned && alignTemperatures(columns.instantMs, returned));
+    if (supplyC === columns.supplyC && returnC === columns.returnC) return source;
+    return { ...source, columns: { ...columns, supplyC, returnC } };
+  });
+}
+
+/** One temperature from all files that hold it, with the step that applies at each row. */
+function joinSeries(sources: readonly Prepared[], channel: Channel): TemperatureSeries | null {
+  const holding = sources.filter((source) => source.columns[channel] !== null);
+  if (holding.length === 0) return null;
+  const runs = mergeSeries(holding);
+  const stepMs = new Float64Array(totalLength(runs));
+  let at = 0;
+  for (const { source, length } of runs) {
+    stepMs.fill(holding[source]!.nominalStepMs, at, at + length);
+    at += length;
+  }
+  const columns = gather(holding, runs);
+  return {
+    instantMs: columns.instantMs,
+    temperatureC: columns[channel]!,
+    quality: qualityFor(columns, channel),
+    nominalStepMs: stepMs,
+  };
+}
+
+/** "No reading" of a row is about any channel; for one temperature only its own NaN counts. */
+function qualityFor(columns: ReadingColumns, channel: Channel): Uint8Array {
+  return columns.quality.map((code, row) =>
+    code === RowQuality.noReading && !Number.isNaN(columns[channel]![row]!)
+      ? RowQuality.measured
+      : code,
+  );
+}
+
+function toSegments(sources: readonly Prepared[]): ReadingSegment[] {
+  const runs = mergeSeries(sources);
+  const segments: ReadingSegment[] = [];
+  let from = 0;
+  while (from < runs.length) {
+    const first = sources[runs[from]!.source]!;
+    let to = from + 1;
+    while (to < runs.length && sameSeries(first, sources[runs[to]!.source]!)) to++;
+    const part = runs.slice(from, to);
+    segments.push({
+      kind: first.kind,
+      nominalStepMs: Math.max(...part.map((run) => sources[run.source]!.nominalStepMs)),
+      columns: marked(gather(sources, part)),
+    });
+    from = to;
+  }
+  return segments;
+}
+
+function totalLength(runs: readonly Run[]): number {
+  return runs.reduce((sum, run) => sum + run.length, 0);
+}
+
+/** The runs' rows as one set of columns; a channel that only some files hold is NaN elsewhere. */
+function gather(sources: readonly Prepared[], runs: readonly Run[]): ReadingColumns {
+  const [only] = runs;
+  if (only && runs.length === 1 && only.length === sources[only.source]!.instantMs.length) {
+    return sources[only.source]!.columns;
+  }
+  const length = totalLength(runs);
+  const instantMs = new Float64Array(length);
+  const quality = new Uint8Array(length);
+  const channels: Partial<Record<Channel, Float64Array>> = {};
+  for (const channel of CHANNELS) {
+    if (runs.some((run) => sources[run.source]!.columns[channel] !== null)) {
+      channels[channel] = new Float64Array(length).fill(NaN);
+    }
+  }
+  let at = 0;
+  for (const run of runs) {
+    const { columns } = sources[run.source]!;
+    const end = run.row + run.length;
+    instantMs.set(columns.instantMs.subarray(run.row, end), at);
+    quality.set(columns.quality.subarray(run.row, end), at);
+    for (const channel of CHANNELS) {
+      const held = columns[channel];
+      if (held) channels[channel]!.set(held.subarray(run.row, end), at);
+    }
+    at += run.length;
+  }
+  return {
+    instantMs,
+    quality,
+    flowM3PerHour: channels.flowM3PerHour ?? null,
+    supplyC: channels.supplyC ?? null,
+    returnC: channels.returnC ?? null,
+    signalPercent: channels.signalPercent ?? null,
+  };
+}
+
+/** Rows that lack a channel energy needs are "no reading", whoever left it out. */
+function marked(columns: ReadingColumns): ReadingColumns {
+  const { flowM3PerHour, supplyC, returnC, quality } = columns;
+  if (!flowM3PerHour || !supplyC || !returnC) return columns;
+  let copy: Uint8Array | null = null;
+  for (let i = 0; i < quality.length; i++) {
+    if (quality[i] !== RowQuality.measured) continue;
+    // The sum is NaN exactly when one of them is.
+    const sum = flowM3PerHour[i]! + supplyC[i]! + returnC[i]!;
+    if (sum === sum) continue;
+    copy ??= quality.slice();
+    copy[i] = RowQuality.noReading;
+  }
+  return copy ? { ...columns, quality: copy } : columns;
+}
+
+/** The columns sorted by instant, each instant once (the first written wins). */
+function ascending(columns: ReadingColumns): ReadingColumns {
+  const { instantMs } = columns;
+  let sorted = true;
+  for (let i = 1; i < instantMs.length && sorted; i++) sorted = instantMs[i]! > instantMs[i - 1]!;
+  if (sorted) return columns;
+  const order = Uint32Array.from(instantMs.keys()).sort(
+    (a, b) => instantMs[a]! - instantMs[b]! || a - b,
+  );
+  const rows = order.filter((row, i) => i === 0 || instantMs[row] !== instantMs[order[i - 1]!]);
+  const pick = (column: Float64Array | null) =>
+    column && Float64Array.from(rows, (row) => column[row]!);
+  return {
+    instantMs: pick(instantMs)!,
+    quality: Uint8Array.from(rows, (row) => columns.quality[row]!),
+    flowM3PerHour: pick(columns.flowM3PerHour),
+    supplyC: pick(columns.supplyC),
+    returnC: pick(columns.returnC),
+    signalPercent: pick(columns.signalPercent),
+  };
+}
