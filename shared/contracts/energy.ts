@@ -145,12 +145,8 @@ export const getPointSummary = contract({
 });
 export type PointSummary = z.infer<(typeof getPointSummary)["answer"]>;
 
-/** At most two points a pixel: per pixel column the least and the greatest value, in time order. */
-const screenSeries = z.object({
-  /** Offsets from `t0Ms` in ms; drawn as one line, null is a hole. */
-  tMs: z.array(z.number()),
-  value: z.array(z.number().nullable()),
-});
+const drawn = z.array(z.number().nullable());
+/** Columns as a chart draws them: one entry a column, all arrays of one length, null lifts the pen. */
 export const getSeries = contract({
   operationId: "getSeries",
   summary: "What a chart of the given width can draw of the readings",
@@ -158,24 +154,41 @@ export const getSeries = contract({
   method: "get",
   path: "/points/:pointId/series",
   params: pointId,
-  query: range.extend({ pixels: z.coerce.number().int().min(50).max(4000) }),
+  query: range.extend({
+    pixels: z.coerce
+      .number()
+      .int()
+      .min(50)
+      .max(4000)
+      .describe("width to draw on; there is at most one column for every two"),
+  }),
   answer: z.object({
     zone: z.string(),
-    t0Ms: z.number(),
-    t1Ms: z.number(),
+    /** The range asked for. */
+    fromMs: z.number(),
+    toMs: z.number(),
     nominalStepS: z.number().nullable(),
     rows: z.number().int().describe("rows behind the picture"),
-    /** Means are shown where a pixel column holds more than one row. */
+    /** Length of each column, whose values are means of its rows; null where columns are rows. */
     averagedOverS: z.number().nullable(),
-    supplyC: screenSeries,
-    returnC: screenSeries,
-    /** Flow bars: the mean of each column. */
-    flow: z.object({
-      startMs: z.array(z.number()),
-      endMs: z.array(z.number()),
-      meanM3PerHour: z.array(z.number().nullable()),
-    }),
-    powerKw: screenSeries,
+    /** Start of the first column; column i starts `averagedOverS` × i later. */
+    t0Ms: z.number(),
+    /** Offsets from `t0Ms` where columns are rows; else null. */
+    tMs: z.array(z.number()).nullable(),
+    supplyC: drawn,
+    returnC: drawn,
+    flowM3PerHour: drawn,
+    powerKw: drawn.describe("heating positive, cooling negative"),
+    /** Least and greatest row of each column; null where columns are rows. */
+    envelope: z
+      .object({
+        supplyLeastC: drawn,
+        supplyGreatestC: drawn,
+        returnLeastC: drawn,
+        returnGreatestC: drawn,
+        flowGreatestM3PerHour: drawn,
+      })
+      .nullable(),
     quality: z.array(
       z.object({
         fromMs: z.number(),
