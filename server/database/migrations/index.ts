@@ -1,0 +1,16 @@
+import type { QueryInterface } from "sequelize";
+import { people } from "./001-people";
+import { places } from "./002-places";
+
+/**
+ * One step of the schema. To add one: write `NNN-subject.ts` beside this file, export a Migration
+ * whose `name` is the file's name, and append it to the list. A step that has shipped is never
+ * edited: another follows it. MariaDB commits every DDL statement by itself, so a step must be able
+ * to start again after a kill (`CREATE TABLE IF NOT EXISTS`).
+ */
+export interface Migration {
+  readonly name: string;
+  up(schema: QueryInterface): Promise<void>;
+}
+
+export const migrations: readonly Migration[] = [people, places];

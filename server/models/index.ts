@@ -1,0 +1,47 @@
+import type { Sequelize } from "sequelize";
+import { AccessToken } from "./access-token";
+import { Account } from "./account";
+import { AuditEvent } from "./audit-event";
+import { BoreVersion } from "./bore-version";
+import { Building } from "./building";
+import { Invitation } from "./invitation";
+import { Loop } from "./loop";
+import { Membership } from "./membership";
+import { MeteringPoint } from "./metering-point";
+import { Organisation } from "./organisation";
+import { OutboxMail } from "./outbox-mail";
+import { PasswordReset } from "./password-reset";
+import { Session } from "./session";
+import { SignInFailure } from "./sign-in-failure";
+import { Site } from "./site";
+
+/** A model file: one class with a static `define`, and `associate` where it refers to another. */
+interface ModelDefinition {
+  define(sequelize: Sequelize): void;
+  associate?(): void;
+}
+
+/** To add a model: write its file beside this one and append the class here. */
+const models: readonly ModelDefinition[] = [
+  Organisation,
+  Account,
+  Membership,
+  Session,
+  AccessToken,
+  Invitation,
+  PasswordReset,
+  SignInFailure,
+  OutboxMail,
+  AuditEvent,
+  Site,
+  Building,
+  Loop,
+  MeteringPoint,
+  BoreVersion,
+];
+
+/** Binds every model to the connection, then their associations: all must exist by then. */
+export function defineModels(sequelize: Sequelize): void {
+  for (const model of models) model.define(sequelize);
+  for (const model of models) model.associate?.();
+}

@@ -1,0 +1,12 @@
+import type { Logger } from "pino";
+import type { Clock } from "./clock";
+import type { Config } from "./config";
+import type { Database } from "./database/connect";
+
+/** What lives as long as the process; made once by main.ts and by the test app. */
+export interface Services {
+  readonly config: Config;
+  readonly database: Database;
+  readonly clock: Clock;
+  readonly log: Logger;
+}
