@@ -78,5 +78,12 @@ module.exports = {
       globalSetup: "<rootDir>/scripts/jest-database-start.mjs",
       globalTeardown: "<rootDir>/scripts/jest-database-stop.mjs",
     },
+    {
+      ...nodeProject,
+      displayName: "browser",
+      testMatch: ["<rootDir>/test/e2e/**/*.e2e.ts"],
+      globalSetup: "<rootDir>/scripts/jest-browser-start.mjs",
+      globalTeardown: "<rootDir>/scripts/jest-database-stop.mjs",
+    },
   ],
 };

@@ -55,15 +55,16 @@ export async function stopProcess(pid, { ticks = startTicks(pid), patienceMs = 2
 
 /**
  * Runs a program to its end and returns its exit code and output.
- * @param {object} options `show: true` passes output through; `input` is written to its stdin;
+ * @param {object} options `show: true` passes output through, `show: "errors"` its error stream; `input` is written to its stdin;
  * `onStart` is given the child process.
  */
 export function run(command, args, { show = false, input, onStart, ...options } = {}) {
   return new Promise((resolve, reject) => {
-    const output = show ? "inherit" : "pipe";
+    const output = show === true ? "inherit" : "pipe";
+    const errors = show ? "inherit" : "pipe";
     const child = spawn(command, args, {
       ...options,
-      stdio: [input === undefined ? "ignore" : "pipe", output, output],
+      stdio: [input === undefined ? "ignore" : "pipe", output, errors],
     });
     if (child.pid !== undefined) onStart?.(child);
     let text = "";

@@ -16,8 +16,8 @@ export async function startThrowAwayDatabase({ durable = false } = {}) {
   const keeper = startKeeper();
   keeper.removeAtEnd(folder);
   const places = databasePlaces(folder);
-  const port = await freePort();
   await initialiseDatabase(places);
+  const port = await freePort(); // asked for last: another process may take it in between
   const database = await bootDatabase(places, port, { durable });
   keeper.watch(database.pid);
   await runSql(
