@@ -5,6 +5,13 @@ import { INTERVAL_MS, type IntervalEnergyColumns } from "./interval-energy";
 import { IntervalTable, RegisterSum, Sum } from "./interval-table";
 import { Register, samplePower, type PowerOptions, type SamplePower } from "./power";
 
+// Taken out of their modules once: looking an import up for every row costs more than the sum.
+const LENGTH_MS = INTERVAL_MS;
+const { unusable: UNUSABLE, heating: HEATING, cooling: COOLING, suppressed: SUPPRESSED } = Register;
+const EXCLUDED = RowQuality.excluded;
+const SUM = Sum;
+const { energyKwh, volumeM3, flowDeltaTM3K, powerDeltaTKwhK, deltaTKs, runningS } = RegisterSum;
+
 /**
  * Heating and cooling energy of resolved readings, in 15-minute intervals of UTC.
  *
@@ -29,11 +36,31 @@ export function integrateEnergy(
   segments: readonly ReadingSegment[],
   options: IntegrationOptions,
 ): IntervalEnergyColumns {
-  const table = new IntervalTable();
+  const table = new IntervalTable(expectedIntervals(segments));
   const powers = segments.map(({ columns }) => samplePower(columns, options));
-  const samples = segments.map(({ columns }, s) => new Samples(columns, powers[s]!));
+  const rows = segments.map(({ columns }, s) => new SegmentRows(columns, powers[s]!));
   const windowStart = options.window?.startMs ?? -Infinity;
   const windowEnd = options.window?.endMs ?? Infinity;
+
+  // A row ends one step and starts the next, mostly in one interval: its weight is gathered first.
+  let heldSegment = -1;
+  let heldRow = -1;
+  let heldBase = -1;
+  let heldSeconds = 0;
+  const release = () => {
+    if (heldSegment >= 0) rows[heldSegment]!.addTo(table.sums, heldBase, heldRow, heldSeconds);
+  };
+  const hold = (segment: number, row: number, base: number, seconds: number) => {
+    if (row === heldRow && base === heldBase && segment === heldSegment) {
+      heldSeconds += seconds;
+      return;
+    }
+    release();
+    heldSegment = segment;
+    heldRow = row;
+    heldBase = base;
+    heldSeconds = seconds;
+  };
 
   forEachCoveredStep(
     segments,
@@ -45,41 +72,47 @@ export function integrateEnergy(
       let at = from;
       while (at < to) {
         const base = table.baseAt(at);
-        const intervalEnd = table.sums[base]! + INTERVAL_MS;
+        const intervalEnd = table.sums[base]! + LENGTH_MS;
         const end = to < intervalEnd ? to : intervalEnd;
         // Half of the piece's weight to either end: the trapezoid; a mean has both halves itself.
         const halfSeconds = (end - at) / 2000;
-        samples[firstSegment]!.addTo(table.sums, base, firstRow, halfSeconds);
-        samples[secondSegment]!.addTo(table.sums, base, secondRow, halfSeconds);
-        if (at !== stepFrom || end !== stepTo) table.sums[base + Sum.apportioned] = 1;
+        hold(firstSegment, firstRow, base, halfSeconds);
+        hold(secondSegment, secondRow, base, halfSeconds);
+        if (at !== stepFrom || end !== stepTo) table.sums[base + SUM.apportioned] = 1;
         at = end;
       }
     },
     (segment, row) => {
       const instant = segments[segment]!.columns.instantMs[row]!;
       if (instant < windowStart || instant >= windowEnd) return;
-      const base = table.baseAt(instant);
-      if (powers[segment]!.register[row] !== Register.unusable) {
-        table.sums[base + Sum.measuredRows]! += 1;
-      } else if (segments[segment]!.columns.quality[row] === RowQuality.excluded) {
-        table.sums[base + Sum.excludedRows]! += 1;
-      } else {
-        table.sums[base + Sum.noReadingRows]! += 1;
-      }
+      const counted = rows[segment]!.countedAs(row);
+      table.sums[table.baseAt(instant) + counted]! += 1;
     },
   );
+  release();
   return table.toColumns();
+}
+
+/** Room for the usual file: as many intervals as its span has, within reason. */
+function expectedIntervals(segments: readonly ReadingSegment[]): number {
+  let spanMs = 0;
+  for (const { columns } of segments) {
+    const { instantMs } = columns;
+    if (instantMs.length > 0) spanMs += instantMs[instantMs.length - 1]! - instantMs[0]!;
+  }
+  return Math.min(Math.ceil(spanMs / INTERVAL_MS) + 2 * segments.length + 2, 40_000);
 }
 
 const EMPTY = new Float64Array(0);
 
 /** The rows of one segment, as what each adds to an interval for a weight of time. */
-class Samples {
+class SegmentRows {
   private readonly flow: Float64Array;
   private readonly supply: Float64Array;
   private readonly back: Float64Array;
   private readonly power: Float64Array;
   private readonly register: Uint8Array;
+  private readonly quality: Uint8Array;
 
   constructor(columns: ReadingColumns, { powerKw, register }: SamplePower) {
     this.flow = columns.flowM3PerHour ?? EMPTY;
@@ -87,6 +120,13 @@ class Samples {
     this.back = columns.returnC ?? EMPTY;
     this.power = powerKw;
     this.register = register;
+    this.quality = columns.quality;
+  }
+
+  /** The sum in which a row is counted. */
+  countedAs(row: number): number {
+    if (this.register[row] !== UNUSABLE) return SUM.measuredRows;
+    return this.quality[row] === EXCLUDED ? SUM.excludedRows : SUM.noReadingRows;
   }
 
   addTo(sums: Float64Array, base: number, row: number, seconds: number): void {
@@ -97,33 +137,33 @@ class Samples {
     const hours = seconds / 3600;
     const volume = flow * hours;
     let counted = this.power[row]!;
-    sums[base + Sum.coveredS]! += seconds;
-    sums[base + Sum.volumeM3]! += volume;
-    sums[base + Sum.supplyCs]! += supply * seconds;
-    sums[base + Sum.returnCs]! += back * seconds;
+    sums[base + SUM.coveredS]! += seconds;
+    sums[base + SUM.volumeM3]! += volume;
+    sums[base + SUM.supplyCs]! += supply * seconds;
+    sums[base + SUM.returnCs]! += back * seconds;
 
-    if (register === Register.heating || register === Register.cooling) {
-      const heating = register === Register.heating;
-      const at = base + (heating ? Sum.heating : Sum.cooling);
+    if (register === HEATING || register === COOLING) {
+      const heating = register === HEATING;
+      const at = base + (heating ? SUM.heating : SUM.cooling);
       const energy = (heating ? counted : -counted) * hours;
       const deltaT = heating ? supply - back : back - supply;
-      sums[at + RegisterSum.energyKwh]! += energy;
-      sums[at + RegisterSum.volumeM3]! += volume;
-      sums[at + RegisterSum.flowDeltaTM3K]! += volume * deltaT;
-      sums[at + RegisterSum.powerDeltaTKwhK]! += energy * deltaT;
-      sums[at + RegisterSum.deltaTKs]! += deltaT * seconds;
-      sums[at + RegisterSum.runningS]! += seconds;
+      sums[at + energyKwh]! += energy;
+      sums[at + volumeM3]! += volume;
+      sums[at + flowDeltaTM3K]! += volume * deltaT;
+      sums[at + powerDeltaTKwhK]! += energy * deltaT;
+      sums[at + deltaTKs]! += deltaT * seconds;
+      sums[at + runningS]! += seconds;
     } else {
-      if (register === Register.suppressed) {
-        sums[base + Sum.suppressedKwh]! += Math.abs(counted) * hours;
-        sums[base + Sum.suppressedS]! += seconds;
+      if (register === SUPPRESSED) {
+        sums[base + SUM.suppressedKwh]! += Math.abs(counted) * hours;
+        sums[base + SUM.suppressedS]! += seconds;
       }
       counted = 0;
     }
     // NaN, the start value, fails every comparison.
-    if (!(sums[base + Sum.minPowerKw]! <= counted)) sums[base + Sum.minPowerKw] = counted;
-    if (!(sums[base + Sum.maxPowerKw]! >= counted)) sums[base + Sum.maxPowerKw] = counted;
-    if (!(sums[base + Sum.minFlowM3PerHour]! <= flow)) sums[base + Sum.minFlowM3PerHour] = flow;
-    if (!(sums[base + Sum.maxFlowM3PerHour]! >= flow)) sums[base + Sum.maxFlowM3PerHour] = flow;
+    if (!(sums[base + SUM.minPowerKw]! <= counted)) sums[base + SUM.minPowerKw] = counted;
+    if (!(sums[base + SUM.maxPowerKw]! >= counted)) sums[base + SUM.maxPowerKw] = counted;
+    if (!(sums[base + SUM.minFlowM3PerHour]! <= flow)) sums[base + SUM.minFlowM3PerHour] = flow;
+    if (!(sums[base + SUM.maxFlowM3PerHour]! >= flow)) sums[base + SUM.maxFlowM3PerHour] = flow;
   }
 }

@@ -35,15 +35,22 @@ export const RegisterSum = {
 } as const;
 
 const STRIDE = 27;
+/** Taken out of its module once: it is asked for every row. */
+const LENGTH_MS = INTERVAL_MS;
 
 export class IntervalTable {
   /** `sums[base + Sum.x]`, with `base` from {@link baseAt}. */
-  sums = new Float64Array(256 * STRIDE);
+  sums: Float64Array;
   private count = 0;
+
+  /** `expected` intervals fit without growing; it may be wrong. */
+  constructor(expected: number) {
+    this.sums = new Float64Array(Math.max(1, expected) * STRIDE);
+  }
 
   /** Where the interval that holds `instantMs` stands; instants must come in order of interval. */
   baseAt(instantMs: number): number {
-    const startMs = Math.floor(instantMs / INTERVAL_MS) * INTERVAL_MS;
+    const startMs = Math.floor(instantMs / LENGTH_MS) * LENGTH_MS;
     const last = (this.count - 1) * STRIDE;
     if (this.count > 0 && this.sums[last] === startMs) return last;
     if (this.count > 0 && this.sums[last]! > startMs) {
@@ -70,42 +77,39 @@ export class IntervalTable {
     return base;
   }
 
-  private column(offset: number): Float64Array {
-    const column = new Float64Array(this.count);
-    for (let i = 0; i < this.count; i++) column[i] = this.sums[i * STRIDE + offset]!;
-    return column;
-  }
-
-  private register(offset: number): RegisterColumns {
-    return {
-      energyKwh: this.column(offset + RegisterSum.energyKwh),
-      volumeM3: this.column(offset + RegisterSum.volumeM3),
-      flowDeltaTM3K: this.column(offset + RegisterSum.flowDeltaTM3K),
-      powerDeltaTKwhK: this.column(offset + RegisterSum.powerDeltaTKwhK),
-      deltaTKs: this.column(offset + RegisterSum.deltaTKs),
-      runningS: this.column(offset + RegisterSum.runningS),
-    };
-  }
-
   toColumns(): IntervalEnergyColumns {
+    const { sums, count } = this;
+    const all = Array.from({ length: STRIDE }, () => new Float64Array(count));
+    // Row by row, so that memory is read once in order.
+    for (let i = 0, at = 0; i < count; i++, at += STRIDE) {
+      for (let offset = 0; offset < STRIDE; offset++) all[offset]![i] = sums[at + offset]!;
+    }
+    const register = (offset: number): RegisterColumns => ({
+      energyKwh: all[offset + RegisterSum.energyKwh]!,
+      volumeM3: all[offset + RegisterSum.volumeM3]!,
+      flowDeltaTM3K: all[offset + RegisterSum.flowDeltaTM3K]!,
+      powerDeltaTKwhK: all[offset + RegisterSum.powerDeltaTKwhK]!,
+      deltaTKs: all[offset + RegisterSum.deltaTKs]!,
+      runningS: all[offset + RegisterSum.runningS]!,
+    });
     return {
-      startMs: this.column(Sum.startMs),
-      coveredS: this.column(Sum.coveredS),
-      heating: this.register(Sum.heating),
-      cooling: this.register(Sum.cooling),
-      volumeM3: this.column(Sum.volumeM3),
-      suppressedKwh: this.column(Sum.suppressedKwh),
-      suppressedS: this.column(Sum.suppressedS),
-      minPowerKw: this.column(Sum.minPowerKw),
-      maxPowerKw: this.column(Sum.maxPowerKw),
-      minFlowM3PerHour: this.column(Sum.minFlowM3PerHour),
-      maxFlowM3PerHour: this.column(Sum.maxFlowM3PerHour),
-      supplyCs: this.column(Sum.supplyCs),
-      returnCs: this.column(Sum.returnCs),
-      measuredRows: this.column(Sum.measuredRows),
-      excludedRows: this.column(Sum.excludedRows),
-      noReadingRows: this.column(Sum.noReadingRows),
-      apportioned: Uint8Array.from(this.column(Sum.apportioned)),
+      startMs: all[Sum.startMs]!,
+      coveredS: all[Sum.coveredS]!,
+      heating: register(Sum.heating),
+      cooling: register(Sum.cooling),
+      volumeM3: all[Sum.volumeM3]!,
+      suppressedKwh: all[Sum.suppressedKwh]!,
+      suppressedS: all[Sum.suppressedS]!,
+      minPowerKw: all[Sum.minPowerKw]!,
+      maxPowerKw: all[Sum.maxPowerKw]!,
+      minFlowM3PerHour: all[Sum.minFlowM3PerHour]!,
+      maxFlowM3PerHour: all[Sum.maxFlowM3PerHour]!,
+      supplyCs: all[Sum.supplyCs]!,
+      returnCs: all[Sum.returnCs]!,
+      measuredRows: all[Sum.measuredRows]!,
+      excludedRows: all[Sum.excludedRows]!,
+      noReadingRows: all[Sum.noReadingRows]!,
+      apportioned: Uint8Array.from(all[Sum.apportioned]!),
     };
   }
 }

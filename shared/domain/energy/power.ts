@@ -45,6 +45,9 @@ export interface SamplePower {
   readonly register: Uint8Array;
 }
 
+// Taken out of its module once: it is compared with in every row.
+const MEASURED = RowQuality.measured;
+
 /** 0.50 K from two readings in hundredths is not below a cut-off of 0.5 K. */
 const DECIMAL_NOISE = 1e-9;
 
@@ -60,6 +63,35 @@ export function thermalPowerKw(
   return (flowM3PerHour * density * (water.enthalpy(supplyC) - water.enthalpy(returnC))) / 3600;
 }
 
+/**
+ * A property of water with its last result for each hundredth of a degree. Loggers write few
+ * decimals, so the same temperatures come again and again; only the very same one is reused, which
+ * leaves every result as it is.
+ */
+class Remembered {
+  private readonly temperatureC: Float64Array;
+  private readonly result: Float64Array;
+
+  constructor(
+    private readonly property: (temperatureC: number) => number,
+    highestC: number,
+  ) {
+    const places = Math.ceil(highestC * 100) + 2;
+    this.temperatureC = new Float64Array(places).fill(NaN);
+    this.result = new Float64Array(places);
+  }
+
+  at(temperatureC: number): number {
+    const place = (temperatureC * 100 + 0.5) | 0;
+    if (this.temperatureC[place] !== temperatureC) {
+      this.temperatureC[place] = temperatureC;
+      this.result[place] = this.property(temperatureC);
+    }
+    return this.result[place]!;
+  }
+}
+
+/** Power and register of every row; see the method above. */
 export function samplePower(columns: ReadingColumns, options: PowerOptions): SamplePower {
   const { flowM3PerHour, supplyC, returnC, quality } = columns;
   const count = quality.length;
@@ -68,6 +100,9 @@ export function samplePower(columns: ReadingColumns, options: PowerOptions): Sam
   if (!flowM3PerHour || !supplyC || !returnC) return { powerKw, register };
   const { water, meterSide, service, cutOffs } = options;
   const { lowestC, highestC } = water;
+  const meterC = meterSide === "supply" ? supplyC : returnC;
+  const density = new Remembered(water.density, highestC);
+  const enthalpy = new Remembered(water.enthalpy, highestC);
   const flowCut = (cutOffs.flowM3PerHour ?? -Infinity) - DECIMAL_NOISE;
   const deltaTCut = (cutOffs.deltaTK ?? 0) - DECIMAL_NOISE;
   const home =
@@ -77,14 +112,15 @@ export function samplePower(columns: ReadingColumns, options: PowerOptions): Sam
         ? Register.cooling
         : Register.idle;
   for (let i = 0; i < count; i++) {
-    if (quality[i] !== RowQuality.measured) continue;
+    if (quality[i] !== MEASURED) continue;
     const flow = flowM3PerHour[i]!;
     const supply = supplyC[i]!;
     const back = returnC[i]!;
     // NaN fails every comparison.
     const liquid = supply >= lowestC && supply <= highestC && back >= lowestC && back <= highestC;
     if (!liquid || flow !== flow) continue;
-    const power = thermalPowerKw(flow, supply, back, water, meterSide);
+    const heat = enthalpy.at(supply) - enthalpy.at(back);
+    const power = (flow * density.at(meterC[i]!) * heat) / 3600;
     powerKw[i] = power;
     if (flow < flowCut || Math.abs(supply - back) < deltaTCut) register[i] = Register.suppressed;
     else if (power > 0) register[i] = Register.heating;
