@@ -35,8 +35,7 @@ export async function startLocalDatabase(session, settings) {
     );
   }
   await initialiseDatabase(places);
-  const database = await bootDatabase(places, port);
-  session.own(database.pid, database.stop);
+  await bootDatabase(places, port, { onSpawn: ({ pid, stop }) => session.own(pid, stop) });
   const password = keptPassword(settings.dataFolder);
   // The password is set on every start: a restored data folder and a new var/ still fit together.
   await runSql(

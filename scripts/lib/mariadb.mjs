@@ -71,10 +71,11 @@ export function findRunningDatabase(places) {
 
 /**
  * Starts mariadbd on 127.0.0.1 and waits until it answers.
- * @param {object} options `durable: false` gives up safety against power loss for throw-away data.
+ * @param {object} options `durable: false` gives up safety against power loss for throw-away data;
+ * `onSpawn` is given the result before the wait, so that nobody can lose sight of the process.
  * @returns {Promise<{pid: number, stop: () => Promise<void>}>}
  */
-export async function bootDatabase(places, port, { durable = true, extra = [] } = {}) {
+export async function bootDatabase(places, port, { durable = true, onSpawn } = {}) {
   const log = openSync(places.log, "a", 0o600);
   const child = spawn(
     findProgram("mariadbd", "mysqld"),
@@ -95,7 +96,6 @@ export async function bootDatabase(places, port, { durable = true, extra = [] } 
       "--local-infile=0",
       "--max-allowed-packet=128M",
       ...(durable ? [] : ["--innodb-flush-log-at-trx-commit=0", "--skip-innodb-doublewrite"]),
-      ...extra,
     ],
     // Its own session: Ctrl-C must reach the server first, and the database only through us.
     { detached: true, stdio: ["ignore", log, log] },
@@ -104,6 +104,12 @@ export async function bootDatabase(places, port, { durable = true, extra = [] } 
   let startError = null;
   child.on("error", (error) => (startError = error));
   child.unref();
+  const ticks = child.pid === undefined ? null : startTicks(child.pid);
+  const database = {
+    pid: child.pid,
+    stop: () => stopProcess(child.pid, { ticks, patienceMs: 60_000 }),
+  };
+  if (child.pid !== undefined) onSpawn?.(database);
   const ended = () => startError !== null || child.exitCode !== null || child.signalCode !== null;
   const deadline = Date.now() + 60_000;
   while (!(await answers(places.socket))) {
@@ -116,8 +122,7 @@ export async function bootDatabase(places, port, { durable = true, extra = [] } 
     }
     await sleep(50);
   }
-  const ticks = startTicks(child.pid);
-  return { pid: child.pid, stop: () => stopProcess(child.pid, { ticks, patienceMs: 60_000 }) };
+  return database;
 }
 
 /** Runs SQL as the database's root through its socket; an error carries MariaDB's own message. */

@@ -35,8 +35,9 @@ export function openSession() {
     });
   }
 
-  /** Hands over something already running; `stop` ends it. */
+  /** Hands over something already running; `stop` ends it, at once when the run is over. */
   function own(pid, stop) {
+    if (closing) return void stop();
     keeper.watch(pid);
     stops.push(stop);
   }

@@ -18,8 +18,10 @@ export async function startThrowAwayDatabase({ durable = false } = {}) {
   const places = databasePlaces(folder);
   await initialiseDatabase(places);
   const port = await freePort(); // asked for last: another process may take it in between
-  const database = await bootDatabase(places, port, { durable });
-  keeper.watch(database.pid);
+  const database = await bootDatabase(places, port, {
+    durable,
+    onSpawn: ({ pid }) => keeper.watch(pid),
+  });
   await runSql(
     places,
     "CREATE USER root@'127.0.0.1'; GRANT ALL ON *.* TO root@'127.0.0.1' WITH GRANT OPTION;",
