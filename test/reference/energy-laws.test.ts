@@ -1,0 +1,150 @@
+import * as fc from "fast-check";
+import { integrateEnergy, type IntegrationOptions } from "@shared/domain/energy/integrate";
+import { NO_CUT_OFFS } from "@shared/domain/energy/power";
+import { totalEnergy, type EnergyTotals } from "@shared/domain/energy/totals";
+import { waterAtPressure } from "@shared/domain/fluids/water-at-pressure";
+import type { ReadingColumns, SeriesKind } from "@shared/domain/readings/reading-columns";
+import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
+
+const T0 = Date.UTC(2026, 4, 14, 0, 3);
+const NOMINAL = 300_000;
+const options: IntegrationOptions = {
+  water: waterAtPressure(1.6),
+  meterSide: "supply",
+  service: "changeover",
+  cutOffs: { flowM3PerHour: 1, deltaTK: 0.5 },
+};
+
+interface Row {
+  readonly stepMs: number;
+  readonly flow: number;
+  readonly supply: number;
+  readonly back: number;
+  readonly quality: number;
+}
+const row: fc.Arbitrary<Row> = fc.record({
+  // Up to five nominal steps: some are gaps.
+  stepMs: fc.integer({ min: 1_000, max: 5 * NOMINAL }),
+  flow: fc.double({ min: 0, max: 120, noNaN: true }),
+  supply: fc.double({ min: 3, max: 90, noNaN: true }),
+  back: fc.double({ min: 3, max: 90, noNaN: true }),
+  quality: fc.constantFrom(0, 0, 0, 0, 0, 1, 2),
+});
+const kind = fc.constantFrom<SeriesKind>("instantaneous", "meanFromLabel", "meanToLabel");
+const rowsOf = fc.array(row, { minLength: 2, maxLength: 40 });
+
+function toColumns(rows: readonly Row[], order: readonly number[]): ReadingColumns {
+  let at = T0;
+  const instants = rows.map(({ stepMs }) => (at += stepMs));
+  const pick = (of: (index: number) => number) => Float64Array.from(order, of);
+  return {
+    instantMs: pick((i) => instants[i]!),
+    flowM3PerHour: pick((i) => rows[i]!.flow),
+    supplyC: pick((i) => rows[i]!.supply),
+    returnC: pick((i) => rows[i]!.back),
+    signalPercent: null,
+    quality: Uint8Array.from(order, (i) => rows[i]!.quality),
+  };
+}
+const inOrder = (rows: readonly Row[]) => rows.map((_, i) => i);
+
+function energy(sources: ReadingSource[], changed: Partial<IntegrationOptions> = {}): EnergyTotals {
+  return totalEnergy(integrateEnergy(resolveSegments(sources), { ...options, ...changed }));
+}
+function asSource(columns: ReadingColumns, seriesKind: SeriesKind, precedence = 0): ReadingSource {
+  return { precedence, kind: seriesKind, nominalStepMs: NOMINAL, columns };
+}
+function sums(totals: EnergyTotals): number[] {
+  const { heating, cooling, volumeM3, coveredS, suppressedKwh } = totals;
+  return [heating, cooling]
+    .flatMap((r) => [r.energyKwh, r.volumeM3, r.flowDeltaTM3K, r.powerDeltaTKwhK, r.runningS])
+    .concat(volumeM3, coveredS, suppressedKwh);
+}
+function expectClose(own: readonly number[], expected: readonly number[]): void {
+  own.forEach((value, i) => {
+    const scale = Math.max(1, Math.abs(expected[i]!));
+    expect(Math.abs(value - expected[i]!) / scale).toBeLessThan(1e-9);
+  });
+}
+
+test("energy is additive over any split of the time axis", () => {
+  fc.assert(
+    fc.property(rowsOf, kind, fc.double({ min: 0, max: 1, noNaN: true }), (rows, k, share) => {
+      const source = asSource(toColumns(rows, inOrder(rows)), k);
+      const end = source.columns.instantMs[rows.length - 1]!;
+      const cutMs = Math.round(T0 + share * (end - T0));
+      const before = energy([source], { window: { startMs: -Infinity, endMs: cutMs } });
+      const after = energy([source], { window: { startMs: cutMs, endMs: Infinity } });
+      const whole = energy([source]);
+      expectClose(
+        sums(before).map((value, i) => value + sums(after)[i]!),
+        sums(whole),
+      );
+      expect(before.measuredRows + after.measuredRows).toBe(whole.measuredRows);
+    }),
+    { numRuns: 80 },
+  );
+});
+
+test("the order of rows and how they are spread over files change nothing", () => {
+  const spread = rowsOf.chain((rows) =>
+    fc.record({
+      rows: fc.constant(rows),
+      order: fc.shuffledSubarray(inOrder(rows), { minLength: rows.length }),
+      files: fc.array(fc.integer({ min: 0, max: 2 }), {
+        minLength: rows.length,
+        maxLength: rows.length,
+      }),
+    }),
+  );
+  fc.assert(
+    fc.property(spread, kind, ({ rows, order, files }, k) => {
+      const parts = [0, 1, 2].map((file) => order.filter((i) => files[i] === file));
+      const split = parts.map((part) => asSource(toColumns(rows, part), k));
+      const together = energy([asSource(toColumns(rows, inOrder(rows)), k)]);
+      expect(sums(energy(split))).toEqual(sums(together));
+      expect(sums(energy([...split].reverse()))).toEqual(sums(together));
+    }),
+    { numRuns: 80 },
+  );
+});
+
+test("the same file twice counts once", () => {
+  fc.assert(
+    fc.property(rowsOf, kind, (rows, k) => {
+      const columns = toColumns(rows, inOrder(rows));
+      const once = energy([asSource(columns, k)]);
+      expect(sums(energy([asSource(columns, k), asSource(columns, k, 1)]))).toEqual(sums(once));
+    }),
+    { numRuns: 30 },
+  );
+});
+
+test("swapping supply and return, meter side included, swaps the registers", () => {
+  fc.assert(
+    fc.property(rowsOf, kind, (rows, k) => {
+      const swapped = rows.map((r) => ({ ...r, supply: r.back, back: r.supply }));
+      const own = energy([asSource(toColumns(rows, inOrder(rows)), k)]);
+      const other = energy([asSource(toColumns(swapped, inOrder(rows)), k)], {
+        meterSide: "return",
+      });
+      expect(other.heating.energyKwh).toBeCloseTo(own.cooling.energyKwh, 9);
+      expect(other.cooling.energyKwh).toBeCloseTo(own.heating.energyKwh, 9);
+      expect(other.suppressedKwh).toBeCloseTo(own.suppressedKwh, 9);
+    }),
+    { numRuns: 30 },
+  );
+});
+
+test("both registers are never negative and nothing covers time twice", () => {
+  fc.assert(
+    fc.property(rowsOf, kind, (rows, k) => {
+      const segments = resolveSegments([asSource(toColumns(rows, inOrder(rows)), k)]);
+      const columns = integrateEnergy(segments, { ...options, cutOffs: NO_CUT_OFFS });
+      expect(columns.heating.energyKwh.every((kwh) => kwh >= 0)).toBe(true);
+      expect(columns.cooling.energyKwh.every((kwh) => kwh >= 0)).toBe(true);
+      expect(columns.coveredS.every((s) => s <= 900.000001)).toBe(true);
+    }),
+    { numRuns: 30 },
+  );
+});
