@@ -14,7 +14,11 @@ export interface Recognition {
   readonly dataRowCount: number;
   readonly columnCount: number;
   /** Serial number, interval and the like that the lines above the header name. */
-  readonly preamble: readonly { readonly line: number; readonly label: string; readonly value: string }[];
+  readonly preamble: readonly {
+    readonly line: number;
+    readonly label: string;
+    readonly value: string;
+  }[];
 }
 
 export interface SampleRow {
@@ -24,7 +28,15 @@ export interface SampleRow {
 
 export interface Proof {
   readonly about:
-    "encoding" | "separator" | "headerLine" | "unitsLine" | "decimalMark" | "dateOrder" | "columnMeaning" | "columnUnit" | "seriesKind";
+    | "encoding"
+    | "separator"
+    | "headerLine"
+    | "unitsLine"
+    | "decimalMark"
+    | "dateOrder"
+    | "columnMeaning"
+    | "columnUnit"
+    | "seriesKind";
   readonly columnIndex: number | null;
   /** 1-based line of the row that proves it, with the cell that does; null where the whole file speaks. */
   readonly line: number | null;
@@ -33,18 +45,48 @@ export interface Proof {
 }
 
 export type Question =
-  | { readonly code: "dateOrder"; readonly choices: readonly ("dayMonthYear" | "monthDayYear" | "yearMonthDay")[]; readonly firstCell: string; readonly lastCell: string;
+  | {
+      readonly code: "dateOrder";
+      readonly choices: readonly ("dayMonthYear" | "monthDayYear" | "yearMonthDay")[];
+      readonly firstCell: string;
+      readonly lastCell: string;
       /** Typical step in seconds under each choice, in the order of `choices`, so that a person can see which is likely. */
-      readonly stepSeconds: readonly (number | null)[] }
-  | { readonly code: "flowUnit"; readonly columnIndex: number; readonly minValue: number; readonly maxValue: number; readonly choices: readonly FlowUnit[] }
-  | { readonly code: "temperatureUnit"; readonly columnIndex: number; readonly minValue: number; readonly maxValue: number }
-  | { readonly code: "decimalMark"; readonly columnIndex: number; readonly cell: string; readonly line: number }
+      readonly stepSeconds: readonly (number | null)[];
+    }
+  | {
+      readonly code: "flowUnit";
+      readonly columnIndex: number;
+      readonly minValue: number;
+      readonly maxValue: number;
+      readonly choices: readonly FlowUnit[];
+    }
+  | {
+      readonly code: "temperatureUnit";
+      readonly columnIndex: number;
+      readonly minValue: number;
+      readonly maxValue: number;
+    }
+  | {
+      readonly code: "decimalMark";
+      readonly columnIndex: number;
+      readonly cell: string;
+      readonly line: number;
+    }
   | { readonly code: "columnMeaning"; readonly meaning: ColumnMeaning }
   | { readonly code: "loggerClock" };
 
 /** Why a file cannot be read at all. `remedy` codes are translated on screen. */
 export interface Unreadable {
-  readonly code: "empty" | "notText" | "noTimes" | "noRows" | "tooManyColumns";
+  readonly code:
+    | "empty"
+    | "notText"
+    | "noTimes"
+    | "noRows"
+    | "tooManyColumns"
+    /** A comma file with more cells than headers: decimal commas cut its numbers in two. */
+    | "columnsDoNotMatchHeader"
+    /** Hours run 12, 1, 2 … twice a day and nothing tells morning from afternoon. */
+    | "halfDayUnknown";
   readonly line: number | null;
   readonly cell: string | null;
 }

@@ -1,0 +1,100 @@
+import { columnToM3PerHour } from "../units/flow";
+import { columnToCelsius } from "../units/temperature";
+import { newTally, tally, type RawChannel, type RawRows, type Tally } from "./raw-rows";
+import type { ColumnUnit, RepairChoices } from "./recipe";
+import { findRepeatedExtremes, isNumericSentinel, sentinelName } from "./sentinels";
+
+/** Colder or hotter than any probe on a loop can be, °C. */
+const POSSIBLE_C = { min: -60, max: 400 };
+
+/** What stands at the ends of a channel in its own unit. */
+function possibleRange(unit: ColumnUnit | null): { readonly min: number; readonly max: number } {
+  switch (unit) {
+    case "degC":
+      return POSSIBLE_C;
+    case "degF":
+      return { min: POSSIBLE_C.min * 1.8 + 32, max: POSSIBLE_C.max * 1.8 + 32 };
+    case "K":
+      return { min: POSSIBLE_C.min + 273.15, max: POSSIBLE_C.max + 273.15 };
+    case "%":
+      return { min: 0, max: 100 };
+    default:
+      return { min: -Infinity, max: Infinity };
+  }
+}
+
+export interface CleanChannels {
+  /** In the order of the raw channels, file order; the raw array itself where nothing had to change. */
+  readonly values: readonly Float64Array[];
+  readonly sentinels: Tally;
+}
+
+/** Blanks the numbers that mean "no reading" and counts them with the words that do. Nothing becomes zero. */
+export function blankSentinels(
+  raw: RawRows,
+  instantMs: Float64Array,
+  choice: RepairChoices["sentinels"],
+): CleanChannels {
+  const sentinels = newTally();
+  sentinels.count = raw.tokens.count;
+  sentinels.examples.push(...raw.tokens.examples);
+  Object.assign(sentinels.countByKind, raw.tokens.countByKind);
+  const values = raw.channels.map((channel) =>
+    blankChannel(raw, channel, instantMs, choice, sentinels),
+  );
+  return { values, sentinels };
+}
+
+function blankChannel(
+  raw: RawRows,
+  channel: RawChannel,
+  instantMs: Float64Array,
+  choice: RepairChoices["sentinels"],
+  sentinels: Tally,
+): Float64Array {
+  const extremes = findRepeatedExtremes(channel.values, possibleRange(channel.unit));
+  let blanked: Float64Array | null = null;
+  for (let i = 0; i < channel.values.length; i++) {
+    const value = channel.values[i] as number;
+    if (!isNumericSentinel(value) && (extremes.length === 0 || !extremes.includes(value))) continue;
+    const name = sentinelName(value);
+    tally(sentinels, name, () => ({
+      line: raw.line[i] as number,
+      column: channel.header,
+      cell: name,
+      instantMs: Number.isNaN(instantMs[i]) ? null : (instantMs[i] as number),
+    }));
+    if (choice === "asWritten") continue;
+    blanked ??= channel.values.slice();
+    blanked[i] = NaN;
+  }
+  return blanked ?? channel.values;
+}
+
+/** The rows of `order` taken out of a column; the column itself where all rows stay as they are. */
+export function gather(values: Float64Array, order: Uint32Array | null): Float64Array {
+  if (order === null) return values;
+  const out = new Float64Array(order.length);
+  for (let i = 0; i < order.length; i++) out[i] = values[order[i] as number] as number;
+  return out;
+}
+
+/** A column in m³/h, °C or percent; the column itself where it already is. */
+export function toStoredUnit(values: Float64Array, unit: ColumnUnit): Float64Array {
+  switch (unit) {
+    case "m3/h":
+    case "degC":
+    case "%":
+      return values;
+    case "degF":
+    case "K":
+      return columnToCelsius(values.slice(), unit);
+    default:
+      return columnToM3PerHour(values.slice(), unit);
+  }
+}
+
+export function storedUnit(unit: ColumnUnit): ColumnUnit {
+  if (unit === "%") return "%";
+  return unit === "degC" || unit === "degF" || unit === "K" ? "degC" : "m3/h";
+}

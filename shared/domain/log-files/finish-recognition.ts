@@ -1,0 +1,212 @@
+import { assignColumns, type ColumnAssignment } from "./assign-columns";
+import { findDecimalMarks, type MarkFinding } from "./decimal-marks";
+import type { ScanResult } from "./file-scan";
+import { seriesKindOf, splitName } from "./header-words";
+import { preambleClock } from "./preamble-clock";
+import { guessTemperatureUnit } from "./temperature-guess";
+import type { ColumnRecipe, FlowUnit, LoggerClock, TimeRecipe } from "./recipe";
+import type { HeadRecognition } from "./recognise-head";
+import type { Proof, Question, Recognition, SampleRow, Unreadable } from "./recognition";
+
+const FLOW_UNITS: readonly FlowUnit[] = ["m3/h", "L/s", "L/min", "US gpm"];
+const SHOWN_SAMPLES = 12;
+
+/** Puts the head and the pass over the whole file together: a recipe, its proofs, and what must be asked. */
+export function finishRecognition(
+  head: HeadRecognition,
+  scan: ScanResult,
+): Recognition | Unreadable {
+  if (scan.dataRowCount === 0)
+    return { code: "noRows", line: head.dialect.firstDataLine, cell: null };
+  const halfDay = scan.time.halfDayUnknown();
+  if (halfDay !== null) return { code: "halfDayUnknown", line: halfDay.line, cell: halfDay.cell };
+
+  const { columns: assigned, asked } = assignColumns(head, scan.columns);
+  const temperatures = assigned.flatMap((column, i) =>
+    column.meaning === "supply" || column.meaning === "return" ? [i] : [],
+  );
+  const marks = findDecimalMarks(scan.columns, temperatures, head.dialect.separator);
+  const columns = assigned.map((column, index): ColumnRecipe => ({
+    index,
+    header: head.header.headers[index] ?? "",
+    meaning: column.meaning,
+    unit: column.unit,
+    decimalMark: (marks[index] as MarkFinding).mark,
+  }));
+
+  const questions: Question[] = [];
+  const proofs: Proof[] = headProofs(head);
+  const time = settleTime(head, scan, proofs, questions);
+  for (const meaning of asked) questions.push({ code: "columnMeaning", meaning });
+  const withUnits = columns.map((column) =>
+    settleColumn(
+      column,
+      assigned[column.index] as ColumnAssignment,
+      marks[column.index] as MarkFinding,
+      scan,
+      proofs,
+      questions,
+    ),
+  );
+  const seriesKind = seriesKindOf(head.header.headers);
+  proofs.push({
+    about: "seriesKind",
+    columnIndex: null,
+    line: head.header.headerLine,
+    cell: null,
+    certainty: "likely",
+  });
+  if (
+    time.clock === null &&
+    time.format.kind !== "epochSeconds" &&
+    time.format.kind !== "epochMilliseconds" &&
+    scan.time.withOffset < scan.dataRowCount
+  ) {
+    questions.push({ code: "loggerClock" });
+  }
+  return {
+    recipe: {
+      dialect: {
+        ...head.dialect,
+        encoding: scan.hasInvalidUtf8 ? "windows-1252" : head.dialect.encoding,
+        quote: scan.hasQuotes ? (head.dialect.quote ?? '"') : null,
+      },
+      columns: withUnits,
+      time,
+      seriesKind: seriesKind ?? "instantaneous",
+    },
+    proofs,
+    questions,
+    firstLines: head.firstLines,
+    sampleRows: spread(scan.sampleRows),
+    dataRowCount: scan.dataRowCount,
+    columnCount: head.columnCount,
+    preamble: head.header.preamble,
+  };
+}
+
+function headProofs(head: HeadRecognition): Proof[] {
+  const whole = { columnIndex: null, line: null, cell: null };
+  const proofs: Proof[] = [
+    { about: "encoding", ...whole, certainty: head.encoding.certainty },
+    { about: "separator", ...whole, cell: head.dialect.separator, certainty: "proved" },
+  ];
+  const { headerLine, unitsLine } = head.header;
+  if (headerLine !== null)
+    proofs.push({ about: "headerLine", ...whole, line: headerLine, certainty: "likely" });
+  if (unitsLine !== null)
+    proofs.push({ about: "unitsLine", ...whole, line: unitsLine, certainty: "likely" });
+  return proofs;
+}
+
+function settleTime(
+  head: HeadRecognition,
+  scan: ScanResult,
+  proofs: Proof[],
+  questions: Question[],
+): TimeRecipe {
+  const clock = statedClock(head);
+  if (head.times.kind !== "calendar" && head.times.kind !== "split")
+    return { format: { kind: head.times.kind }, clock };
+  const columnIndex = head.times.kind === "split" ? head.times.dateIndex : head.times.index;
+  const { candidates, proof, stepSeconds } = scan.time.order();
+  const [only] = candidates;
+  if (candidates.length === 1 && only !== undefined) {
+    proofs.push({
+      about: "dateOrder",
+      columnIndex,
+      line: proof?.line ?? null,
+      cell: proof?.cell ?? null,
+      certainty: "proved",
+    });
+    return { format: { kind: "calendar", order: only }, clock };
+  }
+  questions.push({
+    code: "dateOrder",
+    choices: candidates,
+    firstCell: scan.firstTimeCell,
+    lastCell: scan.lastTimeCell,
+    stepSeconds,
+  });
+  return { format: { kind: "calendar", order: null }, clock };
+}
+
+/** A clock the file itself names: a time column headed UTC or GMT, or a line above the header. */
+function statedClock(head: HeadRecognition): LoggerClock | null {
+  const indices =
+    head.times.kind === "split" ? [head.times.dateIndex, head.times.timeIndex] : [head.times.index];
+  const words = indices.flatMap((index) => splitName(head.header.headers[index] ?? ""));
+  if (words.includes("utc")) return { kind: "utc" };
+  return preambleClock(head.header.preamble);
+}
+
+function settleColumn(
+  column: ColumnRecipe,
+  assigned: ColumnAssignment,
+  mark: MarkFinding,
+  scan: ScanResult,
+  proofs: Proof[],
+  questions: Question[],
+): ColumnRecipe {
+  const { index, meaning } = column;
+  if (meaning === "skip") return column;
+  const place = {
+    columnIndex: index,
+    line: null,
+    cell: column.header === "" ? null : column.header,
+  };
+  proofs.push({ about: "columnMeaning", ...place, certainty: assigned.certainty });
+  const isCalendar =
+    scan.time.rows > 0 && (meaning === "time" || meaning === "date" || meaning === "timeOfDay");
+  if (isCalendar) return column;
+  if (mark.question !== null)
+    questions.push({
+      code: "decimalMark",
+      columnIndex: index,
+      cell: mark.question.cell,
+      line: mark.question.line,
+    });
+  else if (mark.proof !== null)
+    proofs.push({
+      about: "decimalMark",
+      columnIndex: index,
+      line: mark.proof.line,
+      cell: mark.proof.cell,
+      certainty: mark.certainty,
+    });
+
+  const range = scan.columns[index]?.range(column.decimalMark) ?? null;
+  if (meaning === "flow" && column.unit === null) {
+    questions.push({
+      code: "flowUnit",
+      columnIndex: index,
+      minValue: range?.min ?? 0,
+      maxValue: range?.max ?? 0,
+      choices: FLOW_UNITS,
+    });
+    return column;
+  }
+  if ((meaning === "supply" || meaning === "return") && column.unit === null) {
+    const unit = guessTemperatureUnit(range);
+    if (unit === null)
+      questions.push({
+        code: "temperatureUnit",
+        columnIndex: index,
+        minValue: range?.min ?? 0,
+        maxValue: range?.max ?? 0,
+      });
+    else proofs.push({ about: "columnUnit", ...place, certainty: "likely" });
+    return { ...column, unit };
+  }
+  if (column.unit !== null) proofs.push({ about: "columnUnit", ...place, certainty: "proved" });
+  return column;
+}
+
+/** A dozen rows, first and last among them. */
+function spread(rows: readonly SampleRow[]): readonly SampleRow[] {
+  if (rows.length <= SHOWN_SAMPLES) return rows;
+  return Array.from(
+    { length: SHOWN_SAMPLES },
+    (_, i) => rows[Math.round((i * (rows.length - 1)) / (SHOWN_SAMPLES - 1))] as SampleRow,
+  );
+}

@@ -1,0 +1,270 @@
+import { GrowingColumn } from "./growing-column";
+import { CellStatus, NumberCell } from "./number-cell";
+import { MAX_PROBLEMS, newTally, tally } from "./raw-rows";
+import type { ChannelMeaning, RawRows, RemedyCode, RowProblem, RowProblemCode } from "./raw-rows";
+import type { ColumnRecipe, DecimalMark, FileRecipe } from "./recipe";
+import type { RowExample } from "./repair-step";
+import { MAX_CELLS, RowTokeniser } from "./row-tokeniser";
+import { createUtf8Stream } from "./text-encoding";
+import { createTimeReader } from "./time-reader";
+
+export interface LogReaderContext {
+  /** Rows the file is known to have, from recognition: memory is then taken once. */
+  readonly expectedRows?: number;
+}
+
+/** Takes the bytes of a file in order, in chunks of any size. */
+export interface LogReader {
+  readonly rowsRead: number;
+  push(bytes: Uint8Array): void;
+  end(): RawRows;
+}
+
+/**
+ * Reads a file by its recipe: bytes to columns, no string per cell, memory flat at some 50 bytes a row.
+ * Nothing is repaired here; what cannot be read is listed with its line and cell.
+ * @throws Error for a recipe whose date order or time column is not settled: ask {@link openQuestions} first.
+ */
+export function createLogReader(recipe: FileRecipe, context: LogReaderContext = {}): LogReader {
+  return new Reader(recipe, context.expectedRows ?? 4096);
+}
+
+/** Lines after the last reading up to this many are a footer; more are rows that cannot be read. */
+const MAX_FOOTER_LINES = 20;
+const MAX_CELL_CHARACTERS = 60;
+
+class Channel {
+  decimals = 0;
+  readonly values: GrowingColumn;
+  readonly index: number;
+  readonly mark: DecimalMark;
+
+  constructor(
+    readonly column: ColumnRecipe,
+    capacity: number,
+  ) {
+    this.index = column.index;
+    this.mark = column.decimalMark;
+    this.values = new GrowingColumn(capacity);
+  }
+}
+
+interface PendingLine {
+  readonly line: number;
+  readonly cell: string;
+}
+
+class Reader implements LogReader {
+  private readonly tokeniser: RowTokeniser;
+  private readonly stream;
+  private readonly time;
+  private readonly channels: readonly Channel[];
+  private readonly number = new NumberCell();
+  private readonly lines: GrowingColumn;
+  private readonly times: GrowingColumn;
+  private utcFlags: Uint8Array;
+  private readonly columnCount: number;
+  private readonly problems: RowProblem[] = [];
+  private problemCount = 0;
+  private readonly unreadableCells = newTally();
+  private readonly unreadableTimes = newTally();
+  private readonly shortRows = newTally();
+  private readonly tokens = newTally();
+  /** Lines without a time since the last row: a footer if no row follows. */
+  private pending: PendingLine[] = [];
+
+  constructor(
+    private readonly recipe: FileRecipe,
+    capacity: number,
+  ) {
+    this.time = createTimeReader(recipe);
+    this.channels = recipe.columns.filter(isChannel).map((column) => new Channel(column, capacity));
+    this.columnCount = recipe.columns.reduce((most, column) => Math.max(most, column.index + 1), 0);
+    this.lines = new GrowingColumn(capacity);
+    this.times = new GrowingColumn(capacity);
+    this.utcFlags = new Uint8Array(Math.max(16, capacity));
+    this.tokeniser = new RowTokeniser(recipe.dialect, (row) => this.readRow(row));
+    this.stream = createUtf8Stream(recipe.dialect.encoding);
+  }
+
+  get rowsRead(): number {
+    return this.times.length;
+  }
+
+  push(bytes: Uint8Array): void {
+    this.tokeniser.push(this.stream.convert(bytes));
+  }
+
+  end(): RawRows {
+    this.tokeniser.push(this.stream.finish());
+    this.tokeniser.end();
+    const footer = newTally();
+    // A last line that begins like a time is a row cut off or damaged, not a footer.
+    const last = this.pending;
+    this.pending = last.filter(({ cell }) => startsWithDigit(cell));
+    this.flushPending();
+    for (const { line, cell } of last) {
+      if (!startsWithDigit(cell)) tally(footer, "", () => example(line, null, cell));
+    }
+    return {
+      rowCount: this.times.length,
+      line: new Uint32Array(this.lines.view()),
+      timeMs: this.times.view(),
+      isUtc: this.utcFlags.subarray(0, this.times.length),
+      channels: this.channels.map(({ column, decimals, values }) => ({
+        meaning: column.meaning as ChannelMeaning,
+        columnIndex: column.index,
+        header: column.header,
+        unit: column.unit,
+        decimals,
+        values: values.view(),
+      })),
+      problems: this.problems,
+      problemCount: this.problemCount,
+      unreadableCells: this.unreadableCells,
+      unreadableTimes: this.unreadableTimes,
+      shortRows: this.shortRows,
+      tokens: this.tokens,
+      footer,
+    };
+  }
+
+  private readRow(row: RowTokeniser): void {
+    if (row.line < this.recipe.dialect.firstDataLine) return;
+    const { time } = this;
+    if (row.cellCount < time.neededCells || !time.read(row)) {
+      this.keepPending(row);
+      return;
+    }
+    if (this.pending.length > 0) this.flushPending();
+    if (row.cellCount > this.columnCount && this.hasExtraCells(row)) {
+      // A stray separator has moved every cell after it: none of them can be trusted.
+      this.addRowProblem("longRow", row);
+      return;
+    }
+    const length = this.times.length;
+    if (length === this.utcFlags.length) this.growFlags();
+    this.utcFlags[length] = time.isUtc ? 1 : 0;
+    this.lines.push(row.line);
+    this.times.push(time.ms);
+    let isShort = false;
+    for (const channel of this.channels) {
+      const { index } = channel;
+      if (index >= row.cellCount) {
+        isShort = true;
+        channel.values.push(NaN);
+        continue;
+      }
+      const { number } = this;
+      const status = number.parse(
+        row.buffer,
+        row.starts[index] as number,
+        row.ends[index] as number,
+        channel.mark,
+      );
+      if (status === CellStatus.number) {
+        channel.values.push(number.value);
+        if (number.decimals > channel.decimals) channel.decimals = number.decimals;
+      } else {
+        channel.values.push(NaN);
+        this.addCell(row, channel, status);
+      }
+    }
+    if (isShort) this.addRowProblem("shortRow", row);
+  }
+
+  private growFlags(): void {
+    const next = new Uint8Array(Math.ceil(this.utcFlags.length * 1.6));
+    next.set(this.utcFlags);
+    this.utcFlags = next;
+  }
+
+  private hasExtraCells(row: RowTokeniser): boolean {
+    if (row.cellCount > MAX_CELLS) return true;
+    for (let i = this.columnCount; i < row.cellCount; i++) {
+      if ((row.ends[i] as number) > (row.starts[i] as number)) return true;
+    }
+    return false;
+  }
+
+  private addCell(row: RowTokeniser, channel: Channel, status: number): void {
+    const { line } = row;
+    const text = this.number.text.slice(0, MAX_CELL_CHARACTERS);
+    const show = (): RowExample => example(line, channel.column.header, text);
+    if (status !== CellStatus.unreadable) {
+      tally(this.tokens, text, show);
+      return;
+    }
+    tally(this.unreadableCells, channel.column.header, show);
+    this.addProblem("unreadableCell", line, channel.column, text, "checkDecimalMark");
+  }
+
+  private addRowProblem(code: "shortRow" | "longRow" | "oversizeRow", row: RowTokeniser): void {
+    const cell = row.cellText(this.time.columnIndex).slice(0, MAX_CELL_CHARACTERS);
+    const { line } = row;
+    tally(this.shortRows, code, () => example(line, null, cell));
+    this.addProblem(
+      code,
+      line,
+      null,
+      cell,
+      code === "longRow" ? "checkSeparator" : "correctInFile",
+    );
+  }
+
+  private keepPending(row: RowTokeniser): void {
+    if (row.oversize) {
+      this.addRowProblem("oversizeRow", row);
+      return;
+    }
+    // A broken time may still be part of the footer; only what follows can tell.
+    this.pending.push({
+      line: row.line,
+      cell: row
+        .cellText(Math.min(this.time.columnIndex, row.cellCount - 1))
+        .slice(0, MAX_CELL_CHARACTERS),
+    });
+    if (this.pending.length > MAX_FOOTER_LINES) this.flushPending();
+  }
+
+  private flushPending(): void {
+    const column = this.recipe.columns.find(({ index }) => index === this.time.columnIndex) ?? null;
+    for (const { line, cell } of this.pending) {
+      tally(this.unreadableTimes, "", () => example(line, column?.header ?? null, cell));
+      this.addProblem("unreadableTime", line, column, cell, "checkTimeFormat");
+    }
+    this.pending = [];
+  }
+
+  private addProblem(
+    code: RowProblemCode,
+    line: number,
+    column: ColumnRecipe | null,
+    cell: string,
+    remedy: RemedyCode,
+  ): void {
+    this.problemCount++;
+    if (this.problems.length >= MAX_PROBLEMS) return;
+    this.problems.push({
+      code,
+      line,
+      columnIndex: column?.index ?? null,
+      column: column?.header ?? null,
+      cell,
+      remedy,
+    });
+  }
+}
+
+function isChannel({ meaning }: ColumnRecipe): boolean {
+  return meaning === "flow" || meaning === "supply" || meaning === "return" || meaning === "signal";
+}
+
+function startsWithDigit(cell: string): boolean {
+  const first = cell[0] ?? "";
+  return first >= "0" && first <= "9";
+}
+
+function example(line: number, column: string | null, cell: string): RowExample {
+  return { line, column, cell, instantMs: null };
+}

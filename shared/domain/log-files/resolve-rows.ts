@@ -1,0 +1,269 @@
+import { RowQuality, type ReadingColumns } from "../readings/reading-columns";
+import { blankSentinels, gather, storedUnit, toStoredUnit } from "./clean-values";
+import { findGaps, nominalStepMs } from "./find-gaps";
+import { orderRows } from "./order-rows";
+import {
+  newTally,
+  tally,
+  type ChannelMeaning,
+  type RawChannel,
+  type RawRows,
+  type Tally,
+} from "./raw-rows";
+import type { ColumnUnit, FileRecipe, RepairChoices } from "./recipe";
+import type { Gap, RepairStep, RepairStepCode, RowExample } from "./repair-step";
+import { resolveTimes } from "./resolve-times";
+
+/** A choice that must be made before the rows can be stored. */
+export type RepairQuestion =
+  | { readonly code: "loggerClock" }
+  | { readonly code: "flowUnit" | "temperatureUnit"; readonly columnIndex: number }
+  | {
+      readonly code: "conflictingRepeats" | "weakSignal";
+      readonly count: number;
+      readonly examples: readonly RowExample[];
+    };
+
+/** A channel as the file has it, one value a kept row: stored beside the converted one. */
+export interface OriginalChannel {
+  readonly meaning: ChannelMeaning;
+  readonly unit: ColumnUnit;
+  readonly decimals: number;
+  readonly values: Float64Array;
+}
+
+export interface RowCounts {
+  /** Rows of the file with a readable time. */
+  readonly read: number;
+  /** Rows that remain after all steps: measured + excluded + noReading. */
+  readonly kept: number;
+  readonly measured: number;
+  readonly excluded: number;
+  readonly noReading: number;
+  /** Read but not kept: repeats, rows out of order, times that never were. */
+  readonly leftOut: number;
+  /** Rows the nominal step puts between the first and the last instant; null with fewer than two rows. */
+  readonly expected: number | null;
+  /** Expected but not in the file. */
+  readonly missing: number | null;
+}
+
+export interface ResolvedRows {
+  /** Null while a question is open: nothing may be stored then. */
+  readonly columns: ReadingColumns | null;
+  readonly original: readonly OriginalChannel[];
+  /** Line in the file of each kept row. */
+  readonly line: Uint32Array;
+  readonly steps: readonly RepairStep[];
+  readonly questions: readonly RepairQuestion[];
+  readonly gaps: readonly Gap[];
+  readonly nominalStepMs: number | null;
+  readonly firstInstantMs: number | null;
+  readonly lastInstantMs: number | null;
+  readonly counts: RowCounts;
+}
+
+/**
+ * Turns the raw rows of one file into readings: UTC, ascending, m³/h and °C, every step listed and counted.
+ * Pure: preview and import call it alike, and other choices on the same rows undo any step.
+ *
+ * Order: times by file order → out-of-order rows → repeats → sentinels → weak signal → units.
+ * With an open question `columns` is null; steps, gaps and counts are then provisional.
+ * Columns may share memory with `raw` and each other: do not write to them.
+ */
+export function resolveRows(
+  raw: RawRows,
+  recipe: FileRecipe,
+  choices: RepairChoices,
+  siteZone: string,
+): ResolvedRows {
+  const questions: RepairQuestion[] = unitQuestions(raw);
+  const times = resolveTimes(raw, recipe.time.clock, choices.missingHour, siteZone);
+  if (times === null) {
+    return {
+      ...nothing(raw),
+      steps: rawSteps(raw),
+      questions: [{ code: "loggerClock" }, ...questions],
+    };
+  }
+  const ordered = orderRows(raw, times.instantMs, choices);
+  const cleaned = blankSentinels(raw, times.instantMs, choices.sentinels);
+  const instantMs = gather(times.instantMs, ordered.order);
+  const line =
+    ordered.order === null ? raw.line : ordered.order.map((row) => raw.line[row] as number);
+  const original = raw.channels.map((channel, i): OriginalChannel => ({
+    meaning: channel.meaning,
+    unit: channel.unit ?? "m3/h",
+    decimals: channel.decimals,
+    values: gather(cleaned.values[i] as Float64Array, ordered.order),
+  }));
+  const conversion = newTally();
+  const stored = (meaning: ChannelMeaning): Float64Array | null => {
+    const channel = original.find((other) => other.meaning === meaning);
+    if (channel === undefined) return null;
+    countConversion(conversion, channel);
+    return toStoredUnit(channel.values, channel.unit);
+  };
+  const flowM3PerHour = stored("flow");
+  const supplyC = stored("supply");
+  const returnC = stored("return");
+  const signalPercent = stored("signal");
+  const { quality, weakSignal } = judgeRows(
+    instantMs,
+    line,
+    [flowM3PerHour, supplyC, returnC],
+    signalPercent,
+    choices,
+  );
+
+  if (choices.conflictingRepeats === null && ordered.conflictingRepeats.count > 0) {
+    questions.push(asQuestion("conflictingRepeats", ordered.conflictingRepeats));
+  }
+  if (choices.weakSignal === null && weakSignal.count > 0)
+    questions.push(asQuestion("weakSignal", weakSignal));
+
+  const stepMs = nominalStepMs(instantMs);
+  const gaps = stepMs === null ? [] : findGaps(instantMs, flowM3PerHour, stepMs);
+  return {
+    columns:
+      questions.length > 0
+        ? null
+        : { instantMs, flowM3PerHour, supplyC, returnC, signalPercent, quality },
+    original,
+    line,
+    steps: [
+      ...rawSteps(raw),
+      ...listed("repeatedHour", times.repeatedHour),
+      ...listed("missingHour", times.missingHour),
+      ...listed("outOfOrder", ordered.outOfOrder),
+      ...listed("identicalRepeats", ordered.identicalRepeats),
+      ...listed("conflictingRepeats", ordered.conflictingRepeats),
+      ...listed("sentinels", cleaned.sentinels),
+      ...listed("weakSignal", weakSignal),
+      ...listed("unitConversion", conversion),
+    ],
+    questions,
+    gaps,
+    nominalStepMs: stepMs,
+    firstInstantMs: instantMs[0] ?? null,
+    lastInstantMs: instantMs[instantMs.length - 1] ?? null,
+    counts: countRows(raw.rowCount, instantMs, quality, stepMs),
+  };
+}
+
+function unitQuestions(raw: RawRows): RepairQuestion[] {
+  return raw.channels.flatMap(({ unit, meaning, columnIndex }: RawChannel): RepairQuestion[] => {
+    if (unit !== null || meaning === "signal") return [];
+    return [{ code: meaning === "flow" ? "flowUnit" : "temperatureUnit", columnIndex }];
+  });
+}
+
+function nothing(raw: RawRows): Omit<ResolvedRows, "steps" | "questions"> {
+  return {
+    columns: null,
+    original: [],
+    line: new Uint32Array(0),
+    gaps: [],
+    nominalStepMs: null,
+    firstInstantMs: null,
+    lastInstantMs: null,
+    counts: {
+      read: raw.rowCount,
+      kept: 0,
+      measured: 0,
+      excluded: 0,
+      noReading: 0,
+      leftOut: 0,
+      expected: null,
+      missing: null,
+    },
+  };
+}
+
+/** What the reader could not read, as steps. */
+function rawSteps(raw: RawRows): RepairStep[] {
+  return [
+    ...listed("unreadableTimes", raw.unreadableTimes),
+    ...listed("shortRows", raw.shortRows),
+    ...listed("unreadableCells", raw.unreadableCells),
+    ...listed("footer", raw.footer),
+  ];
+}
+
+function listed(code: RepairStepCode, { count, examples, countByKind }: Tally): RepairStep[] {
+  return count === 0 ? [] : [{ code, count, examples, countByKind }];
+}
+
+function asQuestion(
+  code: "conflictingRepeats" | "weakSignal",
+  { count, examples }: Tally,
+): RepairQuestion {
+  return { code, count, examples };
+}
+
+function countConversion(into: Tally, { unit, values, meaning }: OriginalChannel): void {
+  const target = storedUnit(unit);
+  if (unit === target) return;
+  let cells = 0;
+  for (let i = 0; i < values.length; i++) if (!Number.isNaN(values[i])) cells++;
+  into.count += cells;
+  into.countByKind[`${meaning}: ${unit} → ${target}`] = cells;
+}
+
+function judgeRows(
+  instantMs: Float64Array,
+  line: Uint32Array,
+  needed: readonly (Float64Array | null)[],
+  signalPercent: Float64Array | null,
+  choices: RepairChoices,
+): { quality: Uint8Array; weakSignal: Tally } {
+  const quality = new Uint8Array(instantMs.length);
+  const weakSignal = newTally();
+  for (const channel of needed) {
+    if (channel === null) continue;
+    for (let i = 0; i < channel.length; i++)
+      if (Number.isNaN(channel[i])) quality[i] = RowQuality.noReading;
+  }
+  if (signalPercent === null) return { quality, weakSignal };
+  for (let i = 0; i < signalPercent.length; i++) {
+    const signal = signalPercent[i] as number;
+    if (!(signal < choices.weakSignalBelowPercent)) continue;
+    tally(weakSignal, choices.weakSignal ?? "undecided", () => ({
+      line: line[i] as number,
+      column: null,
+      cell: String(signal),
+      instantMs: instantMs[i] as number,
+    }));
+    if (choices.weakSignal === "exclude" && quality[i] === RowQuality.measured)
+      quality[i] = RowQuality.excluded;
+  }
+  return { quality, weakSignal };
+}
+
+function countRows(
+  read: number,
+  instantMs: Float64Array,
+  quality: Uint8Array,
+  stepMs: number | null,
+): RowCounts {
+  const kept = instantMs.length;
+  let excluded = 0;
+  let noReading = 0;
+  for (let i = 0; i < kept; i++) {
+    if (quality[i] === RowQuality.excluded) excluded++;
+    else if (quality[i] === RowQuality.noReading) noReading++;
+  }
+  const span = kept < 2 ? null : (instantMs[kept - 1] as number) - (instantMs[0] as number);
+  const expected = span === null || stepMs === null ? null : Math.round(span / stepMs) + 1;
+  const missing = expected === null ? null : Math.max(0, expected - kept);
+  return {
+    read,
+    kept,
+    measured: kept - excluded - noReading,
+    excluded,
+    noReading,
+    leftOut: read - kept,
+    expected,
+    missing,
+  };
+}

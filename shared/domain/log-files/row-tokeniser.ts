@@ -1,0 +1,257 @@
+import type { Dialect } from "./recipe";
+import { concatBytes } from "./text-encoding";
+
+/** Cells after this many are counted, not kept: no logger row is that wide. */
+export const MAX_CELLS = 512;
+/** A row longer than this is reported as one unreadable row, so that memory stays flat. */
+export const MAX_ROW_BYTES = 1 << 20;
+/** A quoted cell spanning more lines than this has lost its closing quote. */
+const MAX_LINES_IN_CELL = 20;
+
+const LINE_FEED = 10;
+const CARRIAGE_RETURN = 13;
+const SPACE = 32;
+
+const PLAIN = 0;
+const IS_SEPARATOR = 1;
+const IS_LINE_END = 2;
+
+const decoder = new TextDecoder("utf-8");
+const EMPTY = new Uint8Array(0);
+
+/**
+ * Splits a stream of UTF-8 bytes into rows and cells without making a string.
+ *
+ * During `onRow` the cells of the row are `buffer[starts[i] … ends[i])`, quotes removed; nothing of it
+ * survives the call. Blank lines are counted as lines but are no rows. Line numbers are 1-based and
+ * physical: a cell that holds a line break advances them.
+ */
+export class RowTokeniser {
+  buffer: Uint8Array = EMPTY;
+  readonly starts = new Int32Array(MAX_CELLS);
+  readonly ends = new Int32Array(MAX_CELLS);
+  /** Cells in the row, also those beyond {@link MAX_CELLS}. */
+  cellCount = 0;
+  /** Line on which the row starts. */
+  line = 0;
+  /** True for a row over {@link MAX_ROW_BYTES}; it has no cells. */
+  oversize = false;
+
+  private readonly classes = new Uint8Array(256);
+  private readonly separator: number;
+  private readonly quote: number;
+  private carry: Uint8Array = EMPTY;
+  private nextLine = 1;
+  private lineBreaksInRow = 0;
+  private discarding = false;
+  private quotedStart = 0;
+  private quotedEnd = 0;
+  /** Start and end of cells with doubled quotes; closed up once the row is known to be whole. */
+  private readonly doubled: number[] = [];
+
+  constructor(
+    dialect: Pick<Dialect, "separator" | "quote">,
+    private readonly onRow: (row: RowTokeniser) => void,
+  ) {
+    this.separator = dialect.separator.charCodeAt(0);
+    this.quote = dialect.quote === null ? -1 : dialect.quote.charCodeAt(0);
+    this.classes[this.separator] = IS_SEPARATOR;
+    this.classes[LINE_FEED] = IS_LINE_END;
+    this.classes[CARRIAGE_RETURN] = IS_LINE_END;
+  }
+
+  /** The text of a cell, trimmed; at most 200 bytes of it. "" where the row has no such cell. */
+  cellText(index: number): string {
+    if (index >= Math.min(this.cellCount, MAX_CELLS)) return "";
+    const start = this.starts[index] as number;
+    const end = Math.min(this.ends[index] as number, start + 200);
+    return decoder.decode(this.buffer.subarray(start, end)).trim();
+  }
+
+  push(chunk: Uint8Array): void {
+    // Doubled quotes are closed up in place, so quoted dialects always work on a copy of their own.
+    this.buffer = this.carry.length > 0 || this.quote >= 0 ? concatBytes(this.carry, chunk) : chunk;
+    this.carry = EMPTY;
+    let from = 0;
+    if (this.discarding) {
+      from = this.discard();
+      if (this.discarding) return;
+    }
+    from = this.readRows(from, false);
+    const left = this.buffer.length - from;
+    if (left > MAX_ROW_BYTES) {
+      this.discarding = true;
+      this.buffer = EMPTY;
+    } else {
+      this.carry = this.buffer.slice(from);
+    }
+  }
+
+  end(): void {
+    this.buffer = this.carry;
+    this.carry = EMPTY;
+    if (this.discarding) {
+      this.discarding = false;
+      this.emitOversize();
+      return;
+    }
+    this.readRows(0, true);
+  }
+
+  /** Reads whole rows from `from` on; returns where the first incomplete row starts. */
+  private readRows(from: number, final: boolean): number {
+    const length = this.buffer.length;
+    let at = from;
+    while (at < length) {
+      this.lineBreaksInRow = 0;
+      this.doubled.length = 0;
+      const next = this.readRow(at, final);
+      if (next < 0) return at;
+      for (let i = 0; i < this.doubled.length; i += 2) {
+        this.closeUpQuotes(this.doubled[i] as number, this.doubled[i + 1] as number);
+      }
+      this.line = this.nextLine;
+      this.nextLine += 1 + this.lineBreaksInRow;
+      at = next;
+      if (this.cellCount > 1 || (this.starts[0] as number) < (this.ends[0] as number)) {
+        this.oversize = false;
+        this.onRow(this);
+      }
+    }
+    return at;
+  }
+
+  /** Finds the cells of one row; returns the start of the next row, or -1 if the row is not complete yet. */
+  private readRow(from: number, final: boolean): number {
+    const { buffer, classes, starts, ends, separator, quote } = this;
+    const length = buffer.length;
+    const collapses = separator === SPACE;
+    let at = from;
+    let cell = 0;
+    if (collapses) while (at < length && buffer[at] === SPACE) at++;
+    for (;;) {
+      let start = at;
+      if (quote >= 0) {
+        const quoted = this.readQuoted(at, final);
+        if (quoted === -1) return -1;
+        if (quoted >= 0) {
+          if (cell < MAX_CELLS) {
+            starts[cell] = this.quotedStart;
+            ends[cell] = this.quotedEnd;
+          }
+          start = -1;
+          at = quoted;
+        }
+      }
+      while (at < length && classes[buffer[at] as number] === PLAIN) at++;
+      if (start >= 0 && cell < MAX_CELLS) {
+        starts[cell] = start;
+        ends[cell] = at;
+      }
+      if (at >= length) {
+        if (!final) return -1;
+        this.cellCount = cell + 1;
+        return length;
+      }
+      const byte = buffer[at] as number;
+      if (byte === separator) {
+        at++;
+        if (!collapses) {
+          cell++;
+          continue;
+        }
+        while (at < length && buffer[at] === SPACE) at++;
+        if (at >= length && !final) return -1;
+        // Spaces before the line end close the row; they open no further cell.
+        if (at < length && classes[buffer[at] as number] !== IS_LINE_END) {
+          cell++;
+          continue;
+        }
+        if (at >= length) {
+          this.cellCount = cell + 1;
+          return length;
+        }
+      }
+      this.cellCount = cell + 1;
+      return this.afterLineEnd(at, final);
+    }
+  }
+
+  private afterLineEnd(at: number, final: boolean): number {
+    if (this.buffer[at] === LINE_FEED) return at + 1;
+    if (at + 1 < this.buffer.length) return this.buffer[at + 1] === LINE_FEED ? at + 2 : at + 1;
+    // A carriage return at the very end of a chunk may be followed by its line feed.
+    return final ? at + 1 : -1;
+  }
+
+  /**
+   * Reads a quoted cell at `from`. Returns the place of the separator or line end after it,
+   * -1 if the buffer ends first, -2 if the cell is not properly quoted and is to be read as plain.
+   */
+  private readQuoted(from: number, final: boolean): number {
+    const { buffer, quote, classes } = this;
+    const length = buffer.length;
+    let at = from;
+    while (at < length && buffer[at] === SPACE && this.separator !== SPACE) at++;
+    if (at >= length || buffer[at] !== quote) return -2;
+    at++;
+    const start = at;
+    let write = at;
+    let shifted = false;
+    let breaks = 0;
+    for (; at < length; at++) {
+      const byte = buffer[at] as number;
+      if (byte === quote) {
+        if (at + 1 < length && buffer[at + 1] === quote) {
+          at++;
+          shifted = true;
+        } else break;
+      } else if (byte === LINE_FEED || (byte === CARRIAGE_RETURN && buffer[at + 1] !== LINE_FEED)) {
+        if (++breaks > MAX_LINES_IN_CELL) return -2;
+      }
+      write++;
+    }
+    if (at + 1 >= length && !final) return -1;
+    if (at >= length) return -2;
+    let after = at + 1;
+    while (after < length && buffer[after] === SPACE && this.separator !== SPACE) after++;
+    if (after >= length && !final) return -1;
+    if (after < length && classes[buffer[after] as number] === PLAIN) return -2;
+    if (shifted) this.doubled.push(start, at);
+    this.quotedStart = start;
+    this.quotedEnd = write;
+    this.lineBreaksInRow += breaks;
+    return after;
+  }
+
+  /** Turns doubled quotes between `start` and `end` into single ones, in place. */
+  private closeUpQuotes(start: number, end: number): void {
+    let write = start;
+    for (let read = start; read < end; read++) {
+      const byte = this.buffer[read] as number;
+      if (byte === this.quote && this.buffer[read + 1] === this.quote) read++;
+      this.buffer[write++] = byte;
+    }
+  }
+
+  /** Skips to the end of an oversize row; returns where the next row starts. */
+  private discard(): number {
+    const { buffer } = this;
+    for (let at = 0; at < buffer.length; at++) {
+      const byte = buffer[at];
+      if (byte === LINE_FEED || byte === CARRIAGE_RETURN) {
+        this.discarding = false;
+        this.emitOversize();
+        return byte === CARRIAGE_RETURN && buffer[at + 1] === LINE_FEED ? at + 2 : at + 1;
+      }
+    }
+    return buffer.length;
+  }
+
+  private emitOversize(): void {
+    this.line = this.nextLine++;
+    this.cellCount = 0;
+    this.oversize = true;
+    this.onRow(this);
+  }
+}

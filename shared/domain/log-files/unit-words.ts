@@ -1,0 +1,223 @@
+import type { ColumnUnit } from "./recipe";
+
+/** A unit read from a header or a units row: one of ours, or one we know of and cannot read. */
+export type UnitWord =
+  { readonly unit: ColumnUnit } | { readonly unit: null; readonly other: OtherQuantity };
+
+/** Quantities beside ours; the word tells that a column is none of flow, temperature or signal. */
+export type OtherQuantity =
+  "otherFlow" | "volume" | "power" | "energy" | "speed" | "difference" | "other";
+
+const OURS: Readonly<Record<string, ColumnUnit>> = {
+  "m3/h": "m3/h",
+  "m3/hr": "m3/h",
+  m3h: "m3/h",
+  m3ph: "m3/h",
+  "m3h-1": "m3/h",
+  "cbm/h": "m3/h",
+  cmh: "m3/h",
+  m3perhour: "m3/h",
+  "qm/h": "m3/h",
+  "m^3/h": "m3/h",
+  "m3/std": "m3/h",
+  "m3/hour": "m3/h",
+  m3perh: "m3/h",
+  "l/s": "L/s",
+  lps: "L/s",
+  ls: "L/s",
+  "ls-1": "L/s",
+  "l/sec": "L/s",
+  "liter/s": "L/s",
+  "litre/s": "L/s",
+  "l/sek": "L/s",
+  "litres/s": "L/s",
+  "liters/s": "L/s",
+  "l/min": "L/min",
+  lpm: "L/min",
+  "l/mn": "L/min",
+  lmin: "L/min",
+  "litre/min": "L/min",
+  "liter/min": "L/min",
+  "litres/min": "L/min",
+  "liters/min": "L/min",
+  gpm: "US gpm",
+  usgpm: "US gpm",
+  "gpm(us)": "US gpm",
+  "gal/min": "US gpm",
+  "usgal/min": "US gpm",
+  "gallons/min": "US gpm",
+  gpmus: "US gpm",
+  degc: "degC",
+  celsius: "degC",
+  "deg.c": "degC",
+  gradc: "degC",
+  degcelsius: "degC",
+  degf: "degF",
+  fahrenheit: "degF",
+  "deg.f": "degF",
+  degfahrenheit: "degF",
+  kelvin: "K",
+  degk: "K",
+  "%": "%",
+  percent: "%",
+  prozent: "%",
+  pct: "%",
+};
+
+/** Single letters mean a unit only where a unit is expected: in brackets, a units row or after an underscore. */
+const LETTERS: Readonly<Record<string, ColumnUnit>> = { c: "degC", f: "degF", k: "K" };
+
+const OTHERS: Readonly<Record<string, OtherQuantity>> = {
+  "l/h": "otherFlow",
+  lph: "otherFlow",
+  "l/hr": "otherFlow",
+  "m3/s": "otherFlow",
+  "m3/min": "otherFlow",
+  "m3/d": "otherFlow",
+  "kg/h": "otherFlow",
+  "kg/s": "otherFlow",
+  "t/h": "otherFlow",
+  "ft3/min": "otherFlow",
+  cfm: "otherFlow",
+  gph: "otherFlow",
+  impgpm: "otherFlow",
+  ukgpm: "otherFlow",
+  igpm: "otherFlow",
+  gpmuk: "otherFlow",
+  "gpm(uk)": "otherFlow",
+  "gpm(imp)": "otherFlow",
+  mgd: "otherFlow",
+  gpd: "otherFlow",
+  "gal/h": "otherFlow",
+  m3: "volume",
+  l: "volume",
+  gal: "volume",
+  usgal: "volume",
+  liter: "volume",
+  litre: "volume",
+  litres: "volume",
+  ltr: "volume",
+  kw: "power",
+  w: "power",
+  mw: "power",
+  "btu/h": "power",
+  btuh: "power",
+  "kbtu/h": "power",
+  mbh: "power",
+  ton: "power",
+  tons: "power",
+  tr: "power",
+  kwh: "energy",
+  wh: "energy",
+  mwh: "energy",
+  mj: "energy",
+  gj: "energy",
+  kj: "energy",
+  btu: "energy",
+  mbtu: "energy",
+  therm: "energy",
+  "m/s": "speed",
+  "ft/s": "speed",
+  fps: "speed",
+  "mm/s": "speed",
+  db: "other",
+  v: "other",
+  mv: "other",
+  ma: "other",
+  bar: "other",
+  kpa: "other",
+  pa: "other",
+  psi: "other",
+  hz: "other",
+  rpm: "other",
+  s: "other",
+  ms: "other",
+  min: "other",
+  h: "other",
+  "kg/m3": "other",
+  ohm: "other",
+  a: "other",
+  "us/cm": "other",
+  "-": "other",
+  "%rh": "other",
+  rh: "other",
+};
+
+/**
+ * The unit a piece of text is, or null if it is none. `m³/h`, `m3/hr`, `US gpm`, `°F`, `Deg C` …
+ * @param expected true in brackets and units rows, where a bare C, F or K is a unit.
+ */
+export function unitWord(text: string, expected: boolean): UnitWord | null {
+  const key = unitKey(text);
+  const letters = expected ? LETTERS : {};
+  const ours = own(OURS, key) ?? own(letters, key);
+  if (ours !== undefined) return { unit: ours };
+  const other = own(OTHERS, key);
+  return other === undefined ? null : { unit: null, other };
+}
+
+function own<T>(table: Readonly<Record<string, T>>, key: string): T | undefined {
+  return Object.prototype.hasOwnProperty.call(table, key) ? table[key] : undefined;
+}
+
+function unitKey(text: string): string {
+  let key = "";
+  for (const c of text.toLowerCase()) {
+    if (c === "³") key += "3";
+    else if (c === "°" || c === "º") key += "deg";
+    else if (c === "℃") key += "degc";
+    else if (c === "℉") key += "degf";
+    else if (c === "⋅" || c === "·") continue;
+    else if (!" \u00a0\u202f\t".includes(c)) key += c;
+  }
+  return key;
+}
+
+/** A header split into its name and the unit it carries. */
+export interface HeaderParts {
+  /** The header without the unit, as written. */
+  readonly name: string;
+  readonly unit: UnitWord | null;
+}
+
+const BRACKETS: readonly (readonly [string, string])[] = [
+  ["[", "]"],
+  ["(", ")"],
+  ["{", "}"],
+];
+
+/**
+ * Takes the unit out of a header: `Flow [m³/h]`, `Supply (°F)`, `Vorlauf / °C`, `Vorlauf in °C`,
+ * `flow_m3h`, `supply_C`, `Flow gpm`.
+ */
+export function splitHeader(header: string): HeaderParts {
+  const text = header.trim();
+  for (const [open, close] of BRACKETS) {
+    const from = text.lastIndexOf(open);
+    const to = text.indexOf(close, from + 1);
+    if (from < 0 || to < 0) continue;
+    const unit = unitWord(text.slice(from + 1, to), true);
+    if (unit !== null) return { name: `${text.slice(0, from)} ${text.slice(to + 1)}`.trim(), unit };
+  }
+  // After the last "/", but not inside "m³/h": try the longest tail first.
+  for (let at = 0; at < text.length; at++) {
+    const c = text[at] as string;
+    if (!" _/,:;".includes(c)) continue;
+    const tail = text.slice(at + 1).trim();
+    if (tail === "") continue;
+    // `supply_C` has a unit; `Temp C` may be the third of three probes.
+    const unit = unitWord(tail, c === "_" || c === "/");
+    if (unit !== null && at > 0) return { name: trimJoiner(text.slice(0, at)), unit };
+  }
+  const whole = unitWord(text, false);
+  return whole === null ? { name: text, unit: null } : { name: "", unit: whole };
+}
+
+function trimJoiner(name: string): string {
+  const trimmed = name.trim();
+  const lower = trimmed.toLowerCase();
+  for (const joiner of [" in", "/", ",", ":", "-", "_"]) {
+    if (lower.endsWith(joiner)) return trimmed.slice(0, trimmed.length - joiner.length).trim();
+  }
+  return trimmed;
+}
