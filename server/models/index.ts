@@ -6,6 +6,9 @@ import { BoreVersion } from "./bore-version";
 import { Building } from "./building";
 import { Invitation } from "./invitation";
 import { Loop } from "./loop";
+import { Job } from "./job";
+import { LogFile } from "./log-file";
+import { LogImport } from "./log-import";
 import { Membership } from "./membership";
 import { MeteringPoint } from "./metering-point";
 import { Organisation } from "./organisation";
@@ -38,10 +41,19 @@ const models: readonly ModelDefinition[] = [
   Loop,
   MeteringPoint,
   BoreVersion,
+  LogImport,
+  LogFile,
+  Job,
 ];
 
 /** Binds every model to the connection, then their associations: all must exist by then. */
 export function defineModels(sequelize: Sequelize): void {
+  // Sequelize writes each column's name into its definition, so a definition that two columns share
+  // would give both the first one's name: every column gets its own copy.
+  sequelize.addHook("beforeDefine", (attributes) => {
+    for (const [name, column] of Object.entries(attributes))
+      Reflect.set(attributes, name, { ...(column as object) });
+  });
   for (const model of models) model.define(sequelize);
   for (const model of models) model.associate?.();
 }

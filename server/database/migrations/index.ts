@@ -1,6 +1,7 @@
 import type { QueryInterface } from "sequelize";
 import { people } from "./001-people";
 import { places } from "./002-places";
+import { importsAndReadings } from "./003-imports-readings";
 
 /**
  * One step of the schema. To add one: write `NNN-subject.ts` beside this file, export a Migration
@@ -13,4 +14,4 @@ export interface Migration {
   up(schema: QueryInterface): Promise<void>;
 }
 
-export const migrations: readonly Migration[] = [people, places];
+export const migrations: readonly Migration[] = [people, places, importsAndReadings];

@@ -1,0 +1,69 @@
+import {
+  DataTypes,
+  Model,
+  type CreationOptional,
+  type InferAttributes,
+  type InferCreationAttributes,
+  type Sequelize,
+} from "sequelize";
+import type { FileRecipe } from "@shared/domain/log-files/recipe";
+import type { Question, Recognition, Unreadable } from "@shared/domain/log-files/recognition";
+import type { SeriesKind } from "@shared/domain/readings/reading-columns";
+import { idColumn, instantColumn, reference } from "./columns";
+import { optionalJson } from "./json-column";
+
+/** What recognition found besides the recipe and the questions, which change with the answers. */
+export type RecognitionFindings = Omit<Recognition, "recipe" | "questions">;
+
+/** A logger's file as it came: its bytes are in the file store under their hash. */
+export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttributes<LogFile>> {
+  declare id: CreationOptional<string>;
+  declare organisationId: string;
+  declare importId: string;
+  declare pointId: string;
+  declare name: string;
+  declare sha256: string;
+  declare byteLength: number;
+  declare uploadedAt: Date;
+  declare recognition: CreationOptional<RecognitionFindings | null>;
+  declare unreadable: CreationOptional<Unreadable | null>;
+  declare recipe: CreationOptional<FileRecipe | null>;
+  declare questions: CreationOptional<readonly Question[] | null>;
+  /** Set while its readings are stored: where files hold the same instant the greater one wins. */
+  declare precedence: CreationOptional<number | null>;
+  declare seriesKind: CreationOptional<SeriesKind | null>;
+  declare nominalStepMs: CreationOptional<number | null>;
+
+  static define(sequelize: Sequelize): void {
+    LogFile.init(
+      {
+        id: idColumn,
+        organisationId: reference,
+        importId: reference,
+        pointId: reference,
+        name: { type: DataTypes.STRING(255), allowNull: false },
+        sha256: { type: DataTypes.CHAR(64), allowNull: false },
+        byteLength: {
+          type: DataTypes.BIGINT.UNSIGNED,
+          allowNull: false,
+          // At most 200 MB: safely a number, though the connector gives every BIGINT as text.
+          get(this: LogFile) {
+            return Number(this.getDataValue("byteLength"));
+          },
+        },
+        uploadedAt: instantColumn,
+        recognition: optionalJson("recognition"),
+        unreadable: optionalJson("unreadable"),
+        recipe: optionalJson("recipe"),
+        questions: optionalJson("questions"),
+        precedence: { type: DataTypes.INTEGER, allowNull: true },
+        seriesKind: {
+          type: DataTypes.ENUM("instantaneous", "meanFromLabel", "meanToLabel"),
+          allowNull: true,
+        },
+        nominalStepMs: { type: DataTypes.DOUBLE, allowNull: true },
+      },
+      { sequelize, tableName: "log_file", timestamps: false },
+    );
+  }
+}

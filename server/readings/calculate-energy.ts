@@ -1,0 +1,61 @@
+import { integrateEnergy } from "@shared/domain/energy/integrate";
+import type { IntervalEnergyColumns } from "@shared/domain/energy/interval-energy";
+import { rowsOutsideWater, type OutsideWater } from "@shared/domain/energy/water-range";
+import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
+import type { Interval } from "@shared/domain/time/interval";
+import type { LocalDay } from "@shared/domain/time/local-calendar";
+import { sumDays, type DayEnergy } from "./day-rows";
+import { powerOptionsOf, type EnergySettings } from "./energy-settings";
+import { indexFrom, sliceColumns } from "./load-segments";
+
+export interface CalculatedEnergy {
+  readonly intervals: IntervalEnergyColumns;
+  readonly days: DayEnergy[];
+  readonly outsideWaterRows: number;
+  /** The first few of them. */
+  readonly outsideWater: readonly OutsideWater[];
+}
+
+/**
+ * Energy of resolved readings within whole local days, or null where the loop's fluid gives none.
+ * The check before an import, the import itself and a recalculation all come through here.
+ */
+export function calculateEnergy(
+  segments: readonly ReadingSegment[],
+  settings: EnergySettings,
+  days: readonly LocalDay[],
+): CalculatedEnergy | null {
+  const options = powerOptionsOf(settings);
+  const first = days[0];
+  const last = days[days.length - 1];
+  if (!options || !first || !last) return null;
+  const window: Interval = { startMs: first.startMs, endMs: last.endMs };
+  const intervals = integrateEnergy(segments, { ...options, window });
+  let outsideWaterRows = 0;
+  const outsideWater: OutsideWater[] = [];
+  const byDay = new Map<string, number>();
+  for (const { columns } of segments) {
+    const within = sliceColumns(
+      columns,
+      indexFrom(columns.instantMs, window.startMs),
+      indexFrom(columns.instantMs, window.endMs),
+    );
+    const found = rowsOutsideWater(within, options.water);
+    if (found.count === 0) continue;
+    outsideWaterRows += found.count;
+    outsideWater.push(...found.examples.slice(0, 20 - outsideWater.length));
+    for (const day of days) {
+      const from = indexFrom(within.instantMs, day.startMs);
+      const to = indexFrom(within.instantMs, day.endMs);
+      if (from === to) continue;
+      const { count } = rowsOutsideWater(sliceColumns(within, from, to), options.water, 0);
+      if (count > 0) byDay.set(day.date, (byDay.get(day.date) ?? 0) + count);
+    }
+  }
+  return {
+    intervals,
+    days: sumDays(intervals, days, (day) => byDay.get(day.date) ?? 0),
+    outsideWaterRows,
+    outsideWater,
+  };
+}

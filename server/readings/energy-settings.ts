@@ -1,0 +1,84 @@
+import { QueryTypes, type Transaction } from "sequelize";
+import type { LoopService } from "@shared/contracts/places";
+import type { CutOffs, MeterSide, PowerOptions } from "@shared/domain/energy/power";
+import {
+  absolutePressureMPa,
+  fluidForEnergy,
+  type FluidForEnergy,
+  type LoopPressure,
+} from "@shared/domain/fluids/loop-fluid";
+import type { Database } from "@server/database/connect";
+import { NotFound } from "@server/http/errors";
+
+/** Everything about a point that its energy depends on besides its readings. */
+export interface EnergySettings {
+  readonly organisationId: string;
+  readonly pointId: string;
+  /** IANA zone of the site: where its days begin. */
+  readonly zone: string;
+  readonly service: LoopService;
+  readonly meterSide: MeterSide;
+  readonly cutOffs: CutOffs;
+  readonly pressure: LoopPressure;
+  readonly fluid: FluidForEnergy;
+}
+
+interface Row {
+  organisationId: string;
+  zone: string;
+  service: LoopService;
+  meterSide: MeterSide;
+  fluidKind: "water" | "ethyleneGlycol" | "propyleneGlycol";
+  glycolPercent: number | null;
+  glycolBasis: "mass" | "volume" | null;
+  gaugePressure: number | null;
+  flowCutOff: number | null;
+  deltaTCutOff: number | null;
+}
+
+/** @throws NotFound where there is no such point. */
+export async function loadEnergySettings(
+  database: Database,
+  pointId: string,
+  transaction?: Transaction,
+): Promise<EnergySettings> {
+  const [row] = await database.query<Row>(
+    `SELECT p.organisation_id AS organisationId, s.zone AS zone, l.service AS service,
+            p.meter_side AS meterSide, l.fluid_kind AS fluidKind,
+            l.glycol_percent AS glycolPercent, l.glycol_basis AS glycolBasis,
+            l.gauge_pressure_mpa AS gaugePressure, l.flow_cut_off_m3_per_hour AS flowCutOff,
+            l.delta_t_cut_off_k AS deltaTCutOff
+       FROM metering_point p JOIN \`loop\` l ON l.id = p.loop_id JOIN site s ON s.id = l.site_id
+      WHERE p.id = :pointId`,
+    { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
+  );
+  if (!row) throw new NotFound("metering point");
+  const fluid =
+    row.fluidKind === "water"
+      ? ({ kind: "water" } as const)
+      : {
+          kind: row.fluidKind,
+          percent: row.glycolPercent ?? 0,
+          basis: row.glycolBasis ?? ("mass" as const),
+        };
+  return {
+    organisationId: row.organisationId,
+    pointId,
+    zone: row.zone,
+    service: row.service,
+    meterSide: row.meterSide,
+    cutOffs: { flowM3PerHour: row.flowCutOff, deltaTK: row.deltaTCutOff },
+    pressure: absolutePressureMPa(row.gaugePressure),
+    fluid: fluidForEnergy(fluid, row.gaugePressure),
+  };
+}
+
+/** How power is to be formed, or null where the loop's fluid gives no energy. */
+export function powerOptionsOf(settings: EnergySettings): PowerOptions | null {
+  if (!settings.fluid.ok) return null;
+  const service = ({ hot: "heating", chilled: "cooling", changeover: "changeover" } as const)[
+    settings.service
+  ];
+  const { meterSide, cutOffs } = settings;
+  return { water: settings.fluid.water, meterSide, service, cutOffs };
+}

@@ -1,0 +1,148 @@
+import { QueryTypes, type Transaction } from "sequelize";
+import { HOUR_MS, type Interval } from "@shared/domain/time/interval";
+import { addDays, localDaysBetween, type LocalDay } from "@shared/domain/time/local-calendar";
+import { INTERVAL_MS, type IntervalEnergyColumns } from "@shared/domain/energy/interval-energy";
+import type { Database } from "@server/database/connect";
+import { calculateEnergy } from "./calculate-energy";
+import { replaceDays } from "./day-rows";
+import { loadEnergySettings } from "./energy-settings";
+import { replaceIntervals } from "./interval-rows";
+import { loadSegments, reachOfPoint } from "./load-segments";
+import { refreshPointReadings } from "./point-readings";
+
+/** Days worked out at a time, so that memory stays flat however long a point has been measured. */
+const daysAtOnce = 92;
+
+export interface RecalculationHooks {
+  /** Called after each stretch with the share done, 0 to 1; may throw to stop the work. */
+  onProgress?(share: number): void;
+}
+
+/**
+ * Works out the energy of a point anew from its stored readings, in the caller's transaction:
+ * quarter-hours and local days of `range` and of the days it touches; everything without a range.
+ * What no longer has readings goes. Take the point's lock first ({@link lockPoint}), so that two
+ * jobs do not work on one point at a time.
+ */
+export async function recalculateEnergy(
+  database: Database,
+  transaction: Transaction,
+  pointId: string,
+  range: Interval | null,
+  hooks: RecalculationHooks = {},
+): Promise<void> {
+  const settings = await loadEnergySettings(database, pointId, transaction);
+  const reach = await reachOfPoint(database, pointId, transaction);
+  const whole = range ?? (await rangeOfEverything(database, transaction, pointId));
+  if (whole !== null) {
+    const days = localDaysBetween(
+      { startMs: whole.startMs - reach, endMs: whole.endMs + reach },
+      settings.zone,
+    );
+    const isEverything = range === null;
+    if (isEverything) await deleteDays(database, transaction, pointId);
+    for (let from = 0; from < days.length; from += daysAtOnce) {
+      const stretch = days.slice(from, from + daysAtOnce);
+      await recalculateStretch(database, transaction, settings, stretch);
+      hooks.onProgress?.(Math.min(1, (from + daysAtOnce) / days.length));
+    }
+  }
+  await refreshPointReadings(database, transaction, settings);
+}
+
+async function recalculateStretch(
+  database: Database,
+  transaction: Transaction,
+  settings: Awaited<ReturnType<typeof loadEnergySettings>>,
+  days: readonly LocalDay[],
+): Promise<void> {
+  const first = days[0];
+  const last = days[days.length - 1];
+  if (!first || !last) return;
+  const { pointId } = settings;
+  // Days of a zone off the quarter hour would share an interval with their neighbour: none today.
+  const fromMs = Math.floor(first.startMs / INTERVAL_MS) * INTERVAL_MS;
+  const toMs = Math.ceil(last.endMs / INTERVAL_MS) * INTERVAL_MS;
+  const segments = await loadSegments(database, pointId, fromMs, toMs, transaction);
+  const energy = calculateEnergy(segments, settings, days);
+  const intervals = energy?.intervals ?? noIntervals;
+  await replaceIntervals(database, transaction, pointId, { fromMs, toMs }, intervals);
+  await replaceDays(
+    database,
+    transaction,
+    settings,
+    { fromDate: first.date, toDate: addDays(last.date, 1) },
+    energy?.days ?? [],
+  );
+}
+
+/** From the first to the last instant that holds a reading or a figure; null where neither is. */
+async function rangeOfEverything(
+  database: Database,
+  transaction: Transaction,
+  pointId: string,
+): Promise<Interval | null> {
+  const [found] = await database.query<{ firstMs: string | null; lastMs: string | null }>(
+    `SELECT MIN(first_ms) AS firstMs, MAX(last_ms) AS lastMs FROM (
+       SELECT MIN(first_ms) AS first_ms, MAX(last_ms) AS last_ms FROM reading_block WHERE point_id = :pointId
+       UNION ALL
+       SELECT MIN(start_s) * 1000, MAX(start_s) * 1000 FROM interval_energy WHERE point_id = :pointId
+     ) AS stored`,
+    { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
+  );
+  if (!found || found.firstMs === null || found.lastMs === null) return null;
+  return { startMs: Number(found.firstMs), endMs: Number(found.lastMs) + HOUR_MS };
+}
+
+/** Days of a zone the site no longer has lie across the new ones, so all of them go. */
+async function deleteDays(database: Database, transaction: Transaction, pointId: string) {
+  await database.query("DELETE FROM day_energy WHERE point_id = :pointId", {
+    replacements: { pointId },
+    transaction,
+  });
+}
+
+/**
+ * Waits until no other job works on the point and keeps it so until the transaction ends. Must be
+ * its first statement: what is read afterwards then sees what the other job has committed.
+ */
+export async function lockPoint(
+  database: Database,
+  transaction: Transaction,
+  pointId: string,
+): Promise<void> {
+  await database.query("SELECT id FROM metering_point WHERE id = :pointId FOR UPDATE", {
+    replacements: { pointId },
+    type: QueryTypes.SELECT,
+    transaction,
+  });
+}
+
+const none = new Float64Array(0);
+const noRegister = {
+  energyKwh: none,
+  volumeM3: none,
+  flowDeltaTM3K: none,
+  powerDeltaTKwhK: none,
+  deltaTKs: none,
+  runningS: none,
+};
+const noIntervals: IntervalEnergyColumns = {
+  startMs: none,
+  coveredS: none,
+  heating: noRegister,
+  cooling: noRegister,
+  volumeM3: none,
+  suppressedKwh: none,
+  suppressedS: none,
+  minPowerKw: none,
+  maxPowerKw: none,
+  minFlowM3PerHour: none,
+  maxFlowM3PerHour: none,
+  supplyCs: none,
+  returnCs: none,
+  measuredRows: none,
+  excludedRows: none,
+  noReadingRows: none,
+  apportioned: new Uint8Array(0),
+};
