@@ -45,7 +45,8 @@ export async function apiAs(application: Application, role: Role): Promise<Api> 
     patch: (path, body) => call("PATCH", path, json(body)),
     upload(path, files) {
       const form = new FormData();
-      for (const { name, bytes } of files) form.append("files", new Blob([new Uint8Array(bytes)]), name);
+      for (const { name, bytes } of files)
+        form.append("files", new Blob([new Uint8Array(bytes)]), name);
       return call("POST", path, { body: form });
     },
   };
