@@ -2,6 +2,7 @@ import { createHash, randomBytes } from "node:crypto";
 import { chmodSync, mkdirSync, readFileSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import { z } from "zod";
+import { errorCode } from "./error-code";
 
 /** Everything the server takes from its surroundings, checked once at boot. */
 export interface Config {
@@ -151,7 +152,7 @@ function keptSecret(dataDir: string): string {
   try {
     writeFileSync(file, randomBytes(48).toString("base64url"), { flag: "wx", mode: 0o600 });
   } catch (error) {
-    if (!(error instanceof Error && "code" in error && error.code === "EEXIST")) throw error;
+    if (errorCode(error) !== "EEXIST") throw error;
   }
   chmodSync(file, 0o600);
   const secret = readFileSync(file, "utf8").trim();

@@ -2,6 +2,7 @@ import type { Logger } from "pino";
 import type { Clock } from "./clock";
 import type { Config } from "./config";
 import type { Database } from "./database/connect";
+import type { Passwords } from "./security/passwords";
 
 /** What lives as long as the process; made once by main.ts and by the test app. */
 export interface Services {
@@ -9,4 +10,5 @@ export interface Services {
   readonly database: Database;
   readonly clock: Clock;
   readonly log: Logger;
+  readonly passwords: Passwords;
 }

@@ -9,6 +9,7 @@ import {
 } from "sequelize";
 import { role, type Role } from "@shared/contracts/people";
 import { Account } from "./account";
+import { Invitation } from "./invitation";
 import { idColumn, instantColumn, optionalInstant, optionalReference, reference } from "./columns";
 
 /**
@@ -29,6 +30,7 @@ export class Membership extends Model<
   declare lastSeenAt: CreationOptional<Date | null>;
   declare createdAt: Date;
   declare account?: NonAttribute<Account | null>;
+  declare invitation?: NonAttribute<Invitation | null>;
 
   static define(sequelize: Sequelize): void {
     Membership.init(
@@ -52,5 +54,6 @@ export class Membership extends Model<
 
   static associate(): void {
     Membership.belongsTo(Account, { as: "account", foreignKey: "accountId" });
+    Membership.hasOne(Invitation, { as: "invitation", foreignKey: "membershipId" });
   }
 }

@@ -17,6 +17,10 @@ export function peopleAbilities({ role, via, organisationId }: Actor) {
      * outlive its revocation.
      */
     manageTokens: administers && via === "session",
+    /** Own password, language, sessions: a script acts for somebody but is not that person. */
+    changeOwnAccount: via === "session",
+    /** Letters the local mail fake kept; they hold live links of everybody. */
+    readCaughtMail: administers && via === "session",
     /** That an organisation keeps one active administrator is a rule of the command, not of here. */
     editMember: administersThis,
     removeMember: administersThis,

@@ -1,8 +1,21 @@
 import type { Endpoint } from "@server/http/define-endpoint";
+import { accessTokenRoutes } from "./access-token-routes";
+import { accountRoutes } from "./account-routes";
+import { developmentRoutes } from "./development-routes";
+import { memberRoutes } from "./member-routes";
+import { placesRoutes } from "./places-routes";
+import { sessionRoutes } from "./session-routes";
 import { systemRoutes } from "./system-routes";
 
 /** To add routes: write `x-routes.ts` exporting an array of endpoints and spread it here. */
-const productEndpoints: readonly Endpoint[] = [];
+const productEndpoints: readonly Endpoint[] = [
+  ...sessionRoutes,
+  ...accountRoutes,
+  ...memberRoutes,
+  ...accessTokenRoutes,
+  ...developmentRoutes,
+  ...placesRoutes,
+];
 
 /** Every endpoint of the API; the router, its document, the matrix and the tenancy test read it. */
 export const endpoints: readonly Endpoint[] = [

@@ -6,6 +6,7 @@ import type { Actor } from "@server/policies/actor";
 import type { Services } from "@server/services";
 import { NotSignedIn } from "@server/http/errors";
 import { tokenPrefix } from "./access-token-secret";
+import { demoAccountsAllowed } from "./demo-accounts-allowed";
 import { cookieName, readSessionCookie } from "./session-cookie";
 import { secretHash } from "./secrets";
 
@@ -50,9 +51,9 @@ async function actorOfSession(cookie: string, services: Services): Promise<Actor
             m.id AS membershipId, m.role, s.last_seen_at AS lastUsedAt
        FROM session s
        JOIN membership m ON m.id = s.membership_id AND m.state = 'active'
-       JOIN account a ON a.id = s.account_id
+       JOIN account a ON a.id = s.account_id AND (NOT a.is_demo OR :demoAllowed)
       WHERE s.id = :key AND s.revoked_at IS NULL AND s.expires_at > :now`,
-    { key: sessionId, now },
+    { key: sessionId, now, demoAllowed: demoAccountsAllowed(config) },
   );
   if (row === null) return null;
   if (isDue(row.lastUsedAt, now)) await noteSeen(database, "session", row, now);
@@ -60,7 +61,7 @@ async function actorOfSession(cookie: string, services: Services): Promise<Actor
 }
 
 async function actorOfToken(secret: string, services: Services): Promise<Actor> {
-  const { clock, database } = services;
+  const { config, clock, database } = services;
   const now = clock.date();
   const row = secret.startsWith(tokenPrefix)
     ? await one(
@@ -69,10 +70,10 @@ async function actorOfToken(secret: string, services: Services): Promise<Actor> 
                 m.id AS membershipId, m.role, t.last_used_at AS lastUsedAt
            FROM access_token t
            JOIN membership m ON m.id = t.membership_id AND m.state = 'active'
-           JOIN account a ON a.id = m.account_id
+           JOIN account a ON a.id = m.account_id AND (NOT a.is_demo OR :demoAllowed)
           WHERE t.secret_hash = :key AND t.revoked_at IS NULL
             AND (t.expires_at IS NULL OR t.expires_at > :now)`,
-        { key: secretHash(secret), now },
+        { key: secretHash(secret), now, demoAllowed: demoAccountsAllowed(config) },
       )
     : null;
   if (row === null)
@@ -84,7 +85,7 @@ async function actorOfToken(secret: string, services: Services): Promise<Actor> 
 async function one(
   database: Database,
   sql: string,
-  replacements: { key: string; now: Date },
+  replacements: { key: string; now: Date; demoAllowed: boolean },
 ): Promise<ActorRow | null> {
   const rows = await database.query<ActorRow>(sql, { replacements, type: QueryTypes.SELECT });
   return rows[0] ?? null;
