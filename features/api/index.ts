@@ -1,0 +1,6 @@
+export { addressOf } from "./address";
+export { ApiError, NoAnswer } from "./api-error";
+export { call, type CallInput } from "./call";
+export { createQueryClient } from "./query-client";
+export { sessionQuery, useSession } from "./session-queries";
+export { upload } from "./upload";
