@@ -4,6 +4,7 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
   type Sequelize,
 } from "sequelize";
 import type { Pipe } from "@shared/contracts/places";
@@ -43,20 +44,20 @@ export class BoreVersion extends Model<
         validFrom: instantColumn,
         validTo: optionalInstant,
         kind: { type: DataTypes.ENUM("table", "measured"), allowNull: false },
-        tableId: { type: DataTypes.STRING(60), allowNull: true },
-        dn: { type: DataTypes.DOUBLE, allowNull: true },
+        tableId: { type: DataTypes.STRING(60), allowNull: true, defaultValue: null },
+        dn: { type: DataTypes.DOUBLE, allowNull: true, defaultValue: null },
         outsideDiameterMm: millimetres,
         wallMm: millimetres,
         liningMm: millimetres,
         insideDiameterMm: millimetres,
-        material: { type: DataTypes.STRING(60), allowNull: true },
+        material: { type: DataTypes.STRING(60), allowNull: true, defaultValue: null },
         accountId: optionalReference,
       },
       { sequelize, tableName: "bore_version", timestamps: false },
     );
   }
 
-  get pipe(): Pipe {
+  get pipe(): NonAttribute<Pipe> {
     const { kind, tableId, dn, outsideDiameterMm, wallMm, liningMm, material } = this;
     if (kind === "measured") return { kind, outsideDiameterMm, wallMm, liningMm, material };
     if (tableId === null || dn === null)

@@ -25,7 +25,7 @@ export class Building extends Model<InferAttributes<Building>, InferCreationAttr
         organisationId: reference,
         siteId: reference,
         name: { type: DataTypes.STRING(120), allowNull: false },
-        note: { type: DataTypes.STRING(200), allowNull: true },
+        note: { type: DataTypes.STRING(200), allowNull: true, defaultValue: null },
         archivedAt: optionalInstant,
         createdAt: instantColumn,
       },

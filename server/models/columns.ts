@@ -8,7 +8,9 @@ export const idColumn = {
 } as const;
 
 export const reference = { type: DataTypes.BIGINT.UNSIGNED, allowNull: false } as const;
-export const optionalReference = { type: DataTypes.BIGINT.UNSIGNED, allowNull: true } as const;
+/** `defaultValue` makes a row just created say null as one read back does, not undefined. */
+const optional = { allowNull: true, defaultValue: null } as const;
+export const optionalReference = { type: DataTypes.BIGINT.UNSIGNED, ...optional } as const;
 export const instantColumn = { type: DataTypes.DATE(3), allowNull: false } as const;
-export const optionalInstant = { type: DataTypes.DATE(3), allowNull: true } as const;
+export const optionalInstant = { type: DataTypes.DATE(3), ...optional } as const;
 export const secretHashColumn = { type: DataTypes.CHAR(64), allowNull: false } as const;

@@ -4,13 +4,14 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
   type Sequelize,
 } from "sequelize";
 import type { Fluid, LoopService } from "@shared/contracts/places";
 import { loopService } from "@shared/contracts/places";
 import { idColumn, instantColumn, optionalInstant, optionalReference, reference } from "./columns";
 
-const optionalDouble = { type: DataTypes.DOUBLE, allowNull: true } as const;
+const optionalDouble = { type: DataTypes.DOUBLE, allowNull: true, defaultValue: null } as const;
 
 /** One circuit with its own tag; it may name the loop that feeds it. */
 export class Loop extends Model<InferAttributes<Loop>, InferCreationAttributes<Loop>> {
@@ -55,13 +56,17 @@ export class Loop extends Model<InferAttributes<Loop>, InferCreationAttributes<L
           defaultValue: "water",
         },
         glycolPercent: optionalDouble,
-        glycolBasis: { type: DataTypes.ENUM("mass", "volume"), allowNull: true },
+        glycolBasis: {
+          type: DataTypes.ENUM("mass", "volume"),
+          allowNull: true,
+          defaultValue: null,
+        },
         gaugePressureMPa: { ...optionalDouble, field: "gauge_pressure_mpa" },
         designFlowM3PerHour: { ...optionalDouble, field: "design_flow_m3_per_hour" },
         designDeltaTK: { ...optionalDouble, field: "design_delta_t_k" },
         flowCutOffM3PerHour: { ...optionalDouble, field: "flow_cut_off_m3_per_hour" },
         deltaTCutOffK: { ...optionalDouble, field: "delta_t_cut_off_k" },
-        notes: { type: DataTypes.STRING(2000), allowNull: true },
+        notes: { type: DataTypes.STRING(2000), allowNull: true, defaultValue: null },
         archivedAt: optionalInstant,
         createdAt: instantColumn,
       },
@@ -69,7 +74,7 @@ export class Loop extends Model<InferAttributes<Loop>, InferCreationAttributes<L
     );
   }
 
-  get fluid(): Fluid {
+  get fluid(): NonAttribute<Fluid> {
     const { fluidKind, glycolPercent, glycolBasis } = this;
     if (fluidKind === "water") return { kind: "water" };
     if (glycolPercent === null || glycolBasis === null)

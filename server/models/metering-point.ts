@@ -40,7 +40,7 @@ export class MeteringPoint extends Model<
         name: { type: DataTypes.STRING(120), allowNull: false },
         role: { type: DataTypes.ENUM(...pointRole.options), allowNull: false },
         meterSide: { type: DataTypes.ENUM(...meterSide.options), allowNull: false },
-        notes: { type: DataTypes.STRING(2000), allowNull: true },
+        notes: { type: DataTypes.STRING(2000), allowNull: true, defaultValue: null },
         archivedAt: optionalInstant,
         createdAt: instantColumn,
       },

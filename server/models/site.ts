@@ -36,7 +36,7 @@ export class Site extends Model<InferAttributes<Site>, InferCreationAttributes<S
           allowNull: false,
           defaultValue: "si",
         },
-        address: { type: DataTypes.STRING(300), allowNull: true },
+        address: { type: DataTypes.STRING(300), allowNull: true, defaultValue: null },
         isDemo: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: false },
         archivedAt: optionalInstant,
         createdAt: instantColumn,

@@ -4,7 +4,13 @@ import { unitSystem } from "./people";
 
 const name = z.string().trim().min(1).max(120);
 const notes = z.string().trim().max(2000);
-const archived = z.object({ archived: z.coerce.boolean().optional() });
+/** Archived things are left out unless asked for; "false" in a query must not read as true. */
+const archived = z.object({
+  archived: z
+    .enum(["true", "false"])
+    .transform((text) => text === "true")
+    .optional(),
+});
 
 export const ianaZone = z
   .string()
@@ -266,19 +272,18 @@ const pointFields = z.object({
   pipe: pipe.nullable(),
   notes: notes.nullable(),
 });
+export const bore = z.object({
+  outsideDiameterMm: z.number(),
+  wallMm: z.number(),
+  liningMm: z.number(),
+  insideDiameterMm: z.number(),
+  label: z.string().describe("such as DN 100, carbon steel"),
+});
 export const point = pointFields.extend({
   id,
   loopId: id,
   archivedAt: instant.nullable(),
-  bore: z
-    .object({
-      outsideDiameterMm: z.number(),
-      wallMm: z.number(),
-      liningMm: z.number(),
-      insideDiameterMm: z.number(),
-      label: z.string().describe("such as DN 100, carbon steel"),
-    })
-    .nullable(),
+  bore: bore.nullable(),
   hasReadings: z.boolean(),
   can: ability.extend({ import: z.boolean() }),
 });
@@ -335,6 +340,23 @@ export const removePoint = contract({
   answer: nothing,
 });
 
+export const boreVersion = z.object({
+  validFrom: instant,
+  validTo: instant.nullable().describe("null: until now"),
+  pipe,
+  bore,
+});
+export type BoreVersionAnswer = z.infer<typeof boreVersion>;
+export const listBoreVersions = contract({
+  operationId: "listBoreVersions",
+  summary: "The pipe of a metering point over time, newest first",
+  tag: "Places",
+  method: "get",
+  path: "/points/:pointId/bores",
+  params: pointId,
+  answer: z.object({ items: z.array(boreVersion) }),
+});
+
 export const listPipeTables = contract({
   operationId: "listPipeTables",
   summary: "Standard pipe tables: outside diameter, wall and bore by nominal size",
@@ -353,6 +375,7 @@ export const listPipeTables = contract({
             dn: z.number(),
             outsideDiameterMm: z.number(),
             wallMm: z.number(),
+            liningMm: z.number(),
             insideDiameterMm: z.number(),
           }),
         ),
@@ -374,7 +397,12 @@ export const siteOverviewLoop = z.object({
   }),
   mainPointId: id.nullable().describe("the point whose energy stands for the loop"),
   nominalSizeDn: z.number().nullable(),
-  energyKwh: z.number().nullable(),
+  energyKwh: z
+    .number()
+    .nullable()
+    .describe("of the register of the loop's service; null for changeover, which has two"),
+  heatingKwh: z.number().nullable(),
+  coolingKwh: z.number().nullable(),
   flowWeightedDeltaTK: z.number().nullable(),
   coverage: z.number().nullable().describe("covered share of the period so far, 0 to 1"),
   quality: z.array(

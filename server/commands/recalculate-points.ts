@@ -1,0 +1,46 @@
+import type { Transaction } from "sequelize";
+import { Job } from "@server/models/job";
+import { pointHoldings } from "@server/queries/point-holdings";
+import type { Acting } from "./acting";
+
+/*
+ * Energy is stored, so a change of what it was worked out with must work it out again. This is done
+ * by a job per point: a year of readings takes longer than a request should.
+ */
+async function recalculate(
+  { clock, database, scope }: Acting,
+  of: "site" | "loop" | "point",
+  id: string,
+  transaction: Transaction,
+): Promise<void> {
+  const holdings = await pointHoldings(database, scope.organisationId, of, [id], transaction);
+  const now = clock.date();
+  const jobs = holdings
+    .filter((point) => point.hasReadings)
+    .map(({ pointId }) => ({
+      organisationId: scope.organisationId,
+      kind: "recalculate" as const,
+      state: "queued" as const,
+      pointId,
+      // One that already waits will see this change too; one that runs may not.
+      waitingKey: `recalculate-${pointId}`,
+      runAfter: now,
+      createdAt: now,
+    }));
+  if (jobs.length > 0) await Job.bulkCreate(jobs, { ignoreDuplicates: true, transaction });
+}
+
+/** Another zone: the days of every point of the site begin elsewhere. */
+export function recalculateSite(acting: Acting, siteId: string, transaction: Transaction) {
+  return recalculate(acting, "site", siteId, transaction);
+}
+
+/** Another fluid, pressure, service or cut-off. */
+export function recalculateLoop(acting: Acting, loopId: string, transaction: Transaction) {
+  return recalculate(acting, "loop", loopId, transaction);
+}
+
+/** Another meter side. */
+export function recalculatePoint(acting: Acting, pointId: string, transaction: Transaction) {
+  return recalculate(acting, "point", pointId, transaction);
+}
