@@ -1,7 +1,7 @@
 import { waterAtPressure } from "../fluids/water-at-pressure";
 import { RowQuality, type ReadingSegment, type SeriesKind } from "../readings/reading-columns";
 import { integrateEnergy, type IntegrationOptions } from "./integrate";
-import { NO_CUT_OFFS, thermalPowerKw } from "./power";
+import { NO_CUT_OFFS, samplePower, thermalPowerKw } from "./power";
 import { totalEnergy } from "./totals";
 import { rowsOutsideWater } from "./water-range";
 
@@ -117,7 +117,7 @@ test("a sample below a cut-off is suppressed and shown, one exactly at it counts
   const rows = [
     [0, 10, 6, 12],
     [5, 0.4, 6, 12],
-    [10, 10, 37.99, 38.49],
+    [10, 10, 31.8, 32.3],
     [15, 10, 6, 6.49],
   ];
   const cutOffs = { flowM3PerHour: 0.5, deltaTK: 0.5 };
@@ -169,6 +169,24 @@ test("neighbouring segments join where the coarser step allows it, and never ove
   expect(coveredMinutes([minutes, means])).toBe(27 + 2);
   expect(() => integrateEnergy([steady([0, 20], 15), steady([10, 30], 15)], options)).toThrow(
     "overlap",
+  );
+});
+
+test("means labelled at their end do not reach back over means labelled at their start", () => {
+  const from = steady([0, 15], 15, "meanFromLabel");
+  const to = steady([25, 35], 10, "meanToLabel");
+  expect(coveredMinutes([from, to])).toBe(35);
+});
+
+test("temperatures within the same hundredth keep their own power", () => {
+  const rows = [
+    [0, 10, 6.001, 12.004],
+    [1, 10, 6.004, 12.001],
+    [2, 10, 6.001, 12.004],
+  ];
+  const { powerKw } = samplePower(segment(rows, 1).columns, options);
+  expect([...powerKw]).toEqual(
+    rows.map(([, flow, supply, back]) => thermalPowerKw(flow!, supply!, back!, water, "return")),
   );
 });
 
