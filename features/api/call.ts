@@ -39,7 +39,7 @@ export async function call<C extends Contract>(
   });
   const text = await response.text();
   if (!response.ok) throw new ApiError(problemFrom(response.status, text));
-  return contract.answer.parse(text === "" ? {} : JSON.parse(text));
+  return contract.answer.parse(text === "" ? {} : JSON.parse(text)) as z.output<C["answer"]>;
 }
 
 async function answer(address: string, init: RequestInit): Promise<Response> {

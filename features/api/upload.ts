@@ -34,7 +34,7 @@ export function upload<C extends Contract>(
         return;
       }
       try {
-        resolve(contract.answer.parse(JSON.parse(request.responseText)));
+        resolve(contract.answer.parse(JSON.parse(request.responseText)) as z.output<C["answer"]>);
       } catch (cause) {
         reject(cause);
       }
