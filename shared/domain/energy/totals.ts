@@ -1,5 +1,5 @@
 import type { Interval } from "../time/interval";
-import { INTERVAL_MS, type IntervalEnergyColumns, type RegisterColumns } from "./interval-energy";
+import type { IntervalEnergyColumns, RegisterColumns } from "./interval-energy";
 
 /** What stored intervals add up to over a stretch of time. */
 export interface EnergyTotals {
@@ -81,7 +81,7 @@ export function deltaTMeans(register: RegisterTotals): DeltaTMeans {
   };
 }
 
-/** Water moved for each kWh, m³/kWh; divide by 3.6 for L/s a kW ×1000. Null without energy. */
+/** Water moved for each kWh, m³/kWh; null without energy. Chilled 12/6 °C moves about 0.143. */
 export function volumePerEnergyM3PerKwh(register: RegisterTotals): number | null {
   return quotient(register.volumeM3, register.energyKwh);
 }
@@ -162,6 +162,3 @@ function firstFrom(startMs: Float64Array, ms: number): number {
   }
   return low;
 }
-
-/** Seconds of one stored interval. */
-export const INTERVAL_S = INTERVAL_MS / 1000;
