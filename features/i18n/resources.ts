@@ -1,0 +1,33 @@
+import deCharts from "./locales/de/charts.json";
+import deEnergy from "./locales/de/energy.json";
+import deImports from "./locales/de/imports.json";
+import deLoops from "./locales/de/loops.json";
+import dePeople from "./locales/de/people.json";
+import dePlaces from "./locales/de/places.json";
+import deShell from "./locales/de/shell.json";
+import deToday from "./locales/de/today.json";
+import deUi from "./locales/de/ui.json";
+import enCharts from "./locales/en/charts.json";
+import enEnergy from "./locales/en/energy.json";
+import enImports from "./locales/en/imports.json";
+import enLoops from "./locales/en/loops.json";
+import enPeople from "./locales/en/people.json";
+import enPlaces from "./locales/en/places.json";
+import enShell from "./locales/en/shell.json";
+import enToday from "./locales/en/today.json";
+import enUi from "./locales/en/ui.json";
+
+/** One namespace per feature, one line each; English and German have the same keys. */
+export const words = {
+  charts: { en: enCharts, de: deCharts },
+  energy: { en: enEnergy, de: deEnergy },
+  imports: { en: enImports, de: deImports },
+  loops: { en: enLoops, de: deLoops },
+  people: { en: enPeople, de: dePeople },
+  places: { en: enPlaces, de: dePlaces },
+  shell: { en: enShell, de: deShell },
+  today: { en: enToday, de: deToday },
+  ui: { en: enUi, de: deUi },
+} as const;
+
+export type Namespace = keyof typeof words;

@@ -1,0 +1,139 @@
+import { useId, type ReactNode } from "react";
+import { View } from "react-native";
+
+import { useWords } from "@features/i18n";
+
+import { Button } from "./button";
+import { Overlay } from "./overlay";
+import { Row } from "./stack";
+import { Text } from "./text";
+import { layout, radius, useBreakpoint, useTheme, webStyle } from "./theme";
+
+export interface SheetProps {
+  open: boolean;
+  title: string;
+  onClose: () => void;
+  children: ReactNode;
+  /** `bottom`: pickers and More. `side`: full height on a phone, right half on tablets and desks. */
+  kind?: "bottom" | "side";
+  /** Space left free at the foot of the screen, for the phone bar. */
+  foot?: number;
+}
+
+/** A panel over the page. Escape, the close button and a tap outside shut it. */
+export function Sheet(props: SheetProps) {
+  const id = useId();
+  const t = useWords("ui");
+  const { colour, float } = useTheme();
+  const breakpoint = useBreakpoint();
+  if (!props.open) return null;
+  const bottom = (props.kind ?? "bottom") === "bottom";
+  const wide = breakpoint !== "phone";
+  const place = bottom
+    ? wide
+      ? {
+          margin: "auto" as const,
+          width: "100%" as const,
+          maxWidth: 440,
+          borderRadius: radius.card,
+        }
+      : {
+          marginTop: "auto" as const,
+          marginBottom: props.foot ?? 0,
+          width: "100%" as const,
+          borderTopLeftRadius: radius.sheet,
+          borderTopRightRadius: radius.sheet,
+        }
+    : {
+        marginLeft: "auto" as const,
+        width: "100%" as const,
+        maxWidth: wide ? layout.wide.workings : undefined,
+      };
+  return (
+    <Overlay role="dialog" labelledBy={id} onClose={props.onClose}>
+      <View
+        style={[
+          {
+            backgroundColor: colour.sheet,
+            paddingHorizontal: 16,
+            paddingTop: 12,
+            paddingBottom: 20,
+          },
+          place,
+          webStyle({
+            boxShadow: float,
+            maxHeight: bottom ? "92dvh" : "100dvh",
+            overflowY: "auto",
+            ...(bottom ? {} : { height: "100dvh" }),
+          }),
+        ]}
+      >
+        {bottom && !wide ? (
+          <View
+            aria-hidden
+            style={{
+              width: 44,
+              height: 5,
+              borderRadius: 3,
+              backgroundColor: colour.ruleStrong,
+              alignSelf: "center",
+              marginBottom: 8,
+            }}
+          />
+        ) : null}
+        <Row justify="space-between" style={{ marginBottom: 8 }}>
+          <Text variant="heading" id={id}>
+            {props.title}
+          </Text>
+          <Button
+            kind="quiet"
+            icon="close"
+            iconOnly
+            label={t("dialog.close")}
+            onPress={props.onClose}
+          />
+        </Row>
+        {props.children}
+      </View>
+    </Overlay>
+  );
+}
+
+/**
+ * Details beside the page on wide screens (372 px), a sheet below that.
+ * On wide screens it is always there; `open` matters on phones and tablets.
+ */
+export function Inspector(props: {
+  title: string;
+  open: boolean;
+  onClose: () => void;
+  children: ReactNode;
+}) {
+  const { colour } = useTheme();
+  const wide = useBreakpoint() === "wide";
+  if (!wide) {
+    return (
+      <Sheet kind="side" title={props.title} open={props.open} onClose={props.onClose}>
+        {props.children}
+      </Sheet>
+    );
+  }
+  return (
+    <View
+      role="complementary"
+      aria-label={props.title}
+      style={{
+        width: layout.wide.inspector,
+        flexShrink: 0,
+        backgroundColor: colour.sheet,
+        borderLeftWidth: 1,
+        borderLeftColor: colour.rule,
+        padding: 24,
+        gap: 16,
+      }}
+    >
+      <Text variant="heading">{props.title}</Text>
+      {props.children}
+    </View>
+  );
+}
