@@ -2,11 +2,11 @@ import path from "node:path";
 import compression from "compression";
 import cookieParser from "cookie-parser";
 import express, { type Express, type RequestHandler } from "express";
-import pinoHttp from "pino-http";
 import { answerErrors } from "./http/answer-errors";
 import { clientFiles } from "./http/client-files";
 import { NotFound } from "./http/errors";
 import { mountEndpoints } from "./http/mount-endpoints";
+import { requestLog } from "./http/request-log";
 import { securityHeaders } from "./http/security-headers";
 import { endpoints } from "./routes";
 import { requestGuard } from "./security/request-guard";
@@ -21,12 +21,7 @@ export function createApp(services: Services, options: { clientFolder?: string }
   app.disable("x-powered-by");
   // A proxy on the same machine may tell the caller's address; nobody else may.
   app.set("trust proxy", "loopback");
-  app.use(
-    pinoHttp({
-      logger: log,
-      redact: ["req.headers.authorization", "req.headers.cookie", "res.headers['set-cookie']"],
-    }),
-  );
+  app.use(requestLog(log));
   app.use(securityHeaders(config));
   app.use(compression({ level: 4, threshold: 1024 }));
   app.use("/api/v1", cookieParser(), requestGuard(config), mountEndpoints(endpoints, services));

@@ -1,7 +1,7 @@
 import { mkdtempSync, rmSync, statSync } from "node:fs";
 import os from "node:os";
 import path from "node:path";
-import { ConfigError, loadConfig } from "./config";
+import { ConfigError, loadConfig, type Environment } from "./config";
 
 const folder = mkdtempSync(path.join(os.tmpdir(), "loopwright-config-"));
 afterAll(() => rmSync(folder, { recursive: true, force: true }));
@@ -18,7 +18,7 @@ const production = {
   LOOPWRIGHT_PUBLIC_URL: "https://energy.example/",
 };
 
-function sentencesOf(env: NodeJS.ProcessEnv): readonly string[] {
+function sentencesOf(env: Environment): readonly string[] {
   try {
     loadConfig(env);
   } catch (error) {

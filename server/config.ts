@@ -32,6 +32,9 @@ export class ConfigError extends Error {
   }
 }
 
+/** `process.env`, or as much of it as a test needs. */
+export type Environment = Readonly<Record<string, string | undefined>>;
+
 const portNumber = z.coerce.number().int().min(1).max(65_535);
 const onOff = z.enum(["on", "off"]);
 
@@ -85,7 +88,7 @@ type Variables = { [K in keyof typeof variables]: z.output<(typeof variables)[K]
  * Reads and checks the environment.
  * @throws ConfigError with one sentence per variable that is missing or wrong.
  */
-export function loadConfig(env: NodeJS.ProcessEnv): Config {
+export function loadConfig(env: Environment): Config {
   const wrong: string[] = [];
   const values: Record<string, unknown> = {};
   for (const [name, { schema, says }] of Object.entries(variables)) {

@@ -1,5 +1,6 @@
 import type { ErrorRequestHandler } from "express";
 import type { Logger } from "pino";
+import { ConnectionAcquireTimeoutError, ConnectionError } from "sequelize";
 import { HttpProblem, Invalid, TooLarge } from "./errors";
 
 /** Refusals of the libraries in front of the handlers, in our words. */
@@ -21,6 +22,15 @@ function known(error: unknown): HttpProblem | null {
       title: "Bad address",
       detail: "The address holds a broken % sequence.",
       remedy: "Encode the address again.",
+    });
+  if (error instanceof ConnectionError || error instanceof ConnectionAcquireTimeoutError)
+    return new HttpProblem({
+      status: 503,
+      code: "database-unavailable",
+      title: "Not available right now",
+      detail: "The database does not answer at the moment.",
+      remedy: "Try again in a few seconds; nothing of this request was kept.",
+      headers: { "Retry-After": "5" },
     });
   return null;
 }

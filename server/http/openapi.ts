@@ -35,14 +35,22 @@ function bodyOf(contract: Contract): Schema {
   const isEmpty = Object.keys((schema.properties as object | undefined) ?? {}).length === 0;
   if (contract.bodyKind === "json" && isEmpty && !("anyOf" in schema) && !("oneOf" in schema))
     return {};
-  const media = contract.bodyKind === "multipart" ? "multipart/form-data" : "application/json";
-  return { requestBody: { required: true, content: { [media]: { schema } } } };
+  const content =
+    contract.bodyKind === "multipart"
+      ? { "multipart/form-data": { schema: uploadSchema(schema) } }
+      : { "application/json": { schema } };
+  return { requestBody: { required: true, content } };
+}
+
+/** Uploads carry one file in the field `file`, beside the text fields of the contract. */
+function uploadSchema(fields: Schema): Schema {
+  const file = { type: "string", contentMediaType: "application/octet-stream" };
+  return { ...fields, properties: { ...(fields.properties as object), file }, required: ["file"] };
 }
 
 function answerContent(contract: Contract): Schema {
   if (contract.answerKind === "csv") return { "text/csv": { schema: { type: "string" } } };
-  if (contract.answerKind === "file")
-    return { "application/octet-stream": { schema: { type: "string", format: "binary" } } };
+  if (contract.answerKind === "file") return { "application/octet-stream": {} };
   return { "application/json": { schema: schemaOf(contract.answer, "output") } };
 }
 

@@ -10,11 +10,9 @@ export function logsAbilities(actor: Actor) {
     seeLogs: placesAbilities(actor).seeSites,
     /** Bring in a logger's files and answer the wizard's questions. */
     importLogs: works,
-    /** Undo an import: one's own, and for who answers for the figures anybody's. */
+    /** Undo an import: one's own; an administrator anybody's, or a leaver's could never go. */
     undoImport: (log: { importedByAccountId: string | null }): boolean =>
-      role === "administrator" ||
-      role === "engineer" ||
-      (works && log.importedByAccountId === accountId),
+      role === "administrator" || (works && log.importedByAccountId === accountId),
     /** Mark stretches of readings and propose fills. */
     correctReadings: works,
     /** Accept a proposed fill so that it counts in a bill. */

@@ -1,3 +1,5 @@
+import supertest from "supertest";
+import { createApp } from "@server/app";
 import { AuditEvent } from "@server/models/audit-event";
 import { person, sessionOf, signedIn, testPassword, type Person } from "@server/testing/factories";
 import { testApp } from "@server/testing/test-app";
@@ -25,6 +27,16 @@ it("signs in with a cookie that page scripts cannot read, and says what the role
   });
   const again = await app.anonymous.get("/api/v1/session").set("Cookie", cookieOf(answer));
   expect(again.body).toEqual(answer.body);
+});
+
+it("keeps the cookie to encrypted connections in production", async () => {
+  const { account } = await person(app);
+  const config = { ...app.config, mode: "production" as const };
+  const answer = await supertest(createApp({ ...app.services, config }))
+    .post("/api/v1/session")
+    .send({ email: account.email, password: testPassword })
+    .expect(200);
+  expect(cookieOf(answer)).toMatch(/; Secure/);
 });
 
 it("answers a wrong name and a wrong password alike", async () => {

@@ -1,0 +1,45 @@
+import { AccessToken } from "@server/models/access-token";
+import { Building } from "@server/models/building";
+import { secretHash } from "@server/security/secrets";
+import { person, type Person } from "./factories";
+import { pointToMeter } from "./place-factories";
+import type { TestApp } from "./test-app";
+
+type MakeIds = (app: TestApp, owner: Person) => Promise<Record<string, string>>;
+
+let count = 0;
+
+const people: MakeIds = async (app, owner) => {
+  count += 1;
+  const member = await person(app, { organisationId: owner.organisationId });
+  const token = await AccessToken.create({
+    organisationId: owner.organisationId,
+    membershipId: owner.membership.id,
+    name: "a token",
+    secretHash: secretHash(`token ${count}`),
+    createdAt: app.clock.date(),
+  });
+  return { memberId: member.membership.id, tokenId: token.id };
+};
+
+const places: MakeIds = async (app, { organisationId }) => {
+  const { site, loop, point } = await pointToMeter(app, organisationId);
+  const building = await Building.create({
+    organisationId,
+    siteId: site.id,
+    name: "Engine house",
+    createdAt: app.clock.date(),
+  });
+  return { siteId: site.id, loopId: loop.id, pointId: point.id, buildingId: building.id };
+};
+
+/**
+ * Makes one row of everything whose id stands in a path of the API, and answers the ids by the
+ * path's parameter name. A new `:xId` needs a line here: the tenancy test asks for it.
+ */
+export async function ownedIds(app: TestApp, owner: Person): Promise<Record<string, string>> {
+  const families = [people, places];
+  const ids = [];
+  for (const make of families) ids.push(await make(app, owner));
+  return Object.assign({}, ...ids) as Record<string, string>;
+}

@@ -1,0 +1,28 @@
+/** What an endpoint takes beside its ids, filled in so that validation lets it through. */
+export interface SampleInput {
+  readonly query?: Readonly<Record<string, string>>;
+  readonly body?: object;
+  /** Text of a file in the multipart field `file`. */
+  readonly file?: string;
+}
+
+const days = { from: "2026-02-02", to: "2026-02-09" };
+const instants = { from: "2026-02-02T00:00:00Z", to: "2026-02-09T00:00:00Z" };
+
+/**
+ * By operation, where nothing at all will not do. The tenancy test sends them with the owner's ids
+ * too, so one that is wrong shows.
+ */
+export const sampleInputs: Readonly<Record<string, SampleInput>> = {
+  createBuilding: { body: { name: "East wing" } },
+  createLoop: { body: { tag: "LTHW-9", name: "Ring main", service: "hot" } },
+  createPoint: { body: { code: "P-9", name: "Riser 9", role: "riser", meterSide: "return" } },
+  getSiteOverview: { query: days },
+  getEnergy: { query: instants },
+  getPointSummary: { query: days },
+  getSeries: { query: { ...instants, pixels: "300" } },
+  getReadings: { query: instants },
+  downloadIntervals: { query: instants },
+  downloadReadings: { query: instants },
+  getDayMarks: { query: days },
+};
