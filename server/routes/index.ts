@@ -2,10 +2,12 @@ import type { Endpoint } from "@server/http/define-endpoint";
 import { accessTokenRoutes } from "./access-token-routes";
 import { accountRoutes } from "./account-routes";
 import { developmentRoutes } from "./development-routes";
+import { energyRoutes } from "./energy-routes";
 import { memberRoutes } from "./member-routes";
 import { placesRoutes } from "./places-routes";
 import { sessionRoutes } from "./session-routes";
 import { systemRoutes } from "./system-routes";
+import { todayRoutes } from "./today-routes";
 
 /** To add routes: write `x-routes.ts` exporting an array of endpoints and spread it here. */
 const productEndpoints: readonly Endpoint[] = [
@@ -15,6 +17,8 @@ const productEndpoints: readonly Endpoint[] = [
   ...accessTokenRoutes,
   ...developmentRoutes,
   ...placesRoutes,
+  ...energyRoutes,
+  ...todayRoutes,
 ];
 
 /** Every endpoint of the API; the router, its document, the matrix and the tenancy test read it. */

@@ -119,12 +119,16 @@ export const getPointSummary = contract({
       }),
     ),
     busiest: loadCard.nullable().describe("busiest fully covered half hour"),
-    busiestDay: z.object({ date: z.iso.date(), energyKwh: z.number() }).nullable(),
+    busiestDay: z
+      .object({ date: z.iso.date(), energyKwh: z.number() })
+      .nullable()
+      .describe("the day that holds the busiest half hour, by the same register"),
     nightBase: z
       .object({
         fromHour: z.number(),
         toHour: z.number(),
         powerKw: z.number(),
+        register: z.enum(["heating", "cooling"]),
         coverage: z.number(),
       })
       .nullable()

@@ -1,0 +1,104 @@
+import type { z } from "zod";
+import type {
+  EnergyAnswer,
+  EnergyTotals as TotalsAnswer,
+  energyBasis,
+  loadCard,
+} from "@shared/contracts/energy";
+import { deltaTMeans, type EnergyTotals, type RegisterTotals } from "@shared/domain/energy/totals";
+import { instantText } from "@server/database/conversions";
+import type { EnergyPoint } from "@server/queries/energy/energy-point";
+import type { EnergyRow } from "@server/queries/energy/energy-rows";
+import type { Load } from "@server/queries/energy/loads";
+
+/** Rounds to so many decimals: more than any meter resolves, fewer than a double prints. */
+export function rounded(value: number, decimals: number): number {
+  return Number(value.toFixed(decimals));
+}
+
+export function roundedOrNull(value: number | null, decimals: number): number | null {
+  return value === null || Number.isNaN(value) ? null : rounded(value, decimals);
+}
+
+function presentRegister(register: RegisterTotals): TotalsAnswer["heating"] {
+  const means = deltaTMeans(register);
+  return {
+    energyKwh: rounded(register.energyKwh, 6),
+    volumeM3: rounded(register.volumeM3, 6),
+    runningS: rounded(register.runningS, 3),
+    flowWeightedDeltaTK: roundedOrNull(means.flowWeightedK, 6),
+    energyWeightedDeltaTK: roundedOrNull(means.energyWeightedK, 6),
+    timeMeanDeltaTK: roundedOrNull(means.timeMeanK, 6),
+  };
+}
+
+/** `nominalStepMs` says how many rows the expected time would hold; null where it is unknown. */
+export function presentTotals(
+  totals: EnergyTotals,
+  expectedS: number,
+  nominalStepMs: number | null,
+): TotalsAnswer {
+  return {
+    heating: presentRegister(totals.heating),
+    cooling: presentRegister(totals.cooling),
+    volumeM3: rounded(totals.volumeM3, 6),
+    suppressedKwh: rounded(totals.suppressedKwh, 6),
+    suppressedS: rounded(totals.suppressedS, 3),
+    coveredS: rounded(totals.coveredS, 3),
+    expectedS: rounded(expectedS, 3),
+    coverage: expectedS > 0 ? rounded(Math.min(1, totals.coveredS / expectedS), 6) : null,
+    rows: {
+      measured: totals.measuredRows,
+      excluded: totals.excludedRows,
+      noReading: totals.noReadingRows,
+      expected: nominalStepMs === null ? null : Math.floor((expectedS * 1000) / nominalStepMs),
+    },
+    apportioned: totals.apportioned,
+  };
+}
+
+export function presentBasis({
+  point,
+  settings,
+  readings,
+}: EnergyPoint): z.input<typeof energyBasis> {
+  return {
+    engineVersion: readings.engineVersion,
+    pressure: { absoluteMPa: settings.pressure.pressureMPa, assumed: settings.pressure.assumed },
+    meterSide: point.meterSide,
+    // A point without readings yet has no state of its own: its loop's fluid already decides.
+    blockedBy: readings.blockedBy ?? (settings.fluid.ok ? null : "glycol"),
+    recalculating: readings.recalculating,
+  };
+}
+
+export function presentColumns(rows: readonly EnergyRow[]): NonNullable<EnergyAnswer["columns"]> {
+  const covered = (of: (totals: EnergyTotals) => number | null, decimals: number) =>
+    rows.map(({ totals }) => (totals.coveredS > 0 ? roundedOrNull(of(totals), decimals) : null));
+  return {
+    startMs: rows.map((row) => row.startMs),
+    lengthS: rows.map((row) => (row.endMs - row.startMs) / 1000),
+    coveredS: rows.map(({ totals }) => rounded(totals.coveredS, 3)),
+    heatingKwh: covered((totals) => totals.heating.energyKwh, 4),
+    coolingKwh: covered((totals) => totals.cooling.energyKwh, 4),
+    volumeM3: covered((totals) => totals.volumeM3, 4),
+    meanSupplyC: covered((totals) => totals.meanSupplyC, 3),
+    meanReturnC: covered((totals) => totals.meanReturnC, 3),
+    suppressedKwh: rows.map(({ totals }) => rounded(totals.suppressedKwh, 4)),
+    minPowerKw: covered((totals) => totals.minPowerKw, 3),
+    maxPowerKw: covered((totals) => totals.maxPowerKw, 3),
+  };
+}
+
+export function presentLoad(load: Load): z.input<typeof loadCard> {
+  return {
+    from: instantText(new Date(load.startMs)),
+    to: instantText(new Date(load.endMs)),
+    supplyC: rounded(load.supplyC, 3),
+    returnC: rounded(load.returnC, 3),
+    flowM3PerHour: rounded(load.flowM3PerHour, 4),
+    deltaTK: rounded(load.deltaTK, 3),
+    powerKw: rounded(load.powerKw, 4),
+    register: load.register,
+  };
+}

@@ -1,0 +1,28 @@
+import type { SeriesAnswer } from "@shared/contracts/energy";
+import type { QualityRun } from "@shared/domain/readings/quality-runs";
+
+/**
+ * Runs as a strip can show them: troubles of one kind with less than `leastMs` measured between them
+ * become one, so that a year of short gaps does not send thousands of marks for as many pixels.
+ */
+export function screenQuality(
+  runs: readonly QualityRun[],
+  leastMs: number,
+): SeriesAnswer["quality"] {
+  const shown: SeriesAnswer["quality"] = [];
+  for (const run of runs) {
+    const last = shown.at(-1);
+    const before = shown.at(-2);
+    const bridges =
+      last?.kind === "measured" &&
+      before?.kind === run.kind &&
+      run.kind !== "measured" &&
+      last.toMs - last.fromMs < leastMs;
+    if (bridges && before) {
+      shown.pop();
+      before.toMs = run.endMs;
+    } else if (last?.kind === run.kind) last.toMs = run.endMs;
+    else shown.push({ fromMs: run.startMs, toMs: run.endMs, kind: run.kind });
+  }
+  return shown;
+}

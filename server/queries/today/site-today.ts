@@ -1,0 +1,95 @@
+import type { TodayAnswer } from "@shared/contracts/energy";
+import { localDateOf, localDay } from "@shared/domain/time/local-calendar";
+import type { Database } from "@server/database/connect";
+import { instantText } from "@server/database/conversions";
+import type { Scope } from "@server/database/scoped";
+import type { Site } from "@server/models/site";
+import { presentLoad, rounded } from "@server/presenters/present-energy";
+import { energyBlockedBy } from "@server/presenters/present-loop";
+import { currentBores } from "@server/queries/current-bores";
+import { loadOf, registerOf } from "@server/queries/energy/loads";
+import { balanceFindings } from "./balance-findings";
+import { importFindings } from "./import-findings";
+import { readingFindings, siteSilence, type Finding } from "./reading-findings";
+import { siteLoops, type SiteLoop } from "./site-loops";
+
+const weights = ["stop", "look", "note"] as const;
+
+/** What needs a look at a site, and how each loop ran on the last whole day. */
+export async function siteToday(
+  context: { scope: Scope; database: Database },
+  site: Site,
+  nowMs: number,
+): Promise<TodayAnswer> {
+  const { scope } = context;
+  const { day, loops } = await siteLoops(context, site);
+  const points = loops.flatMap(({ point }) => (point ? [point.id] : []));
+  const [bores, findings] = await Promise.all([
+    currentBores(scope, points),
+    allFindings(context, site, loops, day, nowMs),
+  ]);
+  return {
+    site: { id: site.id, name: site.name, zone: site.zone, isDemo: site.isDemo },
+    now: instantText(new Date(nowMs)),
+    today: localDateOf(nowMs, site.zone),
+    needsALook: findings,
+    day,
+    loops: loops.map((siteLoop) => ({
+      loop: {
+        id: siteLoop.loop.id,
+        tag: siteLoop.loop.tag,
+        name: siteLoop.loop.name,
+        service: siteLoop.loop.service,
+        buildingName: siteLoop.buildingName,
+        isMain: siteLoop.isMain,
+      },
+      pointId: siteLoop.point?.id ?? null,
+      nominalSizeDn: (siteLoop.point && bores.get(siteLoop.point.id)?.dn) ?? null,
+      meterSide: siteLoop.point?.meterSide ?? null,
+      ...presentDay(siteLoop, day, site.zone),
+      lastReadingAt:
+        siteLoop.readings?.lastMs == null ? null : instantText(new Date(siteLoop.readings.lastMs)),
+    })),
+  };
+}
+
+async function allFindings(
+  context: { scope: Scope; database: Database },
+  site: Site,
+  loops: readonly SiteLoop[],
+  day: string | null,
+  nowMs: number,
+): Promise<Finding[]> {
+  const { database } = context;
+  const imports = await importFindings(context, site.id, nowMs);
+  const found = [...imports, ...siteSilence(loops, site.id, nowMs)];
+  if (day !== null) {
+    const when = { zone: site.zone, day, nowMs };
+    const perLoop = await Promise.all(loops.map((one) => readingFindings(database, one, when)));
+    found.push(...perLoop.flat(), ...(await balanceFindings(database, loops, when)));
+  }
+  return found.sort((a, b) => weights.indexOf(a.weight) - weights.indexOf(b.weight));
+}
+
+type DayAnswer = Pick<TodayAnswer["loops"][number], "card" | "energyKwh" | "emptyReason">;
+
+function presentDay({ loop, point, readings, week }: SiteLoop, day: string | null, zone: string) {
+  const empty = (emptyReason: DayAnswer["emptyReason"]): DayAnswer => ({
+    card: null,
+    energyKwh: null,
+    emptyReason,
+  });
+  if (!point) return empty("noPoint");
+  if (!readings || readings.rowCount === 0 || day === null) return empty("noReadings");
+  if (energyBlockedBy(loop)) return empty("glycol");
+  const found = week.find(({ date }) => date === day);
+  if (!found) return empty("noReadingsThatDay");
+  const register = registerOf(loop.service, found.totals);
+  const load = loadOf(localDay(day, zone), found.totals, register);
+  if (!load) return empty("noReadingInFile");
+  return {
+    card: presentLoad(load),
+    energyKwh: rounded(found.totals[register].energyKwh, 4),
+    emptyReason: null,
+  } satisfies DayAnswer;
+}
