@@ -1,0 +1,69 @@
+import { mkdtempSync, readFileSync } from "node:fs";
+import { rm } from "node:fs/promises";
+import os from "node:os";
+import path from "node:path";
+import { parseArgs } from "node:util";
+import { connectDatabase } from "@server/database/connect";
+import { startBenchServer } from "./bench-server";
+import { benchImport } from "./bench-import";
+import { benchLargeFile } from "./bench-large-file";
+import { benchParsing } from "./bench-parsing";
+import { benchReads } from "./bench-reads";
+import { benchResponsiveness } from "./bench-responsiveness";
+import { writeLog, YEAR } from "./log-year";
+import { newSite } from "./ours-import";
+import { findPandas } from "./peers/pandas";
+import { table } from "./report";
+
+/*
+ * npm run bench [-- --rounds 3 --without-large]
+ * Everything ours goes through a real server in production mode, as a script would; the peers run in
+ * turn with it on the same MariaDB. Only the ratios travel to another machine.
+ */
+async function main(): Promise<void> {
+  const { values } = parseArgs({
+    options: {
+      rounds: { type: "string", default: "3" },
+      "without-large": { type: "boolean", default: false },
+    },
+  });
+  const rounds = Math.max(1, Number(values.rounds));
+  const port = process.env.LOOPWRIGHT_TEST_DB_PORT;
+  if (!port) throw new Error("LOOPWRIGHT_TEST_DB_PORT is not set: start with npm run bench.");
+  const folder = mkdtempSync(path.join(os.tmpdir(), "loopwright-bench-"));
+  const csv = path.join(folder, "year.csv");
+  await writeLog(csv, YEAR);
+  const server = await startBenchServer(port, folder);
+  const database = connectDatabase(server.databaseUrl, { poolSize: 4 });
+  try {
+    const pandas = await findPandas(csv, { port: Number(port), name: server.databaseName }, folder);
+    const bench = { server, database, csv, bytes: readFileSync(csv), pandas, rounds, folder };
+    const site = await newSite(server);
+    const parsing = await benchParsing(bench);
+    const imports = await benchImport(bench, site);
+    const reads = await benchReads(bench, imports.pointId);
+    const responsiveness = await benchResponsiveness(bench, site);
+    const large = values["without-large"] ? [] : await benchLargeFile(bench);
+    const cores = os.availableParallelism();
+    console.log(
+      `\n${YEAR.rowCount.toLocaleString("en")} one-minute rows, ${(bench.bytes.length / 1e6).toFixed(1)} MB; ` +
+        `medians of ${rounds} interleaved rounds on ${cores} cores (load ${os.loadavg()[0]?.toFixed(1)}).`,
+    );
+    if (pandas === null)
+      console.log(
+        "Without python3-pandas, python3-sqlalchemy and python3-pymysql: no pandas peers.",
+      );
+    console.log(
+      `\n${table([...imports.lines, ...large, ...parsing, ...reads, ...responsiveness])}`,
+    );
+  } finally {
+    await database.close();
+    await server.stop();
+    await rm(folder, { recursive: true, force: true });
+  }
+}
+
+main().catch((error: unknown) => {
+  console.error(error);
+  process.exitCode = 1;
+});
