@@ -1,5 +1,6 @@
-import { QueryClient } from "@tanstack/react-query";
+import { MutationCache, QueryCache, QueryClient } from "@tanstack/react-query";
 import { ApiError } from "./api-error";
+import { sessionQuery } from "./session-queries";
 
 /** Refusals are final; only silence and a server's own failure are worth another try. */
 function worthAnotherTry(failures: number, error: unknown): boolean {
@@ -8,10 +9,20 @@ function worthAnotherTry(failures: number, error: unknown): boolean {
 }
 
 export function createQueryClient(): QueryClient {
-  return new QueryClient({
+  // A session that ended elsewhere shows with the next call: then nobody is signed in, and the guard
+  // of the signed-in pages asks for the password again.
+  const noticeEnd = (error: unknown) => {
+    if (error instanceof ApiError && error.code === "not-signed-in") {
+      client.setQueryData(sessionQuery.queryKey, null);
+    }
+  };
+  const client: QueryClient = new QueryClient({
+    queryCache: new QueryCache({ onError: noticeEnd }),
+    mutationCache: new MutationCache({ onError: noticeEnd }),
     defaultOptions: {
       queries: { retry: worthAnotherTry, staleTime: 10_000, refetchOnWindowFocus: true },
       mutations: { retry: false },
     },
   });
+  return client;
 }

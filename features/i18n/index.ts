@@ -13,3 +13,4 @@ export { PreferencesProvider, usePreferences } from "./preferences";
 export { words, type Namespace } from "./resources";
 export { makeFormat, useFormat, type Format } from "./use-format";
 export { useWords } from "./use-words";
+export { useFieldWords, useProblemWords, type ProblemWords } from "./use-problem-words";

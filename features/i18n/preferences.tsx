@@ -1,5 +1,13 @@
 import { getLocales } from "expo-localization";
-import { createContext, useContext, useEffect, useMemo, useState, type ReactNode } from "react";
+import {
+  createContext,
+  useCallback,
+  useContext,
+  useEffect,
+  useMemo,
+  useState,
+  type ReactNode,
+} from "react";
 import { I18nextProvider } from "react-i18next";
 
 import type { UnitSystem } from "@shared/domain/units/display-units";
@@ -41,21 +49,21 @@ export function PreferencesProvider({ children }: { children: ReactNode }) {
     if (typeof document !== "undefined") document.documentElement.lang = language;
   }, [language]);
 
-  const value = useMemo<Preferences>(() => {
-    const chooseLanguage = (next: Language) => {
-      writeDevice(KEY, next);
-      setLanguage(next);
-    };
-    return {
-      language,
-      unitSystem,
-      chooseLanguage,
-      adopt: (next, units) => {
-        chooseLanguage(next);
-        setUnitSystem(units);
-      },
-    };
-  }, [language, unitSystem]);
+  const chooseLanguage = useCallback((next: Language) => {
+    writeDevice(KEY, next);
+    setLanguage(next);
+  }, []);
+  const adopt = useCallback(
+    (next: Language, units: UnitSystem | null) => {
+      chooseLanguage(next);
+      setUnitSystem(units);
+    },
+    [chooseLanguage],
+  );
+  const value = useMemo<Preferences>(
+    () => ({ language, unitSystem, chooseLanguage, adopt }),
+    [language, unitSystem, chooseLanguage, adopt],
+  );
   return (
     <I18nextProvider i18n={i18nInstance}>
       <PreferencesContext.Provider value={value}>{children}</PreferencesContext.Provider>

@@ -4,6 +4,7 @@ import deImports from "./locales/de/imports.json";
 import deLoops from "./locales/de/loops.json";
 import dePeople from "./locales/de/people.json";
 import dePlaces from "./locales/de/places.json";
+import deProblems from "./locales/de/problems.json";
 import deShell from "./locales/de/shell.json";
 import deToday from "./locales/de/today.json";
 import deUi from "./locales/de/ui.json";
@@ -13,6 +14,7 @@ import enImports from "./locales/en/imports.json";
 import enLoops from "./locales/en/loops.json";
 import enPeople from "./locales/en/people.json";
 import enPlaces from "./locales/en/places.json";
+import enProblems from "./locales/en/problems.json";
 import enShell from "./locales/en/shell.json";
 import enToday from "./locales/en/today.json";
 import enUi from "./locales/en/ui.json";
@@ -25,6 +27,7 @@ export const words = {
   loops: { en: enLoops, de: deLoops },
   people: { en: enPeople, de: dePeople },
   places: { en: enPlaces, de: dePlaces },
+  problems: { en: enProblems, de: deProblems },
   shell: { en: enShell, de: deShell },
   today: { en: enToday, de: deToday },
   ui: { en: enUi, de: deUi },

@@ -6,10 +6,15 @@ import { FieldLabel } from "./primitives/field-label";
 import { Row } from "./stack";
 import { Text } from "./text";
 import { radius, target, useTheme } from "./theme";
+import { VisuallyHidden } from "./visually-hidden";
 
 /** What every field takes: the label is not optional. */
 export interface FieldProps {
   label: string;
+  /** Said but not shown, where a table head or a title above shows it already. */
+  labelHidden?: boolean;
+  /** Brass edge: the choice waits for a look. */
+  attention?: boolean;
   hint?: string;
   /** What is wrong and what would be right; null or absent when nothing is. */
   error?: string | null;
@@ -45,20 +50,24 @@ export function FieldFrame(props: FrameProps) {
   const labelId = `${id}-label`;
   const noteId = `${id}-note`;
   const invalid = Boolean(props.error);
-  const edge = focused ? 3 : invalid ? 2 : 1.5;
+  const edge = focused ? 3 : invalid || props.attention ? 2 : 1.5;
   const note = props.error ?? props.hint;
+  const label = (
+    <FieldLabel htmlFor={id} id={labelId}>
+      {props.label}
+    </FieldLabel>
+  );
+  const resting = invalid ? colour.madder : props.attention ? colour.brassMid : colour.ruleStrong;
   return (
     <View style={{ gap: 6, flexShrink: 1, minWidth: 0 }}>
-      <FieldLabel htmlFor={id} id={labelId}>
-        {props.label}
-      </FieldLabel>
+      {props.labelHidden ? <VisuallyHidden>{label}</VisuallyHidden> : label}
       <View
         style={{
           flexDirection: "row",
           alignItems: "stretch",
           minHeight: props.size === "field" ? 60 : target.default,
           borderWidth: edge,
-          borderColor: focused ? colour.mark : invalid ? colour.madder : colour.ruleStrong,
+          borderColor: focused ? colour.mark : resting,
           borderRadius: radius.field,
           backgroundColor: props.disabled ? colour.well : colour.sheet,
           paddingLeft: props.flush ? 0 : 15.5 - edge,

@@ -1,4 +1,5 @@
 export { Banner, type BannerProps } from "./banner";
+export { BrandMark } from "./brand-mark";
 export { Button, type ButtonKind, type ButtonProps } from "./button";
 export {
   addDays,
@@ -24,7 +25,13 @@ export { Figure, useSaidFigure, type FigureProps } from "./figure";
 export { FieldGroup, FieldRow, Form, type FormProps } from "./form";
 export { Icon, type IconProps } from "./icon";
 export type { IconName } from "./icon-paths";
-export { DefinitionRows, ListRow, type Definition, type ListRowProps } from "./list-row";
+export {
+  DefinitionRows,
+  ListRow,
+  type Definition,
+  type DefinitionRowsProps,
+  type ListRowProps,
+} from "./list-row";
 export { LoopCard, type LoopCardProps, type ShownValue } from "./loop-card";
 export { LoopTag, type LoopTagProps, type Service } from "./loop-tag";
 export { Mark, MarkedText, type MarkKind } from "./mark";
@@ -73,6 +80,7 @@ export {
   type ErrorStateProps,
 } from "./states";
 export { Steps, type Step, type StepsProps } from "./steps";
+export { SwitchField, type SwitchFieldProps } from "./switch-field";
 export { Table } from "./table";
 export type { Column, RowCard, TableFigure, TableProps } from "./table-props";
 export { Tabs, type TabsProps } from "./tabs";

@@ -78,39 +78,56 @@ export function ListRow(props: ListRowProps) {
 export interface Definition {
   label: string;
   value: ReactNode;
+  /** Came off an instrument or a file: mono. */
+  asRead?: boolean;
+}
+
+export interface DefinitionRowsProps {
+  rows: readonly Definition[];
+  /** A heading above. */
+  title?: string;
+  /** Name for screen readers where there is no title. */
+  label?: string;
 }
 
 /** Label and value pairs: what a pipe is, where a meter sits. */
-export function DefinitionRows({ rows, label }: { rows: readonly Definition[]; label?: string }) {
+export function DefinitionRows({ rows, title, label }: DefinitionRowsProps) {
   const { colour } = useTheme();
   return (
-    <View role="list" aria-label={label}>
-      {rows.map((row, index) => (
-        <View
-          key={row.label}
-          role="listitem"
-          style={{
-            flexDirection: "row",
-            gap: 12,
-            paddingVertical: 8,
-            borderTopWidth: index === 0 ? 0 : 1,
-            borderTopColor: colour.rule,
-          }}
-        >
-          <View style={{ flexBasis: "40%", flexShrink: 0 }}>
-            <Text variant="bodyWide" tone="ink2">
-              {row.label}
-            </Text>
+    <View>
+      {title ? (
+        <Text variant="subhead" style={{ marginBottom: 4 }}>
+          {title}
+        </Text>
+      ) : null}
+      <View role="list" aria-label={label ?? title}>
+        {rows.map((row, index) => (
+          <View
+            key={row.label}
+            role="listitem"
+            style={{
+              flexDirection: "row",
+              gap: 12,
+              paddingVertical: 8,
+              borderTopWidth: index === 0 && !title ? 0 : 1,
+              borderTopColor: colour.rule,
+            }}
+          >
+            <View style={{ flexBasis: "40%", flexShrink: 0 }}>
+              <Text variant="bodyWide" tone="ink2">
+                {row.label}
+              </Text>
+            </View>
+            <View style={{ flex: 1, minWidth: 0 }}>
+              {typeof row.value === "string" || typeof row.value === "number" ? (
+                <Text variant={row.asRead ? "asReadM" : "bodyWide"}>{row.value}</Text>
+              ) : (
+                row.value
+              )}
+            </View>
           </View>
-          <View style={{ flex: 1, minWidth: 0 }}>
-            {typeof row.value === "string" || typeof row.value === "number" ? (
-              <Text variant="bodyWide">{row.value}</Text>
-            ) : (
-              row.value
-            )}
-          </View>
-        </View>
-      ))}
+        ))}
+      </View>
     </View>
   );
 }

@@ -6,6 +6,8 @@ export interface OverlayProps {
   labelledBy: string;
   role: "dialog" | "alertdialog";
   onClose: () => void;
+  /** Space left free and in reach at the foot of the screen, px: the phone bar. */
+  foot?: number;
   children: ReactNode;
 }
 

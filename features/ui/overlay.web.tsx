@@ -8,7 +8,7 @@ const focusable =
   'a[href],button:not([disabled]),input:not([disabled]):not([type=hidden]),select:not([disabled]),textarea:not([disabled]),[tabindex="0"]';
 
 /** Above everything: focus moves in, stays in, and goes back to where it came from; Escape closes. */
-export function Overlay({ labelledBy, role, onClose, children }: OverlayProps) {
+export function Overlay({ labelledBy, role, onClose, foot, children }: OverlayProps) {
   const { colour } = useTheme();
   const box = useRef<HTMLDivElement>(null);
 
@@ -53,7 +53,7 @@ export function Overlay({ labelledBy, role, onClose, children }: OverlayProps) {
     <div
       style={{
         position: "fixed",
-        inset: 0,
+        inset: `0 0 ${foot ?? 0}px 0`,
         zIndex: 100,
         display: "flex",
         background: colour.scrim,

@@ -18,6 +18,8 @@ export interface SheetProps {
   kind?: "bottom" | "side";
   /** Space left free at the foot of the screen, for the phone bar. */
   foot?: number;
+  /** What it is made of: paper, or the page ground where it grows out of the bar. */
+  ground?: "sheet" | "pad";
 }
 
 /** A panel over the page. Escape, the close button and a tap outside shut it. */
@@ -39,7 +41,6 @@ export function Sheet(props: SheetProps) {
         }
       : {
           marginTop: "auto" as const,
-          marginBottom: props.foot ?? 0,
           width: "100%" as const,
           borderTopLeftRadius: radius.sheet,
           borderTopRightRadius: radius.sheet,
@@ -50,11 +51,11 @@ export function Sheet(props: SheetProps) {
         maxWidth: wide ? layout.wide.workings : undefined,
       };
   return (
-    <Overlay role="dialog" labelledBy={id} onClose={props.onClose}>
+    <Overlay role="dialog" labelledBy={id} onClose={props.onClose} foot={props.foot}>
       <View
         style={[
           {
-            backgroundColor: colour.sheet,
+            backgroundColor: colour[props.ground ?? "sheet"],
             paddingHorizontal: 16,
             paddingTop: 12,
             paddingBottom: 20,
@@ -62,7 +63,7 @@ export function Sheet(props: SheetProps) {
           place,
           webStyle({
             boxShadow: float,
-            maxHeight: bottom ? "92dvh" : "100dvh",
+            maxHeight: bottom ? "88%" : "100dvh",
             overflowY: "auto",
             ...(bottom ? {} : { height: "100dvh" }),
           }),

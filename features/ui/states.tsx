@@ -2,7 +2,7 @@ import type { ReactNode } from "react";
 import { View } from "react-native";
 import Svg, { Path } from "react-native-svg";
 
-import { useFormat, useWords } from "@features/i18n";
+import { useFormat, useProblemWords, useWords } from "@features/i18n";
 import type { Problem } from "@shared/contracts/contract";
 
 import { Button } from "./button";
@@ -102,6 +102,8 @@ export interface ErrorStateProps {
 export function ErrorState({ title, problem, seen, actions, onRetry }: ErrorStateProps) {
   const { colour } = useTheme();
   const t = useWords("ui");
+  const inWords = useProblemWords();
+  const said = problem ? inWords(problem) : null;
   return (
     <Card pad={5}>
       <View role="alert">
@@ -110,9 +112,9 @@ export function ErrorState({ title, problem, seen, actions, onRetry }: ErrorStat
             <Mark kind="wrong" size={24} silent />
           </View>
           <View style={{ flex: 1, minWidth: 0, gap: 4 }}>
-            <Text variant="heading">{title ?? problem?.title ?? t("state.errorTitle")}</Text>
-            <Text tone="ink2">{problem?.detail ?? t("state.errorDetail")}</Text>
-            {problem?.remedy ? <Text tone="ink2">{problem.remedy}</Text> : null}
+            <Text variant="heading">{title ?? said?.title ?? t("state.errorTitle")}</Text>
+            <Text tone="ink2">{said?.detail ?? t("state.errorDetail")}</Text>
+            {said?.remedy ? <Text tone="ink2">{said.remedy}</Text> : null}
           </View>
         </Row>
         {seen ? (

@@ -1,0 +1,1 @@
+export { CrashScreen as ErrorBoundary, RootLayout as default } from "@features/shell";
