@@ -30,8 +30,7 @@ export function speedsByUnit(
       leastMPerS,
       greatestMPerS,
       likely:
-        greatestMPerS >= USUAL_SPEED_M_PER_S.least &&
-        greatestMPerS <= USUAL_SPEED_M_PER_S.greatest,
+        greatestMPerS >= USUAL_SPEED_M_PER_S.least && greatestMPerS <= USUAL_SPEED_M_PER_S.greatest,
     };
   });
 }

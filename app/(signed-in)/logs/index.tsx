@@ -1,0 +1,1 @@
+export { LogsScreen as default } from "@features/imports/logs-screen";

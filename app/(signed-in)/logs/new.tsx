@@ -1,0 +1,1 @@
+export { StartImportScreen as default } from "@features/imports/start-import-screen";

@@ -1,0 +1,157 @@
+import { View } from "react-native";
+import { useFormat, useWords } from "@features/i18n";
+import { Card, ErrorState, LoadingBlocks, Mark, QualityStrip, Text, useTheme } from "@features/ui";
+import { ApiError } from "@features/api";
+import type { ImportChecks, ImportDetail } from "@shared/contracts/imports";
+import { FindingRow } from "./finding-row";
+import { findingsOf, type Finding } from "./findings";
+import type { ImportActions } from "./imports-queries";
+import { RowCounts } from "./row-counts";
+import { SideColumn } from "./side-column";
+import { SideRows, type SideRow } from "./side-rows";
+import { useChecksWhenAnswered } from "./time-step";
+
+/** Step 4: what was found, in order of weight, each with its choices. */
+export function ChecksStep({ detail, actions }: { detail: ImportDetail; actions: ImportActions }) {
+  const t = useWords("imports");
+  useChecksWhenAnswered(detail, actions);
+  const { checks } = detail;
+  if (!checks) {
+    const { error } = actions.check;
+    if (error && detail.state !== "checking") {
+      return (
+        <ErrorState
+          problem={error instanceof ApiError ? error.problem : null}
+          onRetry={() => actions.check.mutate()}
+        />
+      );
+    }
+    return <LoadingBlocks label={t("checks.working")} blocks={[{ width: "100%", height: 320 }]} />;
+  }
+  const findings = findingsOf(checks, detail.repair);
+  return (
+    <SideColumn
+      main={<Findings findings={findings} detail={detail} checks={checks} actions={actions} />}
+      side={<Sides detail={detail} checks={checks} />}
+    />
+  );
+}
+
+function Findings(props: {
+  findings: readonly Finding[];
+  detail: ImportDetail;
+  checks: ImportChecks;
+  actions: ImportActions;
+}) {
+  const { findings, detail, checks, actions } = props;
+  const t = useWords("imports");
+  const { colour } = useTheme();
+  const stops = checks.undecided.length;
+  return (
+    <Card pad={0} label={t("checks.found", { count: findings.length })}>
+      <View
+        style={{
+          flexDirection: "row",
+          flexWrap: "wrap",
+          justifyContent: "space-between",
+          gap: 8,
+          padding: 20,
+        }}
+      >
+        <Text variant="heading" level={2}>
+          {findings.length === 0 || stops > 0
+            ? t("checks.title", { count: stops })
+            : t("checks.found", { count: findings.length })}
+        </Text>
+        <Text variant="bodyWide" tone="ink2">
+          {t("checks.stops", { count: stops })}
+        </Text>
+      </View>
+      {findings.map((finding) => (
+        <View
+          key={finding.key}
+          style={{
+            padding: 20,
+            borderTopWidth: 1,
+            borderTopColor: colour.rule,
+            backgroundColor: finding.weight === "stop" ? colour.madderFaint : undefined,
+          }}
+        >
+          <FindingRow finding={finding} detail={detail} checks={checks} actions={actions} />
+        </View>
+      ))}
+    </Card>
+  );
+}
+
+function Sides({ detail, checks }: { detail: ImportDetail; checks: ImportChecks }) {
+  const t = useWords("imports");
+  const format = useFormat(detail.site.zone);
+  const energy: SideRow[] = [];
+  if (checks.energy) {
+    const { coolingKwh, heatingKwh, volumeM3, suppressedKwh, coveredS } = checks.energy;
+    if (coolingKwh > 0 || detail.loop.service !== "hot") {
+      energy.push({
+        label: t("result.coolingShort"),
+        value: format.withUnit(coolingKwh, "coolingEnergy"),
+      });
+    }
+    if (heatingKwh > 0 || detail.loop.service !== "chilled") {
+      energy.push({
+        label: t("result.heatingShort"),
+        value: format.withUnit(heatingKwh, "heatingEnergy"),
+      });
+    }
+    energy.push({ label: t("result.volume"), value: format.withUnit(volumeM3, "volume") });
+    energy.push({ label: t("result.coveredShort"), value: format.duration(coveredS) });
+    if (suppressedKwh > 0) {
+      energy.push({
+        label: t("result.suppressedShort"),
+        value: format.withUnit(suppressedKwh, "coolingEnergy"),
+      });
+    }
+  }
+  const { picture } = checks;
+  const part = (instant: string) =>
+    picture
+      ? (Date.parse(instant) - Date.parse(picture.from)) /
+        Math.max(1, Date.parse(picture.to) - Date.parse(picture.from))
+      : 0;
+  return (
+    <>
+      <View>
+        <Text variant="subhead" level={2}>
+          {t("checks.rowsTitle")}
+        </Text>
+        {picture ? (
+          <View style={{ marginTop: 12 }}>
+            <QualityStrip
+              label={t("checks.rowsTitle")}
+              height={16}
+              stretches={picture.quality.map((stretch) => ({
+                from: part(stretch.from),
+                to: part(stretch.to),
+                quality: stretch.kind,
+              }))}
+            />
+          </View>
+        ) : null}
+        <RowCounts rows={checks.rows} withoutTemperature={checks.rowsWithoutTemperature} />
+      </View>
+      {energy.length > 0 ? <SideRows title={t("checks.energy")} rows={energy} /> : null}
+      {checks.energyBlockedBy ? (
+        <Text tone="ink2">{t(`checks.energyNone.${checks.energyBlockedBy}`)}</Text>
+      ) : null}
+      {checks.clean.length > 0 ? (
+        <SideRows
+          title={t("checks.clean", { count: checks.clean.length })}
+          rows={checks.clean.map((name) => ({
+            label: t(`checks.cleanName.${name}`, { defaultValue: name }),
+            value: "",
+            lead: <Mark kind="fine" size={18} silent />,
+          }))}
+        />
+      ) : null}
+    </>
+  );
+}

@@ -1,0 +1,162 @@
+import type { ReactNode } from "react";
+import { View } from "react-native";
+import { useFormat, useWords } from "@features/i18n";
+import { Button, Card, Mark, Row, Text } from "@features/ui";
+import type { ImportDetail, ImportFile, QuestionView } from "@shared/contracts/imports";
+import type { FileRecipe } from "@shared/domain/log-files/recipe";
+import { useColumnName } from "./column-controls";
+import { withRecipe } from "./file-card";
+import { FlowUnitQuestion } from "./flow-unit-question";
+import type { ImportActions } from "./imports-queries";
+import { TEMPERATURE_UNITS, withDateOrder, withDecimalMark, withUnit } from "./recipe-edits";
+
+interface QuestionsProps {
+  readonly file: ImportFile;
+  readonly detail: ImportDetail;
+  readonly actions: ImportActions;
+}
+
+/** What the file itself does not prove, each with what would settle it. Nothing is picked beforehand. */
+export function Questions({ file, detail, actions }: QuestionsProps) {
+  const { recipe } = file;
+  if (!recipe || !detail.can.edit) return null;
+  const change = (next: FileRecipe) =>
+    actions.chooseRecipe.mutate({ fileId: file.id, recipe: withRecipe(next) });
+  return (
+    <>
+      {file.questions.map((question, index) => (
+        <OneQuestion
+          key={`${question.code} ${index}`}
+          question={question}
+          recipe={recipe}
+          detail={detail}
+          onChange={change}
+        />
+      ))}
+    </>
+  );
+}
+
+/** Frame of a question: brass mark, what is not known, what was seen, the answers. */
+export function QuestionCard(props: { title: string; text: string; children?: ReactNode }) {
+  return (
+    <Card pad={5} label={props.title}>
+      <Row gap={3} align="flex-start">
+        <Mark kind="look" size={22} />
+        <View style={{ flex: 1, minWidth: 0, gap: 4 }}>
+          <Text variant="subhead" level={2}>
+            {props.title}
+          </Text>
+          <Text variant="bodyWide" tone="ink2">
+            {props.text}
+          </Text>
+        </View>
+      </Row>
+      {props.children ? <View style={{ marginTop: 14, gap: 12 }}>{props.children}</View> : null}
+    </Card>
+  );
+}
+
+function OneQuestion(props: {
+  question: QuestionView;
+  recipe: FileRecipe;
+  detail: ImportDetail;
+  onChange: (recipe: FileRecipe) => void;
+}) {
+  const { question, recipe, onChange } = props;
+  const t = useWords("imports");
+  const format = useFormat(props.detail.site.zone);
+  const name = useColumnName();
+  const column = "columnIndex" in question ? recipe.columns[question.columnIndex] : undefined;
+
+  switch (question.code) {
+    case "flowUnit":
+      return (
+        <FlowUnitQuestion
+          question={question}
+          pipe={props.detail.pipe}
+          onUse={(unit) => onChange(withUnit(recipe, question.columnIndex, unit))}
+        />
+      );
+    case "temperatureUnit":
+      return (
+        <QuestionCard
+          title={t("columns.temperatureUnit.title", { column: column ? name(column) : "" })}
+          text={t("columns.temperatureUnit.text", {
+            min: format.number(question.minValue),
+            max: format.number(question.maxValue),
+          })}
+        >
+          <Row gap={2} wrap>
+            {TEMPERATURE_UNITS.map((unit) => (
+              <Button
+                key={unit}
+                kind="second"
+                label={t("columns.temperatureUnit.use", { unit: t(`columns.unit.${unit}`) })}
+                onPress={() => onChange(withUnit(recipe, question.columnIndex, unit))}
+              />
+            ))}
+          </Row>
+        </QuestionCard>
+      );
+    case "dateOrder":
+      return (
+        <QuestionCard
+          title={t("columns.dateOrder.title")}
+          text={t("columns.dateOrder.text", { first: question.firstCell, last: question.lastCell })}
+        >
+          {question.choices.map((order, index) => {
+            const step = question.stepSeconds[index] ?? null;
+            return (
+              <View key={order} style={{ gap: 4 }}>
+                <Button
+                  kind="second"
+                  label={t("columns.dateOrder.use", { order: t(`columns.order.${order}`) })}
+                  onPress={() => onChange(withDateOrder(recipe, order))}
+                />
+                <Text variant="small" tone="ink2">
+                  {step === null
+                    ? t("columns.dateOrder.stepUnknown", { order: t(`columns.order.${order}`) })
+                    : t("columns.dateOrder.step", {
+                        order: t(`columns.order.${order}`),
+                        step: format.duration(step),
+                      })}
+                </Text>
+              </View>
+            );
+          })}
+        </QuestionCard>
+      );
+    case "decimalMark":
+      return (
+        <QuestionCard
+          title={t("columns.decimalMark.title", { column: column ? name(column) : "" })}
+          text={t("columns.decimalMark.text", { cell: question.cell, line: question.line })}
+        >
+          <Row gap={2} wrap>
+            {([".", ","] as const).map((mark) => (
+              <Button
+                key={mark}
+                kind="second"
+                label={t("columns.decimalMark.use", {
+                  mark: t(mark === "." ? "columns.decimal.point" : "columns.decimal.comma"),
+                })}
+                onPress={() => onChange(withDecimalMark(recipe, question.columnIndex, mark))}
+              />
+            ))}
+          </Row>
+        </QuestionCard>
+      );
+    case "columnMeaning":
+      return (
+        <QuestionCard
+          title={t("columns.missing.title", {
+            meaning: t(`columns.meaningLong.${question.meaning}`),
+          })}
+          text={t("columns.missing.text")}
+        />
+      );
+    case "loggerClock":
+      return null;
+  }
+}
