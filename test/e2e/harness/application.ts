@@ -111,7 +111,10 @@ async function isHealthy(address: string): Promise<boolean> {
   try {
     return (await fetch(`${address}/api/v1/health`)).ok;
   } catch (error) {
-    if (error instanceof TypeError) return false; // nothing listens yet
+    // Nothing listens yet. By name: Jest's world has a TypeError of its own.
+    if (error !== null && typeof error === "object" && "name" in error) {
+      if (error.name === "TypeError") return false;
+    }
     throw error;
   }
 }
