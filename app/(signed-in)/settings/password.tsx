@@ -1,0 +1,1 @@
+export { ChangePasswordScreen as default } from "@features/people/change-password-screen";

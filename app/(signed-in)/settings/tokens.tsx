@@ -1,0 +1,1 @@
+export { TokensScreen as default } from "@features/people/tokens-screen";

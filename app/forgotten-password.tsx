@@ -1,0 +1,1 @@
+export { ForgottenPasswordScreen as default } from "@features/people/forgotten-password-screen";

@@ -1,0 +1,1 @@
+export { InvitationScreen as default } from "@features/people/invitation-screen";

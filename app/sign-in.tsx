@@ -1,0 +1,1 @@
+export { SignInScreen as default } from "@features/people/sign-in-screen";
