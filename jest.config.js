@@ -74,7 +74,11 @@ module.exports = {
     {
       ...nodeProject,
       displayName: "server",
-      testMatch: ["<rootDir>/server/**/*.test.ts", "<rootDir>/test/server/**/*.test.ts"],
+      testMatch: [
+        "<rootDir>/server/**/*.test.ts",
+        "<rootDir>/test/server/**/*.test.ts",
+        "<rootDir>/test/api/**/*.test.ts",
+      ],
       globalSetup: "<rootDir>/scripts/jest-database-start.mjs",
       globalTeardown: "<rootDir>/scripts/jest-database-stop.mjs",
     },

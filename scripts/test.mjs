@@ -1,6 +1,6 @@
 // npm test: every check of the project; the last line is "N passed, N failed".
 import { jestCheck, wholeCheck } from "./lib/checks.mjs";
-import { ensureChromium, ensureMariadb } from "./lib/debian.mjs";
+import { ensureChromium, ensureCurl, ensureMariadb } from "./lib/debian.mjs";
 import { ensurePackages } from "./lib/packages.mjs";
 import { SentenceError } from "./lib/sentence-error.mjs";
 import { openSession } from "./lib/session.mjs";
@@ -31,6 +31,7 @@ try {
   await ensurePackages(session);
   await ensureMariadb(session);
   await ensureChromium(session);
+  await ensureCurl(session);
   await staticChecks();
   const database = await startThrowAwayDatabase();
   session.atEnd(database.stop);

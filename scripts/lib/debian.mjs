@@ -39,3 +39,6 @@ export const ensureMariadb = (session) =>
   ]);
 
 export const ensureChromium = (session) => ensureDebianPackage(session, "chromium", [["chromium"]]);
+
+/** The API guide is written with it, and a test runs the guide's lines. */
+export const ensureCurl = (session) => ensureDebianPackage(session, "curl", [["curl"]]);
