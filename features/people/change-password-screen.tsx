@@ -1,35 +1,34 @@
-import { useMutation } from "@tanstack/react-query";
 import { router } from "expo-router";
 import { useState } from "react";
 
 import { changePassword } from "@shared/contracts/people";
-import { call, useErrorWords } from "@features/api";
+import { call } from "@features/api";
 import { useWords } from "@features/i18n";
-import { Button, Card, Form, Row, Screen, TextField, useToast } from "@features/ui";
+import { Button, Card, Form, Row, Screen, Text, TextField, useToast } from "@features/ui";
 
-import { NewPasswordFields } from "./new-password-fields";
+import { NewPasswordField } from "./new-password-field";
 import { passwordProblem } from "./password-rules";
 import { peoplePaths } from "./people-paths";
+import { useChange } from "./use-change";
 
+/** A new own password, proven with the current one; other browsers are signed out. */
 export function ChangePasswordScreen() {
   const t = useWords("people");
   const toast = useToast();
-  const inWords = useErrorWords();
   const [currentPassword, setCurrent] = useState("");
   const [password, setPassword] = useState("");
-  const [again, setAgain] = useState("");
   const [tried, setTried] = useState(false);
-  const change = useMutation({
-    mutationFn: () => call(changePassword, { body: { currentPassword, newPassword: password } }),
-    onSuccess: () => {
+  const change = useChange({
+    send: () => call(changePassword, { body: { currentPassword, newPassword: password } }),
+    onDone: () => {
       toast({ message: t("password.changed") });
       router.replace(peoplePaths.settings);
     },
+    fields: ["currentPassword", "newPassword"],
   });
   const submit = () => {
     setTried(true);
-    const ready = currentPassword !== "" && passwordProblem(password, again) === null;
-    if (ready && !change.isPending) change.mutate();
+    if (currentPassword !== "" && passwordProblem(password) === null) change.send(undefined);
   };
   return (
     <Screen
@@ -38,30 +37,34 @@ export function ChangePasswordScreen() {
       narrow
     >
       <Card pad={5}>
-        <Form
-          label={t("password.title")}
-          onSubmit={submit}
-          errors={change.error ? [inWords(change.error)] : []}
-        >
+        <Form label={t("password.form")} onSubmit={submit} errors={change.formErrors}>
           <TextField
             label={t("field.currentPassword")}
             kind="password"
+            name="current-password"
             autoComplete="current-password"
             value={currentPassword}
             onChange={setCurrent}
-            error={tried && currentPassword === "" ? t("field.passwordNeeded") : null}
+            error={
+              tried && currentPassword === ""
+                ? t("field.passwordMissing")
+                : change.fieldError("currentPassword")
+            }
             required
           />
-          <NewPasswordFields
-            password={password}
-            again={again}
-            onPassword={setPassword}
-            onAgain={setAgain}
+          <NewPasswordField
+            label={t("field.newPassword")}
+            value={password}
+            onChange={setPassword}
             tried={tried}
+            refused={change.fieldError("newPassword")}
           />
+          <Text variant="small" tone="ink2">
+            {t("password.ends")}
+          </Text>
           <Row gap={3} wrap>
-            <Button submit label={t("password.do")} busy={change.isPending} />
-            <Button kind="quiet" label={t("cancel")} href={peoplePaths.settings} />
+            <Button submit label={t("password.submit")} busy={change.busy} />
+            <Button kind="quiet" label={t("password.cancel")} href={peoplePaths.settings} />
           </Row>
         </Form>
       </Card>

@@ -1,36 +1,38 @@
 import Head from "expo-router/head";
 import { useState, type ReactNode } from "react";
-import { View } from "react-native";
+import { useWindowDimensions, View } from "react-native";
 
 import { usePreferences, useWords } from "@features/i18n";
-import { BrandMark, Segments, Text, useBreakpoint, useTheme, webStyle } from "@features/ui";
+import { BrandMark, Row, Segments, Text, useBreakpoint, useTheme, webStyle } from "@features/ui";
 
 import { EntryPipes } from "./entry-pipes";
+import { pipesRoom } from "./pipes-room";
 
 /** Frame of the pages before anybody is signed in: the form inside a heating and a cooling loop. */
 export function EntryFrame(props: {
-  /** Browser title. */
+  /** Browser title, and the h1 unless the brand is. */
   title: string;
-  /** The h1 above the form; on the sign-in page the name is the h1. */
-  heading?: string;
+  /** Sign-in: the name is the h1, and it stands big. */
+  isFront?: boolean;
   lead?: string;
   children: ReactNode;
 }) {
   const { colour } = useTheme();
   const wide = useBreakpoint() === "wide";
-  const [box, setBox] = useState({ width: 0, height: 0 });
+  const screen = useWindowDimensions();
+  const [drawn, setDrawn] = useState({ width: 0, height: 0 });
+  const room = pipesRoom(wide, screen);
   return (
     <View
-      onLayout={(event) => {
-        const { width, height } = event.nativeEvent.layout;
-        setBox({ width, height });
-      }}
+      onLayout={({ nativeEvent: { layout } }) =>
+        setDrawn({ width: layout.width, height: layout.height })
+      }
       style={[{ flexGrow: 1, backgroundColor: colour.pad }, webStyle({ minHeight: "100dvh" })]}
     >
       <Head>
         <title>{`${props.title} · Loopwright`}</title>
       </Head>
-      {box.width > 0 ? <EntryPipes {...box} wide={wide} /> : null}
+      {drawn.width > 0 ? <EntryPipes {...drawn} room={room} wide={wide} /> : null}
       <View
         role="main"
         style={{
@@ -38,23 +40,21 @@ export function EntryFrame(props: {
           flexDirection: wide ? "row" : "column",
           justifyContent: wide ? "space-between" : "flex-start",
           alignItems: wide ? "center" : "stretch",
+          alignSelf: "center",
           width: "100%",
           maxWidth: wide ? undefined : 560,
-          alignSelf: "center",
-          paddingLeft: wide ? 120 : 58,
-          paddingRight: wide ? 256 : 58,
-          paddingTop: wide ? 200 : 84,
-          paddingBottom: wide ? 200 : 76,
-          gap: wide ? 48 : 28,
+          ...room.padding,
+          gap: wide ? 40 : 28,
         }}
       >
-        <Brand wide={wide} isHeading={props.heading === undefined} />
-        <View style={{ width: wide ? 376 : "100%", gap: 16 }}>
-          {props.heading ? (
+        {wide ? <WideBrand isHeading={props.isFront} lift={room.brandLift} /> : null}
+        {wide ? null : <PhoneBrand isFront={props.isFront} />}
+        <View style={wide ? { width: 376, flexShrink: 0, gap: 16 } : { gap: 16 }}>
+          {props.isFront ? null : (
             <Text variant="title" level={1}>
-              {props.heading}
+              {props.title}
             </Text>
-          ) : null}
+          )}
           {props.lead ? <Text tone="ink2">{props.lead}</Text> : null}
           {props.children}
           <LanguageSwitch />
@@ -64,41 +64,45 @@ export function EntryFrame(props: {
   );
 }
 
-function Brand({ wide, isHeading }: { wide: boolean; isHeading: boolean }) {
+function PhoneBrand({ isFront }: { isFront?: boolean }) {
   const t = useWords("people");
-  const name = (
-    <Text variant={wide ? "wordmarkWide" : "wordmarkPhone"} level={isHeading ? 1 : "none"}>
-      Loopwright
-    </Text>
-  );
-  if (!wide) {
+  if (!isFront) {
     return (
-      <View>
-        <BrandMark size={50} />
-        <View style={{ marginTop: 14 }}>{name}</View>
-        {isHeading ? (
-          <View style={{ marginTop: 6 }}>
-            <Text tone="ink2">{t("entry.claimShort")}</Text>
-          </View>
-        ) : null}
-      </View>
+      <Row gap={2}>
+        <BrandMark size={32} />
+        <Text variant="wordmark">Loopwright</Text>
+      </Row>
     );
   }
   return (
-    <View style={{ flexShrink: 1, maxWidth: 560 }}>
-      <View style={{ flexDirection: "row", alignItems: "center", gap: 18 }}>
-        <BrandMark size={64} />
-        {name}
-      </View>
-      <View style={{ marginTop: 22, maxWidth: 470 }}>
-        <Text variant="lead" tone="ink2">
-          {t("entry.claim")}
-        </Text>
-      </View>
+    <View>
+      <BrandMark size={50} />
+      <Text variant="wordmarkPhone" level={1} style={{ marginTop: 14, marginBottom: 6 }}>
+        Loopwright
+      </Text>
+      <Text tone="ink2">{t("brand.short")}</Text>
     </View>
   );
 }
 
+function WideBrand({ isHeading, lift }: { isHeading?: boolean; lift: number }) {
+  const t = useWords("people");
+  return (
+    <View style={{ flexShrink: 1, maxWidth: 560, marginBottom: lift }}>
+      <View style={{ flexDirection: "row", alignItems: "center", gap: 18 }}>
+        <BrandMark size={64} />
+        <Text variant="wordmarkWide" level={isHeading ? 1 : "none"}>
+          Loopwright
+        </Text>
+      </View>
+      <Text variant="lead" tone="ink2" style={{ marginTop: 22, maxWidth: 470 }}>
+        {t("brand.long")}
+      </Text>
+    </View>
+  );
+}
+
+/** Nobody is known yet, so the language is this device's. */
 function LanguageSwitch() {
   const t = useWords("people");
   const { language, chooseLanguage } = usePreferences();
@@ -106,6 +110,7 @@ function LanguageSwitch() {
     <View style={{ marginTop: 8 }}>
       <Segments
         label={t("settings.language")}
+        size="dense"
         value={language}
         options={[
           { value: "en", label: "English" },

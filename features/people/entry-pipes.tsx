@@ -3,15 +3,18 @@ import Svg, { Path, Rect } from "react-native-svg";
 
 import { useTheme } from "@features/ui";
 
+import type { PipesRoom } from "./pipes-room";
+
 interface Box {
   width: number;
   height: number;
+  room: PipesRoom;
 }
 
 /** The heating and the cooling loop around the form: behind it, and silent. */
 export function EntryPipes(props: Box & { wide: boolean }) {
   return (
-    <View aria-hidden style={{ position: "absolute", top: 0, left: 0, overflow: "hidden" }}>
+    <View aria-hidden style={{ position: "absolute", top: 0, left: 0, pointerEvents: "none" }}>
       <Svg width={props.width} height={props.height}>
         {props.wide ? <WidePipes {...props} /> : <PhonePipes {...props} />}
       </Svg>
@@ -73,15 +76,21 @@ function PhonePipes({ width: w, height: h }: Box) {
 }
 
 /** On a desk they enter at the left, bend round the form and leave. */
-function WidePipes({ width: w, height: h }: Box) {
+function WidePipes({ width: w, height: h, room }: Box) {
   const { colour } = useTheme();
-  const outer = { top: 96, right: w - 96, bottom: h - 96, mid: h / 2, r: 120 };
-  const inner = { top: 168, right: w - 168, bottom: h - 168, mid: h / 2, r: 64 };
+  const outer = { top: room.outer, right: w - 96, bottom: h - room.outer, mid: h / 2, r: 120 };
+  const inner = { top: room.inner, right: w - 168, bottom: h - room.inner, mid: h / 2, r: 64 };
   const supply = (b: typeof outer) =>
     `M-10 ${b.top}H${b.right - b.r}a${b.r} ${b.r} 0 0 1 ${b.r} ${b.r}V${b.mid}`;
   const back = (b: typeof outer) =>
     `M${b.right} ${b.mid}V${b.bottom - b.r}a${b.r} ${b.r} 0 0 1 ${-b.r} ${b.r}H-10`;
-  const chevron = { fill: "none", stroke: colour.sheet, strokeWidth: 3 } as const;
+  const chevron = {
+    fill: "none",
+    stroke: colour.sheet,
+    strokeWidth: 3,
+    strokeLinejoin: "round",
+    strokeLinecap: "round",
+  } as const;
   return (
     <>
       <Pipe d={supply(outer)} stroke={colour.copper} width={26} />

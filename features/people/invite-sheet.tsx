@@ -1,62 +1,62 @@
-import { useMutation, useQueryClient } from "@tanstack/react-query";
+import { useQueryClient } from "@tanstack/react-query";
 import { useState } from "react";
 
 import { inviteMember, type Role } from "@shared/contracts/people";
-import { call, useErrorWords } from "@features/api";
+import { call } from "@features/api";
 import { useWords } from "@features/i18n";
-import { Button, ChoiceTiles, Form, Sheet, TextField, useToast } from "@features/ui";
+import { Button, ChoiceTiles, Form, Sheet, Text, TextField, useToast } from "@features/ui";
 
-import { membersQuery } from "./people-queries";
+import { emailProblem } from "./email-problem";
+import { peopleQueries } from "./people-queries";
 import { useRoleChoices } from "./role-choices";
+import { useChange } from "./use-change";
 
+/** An address and a role; the role has no default, because it decides what somebody sees. */
 export function InviteSheet({ onClose }: { onClose: () => void }) {
   const t = useWords("people");
   const toast = useToast();
   const client = useQueryClient();
-  const inWords = useErrorWords();
   const choices = useRoleChoices();
   const [email, setEmail] = useState("");
   const [role, setRole] = useState<Role | null>(null);
   const [tried, setTried] = useState(false);
-  const invite = useMutation({
-    mutationFn: (body: { email: string; role: Role }) => call(inviteMember, { body }),
-    onSuccess: async (member) => {
-      await client.invalidateQueries(membersQuery);
-      toast({ message: t("members.invitationSent", { email: member.email }) });
+  const invite = useChange({
+    send: (body: { email: string; role: Role }) => call(inviteMember, { body }),
+    onDone: async (member) => {
+      await client.invalidateQueries({ queryKey: peopleQueries.members.queryKey });
+      toast({ message: t("members.sent", { email: member.email }) });
       onClose();
     },
+    fields: ["email", "role"],
   });
+  const problem = emailProblem(email);
   const submit = () => {
     setTried(true);
-    if (email.trim() !== "" && role && !invite.isPending)
-      invite.mutate({ email: email.trim(), role });
+    if (problem === null && role !== null) invite.send({ email: email.trim(), role });
   };
   return (
     <Sheet open kind="side" title={t("members.invite")} onClose={onClose}>
-      <Form
-        label={t("members.invite")}
-        onSubmit={submit}
-        errors={invite.error ? [inWords(invite.error)] : []}
-      >
+      <Form label={t("members.inviteForm")} onSubmit={submit} errors={invite.formErrors}>
+        <Text tone="ink2">{t("members.inviteLead")}</Text>
         <TextField
           label={t("field.email")}
           kind="email"
-          autoFocus
+          name="invited-email"
+          autoComplete="off"
           value={email}
           onChange={setEmail}
-          hint={t("members.inviteHint")}
-          error={tried && email.trim() === "" ? t("field.emailNeeded") : null}
+          error={tried && problem ? t(`field.${problem}`) : invite.fieldError("email")}
           required
         />
         <ChoiceTiles
-          label={t("field.role")}
+          label={t("members.role")}
           value={role}
           choices={choices}
           onChange={setRole}
-          error={tried && role === null ? t("field.roleNeeded") : null}
+          error={tried && role === null ? t("members.roleMissing") : invite.fieldError("role")}
           required
         />
-        <Button submit full label={t("members.sendInvitation")} busy={invite.isPending} />
+        <Button submit full label={t("members.send")} busy={invite.busy} />
       </Form>
     </Sheet>
   );

@@ -1,84 +1,86 @@
-import { useMutation, useQueryClient } from "@tanstack/react-query";
 import { useState } from "react";
 import { View } from "react-native";
 
-import {
-  removeMember,
-  resendInvitation,
-  updateMember,
-  type Member,
-  type Role,
-} from "@shared/contracts/people";
-import { call, useErrorWords } from "@features/api";
+import type { Member, Role } from "@shared/contracts/people";
 import { useWords } from "@features/i18n";
-import { Banner, Button, ChoiceTiles, Dialog, Sheet, Text, useToast } from "@features/ui";
+import { Banner, Button, ChoiceTiles, Divider, Sheet, Stack, Text } from "@features/ui";
 
-import { membersQuery } from "./people-queries";
+import { locksOneselfOut, useMemberChange, type MemberChange } from "./member-change";
+import { MemberDialog } from "./member-dialog";
+import { useMemberWords } from "./member-words";
 import { useRoleChoices } from "./role-choices";
 
-type Change =
-  | { readonly kind: "role"; readonly role: Role }
-  | { readonly kind: "state"; readonly state: "active" | "disabled" }
-  | { readonly kind: "resend" }
-  | { readonly kind: "remove" };
-
-/** One member: role, disable or enable, a fresh invitation, removal. */
+/** One member: role, a fresh invitation, disable or enable, removal. */
 export function MemberSheet({ member, onClose }: { member: Member; onClose: () => void }) {
   const t = useWords("people");
-  const inWords = useErrorWords();
+  const words = useMemberWords();
   const choices = useRoleChoices();
+  const [nowMs] = useState(() => Date.now());
   const [role, setRole] = useState<Role>(member.role);
-  const [removing, setRemoving] = useState(false);
+  const [asking, setAsking] = useState<MemberChange | null>(null);
   const change = useMemberChange(member, onClose);
-  const name = member.name ?? member.email;
   const invited = member.state === "invited";
+  const start = (next: MemberChange) => {
+    change.reset();
+    if (next.kind === "remove" || locksOneselfOut(member, next)) setAsking(next);
+    else change.send(next);
+  };
+  const refused = change.formErrors.join(" ");
   return (
-    <Sheet open kind="side" title={name} onClose={onClose}>
+    <Sheet open kind="side" title={words.name(member)} onClose={onClose}>
       <View style={{ gap: 16 }}>
-        {change.error ? (
+        <View>
+          {invited ? null : <Text tone="ink2">{member.email}</Text>}
+          <Text variant="small" tone="ink2">
+            {words.link(member, nowMs) ?? words.state(member, nowMs)}
+          </Text>
+        </View>
+        {refused && asking === null ? (
           <Banner kind="wrong" live>
-            {inWords(change.error)}
+            {refused}
           </Banner>
         ) : null}
-        <Text tone="ink2">{member.email}</Text>
+        {invited ? (
+          <Action
+            label={t("members.resend")}
+            detail={t("members.resendDetail")}
+            busy={change.busy}
+            onPress={() => start({ kind: "resend" })}
+          />
+        ) : null}
         {member.can.edit ? (
           <>
             <ChoiceTiles
-              label={t("field.role")}
+              label={t("members.role")}
               value={role}
               choices={choices}
               onChange={setRole}
             />
-            <Button
-              full
-              label={t("members.saveRole")}
-              busy={change.isPending}
-              {...(role === member.role ? { offBecause: t("members.roleUnchanged") } : {})}
-              onPress={() => change.mutate({ kind: "role", role })}
-            />
+            {role === member.role ? null : (
+              <Button
+                full
+                label={t("members.changeRole", { role: t(`role.${role}`) })}
+                busy={change.busy}
+                onPress={() => start({ kind: "role", role })}
+              />
+            )}
           </>
         ) : null}
-        {invited ? (
-          <Button
-            kind="second"
-            full
-            label={t("members.resend")}
-            busy={change.isPending}
-            onPress={() => change.mutate({ kind: "resend" })}
+        <Divider />
+        {member.can.edit && member.state === "active" ? (
+          <Action
+            label={t("members.disable")}
+            detail={t("members.disableDetail")}
+            busy={change.busy}
+            onPress={() => start({ kind: "state", state: "disabled" })}
           />
         ) : null}
-        {member.can.edit && !invited ? (
-          <Button
-            kind="second"
-            full
-            label={t(member.state === "active" ? "members.disable" : "members.enable")}
-            busy={change.isPending}
-            onPress={() =>
-              change.mutate({
-                kind: "state",
-                state: member.state === "active" ? "disabled" : "active",
-              })
-            }
+        {member.can.edit && member.state === "disabled" ? (
+          <Action
+            label={t("members.enable")}
+            detail={t("members.enableDetail")}
+            busy={change.busy}
+            onPress={() => start({ kind: "state", state: "active" })}
           />
         ) : null}
         {member.can.remove ? (
@@ -86,50 +88,31 @@ export function MemberSheet({ member, onClose }: { member: Member; onClose: () =
             kind="quiet"
             full
             label={t(invited ? "members.withdraw" : "members.remove")}
-            onPress={() => setRemoving(true)}
+            onPress={() => start({ kind: "remove" })}
           />
         ) : null}
       </View>
-      <Dialog
-        open={removing}
-        stop
-        title={t(invited ? "members.withdrawTitle" : "members.removeTitle", { name })}
-        confirmLabel={t(invited ? "members.withdraw" : "members.remove")}
-        busy={change.isPending}
-        onConfirm={() => change.mutate({ kind: "remove" }, { onSettled: () => setRemoving(false) })}
-        onClose={() => setRemoving(false)}
-      >
-        {t(invited ? "members.withdrawDetail" : "members.removeDetail")}
-      </Dialog>
+      {asking ? (
+        <MemberDialog
+          member={member}
+          change={asking}
+          busy={change.busy}
+          refused={refused}
+          onConfirm={() => change.send(asking)}
+          onClose={() => setAsking(null)}
+        />
+      ) : null}
     </Sheet>
   );
 }
 
-function useMemberChange(member: Member, onDone: () => void) {
-  const t = useWords("people");
-  const toast = useToast();
-  const client = useQueryClient();
-  const params = { memberId: member.id };
-  return useMutation({
-    mutationFn: async (change: Change): Promise<void> => {
-      switch (change.kind) {
-        case "role":
-          await call(updateMember, { params, body: { role: change.role } });
-          return;
-        case "state":
-          await call(updateMember, { params, body: { state: change.state } });
-          return;
-        case "resend":
-          await call(resendInvitation, { params });
-          return;
-        case "remove":
-          await call(removeMember, { params });
-      }
-    },
-    onSuccess: async (_, change) => {
-      await client.invalidateQueries(membersQuery);
-      toast({ message: t(`members.done.${change.kind}`, { name: member.name ?? member.email }) });
-      onDone();
-    },
-  });
+function Action(props: { label: string; detail: string; busy: boolean; onPress: () => void }) {
+  return (
+    <Stack gap={1}>
+      <Button kind="second" full label={props.label} busy={props.busy} onPress={props.onPress} />
+      <Text variant="small" tone="ink2">
+        {props.detail}
+      </Text>
+    </Stack>
+  );
 }

@@ -1,8 +1,11 @@
+import { useState } from "react";
 import { View } from "react-native";
 
 import type { Member } from "@shared/contracts/people";
-import { useFormat, useWords } from "@features/i18n";
-import { Button, Card, Chip, Table, Text, useBreakpoint, type Column } from "@features/ui";
+import { useWords } from "@features/i18n";
+import { Button, Card, Chip, Row, Table, Text, useBreakpoint, type Column } from "@features/ui";
+
+import { hasEnded, useMemberWords } from "./member-words";
 
 interface MembersTableProps {
   members: readonly Member[];
@@ -11,26 +14,25 @@ interface MembersTableProps {
 
 export function MembersTable({ members, onOpen }: MembersTableProps) {
   const t = useWords("people");
-  const format = useFormat();
+  const words = useMemberWords();
+  const [nowMs] = useState(() => Date.now());
   const phone = useBreakpoint() === "phone";
-  const seen = (member: Member) =>
-    member.lastSeenAt ? format.dateTime(Date.parse(member.lastSeenAt)) : t("members.never");
   const columns: Column<Member>[] = [
-    { key: "name", header: t("field.name"), render: (member) => nameOf(member) },
-    { key: "email", header: t("field.email"), render: (member) => member.email },
-    { key: "role", header: t("field.role"), render: (member) => t(`role.${member.role}`) },
-    { key: "state", header: t("members.state"), render: (member) => <StateChip member={member} /> },
-    { key: "seen", header: t("members.lastSeen"), wideOnly: true, render: seen },
+    { key: "name", header: t("members.name"), render: (member) => <Name member={member} /> },
+    { key: "email", header: t("members.email"), render: (member) => member.email },
+    { key: "role", header: t("members.role"), render: (member) => t(`role.${member.role}`) },
     {
-      key: "edit",
-      header: t("members.change"),
+      key: "state",
+      header: t("members.state"),
+      render: (member) => <State member={member} nowMs={nowMs} />,
+    },
+    { key: "seen", header: t("members.lastSeen"), wideOnly: true, render: words.lastSeen },
+    {
+      key: "change",
+      header: t("members.action"),
       render: (member) => <ChangeButton member={member} onOpen={onOpen} />,
     },
   ];
-  const nameOf = (member: Member) => {
-    const name = member.name ?? member.email;
-    return member.isSelf ? t("members.you", { name }) : name;
-  };
   const table = (
     <Table
       caption={t("members.title")}
@@ -38,52 +40,83 @@ export function MembersTable({ members, onOpen }: MembersTableProps) {
       columns={columns}
       rows={members}
       rowKey={(member) => member.id}
+      twoLines
       card={{
-        title: nameOf,
-        figure: (member) => <StateChip member={member} />,
+        title: (member) => <Name member={member} />,
+        figure: (member) => <StateChip member={member} nowMs={nowMs} />,
         lines: (member) => [
-          member.email,
+          member.name === null ? null : member.email,
           t(`role.${member.role}`),
-          t("members.seen", { when: seen(member) }),
+          words.link(member, nowMs) ??
+            (member.lastSeenAt
+              ? t("members.lastSeenOn", { when: words.lastSeen(member) })
+              : t("members.neverSeen")),
           <View key="change" style={{ marginTop: 8 }}>
             <ChangeButton member={member} onOpen={onOpen} />
           </View>,
         ],
       }}
-      empty={<Text>{t("members.none")}</Text>}
     />
   );
   return phone ? table : <Card pad={0}>{table}</Card>;
 }
 
-function StateChip({ member }: { member: Member }) {
+function Name({ member }: { member: Member }) {
   const t = useWords("people");
-  const format = useFormat();
-  if (member.state === "active") return <Text variant="table">{t("members.active")}</Text>;
-  if (member.state === "disabled") return <Chip tone="line" label={t("members.disabled")} />;
-  const until = member.invitationExpiresAt;
+  const words = useMemberWords();
   return (
-    <Chip
-      tone="plain"
-      icon="mail"
-      label={
-        until
-          ? t("members.invitedUntil", { date: format.date(Date.parse(until)) })
-          : t("members.invited")
-      }
-    />
+    <Row gap={2} wrap>
+      <Text variant="subhead" level="none">
+        {words.name(member)}
+      </Text>
+      {member.isSelf ? <Chip tone="line" label={t("members.you")} /> : null}
+    </Row>
   );
+}
+
+/** The state, and under it until when an invitation's link works. */
+function State({ member, nowMs }: { member: Member; nowMs: number }) {
+  const words = useMemberWords();
+  const link = words.link(member, nowMs);
+  return (
+    <View style={{ gap: 2 }}>
+      <StateChip member={member} nowMs={nowMs} />
+      {link ? (
+        <Text variant="small" tone="ink2">
+          {link}
+        </Text>
+      ) : null}
+    </View>
+  );
+}
+
+/** Active is the usual case and stays quiet. */
+function StateChip({ member, nowMs }: { member: Member; nowMs: number }) {
+  const words = useMemberWords();
+  const label = words.state(member, nowMs);
+  if (member.state === "active") {
+    return (
+      <Text variant="table" tone="ink2">
+        {label}
+      </Text>
+    );
+  }
+  if (member.state === "disabled") return <Chip tone="line" label={label} />;
+  if (hasEnded(member, nowMs)) return <Chip tone="look" label={label} />;
+  return <Chip icon="mail" label={label} />;
 }
 
 function ChangeButton({ member, onOpen }: Pick<MembersTableProps, "onOpen"> & { member: Member }) {
   const t = useWords("people");
+  const words = useMemberWords();
+  const phone = useBreakpoint() === "phone";
   if (!member.can.edit && !member.can.remove) return null;
   return (
     <Button
       kind="second"
-      size="dense"
+      size={phone ? "default" : "dense"}
       label={t("members.change")}
-      said={t("members.changeSaid", { name: member.name ?? member.email })}
+      said={t("members.changeSaid", { name: words.name(member) })}
       onPress={() => onOpen(member)}
     />
   );

@@ -1,62 +1,85 @@
-import { useMutation } from "@tanstack/react-query";
 import { useState } from "react";
 
 import { resetPassword } from "@shared/contracts/people";
-import { call, useErrorWords } from "@features/api";
+import { ApiError, call } from "@features/api";
 import { useWords } from "@features/i18n";
-import { Banner, Button, Form, TextLink } from "@features/ui";
+import { Banner, Button, Form, Text, useBreakpoint } from "@features/ui";
 
 import { EntryFrame } from "./entry-frame";
-import { useLinkSecret } from "./link-secret";
-import { NewPasswordFields } from "./new-password-fields";
+import { NewPasswordField } from "./new-password-field";
 import { passwordProblem } from "./password-rules";
 import { peoplePaths } from "./people-paths";
+import { useChange } from "./use-change";
+import { useLinkSecret } from "./use-link-secret";
 
 /** Where the link of a reset letter leads. */
 export function NewPasswordScreen() {
   const t = useWords("people");
-  const inWords = useErrorWords();
   const secret = useLinkSecret();
+  return (
+    <EntryFrame title={t("newPassword.title")}>
+      {secret === "" ? (
+        <AskAgain lead={t("newPassword.noSecretTitle")}>{t("newPassword.noSecret")}</AskAgain>
+      ) : (
+        // Another link opened in this tab starts afresh.
+        <NewPasswordForm key={secret} secret={secret} />
+      )}
+    </EntryFrame>
+  );
+}
+
+function AskAgain({ lead, children }: { lead: string; children: string }) {
+  const t = useWords("people");
+  return (
+    <>
+      <Banner kind="wrong" live lead={lead}>
+        {children}
+      </Banner>
+      <Button full label={t("newPassword.askAgain")} href={peoplePaths.forgottenPassword} />
+    </>
+  );
+}
+
+function NewPasswordForm({ secret }: { secret: string }) {
+  const t = useWords("people");
+  const size = useBreakpoint() === "phone" ? "field" : "default";
   const [password, setPassword] = useState("");
-  const [again, setAgain] = useState("");
   const [tried, setTried] = useState(false);
-  const reset = useMutation({
-    mutationFn: () => call(resetPassword, { body: { secret, newPassword: password } }),
+  const reset = useChange({
+    send: () => call(resetPassword, { body: { secret, newPassword: password } }),
+    fields: ["newPassword"],
   });
   const submit = () => {
     setTried(true);
-    if (passwordProblem(password, again) === null && !reset.isPending) reset.mutate();
+    if (passwordProblem(password) === null) reset.send(undefined);
   };
-  return (
-    <EntryFrame title={t("newPassword.title")} heading={t("newPassword.title")}>
-      {secret === "" ? (
-        <Banner kind="wrong" lead={t("entry.linkBroken")}>
-          {t("entry.linkBrokenDetail")}
+  if (reset.error instanceof ApiError && reset.error.status === 410) {
+    return <AskAgain lead={t("newPassword.goneTitle")}>{t("newPassword.gone")}</AskAgain>;
+  }
+  if (reset.done) {
+    return (
+      <>
+        <Banner kind="note" live lead={t("newPassword.doneTitle")}>
+          {t("newPassword.done")}
         </Banner>
-      ) : reset.isSuccess ? (
-        <>
-          <Banner kind="note" live lead={t("newPassword.done")}>
-            {t("newPassword.doneDetail")}
-          </Banner>
-          <Button label={t("signIn.do")} href={peoplePaths.signIn} full />
-        </>
-      ) : (
-        <Form
-          label={t("newPassword.title")}
-          onSubmit={submit}
-          errors={reset.error ? [inWords(reset.error)] : []}
-        >
-          <NewPasswordFields
-            password={password}
-            again={again}
-            onPassword={setPassword}
-            onAgain={setAgain}
-            tried={tried}
-          />
-          <Button submit full label={t("newPassword.do")} busy={reset.isPending} />
-        </Form>
-      )}
-      <TextLink label={t("forgotten.again")} href={peoplePaths.forgottenPassword} />
-    </EntryFrame>
+        <Button full size={size} label={t("newPassword.toSignIn")} href={peoplePaths.signIn} />
+      </>
+    );
+  }
+  return (
+    <Form label={t("newPassword.form")} onSubmit={submit} errors={reset.formErrors}>
+      <NewPasswordField
+        label={t("field.newPassword")}
+        size={size}
+        value={password}
+        onChange={setPassword}
+        tried={tried}
+        refused={reset.fieldError("newPassword")}
+      />
+      <Button submit full size={size} label={t("newPassword.submit")} busy={reset.busy} />
+      <Text variant="small" tone="ink3">
+        {t("newPassword.ends")}
+      </Text>
+    </Form>
   );
 }

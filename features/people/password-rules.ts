@@ -1,10 +1,9 @@
 import { newPassword } from "@shared/contracts/people";
 
-export type PasswordProblem = "tooShort" | "tooLong" | "notTheSame";
+const LEAST_CHARACTERS = 12;
 
-/** What is wrong with a new password typed twice; null when it will do. */
-export function passwordProblem(password: string, again: string): PasswordProblem | null {
-  if (password.length < 12) return "tooShort";
-  if (!newPassword.safeParse(password).success) return "tooLong";
-  return password === again ? null : "notTheSame";
+/** Why a password cannot be a new one; null when it can. The server has the last word. */
+export function passwordProblem(password: string): "passwordShort" | "passwordLong" | null {
+  if (password.length < LEAST_CHARACTERS) return "passwordShort";
+  return newPassword.safeParse(password).success ? null : "passwordLong";
 }

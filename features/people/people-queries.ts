@@ -1,43 +1,44 @@
-import { queryOptions } from "@tanstack/react-query";
+import { infiniteQueryOptions, queryOptions } from "@tanstack/react-query";
 
 import {
   listAccessTokens,
   listCaughtMail,
   listMembers,
   readInvitation,
-  type Member,
 } from "@shared/contracts/people";
 import { call } from "@features/api";
 
-/** Every member: an organisation's list is short, so its pages are read one after the other. */
-export const membersQuery = queryOptions({
-  queryKey: ["members"],
-  queryFn: async ({ signal }): Promise<Member[]> => {
-    const members: Member[] = [];
-    let cursor: string | undefined;
-    do {
-      const page = await call(listMembers, { query: { cursor, limit: 200 }, signal });
-      members.push(...page.items);
-      cursor = page.nextCursor ?? undefined;
-    } while (cursor !== undefined);
-    return members;
-  },
-});
+/** Without a network they fail at once instead of waiting unseen, so the screen can say so. */
+const networkMode = "always" as const;
 
-export const tokensQuery = queryOptions({
-  queryKey: ["access-tokens"],
-  queryFn: async ({ signal }) => (await call(listAccessTokens, { signal })).items,
-});
-
-export const mailQuery = queryOptions({
-  queryKey: ["development-mail"],
-  queryFn: async ({ signal }) => (await call(listCaughtMail, { signal })).items,
-});
-
-export const invitationQuery = (secret: string) =>
-  queryOptions({
-    queryKey: ["invitation", secret],
-    queryFn: ({ signal }) => call(readInvitation, { body: { secret }, signal }),
-    staleTime: Infinity,
-    retry: false,
-  });
+/** Every question the screens of people ask; the only home of their keys. */
+export const peopleQueries = {
+  members: infiniteQueryOptions({
+    queryKey: ["people", "members"],
+    queryFn: ({ pageParam, signal }) =>
+      call(listMembers, { query: pageParam === null ? {} : { cursor: pageParam }, signal }),
+    initialPageParam: null as string | null,
+    getNextPageParam: (page) => page.nextCursor,
+    networkMode,
+  }),
+  accessTokens: queryOptions({
+    queryKey: ["people", "access-tokens"],
+    queryFn: async ({ signal }) => (await call(listAccessTokens, { signal })).items,
+    networkMode,
+  }),
+  caughtMail: queryOptions({
+    queryKey: ["people", "caught-mail"],
+    queryFn: async ({ signal }) => (await call(listCaughtMail, { signal })).items,
+    networkMode,
+    staleTime: 0,
+  }),
+  /** The secret is a key in memory only, and forgotten with the page. */
+  invitation: (secret: string) =>
+    queryOptions({
+      queryKey: ["people", "invitation", secret],
+      queryFn: ({ signal }) => call(readInvitation, { body: { secret }, signal }),
+      networkMode,
+      staleTime: Infinity,
+      gcTime: 0,
+    }),
+};

@@ -2,12 +2,12 @@ import { role, type Role } from "@shared/contracts/people";
 import { useWords } from "@features/i18n";
 import type { Choice } from "@features/ui";
 
-/** The five roles, each with what it is for. */
+/** The five roles, each with what it may do in one sentence. */
 export function useRoleChoices(): Choice<Role>[] {
   const t = useWords("people");
   return role.options.map((value) => ({
     value,
     label: t(`role.${value}`),
-    detail: t(`roleDetail.${value}`),
+    detail: t(`roleMeans.${value}`),
   }));
 }

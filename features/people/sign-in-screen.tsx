@@ -1,81 +1,104 @@
-import { useMutation, useQueryClient } from "@tanstack/react-query";
 import { Redirect, useLocalSearchParams } from "expo-router";
 import { useState } from "react";
 import { View } from "react-native";
 
 import { signIn } from "@shared/contracts/people";
-import { call, sessionQuery, useErrorWords, useSession } from "@features/api";
+import { ApiError, call, NoAnswer, useOfflineSince, useSession } from "@features/api";
 import { useWords } from "@features/i18n";
-import { Button, Form, Text, TextField, useBreakpoint } from "@features/ui";
+import { Banner, Button, Form, Text, TextField, useBreakpoint } from "@features/ui";
 
+import { askedPage } from "./asked-page";
+import { emailProblem } from "./email-problem";
 import { EntryFrame } from "./entry-frame";
 import { peoplePaths } from "./people-paths";
-import { safeNext } from "./safe-next";
+import { useChange } from "./use-change";
+import { useEnter } from "./use-enter";
 
+/** Sign-in; leads on to the page that was asked for. */
 export function SignInScreen() {
   const t = useWords("people");
-  const client = useQueryClient();
-  const inWords = useErrorWords();
   const session = useSession();
-  const { next } = useLocalSearchParams<{ next?: string }>();
-  const size = useBreakpoint() === "phone" ? "field" : "default";
+  const { then } = useLocalSearchParams<{ then?: string }>();
+  if (session.data) return <Redirect href={askedPage(then)} />;
+  return (
+    <EntryFrame title={t("signIn.title")} isFront>
+      <SignInForm serverDown={session.data === undefined && isDown(session.error)} />
+    </EntryFrame>
+  );
+}
+
+/** Silence, or the server's own failure: nobody could sign in now. */
+function isDown(error: Error | null): boolean {
+  return error instanceof NoAnswer || (error instanceof ApiError && error.status >= 500);
+}
+
+function SignInForm({ serverDown }: { serverDown: boolean }) {
+  const t = useWords("people");
+  const enter = useEnter();
+  const offline = useOfflineSince() !== null;
+  const phone = useBreakpoint() === "phone";
+  const size = phone ? "field" : "default";
   const [email, setEmail] = useState("");
   const [password, setPassword] = useState("");
-  const [missing, setMissing] = useState(false);
-  const attempt = useMutation({
-    mutationFn: () => call(signIn, { body: { email: email.trim(), password } }),
-    onSuccess: (answer) => client.setQueryData(sessionQuery.queryKey, answer),
+  const [tried, setTried] = useState(false);
+  const attempt = useChange({
+    send: () => call(signIn, { body: { email: email.trim(), password } }),
+    onDone: enter,
   });
-
-  if (session.data) return <Redirect href={safeNext(next)} />;
+  const wrongEmail = emailProblem(email);
   const submit = () => {
-    const incomplete = email.trim() === "" || password === "";
-    setMissing(incomplete);
-    if (!incomplete && !attempt.isPending) attempt.mutate();
+    setTried(true);
+    if (wrongEmail === null && password !== "") attempt.send(undefined);
   };
+  const silent = attempt.error instanceof NoAnswer;
   return (
-    <EntryFrame title={t("signIn.title")}>
-      <Form
-        label={t("signIn.title")}
-        onSubmit={submit}
-        errors={attempt.error ? [inWords(attempt.error)] : []}
-      >
-        <TextField
-          label={t("field.email")}
-          kind="email"
-          name="email"
-          autoComplete="username"
+    <Form label={t("signIn.form")} onSubmit={submit} errors={silent ? [] : attempt.formErrors}>
+      {offline ? (
+        <Banner kind="note" icon="offline" live>
+          {t("signIn.offline")}
+        </Banner>
+      ) : silent || (serverDown && attempt.error === null) ? (
+        <Banner kind="wrong" live lead={t("signIn.serverDown")}>
+          {t("signIn.serverDownDo")}
+        </Banner>
+      ) : null}
+      <TextField
+        label={t("field.email")}
+        kind="email"
+        name="email"
+        autoComplete="username"
+        // On a phone the keyboard would cover the page before anybody has seen it.
+        autoFocus={!phone}
+        size={size}
+        value={email}
+        onChange={setEmail}
+        error={tried && wrongEmail ? t(`field.${wrongEmail}`) : null}
+        required
+      />
+      <TextField
+        label={t("field.password")}
+        kind="password"
+        name="password"
+        autoComplete="current-password"
+        size={size}
+        value={password}
+        onChange={setPassword}
+        error={tried && password === "" ? t("field.passwordMissing") : null}
+        required
+      />
+      <View style={{ gap: 12, marginTop: 4 }}>
+        <Button submit full size={size} label={t("signIn.submit")} busy={attempt.busy} />
+        <Button
+          kind="second"
+          full
           size={size}
-          value={email}
-          onChange={setEmail}
-          error={missing && email.trim() === "" ? t("field.emailNeeded") : null}
-          required
+          label={t("signIn.forgotten")}
+          href={peoplePaths.forgottenPassword}
         />
-        <TextField
-          label={t("field.password")}
-          kind="password"
-          name="password"
-          autoComplete="current-password"
-          size={size}
-          value={password}
-          onChange={setPassword}
-          error={missing && password === "" ? t("field.passwordNeeded") : null}
-          required
-        />
-        <View style={{ gap: 12, marginTop: 4 }}>
-          <Button submit full size={size} label={t("signIn.do")} busy={attempt.isPending} />
-          <Button
-            kind="second"
-            full
-            size={size}
-            label={t("signIn.forgotten")}
-            href={peoplePaths.forgottenPassword}
-          />
-        </View>
-        <Text variant="small" tone="ink3">
-          {t("signIn.trouble")}
-        </Text>
-      </Form>
-    </EntryFrame>
+      </View>
+      <Text variant="small" tone="ink3">
+        {t("signIn.noAccount")}
+      </Text>
+    </Form>
   );
 }

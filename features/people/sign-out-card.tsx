@@ -1,43 +1,56 @@
 import { useState } from "react";
+import { View } from "react-native";
 
-import type { Session } from "@shared/contracts/people";
-import { useErrorWords } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Banner, Button, Card, Dialog, Row, Text } from "@features/ui";
 
 import { useSignOut } from "./use-sign-out";
 
-export function SignOutCard({ session }: { session: Session }) {
+export function SignOutCard({ keepsTokens }: { keepsTokens: boolean }) {
   const t = useWords("people");
-  const inWords = useErrorWords();
   const [asking, setAsking] = useState(false);
   const leave = useSignOut();
+  const error = leave.formErrors.join(" ");
   return (
-    <Card pad={5} label={t("signOut.title")}>
-      <Text variant="heading">{t("signOut.title")}</Text>
+    <Card pad={5} label={t("settings.leaveTitle")}>
+      <Text variant="heading">{t("settings.leaveTitle")}</Text>
       <Text tone="ink2" style={{ marginBottom: 14 }}>
-        {t("signOut.who", { name: session.account.name, organisation: session.organisation.name })}
+        {t("settings.leaveDetail")}
       </Text>
-      {leave.error ? <Banner kind="wrong">{inWords(leave.error)}</Banner> : null}
+      {error && !asking ? (
+        <View style={{ marginBottom: 14 }}>
+          <Banner kind="wrong" live>
+            {error}
+          </Banner>
+        </View>
+      ) : null}
       <Row gap={3} wrap>
         <Button
           kind="second"
           icon="signOut"
-          label={t("signOut.here")}
-          busy={leave.isPending}
-          onPress={() => leave.mutate("here")}
+          label={t("settings.signOut")}
+          busy={leave.busy}
+          onPress={() => leave.send("here")}
         />
-        <Button kind="quiet" label={t("signOut.everywhere")} onPress={() => setAsking(true)} />
+        <Button kind="quiet" label={t("settings.everywhere")} onPress={() => setAsking(true)} />
       </Row>
       <Dialog
         open={asking}
-        title={t("signOut.everywhereTitle")}
-        confirmLabel={t("signOut.everywhere")}
-        busy={leave.isPending}
-        onConfirm={() => leave.mutate("everywhere")}
+        title={t("settings.everywhereTitle")}
+        confirmLabel={t("settings.everywhere")}
+        busy={leave.busy}
+        onConfirm={() => leave.send("everywhere")}
         onClose={() => setAsking(false)}
       >
-        {t("signOut.everywhereDetail")}
+        <Text tone="ink2">
+          {t("settings.everywhereDetail")}
+          {keepsTokens ? ` ${t("settings.everywhereTokens")}` : null}
+        </Text>
+        {error ? (
+          <Banner kind="wrong" live>
+            {error}
+          </Banner>
+        ) : null}
       </Dialog>
     </Card>
   );

@@ -6,19 +6,30 @@ export function ThemeCard() {
   const t = useWords("people");
   const { choice, choose } = useThemeChoice();
   return (
-    <Card pad={5} label={t("theme.title")}>
+    <Card pad={5} label={t("settings.themeTitle")}>
       <Text variant="heading" style={{ marginBottom: 12 }}>
-        {t("theme.title")}
+        {t("settings.themeTitle")}
       </Text>
       <ChoiceTiles<ThemeChoice>
-        label={t("theme.label")}
+        label={t("settings.theme")}
         labelHidden
-        columns={3}
         value={choice}
         choices={[
-          { value: "system", label: t("theme.system"), detail: t("theme.systemDetail") },
-          { value: "light", label: t("theme.light"), detail: t("theme.lightDetail") },
-          { value: "plantRoom", label: t("theme.plantRoom"), detail: t("theme.plantRoomDetail") },
+          {
+            value: "system",
+            label: t("settings.themeSystem"),
+            detail: t("settings.themeSystemDetail"),
+          },
+          {
+            value: "light",
+            label: t("settings.themeLight"),
+            detail: t("settings.themeLightDetail"),
+          },
+          {
+            value: "plantRoom",
+            label: t("settings.themePlantRoom"),
+            detail: t("settings.themePlantRoomDetail"),
+          },
         ]}
         onChange={choose}
       />

@@ -4,6 +4,7 @@ import { View } from "react-native";
 
 import type { Session } from "@shared/contracts/people";
 import { NoAnswer, useSession } from "@features/api";
+import { peoplePaths } from "@features/people/people-paths";
 import { usePreferences } from "@features/i18n";
 import { ErrorState, LoadingBlocks, OfflineState, useBreakpoint, useTheme } from "@features/ui";
 
@@ -28,8 +29,7 @@ export function SignedInLayout() {
 
   if (session.data) return <Frame session={session.data} path={path} />;
   if (session.data === null) {
-    const next = path === "/" ? "" : `?next=${encodeURIComponent(path)}`;
-    return <Redirect href={`/sign-in${next}`} />;
+    return <Redirect href={peoplePaths.signInThen(askedAddress(path))} />;
   }
   return (
     <Alone>
@@ -42,6 +42,11 @@ export function SignedInLayout() {
       )}
     </Alone>
   );
+}
+
+/** The address asked for, its query too, so that a shared link opens at the same week. */
+function askedAddress(path: string): string {
+  return `${path}${globalThis.location?.search ?? ""}`;
 }
 
 function Alone({ children }: { children: ReactNode }) {

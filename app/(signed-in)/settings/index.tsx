@@ -1,1 +1,1 @@
-export { SettingsScreen as default } from "@features/people/settings-screen";
+export { AccountScreen as default } from "@features/people/account-screen";

@@ -1,1 +1,1 @@
-export { MailScreen as default } from "@features/people/mail-screen";
+export { CaughtMailScreen as default } from "@features/people/caught-mail-screen";

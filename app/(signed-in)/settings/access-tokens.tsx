@@ -1,0 +1,1 @@
+export { AccessTokensScreen as default } from "@features/people/access-tokens-screen";

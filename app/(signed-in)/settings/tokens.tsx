@@ -1,1 +1,0 @@
-export { TokensScreen as default } from "@features/people/tokens-screen";
