@@ -1,0 +1,64 @@
+/** Where the parts of the loop chart lie, in px from the frame's top left. */
+export interface ChartLayout {
+  readonly width: number;
+  readonly height: number;
+  readonly left: number;
+  readonly right: number;
+  readonly temperature: { readonly top: number; readonly bottom: number };
+  readonly flow: { readonly top: number; readonly bottom: number };
+  readonly quality: { readonly top: number; readonly bottom: number };
+  /** Baseline of the days' names. */
+  readonly dayBaseline: number;
+  /** Baselines of the energy under each column; empty on a phone, where the days have a list. */
+  readonly energyBaselines: readonly number[];
+  readonly ruleY: number | null;
+  /** Names of the curves at the right end. */
+  readonly named: boolean;
+  readonly cursorTop: number;
+  /** Narrowest column that is worth drawing, px. */
+  readonly leastColumn: number;
+}
+
+/** Under this width the chart drops the names at its right and the energy under the days. */
+const NARROW = 560;
+
+/** @param registers how many energies stand under each column: 1, or 2 on a changeover loop. */
+export function chartLayout(width: number, registers: 1 | 2): ChartLayout {
+  if (width < NARROW) {
+    return {
+      width,
+      height: 252,
+      left: 30,
+      right: Math.max(31, width - 6),
+      temperature: { top: 12, bottom: 149 },
+      flow: { top: 165, bottom: 208 },
+      quality: { top: 218, bottom: 224 },
+      dayBaseline: 246,
+      energyBaselines: [],
+      ruleY: null,
+      named: false,
+      cursorTop: 4,
+      leastColumn: 3.5,
+    };
+  }
+  const energyBaselines = registers === 1 ? [396] : [396, 418];
+  return {
+    width,
+    height: (energyBaselines.at(-1) ?? 396) + 8,
+    left: 38,
+    right: width - 64,
+    temperature: { top: 34, bottom: 245 },
+    flow: { top: 265, bottom: 327 },
+    quality: { top: 337, bottom: 344 },
+    dayBaseline: 366,
+    energyBaselines,
+    ruleY: 375,
+    named: true,
+    cursorTop: 26,
+    leastColumn: 2,
+  };
+}
+
+export function plotWidth({ left, right }: ChartLayout): number {
+  return right - left;
+}

@@ -1,0 +1,283 @@
+import { useId, useMemo, useState } from "react";
+import { View } from "react-native";
+
+import type { Interval } from "@shared/domain/time/interval";
+import { useWords, type Format } from "@features/i18n";
+import {
+  Banner,
+  Row,
+  serviceColours,
+  Text,
+  TextLink,
+  useMeasuredWidth,
+  useTheme,
+  VisuallyHidden,
+  type Service,
+} from "@features/ui";
+
+import { ChartCursor } from "./chart-cursor";
+import type { ChartDay } from "./chart-days";
+import { ChartFrame } from "./chart-frame";
+import { chartLayout, plotWidth } from "./chart-layout";
+import { columnAt, nearestColumn, type ChartSeries } from "./chart-series";
+import { ChartSurface } from "./chart-surface";
+import { chartUnits } from "./chart-units";
+import { columnLabels } from "./column-labels";
+import { cursorPlace, cursorReading, useCursorText } from "./cursor-reading";
+import { plotPicture, type PictureOptions } from "./plot-picture";
+import { usePlotDoor } from "./plot-door";
+import { useChartSeries, type LoadSeries } from "./use-chart-series";
+import { useChartView } from "./use-chart-view";
+import { flowAxis, temperatureAxis } from "./value-axis";
+import { leastView } from "./view-window";
+
+export interface LoopChartProps {
+  /** Names the chart: “Supply, return and flow, CHW-1B”. */
+  label: string;
+  /** One sentence that says what the picture shows. */
+  summary: string;
+  service: PictureOptions["service"];
+  range: Interval;
+  zone: string;
+  format: Format;
+  days: readonly ChartDay[];
+  load: LoadSeries;
+}
+
+const tagServices = { chilled: "cooling", hot: "heating", changeover: "changeover" } as const;
+
+/**
+ * Supply, return and flow over time. Give it a `key` of the point and the range: another range is
+ * another chart. The frame stands at once; the curves come when Skia is there.
+ */
+export function LoopChart(props: LoopChartProps) {
+  const [width, onLayout] = useMeasuredWidth();
+  const { height } = chartLayout(width || 806, props.service === "changeover" ? 2 : 1);
+  return (
+    <View onLayout={onLayout} style={{ minHeight: height, alignSelf: "stretch" }}>
+      {width > 0 ? <MeasuredChart {...props} width={width} /> : null}
+    </View>
+  );
+}
+
+function MeasuredChart(props: LoopChartProps & { width: number }) {
+  const { service, range, zone, format, days, load, width } = props;
+  const t = useWords("charts");
+  const hintId = useId();
+  const layout = useMemo(
+    () => chartLayout(width, service === "changeover" ? 2 : 1),
+    [width, service],
+  );
+  const units = useMemo(() => chartUnits(format), [format]);
+  const [nominalStepS, setStep] = useState<number | null>(null);
+  const chart = useChartView(range, leastView(nominalStepS));
+  const { view } = chart;
+  // What a column of the least width needs is what the server is asked for.
+  const pixels = Math.floor((plotWidth(layout) / layout.leastColumn) * 2);
+  const loaded = useChartSeries({ range, view, pixels, units, load });
+  const { overview, shown } = loaded;
+  if (overview && overview.nominalStepS !== nominalStepS) setStep(overview.nominalStepS);
+  const temperature = useMemo(
+    () => temperatureAxis(overview?.temperatureExtent ?? null),
+    [overview],
+  );
+  const flow = useMemo(() => flowAxis(overview?.flowExtent ?? null), [overview]);
+  const picture = useMemo(
+    () => shown && plotPicture({ series: shown, view, layout, temperature, flow, service }),
+    [shown, view, layout, temperature, flow, service],
+  );
+  const registers = useMemo(
+    () =>
+      service === "changeover"
+        ? (["heating", "cooling"] as const)
+        : ([service === "hot" ? "heating" : "cooling"] as const),
+    [service],
+  );
+  const labels = useMemo(
+    () =>
+      columnLabels({
+        view,
+        zone,
+        layout,
+        days,
+        registers,
+        format,
+        weekName: (week) => t("week", { week }),
+      }),
+    [view, zone, layout, days, registers, format, t],
+  );
+  const column = shown && chart.cursorMs !== null ? nearestColumn(shown, chart.cursorMs) : null;
+  const reading = shown && column !== null ? cursorReading(shown, column) : null;
+  const text = useCursorText(reading, format, layout.named);
+  const names = useMemo(
+    () => ({
+      supply: t("supply"),
+      return: t("return"),
+      flow: t("flow"),
+      quality: t("quality"),
+      temperatureUnit: units.temperature.unit,
+      flowUnit: units.flow.unit,
+      energyUnits: registers.map((register) =>
+        register === "heating" ? units.heatingEnergy.unit : units.coolingEnergy.unit,
+      ),
+    }),
+    [t, units, registers],
+  );
+  return (
+    <View style={{ gap: 6 }}>
+      <ChartSurface
+        label={t("surface", { name: props.label })}
+        describedBy={hintId}
+        height={layout.height}
+        gestures={{
+          plotLeft: layout.left,
+          plotWidth: plotWidth(layout),
+          canPan: !chart.whole,
+          onPoint: chart.moveTo,
+          onLeave: chart.clearCursor,
+          onPan: chart.pan,
+          onZoom: chart.zoom,
+          onPinch: chart.pinch,
+          onKey: (key, shift) => chart.key(key, shift, shown),
+          onFocusChange: () => undefined,
+        }}
+      >
+        <View role="img" aria-label={props.summary} style={{ height: layout.height }}>
+          <ChartFrame
+            layout={layout}
+            view={view}
+            temperature={temperature}
+            flow={flow}
+            labels={labels}
+            quality={shown?.quality ?? []}
+            names={names}
+            ends={curveEnds(shown, view, temperature, layout)}
+            service={tagServices[service]}
+            format={format}
+          />
+          <Curves
+            picture={picture}
+            left={layout.left}
+            top={layout.temperature.top}
+            large={layout.named}
+          />
+          {reading && text ? (
+            <View style={{ position: "absolute", left: 0, top: 0, pointerEvents: "none" }}>
+              <ChartCursor
+                layout={layout}
+                text={text.short}
+                {...cursorPlace(reading, { view, layout, temperature })}
+              />
+            </View>
+          ) : null}
+        </View>
+      </ChartSurface>
+      <VisuallyHidden id={hintId}>{t("keys")}</VisuallyHidden>
+      <View role="status" aria-live="polite">
+        <VisuallyHidden>{text?.long ?? ""}</VisuallyHidden>
+      </View>
+      <ChartNote
+        series={shown}
+        format={format}
+        whole={chart.whole}
+        onShowAll={chart.showAll}
+        onZoom={(factor) => chart.zoom(factor, 0.5)}
+      />
+      {loaded.failed ? (
+        <Banner
+          kind="look"
+          lead={t("notLoaded")}
+          action={<TextLink label={t("again")} onPress={loaded.retry} />}
+          live
+        />
+      ) : null}
+    </View>
+  );
+}
+
+/** The last value of each curve in the view, as a height for its name. */
+function curveEnds(
+  series: ChartSeries | null,
+  view: Interval,
+  axis: ReturnType<typeof temperatureAxis>,
+  layout: ReturnType<typeof chartLayout>,
+) {
+  if (!series) return { supply: null, return: null };
+  for (let i = series.startMs.length - 1; i >= 0; i--) {
+    const at = columnAt(series, i);
+    if (at > view.endMs || Number.isNaN(series.supply[i]) || Number.isNaN(series.return[i]))
+      continue;
+    if (at < view.startMs) break;
+    const { marks } = cursorPlace(cursorReading(series, i), { view, layout, temperature: axis });
+    return { supply: marks[0] ?? null, return: marks[1] ?? null };
+  }
+  return { supply: null, return: null };
+}
+
+/** The drawn part: empty, of the drawn size, until Skia is there; a word where it cannot come. */
+function Curves(props: {
+  picture: ReturnType<typeof plotPicture> | null;
+  left: number;
+  top: number;
+  large: boolean;
+}) {
+  const { Plot, failed, retry } = usePlotDoor();
+  const t = useWords("charts");
+  const { colour } = useTheme();
+  const colours = useMemo(() => {
+    const of = (service: Service) => {
+      const hues = serviceColours(service, colour);
+      return { supply: hues.main, return: hues.mid, fill: hues.tint };
+    };
+    return { cooling: of("cooling"), heating: of("heating"), bars: colour.slate };
+  }, [colour]);
+  const place = { position: "absolute", left: props.left, top: props.top } as const;
+  if (failed)
+    return (
+      <View style={{ ...place, right: 64, top: props.top + 40 }}>
+        <Banner
+          kind="look"
+          lead={t("noDrawing")}
+          action={<TextLink label={t("again")} onPress={retry} />}
+          live
+        >
+          {t("noDrawingDetail")}
+        </Banner>
+      </View>
+    );
+  if (!Plot || !props.picture) return null;
+  return (
+    <View style={{ ...place, pointerEvents: "none" }}>
+      <Plot picture={props.picture} colours={colours} large={props.large} />
+    </View>
+  );
+}
+
+function ChartNote(props: {
+  series: ChartSeries | null;
+  format: Format;
+  whole: boolean;
+  onShowAll: () => void;
+  onZoom: (factor: number) => void;
+}) {
+  const t = useWords("charts");
+  const { series, format } = props;
+  if (!series) return null;
+  const step = series.nominalStepS === null ? null : format.duration(series.nominalStepS);
+  const note =
+    step === null
+      ? ""
+      : series.averagedOverS === null || series.averagedOverS <= (series.nominalStepS ?? 0)
+        ? t("note.rows", { step })
+        : t("note.means", { step, over: format.duration(series.averagedOverS) });
+  return (
+    <Row gap={4} justify="flex-end" wrap>
+      {props.whole ? null : (
+        <TextLink variant="small" label={t("showAll")} onPress={props.onShowAll} />
+      )}
+      <Text variant="chip" tone="ink3">
+        {note}
+      </Text>
+    </Row>
+  );
+}
