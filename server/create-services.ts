@@ -1,3 +1,6 @@
+import { FolderFileStore } from "./files/folder-file-store";
+import { JobRunner } from "./jobs/job-runner";
+import { createJobThreads } from "./jobs/job-threads";
 import { createPasswords } from "./security/passwords";
 import type { Services } from "./services";
 
@@ -5,11 +8,19 @@ type Given = Pick<Services, "config" | "database" | "clock" | "log">;
 
 /** Makes what lives as long as the process around a connected, migrated database. */
 export async function createServices(given: Given): Promise<Services> {
-  return { ...given, passwords: createPasswords(given.config.passwordCost) };
+  const { config, database, clock, log } = given;
+  const threads = createJobThreads({ databaseUrl: config.databaseUrl, dataDir: config.dataDir });
+  return {
+    ...given,
+    passwords: createPasswords(config.passwordCost),
+    files: new FolderFileStore(config.dataDir),
+    jobs: new JobRunner(database, threads, clock, log),
+  };
 }
 
 /** Lets go of everything in the reverse order; the database last. */
 export async function closeServices(services: Services): Promise<void> {
+  await services.jobs.stop();
   await services.passwords.close();
   await services.database.close();
 }

@@ -12,8 +12,11 @@ import type { SeriesKind } from "@shared/domain/readings/reading-columns";
 import { idColumn, instantColumn, reference } from "./columns";
 import { optionalJson } from "./json-column";
 
-/** What recognition found besides the recipe and the questions, which change with the answers. */
-export type RecognitionFindings = Omit<Recognition, "recipe" | "questions">;
+/** What recognition found besides the recipe, which changes with the answers. */
+export interface RecognitionFindings extends Omit<Recognition, "recipe" | "questions"> {
+  /** Everything it asked; `questions` of the file are those that are still open. */
+  readonly asked: readonly Question[];
+}
 
 /** A logger's file as it came: its bytes are in the file store under their hash. */
 export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttributes<LogFile>> {

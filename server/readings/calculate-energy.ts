@@ -17,38 +17,39 @@ export interface CalculatedEnergy {
 }
 
 /**
- * Energy of resolved readings within whole local days, or null where the loop's fluid gives none.
- * The check before an import, the import itself and a recalculation all come through here.
+ * Energy of resolved readings within whole local days, or only `within` a part of them; null where
+ * the loop's fluid gives none. The check before an import, the import itself and a recalculation all come through here.
  */
 export function calculateEnergy(
   segments: readonly ReadingSegment[],
   settings: EnergySettings,
   days: readonly LocalDay[],
+  within?: Interval,
 ): CalculatedEnergy | null {
   const options = powerOptionsOf(settings);
   const first = days[0];
   const last = days[days.length - 1];
   if (!options || !first || !last) return null;
-  const window: Interval = { startMs: first.startMs, endMs: last.endMs };
+  const window: Interval = within ?? { startMs: first.startMs, endMs: last.endMs };
   const intervals = integrateEnergy(segments, { ...options, window });
   let outsideWaterRows = 0;
   const outsideWater: OutsideWater[] = [];
   const byDay = new Map<string, number>();
   for (const { columns } of segments) {
-    const within = sliceColumns(
+    const rows = sliceColumns(
       columns,
       indexFrom(columns.instantMs, window.startMs),
       indexFrom(columns.instantMs, window.endMs),
     );
-    const found = rowsOutsideWater(within, options.water);
+    const found = rowsOutsideWater(rows, options.water);
     if (found.count === 0) continue;
     outsideWaterRows += found.count;
     outsideWater.push(...found.examples.slice(0, 20 - outsideWater.length));
     for (const day of days) {
-      const from = indexFrom(within.instantMs, day.startMs);
-      const to = indexFrom(within.instantMs, day.endMs);
+      const from = indexFrom(rows.instantMs, day.startMs);
+      const to = indexFrom(rows.instantMs, day.endMs);
       if (from === to) continue;
-      const { count } = rowsOutsideWater(sliceColumns(within, from, to), options.water, 0);
+      const { count } = rowsOutsideWater(sliceColumns(rows, from, to), options.water, 0);
       if (count > 0) byDay.set(day.date, (byDay.get(day.date) ?? 0) + count);
     }
   }

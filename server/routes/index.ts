@@ -3,6 +3,7 @@ import { accessTokenRoutes } from "./access-token-routes";
 import { accountRoutes } from "./account-routes";
 import { developmentRoutes } from "./development-routes";
 import { energyRoutes } from "./energy-routes";
+import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
 import { placesRoutes } from "./places-routes";
 import { sessionRoutes } from "./session-routes";
@@ -17,6 +18,7 @@ const productEndpoints: readonly Endpoint[] = [
   ...accessTokenRoutes,
   ...developmentRoutes,
   ...placesRoutes,
+  ...importRoutes,
   ...energyRoutes,
   ...todayRoutes,
 ];

@@ -35,4 +35,11 @@ export const backgroundServices: readonly BackgroundService[] = [
     },
   },
   { name: "mail delivery", start: async (services) => startDeliveryLoop(services) },
+  {
+    name: "jobs",
+    async start({ jobs }) {
+      jobs.start();
+      return { stop: () => jobs.stop() };
+    },
+  },
 ];

@@ -2,6 +2,7 @@ import { AccessToken } from "@server/models/access-token";
 import { Building } from "@server/models/building";
 import { secretHash } from "@server/security/secrets";
 import { person, type Person } from "./factories";
+import { recognisedImport } from "./import-factories";
 import { pointToMeter } from "./place-factories";
 import type { TestApp } from "./test-app";
 
@@ -33,12 +34,18 @@ const places: MakeIds = async (app, { organisationId }) => {
   return { siteId: site.id, loopId: loop.id, pointId: point.id, buildingId: building.id };
 };
 
+const logs: MakeIds = async (app, { organisationId }) => {
+  const { point } = await pointToMeter(app, organisationId);
+  const { row, file } = await recognisedImport(app, { organisationId, pointId: point.id });
+  return { importId: row.id, fileId: file.id };
+};
+
 /**
  * Makes one row of everything whose id stands in a path of the API, and answers the ids by the
  * path's parameter name. A new `:xId` needs a line here: the tenancy test asks for it.
  */
 export async function ownedIds(app: TestApp, owner: Person): Promise<Record<string, string>> {
-  const families = [people, places];
+  const families = [people, places, logs];
   const ids = [];
   for (const make of families) ids.push(await make(app, owner));
   return Object.assign({}, ...ids) as Record<string, string>;

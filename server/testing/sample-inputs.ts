@@ -1,3 +1,5 @@
+import { plainRecipe } from "./import-factories";
+
 /** What an endpoint takes beside its ids, filled in so that validation lets it through. */
 export interface SampleInput {
   readonly query?: Readonly<Record<string, string>>;
@@ -25,4 +27,7 @@ export const sampleInputs: Readonly<Record<string, SampleInput>> = {
   downloadIntervals: { query: instants },
   downloadReadings: { query: instants },
   getDayMarks: { query: days },
+  addImportFile: { file: "time,flow\n2026-02-02 00:00,1.0\n" },
+  chooseRecipe: { body: plainRecipe },
+  chooseRepairs: { body: { overlap: "useThis" } },
 };

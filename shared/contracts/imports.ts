@@ -232,6 +232,18 @@ export const importChecks = z.object({
   }),
   /** Rows whose flow instant found no temperature within two steps. */
   rowsWithoutTemperature: z.number().int(),
+  /** Measured rows at temperatures liquid water cannot have: stored, but they give no energy. */
+  rowsOutsideWater: z.number().int().optional(),
+  outsideWaterExamples: z
+    .array(
+      z.object({
+        instant,
+        channel: z.enum(["supply", "return"]),
+        valueC: z.number().nullable(),
+        reason: z.string(),
+      }),
+    )
+    .optional(),
   energy: z
     .object({
       heatingKwh: z.number(),

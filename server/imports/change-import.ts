@@ -1,0 +1,334 @@
+import { Op, type Transaction } from "sequelize";
+import { MAX_FILES_PER_IMPORT } from "@shared/contracts/imports";
+import {
+  DEFAULT_REPAIR_CHOICES,
+  type FileRecipe,
+  type RepairChoices,
+} from "@shared/domain/log-files/recipe";
+import { recordAudit } from "@server/commands/record-audit";
+import { inTransaction } from "@server/database/transaction";
+import type { Context } from "@server/http/context";
+import { Conflict, Denied, Invalid, NotFound } from "@server/http/errors";
+import { cancelJobs, enqueueJob } from "@server/jobs/job-queue";
+import { LogFile } from "@server/models/log-file";
+import { LogImport } from "@server/models/log-import";
+import { MeteringPoint } from "@server/models/metering-point";
+import { can } from "@server/policies/can";
+import { isCancellable, isEditable, isReopenable } from "./import-states";
+import { questionsLeftBy } from "./open-questions";
+import type { ReceivedFile } from "./receive-log-file";
+import { recipeProblems } from "./recipe-problems";
+import { filesOf, move, settleImport, stopChecks } from "./settle-import";
+
+/** Opens an import for a point in use. */
+export async function openImport(context: Context, pointId: string): Promise<LogImport> {
+  const { scope, actor, clock, database } = context;
+  const point = await scope.get(MeteringPoint, pointId, "metering point");
+  if (point.archivedAt !== null)
+    throw new Conflict(
+      "point-archived",
+      "This metering point is archived.",
+      "Take it back into use before bringing in readings.",
+    );
+  return inTransaction(database, async (transaction) => {
+    const row = await scope.create(
+      LogImport,
+      {
+        pointId,
+        state: "open",
+        repair: DEFAULT_REPAIR_CHOICES,
+        createdByAccountId: actor.accountId,
+        createdByName: actor.accountName,
+        createdAt: clock.date(),
+      },
+      { transaction },
+    );
+    await audit(context, "import-opened", row, {}, transaction);
+    // What was not given is null in the database and missing here: read it back.
+    return row.reload({ transaction });
+  });
+}
+
+/** Loads the import under its lock, lets `work` change it and tells the job runner. */
+async function change(
+  context: Context,
+  importId: string,
+  work: (row: LogImport, transaction: Transaction) => Promise<void>,
+): Promise<LogImport> {
+  const row = await inTransaction(context.database, async (transaction) => {
+    const found = await context.scope.get(LogImport, importId, "import", {
+      lock: transaction.LOCK.UPDATE,
+      transaction,
+    });
+    await work(found, transaction);
+    return found;
+  });
+  context.services.jobs.poke();
+  return row;
+}
+
+function requireEditable(row: LogImport): void {
+  if (isEditable(row.state)) return;
+  throw new Conflict(
+    "import-not-editable",
+    `This import is ${row.state}: its files and choices cannot change now.`,
+    isReopenable(row.state) ? "Take it up again first." : "Undo it first, then change it.",
+  );
+}
+
+export async function addFile(
+  context: Context,
+  importId: string,
+  received: ReceivedFile,
+): Promise<LogImport> {
+  return change(context, importId, async (row, transaction) => {
+    requireEditable(row);
+    const present = await filesOf(row, transaction);
+    if (present.length >= MAX_FILES_PER_IMPORT)
+      throw new Conflict(
+        "too-many-files",
+        `An import takes up to ${MAX_FILES_PER_IMPORT} files.`,
+        "Finish this import and open another one for the rest.",
+      );
+    const twin = present.find(({ sha256 }) => sha256 === received.sha256);
+    if (twin)
+      throw new Conflict(
+        "file-already-there",
+        `This import already holds the same file, as ${twin.name}.`,
+        "Choose another file, or go on with this one.",
+      );
+    await stopChecks(context.database, transaction, row);
+    const { organisationId, pointId } = row;
+    const file = await context.scope.create(
+      LogFile,
+      { importId: row.id, pointId, uploadedAt: context.clock.date(), ...received },
+      { transaction },
+    );
+    await enqueueJob(context.database, transaction, {
+      organisationId,
+      kind: "recognise",
+      pointId,
+      importId: row.id,
+      logFileId: file.id,
+    });
+    await settleImport(context.database, transaction, row);
+    const details = { name: file.name, sha256: file.sha256, bytes: file.byteLength };
+    await audit(context, "log-file-added", row, details, transaction);
+  });
+}
+
+async function fileOf(
+  context: Context,
+  row: LogImport,
+  fileId: string,
+  transaction: Transaction,
+): Promise<LogFile> {
+  const file = await context.scope.get(LogFile, fileId, "file", { transaction });
+  if (file.importId !== row.id) throw new NotFound("file");
+  return file;
+}
+
+export async function removeFile(
+  context: Context,
+  importId: string,
+  fileId: string,
+): Promise<LogImport> {
+  const changed = await change(context, importId, async (row, transaction) => {
+    requireEditable(row);
+    const file = await fileOf(context, row, fileId, transaction);
+    const { id: ofImport } = row;
+    await cancelJobs(context.database, transaction, { importId: ofImport, logFileId: fileId });
+    await stopChecks(context.database, transaction, row);
+    await file.destroy({ transaction });
+    await settleImport(context.database, transaction, row);
+    await audit(context, "log-file-removed", row, { name: file.name }, transaction);
+  });
+  context.services.jobs.dropImport(importId);
+  return changed;
+}
+
+/** Sets how a file is read; the import goes on by itself once nothing is left to ask. */
+export async function giveRecipe(
+  context: Context,
+  importId: string,
+  fileId: string,
+  recipe: FileRecipe,
+): Promise<LogImport> {
+  return change(context, importId, async (row, transaction) => {
+    requireEditable(row);
+    const file = await fileOf(context, row, fileId, transaction);
+    const { recognition } = file;
+    if (recognition === null)
+      throw new Conflict(
+        "file-not-recognised",
+        file.unreadable ? "This file cannot be read at all." : "This file is still being read.",
+        file.unreadable ? "Take it out and export the log anew." : "Wait until it is recognised.",
+      );
+    const problems = recipeProblems(recipe, recognition.columnCount);
+    if (problems.length > 0) throw new Invalid(problems);
+    await stopChecks(context.database, transaction, row);
+    await file.update({ recipe, questions: questionsLeftBy(recipe, recognition) }, { transaction });
+    await settleImport(context.database, transaction, row);
+    await audit(context, "recipe-chosen", row, { file: file.name, recipe }, transaction);
+  });
+}
+
+export async function giveRepairs(
+  context: Context,
+  importId: string,
+  choices: Partial<RepairChoices>,
+): Promise<LogImport> {
+  return change(context, importId, async (row, transaction) => {
+    requireEditable(row);
+    await stopChecks(context.database, transaction, row);
+    row.repair = { ...row.repair, ...choices };
+    await settleImport(context.database, transaction, row);
+    await audit(context, "repairs-chosen", row, { choices }, transaction);
+  });
+}
+
+/** Checks again. One that is under way already serves; one that is refused says what is open. */
+export async function startCheck(context: Context, importId: string): Promise<LogImport> {
+  return change(context, importId, async (row, transaction) => {
+    if (row.state === "checking") return;
+    requireEditable(row);
+    const files = await filesOf(row, transaction);
+    const open = files.find(({ questions }) => (questions ?? []).length > 0);
+    const unread = files.find(({ recognition }) => recognition === null);
+    if (files.length === 0) throw new Conflict("no-file", "There is no file yet.", "Add one.");
+    if (unread)
+      throw new Conflict(
+        "file-not-recognised",
+        `${unread.name} ${unread.unreadable ? "cannot be read" : "is still being read"}.`,
+        unread.unreadable ? "Take it out of the import." : "Wait until it is recognised.",
+      );
+    if (open)
+      throw new Conflict(
+        "questions-open",
+        `${open.name} still has a question that only you can answer.`,
+        "Give its recipe with every answer; the import names the questions.",
+      );
+    await settleImport(context.database, transaction, row);
+  });
+}
+
+/** Starts storing. @throws Conflict while anything is undecided or the same file is in already. */
+export async function confirm(context: Context, importId: string): Promise<LogImport> {
+  return change(context, importId, async (row, transaction) => {
+    if (row.state !== "ready")
+      throw new Conflict(
+        row.state === "asking" ? "choices-open" : "import-not-ready",
+        row.state === "asking"
+          ? "A question or a choice of this import is still open."
+          : `This import is ${row.state}, not ready to be stored.`,
+        "Make every choice, let the check pass, then confirm.",
+      );
+    const [twin] = await sameFiles(row, await filesOf(row, transaction), transaction);
+    if (twin)
+      throw new Conflict(
+        "same-file-imported",
+        `${twin.file.name} is stored already: it came in as ${twin.earlier.name}.`,
+        "Undo the earlier import first, or leave this file out.",
+      );
+    move(row, "confirmed");
+    row.failure = null;
+    await row.save({ transaction });
+    const { organisationId, pointId } = row;
+    const job = { organisationId, pointId, importId: row.id, kind: "import" as const };
+    await enqueueJob(context.database, transaction, job);
+    await audit(context, "import-confirmed", row, { repair: row.repair }, transaction);
+  });
+}
+
+/** Files whose bytes are stored for the same point already, each with the earlier file. */
+export async function sameFiles(
+  row: LogImport,
+  files: readonly LogFile[],
+  transaction?: Transaction,
+): Promise<{ file: LogFile; earlier: LogFile }[]> {
+  if (files.length === 0) return [];
+  const earlier = await LogFile.findAll({
+    where: {
+      organisationId: row.organisationId,
+      pointId: row.pointId,
+      sha256: files.map(({ sha256 }) => sha256),
+      importId: { [Op.ne]: row.id },
+      precedence: { [Op.ne]: null },
+    },
+    transaction,
+  });
+  return files.flatMap((file) => {
+    const twin = earlier.find(({ sha256 }) => sha256 === file.sha256);
+    return twin ? [{ file, earlier: twin }] : [];
+  });
+}
+
+export async function cancel(context: Context, importId: string): Promise<LogImport> {
+  const changed = await change(context, importId, async (row, transaction) => {
+    if (!isCancellable(row.state))
+      throw new Conflict(
+        "import-not-cancellable",
+        `This import is ${row.state}: there is nothing to stop.`,
+        row.state === "imported" ? "Undo it to take its readings out." : "Leave it as it is.",
+      );
+    await cancelJobs(context.database, transaction, { importId: row.id });
+    move(row, "cancelled");
+    await row.save({ transaction });
+    await audit(context, "import-cancelled", row, {}, transaction);
+  });
+  context.services.jobs.dropImport(importId);
+  return changed;
+}
+
+export async function startUndo(context: Context, importId: string): Promise<LogImport> {
+  return change(context, importId, async (row, transaction) => {
+    if (!can(context.actor).undoImport({ importedByAccountId: row.createdByAccountId }))
+      throw new Denied("Only who made this import, an engineer or an administrator undoes it.");
+    if (row.state !== "imported")
+      throw new Conflict(
+        "import-not-stored",
+        `This import is ${row.state}: none of its readings are stored.`,
+        "There is nothing to undo.",
+      );
+    const { organisationId, pointId } = row;
+    const job = { organisationId, pointId, importId: row.id, kind: "undo" as const };
+    await enqueueJob(context.database, transaction, job);
+    await audit(context, "import-undone", row, {}, transaction);
+  });
+}
+
+/** Takes an import up again that ended without readings; files and choices are still there. */
+export async function reopen(context: Context, importId: string): Promise<LogImport> {
+  return change(context, importId, async (row, transaction) => {
+    if (!isReopenable(row.state))
+      throw new Conflict(
+        "import-not-reopenable",
+        `This import is ${row.state} and cannot be taken up again.`,
+        row.state === "imported" ? "Undo it first." : "Go on with it as it is.",
+      );
+    const { organisationId, pointId } = row;
+    for (const file of await filesOf(row, transaction)) {
+      if (file.recognition !== null || file.unreadable !== null) continue;
+      await enqueueJob(context.database, transaction, {
+        organisationId,
+        pointId,
+        kind: "recognise",
+        importId: row.id,
+        logFileId: file.id,
+      });
+    }
+    await settleImport(context.database, transaction, row);
+    await audit(context, "import-reopened", row, {}, transaction);
+  });
+}
+
+function audit(
+  context: Context,
+  kind: string,
+  row: LogImport,
+  details: Record<string, unknown>,
+  transaction: Transaction,
+): Promise<void> {
+  const subject = { kind: "import", id: row.id };
+  return recordAudit(context, { kind, subject, details }, transaction);
+}

@@ -1,0 +1,220 @@
+import type { ImportChecks } from "@shared/contracts/imports";
+import { totalEnergy } from "@shared/domain/energy/totals";
+import type { RepairStepCode } from "@shared/domain/log-files/repair-step";
+import type { RepairChoices } from "@shared/domain/log-files/recipe";
+import { RowQuality, type ReadingSegment } from "@shared/domain/readings/reading-columns";
+import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
+import type { Interval } from "@shared/domain/time/interval";
+import { localDaysBetween } from "@shared/domain/time/local-calendar";
+import { calculateEnergy } from "@server/readings/calculate-energy";
+import type { EnergySettings } from "@server/readings/energy-settings";
+import { energyBlock } from "@server/readings/point-readings";
+import { ChannelBit } from "@server/readings/stored-rows";
+import { findOverlap, type Overlap } from "./overlap";
+import { fileChecks, type CheckedFile } from "./file-checks";
+import { pictureOf } from "./picture";
+
+/** Names of what is looked for in every file; those that found nothing are listed as clean. */
+const lookedFor: readonly (RepairStepCode | "gaps")[] = [
+  "unreadableTimes",
+  "unreadableCells",
+  "shortRows",
+  "sentinels",
+  "identicalRepeats",
+  "conflictingRepeats",
+  "outOfOrder",
+  "repeatedHour",
+  "missingHour",
+  "weakSignal",
+  "overlapEqual",
+  "overlapDifferent",
+  "gaps",
+];
+
+/** What a check works with: the import's files read by their recipes, and what the point holds. */
+export interface CheckInput {
+  readonly files: readonly CheckedFile[];
+  readonly stored: readonly ReadingSource[];
+  readonly settings: EnergySettings;
+  readonly choices: RepairChoices;
+}
+
+/** Above or below whatever is stored, as the choice says. */
+const farAbove = 1e9;
+
+export function sourcesOf(files: readonly CheckedFile[], precedence: number): ReadingSource[] {
+  return files.flatMap(({ kind, resolved, columns }) =>
+    columns === null ? [] : [{ precedence, kind, nominalStepMs: resolved.nominalStepMs, columns }],
+  );
+}
+
+/** From the first to the last moment the files speak for; null where no row is left. */
+export function spanOf(files: readonly CheckedFile[]): Interval | null {
+  let startMs = Infinity;
+  let endMs = -Infinity;
+  for (const { columns, kind, resolved } of files) {
+    if (columns === null || columns.instantMs.length === 0) continue;
+    const stepMs = resolved.nominalStepMs ?? 0;
+    const first = columns.instantMs[0] as number;
+    const last = columns.instantMs[columns.instantMs.length - 1] as number;
+    startMs = Math.min(startMs, kind === "meanToLabel" ? first - stepMs : first);
+    endMs = Math.max(endMs, kind === "meanFromLabel" ? last + stepMs : last);
+  }
+  return startMs <= endMs ? { startMs, endMs } : null;
+}
+
+/** How each file meets what is stored and the files before it in the same import. */
+export function overlapsOf(
+  files: readonly CheckedFile[],
+  stored: readonly ReadingSource[],
+): (Overlap | null)[] {
+  const others = stored.map(({ columns }) => columns);
+  return files.map(({ columns, line }) => {
+    if (columns === null) return null;
+    const overlap = findOverlap(columns, line, others);
+    others.push(columns);
+    return overlap;
+  });
+}
+
+/**
+ * The whole import without storing it: what the rows come to, what was done to them, what is still
+ * to be chosen, and the energy the point would have over the files' time. While a choice is open the
+ * figures take the first reading of a conflict, keep weak signals and keep what is stored.
+ */
+export function checkImport(input: CheckInput): ImportChecks {
+  const { files, stored, settings, choices } = input;
+  const overlaps = overlapsOf(files, stored);
+  const checked = files.map((file, i) => fileChecks(file, overlaps[i] ?? null, settings.zone));
+  const asked = new Set(
+    files.flatMap(({ resolved }) => resolved.questions.map(({ code }) => code)),
+  );
+  const isDifferent = overlaps.some((overlap) => (overlap?.different.count ?? 0) > 0);
+  const undecided: ImportChecks["undecided"] = [];
+  if (asked.has("conflictingRepeats")) undecided.push("conflictingRepeats");
+  if (asked.has("weakSignal")) undecided.push("weakSignal");
+  if (isDifferent && choices.overlap === null) undecided.push("overlap");
+
+  const span = spanOf(files);
+  const own = resolveSegments(sourcesOf(files, 1));
+  const precedence = choices.overlap === "useThis" || !isDifferent ? farAbove : -farAbove;
+  const together = resolveSegments([...stored, ...sourcesOf(files, precedence)]);
+  const found = new Set<string>(
+    checked.flatMap((file) => [
+      ...file.steps.map(({ code }) => code),
+      ...(file.gapCount > 0 ? ["gaps"] : []),
+    ]),
+  );
+  return {
+    undecided,
+    files: checked,
+    rows: rowsOf(own),
+    rowsWithoutTemperature: rowsWithoutTemperature(files, together, span),
+    ...energyOf(together, settings, span),
+    picture: span && pictureOf(own, span),
+    clean: lookedFor.filter((name) => !found.has(name)),
+  };
+}
+
+function rowsOf(segments: readonly ReadingSegment[]): ImportChecks["rows"] {
+  const rows = { measured: 0, excluded: 0, noReading: 0, missing: 0, expected: 0 };
+  for (const { columns, nominalStepMs } of segments) {
+    const { instantMs, quality } = columns;
+    const count = instantMs.length;
+    for (let i = 0; i < count; i++) {
+      if (quality[i] === RowQuality.excluded) rows.excluded++;
+      else if (quality[i] === RowQuality.noReading) rows.noReading++;
+      else rows.measured++;
+    }
+    const spanMs = (instantMs[count - 1] as number) - (instantMs[0] as number);
+    const due = nominalStepMs > 0 ? Math.round(spanMs / nominalStepMs) + 1 : count;
+    rows.missing += Math.max(0, due - count);
+    rows.expected += Math.max(due, count);
+  }
+  return rows;
+}
+
+/** Flow rows of files without own temperatures for which no temperature is near enough. */
+function rowsWithoutTemperature(
+  files: readonly CheckedFile[],
+  together: readonly ReadingSegment[],
+  span: Interval | null,
+): number {
+  const borrows = files.some(
+    ({ columns }) => columns?.flowM3PerHour && !(columns.supplyC && columns.returnC),
+  );
+  if (!borrows || span === null) return 0;
+  let count = 0;
+  for (const { columns } of together) {
+    const { instantMs, flowM3PerHour, supplyC, returnC, quality } = columns;
+    if (!flowM3PerHour) continue;
+    for (let i = 0; i < instantMs.length; i++) {
+      const at = instantMs[i] as number;
+      if (at < span.startMs || at > span.endMs || quality[i] === RowQuality.excluded) continue;
+      if (Number.isNaN(flowM3PerHour[i])) continue;
+      if (Number.isNaN(supplyC?.[i] ?? NaN) || Number.isNaN(returnC?.[i] ?? NaN)) count++;
+    }
+  }
+  return count;
+}
+
+function energyOf(
+  segments: readonly ReadingSegment[],
+  settings: EnergySettings,
+  span: Interval | null,
+): Pick<
+  ImportChecks,
+  "energy" | "energyBlockedBy" | "daily" | "rowsOutsideWater" | "outsideWaterExamples"
+> {
+  const days = span
+    ? localDaysBetween({ ...span, endMs: Math.max(span.endMs, span.startMs + 1) }, settings.zone)
+    : [];
+  // A stretch leaves out its end, but the last row counts as a row.
+  const window = span && { ...span, endMs: span.endMs + 1 };
+  const result = window && calculateEnergy(segments, settings, days, window);
+  const totals = result && totalEnergy(result.intervals);
+  const blockedBy = energyBlock(settings, {
+    channels: span ? channelsOf(segments) : null,
+    measuredRows: totals?.measuredRows ?? 0,
+    outsideWaterRows: result?.outsideWaterRows ?? 0,
+  });
+  const outside = {
+    rowsOutsideWater: result?.outsideWaterRows ?? 0,
+    outsideWaterExamples: (result?.outsideWater ?? []).map(({ instantMs, channel, problem }) => ({
+      instant: new Date(instantMs).toISOString(),
+      channel,
+      valueC: problem.value,
+      reason: problem.code,
+    })),
+  };
+  if (!result || !totals || blockedBy !== null)
+    return { energy: null, energyBlockedBy: blockedBy, daily: [], ...outside };
+  return {
+    energy: {
+      heatingKwh: totals.heating.energyKwh,
+      coolingKwh: totals.cooling.energyKwh,
+      suppressedKwh: totals.suppressedKwh,
+      volumeM3: totals.volumeM3,
+      coveredS: totals.coveredS,
+    },
+    energyBlockedBy: null,
+    daily: result.days.map(({ date, lengthS, totals: day }) => ({
+      date,
+      heatingKwh: day.coveredS > 0 ? day.heating.energyKwh : null,
+      coolingKwh: day.coveredS > 0 ? day.cooling.energyKwh : null,
+      coveredS: day.coveredS,
+      lengthS,
+    })),
+    ...outside,
+  };
+}
+
+function channelsOf(segments: readonly ReadingSegment[]): number {
+  const has = (name: "flowM3PerHour" | "supplyC" | "returnC") =>
+    segments.some(({ columns }) => columns[name] !== null);
+  return (
+    (has("flowM3PerHour") ? ChannelBit.flow : 0) +
+    (has("supplyC") ? ChannelBit.supply : 0) +
+    (has("returnC") ? ChannelBit.return : 0)
+  );
+}

@@ -1,0 +1,126 @@
+import type { ImportDetail, ImportFile, ImportSummary } from "@shared/contracts/imports";
+import { absolutePressureMPa } from "@shared/domain/fluids/loop-fluid";
+import { pipeLabel } from "@shared/domain/pipes/resolve-pipe";
+import { instantText, instantTextOrNull } from "@server/database/conversions";
+import type { BoreVersion } from "@server/models/bore-version";
+import type { LogFile } from "@server/models/log-file";
+import type { LogImport } from "@server/models/log-import";
+import type { Actor } from "@server/policies/actor";
+import { can } from "@server/policies/can";
+import type { ImportFacts, ImportPlace } from "./import-facts";
+import { isCancellable, isEditable, isReopenable } from "./import-states";
+
+function placeOf(row: LogImport, facts: ImportFacts): ImportPlace {
+  const place = facts.places.get(row.pointId);
+  if (place === undefined) throw new Error(`import ${row.id} belongs to no point`);
+  return place;
+}
+
+export function presentImport(row: LogImport, facts: ImportFacts, actor: Actor): ImportSummary {
+  const place = placeOf(row, facts);
+  const job = facts.jobs.get(row.id);
+  const { importLogs, undoImport } = can(actor);
+  const isUndoing = job?.kind === "undo";
+  return {
+    id: row.id,
+    state: row.state,
+    point: { id: place.pointId, code: place.pointCode, name: place.pointName },
+    loop: {
+      id: place.loopId,
+      tag: place.loopTag,
+      name: place.loopName,
+      service: place.service,
+    },
+    site: { id: place.siteId, name: place.siteName, zone: place.zone },
+    buildingName: place.buildingName,
+    fileNames: facts.fileNames.get(row.id) ?? [],
+    createdBy: row.createdByName,
+    createdAt: instantText(row.createdAt),
+    importedAt: instantTextOrNull(row.importedAt),
+    rowsStored: row.rowsStored,
+    firstInstant: instantTextOrNull(row.firstInstant),
+    lastInstant: instantTextOrNull(row.lastInstant),
+    failure: row.failure,
+    progress: job?.progress ?? null,
+    can: {
+      edit: importLogs && isEditable(row.state),
+      confirm: importLogs && row.state === "ready",
+      undo:
+        row.state === "imported" &&
+        !isUndoing &&
+        undoImport({ importedByAccountId: row.createdByAccountId }),
+      cancel: importLogs && isCancellable(row.state),
+      reopen: importLogs && isReopenable(row.state),
+    },
+  };
+}
+
+/** The bytes of `file` are stored for this point already, through an import that still counts. */
+export interface Twin {
+  readonly file: LogFile;
+  readonly earlier: LogFile;
+  readonly importedAt: Date;
+}
+
+function presentFile(file: LogFile, twins: readonly Twin[]): ImportFile {
+  const twin = twins.find((other) => other.file.id === file.id);
+  const { recognition } = file;
+  return {
+    id: file.id,
+    name: file.name,
+    bytes: file.byteLength,
+    sha256: file.sha256,
+    uploadedAt: instantText(file.uploadedAt),
+    sameAs: twin
+      ? {
+          importId: twin.earlier.importId,
+          name: twin.earlier.name,
+          importedAt: instantText(twin.importedAt),
+        }
+      : null,
+    unreadable: file.unreadable,
+    recognition: recognition && {
+      proofs: recognition.proofs.map((proof) => ({ ...proof })),
+      firstLines: [...recognition.firstLines],
+      sampleRows: recognition.sampleRows.map(({ line, cells }) => ({ line, cells: [...cells] })),
+      dataRowCount: recognition.dataRowCount,
+      columnCount: recognition.columnCount,
+      preamble: recognition.preamble.map((entry) => ({ ...entry })),
+    },
+    recipe: file.recipe && { ...file.recipe, columns: [...file.recipe.columns] },
+    questions: (file.questions ?? []).map((question) => {
+      if (question.code === "dateOrder")
+        return {
+          ...question,
+          choices: [...question.choices],
+          stepSeconds: [...question.stepSeconds],
+        };
+      return question.code === "flowUnit"
+        ? { ...question, choices: [...question.choices] }
+        : { ...question };
+    }),
+  };
+}
+
+export function presentImportDetail(
+  row: LogImport,
+  facts: ImportFacts,
+  more: { files: readonly LogFile[]; twins: readonly Twin[]; bore: BoreVersion | null },
+  actor: Actor,
+): ImportDetail {
+  const place = placeOf(row, facts);
+  const { bore } = more;
+  const { pressureMPa, assumed } = absolutePressureMPa(place.gaugePressureMPa);
+  return {
+    ...presentImport(row, facts, actor),
+    files: more.files.map((file) => presentFile(file, more.twins)),
+    repair: row.repair,
+    checks: row.checks,
+    pipe: bore && {
+      insideDiameterMm: bore.insideDiameterMm,
+      label: pipeLabel(bore.pipe, bore),
+    },
+    meterSide: place.meterSide,
+    pressure: { absoluteMPa: pressureMPa, assumed },
+  };
+}

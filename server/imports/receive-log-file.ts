@@ -1,0 +1,100 @@
+import multer, { MulterError, type StorageEngine } from "multer";
+import { MAX_FILE_BYTES } from "@shared/contracts/imports";
+import type { FileStore, StoredFile } from "@server/files/file-store";
+import type { Context } from "@server/http/context";
+import { HttpProblem, Invalid, TooLarge } from "@server/http/errors";
+
+export interface ReceivedFile extends StoredFile {
+  readonly name: string;
+}
+
+const endings = [".csv", ".tsv", ".txt"];
+const mebibyte = 1024 * 1024;
+
+/**
+ * Headers of a multipart part reach us as Latin-1, whatever the browser wrote; browsers write
+ * UTF-8. A name that is no UTF-8 was Latin-1 indeed. Folders before the name are cut off.
+ */
+export function fileNameOf(header: string): string {
+  const utf8 = Buffer.from(header, "latin1").toString("utf8");
+  const name = utf8.includes("\uFFFD") ? header : utf8;
+  const last = name.split(/[\\/]/).pop() ?? "";
+  return last
+    .replace(/\p{Cc}/gu, "")
+    .trim()
+    .slice(0, 255);
+}
+
+/** Streams the part into the file store; nothing of it passes through memory as a whole. */
+function storageIn(files: FileStore, take: (file: ReceivedFile) => void): StorageEngine {
+  return {
+    _handleFile(_request, file, done) {
+      // Cut short at the limit it must not be stored as if it were whole.
+      file.stream.once("limit", () => file.stream.destroy(new Error("over the size limit")));
+      files
+        .put(file.stream)
+        .then((stored) => {
+          take({ ...stored, name: fileNameOf(file.originalname) });
+          done(null, { size: stored.byteLength });
+        })
+        .catch((error: unknown) => done(error));
+    },
+    // A file is kept under its hash and may be another import's as well: nothing to remove.
+    _removeFile(_request, _file, done) {
+      done(null);
+    },
+  };
+}
+
+/**
+ * Takes the file of a multipart request in: one part named `file`, at most 200 MB, a text file by
+ * its ending.
+ * @throws Invalid, TooLarge or a 507 problem, each with what to do.
+ */
+export async function receiveLogFile(context: Context): Promise<ReceivedFile> {
+  const { request, response, services } = context;
+  let received: ReceivedFile | undefined;
+  const receive = multer({
+    storage: storageIn(services.files, (file) => (received = file)),
+    limits: { fileSize: MAX_FILE_BYTES, files: 1, fields: 5, parts: 6, headerPairs: 50 },
+    fileFilter(_request, file, accept) {
+      const name = fileNameOf(file.originalname).toLowerCase();
+      if (endings.some((ending) => name.endsWith(ending))) accept(null, true);
+      else accept(notText(name));
+    },
+  }).single("file");
+  await new Promise<void>((resolve, reject) => {
+    receive(request, response, (error: unknown) => (error ? reject(asProblem(error)) : resolve()));
+  });
+  if (received === undefined)
+    throw Invalid.field("file", "missing", "Send one logger file in the field named file.");
+  return received;
+}
+
+function notText(name: string): Invalid {
+  return Invalid.field(
+    "file",
+    "not-a-log",
+    `${name || "This file"} is not a .csv, .tsv or .txt file. Export the log as text and send that.`,
+  );
+}
+
+function asProblem(error: unknown): unknown {
+  if (error instanceof MulterError) {
+    if (error.code === "LIMIT_FILE_SIZE")
+      return new TooLarge(
+        `A file may hold up to ${MAX_FILE_BYTES / mebibyte} MB.`,
+        "Export a shorter period, or several files: one import takes twelve.",
+      );
+    return Invalid.field("file", "upload", "Send exactly one file, in the field named file.");
+  }
+  if (error instanceof Error && "code" in error && error.code === "ENOSPC")
+    return new HttpProblem({
+      status: 507,
+      code: "storage-full",
+      title: "Storage full",
+      detail: "The server has no room left for this file.",
+      remedy: "Tell whoever runs the server; nothing of the file was kept.",
+    });
+  return error;
+}

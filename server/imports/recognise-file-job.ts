@@ -1,0 +1,62 @@
+import { createFileScan } from "@shared/domain/log-files/file-scan";
+import { finishRecognition } from "@shared/domain/log-files/finish-recognition";
+import { HEAD_BYTES, isUnreadable, recogniseHead } from "@shared/domain/log-files/recognise-head";
+import type { Recognition, Unreadable } from "@shared/domain/log-files/recognition";
+import { inTransaction } from "@server/database/transaction";
+import type { JobContext } from "@server/jobs/job-context";
+import { JobDropped } from "@server/jobs/job-outcome";
+import { LogFile } from "@server/models/log-file";
+import { importOfJob } from "./load-files";
+import { readChunks } from "./read-log-file";
+import { settleImport } from "./settle-import";
+
+/** Finds out how a file is written, from all of its bytes: the last row may be what proves it. */
+export async function recogniseFileJob(context: JobContext): Promise<void> {
+  const { database, job } = context;
+  const file = await LogFile.findOne({ where: { id: job.logFileId ?? "0" } });
+  if (file === null) throw new JobDropped();
+  const found = await recognise(context, file);
+  await inTransaction(database, async (transaction) => {
+    const row = await importOfJob(context, transaction);
+    const fresh = await LogFile.findOne({ where: { id: file.id }, transaction });
+    if (fresh === null) throw new JobDropped();
+    if ("code" in found) {
+      await fresh.update({ unreadable: found, recognition: null }, { transaction });
+    } else {
+      const { recipe, questions, ...findings } = found;
+      await fresh.update(
+        { recognition: { ...findings, asked: questions }, recipe, questions, unreadable: null },
+        { transaction },
+      );
+    }
+    await settleImport(database, transaction, row);
+    await context.finish(transaction);
+  });
+}
+
+async function recognise(
+  { files, checkpoint, report }: JobContext,
+  file: LogFile,
+): Promise<Recognition | Unreadable> {
+  const path = await files.localPath(file.sha256);
+  const wholeIsHead = file.byteLength <= HEAD_BYTES;
+  let scan: ReturnType<typeof createFileScan> | undefined;
+  let head: ReturnType<typeof recogniseHead> | undefined;
+  let bytesRead = 0;
+  let rowsTotal: number | null = null;
+  readChunks(path, (bytes) => {
+    checkpoint();
+    // The first chunk is larger than the head that recognition wants.
+    head ??= recogniseHead(bytes.subarray(0, HEAD_BYTES), wholeIsHead);
+    if (isUnreadable(head)) return;
+    scan ??= createFileScan(head);
+    scan.push(bytes);
+    bytesRead += bytes.length;
+    // How many rows there are is not known yet; rows are much of a length, so the bytes tell.
+    rowsTotal ??= Math.round((scan.rowsRead * file.byteLength) / Math.max(1, bytesRead));
+    report({ stage: "recognising", rowsRead: scan.rowsRead, rowsTotal });
+  });
+  head ??= recogniseHead(new Uint8Array(0), true);
+  if (isUnreadable(head)) return head;
+  return finishRecognition(head, (scan ?? createFileScan(head)).end());
+}

@@ -1,0 +1,146 @@
+import { QueryTypes, type Transaction } from "sequelize";
+import type { Interval } from "@shared/domain/time/interval";
+import { enqueueJob } from "@server/jobs/job-queue";
+import { inTransaction } from "@server/database/transaction";
+import type { JobContext } from "@server/jobs/job-context";
+import { JobRefused } from "@server/jobs/job-outcome";
+import { LogFile } from "@server/models/log-file";
+import type { LogImport } from "@server/models/log-import";
+import { loadEnergySettings } from "@server/readings/energy-settings";
+import { loadSources } from "@server/readings/load-segments";
+import { lockPoint, recalculateEnergy } from "@server/readings/recalculate-energy";
+import { storeBlocks } from "@server/readings/store-blocks";
+import { overlapsOf, spanOf } from "./check-import";
+import type { CheckedFile } from "./file-checks";
+import { importOfJob, loadFile, openFiles } from "./load-files";
+import { storedRowsOf } from "./resolved-file";
+import { move } from "./settle-import";
+
+/**
+ * Stores the readings of an import and works out the energy they give, all in one transaction: a
+ * kill at any moment leaves either nothing of it or all of it.
+ */
+export async function storeImportJob(context: JobContext): Promise<void> {
+  const { database, job } = context;
+  const row = await importOfJob(context);
+  const { zone } = await loadEnergySettings(database, row.pointId);
+  const { files, rows } = await openFiles(row);
+  const loaded: CheckedFile[] = [];
+  for (const file of files) loaded.push(await loadFile(context, file, row.repair, zone, rows));
+  for (const file of loaded) requireDecided(file);
+
+  await inTransaction(database, async (transaction) => {
+    await lockPoint(database, transaction, job.pointId);
+    const fresh = await importOfJob(context, transaction);
+    const outcome = await storeAll(context, transaction, fresh, loaded, rows.total);
+    if (outcome === "metAnother") await checkAgain(context, transaction, fresh);
+    await context.finish(transaction);
+  });
+}
+
+function requireDecided({ resolved, columns }: CheckedFile): void {
+  if (resolved.columns !== null && columns !== null) return;
+  throw new JobRefused({
+    code: "import-undecided",
+    detail: "A choice the import needs is not made.",
+    remedy: "Take the import up again: its checks name what is to be chosen.",
+  });
+}
+
+async function storeAll(
+  context: JobContext,
+  transaction: Transaction,
+  row: LogImport,
+  files: readonly CheckedFile[],
+  rowsTotal: number,
+): Promise<"stored" | "metAnother"> {
+  const { database } = context;
+  const span = spanOf(files);
+  const precedence = await precedenceOf(context, transaction, row, files, span);
+  if (precedence === null) return "metAnother";
+  let stored = 0;
+  for (const file of files) {
+    const { fileId: logFileId, kind, resolved, columns, original } = file;
+    if (columns === null) continue;
+    context.checkpoint();
+    context.report({ stage: "storing", rowsRead: stored, rowsTotal });
+    const owner = { organisationId: row.organisationId, pointId: row.pointId, logFileId };
+    await storeBlocks(transaction, owner, storedRowsOf(columns, original));
+    await LogFile.update(
+      { precedence, seriesKind: kind, nominalStepMs: resolved.nominalStepMs },
+      { where: { id: logFileId }, transaction },
+    );
+    stored += columns.instantMs.length;
+  }
+  context.report({ stage: "energy", rowsRead: 0, rowsTotal });
+  if (span !== null) {
+    await recalculateEnergy(database, transaction, row.pointId, span, {
+      onProgress(share) {
+        context.checkpoint();
+        context.report({ stage: "energy", rowsRead: Math.round(share * rowsTotal), rowsTotal });
+      },
+    });
+  }
+  const [first, last] = instantsOf(files);
+  move(row, "stored");
+  row.set({ rowsStored: stored, firstInstant: first, lastInstant: last, failure: null });
+  row.importedAt = await databaseNow(context, transaction);
+  await row.save({ transaction });
+  return "stored";
+}
+
+/**
+ * Which readings win where this import meets stored ones: above all others, or below all where the
+ * earlier ones are kept. Null where it meets different readings that no choice was made about,
+ * because another import was stored since the check.
+ */
+async function precedenceOf(
+  { database }: JobContext,
+  transaction: Transaction,
+  row: LogImport,
+  files: readonly CheckedFile[],
+  span: Interval | null,
+): Promise<number | null> {
+  const [found] = await database.query<{ least: number | null; greatest: number | null }>(
+    `SELECT MIN(precedence) AS least, MAX(precedence) AS greatest
+       FROM log_file WHERE point_id = :pointId AND precedence IS NOT NULL`,
+    { replacements: { pointId: row.pointId }, type: QueryTypes.SELECT, transaction },
+  );
+  const above = (found?.greatest ?? 0) + 1;
+  if (span === null) return above;
+  const { startMs, endMs } = span;
+  const stored = await loadSources(database, row.pointId, startMs, endMs + 1, transaction);
+  if (stored.length === 0 && files.length < 2) return above;
+  const differs = overlapsOf(files, stored).some((overlap) => (overlap?.different.count ?? 0) > 0);
+  if (!differs || row.repair.overlap === "useThis") return above;
+  return row.repair.overlap === null ? null : (found?.least ?? 0) - 1;
+}
+
+/** The check of this import no longer holds, so that it must be made and confirmed again. */
+async function checkAgain({ database }: JobContext, transaction: Transaction, row: LogImport) {
+  row.revision += 1;
+  row.checks = null;
+  move(row, "metAnother");
+  await row.save({ transaction });
+  const { organisationId, pointId, id: importId, revision } = row;
+  const job = { organisationId, pointId, importId, revision, kind: "check" as const };
+  await enqueueJob(database, transaction, job);
+}
+
+function instantsOf(files: readonly CheckedFile[]): [Date | null, Date | null] {
+  const known = (values: (number | null)[]) => values.filter((value) => value !== null);
+  const firsts = known(files.map(({ resolved }) => resolved.firstInstantMs));
+  const lasts = known(files.map(({ resolved }) => resolved.lastInstantMs));
+  return firsts.length === 0
+    ? [null, null]
+    : [new Date(Math.min(...firsts)), new Date(Math.max(...lasts))];
+}
+
+/** Workers keep no clock of their own: the database's is everybody's. */
+async function databaseNow({ database }: JobContext, transaction: Transaction): Promise<Date> {
+  const [row] = await database.query<{ ms: string | number }>(
+    "SELECT ROUND(UNIX_TIMESTAMP(NOW(3)) * 1000) AS ms",
+    { type: QueryTypes.SELECT, transaction },
+  );
+  return new Date(Number(row?.ms));
+}

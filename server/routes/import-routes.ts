@@ -1,0 +1,186 @@
+import { Op } from "sequelize";
+import * as contracts from "@shared/contracts/imports";
+import type { Context } from "@server/http/context";
+import { pageOf, readCursor } from "@server/http/cursor";
+import { defineEndpoint } from "@server/http/define-endpoint";
+import { Conflict, NotFound } from "@server/http/errors";
+import { FileAnswer } from "@server/http/file-answer";
+import * as commands from "@server/imports/change-import";
+import { importFacts } from "@server/imports/import-facts";
+import { presentImport, presentImportDetail } from "@server/imports/present-import";
+import { previewRows } from "@server/imports/preview-rows";
+import { receiveLogFile } from "@server/imports/receive-log-file";
+import { filesOf } from "@server/imports/settle-import";
+import { LogFile } from "@server/models/log-file";
+import { LogImport } from "@server/models/log-import";
+import { MeteringPoint } from "@server/models/metering-point";
+import { may } from "@server/policies/policy";
+import { currentBores } from "@server/queries/current-bores";
+import { pointsOfSite } from "@server/queries/points-of-site";
+
+async function present(context: Context, row: LogImport) {
+  const { scope, actor } = context;
+  const [facts, files, bores] = await Promise.all([
+    importFacts(context, [row]),
+    filesOf(row),
+    currentBores(scope, [row.pointId]),
+  ]);
+  const same = await commands.sameFiles(row, files);
+  const earlier = await scope.list(LogImport, {
+    where: { id: same.map((twin) => twin.earlier.importId) },
+  });
+  const twins = same.flatMap((twin) => {
+    const importedAt = earlier.find(({ id }) => id === twin.earlier.importId)?.importedAt;
+    return importedAt ? [{ ...twin, importedAt }] : [];
+  });
+  return presentImportDetail(
+    row,
+    facts,
+    { files, twins, bore: bores.get(row.pointId) ?? null },
+    actor,
+  );
+}
+
+async function fileOf({ scope }: Context, importId: string, fileId: string): Promise<LogFile> {
+  const file = await scope.get(LogFile, fileId, "file");
+  if (file.importId !== importId) throw new NotFound("file");
+  return file;
+}
+
+/** The points a list is narrowed to, or null for all of the organisation. */
+async function wantedPoints(
+  context: Context,
+  { pointId, siteId }: { pointId?: string; siteId?: string },
+): Promise<string[] | null> {
+  if (pointId !== undefined) await context.scope.get(MeteringPoint, pointId, "point");
+  const ofSite = siteId === undefined ? null : await pointsOfSite(context, siteId);
+  if (pointId === undefined) return ofSite;
+  return ofSite === null || ofSite.includes(pointId) ? [pointId] : [];
+}
+
+export const importRoutes = [
+  defineEndpoint(contracts.listImports, {
+    policy: may("seeLogs"),
+    async handle(context, { query }) {
+      const { scope, actor } = context;
+      const before = readCursor(query.cursor);
+      const pointIds = await wantedPoints(context, query);
+      const found = await scope.list(LogImport, {
+        where: {
+          ...(pointIds === null ? {} : { pointId: pointIds }),
+          ...(query.state ? { state: query.state } : {}),
+          ...(before === null ? {} : { id: { [Op.lt]: before } }),
+        },
+        attributes: { exclude: ["checks"] },
+        order: [["id", "DESC"]],
+        limit: query.limit + 1,
+      });
+      const { rows, nextCursor } = pageOf(found, query.limit);
+      const facts = await importFacts(context, rows);
+      return { items: rows.map((row) => presentImport(row, facts, actor)), nextCursor };
+    },
+  }),
+  defineEndpoint(contracts.createImport, {
+    policy: may("importLogs"),
+    status: 201,
+    async handle(context, { params }) {
+      return present(context, await commands.openImport(context, params.pointId));
+    },
+  }),
+  defineEndpoint(contracts.getImport, {
+    policy: may("seeLogs"),
+    async handle(context, { params }) {
+      return present(context, await context.scope.get(LogImport, params.importId, "import"));
+    },
+  }),
+  defineEndpoint(contracts.addImportFile, {
+    policy: may("importLogs"),
+    status: 201,
+    // The handler takes the file in itself, once it knows that the import is there.
+    receive: (_request, _response, next) => next(),
+    async handle(context, { params }) {
+      await context.scope.get(LogImport, params.importId, "import");
+      const received = await receiveLogFile(context);
+      return present(context, await commands.addFile(context, params.importId, received));
+    },
+  }),
+  defineEndpoint(contracts.removeImportFile, {
+    policy: may("importLogs"),
+    async handle(context, { params }) {
+      const { importId, fileId } = params;
+      return present(context, await commands.removeFile(context, importId, fileId));
+    },
+  }),
+  defineEndpoint(contracts.chooseRecipe, {
+    policy: may("importLogs"),
+    async handle(context, { params, body }) {
+      const { importId, fileId } = params;
+      return present(context, await commands.giveRecipe(context, importId, fileId, body));
+    },
+  }),
+  defineEndpoint(contracts.chooseRepairs, {
+    policy: may("importLogs"),
+    async handle(context, { params, body }) {
+      return present(context, await commands.giveRepairs(context, params.importId, body));
+    },
+  }),
+  defineEndpoint(contracts.checkImport, {
+    policy: may("importLogs"),
+    status: 202,
+    async handle(context, { params }) {
+      return present(context, await commands.startCheck(context, params.importId));
+    },
+  }),
+  defineEndpoint(contracts.confirmImport, {
+    policy: may("importLogs"),
+    status: 202,
+    async handle(context, { params }) {
+      return present(context, await commands.confirm(context, params.importId));
+    },
+  }),
+  defineEndpoint(contracts.cancelImport, {
+    policy: may("importLogs"),
+    async handle(context, { params }) {
+      return present(context, await commands.cancel(context, params.importId));
+    },
+  }),
+  defineEndpoint(contracts.undoImport, {
+    policy: may("importLogs"),
+    status: 202,
+    async handle(context, { params }) {
+      return present(context, await commands.startUndo(context, params.importId));
+    },
+  }),
+  defineEndpoint(contracts.reopenImport, {
+    policy: may("importLogs"),
+    async handle(context, { params }) {
+      return present(context, await commands.reopen(context, params.importId));
+    },
+  }),
+  defineEndpoint(contracts.downloadLogFile, {
+    policy: may("seeLogs"),
+    async handle(context, { params }) {
+      const file = await fileOf(context, params.importId, params.fileId);
+      return new FileAnswer({
+        name: file.name,
+        contentType: "application/octet-stream",
+        body: context.services.files.read(file.sha256),
+        byteLength: file.byteLength,
+      });
+    },
+  }),
+  defineEndpoint(contracts.previewLogRows, {
+    policy: may("seeLogs"),
+    async handle(context, { params, query }) {
+      const file = await fileOf(context, params.importId, params.fileId);
+      if (file.recipe === null)
+        throw new Conflict(
+          "file-not-recognised",
+          "Nobody knows yet how this file is written.",
+          "Wait until it is recognised.",
+        );
+      const content = context.services.files.read(file.sha256);
+      return { rows: await previewRows(content, file.recipe.dialect, query.line, query.limit) };
+    },
+  }),
+];

@@ -1,0 +1,62 @@
+import { Readable } from "node:stream";
+import { DEFAULT_REPAIR_CHOICES, type FileRecipe } from "@shared/domain/log-files/recipe";
+import { LogFile } from "@server/models/log-file";
+import { LogImport } from "@server/models/log-import";
+import type { TestApp } from "./test-app";
+
+/** How a file with the columns time, flow, supply and return is read. */
+export const plainRecipe: FileRecipe = {
+  dialect: {
+    encoding: "utf-8",
+    separator: ",",
+    quote: null,
+    headerLine: 1,
+    unitsLine: null,
+    firstDataLine: 2,
+  },
+  columns: [
+    { index: 0, header: "time", meaning: "time", unit: null, decimalMark: "." },
+    { index: 1, header: "flow", meaning: "flow", unit: "m3/h", decimalMark: "." },
+    { index: 2, header: "supply", meaning: "supply", unit: "degC", decimalMark: "." },
+    { index: 3, header: "return", meaning: "return", unit: "degC", decimalMark: "." },
+  ],
+  time: { format: { kind: "calendar", order: "yearMonthDay" }, clock: { kind: "utc" } },
+  seriesKind: "instantaneous",
+};
+
+/** An import with one file that has been recognised and asks nothing. */
+export async function recognisedImport(
+  app: TestApp,
+  owner: { readonly organisationId: string; readonly pointId: string },
+): Promise<{ row: LogImport; file: LogFile }> {
+  const now = app.clock.date();
+  const content = "time,flow,supply,return\n2025-07-14 06:00,28.8,6.9,12.8\n";
+  const stored = await app.services.files.put(Readable.from([Buffer.from(content)]));
+  const row = await LogImport.create({
+    ...owner,
+    state: "asking",
+    repair: DEFAULT_REPAIR_CHOICES,
+    createdByAccountId: null,
+    createdByName: "Somebody",
+    createdAt: now,
+  });
+  const file = await LogFile.create({
+    ...owner,
+    ...stored,
+    importId: row.id,
+    name: "log.csv",
+    uploadedAt: now,
+    recipe: plainRecipe,
+    questions: [],
+    recognition: {
+      asked: [],
+      proofs: [],
+      firstLines: [],
+      sampleRows: [],
+      dataRowCount: 1,
+      columnCount: 4,
+      preamble: [],
+    },
+  });
+  return { row, file };
+}
