@@ -323,7 +323,7 @@ export class CalendarCell {
     const text = decoder.decode(this.bytes.subarray(start, this.end));
     const colon = text.indexOf(":");
     let timeAt = colon < 0 ? text.length : colon;
-    while (timeAt > 0 && isDigit(text[timeAt - 1] as string)) timeAt--;
+    while (colon >= 0 && timeAt > 0 && isDigit(text[timeAt - 1] as string)) timeAt--;
     const words = splitWords(text.slice(0, timeAt));
     if (words === null) return false;
     const fields = words.filter(

@@ -2,7 +2,13 @@ import { columnToM3PerHour } from "../units/flow";
 import { columnToCelsius } from "../units/temperature";
 import { newTally, tally, type RawChannel, type RawRows, type Tally } from "./raw-rows";
 import type { ColumnUnit, RepairChoices } from "./recipe";
-import { findRepeatedExtremes, isNumericSentinel, sentinelName } from "./sentinels";
+import {
+  findRepeatedExtremes,
+  HIGHEST_USUAL,
+  isNumericSentinel,
+  LOWEST_USUAL,
+  sentinelName,
+} from "./sentinels";
 
 /** Colder or hotter than any probe on a loop can be, °C. */
 const POSSIBLE_C = { min: -60, max: 400 };
@@ -54,9 +60,13 @@ function blankChannel(
 ): Float64Array {
   const extremes = findRepeatedExtremes(channel.values, possibleRange(channel.unit));
   let blanked: Float64Array | null = null;
+  const lowest = LOWEST_USUAL;
+  const highest = HIGHEST_USUAL;
   for (let i = 0; i < channel.values.length; i++) {
     const value = channel.values[i] as number;
-    if (!isNumericSentinel(value) && (extremes.length === 0 || !extremes.includes(value))) continue;
+    // Nearly every reading leaves here; the rest is looked at with care.
+    if (extremes.length === 0 && value > lowest && value < highest) continue;
+    if (!isNumericSentinel(value) && !extremes.includes(value)) continue;
     const name = sentinelName(value);
     tally(sentinels, name, () => ({
       line: raw.line[i] as number,

@@ -28,7 +28,7 @@ const HOTTEST_LOOP = 500;
 export function findDecimalMarks(
   columns: readonly ColumnEvidence[],
   temperatures: readonly number[],
-  separator: string,
+  isUnquotedCommaFile: boolean,
 ): readonly MarkFinding[] {
   const proofs = columns.map(proofOf);
   const proved = new Set(
@@ -45,7 +45,8 @@ export function findDecimalMarks(
     if (proof !== null) return { ...proof, certainty: "proved", question: null };
     const own = single(new Set(temperatures.includes(index) ? hintOf(column, null) : []));
     const open = column.eitherPoint ?? column.eitherComma;
-    const mark = own ?? fallback ?? (separator === "," && column.eitherComma === null ? "." : null);
+    const mark =
+      own ?? fallback ?? (isUnquotedCommaFile && column.eitherComma === null ? "." : null);
     if (open === null)
       return { mark: mark ?? ".", proof: null, certainty: "likely", question: null };
     // `12.345` beside proved commas may be a thousand's point: only its own proof could tell.

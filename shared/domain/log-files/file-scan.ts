@@ -1,5 +1,5 @@
 import { CalendarCell } from "./calendar-cell";
-import { ColumnEvidence, type Place } from "./column-evidence";
+import { ColumnEvidence } from "./column-evidence";
 import { CellStatus, NumberCell } from "./number-cell";
 import type { HeadRecognition } from "./recognise-head";
 import type { SampleRow } from "./recognition";
@@ -193,8 +193,7 @@ class Scan implements FileScan {
     time: CalendarCell,
     index: number,
   ): boolean {
-    const place = (): Place => ({ line: row.line, cell: row.cellText(index) });
-    if (!this.time.add(date, time, place)) return false;
+    if (!this.time.add(date, time, row, index)) return false;
     this.keepTimeCells(row, index);
     return true;
   }

@@ -30,12 +30,20 @@ export function findDialect(bytes: Uint8Array, isWholeFile: boolean): DialectFin
   const quotes = quotesIn(bytes);
   let best: DialectFinding | null = null;
   let bestScore = 0;
+  let bestStamps = 0;
   for (const separator of SEPARATORS) {
     for (const quote of quotes) {
       const rows = readTextRows(bytes, { separator, quote }, isWholeFile, HEAD_ROWS).map(withKinds);
       const score = rows.reduce((sum, row) => sum + scoreOf(row), 0);
-      if (score > bestScore) {
+      const stamps = rows.filter(
+        ({ kinds }) => kinds.length > 1 && kinds.includes("dateTime"),
+      ).length;
+      // Spaces also stand inside timestamps and thousands: they separate only if no other sign leaves
+      // the timestamps whole.
+      const beats = separator === " " ? score > bestScore && bestStamps === 0 : score > bestScore;
+      if (beats) {
         bestScore = score;
+        bestStamps = stamps;
         best = { separator, quote, rows, columnCount: usualCount(rows) };
       }
     }

@@ -132,14 +132,19 @@ function isHeaderRow(row: KindRow, columnCount: number): boolean {
   );
 }
 
+/** A first header row such as `;Flow;Temperature;Temperature`; lines of the preamble have fewer cells or figures. */
 function isUpperHeaderRow(row: KindRow, columnCount: number): boolean {
   const filled = row.cells.filter((cell) => cell !== "");
-  const recognised = filled.filter(isKnownHeader).length;
+  const named = filled.filter((cell) => {
+    const meaning = headerMeaning(splitHeader(cell).name)?.meaning;
+    return meaning !== undefined && meaning !== "known";
+  }).length;
+  const figures = filled.some((cell) => (cell[0] as string) >= "0" && (cell[0] as string) <= "9");
   return (
     columnCount >= 3 &&
-    row.cellCount >= columnCount - 1 &&
-    filled.length >= 2 &&
-    recognised >= filled.length * 0.5
+    row.cellCount >= columnCount &&
+    !figures &&
+    named >= Math.max(2, filled.length * 0.5)
   );
 }
 

@@ -25,7 +25,11 @@ export function finishRecognition(
   const temperatures = assigned.flatMap((column, i) =>
     column.meaning === "supply" || column.meaning === "return" ? [i] : [],
   );
-  const marks = findDecimalMarks(scan.columns, temperatures, head.dialect.separator);
+  const marks = findDecimalMarks(
+    scan.columns,
+    temperatures,
+    head.dialect.separator === "," && !scan.hasQuotes,
+  );
   const columns = assigned.map((column, index): ColumnRecipe => ({
     index,
     header: head.header.headers[index] ?? "",

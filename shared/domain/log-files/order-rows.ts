@@ -168,7 +168,8 @@ function keptOfGroup(
   ) as number;
 }
 
-function sameReadings(raw: RawRows, a: number, b: number): boolean {
+/** Whether two rows hold the same readings in every channel; no reading equals no reading. */
+export function sameReadings(raw: RawRows, a: number, b: number): boolean {
   return raw.channels.every(
     ({ values }) => Object.is(values[a], values[b]) || values[a] === values[b],
   );

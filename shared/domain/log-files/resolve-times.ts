@@ -1,14 +1,19 @@
-import { createLocalClock } from "../time/local-clock";
-import type { RawRows, Tally } from "./raw-rows";
-import { newTally, tally } from "./raw-rows";
+import { createLocalClock, type LocalClock } from "../time/local-clock";
+import { zoneOffsets } from "../time/zone-offsets";
+import { nominalStepMs } from "./find-gaps";
+import { newTally, tally, type RawRows, type Tally } from "./raw-rows";
+import { sameReadings } from "./order-rows";
 import type { LoggerClock, RepairChoices } from "./recipe";
+import { choosePasses } from "./repeated-hour";
 
 const MS_PER_MINUTE = 60_000;
+/** The rows of a repeated hour are judged together with this many after it. */
+const ROWS_AFTER = 8;
 
 export interface ResolvedTimes {
   /** UTC ms of each row in file order; NaN for a row left out because its local time never was. */
   readonly instantMs: Float64Array;
-  /** Rows in an hour the clock showed twice, by the offset they got. */
+  /** Rows in an hour the clock showed twice, by the offset they got; "unclear" where a gap hides which pass it is. */
   readonly repeatedHour: Tally;
   /** Rows in an hour the clock jumped over. */
   readonly missingHour: Tally;
@@ -24,52 +29,132 @@ export function resolveTimes(
   choice: RepairChoices["missingHour"],
   siteZone: string,
 ): ResolvedTimes | null {
-  const repeatedHour = newTally();
-  const missingHour = newTally();
-  const result = { repeatedHour, missingHour };
   const needsClock = raw.isUtc.includes(0);
-  if (!needsClock || clock?.kind === "utc") return { ...result, instantMs: raw.timeMs };
+  if (!needsClock || clock?.kind === "utc") return withoutChanges(raw.timeMs);
   if (clock === null) return null;
-  const { rowCount, timeMs, isUtc, line } = raw;
+  if (clock.kind !== "fixedOffset")
+    return new WallClockReading(raw, clock.kind === "site" ? siteZone : clock.zone, choice).read();
+  const { rowCount, timeMs, isUtc } = raw;
   const instantMs = new Float64Array(rowCount);
-  if (clock.kind === "fixedOffset") {
-    const offsetMs = clock.offsetMinutes * MS_PER_MINUTE;
-    for (let i = 0; i < rowCount; i++)
-      instantMs[i] = (timeMs[i] as number) - (isUtc[i] === 1 ? 0 : offsetMs);
-    return { ...result, instantMs };
+  const offsetMs = clock.offsetMinutes * MS_PER_MINUTE;
+  for (let i = 0; i < rowCount; i++)
+    instantMs[i] = (timeMs[i] as number) - (isUtc[i] === 1 ? 0 : offsetMs);
+  return withoutChanges(instantMs);
+}
+
+function withoutChanges(instantMs: Float64Array): ResolvedTimes {
+  return { instantMs, repeatedHour: newTally(), missingHour: newTally() };
+}
+
+class WallClockReading {
+  private readonly instantMs: Float64Array;
+  private readonly repeatedHour = newTally();
+  private readonly missingHour = newTally();
+  private readonly clock: LocalClock;
+  private readonly stepMs: number;
+  /** Rows of a repeated hour and right after it, waiting to be judged together. */
+  private chain: number[] = [];
+  private chainIsRepeated: boolean[] = [];
+  private sinceRepeated = 0;
+
+  constructor(
+    private readonly raw: RawRows,
+    private readonly zone: string,
+    private readonly choice: RepairChoices["missingHour"],
+  ) {
+    this.instantMs = new Float64Array(raw.rowCount);
+    this.clock = createLocalClock(zone);
+    this.stepMs = nominalStepMs(raw.timeMs) ?? 0;
   }
-  const local = createLocalClock(clock.kind === "site" ? siteZone : clock.zone);
-  for (let i = 0; i < rowCount; i++) {
-    const ms = timeMs[i] as number;
-    if (isUtc[i] === 1) {
-      instantMs[i] = ms;
-      continue;
-    }
-    let utcMs = local.toUtc(ms);
-    if (local.lastKind !== "unique") {
-      const at = line[i] as number;
-      if (local.lastKind === "repeated") {
-        const instant = utcMs;
-        tally(repeatedHour, offsetName(ms - utcMs), () => ({
-          line: at,
-          column: null,
-          cell: null,
-          instantMs: instant,
-        }));
-      } else {
-        const before = local.asBeforeChange(ms);
-        if (choice === "readAsBeforeChange") utcMs = before;
-        tally(missingHour, choice, () => ({
-          line: at,
-          column: null,
-          cell: null,
-          instantMs: before,
-        }));
+
+  read(): ResolvedTimes {
+    const { raw, clock, instantMs } = this;
+    const { timeMs, isUtc, rowCount } = raw;
+    for (let i = 0; i < rowCount; i++) {
+      const ms = timeMs[i] as number;
+      if (isUtc[i] === 1) {
+        instantMs[i] = ms;
+        continue;
       }
+      instantMs[i] = clock.toUtc(ms);
+      if (clock.lastKind !== "unique") {
+        if (clock.lastKind === "missing") this.readMissing(i, ms);
+        else this.link(i, true);
+      } else if (this.chain.length > 0) this.link(i, false);
     }
-    instantMs[i] = utcMs;
+    this.judgeChain();
+    return { instantMs, repeatedHour: this.repeatedHour, missingHour: this.missingHour };
   }
-  return { ...result, instantMs };
+
+  private readMissing(row: number, localMs: number): void {
+    const before = this.clock.asBeforeChange(localMs);
+    if (this.choice === "readAsBeforeChange") this.instantMs[row] = before;
+    const line = this.raw.line[row] as number;
+    tally(this.missingHour, this.choice, () => ({
+      line,
+      column: null,
+      cell: null,
+      instantMs: before,
+    }));
+  }
+
+  private link(row: number, isRepeated: boolean): void {
+    this.chain.push(row);
+    this.chainIsRepeated.push(isRepeated);
+    this.sinceRepeated = isRepeated ? 0 : this.sinceRepeated + 1;
+    if (this.sinceRepeated >= ROWS_AFTER) this.judgeChain();
+  }
+
+  private isWrittenTwice(row: number, before: number): boolean {
+    return this.raw.timeMs[row] === this.raw.timeMs[before] && sameReadings(this.raw, row, before);
+  }
+
+  private judgeChain(): void {
+    const { chain, chainIsRepeated, raw, instantMs } = this;
+    this.chain = [];
+    this.chainIsRepeated = [];
+    this.sinceRepeated = 0;
+    const [first] = chain;
+    if (first === undefined) return;
+    const offsets = zoneOffsets(this.zone);
+    const earlier: number[] = [];
+    const later: number[] = [];
+    // A row written twice in a row is in one pass with itself; it must not look like the next one.
+    const place: number[] = [];
+    for (let k = 0; k < chain.length; k++) {
+      const row = chain[k] as number;
+      const meaning =
+        chainIsRepeated[k] === true ? offsets.fromLocal(raw.timeMs[row] as number) : null;
+      const isRepeated = meaning?.kind === "repeated";
+      const shiftMs = isRepeated ? meaning.laterMs - meaning.earlierMs : 0;
+      if (
+        k > 0 &&
+        Math.abs(this.stepMs) < shiftMs &&
+        this.isWrittenTwice(row, chain[k - 1] as number)
+      ) {
+        place.push(earlier.length - 1);
+        continue;
+      }
+      place.push(earlier.length);
+      earlier.push(isRepeated ? meaning.earlierMs : (instantMs[row] as number));
+      later.push(isRepeated ? meaning.laterMs : (instantMs[row] as number));
+    }
+    const previousMs = first > 0 ? (instantMs[first - 1] as number) : NaN;
+    const { instantMs: chosen, isUnclear } = choosePasses(previousMs, earlier, later, this.stepMs);
+    for (let k = 0; k < chain.length; k++) {
+      if (chainIsRepeated[k] !== true) continue;
+      const row = chain[k] as number;
+      const at = chosen[place[k] as number] as number;
+      instantMs[row] = at;
+      const kind = isUnclear ? "unclear" : offsetName((raw.timeMs[row] as number) - at);
+      tally(this.repeatedHour, kind, () => ({
+        line: raw.line[row] as number,
+        column: null,
+        cell: null,
+        instantMs: at,
+      }));
+    }
+  }
 }
 
 /** `+02:00` */

@@ -106,14 +106,18 @@ function isFiller(text: string): boolean {
   return fillers > 0;
 }
 
+/** Numbers between these are never on the list. */
+export const LOWEST_USUAL = -999;
+export const HIGHEST_USUAL = 9e36;
+
 const NUMBERS: ReadonlySet<number> = new Set([
   -999, -999.9, -999.99, -9999, -9999.9, -9999.99, -9999.999, -99999, -99999.9, -999999,
 ]);
 
 /** True for numbers that no loop can show and loggers use for "no reading", in any unit. */
 export function isNumericSentinel(value: number): boolean {
-  if (value > -999 && value < 9e36) return false;
-  return NUMBERS.has(value) || Math.abs(value) >= 9e36;
+  if (value > LOWEST_USUAL && value < HIGHEST_USUAL) return false;
+  return NUMBERS.has(value) || Math.abs(value) >= HIGHEST_USUAL;
 }
 
 /** How a numeric sentinel is named in a count: `-9999`, `9.9E37`. */
@@ -200,7 +204,9 @@ function columnEnds(
   let maxCount = 0;
   for (let i = 0; i < values.length; i++) {
     const v = values[i] as number;
-    if (v !== v || isNumericSentinel(v) || skip.includes(v)) continue;
+    // Spelled out because this loop runs over every reading: NaN, and the range of the list.
+    if (!(v > LOWEST_USUAL && v < HIGHEST_USUAL) && (v !== v || isNumericSentinel(v))) continue;
+    if (skip.length > 0 && skip.includes(v)) continue;
     if (v < min) {
       secondMin = min;
       min = v;

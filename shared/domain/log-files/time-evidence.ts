@@ -1,6 +1,7 @@
 import { DATE_ORDERS, OrderBit, type CalendarCell } from "./calendar-cell";
 import type { Place } from "./column-evidence";
 import type { DateOrder } from "./recipe";
+import type { RowTokeniser } from "./row-tokeniser";
 
 const DAY_MS = 86_400_000;
 const MAX_STEPS = 2000;
@@ -61,8 +62,8 @@ export class TimeEvidence {
   private halfDayWraps = 0;
   private wrapPlace: Place | null = null;
 
-  /** @param place made only when something is proved, because it costs a string */
-  add(date: CalendarCell, time: CalendarCell, place: () => Place): boolean {
+  /** @param column of the date in `row`, for naming the rows that prove something */
+  add(date: CalendarCell, time: CalendarCell, row: RowTokeniser, column: number): boolean {
     const before = this.previous;
     const sameDate =
       before !== null &&
@@ -72,12 +73,12 @@ export class TimeEvidence {
     if (!sameDate) {
       const mask = date.orderMask();
       if (mask === 0) return false;
-      if ((this.seen | mask) !== this.seen || mask !== 7) this.weigh(mask, place);
+      if ((this.seen | mask) !== this.seen || mask !== 7) this.weigh(mask, row, column);
     }
     this.rows++;
-    if (this.rows === 1) this.firstCell = place().cell;
+    if (this.rows === 1) this.firstCell = row.cellText(column);
     if (date.offsetMinutes !== null || time.offsetMinutes !== null) this.withOffset++;
-    this.watchHours(time, sameDate ? before : null, place);
+    this.watchHours(time, sameDate ? before : null, row, column);
     if (sameDate) {
       const step = time.timeOfDayMs - before.timeOfDayMs;
       if (this.plainSteps.length < MAX_STEPS && step > 0) this.plainSteps.push(step);
@@ -89,7 +90,7 @@ export class TimeEvidence {
       monthDayYear: date.dayMs("monthDayYear"),
       yearMonthDay: date.dayMs("yearMonthDay"),
     };
-    if (before !== null) this.addDateChange(before, day, time.timeOfDayMs, place);
+    if (before !== null) this.addDateChange(before, day, time.timeOfDayMs, row, column);
     this.previous = {
       first: date.first,
       second: date.second,
@@ -100,11 +101,11 @@ export class TimeEvidence {
     return true;
   }
 
-  private weigh(mask: number, place: () => Place): void {
+  private weigh(mask: number, row: RowTokeniser, column: number): void {
     this.seen |= mask;
     for (const order of DATE_ORDERS) {
       if ((mask & OrderBit[order]) === 0 && !this.ruledOut.has(order))
-        this.ruledOut.set(order, place());
+        this.ruledOut.set(order, placeOf(row, column));
     }
   }
 
@@ -112,10 +113,11 @@ export class TimeEvidence {
     before: NonNullable<TimeEvidence["previous"]>,
     day: Record<DateOrder, number | null>,
     timeOfDayMs: number,
-    place: () => Place,
+    row: RowTokeniser,
+    column: number,
   ): void {
     this.changes++;
-    this.firstDateChange ??= place();
+    this.firstDateChange ??= placeOf(row, column);
     for (const order of DATE_ORDERS) {
       const from = before.day[order];
       const to = day[order];
@@ -130,7 +132,8 @@ export class TimeEvidence {
   private watchHours(
     time: CalendarCell,
     before: { readonly timeOfDayMs: number } | null,
-    place: () => Place,
+    row: RowTokeniser,
+    column: number,
   ): void {
     if (!time.hasTime) return;
     if (time.hasHalfDayMark) this.halfDayMarks++;
@@ -140,7 +143,7 @@ export class TimeEvidence {
       before !== null && before.timeOfDayMs >= DAY_MS / 2 && time.timeOfDayMs < 2 * 3_600_000;
     if (isWrap) {
       this.halfDayWraps++;
-      this.wrapPlace ??= place();
+      this.wrapPlace ??= placeOf(row, column);
     }
   }
 
@@ -194,4 +197,8 @@ export class TimeEvidence {
     const sorted = steps.map(Math.abs).sort((a, b) => a - b);
     return (sorted[sorted.length >> 1] as number) / 1000;
   }
+}
+
+function placeOf(row: RowTokeniser, column: number): Place {
+  return { line: row.line, cell: row.cellText(column) };
 }

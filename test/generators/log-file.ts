@@ -1,0 +1,451 @@
+import { zoneOffsets } from "@shared/domain/time/zone-offsets";
+import type {
+  ColumnMeaning,
+  ColumnUnit,
+  DateOrder,
+  DecimalMark,
+  LoggerClock,
+  Separator,
+} from "@shared/domain/log-files/recipe";
+import {
+  clockText,
+  dateText,
+  encodeText,
+  numberText,
+  numberValue,
+  type ByteStyle,
+  type ClockStyle,
+  type DateStyle,
+} from "./log-text";
+import { Random } from "./random";
+
+export { writeTwoFileLog, type TwoFileLog } from "./two-file-log";
+
+/** A written file, the series that is in it, and the answers to everything the file may not prove. */
+export interface GeneratedLog {
+  readonly seed: number;
+  readonly bytes: Uint8Array;
+  readonly text: string;
+  readonly siteZone: string;
+  /** UTC ms, strictly ascending, one a distinct reading. */
+  readonly instantMs: readonly number[];
+  /** By channel, in the file's unit; NaN where the logger had no reading. */
+  readonly values: Readonly<Partial<Record<ColumnMeaning, readonly number[]>>>;
+  readonly answers: {
+    readonly clock: LoggerClock;
+    readonly order: DateOrder;
+    /** By column. */
+    readonly meanings: readonly ColumnMeaning[];
+    readonly units: readonly (ColumnUnit | null)[];
+    readonly marks: readonly DecimalMark[];
+  };
+  readonly written: {
+    readonly repeats: number;
+    readonly moved: number;
+    readonly sentinels: number;
+  };
+}
+
+interface ChannelPlan {
+  readonly meaning: "flow" | "supply" | "return" | "signal";
+  readonly names: readonly string[];
+  readonly unit: ColumnUnit;
+  readonly unitNames: readonly string[];
+  readonly decimals: number;
+  readonly low: number;
+  readonly high: number;
+}
+
+const FLOW_UNITS: readonly { unit: ColumnUnit; names: readonly string[]; scale: number }[] = [
+  { unit: "m3/h", names: ["m³/h", "m3/h", "m³/hr"], scale: 1 },
+  { unit: "L/s", names: ["L/s", "l/s", "lps"], scale: 0.28 },
+  { unit: "L/min", names: ["l/min", "LPM", "L/min"], scale: 16.7 },
+  { unit: "US gpm", names: ["gpm", "GPM", "US gpm"], scale: 4.4 },
+];
+const TEMPERATURE_UNITS: readonly {
+  unit: ColumnUnit;
+  names: readonly string[];
+  low: number;
+  high: number;
+}[] = [
+  { unit: "degC", names: ["°C", "degC", "Celsius"], low: 5, high: 18 },
+  { unit: "degF", names: ["°F", "degF"], low: 42, high: 65 },
+  { unit: "K", names: ["K", "Kelvin"], low: 278, high: 292 },
+];
+const ZONES = [
+  "Europe/Paris",
+  "Europe/London",
+  "America/New_York",
+  "Asia/Tokyo",
+  "Australia/Lord_Howe",
+];
+const STARTS = ["2025-10-25T20:00Z", "2026-03-28T21:00Z", "2025-11-02T03:00Z", "2026-04-04T12:00Z"];
+const SENTINELS = [
+  "-9999",
+  "OL",
+  "+OL",
+  "---",
+  "#N/A",
+  "NaN",
+  "null",
+  "no data",
+  "Err",
+  "9.9E37",
+  "-999.9",
+  "",
+];
+const MINUTE = 60_000;
+
+const ORDER_OF: Readonly<Record<DateStyle, DateOrder>> = {
+  dmy: "dayMonthYear",
+  dmyShort: "dayMonthYear",
+  dmyLoose: "dayMonthYear",
+  monthEnglish: "dayMonthYear",
+  monthGerman: "dayMonthYear",
+  mdy: "monthDayYear",
+  mdyShort: "monthDayYear",
+  mdyLoose: "monthDayYear",
+  monthFirst: "monthDayYear",
+  ymd: "yearMonthDay",
+  ymdShort: "yearMonthDay",
+  compact: "yearMonthDay",
+};
+
+type TimeStyle =
+  | "calendar"
+  | "split"
+  | "epochSeconds"
+  | "epochMilliseconds"
+  | "spreadsheetDays"
+  | "offset"
+  | "zulu";
+
+/** Writes a known series in a dialect that follows from the seed: what recognition and reading must get right. */
+export function writeLogFile(seed: number): GeneratedLog {
+  const random = new Random(seed);
+  const siteZone = random.pick(ZONES);
+  const separator = random.pick<Separator>([",", ",", ";", ";", "\t", "|", " "]);
+  const quoted = separator !== " " && random.chance(0.25);
+  const mark: DecimalMark = (separator === "," && !quoted) || random.chance(0.5) ? "." : ",";
+  const bytesAs = random.pick<ByteStyle>([
+    "utf-8",
+    "utf-8",
+    "utf-8 with mark",
+    "utf-16le",
+    "utf-16le with mark",
+    "utf-16be",
+    "utf-16be with mark",
+    "windows-1252",
+  ]);
+  const group = pickGroup(random, separator, quoted, mark, bytesAs);
+  const channels = planChannels(random);
+  const withUnits = random.pick(["header", "header", "row", "none"] as const);
+
+  const timeStyle = random.pick<TimeStyle>([
+    "calendar",
+    "calendar",
+    "calendar",
+    "split",
+    "split",
+    "offset",
+    "zulu",
+    "epochSeconds",
+    "epochMilliseconds",
+    "spreadsheetDays",
+  ]);
+  const stepMs = random.pick([1000, 10_000, MINUTE, 5 * MINUTE, 15 * MINUTE, 60 * MINUTE]);
+  const clockStyle = pickClock(random, stepMs, separator);
+  const dateStyle = pickDate(random, separator);
+  const dateSeparator = dateStyle.startsWith("ymd")
+    ? random.pick(["-", "/"])
+    : random.pick(["/", ".", "-"]);
+  const clock: LoggerClock = random.pick<LoggerClock>([
+    { kind: "site" },
+    { kind: "site" },
+    { kind: "utc" },
+    { kind: "fixedOffset", offsetMinutes: random.pick([60, -300, 330]) },
+  ]);
+
+  const rows = random.whole(12, 260);
+  const start = random.chance(0.3)
+    ? Date.parse(random.pick(STARTS))
+    : Date.UTC(2024, random.whole(0, 23), random.whole(1, 28), random.whole(0, 23));
+  const instantMs: number[] = [];
+  for (
+    let at = start;
+    instantMs.length < rows;
+    at += stepMs * (random.chance(0.01) ? random.whole(2, 40) : 1)
+  )
+    instantMs.push(at);
+
+  const toLocal = (utc: number): number => {
+    if (clock.kind === "fixedOffset") return utc + clock.offsetMinutes * MINUTE;
+    return clock.kind === "utc" ? utc : zoneOffsets(siteZone).toLocal(utc);
+  };
+  const writeTime = (utc: number): string[] => {
+    const local = toLocal(utc);
+    switch (timeStyle) {
+      case "epochSeconds":
+        return [String(utc / 1000)];
+      case "epochMilliseconds":
+        return [String(utc)];
+      case "spreadsheetDays":
+        return [(local / 86_400_000 + 25_569).toFixed(10).replace(".", mark)];
+      case "zulu":
+        return [`${dateText(utc, "ymd", "-")}T${clockText(utc, "fraction", ".")}Z`];
+      case "offset": {
+        const offset = zoneOffsets(siteZone).offsetAt(utc) / MINUTE;
+        const sign = offset < 0 ? "-" : "+";
+        const hhmm = `${String(Math.floor(Math.abs(offset) / 60)).padStart(2, "0")}:${String(Math.abs(offset) % 60).padStart(2, "0")}`;
+        return [
+          `${dateText(utc + offset * MINUTE, "ymd", "-")}T${clockText(utc + offset * MINUTE, "seconds", ".")}${sign}${hhmm}`,
+        ];
+      }
+      default: {
+        const date = dateText(local, dateStyle, dateSeparator);
+        const time = clockText(local, clockStyle, ".");
+        return timeStyle === "split" || separator === " " ? [date, time] : [`${date} ${time}`];
+      }
+    }
+  };
+  const timeCells = writeTime(start).length;
+  const series = channels.map((channel) => makeSeries(random, channel, rows));
+
+  let sentinels = 0;
+  const sentinelKinds = SENTINELS.filter(
+    (token) => separator !== " " || (token !== "" && !token.includes(" ")),
+  );
+  const usedSentinels = [random.pick(sentinelKinds), random.pick(sentinelKinds)];
+  const cells = instantMs.map((utc, row) => {
+    const values = channels.map((channel, k) => {
+      const scaled = (series[k] as number[])[row] as number;
+      if (!random.chance(0.015)) return numberText(scaled, channel.decimals, { mark, group });
+      sentinels++;
+      (series[k] as number[])[row] = NaN;
+      return random.pick(usedSentinels);
+    });
+    return [...writeTime(utc), ...values];
+  });
+
+  const stamp = (row: number): string => (cells[row] as string[]).slice(0, timeCells).join(" ");
+  const order = cells.map((_, i) => i);
+  let moved = 0;
+  let repeats = 0;
+  if (random.chance(0.4)) {
+    for (let i = 2; i + 2 < order.length; i++) {
+      // Equal labels of a repeated hour can only be told apart by their order.
+      const sameLabel = stamp(order[i] as number) === stamp(order[i + 1] as number);
+      if (!random.chance(0.03) || sameLabel) continue;
+      [order[i], order[i + 1]] = [order[i + 1] as number, order[i] as number];
+      moved++;
+      i++;
+    }
+  }
+  if (random.chance(0.4)) {
+    for (let i = order.length - 1; i > 0; i--) {
+      if (!random.chance(0.03)) continue;
+      order.splice(i, 0, order[i] as number);
+      repeats++;
+    }
+  }
+
+  const header = writeHeader(random, channels, timeStyle, timeCells, withUnits, bytesAs, separator);
+  const lines: string[] = [...writePreamble(random, separator)];
+  const join = (row: readonly string[], all: boolean): string =>
+    row.map((cell) => quoteCell(cell, separator, all && quoted, quoted)).join(separator);
+  lines.push(join(header.names, true));
+  if (withUnits === "row") lines.push(join(header.units, true));
+  for (const i of order) lines.push(join(cells[i] as string[], true));
+  if (random.chance(0.2)) lines.push("End of log");
+  const lineEnd = random.pick(["\n", "\r\n", "\r\n", "\r"]);
+  const text = lines.join(lineEnd) + (random.chance(0.9) ? lineEnd : "");
+
+  const isSplit = timeCells === 2;
+  return {
+    seed,
+    bytes: encodeText(text, bytesAs),
+    text,
+    siteZone,
+    instantMs,
+    values: Object.fromEntries(
+      channels.map(({ meaning, decimals }, k) => [
+        meaning,
+        (series[k] as number[]).map((v) => (Number.isNaN(v) ? NaN : numberValue(v, decimals))),
+      ]),
+    ),
+    answers: {
+      clock:
+        timeStyle === "spreadsheetDays" || timeStyle === "calendar" || timeStyle === "split"
+          ? clock
+          : { kind: "utc" },
+      order: ORDER_OF[dateStyle],
+      meanings: [
+        ...(isSplit ? (["date", "timeOfDay"] as const) : (["time"] as const)),
+        ...channels.map(({ meaning }) => meaning),
+      ],
+      units: [...(isSplit ? [null, null] : [null]), ...channels.map(({ unit }) => unit)],
+      marks: [...(isSplit ? [mark, mark] : [mark]), ...channels.map(() => mark)],
+    },
+    written: { repeats, moved, sentinels },
+  };
+}
+
+function pickGroup(
+  random: Random,
+  separator: Separator,
+  quoted: boolean,
+  mark: DecimalMark,
+  bytesAs: ByteStyle,
+): string {
+  if (random.chance(0.5)) return "";
+  const options = ["'", "\u00a0"];
+  if (bytesAs !== "windows-1252") options.push("\u202f");
+  if (separator !== " ") options.push(" ");
+  const other = mark === "." ? "," : ".";
+  if (other !== separator || quoted) options.push(other);
+  return random.pick(options);
+}
+
+function pickClock(random: Random, stepMs: number, separator: Separator): ClockStyle {
+  const styles: ClockStyle[] = ["seconds", "fraction"];
+  if (stepMs % MINUTE === 0) styles.push("minutes", "minutes");
+  if (separator !== " ") styles.push("halfDay");
+  return random.pick(styles);
+}
+
+function pickDate(random: Random, separator: Separator): DateStyle {
+  const styles: DateStyle[] = [
+    "dmy",
+    "dmy",
+    "mdy",
+    "ymd",
+    "ymd",
+    "dmyShort",
+    "mdyShort",
+    "ymdShort",
+    "dmyLoose",
+    "mdyLoose",
+    "monthEnglish",
+    "compact",
+  ];
+  if (separator !== " ") styles.push("monthGerman", "monthFirst");
+  return random.pick(styles);
+}
+
+function planChannels(random: Random): readonly ChannelPlan[] {
+  const flow = random.pick(FLOW_UNITS);
+  const temperature = random.pick(TEMPERATURE_UNITS);
+  const decimals = random.whole(1, 3);
+  const all: ChannelPlan[] = [
+    {
+      meaning: "flow",
+      names: ["Flow", "Flow rate", "Durchfluss", "Volumenstrom", "Débit"],
+      unit: flow.unit,
+      unitNames: flow.names,
+      decimals: random.whole(0, 3),
+      low: 0,
+      high: random.pick([40, 400, 4000]) * flow.scale,
+    },
+    {
+      meaning: "supply",
+      names: ["Supply", "Vorlauf", "Départ", "T supply"],
+      unit: temperature.unit,
+      unitNames: temperature.names,
+      decimals,
+      low: temperature.low,
+      high: temperature.high,
+    },
+    {
+      meaning: "return",
+      names: ["Return", "Rücklauf", "Retour", "T return"],
+      unit: temperature.unit,
+      unitNames: temperature.names,
+      decimals,
+      low: temperature.low,
+      high: temperature.high,
+    },
+    {
+      meaning: "signal",
+      names: ["Signal", "Sig", "Signalstärke"],
+      unit: "%",
+      unitNames: ["%"],
+      decimals: 0,
+      low: 60,
+      high: 99,
+    },
+  ];
+  const used = random.pick([
+    all,
+    all.slice(0, 3),
+    all.slice(0, 1),
+    all.slice(1, 3),
+    all.slice(0, 3),
+  ]);
+  return random.chance(0.3) ? [...used].reverse() : used;
+}
+
+function makeSeries(random: Random, { low, high, decimals }: ChannelPlan, rows: number): number[] {
+  const scale = 10 ** decimals;
+  let level = low + (high - low) * random.next();
+  return Array.from({ length: rows }, () => {
+    level = Math.min(high, Math.max(low, level + (random.next() - 0.5) * (high - low) * 0.1));
+    return Math.round(level * scale);
+  });
+}
+
+function writeHeader(
+  random: Random,
+  channels: readonly ChannelPlan[],
+  timeStyle: TimeStyle,
+  timeCells: number,
+  withUnits: "header" | "row" | "none",
+  bytesAs: ByteStyle,
+  separator: Separator,
+): { names: string[]; units: string[] } {
+  const language = random.whole(0, 2);
+  const plain = (text: string): string => (separator === " " ? text.replaceAll(" ", "_") : text);
+  const single =
+    timeStyle === "spreadsheetDays"
+      ? ["Date/time", "Zeitstempel", "Horodatage"]
+      : ["Timestamp", "Datum/Zeit", "Date heure"];
+  const names =
+    timeCells === 2
+      ? [
+          ["Date", "Datum", "Date"][language] as string,
+          ["Time", "Uhrzeit", "Heure"][language] as string,
+        ]
+      : [plain(single[language] as string)];
+  const units = timeCells === 2 ? ["", ""] : [""];
+  // All temperatures of a file are in one unit; each spells it as the first does.
+  for (const channel of channels) {
+    const name = plain(channel.names[Math.min(language, channel.names.length - 1)] as string);
+    const unit = channel.unitNames[random.whole(0, channel.unitNames.length - 1)] as string;
+    const [open, close] = random.pick([
+      ["[", "]"],
+      ["(", ")"],
+    ] as const);
+    names.push(withUnits === "header" ? plain(`${name} ${open}${unit}${close}`) : name);
+    units.push(plain(unit));
+  }
+  if (separator === " ") units.forEach((unit, i) => (units[i] = unit === "" ? "-" : unit));
+  void bytesAs;
+  return { names, units };
+}
+
+function writePreamble(random: Random, separator: Separator): readonly string[] {
+  const lines = [
+    `Logger${separator}HCW-7`,
+    `Serial:${separator === "," ? " " : separator}50417`,
+    `Period${separator}60 s`,
+    "# written by the flow logger",
+    "",
+  ];
+  return lines.slice(0, random.pick([0, 0, 2, 3, 5]));
+}
+
+function quoteCell(cell: string, separator: Separator, always: boolean, allowed: boolean): string {
+  const mustQuote = cell.includes(separator) || cell.includes('"');
+  if (!always && !mustQuote) return cell;
+  if (!allowed) throw new Error(`"${cell}" needs quotes in a dialect without them.`);
+  return `"${cell.replaceAll('"', '""')}"`;
+}
