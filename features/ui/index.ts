@@ -54,6 +54,7 @@ export {
   serviceColours,
   type ServiceColours,
 } from "./pipe-drawing";
+export { PipeSection, useBoreText, type PipeSectionProps } from "./pipe-section";
 export { ProgressLoop, StageList, type ProgressLoopProps, type StageState } from "./progress-loop";
 export {
   QualityKey,

@@ -1,0 +1,1 @@
+export { BuildingsScreen as default } from "@features/places/buildings-screen";

@@ -1,0 +1,1 @@
+export { EditSiteScreen as default } from "@features/places/site-form-screen";

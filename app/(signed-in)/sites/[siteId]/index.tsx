@@ -1,0 +1,1 @@
+export { SiteScreen as default } from "@features/places/site-screen";

@@ -1,0 +1,1 @@
+export { EditLoopScreen as default } from "@features/places/loop-form-screen";

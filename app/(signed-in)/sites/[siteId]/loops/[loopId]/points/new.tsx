@@ -1,0 +1,1 @@
+export { NewPointScreen as default } from "@features/places/point-form-screen";

@@ -1,0 +1,1 @@
+export { LoopsScreen as default } from "@features/places/loops-screen";

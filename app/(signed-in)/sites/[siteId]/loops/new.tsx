@@ -1,0 +1,1 @@
+export { NewLoopScreen as default } from "@features/places/loop-form-screen";

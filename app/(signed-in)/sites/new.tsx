@@ -1,0 +1,1 @@
+export { NewSiteScreen as default } from "@features/places/site-form-screen";
