@@ -1,10 +1,12 @@
 import type { Language } from "./i18n";
 import { localeOf } from "./numbers";
 
-export type DateStyle = "weekdayDay" | "dayMonth" | "full" | "monthYear" | "weekdayShort";
+export type DateStyle =
+  "dayMonthYear" | "weekdayDay" | "dayMonth" | "full" | "monthYear" | "weekdayShort";
 
 const fields: Readonly<Record<DateStyle, Intl.DateTimeFormatOptions>> = {
   weekdayDay: { weekday: "short", day: "numeric", month: "short" },
+  dayMonthYear: { day: "numeric", month: "short", year: "numeric" },
   dayMonth: { day: "numeric", month: "short" },
   full: { weekday: "long", day: "numeric", month: "long", year: "numeric" },
   monthYear: { month: "long", year: "numeric" },

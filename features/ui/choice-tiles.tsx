@@ -52,7 +52,11 @@ export function ChoiceTiles<Value extends string>(props: ChoiceTilesProps<Value>
           : { "aria-labelledby": `${id}-label` })}
         {...(note ? { "aria-describedby": `${id}-note` } : {})}
         aria-required={props.required}
-        style={{ gap: 8, flexDirection: columns > 1 ? "row" : "column", flexWrap: "wrap" }}
+        style={{
+          gap: 8,
+          flexDirection: columns > 1 ? "row" : "column",
+          flexWrap: columns > 1 ? "wrap" : "nowrap",
+        }}
       >
         {props.choices.map((choice, index) => {
           const on = index === picked;

@@ -147,7 +147,7 @@ function FullLoop(props: LoopCardProps & Drawn) {
           />
           <FlowArrow
             pipe={pipe}
-            x={props.meterSide === "supply" ? right - 170 : right - 38}
+            x={props.meterSide === "supply" ? Math.max(152, right - 170) : right - 38}
             fill={hues.main}
             on={colour[ground]}
           />

@@ -18,7 +18,7 @@ export function risingRun(
   span: Span,
   width: number,
   height: number,
-): { readonly before: string; readonly after: string } {
+): { readonly before: string; readonly after: string; readonly whole: string } {
   const foot = height - 1.25;
   const top = 2;
   const r = BEND;
@@ -28,7 +28,11 @@ export function risingRun(
   const before =
     `M0 ${foot}H${start}a${r} ${r} 0 0 0 ${r} ${-r}V${top + r}a${r} ${r} 0 0 1 ${r} ${-r}` +
     `H${right - r}a${r} ${r} 0 0 1 ${r} ${r}V${foot - r}a${r} ${r} 0 0 0 ${r} ${r}`;
-  return { before, after: `M${Math.min(width, right + r)} ${foot}H${width}` };
+  return {
+    before,
+    after: `M${Math.min(width, right + r)} ${foot}H${width}`,
+    whole: `${before}H${width}`,
+  };
 }
 
 /** The line down the right edge of a rail, bending out to the left round the current item. */

@@ -62,7 +62,7 @@ export function Sheet(props: SheetProps) {
           },
           place,
           webStyle({
-            boxShadow: float,
+            boxShadow: props.foot ? "none" : float,
             maxHeight: bottom ? "88%" : "100dvh",
             overflowY: "auto",
             ...(bottom ? {} : { height: "100dvh" }),

@@ -1,5 +1,5 @@
 import { Link } from "expo-router";
-import type { CSSProperties, ReactNode } from "react";
+import { useEffect, useRef, useState, type CSSProperties, type ReactNode } from "react";
 
 import { formatFigure, NO_BREAK_SPACE, useFormat } from "@features/i18n";
 
@@ -20,13 +20,20 @@ export function Table<Row>(props: TableProps<Row>) {
 function WideTable<Row>(props: TableProps<Row>) {
   const { colour } = useTheme();
   const { columns, rows, rowKey } = props;
+  const [box, overflows] = useOverflow();
+  const scrolling = overflows ? { role: "region", "aria-label": props.caption, tabIndex: 0 } : {};
   const caption: CSSProperties = props.captionHidden
     ? { position: "absolute", width: 1, height: 1, overflow: "hidden", clipPath: "inset(50%)" }
-    : { ...cssType(typeScale.heading), textAlign: "left", paddingBottom: 8, color: colour.ink };
+    : {
+        ...cssType(typeScale.heading),
+        textAlign: "left",
+        padding: `14px ${edge}px 4px`,
+        color: colour.ink,
+      };
   if (rows.length === 0 && props.empty) return <>{props.empty}</>;
   return (
     // A very wide table scrolls inside itself, with the keyboard too, instead of widening the page.
-    <div style={{ overflowX: "auto", position: "relative" }}>
+    <div ref={box} {...scrolling} style={{ overflowX: "auto", position: "relative" }}>
       <table
         style={{
           borderCollapse: "collapse",
@@ -64,6 +71,22 @@ function WideTable<Row>(props: TableProps<Row>) {
 }
 
 const edge = 16;
+
+/** Whether a box is wider inside than outside: only then does it take part in the tab order. */
+function useOverflow() {
+  const box = useRef<HTMLDivElement>(null);
+  const [overflows, setOverflows] = useState(false);
+  useEffect(() => {
+    const element = box.current;
+    if (!element || typeof ResizeObserver === "undefined") return;
+    const observer = new ResizeObserver(() =>
+      setOverflows(element.scrollWidth > element.clientWidth + 1),
+    );
+    observer.observe(element);
+    return () => observer.disconnect();
+  }, []);
+  return [box, overflows] as const;
+}
 
 function Head<Row>({
   column,

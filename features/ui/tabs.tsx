@@ -36,7 +36,7 @@ export function Tabs<Key extends string>(props: TabsProps<Key>) {
         <View aria-hidden style={{ position: "absolute", left: 0, right: 0, bottom: 0, height }}>
           <Svg width={width} height={height}>
             <Path
-              d={run.before + run.after.replace(/^M\S+ \S+/, "")}
+              d={run.whole}
               fill={colour[props.ground ?? "pad"]}
               stroke={colour.ink}
               strokeWidth={stroke.run}

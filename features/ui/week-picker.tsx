@@ -85,7 +85,7 @@ function WeekRow(props: WeekPickerProps & { week: string[]; month: string }) {
         backgroundColor: on ? colour.markTint : "transparent",
       }}
     >
-      <View style={{ width: 52 - stroke.run, paddingLeft: 12 }}>
+      <View style={{ width: 52 - stroke.run, paddingLeft: 12, paddingBottom: 8 }}>
         <Text variant={on ? "navOn" : "subhead"} level="none" tone={off ? "ink3" : "ink"}>
           {String(isoWeek(monday))}
         </Text>

@@ -23,6 +23,8 @@ export interface TextInputPrimitiveProps {
   spellCheck?: boolean;
   min?: string;
   max?: string;
+  /** The words of something else stand over it: keep its own out of sight. */
+  veiled?: boolean;
 }
 
 const modes = {

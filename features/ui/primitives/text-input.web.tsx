@@ -24,7 +24,7 @@ export function TextInputPrimitive(props: TextInputPrimitiveProps) {
   const { kind = "text" } = props;
   const style: CSSProperties = {
     ...cssType(typeScale[props.variant]),
-    color: props.invalid ? colour.madder : colour.ink,
+    color: props.veiled ? "transparent" : props.invalid ? colour.madder : colour.ink,
     background: "transparent",
     border: 0,
     padding: 0,
