@@ -72,6 +72,10 @@ export function presentBasis({
   };
 }
 
+function longer({ heating, cooling }: EnergyTotals): RegisterTotals {
+  return heating.runningS > cooling.runningS ? heating : cooling;
+}
+
 export function presentColumns(rows: readonly EnergyRow[]): NonNullable<EnergyAnswer["columns"]> {
   const covered = (of: (totals: EnergyTotals) => number | null, decimals: number) =>
     rows.map(({ totals }) => (totals.coveredS > 0 ? roundedOrNull(of(totals), decimals) : null));
@@ -84,6 +88,7 @@ export function presentColumns(rows: readonly EnergyRow[]): NonNullable<EnergyAn
     volumeM3: covered((totals) => totals.volumeM3, 4),
     meanSupplyC: covered((totals) => totals.meanSupplyC, 3),
     meanReturnC: covered((totals) => totals.meanReturnC, 3),
+    flowWeightedDeltaTK: covered((totals) => deltaTMeans(longer(totals)).flowWeightedK, 4),
     suppressedKwh: rows.map(({ totals }) => rounded(totals.suppressedKwh, 4)),
     minPowerKw: covered((totals) => totals.minPowerKw, 3),
     maxPowerKw: covered((totals) => totals.maxPowerKw, 3),

@@ -56,6 +56,8 @@ const energyColumns = z.object({
   volumeM3: z.array(z.number().nullable()),
   meanSupplyC: z.array(z.number().nullable()),
   meanReturnC: z.array(z.number().nullable()),
+  /** Of the register that ran longer; null where none ran. */
+  flowWeightedDeltaTK: z.array(z.number().nullable()),
   suppressedKwh: z.array(z.number()),
   minPowerKw: z.array(z.number().nullable()),
   maxPowerKw: z.array(z.number().nullable()),

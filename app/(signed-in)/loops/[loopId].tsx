@@ -1,0 +1,1 @@
+export { LoopScreen as default } from "@features/loops/loop-screen";

@@ -1,0 +1,175 @@
+import { useQueryClient } from "@tanstack/react-query";
+import { useMemo } from "react";
+import { View } from "react-native";
+
+import { useWords } from "@features/i18n";
+import { ChartKey } from "@features/charts/chart-key";
+import { LoopChart } from "@features/charts/loop-chart";
+import {
+  Card,
+  QualityKey,
+  Row,
+  Segments,
+  TapChip,
+  Text,
+  TextLink,
+  useBreakpoint,
+} from "@features/ui";
+
+import { downloadAddress } from "./downloads-menu";
+import { EnergyTable } from "./energy-table";
+import type { LoopFigures } from "./loop-context";
+import { seriesLoader } from "./loops-queries";
+import { ReadingsTable } from "./readings-table";
+import { energyQuantity, registersOf, tagService } from "./register-words";
+import { saveFile } from "./save-file";
+
+export type TableStep = "day" | "hour" | "row";
+
+export interface ChartCardProps extends LoopFigures {
+  shows: "chart" | "table";
+  step: TableStep;
+  onShow: (shows: "chart" | "table") => void;
+  onStep: (step: TableStep) => void;
+}
+
+/** Supply, return and flow of the range, as a chart or as a table of the same data. */
+export function ChartCard(props: ChartCardProps) {
+  const { shows, onShow, loop } = props;
+  const t = useWords("loops");
+  const phone = useBreakpoint() === "phone";
+  const service = tagService(loop.service);
+  const segments = (
+    <Segments
+      label={t("chart.as")}
+      value={shows}
+      size="dense"
+      options={[
+        { value: "chart", label: t("chart.chart") },
+        { value: "table", label: t("chart.table") },
+      ]}
+      onChange={onShow}
+    />
+  );
+  return (
+    <Card label={t("chart.title")} pad={phone ? 3 : 4}>
+      <Row justify="space-between" wrap gap={3} style={{ marginBottom: 8 }}>
+        <Text variant={phone ? "subhead" : "heading"} level={2}>
+          {t("chart.title")}
+        </Text>
+        {phone ? (
+          segments
+        ) : (
+          <Row gap={4} wrap>
+            <ChartKey service={service} />
+            {segments}
+          </Row>
+        )}
+      </Row>
+      {shows === "chart" ? <Picture {...props} /> : <Rows {...props} />}
+    </Card>
+  );
+}
+
+function Picture(props: ChartCardProps) {
+  const { loop, point, summary, format, site } = props;
+  const t = useWords("loops");
+  const client = useQueryClient();
+  const phone = useBreakpoint() === "phone";
+  const load = useMemo(() => seriesLoader(client, point.id), [client, point.id]);
+  const range = useMemo(
+    () => ({ startMs: Date.parse(summary.from), endMs: Date.parse(summary.to) }),
+    [summary.from, summary.to],
+  );
+  return (
+    <View style={{ gap: 6 }}>
+      <LoopChart
+        key={`${point.id} ${summary.from} ${summary.to}`}
+        label={`${t("chart.title")}, ${loop.tag}`}
+        summary={useChartSummary(props)}
+        service={loop.service}
+        range={range}
+        zone={site.zone}
+        format={format}
+        days={summary.basis.blockedBy ? noDays : summary.days}
+        load={load}
+      />
+      <View style={{ gap: 6, paddingLeft: phone ? 0 : 38 }}>
+        {phone ? <ChartKey service={tagService(loop.service)} /> : null}
+        <QualityKey only={["measured", "excluded", "missing"]} />
+      </View>
+    </View>
+  );
+}
+
+const noDays: LoopFigures["summary"]["days"] = [];
+
+/** What the picture shows, in one sentence, for those who do not see it. */
+function useChartSummary({ summary, loop, format, rangeName }: LoopFigures): string {
+  const t = useWords("loops");
+  const { busiest, totals } = summary;
+  if (totals.coveredS === 0) return t("chart.saidEmpty", { tag: loop.tag, range: rangeName });
+  if (busiest === null) return t("chart.saidReadings", { tag: loop.tag, range: rangeName });
+  const energies = registersOf(loop.service)
+    .map((register) =>
+      t(`chart.saidEnergy.${register}`, {
+        energy: format.withUnit(totals[register].energyKwh, energyQuantity[register]),
+      }),
+    )
+    .join(", ");
+  return t("chart.said", {
+    tag: loop.tag,
+    range: rangeName,
+    energies,
+    when: format.dateTime(Date.parse(busiest.from)),
+    supply: format.withUnit(busiest.supplyC, "temperature", 1),
+    return: format.withUnit(busiest.returnC, "temperature", 1),
+    flow: format.withUnit(busiest.flowM3PerHour, "flow", 1),
+  });
+}
+
+function Rows(props: ChartCardProps) {
+  const { step, onStep, point, range, format, summary } = props;
+  const t = useWords("loops");
+  const phone = useBreakpoint() === "phone";
+  const steps = [
+    ["day", t("table.day")],
+    ["hour", t("table.hour")],
+    ["row", rowName()],
+  ] as const;
+  const download = () =>
+    saveFile(downloadAddress(point.id, range, step === "row" ? "readings" : step));
+  return (
+    <View style={{ gap: 12 }}>
+      <View style={{ marginHorizontal: phone ? 0 : -16 }}>
+        {step === "row" ? (
+          <ReadingsTable {...props} />
+        ) : (
+          <EnergyTable key={step} {...props} step={step} />
+        )}
+      </View>
+      <Row justify="space-between" wrap gap={3}>
+        <Row gap={2} wrap>
+          <Text variant="table" tone="ink2">
+            {t("table.rowsOf")}
+          </Text>
+          {steps.map(([key, label]) => (
+            <TapChip
+              key={key}
+              label={label}
+              picked={step === key}
+              size={phone ? "default" : "dense"}
+              onPress={() => onStep(key)}
+            />
+          ))}
+        </Row>
+        <TextLink label={t("table.download")} variant="bodyWide" onPress={download} />
+      </Row>
+    </View>
+  );
+  function rowName(): string {
+    const { rows, expectedS } = summary.totals;
+    const stepS = rows.expected ? Math.round(expectedS / rows.expected) : null;
+    return stepS === null ? t("table.asRead") : format.duration(stepS);
+  }
+}

@@ -1,0 +1,144 @@
+import { View } from "react-native";
+
+import { useWords } from "@features/i18n";
+import { Banner, Figure, Row, Text, TextLink, useBreakpoint } from "@features/ui";
+
+import type { LoopFigures } from "./loop-context";
+import { energyQuantity, registersOf, type RegisterName } from "./register-words";
+import { shownFigure } from "./shown-figure";
+
+/** A register beside the loop's own is named once it holds this share of it. */
+const remarkableShare = 0.001;
+
+/** Measured energy of the range, each register by itself, and how much time stands behind it. */
+export function Headline(props: LoopFigures & { onWorkings: () => void }) {
+  const { loop, summary } = props;
+  const t = useWords("loops");
+  const phone = useBreakpoint() === "phone";
+  const registers = registersOf(loop.service);
+  if (summary.basis.blockedBy) return <Blocked {...props} reason={summary.basis.blockedBy} />;
+  return (
+    <View>
+      <Row gap={8} wrap align="flex-start">
+        {registers.map((register) => (
+          <RegisterFigure
+            key={register}
+            {...props}
+            register={register}
+            alone={registers.length === 1}
+          />
+        ))}
+      </Row>
+      <View style={{ marginTop: phone ? 4 : 6, gap: 2 }}>
+        <Text variant="small" tone="ink3">
+          <CoveredWords {...props} />
+        </Text>
+        <OtherRegister {...props} shown={registers} />
+        <Suppressed {...props} />
+        {summary.basis.recalculating ? (
+          <Text variant="small" tone="brass" role="status">
+            {t("headline.recalculating")}
+          </Text>
+        ) : null}
+      </View>
+    </View>
+  );
+}
+
+function RegisterFigure(
+  props: LoopFigures & { register: RegisterName; alone: boolean; onWorkings: () => void },
+) {
+  const { register, summary, format, rangeName } = props;
+  const t = useWords("loops");
+  const title = t(`headline.energy.${register}`, { range: rangeName });
+  const covered = summary.totals.coveredS > 0;
+  const energy = covered ? summary.totals[register].energyKwh : null;
+  return (
+    <View>
+      <Text variant="small" tone="ink3" hidden>
+        {title}
+      </Text>
+      <Figure
+        {...shownFigure(format, energy, energyQuantity[register])}
+        size={props.alone ? "xl" : "l"}
+        said={title}
+        onOpenWorkings={props.onWorkings}
+      />
+    </View>
+  );
+}
+
+function CoveredWords({ summary, format }: LoopFigures) {
+  const t = useWords("loops");
+  const { coveredS, expectedS, coverage } = summary.totals;
+  const hours = (seconds: number) => format.number(seconds / 3600, seconds % 3600 < 1 ? 0 : 1);
+  if (coveredS === 0) return t("headline.coversNothing");
+  if (coverage !== null && coverage >= 0.9995)
+    return t("headline.coversAll", { hours: hours(expectedS) });
+  return t("headline.covers", { hours: hours(coveredS), of: hours(expectedS) });
+}
+
+function OtherRegister(props: LoopFigures & { shown: readonly RegisterName[] }) {
+  const { shown, summary, format } = props;
+  const t = useWords("loops");
+  const [only] = shown;
+  if (shown.length !== 1 || only === undefined) return null;
+  const other = only === "heating" ? "cooling" : "heating";
+  const energy = summary.totals[other].energyKwh;
+  if (energy <= remarkableShare * Math.max(summary.totals[only].energyKwh, 1)) return null;
+  return (
+    <Text variant="small" tone="ink2">
+      {t(`headline.other.${other}`, { energy: format.withUnit(energy, energyQuantity[other]) })}
+    </Text>
+  );
+}
+
+function Suppressed({ summary, format, loop }: LoopFigures) {
+  const t = useWords("loops");
+  const { suppressedKwh, suppressedS } = summary.totals;
+  if (suppressedS === 0) return null;
+  const quantity = loop.service === "hot" ? "heatingEnergy" : "coolingEnergy";
+  return (
+    <Text variant="small" tone="ink2">
+      {t("headline.suppressed", {
+        energy: format.withUnit(suppressedKwh, quantity),
+        time: format.duration(suppressedS),
+      })}
+    </Text>
+  );
+}
+
+/** Readings without energy: the reason, what still holds, and the way to change it. */
+function Blocked(
+  props: LoopFigures & { reason: NonNullable<LoopFigures["summary"]["basis"]["blockedBy"]> },
+) {
+  const { reason, loop, point, site } = props;
+  const t = useWords("loops");
+  const ways = {
+    glycol: loop.can.edit ? (
+      <TextLink
+        label={t("blocked.editLoop")}
+        href={`/sites/${site.id}/loops/${loop.id}/edit`}
+        variant="small"
+      />
+    ) : undefined,
+    outsideWater: undefined,
+    noFlow: importWay(),
+    noTemperature: importWay(),
+  } as const;
+  function importWay() {
+    return point.can.import ? (
+      <TextLink label={t("import")} href={`/logs/new?point=${point.id}`} variant="small" />
+    ) : undefined;
+  }
+  return (
+    <View style={{ gap: 8 }}>
+      <Banner kind="look" lead={t(`blocked.${reason}.title`)} action={ways[reason]}>
+        {t(`blocked.${reason}.detail`)}
+      </Banner>
+      <Text variant="small" tone="ink3">
+        <CoveredWords {...props} />
+      </Text>
+    </View>
+  );
+}

@@ -1,0 +1,95 @@
+import { infiniteQueryOptions, queryOptions, type QueryClient } from "@tanstack/react-query";
+
+import {
+  getDayMarks,
+  getEnergy,
+  getPointSummary,
+  getReadings,
+  getSeries,
+} from "@shared/contracts/energy";
+import { getLoop, getSite, listPoints } from "@shared/contracts/places";
+import type { Interval } from "@shared/domain/time/interval";
+import { call } from "@features/api";
+
+import type { ShownRange } from "./shown-range";
+
+const instants = ({ startMs, endMs }: Interval) => ({
+  from: new Date(startMs).toISOString(),
+  to: new Date(endMs).toISOString(),
+});
+/** The API's ranges end before their last date; people's include it. */
+const dates = ({ from, until }: ShownRange) => ({ from, to: until });
+
+/** Figures change with an import, which starts from elsewhere: a minute is fresh enough. */
+const fresh = { staleTime: 60_000 } as const;
+
+/** Every question the loop page asks; the only home of its keys. */
+export const loopsQueries = {
+  loop: (loopId: string) =>
+    queryOptions({
+      queryKey: ["loops", "loop", loopId],
+      queryFn: ({ signal }) => call(getLoop, { params: { loopId }, signal }),
+    }),
+  site: (siteId: string) =>
+    queryOptions({
+      queryKey: ["loops", "site", siteId],
+      queryFn: ({ signal }) => call(getSite, { params: { siteId }, signal }),
+    }),
+  points: (loopId: string) =>
+    queryOptions({
+      queryKey: ["loops", "points", loopId],
+      queryFn: ({ signal }) => call(listPoints, { params: { loopId }, signal }),
+    }),
+  dayMarks: (pointId: string, range: ShownRange) =>
+    queryOptions({
+      ...fresh,
+      queryKey: ["loops", "days", pointId, range.from, range.until],
+      queryFn: ({ signal }) =>
+        call(getDayMarks, { params: { pointId }, query: dates(range), signal }),
+    }),
+  summary: (pointId: string, range: ShownRange) =>
+    queryOptions({
+      ...fresh,
+      queryKey: ["loops", "summary", pointId, range.from, range.until],
+      queryFn: ({ signal }) =>
+        call(getPointSummary, { params: { pointId }, query: dates(range), signal }),
+    }),
+  energy: (pointId: string, range: ShownRange, step: "day" | "hour") =>
+    queryOptions({
+      ...fresh,
+      queryKey: ["loops", "energy", pointId, range.from, range.until, step],
+      queryFn: ({ signal }) =>
+        call(getEnergy, { params: { pointId }, query: { ...dates(range), step }, signal }),
+    }),
+  readings: (pointId: string, range: ShownRange) =>
+    infiniteQueryOptions({
+      ...fresh,
+      queryKey: ["loops", "readings", pointId, range.from, range.until],
+      queryFn: ({ pageParam, signal }) =>
+        call(getReadings, {
+          params: { pointId },
+          query: { ...dates(range), limit: 200, ...(pageParam ? { cursor: pageParam } : {}) },
+          signal,
+        }),
+      initialPageParam: null as string | null,
+      getNextPageParam: (page) => page.nextCursor,
+    }),
+  series: (pointId: string, window: Interval, pixels: number) =>
+    queryOptions({
+      ...fresh,
+      queryKey: ["loops", "series", pointId, window.startMs, window.endMs, pixels],
+      queryFn: ({ signal }) =>
+        call(getSeries, {
+          params: { pointId },
+          query: { ...instants(window), pixels: String(pixels) },
+          signal,
+        }),
+      gcTime: 5 * 60_000,
+    }),
+};
+
+/** A chart's way to its pictures; those fetched before are taken from what is kept. */
+export function seriesLoader(client: QueryClient, pointId: string) {
+  return (window: Interval, pixels: number) =>
+    client.fetchQuery(loopsQueries.series(pointId, window, pixels));
+}
