@@ -89,6 +89,19 @@ export function FileCoverage(props: {
           <Text variant="bodyWide" tone="ink2">
             {t("time.covers.noGaps")}
           </Text>
+        ) : phone ? (
+          <View role="list" aria-label={t("time.covers.gapsCaption", { name })} style={{ gap: 10 }}>
+            {gaps.slice(0, GAPS_LISTED).map((gap) => (
+              <View key={gap.from} role="listitem">
+                <Text variant="asReadS">
+                  {`${format.dateTime(gap.fromMs)} – ${format.dateTime(gap.toMs)}`}
+                </Text>
+                <Text variant="small" tone="ink2">
+                  {`${t("time.covers.rows")} ${format.number(gap.missingRows, 0)}. ${flowAround(gap)}`}
+                </Text>
+              </View>
+            ))}
+          </View>
         ) : (
           <Table
             caption={t("time.covers.gapsCaption", { name })}

@@ -65,7 +65,7 @@ export function ProgressView({
             onPress={() => actions.cancel.mutate()}
           />
         ) : null}
-        <Button label={t("progress.today")} href="/today" />
+        <Button label={t("progress.today")} href="/" />
       </Row>
     </View>
   );

@@ -13,7 +13,7 @@ import {
   useBreakpoint,
 } from "@features/ui";
 import type { ImportChecks, ImportDetail } from "@shared/contracts/imports";
-import { DailyBars } from "./daily-bars";
+import { DailyEnergy } from "./daily-bars";
 import { rawFileAddress } from "./file-card";
 import { FindingRow } from "./finding-row";
 import { findingsOf } from "./findings";
@@ -148,7 +148,7 @@ function Energy({ checks, detail }: { checks: ImportChecks; detail: ImportDetail
             {t("result.suppressed", { energy: format.withUnit(suppressedKwh, "coolingEnergy") })}
           </Text>
         ) : null}
-        <DailyBars days={checks.daily} zone={detail.site.zone} />
+        <DailyEnergy days={checks.daily} zone={detail.site.zone} />
       </View>
     </Card>
   );
