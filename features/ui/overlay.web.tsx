@@ -58,9 +58,6 @@ export function Overlay({ labelledBy, role, onClose, foot, children }: OverlayPr
         display: "flex",
         background: colour.scrim,
       }}
-      onMouseDown={(event) => {
-        if (event.target === event.currentTarget) onClose();
-      }}
     >
       <div
         ref={box}
@@ -70,7 +67,11 @@ export function Overlay({ labelledBy, role, onClose, foot, children }: OverlayPr
         tabIndex={-1}
         data-programmatic-focus
         onKeyDown={keep}
-        style={{ display: "contents" }}
+        onMouseDown={(event) => {
+          if (event.target === event.currentTarget) onClose();
+        }}
+        // A box of its own: what is laid out as “contents” cannot take the focus.
+        style={{ display: "flex", flex: 1, minWidth: 0, minHeight: 0 }}
       >
         {children}
       </div>
