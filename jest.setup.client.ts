@@ -1,4 +1,5 @@
 import "@testing-library/jest-dom";
+import { TextEncoder } from "node:util";
 
 // jsdom has no layout, so what measures the page gets quiet stand-ins; a test that depends on one
 // of them replaces it itself.
@@ -20,6 +21,8 @@ class QuietResizeObserver implements ResizeObserver {
 }
 
 if (typeof window !== "undefined") {
+  // Browsers have it; jsdom leaves it out.
+  window.TextEncoder ??= TextEncoder;
   window.matchMedia ??= noMediaMatches;
   window.scrollTo = () => undefined;
   window.ResizeObserver ??= QuietResizeObserver;

@@ -1,4 +1,5 @@
 import { useState } from "react";
+import { View } from "react-native";
 
 import type { Session } from "@shared/contracts/people";
 import { useWords } from "@features/i18n";
@@ -40,14 +41,16 @@ export function NameCard({ session }: { session: Session }) {
           <Button submit label={t("settings.saveName")} busy={change.busy} />
         )}
       </Form>
-      <DefinitionRows
-        label={t("settings.you")}
-        rows={[
-          { label: t("settings.email"), value: account.email },
-          { label: t("settings.role"), value: t(`role.${role}`) },
-          { label: t("settings.organisation"), value: organisation.name },
-        ]}
-      />
+      <View style={{ marginTop: 12 }}>
+        <DefinitionRows
+          label={t("settings.you")}
+          rows={[
+            { label: t("settings.email"), value: account.email },
+            { label: t("settings.role"), value: t(`role.${role}`) },
+            { label: t("settings.organisation"), value: organisation.name },
+          ]}
+        />
+      </View>
     </Card>
   );
 }

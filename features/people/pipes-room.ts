@@ -42,10 +42,10 @@ export function pipesRoom(wide: boolean, screen: { width: number; height: number
     inner,
     padding: {
       paddingTop: inner + 24,
-      paddingBottom: Math.round(inner + 24 + 60 * share),
+      paddingBottom: inner + 24,
       paddingLeft: narrow ? 72 : 120,
       paddingRight: narrow ? 224 : 256,
     },
-    brandLift: Math.round(84 * share),
+    brandLift: Math.round(150 * share),
   };
 }
