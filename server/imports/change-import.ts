@@ -5,6 +5,7 @@ import {
   type FileRecipe,
   type RepairChoices,
 } from "@shared/domain/log-files/recipe";
+import type { Acting } from "@server/commands/acting";
 import { recordAudit } from "@server/commands/record-audit";
 import { inTransaction } from "@server/database/transaction";
 import type { Context } from "@server/http/context";
@@ -20,8 +21,11 @@ import type { ReceivedFile } from "./receive-log-file";
 import { recipeProblems } from "./recipe-problems";
 import { filesOf, move, settleImport, stopChecks } from "./settle-import";
 
+/** What a change of an import needs; an HTTP request has it, and so has the seeding of the demo. */
+export type Importing = Acting & Pick<Context, "services">;
+
 /** Opens an import for a point in use. */
-export async function openImport(context: Context, pointId: string): Promise<LogImport> {
+export async function openImport(context: Importing, pointId: string): Promise<LogImport> {
   const { scope, actor, clock, database } = context;
   const point = await scope.get(MeteringPoint, pointId, "metering point");
   if (point.archivedAt !== null)
@@ -51,7 +55,7 @@ export async function openImport(context: Context, pointId: string): Promise<Log
 
 /** Loads the import under its lock, lets `work` change it and tells the job runner. */
 async function change(
-  context: Context,
+  context: Importing,
   importId: string,
   work: (row: LogImport, transaction: Transaction) => Promise<void>,
 ): Promise<LogImport> {
@@ -77,7 +81,7 @@ function requireEditable(row: LogImport): void {
 }
 
 export async function addFile(
-  context: Context,
+  context: Importing,
   importId: string,
   received: ReceivedFile,
 ): Promise<LogImport> {
@@ -118,7 +122,7 @@ export async function addFile(
 }
 
 async function fileOf(
-  context: Context,
+  context: Importing,
   row: LogImport,
   fileId: string,
   transaction: Transaction,
@@ -129,7 +133,7 @@ async function fileOf(
 }
 
 export async function removeFile(
-  context: Context,
+  context: Importing,
   importId: string,
   fileId: string,
 ): Promise<LogImport> {
@@ -149,7 +153,7 @@ export async function removeFile(
 
 /** Sets how a file is read; the import goes on by itself once nothing is left to ask. */
 export async function giveRecipe(
-  context: Context,
+  context: Importing,
   importId: string,
   fileId: string,
   recipe: FileRecipe,
@@ -158,6 +162,13 @@ export async function giveRecipe(
     requireEditable(row);
     const file = await fileOf(context, row, fileId, transaction);
     const { recognition } = file;
+    if (file.recipe !== null && isReadAnew(file.recipe, recipe)) {
+      await stopChecks(context.database, transaction, row);
+      await recogniseAnew(context, row, file, recipe, transaction);
+      await settleImport(context.database, transaction, row);
+      await audit(context, "recipe-chosen", row, { file: file.name, recipe }, transaction);
+      return;
+    }
     if (recognition === null)
       throw new Conflict(
         "file-not-recognised",
@@ -173,8 +184,32 @@ export async function giveRecipe(
   });
 }
 
+/** Another encoding, separator or header line: what the columns are must be found out again. */
+function isReadAnew({ dialect: before }: FileRecipe, { dialect: after }: FileRecipe): boolean {
+  return (["encoding", "separator", "headerLine"] as const).some(
+    (name) => before[name] !== after[name],
+  );
+}
+
+async function recogniseAnew(
+  { database }: Importing,
+  row: LogImport,
+  file: LogFile,
+  recipe: FileRecipe,
+  transaction: Transaction,
+): Promise<void> {
+  const { organisationId, pointId, id: importId } = row;
+  await cancelJobs(database, transaction, { importId, logFileId: file.id });
+  await file.update(
+    { recipe, recognition: null, questions: null, unreadable: null },
+    { transaction },
+  );
+  const job = { organisationId, pointId, importId, logFileId: file.id };
+  await enqueueJob(database, transaction, { ...job, kind: "recognise" });
+}
+
 export async function giveRepairs(
-  context: Context,
+  context: Importing,
   importId: string,
   choices: Partial<RepairChoices>,
 ): Promise<LogImport> {
@@ -188,7 +223,7 @@ export async function giveRepairs(
 }
 
 /** Checks again. One that is under way already serves; one that is refused says what is open. */
-export async function startCheck(context: Context, importId: string): Promise<LogImport> {
+export async function startCheck(context: Importing, importId: string): Promise<LogImport> {
   return change(context, importId, async (row, transaction) => {
     if (row.state === "checking") return;
     requireEditable(row);
@@ -213,7 +248,7 @@ export async function startCheck(context: Context, importId: string): Promise<Lo
 }
 
 /** Starts storing. @throws Conflict while anything is undecided or the same file is in already. */
-export async function confirm(context: Context, importId: string): Promise<LogImport> {
+export async function confirm(context: Importing, importId: string): Promise<LogImport> {
   return change(context, importId, async (row, transaction) => {
     if (row.state !== "ready")
       throw new Conflict(
@@ -263,7 +298,7 @@ export async function sameFiles(
   });
 }
 
-export async function cancel(context: Context, importId: string): Promise<LogImport> {
+export async function cancel(context: Importing, importId: string): Promise<LogImport> {
   const changed = await change(context, importId, async (row, transaction) => {
     if (!isCancellable(row.state))
       throw new Conflict(
@@ -280,7 +315,7 @@ export async function cancel(context: Context, importId: string): Promise<LogImp
   return changed;
 }
 
-export async function startUndo(context: Context, importId: string): Promise<LogImport> {
+export async function startUndo(context: Importing, importId: string): Promise<LogImport> {
   return change(context, importId, async (row, transaction) => {
     if (!can(context.actor).undoImport({ importedByAccountId: row.createdByAccountId }))
       throw new Denied("Only who made this import, an engineer or an administrator undoes it.");
@@ -298,7 +333,7 @@ export async function startUndo(context: Context, importId: string): Promise<Log
 }
 
 /** Takes an import up again that ended without readings; files and choices are still there. */
-export async function reopen(context: Context, importId: string): Promise<LogImport> {
+export async function reopen(context: Importing, importId: string): Promise<LogImport> {
   return change(context, importId, async (row, transaction) => {
     if (!isReopenable(row.state))
       throw new Conflict(
@@ -323,7 +358,7 @@ export async function reopen(context: Context, importId: string): Promise<LogImp
 }
 
 function audit(
-  context: Context,
+  context: Importing,
   kind: string,
   row: LogImport,
   details: Record<string, unknown>,

@@ -1,6 +1,11 @@
 import { createFileScan } from "@shared/domain/log-files/file-scan";
 import { finishRecognition } from "@shared/domain/log-files/finish-recognition";
-import { HEAD_BYTES, isUnreadable, recogniseHead } from "@shared/domain/log-files/recognise-head";
+import {
+  HEAD_BYTES,
+  isUnreadable,
+  recogniseHead,
+  type GivenDialect,
+} from "@shared/domain/log-files/recognise-head";
 import type { Recognition, Unreadable } from "@shared/domain/log-files/recognition";
 import { inTransaction } from "@server/database/transaction";
 import type { JobContext } from "@server/jobs/job-context";
@@ -39,6 +44,14 @@ async function recognise(
   file: LogFile,
 ): Promise<Recognition | Unreadable> {
   const path = await files.localPath(file.sha256);
+  // A recipe before recognition is one whose separator, header line or encoding somebody changed.
+  const given: GivenDialect = file.recipe
+    ? {
+        encoding: file.recipe.dialect.encoding,
+        separator: file.recipe.dialect.separator,
+        headerLine: file.recipe.dialect.headerLine,
+      }
+    : {};
   const wholeIsHead = file.byteLength <= HEAD_BYTES;
   let scan: ReturnType<typeof createFileScan> | undefined;
   let head: ReturnType<typeof recogniseHead> | undefined;
@@ -47,7 +60,7 @@ async function recognise(
   readChunks(path, (bytes) => {
     checkpoint();
     // The first chunk is larger than the head that recognition wants.
-    head ??= recogniseHead(bytes.subarray(0, HEAD_BYTES), wholeIsHead);
+    head ??= recogniseHead(bytes.subarray(0, HEAD_BYTES), wholeIsHead, given);
     if (isUnreadable(head)) return;
     scan ??= createFileScan(head);
     scan.push(bytes);

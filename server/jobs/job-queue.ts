@@ -33,6 +33,8 @@ export interface NewJob {
   readonly revision?: number;
 }
 
+const waiting: JobProgress = { stage: "waiting", rowsRead: 0, rowsTotal: null, secondsLeft: null };
+
 /** Queues a job in the transaction of what caused it; tell the runner afterwards (`poke`). */
 export async function enqueueJob(
   database: Database,
@@ -41,12 +43,6 @@ export async function enqueueJob(
 ): Promise<void> {
   // One recalculation that still waits will see every change made until it starts.
   const waitingKey = job.kind === "recalculate" ? `recalculate-${job.pointId}` : null;
-  const progress: JobProgress = {
-    stage: "waiting",
-    rowsRead: 0,
-    rowsTotal: null,
-    secondsLeft: null,
-  };
   await database.query(
     `INSERT IGNORE INTO job (organisation_id, kind, state, point_id, import_id, log_file_id,
             revision, waiting_key, run_after, progress, created_at)
@@ -59,7 +55,7 @@ export async function enqueueJob(
         revision: null,
         ...job,
         waitingKey,
-        progress: JSON.stringify(progress),
+        progress: JSON.stringify(waiting),
       },
       transaction,
     },
@@ -140,9 +136,12 @@ async function claimOne(
   await database.query(
     `UPDATE job SET state = 'running', lease_owner = :owner, waiting_key = NULL,
             lease_until = UTC_TIMESTAMP(3) + INTERVAL ${LEASE_S} SECOND,
-            interruptions = :interruptions, started_at = UTC_TIMESTAMP(3)
+            interruptions = :interruptions, started_at = UTC_TIMESTAMP(3), progress = :progress
       WHERE id = :id`,
-    { replacements: { id, owner, interruptions }, transaction },
+    {
+      replacements: { id, owner, interruptions, progress: JSON.stringify(waiting) },
+      transaction,
+    },
   );
   return { ...job, interruptions };
 }

@@ -128,6 +128,27 @@ test("a file whose dates fit two orders asks, and nothing is stored until it is 
   expect(await blockCount(point.id)).toBe(2);
 });
 
+test("another header line reads the file anew, with the columns that line names", async () => {
+  const { agent, id } = await started(
+    ["a,b,c,d", "time,flow L/s,supply °C,return °C", "2025-07-14T06:00:00Z,8.00,6.90,12.80"]
+      .concat(["2025-07-14T06:05:00Z,8.00,6.90,12.80", ""])
+      .join("\n"),
+  );
+  const [file] = (await read(agent, id)).files;
+  const recipe = file?.recipe as FileRecipe;
+  expect(recipe.dialect).toMatchObject({ headerLine: 2, firstDataLine: 3 });
+  const path = `/imports/${id}/files/${file?.id}/recipe`;
+  const other = { ...recipe, dialect: { ...recipe.dialect, headerLine: 1, firstDataLine: 2 } };
+  const reading = await agent.put(path, other).expect(200);
+  expect(reading.body).toMatchObject({ state: "reading", progress: { stage: "waiting" } });
+  await runJobs(app);
+  const [anew] = (await read(agent, id)).files;
+  expect(anew?.recipe?.columns.map(({ header }) => header)).toEqual(["a", "b", "c", "d"]);
+  await agent.put(path, recipe).expect(200);
+  await runJobs(app);
+  expect((await read(agent, id)).files[0]?.recipe).toEqual(recipe);
+});
+
 test("flow and temperatures in two files with other steps and units become one energy", async () => {
   const flow = Array.from({ length: 61 }, (_, i) => `${iso(i * 60_000)};126,80`);
   const temperatures = Array.from({ length: 13 }, (_, i) => `${iso(i * 300_000)};44,42;55,04`);

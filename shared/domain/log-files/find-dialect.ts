@@ -25,13 +25,18 @@ export interface DialectFinding {
 /**
  * Finds separator and quotes from the head of a file in UTF-8: the pair under which the most cells
  * of the most rows read as dates, numbers or known tokens. Null if under none of them two columns appear.
+ * @param given the separator where somebody has said it
  */
-export function findDialect(bytes: Uint8Array, isWholeFile: boolean): DialectFinding | null {
+export function findDialect(
+  bytes: Uint8Array,
+  isWholeFile: boolean,
+  given?: Separator,
+): DialectFinding | null {
   const quotes = quotesIn(bytes);
   let best: DialectFinding | null = null;
   let bestScore = 0;
   let bestStamps = 0;
-  for (const separator of SEPARATORS) {
+  for (const separator of given === undefined ? SEPARATORS : [given]) {
     for (const quote of quotes) {
       const rows = readTextRows(bytes, { separator, quote }, isWholeFile, HEAD_ROWS).map(withKinds);
       const score = rows.reduce((sum, row) => sum + scoreOf(row), 0);

@@ -20,13 +20,28 @@ export interface HeaderFinding {
 
 const MAX_PREAMBLE = 100;
 
-/** @param above rows before the first row of readings, in file order */
-export function findHeader(above: readonly KindRow[], columnCount: number): HeaderFinding {
+/**
+ * @param above rows before the first row of readings, in file order
+ * @param given the header's line where somebody has said it; null where they said there is none
+ */
+export function findHeader(
+  above: readonly KindRow[],
+  columnCount: number,
+  given?: number | null,
+): HeaderFinding {
   let at = above.length - 1;
   let unitsRow: KindRow | null = null;
   let headerRow: KindRow | null = null;
-  if (at >= 0 && isUnitsRow(above[at] as KindRow)) unitsRow = above[at--] as KindRow;
-  if (at >= 0 && isHeaderRow(above[at] as KindRow, columnCount)) headerRow = above[at--] as KindRow;
+  if (given !== undefined) {
+    at = given === null ? -1 : above.findIndex(({ line }) => line === given);
+    const below = at < 0 ? undefined : above[at + 1];
+    if (below && isUnitsRow(below)) unitsRow = below;
+    if (at >= 0) headerRow = above[at--] as KindRow;
+  } else {
+    if (at >= 0 && isUnitsRow(above[at] as KindRow)) unitsRow = above[at--] as KindRow;
+    if (at >= 0 && isHeaderRow(above[at] as KindRow, columnCount))
+      headerRow = above[at--] as KindRow;
+  }
   // Some loggers put the units above the names.
   if (headerRow !== null && unitsRow === null && at >= 0 && isUnitsRow(above[at] as KindRow))
     unitsRow = above[at--] as KindRow;

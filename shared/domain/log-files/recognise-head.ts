@@ -32,6 +32,9 @@ export function isUnreadable(value: HeadRecognition | Unreadable | object): valu
   return "code" in value;
 }
 
+/** What somebody has said about how a file is written; the rest is recognised. */
+export type GivenDialect = Partial<Pick<Dialect, "encoding" | "separator" | "headerLine">>;
+
 /**
  * Recognises encoding, separator, quotes, header and the place of the times from the first bytes.
  * @param head the first bytes of the file, at best {@link HEAD_BYTES}
@@ -40,10 +43,13 @@ export function isUnreadable(value: HeadRecognition | Unreadable | object): valu
 export function recogniseHead(
   head: Uint8Array,
   isWholeFile: boolean,
+  given: GivenDialect = {},
 ): HeadRecognition | Unreadable {
   if (head.length === 0) return unreadable("empty");
   if (hasForeignSignature(head)) return unreadable("notText");
-  const encoding = detectEncoding(head);
+  const encoding: EncodingFinding | null = given.encoding
+    ? { encoding: given.encoding, markBytes: 0, certainty: "proved" }
+    : detectEncoding(head);
   if (encoding === null) return unreadable("notText");
   const stream = createUtf8Stream(encoding.encoding);
   const bytes = isWholeFile
@@ -52,22 +58,29 @@ export function recogniseHead(
   if (bytes.every((byte) => byte <= 32)) return unreadable("empty");
 
   const firstLines = firstLinesOf(bytes, FIRST_LINES);
-  const found = findDialect(bytes, isWholeFile);
+  const found = findDialect(bytes, isWholeFile, given.separator);
   if (found === null)
     return unreadable(looksLikeWords(firstLines) ? "noTimes" : "noRows", 1, firstLines[0]);
   if (found.columnCount > Math.min(MAX_COLUMNS, MAX_CELLS))
     return unreadable("tooManyColumns", found.rows[0]?.line, null);
 
-  const data = found.rows.filter((row) => row.looksLikeData && row.cellCount === found.columnCount);
-  const roughHeaders = findHeader(rowsBefore(found.rows, data[0]), found.columnCount).headers;
+  const isBelowHeader = ({ line }: { readonly line: number }) => line > (given.headerLine ?? 0);
+  const data = found.rows.filter(
+    (row) => row.looksLikeData && row.cellCount === found.columnCount && isBelowHeader(row),
+  );
+  const roughHeaders = findHeader(
+    rowsBefore(found.rows, data[0]),
+    found.columnCount,
+    given.headerLine,
+  ).headers;
   const times = findTimeColumns(data, found.columnCount, roughHeaders);
   if (times === null) return unreadable("noTimes", data[0]?.line, data[0]?.cells[0]);
   const firstRow = found.rows.find(
-    (row) => row.cellCount === found.columnCount && hasTime(row, times),
+    (row) => row.cellCount === found.columnCount && isBelowHeader(row) && hasTime(row, times),
   );
   if (firstRow === undefined) return unreadable("noRows");
 
-  const header = findHeader(rowsBefore(found.rows, firstRow), found.columnCount);
+  const header = findHeader(rowsBefore(found.rows, firstRow), found.columnCount, given.headerLine);
   // Fewer names than cells in a comma file: decimal commas have cut the numbers in two.
   if (
     found.separator === "," &&

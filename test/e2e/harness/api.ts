@@ -46,7 +46,7 @@ export async function apiAs(application: Application, role: Role): Promise<Api> 
     upload(path, files) {
       const form = new FormData();
       for (const { name, bytes } of files)
-        form.append("files", new Blob([new Uint8Array(bytes)]), name);
+        form.append("file", new Blob([new Uint8Array(bytes)]), name);
       return call("POST", path, { body: form });
     },
   };
