@@ -22,6 +22,7 @@ import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
 import { tagService } from "./service-words";
 import { useFluidWords } from "./use-fluid-words";
+import { Way } from "./way";
 
 /** The loops of a site as a register: what each is, and the way to its points and to editing it. */
 export function LoopsScreen() {
@@ -77,14 +78,16 @@ function LoopsTable(props: { site: Site; loops: readonly Loop[]; buildings: read
     <LoopTag tag={loop.tag} service={tagService(loop.service)} outline={loop.archivedAt !== null} />
   );
   const ways = (loop: Loop) => (
-    <View style={{ flexDirection: "row", gap: 16, flexWrap: "wrap" }}>
-      <TextLink
+    <View style={{ flexDirection: "row", gap: phone ? 8 : 16, flexWrap: "wrap" }}>
+      <Way
+        phone={phone}
         label={t("points.title")}
         said={t("points.of", { tag: loop.tag })}
         href={placesPaths.points(site.id, loop.id)}
       />
       {loop.can.edit ? (
-        <TextLink
+        <Way
+          phone={phone}
           label={t("form.edit")}
           said={t("loop.editNamed", { tag: loop.tag })}
           href={placesPaths.editLoop(site.id, loop.id)}
@@ -92,16 +95,20 @@ function LoopsTable(props: { site: Site; loops: readonly Loop[]; buildings: read
       ) : null}
     </View>
   );
+  const state = (loop: Loop) =>
+    loop.archivedAt === null ? null : <Chip label={t("archive.archived")} />;
   const columns: Column<Loop>[] = [
     { key: "tag", header: t("loop.tag"), render: tag, width: 130 },
     {
       key: "name",
       header: t("loop.name"),
-      render: (loop) => <TextLink label={loop.name} href={placesPaths.loop(loop.id)} />,
+      render: (loop) => (
+        <TextLink variant="table" label={loop.name} href={placesPaths.loop(loop.id)} />
+      ),
     },
     { key: "building", header: t("loop.building"), render: buildingOf },
     { key: "parent", header: t("loop.parent"), render: parentOf, wideOnly: true },
-    { key: "fluid", header: t("fluid.kind"), render: (loop) => fluidWords(loop.fluid) },
+    { key: "fluid", header: t("loop.fluidTitle"), render: (loop) => fluidWords(loop.fluid) },
     {
       key: "pressure",
       header: t("loop.absolutePressure"),
@@ -116,11 +123,9 @@ function LoopsTable(props: { site: Site; loops: readonly Loop[]; buildings: read
       align: "right",
       wideOnly: true,
     },
-    {
-      key: "state",
-      header: t("sites.marks"),
-      render: (loop) => (loop.archivedAt === null ? null : <Chip label={t("archive.archived")} />),
-    },
+    ...(loops.some(({ archivedAt }) => archivedAt !== null)
+      ? [{ key: "state", header: t("sites.marks"), render: state }]
+      : []),
     { key: "ways", header: t("loops.ways"), render: ways, width: 160 },
   ];
   const card: RowCard<Loop> = {

@@ -12,7 +12,6 @@ import {
   Screen,
   Table,
   Text,
-  TextLink,
   useBreakpoint,
   type Column,
   type RowCard,
@@ -23,6 +22,7 @@ import { ArchivedSwitch } from "./archived-switch";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
 import { tagService } from "./service-words";
+import { Way } from "./way";
 
 /** The metering points of a loop. */
 export function PointsScreen() {
@@ -95,16 +95,18 @@ function PointsTable(props: { site: Site; loop: Loop; points: readonly Point[] }
       <Chip label={t("points.noReadings")} tone="line" />
     );
   const ways = (point: Point) => (
-    <View style={{ flexDirection: "row", gap: 16, flexWrap: "wrap" }}>
+    <View style={{ flexDirection: "row", gap: phone ? 8 : 16, flexWrap: "wrap" }}>
       {point.can.import ? (
-        <TextLink
+        <Way
+          phone={phone}
           label={t("points.import")}
           said={t("points.importInto", { code: point.code })}
           href={importPaths.start(point.id)}
         />
       ) : null}
       {point.can.edit ? (
-        <TextLink
+        <Way
+          phone={phone}
           label={t("form.edit")}
           said={t("point.editNamed", { code: point.code })}
           href={placesPaths.editPoint(site.id, loop.id, point.id)}
@@ -129,7 +131,9 @@ function PointsTable(props: { site: Site; loop: Loop; points: readonly Point[] }
       wideOnly: true,
     },
     { key: "bore", header: t("pipe.bore"), render: bore, align: "right" },
-    { key: "state", header: t("sites.marks"), render: state, wideOnly: true },
+    ...(points.some((point) => state(point) !== null)
+      ? [{ key: "state", header: t("sites.marks"), render: state, wideOnly: true }]
+      : []),
     { key: "ways", header: t("loops.ways"), render: ways, width: 170 },
   ];
   const card: RowCard<Point> = {

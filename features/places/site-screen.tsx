@@ -50,6 +50,7 @@ const planBlocks = [
 function SitePage({ site, week }: { site: Site; week: string | undefined }) {
   const t = useWords("places");
   const router = useRouter();
+  const phone = useBreakpoint() === "phone";
   const now = useNow();
   const today = dayInZone(now, site.zone);
   const asked = week !== undefined && /^\d{4}-\d\d-\d\d$/.test(week) ? mondayOf(week) : null;
@@ -78,7 +79,7 @@ function SitePage({ site, week }: { site: Site; week: string | undefined }) {
         onChange={(picked) => router.setParams({ week: picked })}
       />
       <SiteMenu site={site} />
-      {site.can.addLoop ? (
+      {site.can.addLoop && !phone ? (
         <Button icon="plus" label={t("loop.add")} href={placesPaths.newLoop(site.id)} />
       ) : null}
     </>
@@ -113,7 +114,19 @@ function SiteMarks({ site }: { site: Site }) {
 function SiteMenu({ site }: { site: Site }) {
   const t = useWords("places");
   const router = useRouter();
+  const phone = useBreakpoint() === "phone";
   const items = [
+    // On a phone the drawing needs the room that a button of its own would take.
+    ...(phone && site.can.addLoop
+      ? [
+          {
+            key: "add",
+            label: t("loop.add"),
+            icon: "plus" as const,
+            onPress: () => router.push(placesPaths.newLoop(site.id)),
+          },
+        ]
+      : []),
     {
       key: "loops",
       label: t("loops.title"),
@@ -137,7 +150,7 @@ function SiteMenu({ site }: { site: Site }) {
         ]
       : []),
   ];
-  return <Menu label={t("site.menu")} items={items} align="left" />;
+  return <Menu label={t("site.menu")} items={items} iconOnly={phone} align="right" />;
 }
 
 function SiteContent(props: { site: Site; monday: string; now: number; data: OverviewData }) {

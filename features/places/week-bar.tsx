@@ -1,6 +1,6 @@
 import { useState } from "react";
 import { Pressable, View } from "react-native";
-import { useFormat, useWords } from "@features/i18n";
+import { dayInstant, localeOf, useFormat, useWords, type Language } from "@features/i18n";
 import {
   addDays,
   Button,
@@ -11,9 +11,22 @@ import {
   stroke,
   target,
   Text,
+  useBreakpoint,
   useTheme,
   WeekPicker,
 } from "@features/ui";
+
+/** “11–17 May”, “27 Apr–3 May”: as short as the language writes a range of days. */
+function weekDays(monday: string, language: Language): string {
+  const format = new Intl.DateTimeFormat(localeOf(language), {
+    day: "numeric",
+    month: "short",
+    timeZone: "UTC",
+  });
+  const range = format.formatRange(dayInstant(monday), dayInstant(addDays(monday, 6)));
+  // Some browsers put thin spaces around the dash, some do not.
+  return range.replace(/\s*–\s*/, "–");
+}
 
 /** The week shown, one to each side, and the whole calendar behind its name. */
 export function WeekBar(props: {
@@ -32,10 +45,8 @@ export function WeekBar(props: {
   const [open, setOpen] = useState(false);
   const { monday, min, max, today } = props;
   const latest = max !== undefined && max > today ? max : today;
-  const days = t("week.days", {
-    from: format.day(monday, "dayMonth"),
-    to: format.day(addDays(monday, 6), "dayMonth"),
-  });
+  const phone = useBreakpoint() === "phone";
+  const days = weekDays(monday, format.language);
   const step = (label: string, icon: "left" | "right", to: string, off: boolean) => (
     <Pressable
       role="button"
@@ -43,7 +54,7 @@ export function WeekBar(props: {
       aria-disabled={off}
       onPress={() => (off ? undefined : props.onChange(to))}
       style={{
-        minWidth: target.default - 4,
+        minWidth: target.default - 2 * stroke.control,
         minHeight: target.default - 2 * stroke.control,
         alignItems: "center",
         justifyContent: "center",
@@ -78,8 +89,8 @@ export function WeekBar(props: {
         style={{
           flexDirection: "row",
           alignItems: "center",
-          gap: 8,
-          paddingHorizontal: 14,
+          gap: phone ? 6 : 8,
+          paddingHorizontal: phone ? 10 : 14,
           borderLeftWidth: 1,
           borderRightWidth: 1,
           borderColor: colour.rule,

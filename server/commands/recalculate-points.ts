@@ -1,5 +1,5 @@
 import type { Transaction } from "sequelize";
-import { Job } from "@server/models/job";
+import { enqueueRecalculation } from "@server/jobs/job-queue";
 import { pointHoldings } from "@server/queries/point-holdings";
 import type { Acting } from "./acting";
 
@@ -8,26 +8,17 @@ import type { Acting } from "./acting";
  * by a job per point: a year of readings takes longer than a request should.
  */
 async function recalculate(
-  { clock, database, scope }: Acting,
+  { database, scope }: Acting,
   of: "site" | "loop" | "point",
   id: string,
   transaction: Transaction,
 ): Promise<void> {
   const holdings = await pointHoldings(database, scope.organisationId, of, [id], transaction);
-  const now = clock.date();
-  const jobs = holdings
-    .filter((point) => point.hasReadings)
-    .map(({ pointId }) => ({
-      organisationId: scope.organisationId,
-      kind: "recalculate" as const,
-      state: "queued" as const,
-      pointId,
-      // One that already waits will see this change too; one that runs may not.
-      waitingKey: `recalculate-${pointId}`,
-      runAfter: now,
-      createdAt: now,
-    }));
-  if (jobs.length > 0) await Job.bulkCreate(jobs, { ignoreDuplicates: true, transaction });
+  for (const { pointId, hasReadings } of holdings) {
+    if (!hasReadings) continue;
+    const { organisationId } = scope;
+    await enqueueRecalculation(database, transaction, { organisationId, pointId });
+  }
 }
 
 /** Another zone: the days of every point of the site begin elsewhere. */
