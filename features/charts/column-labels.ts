@@ -107,7 +107,7 @@ function nameOf(
   const { date, unit } = column;
   const day = String(Number(date.slice(8)));
   const full = (name: string, faint: string) =>
-    (name.length + faint.length + 1) * letterPx < room ? { name, faint } : null;
+    (name.length + faint.length + 1) * letterPx + 10 < room ? { name, faint } : null;
   const short = (name: string) =>
     name.length * letterPx < room + 6 ? { name, faint: "" } : { name: "", faint: "" };
   switch (unit) {

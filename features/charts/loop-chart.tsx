@@ -1,4 +1,4 @@
-import { useId, useMemo, useState } from "react";
+import { useId, useMemo, useState, type ReactNode } from "react";
 import { View } from "react-native";
 
 import type { Interval } from "@shared/domain/time/interval";
@@ -42,6 +42,8 @@ export interface LoopChartProps {
   format: Format;
   days: readonly ChartDay[];
   load: LoadSeries;
+  /** The key, left of the note on averaging. */
+  foot?: ReactNode;
 }
 
 const tagServices = { chilled: "cooling", hot: "heating", changeover: "changeover" } as const;
@@ -181,7 +183,8 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
         format={format}
         whole={chart.whole}
         onShowAll={chart.showAll}
-        onZoom={(factor) => chart.zoom(factor, 0.5)}
+        left={layout.named ? layout.left : 0}
+        foot={props.foot}
       />
       {loaded.failed ? (
         <Banner
@@ -258,20 +261,22 @@ function ChartNote(props: {
   format: Format;
   whole: boolean;
   onShowAll: () => void;
-  onZoom: (factor: number) => void;
+  left: number;
+  foot: ReactNode;
 }) {
   const t = useWords("charts");
   const { series, format } = props;
-  if (!series) return null;
-  const step = series.nominalStepS === null ? null : format.duration(series.nominalStepS);
+  const step =
+    series === null || series.nominalStepS === null ? null : format.duration(series.nominalStepS);
   const note =
-    step === null
+    series === null || step === null
       ? ""
       : series.averagedOverS === null || series.averagedOverS <= (series.nominalStepS ?? 0)
         ? t("note.rows", { step })
         : t("note.means", { step, over: format.duration(series.averagedOverS) });
   return (
-    <Row gap={4} justify="flex-end" wrap>
+    <Row gap={4} justify="space-between" wrap style={{ paddingLeft: props.left, marginTop: 8 }}>
+      {props.foot}
       {props.whole ? null : (
         <TextLink variant="small" label={t("showAll")} onPress={props.onShowAll} />
       )}

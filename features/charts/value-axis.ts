@@ -23,11 +23,12 @@ export function temperatureAxis(extent: readonly [number, number] | null): Value
   return axis(low, high, step);
 }
 
-/** From zero (or below it, where flow was negative) with two or three steps. */
+/** From zero (or below it, where flow was negative) in two steps: the panel is low. */
 export function flowAxis(extent: readonly [number, number] | null): ValueAxis {
   const greatest = Math.max(extent?.[1] ?? 1, 0) || 1;
   const least = Math.min(extent?.[0] ?? 0, 0);
-  const step = tickStep(0, greatest - least, 2);
+  const fine = tickStep(0, greatest - least, 2);
+  const step = greatest - least > 2 * fine ? 2 * fine : fine;
   return axis(Math.floor(least / step) * step, Math.ceil(greatest / step) * step, step);
 }
 

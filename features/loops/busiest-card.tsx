@@ -42,6 +42,7 @@ export function BusiestCard({ loop, point, summary, format }: LoopFigures) {
           <LoopCard
             {...base}
             doing={busiest.register}
+            powerSize="l"
             supply={shownFigure(format, busiest.supplyC, "temperature", 2)}
             return={shownFigure(format, busiest.returnC, "temperature", 2)}
             flow={shownFigure(format, busiest.flowM3PerHour, "flow", 1)}

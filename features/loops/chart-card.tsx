@@ -82,23 +82,23 @@ function Picture(props: ChartCardProps) {
     [summary.from, summary.to],
   );
   return (
-    <View style={{ gap: 6 }}>
-      <LoopChart
-        key={`${point.id} ${summary.from} ${summary.to}`}
-        label={`${t("chart.title")}, ${loop.tag}`}
-        summary={useChartSummary(props)}
-        service={loop.service}
-        range={range}
-        zone={site.zone}
-        format={format}
-        days={summary.basis.blockedBy ? noDays : summary.days}
-        load={load}
-      />
-      <View style={{ gap: 6, paddingLeft: phone ? 0 : 38 }}>
-        {phone ? <ChartKey service={tagService(loop.service)} /> : null}
-        <QualityKey only={["measured", "excluded", "missing"]} />
-      </View>
-    </View>
+    <LoopChart
+      foot={
+        <View style={{ gap: 6 }}>
+          {phone ? <ChartKey service={tagService(loop.service)} /> : null}
+          <QualityKey only={["measured", "excluded", "missing"]} />
+        </View>
+      }
+      key={`${point.id} ${summary.from} ${summary.to}`}
+      label={`${t("chart.title")}, ${loop.tag}`}
+      summary={useChartSummary(props)}
+      service={loop.service}
+      range={range}
+      zone={site.zone}
+      format={format}
+      days={summary.basis.blockedBy ? noDays : summary.days}
+      load={load}
+    />
   );
 }
 

@@ -2,7 +2,7 @@ import { Link } from "expo-router";
 import { Pressable, View } from "react-native";
 
 import { useWords } from "@features/i18n";
-import { Card, Figure, Icon, Strong, Text, useTheme } from "@features/ui";
+import { Card, Figure, Icon, Inline, Text, useTheme } from "@features/ui";
 
 import type { LoopFigures } from "./loop-context";
 import { loopsPaths } from "./loops-paths";
@@ -47,9 +47,9 @@ export function DayList({ summary, loop, point, format }: LoopFigures) {
                       }}
                     >
                       <Text tone="ink3">
-                        <Strong>
-                          <Text>{format.day(day.date, "weekdayShort")}</Text>
-                        </Strong>{" "}
+                        <Inline variant="subhead" tone="ink">
+                          {format.day(day.date, "weekdayShort")}
+                        </Inline>{" "}
                         {String(Number(day.date.slice(8)))}
                       </Text>
                       <View style={{ flexDirection: "row", alignItems: "center", gap: 12 }}>

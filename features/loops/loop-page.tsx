@@ -55,7 +55,7 @@ export function LoopPage(props: LoopPageProps) {
   const first = dayOf(extent.data?.firstReadingAt);
   const last = dayOf(extent.data?.lastReadingAt);
   const asked = askedRange(params);
-  const range = asked ?? (extent.data ? defaultRange(last, today) : null);
+  const range = asked ?? (extent.data ? defaultRange({ first, last }, today) : null);
   if (range) return <Ranged {...props} {...{ range, today, first, last, params }} />;
   return (
     <Frame {...props}>

@@ -39,7 +39,13 @@ it("steps by its own length, over the turn of a year", () => {
   expect(neighbour(range, -1)).toMatchObject({ from: "2025-12-08", until: "2025-12-22" });
 });
 
-it("opens on the last week with readings, or on this one before any came", () => {
-  expect(defaultRange("2026-05-17", "2026-12-01").week).toBe("2026-05-11");
-  expect(defaultRange(null, "2026-12-01").week).toBe("2026-11-30");
+it("opens on the last week with readings, on the one before while that has only begun", () => {
+  const opens = (first: string | null, last: string | null) =>
+    defaultRange({ first, last }, "2026-12-01").week;
+  expect(opens("2026-01-01", "2026-05-17")).toBe("2026-05-11");
+  expect(opens("2026-01-01", "2026-05-14")).toBe("2026-05-11");
+  expect(opens("2026-01-01", "2026-05-12")).toBe("2026-05-04");
+  // Nothing lies before: then the week that has only begun it is.
+  expect(opens("2026-05-11", "2026-05-12")).toBe("2026-05-11");
+  expect(opens(null, null)).toBe("2026-11-30");
 });

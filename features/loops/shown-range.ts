@@ -58,7 +58,20 @@ export function neighbour(range: ShownRange, direction: -1 | 1): ShownRange {
   return daysOf(addDays(range.from, by), addDays(lastDayOf(range), by));
 }
 
-/** The week page opens on: the last one with readings, else the present one. */
-export function defaultRange(lastReadingDay: string | null, today: string): ShownRange {
-  return weekOf(lastReadingDay !== null && lastReadingDay < today ? lastReadingDay : today);
+/** A week with readings on fewer days is no picture of a week. */
+const mostOfAWeek = 4;
+
+/**
+ * The week the page opens on: the last one with readings, or the one before where the last has only
+ * begun; this one where none came yet.
+ */
+export function defaultRange(
+  readings: { readonly first: string | null; readonly last: string | null },
+  today: string,
+): ShownRange {
+  const { first, last } = readings;
+  if (first === null || last === null || last > today) return weekOf(today);
+  const week = weekOf(last);
+  const before = neighbour(week, -1);
+  return daysInclusive(week.from, last) < mostOfAWeek && first <= before.from ? before : week;
 }

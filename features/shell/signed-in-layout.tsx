@@ -5,6 +5,7 @@ import { View } from "react-native";
 import type { Session } from "@shared/contracts/people";
 import { NoAnswer, useSession } from "@features/api";
 import { peoplePaths } from "@features/people/people-paths";
+import { usePrefetchCharts } from "@features/charts/use-prefetch-charts";
 import { usePreferences } from "@features/i18n";
 import { ErrorState, LoadingBlocks, OfflineState, useBreakpoint, useTheme } from "@features/ui";
 
@@ -25,6 +26,7 @@ export function SignedInLayout() {
   useEffect(() => {
     if (language) adopt(language, unitSystem ?? null);
   }, [adopt, language, unitSystem]);
+  usePrefetchCharts(session.data?.can.seeSites === true);
   useScrollTop(path);
 
   if (session.data) return <Frame session={session.data} path={path} />;

@@ -35,6 +35,8 @@ export interface LoopCardProps {
   energyLabel?: string;
   deltaT?: ShownValue;
   onOpenWorkings?: () => void;
+  /** Where the card leads a page its power is set larger. */
+  powerSize?: "m" | "l";
   /** No data: the loop becomes a dashed outline with the reason inside. */
   empty?: { readonly kind: MarkKind; readonly title: string; readonly detail?: string };
   height?: number;
@@ -193,7 +195,7 @@ function FullLoop(props: LoopCardProps & Drawn) {
           {props.power ? (
             <Figure
               {...props.power}
-              size="m"
+              size={props.powerSize ?? "m"}
               said={t("loop.power")}
               onOpenWorkings={props.onOpenWorkings}
             />

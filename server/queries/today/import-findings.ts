@@ -17,7 +17,7 @@ interface Row {
 
 /** What the last weeks' imports of a site wait for, and what the last day's brought. */
 const lookBackDays = 30;
-const mostImports = 20;
+const mostImports = 200;
 
 export async function importFindings(
   { scope, database }: { scope: Scope; database: Database },
@@ -46,25 +46,44 @@ export async function importFindings(
       type: QueryTypes.SELECT,
     },
   );
-  return rows.map((row): Finding => {
-    const code = (
-      {
-        asking: "importAsks",
-        ready: "importAsks",
-        failed: "importFailed",
-        imported: "importDone",
-      } as const
-    )[row.state];
-    return {
-      weight: row.state === "failed" ? "stop" : row.state === "imported" ? "note" : "look",
-      code,
-      loop: { id: String(row.loopId), tag: row.tag, service: row.service },
-      values: {
-        file: row.fileName ?? "",
-        moreFiles: Math.max(0, Number(row.fileCount) - 1),
-        rows: row.rowsStored ?? 0,
-      },
-      link: { to: "import", importId: String(row.id) },
-    };
-  });
+  const waiting = rows.filter((row) => row.state !== "imported").map(findingOf);
+  return [...waiting, ...doneFinding(rows.filter((row) => row.state === "imported"))];
+}
+
+/** However many imports ended, one sentence says so: it is news, not work. */
+function doneFinding(rows: readonly Row[]): Finding[] {
+  const [newest] = rows;
+  if (newest === undefined) return [];
+  const one = findingOf(newest);
+  const files = rows.reduce((sum, row) => sum + Number(row.fileCount), 0);
+  const stored = rows.reduce((sum, row) => sum + (row.rowsStored ?? 0), 0);
+  return [
+    {
+      ...one,
+      loop: rows.length === 1 ? one.loop : null,
+      values: { ...one.values, moreFiles: Math.max(0, files - 1), rows: stored },
+    },
+  ];
+}
+
+function findingOf(row: Row): Finding {
+  const code = (
+    {
+      asking: "importAsks",
+      ready: "importAsks",
+      failed: "importFailed",
+      imported: "importDone",
+    } as const
+  )[row.state];
+  return {
+    weight: row.state === "failed" ? "stop" : row.state === "imported" ? "note" : "look",
+    code,
+    loop: { id: String(row.loopId), tag: row.tag, service: row.service },
+    values: {
+      file: row.fileName ?? "",
+      moreFiles: Math.max(0, Number(row.fileCount) - 1),
+      rows: row.rowsStored ?? 0,
+    },
+    link: { to: "import", importId: String(row.id) },
+  };
 }
