@@ -29,14 +29,20 @@ export function choosePasses(
 ): PassChoice {
   const count = earlierMs.length;
   const cameFromLater: [Uint8Array, Uint8Array] = [new Uint8Array(count), new Uint8Array(count)];
+  // The file has one change of pass, in its own direction; going back to the other is a last resort.
+  const goingBack = Math.sqrt(Math.abs(stepMs));
   let costEarlier = stepCost(previousMs, earlierMs[0] as number, stepMs);
   let costLater = stepCost(previousMs, laterMs[0] as number, stepMs);
   for (let i = 1; i < count; i++) {
     const [fromEarlier, fromLater] = [earlierMs[i - 1] as number, laterMs[i - 1] as number];
     const [toEarlier, toLater] = [earlierMs[i] as number, laterMs[i] as number];
+    // Rows outside the hour have one instant twice: no pass is entered or left there.
+    const isPass = toEarlier !== toLater && fromEarlier !== fromLater;
+    const toFirstPass = isPass && stepMs > 0 ? goingBack : 0;
+    const toSecondPass = isPass && stepMs < 0 ? goingBack : 0;
     const ee = costEarlier + stepCost(fromEarlier, toEarlier, stepMs);
-    const le = costLater + stepCost(fromLater, toEarlier, stepMs);
-    const el = costEarlier + stepCost(fromEarlier, toLater, stepMs);
+    const le = costLater + stepCost(fromLater, toEarlier, stepMs) + toFirstPass;
+    const el = costEarlier + stepCost(fromEarlier, toLater, stepMs) + toSecondPass;
     const ll = costLater + stepCost(fromLater, toLater, stepMs);
     // A tie takes the earlier pass, as if the row before were the first of its hour.
     cameFromLater[0][i] = le < ee ? 1 : 0;
@@ -56,12 +62,15 @@ export function choosePasses(
 /** A step against the file's direction is a fault of its own, beside being of the wrong length. */
 const BACKWARD_WEIGHT = 2;
 
+/** By its root, so that one long gap costs less than two shorter ones that add up to it. */
 function stepCost(fromMs: number, toMs: number, stepMs: number): number {
   if (Number.isNaN(fromMs)) return 0;
   const step = toMs - fromMs;
   const weight = step * stepMs < 0 ? BACKWARD_WEIGHT : 1;
-  return weight * Math.abs(step - stepMs);
+  return weight * Math.sqrt(Math.abs(step - stepMs));
 }
+
+const UNCLEAR_SHARE = 0.5;
 
 function isUnclear(
   previousMs: number,
@@ -75,7 +84,7 @@ function isUnclear(
   const other = isIn(earlierMs) ? laterMs : isIn(laterMs) ? earlierMs : null;
   if (other === null) return false;
   const difference = pathCost(previousMs, other, stepMs) - pathCost(previousMs, chosen, stepMs);
-  return difference < Math.abs(stepMs);
+  return difference < UNCLEAR_SHARE * Math.sqrt(Math.abs(stepMs));
 }
 
 function pathCost(previousMs: number, instants: readonly number[], stepMs: number): number {
