@@ -131,29 +131,35 @@ const QUARTER_HOUR_FAULTS: Readonly<Record<string, readonly Fault[]>> = {
   "CHW-1C": [{ day: 6, fromMinute: 9 * 60 + 15, minutes: 60 * 24 * 30, what: "noFlow" }],
 };
 
+/** Thirteen months: this year's month can be laid beside last year's. */
+export const DEMO_HISTORY_DAYS = 395;
+
 /**
- * All logger files of the demo: thirteen months of quarter-hour means on every loop, the last four
- * weeks of two loops in one-minute readings instead, and honest faults in the last whole week.
+ * All logger files of the demo, one after the other: `historyDays` of quarter-hour means on every
+ * loop, the last four weeks of two loops in one-minute readings instead, and honest faults in the
+ * last whole week. Each is written when it is asked for, because all of them take seconds.
  *
- * `endDate` is the local day (exclusive) at which the files stop; the same date gives the same bytes.
+ * `endDate` is the local day (exclusive) at which the files stop; the same date and history give
+ * the same bytes.
  */
-export function demoLogFiles(
+export function* demoLogFiles(
   zone: string,
   endDate: string,
   tags: readonly string[],
-): DemoLogFile[] {
+  historyDays: number,
+): Generator<DemoLogFile> {
   const endMs = startOfLocalDay(endDate, zone);
-  const startMs = startOfLocalDay(addDays(endDate, -395), zone);
+  const startMs = startOfLocalDay(addDays(endDate, -historyDays), zone);
   const minuteStartMs = startOfLocalDay(addDays(endDate, -7 * MINUTE_WEEKS), zone);
   const simulation = new LoopSimulation(new SiteWeather(startMs, endMs, 20), zone, 7);
   const faultWeek = lastMonday(endDate);
 
-  return tags.flatMap((tag, index) => {
+  for (const [index, tag] of tags.entries()) {
     const byMinute = MINUTE_LOOPS.some((loop) => loop === tag);
     const write = new LogWriter(tag, zone, faultWeek, simulation, seededRandom(100 + index));
-    const quarterHours = write.quarterHours(startMs, byMinute ? minuteStartMs : endMs);
-    return byMinute ? [quarterHours, write.minutes(minuteStartMs, endMs)] : [quarterHours];
-  });
+    yield write.quarterHours(startMs, byMinute ? minuteStartMs : endMs);
+    if (byMinute) yield write.minutes(minuteStartMs, endMs);
+  }
 }
 
 /** Monday of the last whole week before a local day. */

@@ -1,3 +1,4 @@
+import { seedDemo } from "@server/demo/seed-demo";
 import { startDeliveryLoop } from "@server/mail/delivery-loop";
 import { startMailFake } from "@server/mail/mail-fake";
 import type { Services } from "@server/services";
@@ -40,6 +41,15 @@ export const backgroundServices: readonly BackgroundService[] = [
     async start({ jobs }) {
       jobs.start();
       return { stop: () => jobs.stop() };
+    },
+  },
+  {
+    // After the jobs, which import its logs, and before anybody is served: it is whole from the start.
+    name: "demo site",
+    async start(services) {
+      if (!services.config.demo) return null;
+      await seedDemo(services, await ensureDemoPeople(services));
+      return null;
     },
   },
 ];

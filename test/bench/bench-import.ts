@@ -41,7 +41,7 @@ export async function benchImport(
       expectSameEnergy("pandas", coolingKwh, result.kwh);
       return result.seconds;
     });
-  const took = await interleaved(Math.max(3, rounds), {
+  const took = await interleaved(rounds, {
     ours: async () => {
       const result = await importYear();
       whole.push(result.wholeS);

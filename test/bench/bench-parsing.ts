@@ -16,7 +16,7 @@ async function expectRows(rows: Promise<number>, header: 0 | 1): Promise<void> {
 export async function benchParsing({ csv, pandas, rounds }: Bench): Promise<Line[]> {
   const recipe = await recipeOf(csv);
   await parseAlone(csv, recipe); // warm, as a worker is after its first file
-  const took = await interleaved(Math.max(3, rounds), {
+  const took = await interleaved(rounds, {
     ours: () => seconds(() => expectRows(parseAlone(csv, recipe), 0)),
     papaparse: () => seconds(() => expectRows(papaparseStream(csv), 1)),
     chunks: () => seconds(() => expectRows(papaparseChunks(csv), 1)),

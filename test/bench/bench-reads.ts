@@ -24,7 +24,7 @@ export async function benchReads(
     server.get<EnergyAnswer>(`/points/${pointId}/energy?${range}&step=${step}`);
   const sql = (query: RowQuery) => () =>
     seconds(() => queryRows(database, query, { fromS, toS, columns: pixels / 2 }));
-  const took = await interleaved(Math.max(5, rounds), {
+  const took = await interleaved(rounds, {
     chart: () => seconds(() => series(pixels)),
     sqlChart: sql("chart"),
     hours: () => seconds(() => energy("hour")),

@@ -3,7 +3,7 @@ import type { Database } from "@server/database/connect";
 
 /** Pages of a table on disk after InnoDB has settled, in bytes. */
 async function tableBytes(database: Database, schema: string, table: string): Promise<number> {
-  await database.query(`ANALYZE TABLE ${schema}.${table}`);
+  await database.query(`ANALYZE TABLE ${schema}.${table}`, { type: QueryTypes.SELECT });
   const [row] = await database.query<{ bytes: string }>(
     `SELECT DATA_LENGTH + INDEX_LENGTH AS bytes FROM information_schema.TABLES
       WHERE TABLE_SCHEMA = :schema AND TABLE_NAME = :table`,
