@@ -1,10 +1,11 @@
 import { useState } from "react";
 import { View } from "react-native";
 
-import { useFormat, useWords } from "@features/i18n";
+import { useWords } from "@features/i18n";
 import { Button, Card, Chip, Table, useBreakpoint, type Column } from "@features/ui";
 
 import type { AccessToken } from "./revoke-token-dialog";
+import { useWhen } from "./use-when";
 
 interface AccessTokensTableProps {
   tokens: readonly AccessToken[];
@@ -13,10 +14,9 @@ interface AccessTokensTableProps {
 
 export function AccessTokensTable({ tokens, onRevoke }: AccessTokensTableProps) {
   const t = useWords("people");
-  const format = useFormat();
   const phone = useBreakpoint() === "phone";
   const [nowMs] = useState(() => Date.now());
-  const when = (at: string) => format.dateTime(Date.parse(at));
+  const when = useWhen(nowMs);
   const ended = ({ expiresAt }: AccessToken) =>
     expiresAt !== null && Date.parse(expiresAt) <= nowMs;
   const revoke = (token: AccessToken) => (

@@ -11,7 +11,7 @@ import { call, sessionQuery, useErrorWords } from "@features/api";
 import { useWords } from "@features/i18n";
 import { useToast } from "@features/ui";
 
-import { useMemberWords } from "./member-words";
+import { nameOf } from "./member-words";
 import { peopleQueries } from "./people-queries";
 import { useChange } from "./use-change";
 
@@ -31,7 +31,6 @@ export function locksOneselfOut(member: Member, change: MemberChange): boolean {
 /** Sends a change of one member, says that it is done and offers to take it back where that works. */
 export function useMemberChange(member: Member, onDone: () => void) {
   const t = useWords("people");
-  const words = useMemberWords();
   const inWords = useErrorWords();
   const toast = useToast();
   const client = useQueryClient();
@@ -50,7 +49,7 @@ export function useMemberChange(member: Member, onDone: () => void) {
     else await call(updateMember, { params, body: { state: change.state } });
   };
   const said = (change: MemberChange): string => {
-    const who = { name: words.name(member), email: member.email };
+    const who = { name: nameOf(member), email: member.email };
     if (change.kind === "role")
       return t("members.roleChanged", { ...who, role: t(`role.${change.role}`) });
     if (change.kind === "state")

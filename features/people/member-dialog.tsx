@@ -3,7 +3,7 @@ import { useWords } from "@features/i18n";
 import { Banner, Dialog, Text } from "@features/ui";
 
 import type { MemberChange } from "./member-change";
-import { useMemberWords } from "./member-words";
+import { nameOf } from "./member-words";
 
 interface MemberDialogProps {
   member: Member;
@@ -18,8 +18,7 @@ interface MemberDialogProps {
 /** Asks before what cannot be taken back: a removal, a withdrawn invitation, one's own rights. */
 export function MemberDialog({ member, change, refused, ...rest }: MemberDialogProps) {
   const t = useWords("people");
-  const words = useMemberWords();
-  const who = { name: words.name(member), email: member.email };
+  const who = { name: nameOf(member), email: member.email };
   const key =
     change.kind === "role"
       ? "selfRole"

@@ -7,15 +7,15 @@ import { Banner, Button, ChoiceTiles, Divider, Sheet, Stack, Text } from "@featu
 
 import { locksOneselfOut, useMemberChange, type MemberChange } from "./member-change";
 import { MemberDialog } from "./member-dialog";
-import { useMemberWords } from "./member-words";
+import { nameOf, useMemberWords } from "./member-words";
 import { useRoleChoices } from "./role-choices";
 
 /** One member: role, a fresh invitation, disable or enable, removal. */
 export function MemberSheet({ member, onClose }: { member: Member; onClose: () => void }) {
   const t = useWords("people");
-  const words = useMemberWords();
   const choices = useRoleChoices();
   const [nowMs] = useState(() => Date.now());
+  const words = useMemberWords(nowMs);
   const [role, setRole] = useState<Role>(member.role);
   const [asking, setAsking] = useState<MemberChange | null>(null);
   const change = useMemberChange(member, onClose);
@@ -27,12 +27,12 @@ export function MemberSheet({ member, onClose }: { member: Member; onClose: () =
   };
   const refused = change.formErrors.join(" ");
   return (
-    <Sheet open kind="side" title={words.name(member)} onClose={onClose}>
+    <Sheet open kind="side" title={nameOf(member)} onClose={onClose}>
       <View style={{ gap: 16 }}>
         <View>
           {invited ? null : <Text tone="ink2">{member.email}</Text>}
           <Text variant="small" tone="ink2">
-            {words.link(member, nowMs) ?? words.state(member, nowMs)}
+            {words.link(member) ?? words.state(member)}
           </Text>
         </View>
         {refused && asking === null ? (

@@ -1,5 +1,7 @@
 import type { Member } from "@shared/contracts/people";
-import { useFormat, useWords } from "@features/i18n";
+import { useWords } from "@features/i18n";
+
+import { useWhen } from "./use-when";
 
 /** An invitation whose link no longer works. */
 export function hasEnded(member: Member, nowMs: number): boolean {
@@ -7,24 +9,25 @@ export function hasEnded(member: Member, nowMs: number): boolean {
   return member.state === "invited" && until !== null && Date.parse(until) <= nowMs;
 }
 
+/** An open invitation has only its address. */
+export function nameOf(member: Member): string {
+  return member.name ?? member.email;
+}
+
 /** What the list and the panel say of a member, in the language and clock of this device. */
-export function useMemberWords() {
+export function useMemberWords(nowMs: number) {
   const t = useWords("people");
-  const format = useFormat();
-  const when = (at: string) => format.dateTime(Date.parse(at));
+  const when = useWhen(nowMs);
   return {
-    /** An open invitation has only its address. */
-    name: (member: Member) => member.name ?? member.email,
     lastSeen: (member: Member) =>
       member.lastSeenAt ? when(member.lastSeenAt) : t("members.never"),
     /** Until when the link works, or that it has ended; null where there is no link. */
-    link: (member: Member, nowMs: number) => {
+    link: (member: Member) => {
       const until = member.invitationExpiresAt;
       if (until === null) return null;
       const key = hasEnded(member, nowMs) ? "expiredOn" : "until";
       return t(`members.${key}`, { when: when(until) });
     },
-    state: (member: Member, nowMs: number) =>
-      t(`members.${hasEnded(member, nowMs) ? "expired" : member.state}`),
+    state: (member: Member) => t(`members.${hasEnded(member, nowMs) ? "expired" : member.state}`),
   };
 }

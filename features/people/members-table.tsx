@@ -5,7 +5,7 @@ import type { Member } from "@shared/contracts/people";
 import { useWords } from "@features/i18n";
 import { Button, Card, Chip, Row, Table, Text, useBreakpoint, type Column } from "@features/ui";
 
-import { hasEnded, useMemberWords } from "./member-words";
+import { hasEnded, nameOf, useMemberWords } from "./member-words";
 
 interface MembersTableProps {
   members: readonly Member[];
@@ -14,12 +14,17 @@ interface MembersTableProps {
 
 export function MembersTable({ members, onOpen }: MembersTableProps) {
   const t = useWords("people");
-  const words = useMemberWords();
   const [nowMs] = useState(() => Date.now());
-  const phone = useBreakpoint() === "phone";
+  const words = useMemberWords(nowMs);
+  const size = useBreakpoint();
+  const wide = size === "wide";
   const columns: Column<Member>[] = [
-    { key: "name", header: t("members.name"), render: (member) => <Name member={member} /> },
-    { key: "email", header: t("members.email"), render: (member) => member.email },
+    {
+      key: "name",
+      header: t("members.name"),
+      render: (member) => <Name member={member} withEmail={!wide} />,
+    },
+    { key: "email", header: t("members.email"), wideOnly: true, render: ({ email }) => email },
     { key: "role", header: t("members.role"), render: (member) => t(`role.${member.role}`) },
     {
       key: "state",
@@ -47,7 +52,7 @@ export function MembersTable({ members, onOpen }: MembersTableProps) {
         lines: (member) => [
           member.name === null ? null : member.email,
           t(`role.${member.role}`),
-          words.link(member, nowMs) ??
+          words.link(member) ??
             (member.lastSeenAt
               ? t("members.lastSeenOn", { when: words.lastSeen(member) })
               : t("members.neverSeen")),
@@ -58,26 +63,33 @@ export function MembersTable({ members, onOpen }: MembersTableProps) {
       }}
     />
   );
-  return phone ? table : <Card pad={0}>{table}</Card>;
+  return size === "phone" ? table : <Card pad={0}>{table}</Card>;
 }
 
-function Name({ member }: { member: Member }) {
+/** Where there is no column for it, the address stands under the name. */
+function Name({ member, withEmail }: { member: Member; withEmail?: boolean }) {
   const t = useWords("people");
-  const words = useMemberWords();
   return (
-    <Row gap={2} wrap>
-      <Text variant="subhead" level="none">
-        {words.name(member)}
-      </Text>
-      {member.isSelf ? <Chip tone="line" label={t("members.you")} /> : null}
-    </Row>
+    <View>
+      <Row gap={2} wrap>
+        <Text variant="subhead" level="none">
+          {nameOf(member)}
+        </Text>
+        {member.isSelf ? <Chip tone="line" label={t("members.you")} /> : null}
+      </Row>
+      {withEmail && member.name !== null ? (
+        <Text variant="small" tone="ink2">
+          {member.email}
+        </Text>
+      ) : null}
+    </View>
   );
 }
 
 /** The state, and under it until when an invitation's link works. */
 function State({ member, nowMs }: { member: Member; nowMs: number }) {
-  const words = useMemberWords();
-  const link = words.link(member, nowMs);
+  const words = useMemberWords(nowMs);
+  const link = words.link(member);
   return (
     <View style={{ gap: 2 }}>
       <StateChip member={member} nowMs={nowMs} />
@@ -92,8 +104,8 @@ function State({ member, nowMs }: { member: Member; nowMs: number }) {
 
 /** Active is the usual case and stays quiet. */
 function StateChip({ member, nowMs }: { member: Member; nowMs: number }) {
-  const words = useMemberWords();
-  const label = words.state(member, nowMs);
+  const words = useMemberWords(nowMs);
+  const label = words.state(member);
   if (member.state === "active") {
     return (
       <Text variant="table" tone="ink2">
@@ -108,7 +120,6 @@ function StateChip({ member, nowMs }: { member: Member; nowMs: number }) {
 
 function ChangeButton({ member, onOpen }: Pick<MembersTableProps, "onOpen"> & { member: Member }) {
   const t = useWords("people");
-  const words = useMemberWords();
   const phone = useBreakpoint() === "phone";
   if (!member.can.edit && !member.can.remove) return null;
   return (
@@ -116,7 +127,7 @@ function ChangeButton({ member, onOpen }: Pick<MembersTableProps, "onOpen"> & { 
       kind="second"
       size={phone ? "default" : "dense"}
       label={t("members.change")}
-      said={t("members.changeSaid", { name: words.name(member) })}
+      said={t("members.changeSaid", { name: nameOf(member) })}
       onPress={() => onOpen(member)}
     />
   );

@@ -21,8 +21,9 @@ export { openWith, visited };
 Object.defineProperty(document.documentElement, "clientWidth", { value: 1440 });
 Object.defineProperty(document.documentElement, "clientHeight", { value: 900 });
 
-// Two busy cores: a second is too tight for a screen to settle.
-configure({ asyncUtilTimeout: 10_000 });
+// Two busy cores: a second is too tight for a screen to settle, and working out for every element
+// whether a style hides it takes most of a test's time; the screens unmount what they hide.
+configure({ asyncUtilTimeout: 10_000, defaultHidden: true });
 
 jest.mock("expo-router/head", () => ({ __esModule: true, default: () => null }));
 jest.mock("expo-router", () => jest.requireActual("./test-router"));
