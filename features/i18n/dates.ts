@@ -2,7 +2,7 @@ import type { Language } from "./i18n";
 import { localeOf } from "./numbers";
 
 export type DateStyle =
-  "dayMonthYear" | "weekdayDay" | "dayMonth" | "full" | "monthYear" | "weekdayShort";
+  "weekdayDay" | "dayMonth" | "dayMonthYear" | "full" | "monthYear" | "weekdayShort";
 
 const fields: Readonly<Record<DateStyle, Intl.DateTimeFormatOptions>> = {
   weekdayDay: { weekday: "short", day: "numeric", month: "short" },

@@ -13,7 +13,7 @@ export function ColumnTable(props: ColumnsProps) {
   const width = (index: number) => ({
     flexGrow: isTime(columns[index]?.meaning ?? "skip") ? 1.5 : 1,
     flexBasis: 0,
-    minWidth: isTime(columns[index]?.meaning ?? "skip") ? 168 : 112,
+    minWidth: isTime(columns[index]?.meaning ?? "skip") ? 176 : 128,
   });
   return (
     <Card pad={0}>
@@ -36,7 +36,8 @@ export function ColumnTable(props: ColumnsProps) {
                 style={[
                   width(column.index),
                   {
-                    padding: 14,
+                    paddingVertical: 14,
+                    paddingHorizontal: 8,
                     gap: 6,
                     borderLeftWidth: column.index === 0 ? 0 : 1,
                     borderLeftColor: colour.rule,
@@ -63,7 +64,7 @@ export function ColumnTable(props: ColumnsProps) {
                   <View
                     key={column.index}
                     role="cell"
-                    style={[width(column.index), { paddingHorizontal: 14, paddingVertical: 7 }]}
+                    style={[width(column.index), { paddingHorizontal: 12, paddingVertical: 7 }]}
                   >
                     <Text
                       variant="asReadM"

@@ -72,7 +72,7 @@ export function FileStep({ detail, actions }: { detail: ImportDetail; actions: I
             {detail.files.map((file) => (
               <View
                 key={file.id}
-                style={{ flexGrow: 1, flexBasis: several ? 320 : undefined, minWidth: 0 }}
+                style={{ flexGrow: 1, flexBasis: several ? 320 : "100%", minWidth: 0 }}
               >
                 <FileCard file={file} detail={detail} actions={actions} />
               </View>

@@ -89,7 +89,7 @@ function ImportsTable({ imports }: { imports: readonly ImportSummary[] }) {
   const files = (item: ImportSummary) => item.fileNames.join(", ") || t("logs.noFile");
   const covers = (item: ImportSummary) =>
     item.firstInstant && item.lastInstant
-      ? `${format.date(Date.parse(item.firstInstant))} – ${format.date(Date.parse(item.lastInstant))}`
+      ? `${format.date(Date.parse(item.firstInstant), "dayMonthYear")} – ${format.date(Date.parse(item.lastInstant), "dayMonthYear")}`
       : "—";
   const tag = (item: ImportSummary) => (
     <LoopTag tag={item.loop.tag} service={serviceOfLoop(item.loop.service)} size="s" />
@@ -108,7 +108,11 @@ function ImportsTable({ imports }: { imports: readonly ImportSummary[] }) {
         {
           key: "state",
           header: t("logs.columns.state"),
-          render: (item) => <StateChip state={item.state} />,
+          render: (item) => (
+            <Row>
+              <StateChip state={item.state} />
+            </Row>
+          ),
         },
         {
           key: "rows",

@@ -62,7 +62,12 @@ export function ResultStep({ detail, actions }: { detail: ImportDetail; actions:
       side={
         <>
           {checks ? (
-            <RowCounts rows={checks.rows} withoutTemperature={checks.rowsWithoutTemperature} />
+            <View>
+              <Text variant="subhead" level={2}>
+                {t("result.rows")}
+              </Text>
+              <RowCounts rows={checks.rows} withoutTemperature={checks.rowsWithoutTemperature} />
+            </View>
           ) : null}
           <NextAndRecord detail={detail} />
         </>

@@ -25,12 +25,14 @@ export function StartImportScreen() {
   const { mutate } = start;
   const asked = useRef<string | null>(null);
   const open = (pointId: string) =>
-    mutate(pointId, { onSuccess: (detail) => router.replace(importPaths.wizard(detail.id)) });
+    mutate(pointId, {
+      onSuccess: (detail) => router.replace(importPaths.wizard(detail.id, "file")),
+    });
 
   useEffect(() => {
     if (!point || asked.current === point) return;
     asked.current = point;
-    mutate(point, { onSuccess: (detail) => router.replace(importPaths.wizard(detail.id)) });
+    mutate(point, { onSuccess: (detail) => router.replace(importPaths.wizard(detail.id, "file")) });
   }, [point, mutate]);
 
   return (

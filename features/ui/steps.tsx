@@ -23,28 +23,56 @@ export interface StepsProps<Key extends string> {
   reachable?: (key: Key) => boolean;
 }
 
-/** A round with its steps on the line. Wide: numbered labels; phone: joints, the title below. */
+/** A round with its steps on the line. Wide: numbered labels; phone: numbers only, the title below. */
 export function Steps<Key extends string>(props: StepsProps<Key>) {
   const phone = useBreakpoint() === "phone";
-  return phone ? <JointSteps {...props} /> : <LabelledSteps {...props} />;
+  const t = useWords("ui");
+  if (!phone) return <StepLine {...props} />;
+  const index = Math.max(
+    0,
+    props.steps.findIndex(({ key }) => key === props.current),
+  );
+  return (
+    <View>
+      <StepLine {...props} short />
+      <Text variant="title" level={2}>
+        {props.steps[index]?.label ?? ""}
+      </Text>
+      <Text variant="small" tone="ink3">
+        {t("steps.ofAll", { step: index + 1, count: props.steps.length })}
+      </Text>
+    </View>
+  );
 }
 
-function LabelledSteps<Key extends string>(props: StepsProps<Key>) {
+const LINE_HEIGHT = 50;
+/** Where the line runs, from the top of the row. */
+const FOOT = LINE_HEIGHT - 9.25;
+const JOINT = 22;
+
+function StepLine<Key extends string>(props: StepsProps<Key> & { short?: boolean }) {
   const { colour } = useTheme();
   const [width, onLayout] = useMeasuredWidth();
   const { spans, measure } = useSpans("x");
-  const height = 50;
   const span = spans.get(props.current);
   const run =
     span && width > 0
-      ? risingRun({ start: span.start + 8, end: span.end - 8 }, width, height - 8)
+      ? risingRun({ start: span.start + 8, end: span.end - 8 }, width, LINE_HEIGHT - 8)
       : null;
   const currentIndex = props.steps.findIndex(({ key }) => key === props.current);
   return (
-    <View role="group" aria-label={props.label} onLayout={onLayout} style={{ minHeight: height }}>
+    <View
+      role="group"
+      aria-label={props.label}
+      onLayout={onLayout}
+      style={{ minHeight: LINE_HEIGHT }}
+    >
       {run ? (
-        <View aria-hidden style={{ position: "absolute", left: 0, right: 0, top: 0, height }}>
-          <Svg width={width} height={height}>
+        <View
+          aria-hidden
+          style={{ position: "absolute", left: 0, right: 0, top: 0, height: LINE_HEIGHT }}
+        >
+          <Svg width={width} height={LINE_HEIGHT}>
             <Path d={run.before} fill="none" stroke={colour.ink} strokeWidth={stroke.run} />
             <Path
               d={run.after}
@@ -57,89 +85,45 @@ function LabelledSteps<Key extends string>(props: StepsProps<Key>) {
         </View>
       ) : null}
       <View role="list" style={{ flexDirection: "row", justifyContent: "space-between" }}>
-        {props.steps.map((step, index) => (
-          <View
-            key={step.key}
-            role="listitem"
-            onLayout={measure(step.key)}
-            style={{ minHeight: height, flexGrow: 1, alignItems: "center" }}
-          >
-            <StepButton {...props} step={step} index={index}>
-              <Text
-                variant={index === currentIndex ? "navOn" : "nav"}
-                tone={index <= currentIndex || step.done ? "ink" : "ink2"}
-              >
-                {`${index + 1}\u2002${step.label}`}
-              </Text>
-            </StepButton>
-            {index === currentIndex ? null : (
-              <View aria-hidden style={{ position: "absolute", top: height - 17 }}>
-                <Joint done={step.done} ground={colour.pad} />
-              </View>
-            )}
-          </View>
-        ))}
-      </View>
-    </View>
-  );
-}
-
-function JointSteps<Key extends string>(props: StepsProps<Key>) {
-  const { colour } = useTheme();
-  const t = useWords("ui");
-  const [width, onLayout] = useMeasuredWidth();
-  const count = props.steps.length;
-  const currentIndex = Math.max(
-    0,
-    props.steps.findIndex(({ key }) => key === props.current),
-  );
-  const current = props.steps[currentIndex];
-  const at = (index: number) => 12 + (index * Math.max(0, width - 24)) / Math.max(1, count - 1);
-  return (
-    <View role="group" aria-label={props.label}>
-      <View onLayout={onLayout} style={{ height: target.default }}>
-        {width > 0 ? (
-          <View aria-hidden style={{ position: "absolute", inset: 0 }}>
-            <Svg width={width} height={target.default}>
-              <Path d={`M0 24H${at(currentIndex)}`} stroke={colour.ink} strokeWidth={stroke.run} />
-              <Path
-                d={`M${at(currentIndex)} 24H${width}`}
-                stroke={colour.ruleStrong}
-                strokeWidth={stroke.run}
-                strokeDasharray="2 6"
-                strokeLinecap="round"
-              />
-            </Svg>
-          </View>
-        ) : null}
-        <View
-          role="list"
-          style={{ flexDirection: "row", justifyContent: "space-between", marginHorizontal: -12 }}
-        >
-          {props.steps.map((step, index) => (
-            <View key={step.key} role="listitem">
-              <StepButton {...props} step={step} index={index}>
+        {props.steps.map((step, index) => {
+          const current = index === currentIndex;
+          const label = props.short
+            ? current
+              ? String(index + 1)
+              : "\u2002"
+            : `${index + 1}\u2002${step.label}`;
+          return (
+            <View
+              key={step.key}
+              role="listitem"
+              onLayout={measure(step.key)}
+              style={{ minHeight: LINE_HEIGHT, flexGrow: 1, alignItems: "center" }}
+            >
+              {current ? null : (
                 <View
+                  aria-hidden
                   style={{
-                    width: target.default,
-                    height: target.default,
-                    alignItems: "center",
+                    position: "absolute",
+                    top: FOOT - JOINT / 2,
+                    height: JOINT,
                     justifyContent: "center",
                   }}
                 >
-                  <Joint done={step.done} current={index === currentIndex} ground={colour.pad} />
+                  <Joint done={step.done} ground={colour.pad} />
                 </View>
+              )}
+              <StepButton {...props} step={step} index={index}>
+                <Text
+                  variant={current ? "navOn" : "nav"}
+                  tone={index <= currentIndex || step.done ? "ink" : "ink2"}
+                >
+                  {label}
+                </Text>
               </StepButton>
             </View>
-          ))}
-        </View>
+          );
+        })}
       </View>
-      <Text variant="title" level={2}>
-        {current?.label ?? ""}
-      </Text>
-      <Text variant="small" tone="ink3">
-        {t("steps.ofAll", { step: currentIndex + 1, count })}
-      </Text>
     </View>
   );
 }
@@ -167,16 +151,21 @@ function StepButton<Key extends string>(
       onPress={() => {
         if (open && !isCurrent) props.onChange?.(step.key);
       }}
-      style={{ minHeight: 34, justifyContent: "center", paddingHorizontal: 6 }}
+      style={{
+        minHeight: target.default,
+        justifyContent: "center",
+        paddingHorizontal: 6,
+        paddingBottom: 12,
+      }}
     >
       {props.children}
     </Pressable>
   );
 }
 
-function Joint({ done, current, ground }: { done: boolean; current?: boolean; ground: string }) {
+function Joint({ done, ground }: { done: boolean; ground: string }) {
   const { colour } = useTheme();
-  if (done && !current) {
+  if (done) {
     return (
       <Svg width={18} height={18}>
         <Circle cx={9} cy={9} r={7} fill={colour.ink} />
@@ -192,16 +181,15 @@ function Joint({ done, current, ground }: { done: boolean; current?: boolean; gr
     );
   }
   return (
-    <Svg width={22} height={22}>
+    <Svg width={JOINT} height={JOINT}>
       <Circle
-        cx={11}
-        cy={11}
-        r={current ? 9 : 5.5}
+        cx={JOINT / 2}
+        cy={JOINT / 2}
+        r={5.5}
         fill={ground}
-        stroke={current ? colour.ink : colour.ruleStrong}
-        strokeWidth={current ? 3 : 2}
+        stroke={colour.ruleStrong}
+        strokeWidth={2}
       />
-      {current ? <Circle cx={11} cy={11} r={4} fill={colour.ink} /> : null}
     </Svg>
   );
 }

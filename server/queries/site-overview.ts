@@ -117,7 +117,9 @@ function overviewOf(
   { bore, energy, readings, strip }: LoopRows,
 ): OverviewLoop {
   const { id, tag, name, service, buildingId, parentLoopId } = loop;
-  const counted = energy !== undefined && readings?.blockedBy == null ? energy : null;
+  const covered = energy !== undefined && Number(energy.coveredS) > 0;
+  // Where nothing is covered the energy is unknown, which is not zero.
+  const counted = covered && readings?.blockedBy == null ? energy : null;
   const heatingKwh = counted && decimalNumber(counted.heatingKwh);
   const coolingKwh = counted && decimalNumber(counted.coolingKwh);
   const register = { chilled: "cooling", hot: "heating", changeover: null }[service];
