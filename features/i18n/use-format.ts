@@ -99,7 +99,7 @@ function duration(seconds: number, whole: (value: number) => string): string {
   const total = Math.round(seconds);
   if (total < 120) return join(total, "s");
   const minutes = Math.round(total / 60);
-  if (minutes < 120) return join(minutes, "min");
+  if (minutes < 120 && minutes % 60 !== 0) return join(minutes, "min");
   const hours = Math.floor(minutes / 60);
   const rest = minutes % 60;
   if (hours >= 48) return join(Math.round(hours / 24), "d");
