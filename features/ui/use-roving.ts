@@ -22,6 +22,12 @@ export function useRoving(count: number, onMove: (index: number) => void) {
       preventDefault?: () => void;
     }) => {
       const key = event.key ?? event.nativeEvent?.key;
+      // React Native Web presses on Space only what is a button; a radio and a tab take it as well.
+      if (key === " ") {
+        event.preventDefault?.();
+        onMove(index);
+        return;
+      }
       const target =
         key === "ArrowRight" || key === "ArrowDown"
           ? index + 1
