@@ -47,6 +47,16 @@ const planBlocks = [
   { width: "100%", height: 150 },
 ] as const;
 
+const dayIn = (instant: string | null, zone: string) =>
+  instant === null ? null : dayInZone(Date.parse(instant), zone);
+
+/** Monday of the last week that readings reach the end of; the only week there is otherwise. */
+function lastWholeWeek(firstDay: string | null, lastDay: string): string {
+  const monday = mondayOf(lastDay);
+  const whole = addDays(monday, 6) <= lastDay;
+  return whole || firstDay === null || firstDay >= monday ? monday : addDays(monday, -7);
+}
+
 function SitePage({ site, week }: { site: Site; week: string | undefined }) {
   const t = useWords("places");
   const router = useRouter();
@@ -54,13 +64,15 @@ function SitePage({ site, week }: { site: Site; week: string | undefined }) {
   const now = useNow();
   const today = dayInZone(now, site.zone);
   const asked = week !== undefined && /^\d{4}-\d\d-\d\d$/.test(week) ? mondayOf(week) : null;
-  // Without a week in the address: the last one that holds readings, else the present one.
+  // Without a week in the address: the last whole one that holds readings. A week that has just
+  // begun says little, and comparing it with others says less.
   const present = mondayOf(today);
   const latest = useQuery(placesQueries.overview(site.id, present, addDays(present, 7)));
   const last = latest.data?.lastReadingAt ?? null;
-  const lastDay = last === null ? null : dayInZone(Date.parse(last), site.zone);
+  const lastDay = dayIn(last, site.zone);
   const settled = asked !== null || latest.data !== undefined || latest.error !== null;
-  const fallback = lastDay !== null && lastDay < present ? mondayOf(lastDay) : present;
+  const firstDay = dayIn(latest.data?.firstReadingAt ?? null, site.zone);
+  const fallback = lastDay === null ? present : lastWholeWeek(firstDay, lastDay);
   const monday = asked ?? fallback;
   const overview = useQuery({
     ...placesQueries.overview(site.id, monday, addDays(monday, 7)),
