@@ -32,7 +32,7 @@ export interface LabelOptions {
 }
 
 /** Rough widths of a digit of a figure and of a letter of a name, px. */
-const digitPx = 9;
+const digitPx = 8.2;
 const letterPx = 7;
 /** A day this wide stands nearly alone: its month is no longer plain from its neighbours. */
 const loneDayPx = 220;

@@ -169,7 +169,11 @@ function Rows(props: ChartCardProps) {
   );
   function rowName(): string {
     const { rows, expectedS } = summary.totals;
-    const stepS = rows.expected ? Math.round(expectedS / rows.expected) : null;
-    return stepS === null ? t("table.asRead") : format.duration(stepS);
+    const meanS = rows.expected ? expectedS / rows.expected : NaN;
+    const stepS = usualStepsS.find((step) => Math.abs(meanS - step) < step * 0.02);
+    return stepS === undefined ? t("table.asRead") : format.duration(stepS);
   }
 }
+
+/** Steps loggers are set to; a range in which it changed has no one step to name. */
+const usualStepsS = [1, 2, 5, 10, 15, 20, 30, 60, 120, 300, 600, 900, 1800, 3600] as const;

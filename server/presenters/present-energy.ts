@@ -32,11 +32,11 @@ function presentRegister(register: RegisterTotals): TotalsAnswer["heating"] {
   };
 }
 
-/** `nominalStepMs` says how many rows the expected time would hold; null where it is unknown. */
+/** `expectedRows` are those due by the loggers' own steps; null where nobody counted them. */
 export function presentTotals(
   totals: EnergyTotals,
   expectedS: number,
-  nominalStepMs: number | null,
+  expectedRows: number | null,
 ): TotalsAnswer {
   return {
     heating: presentRegister(totals.heating),
@@ -51,7 +51,7 @@ export function presentTotals(
       measured: totals.measuredRows,
       excluded: totals.excludedRows,
       noReading: totals.noReadingRows,
-      expected: nominalStepMs === null ? null : Math.floor((expectedS * 1000) / nominalStepMs),
+      expected: expectedRows,
     },
     apportioned: totals.apportioned,
   };

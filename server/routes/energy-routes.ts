@@ -51,7 +51,7 @@ export const energyRoutes: readonly Endpoint[] = [
         from: instantText(new Date(range.startMs)),
         to: instantText(new Date(range.endMs)),
         basis: presentBasis(energyPoint),
-        totals: presentTotals(totals, expectedS, energyPoint.readings.nominalStepMs),
+        totals: presentTotals(totals, expectedS, null),
         columns: rows && presentColumns(rows),
       };
     },

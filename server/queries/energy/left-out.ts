@@ -1,12 +1,7 @@
 import { qualityRuns, type QualityRun } from "@shared/domain/readings/quality-runs";
 import type { Interval } from "@shared/domain/time/interval";
-import { DAY_MS } from "@shared/domain/time/interval";
 import type { Database } from "@server/database/connect";
-import { loadSegments } from "@server/readings/load-segments";
-import { breathe } from "./breathe";
-
-/** Months of one-minute rows are unpacked in parts, so that other requests are served between. */
-const partMs = 60 * DAY_MS;
+import { readingParts } from "./reading-parts";
 
 /**
  * The runs of quality of a range, joined over the parts they are worked out in. The time yet to
@@ -18,15 +13,17 @@ export async function loadQualityRuns(
   range: Interval,
   nowMs: number,
 ): Promise<QualityRun[]> {
-  const endMs = Math.min(range.endMs, nowMs);
+  const seen = { startMs: range.startMs, endMs: Math.min(range.endMs, nowMs) };
   const runs: QualityRun[] = [];
-  for (let startMs = range.startMs; startMs < endMs; startMs += partMs) {
-    const part = { startMs, endMs: Math.min(startMs + partMs, endMs) };
-    const segments = await loadSegments(database, pointId, part.startMs, part.endMs);
-    for (const run of qualityRuns(segments, part)) append(runs, run);
-    await breathe();
+  for await (const part of readingParts(database, pointId, seen)) {
+    appendRuns(runs, qualityRuns(part.segments, part));
   }
   return runs;
+}
+
+/** Adds the runs of the part that follows; one that goes on over the edge stays one. */
+export function appendRuns(runs: QualityRun[], following: readonly QualityRun[]): void {
+  for (const run of following) append(runs, run);
 }
 
 function append(runs: QualityRun[], run: QualityRun): void {
@@ -36,10 +33,14 @@ function append(runs: QualityRun[], run: QualityRun): void {
   else runs.push(run);
 }
 
-/** The longest of the runs that are not measured, in order of time. */
-export function leftOut(runs: readonly QualityRun[], most: number): QualityRun[] {
-  return runs
-    .filter((run) => run.kind !== "measured")
+/** Runs in which rows are left out. The step after a log's last row lacks time but no row. */
+export function leftOutRuns(runs: readonly QualityRun[]): QualityRun[] {
+  return runs.filter((run) => run.kind !== "measured" && run.rows > 0);
+}
+
+/** The longest of them, in order of time. */
+export function longest(runs: readonly QualityRun[], most: number): QualityRun[] {
+  return [...runs]
     .sort((a, b) => b.endMs - b.startMs - (a.endMs - a.startMs))
     .slice(0, most)
     .sort((a, b) => a.startMs - b.startMs);

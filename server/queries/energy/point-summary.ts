@@ -14,7 +14,7 @@ import { combineTotals } from "./combine-totals";
 import type { EnergyPoint } from "./energy-point";
 import { expectedSeconds, type EnergyRange } from "./energy-range";
 import { energyRows, type EnergyRow } from "./energy-rows";
-import { leftOut, loadQualityRuns, measuredSeconds } from "./left-out";
+import { leftOutRuns, loadQualityRuns, longest, measuredSeconds } from "./left-out";
 import {
   busiestHalfHour,
   loadOf,
@@ -50,13 +50,15 @@ export async function pointSummary(
   const registers = loop.service === "changeover" ? (["heating", "cooling"] as const) : [register];
   const busiest = await busiestLoad(database, energyPoint, columns, registers, rows);
   const night = nightBase(columns, zone, register, rows.length);
-  const gaps = runs.filter((run) => run.kind !== "measured");
+  const leftOut = leftOutRuns(runs);
+  // Rows due by the step of the log that was running, which may change within the range.
+  const expectedRows = leftOut.reduce((sum, run) => sum + run.rows, totals.measuredRows);
   return {
     zone,
     from: instantText(new Date(range.startMs)),
     to: instantText(new Date(range.endMs)),
     basis,
-    totals: presentTotals(totals, expectedSeconds(range, nowMs), readings.nominalStepMs),
+    totals: presentTotals(totals, expectedSeconds(range, nowMs), expectedRows),
     days: presentDays(rows, range, zone),
     ...busiest,
     nightBase: night && {
@@ -65,7 +67,7 @@ export async function pointSummary(
       powerKw: rounded(night.powerKw, 4),
       coverage: rounded(night.coverage, 4),
     },
-    leftOut: leftOut(runs, mostLeftOut).map((run) => ({
+    leftOut: longest(leftOut, mostLeftOut).map((run) => ({
       kind:
         run.kind === "excluded" ? "excluded" : run.reason === "noRows" ? "missing" : "noReading",
       from: instantText(new Date(run.startMs)),
@@ -73,7 +75,7 @@ export async function pointSummary(
       rows: run.rows,
       reason: run.reason ?? "noRows",
     })),
-    leftOutCount: gaps.length,
+    leftOutCount: leftOut.length,
     firstReadingAt: at(readings.firstMs),
     lastReadingAt: at(readings.lastMs),
   };

@@ -1,21 +1,28 @@
 import type { SeriesAnswer } from "@shared/contracts/energy";
-import { samplePower } from "@shared/domain/energy/power";
-import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
-import { chartColumns, type ChartColumns } from "@shared/domain/readings/chart-columns";
-import { qualityRuns } from "@shared/domain/readings/quality-runs";
+import {
+  chartColumns,
+  type ChartColumns,
+  type ChartWindow,
+} from "@shared/domain/readings/chart-columns";
+import { qualityRuns, type QualityRun } from "@shared/domain/readings/quality-runs";
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import type { Interval } from "@shared/domain/time/interval";
 import { localDateOf, startOfLocalDay } from "@shared/domain/time/local-calendar";
 import { selectMany } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
 import { roundedOrNull } from "@server/presenters/present-energy";
-import { powerOptionsOf } from "@server/readings/energy-settings";
-import { loadSegments } from "@server/readings/load-segments";
+import { indexFrom, sliceColumns } from "@server/readings/load-segments";
+import { columnPower } from "./column-power";
 import type { EnergyPoint } from "./energy-point";
+import { intervalColumns, intervalQuality } from "./interval-columns";
+import { appendRuns } from "./left-out";
+import { readingParts } from "./reading-parts";
 import { screenQuality } from "./screen-quality";
 
 /** A column narrower than two pixels shows nothing that a wider one hides. */
 const pixelsPerColumn = 2;
+/** Beyond this many rows a picture from quarter-hours comes at once, one from rows after a second. */
+const mostRows = 3_000_000;
 
 /**
  * What a chart `pixels` wide can draw of a range: columns of means with their extremes, or the rows
@@ -28,16 +35,87 @@ export async function chartSeries(
   pixels: number,
   nowMs: number,
 ): Promise<SeriesAnswer> {
-  const { point, site, readings } = energyPoint;
-  const segments = await loadSegments(database, point.id, range.startMs, range.endMs);
-  const columns = chartColumns(segments, {
+  const { point, site } = energyPoint;
+  const window: ChartWindow = {
     ...range,
     most: Math.floor(pixels / pixelsPerColumn),
     anchorMs: startOfLocalDay(localDateOf(range.startMs, site.zone), site.zone),
-  });
-  const power = await powerOf(database, energyPoint, segments, columns);
+  };
   const seen = { startMs: range.startMs, endMs: Math.min(range.endMs, nowMs) };
-  const quality = seen.endMs > seen.startMs ? qualityRuns(segments, seen) : [];
+  const tooMany = (await rowsBehind(database, point.id, range)) > mostRows;
+  const drawn = tooMany
+    ? await fromIntervals(database, energyPoint, window, seen)
+    : await fromReadings(database, energyPoint, window, seen);
+  return present(energyPoint, range, drawn, pixels);
+}
+
+interface Drawn {
+  readonly columns: ChartColumns;
+  /** kW, heating positive. */
+  readonly power: Float64Array;
+  readonly quality: readonly QualityRun[];
+}
+
+async function rowsBehind(database: Database, pointId: string, range: Interval): Promise<number> {
+  const day = (ms: number) => new Date(ms).toISOString().slice(0, 10);
+  const [row] = await selectMany(
+    database,
+    "SELECT SUM(row_count) FROM reading_block WHERE point_id = ? AND day >= ? AND day <= ?",
+    [pointId, day(range.startMs), day(range.endMs)],
+  );
+  return Number(row?.[0] ?? 0);
+}
+
+async function fromReadings(
+  database: Database,
+  { point, settings }: EnergyPoint,
+  window: ChartWindow,
+  seen: Interval,
+): Promise<Drawn> {
+  const quality: QualityRun[] = [];
+  const segments: ReadingSegment[] = [];
+  for await (const part of readingParts(database, point.id, window)) {
+    const until = Math.min(part.endMs, seen.endMs);
+    if (until > part.startMs)
+      appendRuns(quality, qualityRuns(part.segments, { startMs: part.startMs, endMs: until }));
+    // The rows beyond a part's ends come again in its neighbours.
+    segments.push(...part.segments.map((segment) => within(segment, part)));
+  }
+  const columns = chartColumns(segments, window);
+  return {
+    columns,
+    quality,
+    power: await columnPower(database, point.id, settings, segments, columns),
+  };
+}
+
+function within(segment: ReadingSegment, { startMs, endMs }: Interval): ReadingSegment {
+  const { instantMs } = segment.columns;
+  const from = indexFrom(instantMs, startMs);
+  const to = indexFrom(instantMs, endMs);
+  return { ...segment, columns: sliceColumns(segment.columns, from, to) };
+}
+
+async function fromIntervals(
+  database: Database,
+  { point, settings }: EnergyPoint,
+  window: ChartWindow,
+  seen: Interval,
+): Promise<Drawn> {
+  const columns = await intervalColumns(database, point.id, window);
+  return {
+    columns,
+    quality: await intervalQuality(database, point.id, seen),
+    power: await columnPower(database, point.id, settings, [], columns),
+  };
+}
+
+function present(
+  { site, readings }: EnergyPoint,
+  range: Interval,
+  { columns, power, quality }: Drawn,
+  pixels: number,
+): SeriesAnswer {
   const t0Ms = columns.startMs[0] ?? range.startMs;
   const { envelope, columnMs } = columns;
   return {
@@ -97,59 +175,4 @@ function extent(channels: readonly Float64Array[]): [number, number] | null {
     }
   }
   return least <= greatest ? [least, greatest] : null;
-}
-
-/** Mean power of each column, kW, heating positive; from stored energy where columns are wide. */
-async function powerOf(
-  database: Database,
-  { point, settings }: EnergyPoint,
-  segments: readonly ReadingSegment[],
-  columns: ChartColumns,
-): Promise<Float64Array> {
-  const { columnMs, startMs } = columns;
-  if (columnMs !== null && columnMs % INTERVAL_MS === 0)
-    return storedPower(database, point.id, startMs, columnMs);
-  const options = powerOptionsOf(settings);
-  if (options === null) return new Float64Array(startMs.length).fill(NaN);
-  const sums = new Float64Array(startMs.length);
-  const counts = new Uint32Array(startMs.length);
-  for (const segment of segments) {
-    const { powerKw } = samplePower(segment.columns, options);
-    let column = 0;
-    segment.columns.instantMs.forEach((instant, row) => {
-      const power = powerKw[row] as number;
-      if (Number.isNaN(power)) return;
-      while (column + 1 < startMs.length && (startMs[column + 1] as number) <= instant) column++;
-      const start = startMs[column] as number;
-      const inside = columnMs === null ? instant === start : instant < start + columnMs;
-      if (instant < start || !inside) return;
-      sums[column] = (sums[column] as number) + power;
-      counts[column] = (counts[column] as number) + 1;
-    });
-  }
-  return sums.map((sum, column) => sum / (counts[column] as number));
-}
-
-async function storedPower(
-  database: Database,
-  pointId: string,
-  startMs: Float64Array,
-  columnMs: number,
-): Promise<Float64Array> {
-  const power = new Float64Array(startMs.length).fill(NaN);
-  const first = startMs[0];
-  if (first === undefined) return power;
-  const endS = (first + startMs.length * columnMs) / 1000;
-  const rows = await selectMany(
-    database,
-    `SELECT (start_s - ?) DIV ? AS place, SUM(COALESCE(heating_kwh, 0) - COALESCE(cooling_kwh, 0)),
-            SUM(COALESCE(covered_s, ?))
-       FROM interval_energy WHERE point_id = ? AND start_s >= ? AND start_s < ?
-      GROUP BY place`,
-    [first / 1000, columnMs / 1000, INTERVAL_MS / 1000, pointId, first / 1000, endS],
-  );
-  for (const [place, kwh, coveredS] of rows) {
-    if (Number(coveredS) > 0) power[Number(place)] = Number(kwh) / (Number(coveredS) / 3600);
-  }
-  return power;
 }

@@ -142,7 +142,10 @@ function rowColumns(parts: readonly Part[], rows: number): ChartColumns {
   };
 }
 
-/** Running sum, least and greatest of one channel per column. */
+// Looking an import up for every row costs more than the sum.
+const MEASURED = RowQuality.measured;
+
+/** Sum, count, least and greatest of one channel per column. */
 class ColumnSums {
   readonly least: Float64Array;
   readonly greatest: Float64Array;
@@ -156,13 +159,26 @@ class ColumnSums {
     this.greatest = new Float64Array(columns).fill(NaN);
   }
 
-  add(column: number, value: number): void {
-    if (value !== value) return;
-    this.sum[column] = (this.sum[column] as number) + value;
-    this.count[column] = (this.count[column] as number) + 1;
+  /** The measured rows `from` ≤ row < `to`, all of one column; a NaN is no reading. */
+  add(column: number, values: Float64Array, quality: Uint8Array, from: number, to: number): void {
+    let sum = 0;
+    let count = 0;
+    let least = Infinity;
+    let greatest = -Infinity;
+    for (let row = from; row < to; row++) {
+      const value = values[row] as number;
+      if (value !== value || quality[row] !== MEASURED) continue;
+      sum += value;
+      count++;
+      if (value < least) least = value;
+      if (value > greatest) greatest = value;
+    }
+    if (count === 0) return;
+    this.sum[column] = (this.sum[column] as number) + sum;
+    this.count[column] = (this.count[column] as number) + count;
     // Written so that the first value replaces NaN.
-    if (!(value >= (this.least[column] as number))) this.least[column] = value;
-    if (!(value <= (this.greatest[column] as number))) this.greatest[column] = value;
+    if (!(least >= (this.least[column] as number))) this.least[column] = least;
+    if (!(greatest <= (this.greatest[column] as number))) this.greatest[column] = greatest;
   }
 
   means(): Float64Array {
@@ -180,12 +196,15 @@ function meanColumns(parts: readonly Part[], rows: number, window: ChartWindow):
   const ret = new ColumnSums(columns);
   for (const { segment, from, to } of parts) {
     const { instantMs, flowM3PerHour, supplyC, returnC, quality } = segment.columns;
-    for (let row = from; row < to; row++) {
-      if (quality[row] !== RowQuality.measured) continue;
+    for (let row = from; row < to;) {
       const column = Math.floor(((instantMs[row] as number) - firstMs) / columnMs);
-      if (flowM3PerHour) flow.add(column, flowM3PerHour[row] as number);
-      if (supplyC) supply.add(column, supplyC[row] as number);
-      if (returnC) ret.add(column, returnC[row] as number);
+      const columnEndMs = firstMs + (column + 1) * columnMs;
+      const first = row;
+      do row++;
+      while (row < to && (instantMs[row] as number) < columnEndMs);
+      if (flowM3PerHour) flow.add(column, flowM3PerHour, quality, first, row);
+      if (supplyC) supply.add(column, supplyC, quality, first, row);
+      if (returnC) ret.add(column, returnC, quality, first, row);
     }
   }
   return {

@@ -1,0 +1,66 @@
+import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
+import { samplePower } from "@shared/domain/energy/power";
+import type { ChartColumns } from "@shared/domain/readings/chart-columns";
+import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
+import { selectMany } from "@server/database/bulk";
+import type { Database } from "@server/database/connect";
+import { powerOptionsOf, type EnergySettings } from "@server/readings/energy-settings";
+
+/**
+ * Mean power of each column of a chart, kW, heating positive; NaN where there is none. Wide columns
+ * take it from the stored energy, narrow ones from their rows.
+ */
+export async function columnPower(
+  database: Database,
+  pointId: string,
+  settings: EnergySettings,
+  segments: readonly ReadingSegment[],
+  columns: ChartColumns,
+): Promise<Float64Array> {
+  const { columnMs, startMs } = columns;
+  if (columnMs !== null && columnMs % INTERVAL_MS === 0)
+    return storedPower(database, pointId, startMs, columnMs);
+  const options = powerOptionsOf(settings);
+  if (options === null) return new Float64Array(startMs.length).fill(NaN);
+  const sums = new Float64Array(startMs.length);
+  const counts = new Uint32Array(startMs.length);
+  for (const segment of segments) {
+    const { powerKw } = samplePower(segment.columns, options);
+    let column = 0;
+    segment.columns.instantMs.forEach((instant, row) => {
+      const power = powerKw[row] as number;
+      if (Number.isNaN(power)) return;
+      while (column + 1 < startMs.length && (startMs[column + 1] as number) <= instant) column++;
+      const start = startMs[column] as number;
+      const inside = columnMs === null ? instant === start : instant < start + columnMs;
+      if (instant < start || !inside) return;
+      sums[column] = (sums[column] as number) + power;
+      counts[column] = (counts[column] as number) + 1;
+    });
+  }
+  return sums.map((sum, column) => sum / (counts[column] as number));
+}
+
+async function storedPower(
+  database: Database,
+  pointId: string,
+  startMs: Float64Array,
+  columnMs: number,
+): Promise<Float64Array> {
+  const power = new Float64Array(startMs.length).fill(NaN);
+  const first = startMs[0];
+  if (first === undefined) return power;
+  const endS = (first + startMs.length * columnMs) / 1000;
+  const rows = await selectMany(
+    database,
+    `SELECT (start_s - ?) DIV ? AS place, SUM(COALESCE(heating_kwh, 0) - COALESCE(cooling_kwh, 0)),
+            SUM(COALESCE(covered_s, ?))
+       FROM interval_energy WHERE point_id = ? AND start_s >= ? AND start_s < ?
+      GROUP BY place`,
+    [first / 1000, columnMs / 1000, INTERVAL_MS / 1000, pointId, first / 1000, endS],
+  );
+  for (const [place, kwh, coveredS] of rows) {
+    if (Number(coveredS) > 0) power[Number(place)] = Number(kwh) / (Number(coveredS) / 3600);
+  }
+  return power;
+}
