@@ -55,6 +55,20 @@ const matrix = `
   removePoint              ✓   ✓   ✓   –   –   –
   listBoreVersions         ✓   ✓   ✓   ✓   –   –
   listPipeTables           ✓   ✓   ✓   ✓   –   –
+  listImports              ✓   ✓   ✓   ✓   –   –
+  getImport                ✓   ✓   ✓   ✓   –   –
+  downloadLogFile          ✓   ✓   ✓   ✓   –   –
+  previewLogRows           ✓   ✓   ✓   ✓   –   –
+  createImport             ✓   ✓   ✓   –   –   –
+  addImportFile            ✓   ✓   ✓   –   –   –
+  removeImportFile         ✓   ✓   ✓   –   –   –
+  chooseRecipe             ✓   ✓   ✓   –   –   –
+  chooseRepairs            ✓   ✓   ✓   –   –   –
+  checkImport              ✓   ✓   ✓   –   –   –
+  confirmImport            ✓   ✓   ✓   –   –   –
+  cancelImport             ✓   ✓   ✓   –   –   –
+  undoImport               ✓   ✓   ✓   –   –   –
+  reopenImport             ✓   ✓   ✓   –   –   –
   getEnergy                ✓   ✓   ✓   ✓   –   –
   getPointSummary          ✓   ✓   ✓   ✓   –   –
   getSeries                ✓   ✓   ✓   ✓   –   –
