@@ -78,6 +78,7 @@ module.exports = {
         "<rootDir>/server/**/*.test.ts",
         "<rootDir>/test/server/**/*.test.ts",
         "<rootDir>/test/api/**/*.test.ts",
+        "<rootDir>/test/kill/**/*.test.ts",
       ],
       globalSetup: "<rootDir>/scripts/jest-database-start.mjs",
       globalTeardown: "<rootDir>/scripts/jest-database-stop.mjs",

@@ -15,6 +15,7 @@ import type { Database } from "@server/database/connect";
  *   covered_s            the whole interval
  *   <register>_kwh…      the register did not run: all its sums are 0
  *   <register>_s         the register ran all the covered time
+ *   <register>_dt        and Δθ's integral is what the mean temperatures give
  *   volume_m3            the sum of both registers' volumes
  *   suppressed_…, …_rows, apportioned   0
  *   min_…, max_…, …_c    nothing is covered
@@ -57,16 +58,35 @@ const insert = `INSERT INTO interval_energy (${columns.join(", ")})
 const some = (value: number): number | null => (value === 0 || Number.isNaN(value) ? null : value);
 const known = (value: number): number | null => (Number.isNaN(value) ? null : value);
 
-function registerValues(register: RegisterColumns, i: number, coveredS: number): SqlValue[] {
+/** Heating counts supply − return, cooling the reverse. */
+const signs = { heating: 1, cooling: -1 } as const;
+
+/** ∫Δθ dt of a register that ran all the covered time, from what is stored of the temperatures. */
+function deltaTFromMeans(name: keyof typeof signs, supplyC: number, returnC: number, s: number) {
+  return signs[name] * (Math.fround(supplyC) - Math.fround(returnC)) * s;
+}
+
+function registerValues(
+  energy: IntervalEnergyColumns,
+  name: keyof typeof signs,
+  i: number,
+  coveredS: number,
+): SqlValue[] {
+  const register = energy[name];
   const runningS = register.runningS[i] as number;
   if (runningS === 0) return [null, null, null, null, null, null];
+  const deltaTKs = register.deltaTKs[i] as number;
+  const supplyC = (energy.supplyCs[i] as number) / coveredS;
+  const returnC = (energy.returnCs[i] as number) / coveredS;
+  const isWhole = same(runningS, coveredS);
+  const derived = deltaTFromMeans(name, supplyC, returnC, coveredS);
   return [
     register.energyKwh[i] as number,
     register.volumeM3[i] as number,
     register.flowDeltaTM3K[i] as number,
     register.powerDeltaTKwhK[i] as number,
-    register.deltaTKs[i] as number,
-    same(runningS, coveredS) ? null : runningS,
+    isWhole && Math.abs(derived - deltaTKs) <= 2e-6 * Math.abs(deltaTKs) ? null : deltaTKs,
+    isWhole ? null : runningS,
   ];
 }
 
@@ -80,8 +100,8 @@ function* rowsOf(pointId: string, energy: IntervalEnergyColumns): Generator<SqlV
       pointId,
       (energy.startMs[i] as number) / 1000,
       same(coveredS, wholeIntervalS) ? null : coveredS,
-      ...registerValues(energy.heating, i, coveredS),
-      ...registerValues(energy.cooling, i, coveredS),
+      ...registerValues(energy, "heating", i, coveredS),
+      ...registerValues(energy, "cooling", i, coveredS),
       same(volume, registersVolume) ? null : volume,
       some(energy.suppressedKwh[i] as number),
       some(energy.suppressedS[i] as number),
@@ -163,20 +183,24 @@ function emptyColumns(count: number): IntervalEnergyColumns {
 }
 
 function fillRegister(
-  register: RegisterColumns,
+  energy: IntervalEnergyColumns,
+  name: keyof typeof signs,
   i: number,
   row: SqlRow,
-  at: number,
-  covered: number,
-) {
-  if (row[at] === null) return;
-  register.energyKwh[i] = Number(row[at]);
-  register.volumeM3[i] = Number(row[at + 1]);
-  register.flowDeltaTM3K[i] = Number(row[at + 2]);
-  register.powerDeltaTKwhK[i] = Number(row[at + 3]);
-  register.deltaTKs[i] = Number(row[at + 4]);
-  const runningS = row[at + 5];
-  register.runningS[i] = runningS === null ? covered : Number(runningS);
+): void {
+  const from = at(`${name}_kwh`);
+  if (row[from] === null) return;
+  const register = energy[name];
+  const covered = energy.coveredS[i] as number;
+  register.energyKwh[i] = Number(row[from]);
+  register.volumeM3[i] = Number(row[from + 1]);
+  register.flowDeltaTM3K[i] = Number(row[from + 2]);
+  register.powerDeltaTKwhK[i] = Number(row[from + 3]);
+  register.deltaTKs[i] = Number(
+    row[from + 4] ??
+      deltaTFromMeans(name, Number(row[at("supply_c")]), Number(row[at("return_c")]), covered),
+  );
+  register.runningS[i] = Number(row[from + 5] ?? covered);
 }
 
 const position = new Map<string, number>(columns.slice(1).map((name, index) => [name, index]));
@@ -188,8 +212,8 @@ function fillRow(energy: IntervalEnergyColumns, i: number, row: SqlRow): void {
   const covered = Number(row[at("covered_s")] ?? wholeIntervalS);
   energy.startMs[i] = Number(row[at("start_s")]) * 1000;
   energy.coveredS[i] = covered;
-  fillRegister(energy.heating, i, row, at("heating_kwh"), covered);
-  fillRegister(energy.cooling, i, row, at("cooling_kwh"), covered);
+  fillRegister(energy, "heating", i, row);
+  fillRegister(energy, "cooling", i, row);
   const registersVolume =
     (energy.heating.volumeM3[i] as number) + (energy.cooling.volumeM3[i] as number);
   energy.volumeM3[i] = Number(row[at("volume_m3")] ?? registersVolume);

@@ -3,7 +3,7 @@ import type { QueryInterface } from "sequelize";
 /*
  * Readings are kept as one packed block per file, point and UTC day, energy as a narrow row per
  * quarter-hour and a full row per local day. The narrow row is what a year of charts reads, so it
- * holds energy and volume as doubles, the rest as floats, and leaves NULL what is the usual: a
+ * holds energy as doubles, the rest as floats, and leaves NULL what is the usual: a
  * register that did not run, an interval that is covered whole, no excluded row. The exact rules
  * are in server/readings/interval-rows.ts, its only reader and writer.
  *
@@ -11,7 +11,7 @@ import type { QueryInterface } from "sequelize";
  */
 const registerOfInterval = (name: string) => `
     ${name}_kwh DOUBLE NULL,
-    ${name}_m3 DOUBLE NULL,
+    ${name}_m3 FLOAT NULL,
     ${name}_flow_dt FLOAT NULL,
     ${name}_power_dt FLOAT NULL,
     ${name}_dt FLOAT NULL,
@@ -86,7 +86,7 @@ const tables = [
     point_id BIGINT UNSIGNED NOT NULL,
     start_s INT UNSIGNED NOT NULL,
     covered_s FLOAT NULL,${registerOfInterval("heating")}${registerOfInterval("cooling")}
-    volume_m3 DOUBLE NULL,
+    volume_m3 FLOAT NULL,
     suppressed_kwh FLOAT NULL,
     suppressed_s FLOAT NULL,
     min_power_kw FLOAT NULL,
