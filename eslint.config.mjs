@@ -68,8 +68,8 @@ const arrows = [
   ),
   ...arrow(
     "api-client",
-    ["api-client", "i18n", "shared"],
-    "The API client knows contracts only: screens import it, not the other way round.",
+    ["api-client", "kit", "i18n", "shared"],
+    "The API client knows contracts and how to show an answer: screens import it, not the other way round.",
   ),
   ...arrow("i18n", ["i18n", "shared"], "Words and formats know shared code only."),
   ...arrow(

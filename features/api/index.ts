@@ -1,4 +1,5 @@
 export { addressOf } from "./address";
+export { Answer, FailedAnswer } from "./answer";
 export { ApiError, NoAnswer } from "./api-error";
 export { call, type CallInput } from "./call";
 export { createQueryClient } from "./query-client";

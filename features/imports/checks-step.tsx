@@ -1,7 +1,7 @@
 import { View } from "react-native";
 import { useFormat, useWords } from "@features/i18n";
-import { Card, ErrorState, LoadingBlocks, Mark, QualityStrip, Text, useTheme } from "@features/ui";
-import { ApiError } from "@features/api";
+import { Card, LoadingBlocks, Mark, QualityStrip, Text, useTheme } from "@features/ui";
+import { FailedAnswer } from "@features/api";
 import type { ImportChecks, ImportDetail } from "@shared/contracts/imports";
 import { FindingRow } from "./finding-row";
 import { findingsOf, type Finding } from "./findings";
@@ -19,12 +19,7 @@ export function ChecksStep({ detail, actions }: { detail: ImportDetail; actions:
   if (!checks) {
     const { error } = actions.check;
     if (error && detail.state !== "checking") {
-      return (
-        <ErrorState
-          problem={error instanceof ApiError ? error.problem : null}
-          onRetry={() => actions.check.mutate()}
-        />
-      );
+      return <FailedAnswer error={error} onRetry={() => actions.check.mutate()} />;
     }
     return <LoadingBlocks label={t("checks.working")} blocks={[{ width: "100%", height: 320 }]} />;
   }

@@ -1,11 +1,10 @@
 import { useQuery } from "@tanstack/react-query";
 import { router, useLocalSearchParams } from "expo-router";
 import { View } from "react-native";
-import { ApiError } from "@features/api";
+import { FailedAnswer } from "@features/api";
 import { useWords } from "@features/i18n";
 import {
   Button,
-  ErrorState,
   LoadingBlocks,
   LoopTag,
   Row,
@@ -34,16 +33,10 @@ export function ImportScreen() {
   const { importId } = useLocalSearchParams<{ importId: string }>();
   const query = useQuery(importQuery(importId));
   if (query.data) return <Wizard detail={query.data} />;
-  const missing = query.error instanceof ApiError && query.error.status === 404;
   return (
     <Screen title={t("wizard.title")} crumbs={[{ label: t("logs.title"), href: importPaths.logs }]}>
       {query.error ? (
-        <ErrorState
-          title={missing ? t("gone.title") : undefined}
-          problem={query.error instanceof ApiError ? query.error.problem : null}
-          actions={<Button kind="second" href={importPaths.logs} label={t("ended.logs")} />}
-          onRetry={missing ? undefined : () => void query.refetch()}
-        />
+        <FailedAnswer error={query.error} onRetry={() => void query.refetch()} />
       ) : (
         <LoadingBlocks />
       )}

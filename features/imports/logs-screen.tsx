@@ -1,13 +1,12 @@
 import { useInfiniteQuery, useQuery } from "@tanstack/react-query";
 import { router, useLocalSearchParams } from "expo-router";
 import { View } from "react-native";
-import { ApiError, useSession } from "@features/api";
+import { FailedAnswer, useSession } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Button,
   Chip,
   EmptyState,
-  ErrorState,
   LoadingBlocks,
   LoopTag,
   Row,
@@ -52,11 +51,8 @@ export function LogsScreen() {
           </View>
         ) : null}
         {query.isPending ? <LoadingBlocks blocks={[{ width: "100%", height: 260 }]} /> : null}
-        {query.error ? (
-          <ErrorState
-            problem={query.error instanceof ApiError ? query.error.problem : null}
-            onRetry={() => void query.refetch()}
-          />
+        {query.error && imports.length === 0 ? (
+          <FailedAnswer error={query.error} onRetry={() => void query.refetch()} />
         ) : null}
         {query.isSuccess && imports.length === 0 ? (
           <EmptyState

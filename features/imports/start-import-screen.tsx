@@ -2,12 +2,11 @@ import { useQuery } from "@tanstack/react-query";
 import { router, useLocalSearchParams } from "expo-router";
 import { useEffect, useRef } from "react";
 import { View } from "react-native";
-import { ApiError } from "@features/api";
+import { FailedAnswer } from "@features/api";
 import { useWords } from "@features/i18n";
 import {
   Button,
   EmptyState,
-  ErrorState,
   LoadingBlocks,
   Screen,
   SelectField,
@@ -42,7 +41,7 @@ export function StartImportScreen() {
       crumbs={[{ label: t("logs.title"), href: importPaths.logs }]}
     >
       {start.error ? (
-        <ErrorState problem={start.error instanceof ApiError ? start.error.problem : null} />
+        <FailedAnswer error={start.error} onRetry={() => point && open(point)} />
       ) : point ? (
         <LoadingBlocks />
       ) : (
@@ -67,14 +66,7 @@ function ChoosePoint(props: { opening: boolean; onOpen: (pointId: string) => voi
   const pointId = chosen.chosen ?? solePoint;
 
   if (sites.isPending) return <LoadingBlocks />;
-  if (sites.error) {
-    return (
-      <ErrorState
-        problem={sites.error instanceof ApiError ? sites.error.problem : null}
-        onRetry={() => void sites.refetch()}
-      />
-    );
-  }
+  if (sites.error) return <FailedAnswer error={sites.error} onRetry={() => void sites.refetch()} />;
   if (sites.data.items.length === 0) {
     return (
       <EmptyState

@@ -1,11 +1,11 @@
 import { useQuery } from "@tanstack/react-query";
 import { useState } from "react";
 
+import { FailedAnswer } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, LoadingBlocks, Stack, Table, type Column } from "@features/ui";
 
 import { energyTableRows, totalRow, type EnergyTableRow } from "./energy-table-rows";
-import { FailedAnswer } from "./failed-answer";
 import type { LoopFigures } from "./loop-context";
 import { loopsQueries } from "./loops-queries";
 import { energyQuantity, registersOf } from "./register-words";

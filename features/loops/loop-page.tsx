@@ -4,6 +4,7 @@ import { useState, type ReactNode } from "react";
 import { View } from "react-native";
 
 import type { Loop, Point, Site } from "@shared/contracts/places";
+import { FailedAnswer } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Button,
@@ -21,7 +22,6 @@ import { BusiestCard } from "./busiest-card";
 import { ChartCard, type TableStep } from "./chart-card";
 import { DayList } from "./day-list";
 import { DownloadsMenu } from "./downloads-menu";
-import { FailedAnswer } from "./failed-answer";
 import { Headline } from "./headline";
 import type { LoopFigures, LoopView } from "./loop-context";
 import { LoopInspector } from "./loop-inspector";

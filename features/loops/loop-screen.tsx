@@ -2,10 +2,10 @@ import { useQuery } from "@tanstack/react-query";
 import { useLocalSearchParams } from "expo-router";
 
 import type { Loop, Point, Site } from "@shared/contracts/places";
+import { FailedAnswer } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, EmptyState, LoadingBlocks, LoopTag, Screen } from "@features/ui";
 
-import { FailedAnswer } from "./failed-answer";
 import { LoopPage } from "./loop-page";
 import { loopsPaths } from "./loops-paths";
 import { loopsQueries } from "./loops-queries";

@@ -2,10 +2,10 @@ import { useInfiniteQuery } from "@tanstack/react-query";
 
 import type { getReadings } from "@shared/contracts/energy";
 import type { z } from "zod";
+import { FailedAnswer } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, LoadingBlocks, Stack, Table, Text, type Column } from "@features/ui";
 
-import { FailedAnswer } from "./failed-answer";
 import type { LoopFigures } from "./loop-context";
 import { loopsQueries } from "./loops-queries";
 import { powerQuantity } from "./register-words";

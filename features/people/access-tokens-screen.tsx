@@ -2,12 +2,11 @@ import { useQuery } from "@tanstack/react-query";
 import { useState } from "react";
 import { View } from "react-native";
 
-import { useSession } from "@features/api";
+import { Answer, useSession } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, DeniedState, EmptyState, Screen } from "@features/ui";
 
 import { AccessTokensTable } from "./access-tokens-table";
-import { Answer } from "./answer";
 import { MadeToken, type NewToken } from "./made-token";
 import { MakeTokenSheet } from "./make-token-sheet";
 import { peoplePaths } from "./people-paths";

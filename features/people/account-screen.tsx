@@ -1,11 +1,10 @@
 import { View } from "react-native";
 
 import type { Session } from "@shared/contracts/people";
-import { useSession } from "@features/api";
+import { Answer, useSession } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Card, EmptyState, ListRow, Screen, Text, useBreakpoint } from "@features/ui";
 
-import { Answer } from "./answer";
 import { NameCard } from "./name-card";
 import { peoplePaths } from "./people-paths";
 import { SignOutCard } from "./sign-out-card";

@@ -1,11 +1,10 @@
 import { useQuery } from "@tanstack/react-query";
 import { View } from "react-native";
 
-import { useSession } from "@features/api";
+import { Answer, useSession } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import { Button, Card, DeniedState, EmptyState, Screen, Text } from "@features/ui";
 
-import { Answer } from "./answer";
 import { LetterText } from "./letter-text";
 import { peoplePaths } from "./people-paths";
 import { peopleQueries } from "./people-queries";

@@ -1,10 +1,9 @@
 import { useQuery } from "@tanstack/react-query";
-import { ApiError } from "@features/api";
+import { Answer, ApiError } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Banner, Button, DefinitionRows, Text } from "@features/ui";
 
 import { AcceptInvitationForm } from "./accept-invitation-form";
-import { Answer } from "./answer";
 import { EntryFrame } from "./entry-frame";
 import { peoplePaths } from "./people-paths";
 import { peopleQueries } from "./people-queries";

@@ -2,11 +2,10 @@ import { useInfiniteQuery } from "@tanstack/react-query";
 import { router, useLocalSearchParams } from "expo-router";
 import { View } from "react-native";
 
-import { useSession } from "@features/api";
+import { Answer, useSession } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, DeniedState, EmptyState, Screen } from "@features/ui";
 
-import { Answer } from "./answer";
 import { InviteSheet } from "./invite-sheet";
 import { MemberSheet } from "./member-sheet";
 import { MembersTable } from "./members-table";

@@ -9,7 +9,7 @@ import {
   type Building,
   type Site,
 } from "@shared/contracts/places";
-import { call } from "@features/api";
+import { Answer, call } from "@features/api";
 import { useWords } from "@features/i18n";
 import {
   Button,
@@ -23,7 +23,6 @@ import {
   TextField,
   useToast,
 } from "@features/ui";
-import { AnswerState } from "./answer-state";
 import { ArchivedSwitch } from "./archived-switch";
 import { PlaceActions } from "./place-actions";
 import { placesPaths } from "./places-paths";
@@ -50,7 +49,7 @@ export function BuildingsScreen() {
   ];
   return (
     <Screen title={t("buildings.title")} crumbs={crumbs} narrow actions={mayAdd ? add : undefined}>
-      <AnswerState answer={site.data ? buildings : { ...site, data: undefined }}>
+      <Answer of={site.data ? buildings : { ...site, data: undefined }}>
         {({ items }) => (
           <View style={{ gap: 16 }}>
             {items.length === 0 ? (
@@ -65,7 +64,7 @@ export function BuildingsScreen() {
             <ArchivedSwitch shown={showArchived} />
           </View>
         )}
-      </AnswerState>
+      </Answer>
       {site.data ? (
         <Sheet
           kind="side"

@@ -10,10 +10,9 @@ import {
   type Loop,
   type Site,
 } from "@shared/contracts/places";
-import { call } from "@features/api";
+import { Answer, call } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import { Banner, Button, DeniedState, LoopTag, Screen, useToast } from "@features/ui";
-import { AnswerState } from "./answer-state";
 import { DraftNotice } from "./draft-notice";
 import { LoopForm, loopServerFields, type LoopField, type LoopProblems } from "./loop-form";
 import { changesEnergy, loopBody, loopValues, NONE } from "./loop-values";
@@ -58,9 +57,7 @@ function LoopFormLoader(props: { siteId: string; loopId: string | null; building
   const waiting = [site, buildings, loops].find(({ data }) => data === undefined) ?? site;
   return (
     <Screen title={title} crumbs={[{ label: t("sites.title"), href: placesPaths.sites }]}>
-      <AnswerState answer={{ ...waiting, data: waiting.data as unknown }}>
-        {() => <DeniedState />}
-      </AnswerState>
+      <Answer of={{ ...waiting, data: waiting.data as unknown }}>{() => <DeniedState />}</Answer>
     </Screen>
   );
 }

@@ -2,6 +2,7 @@ import { useQuery } from "@tanstack/react-query";
 import { useLocalSearchParams } from "expo-router";
 import { View } from "react-native";
 import type { Building, Loop, Site } from "@shared/contracts/places";
+import { Answer } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Button,
@@ -16,7 +17,6 @@ import {
   type Column,
   type RowCard,
 } from "@features/ui";
-import { AnswerState } from "./answer-state";
 import { ArchivedSwitch } from "./archived-switch";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
@@ -40,7 +40,7 @@ export function LoopsScreen() {
   ];
   return (
     <Screen title={t("loops.title")} crumbs={crumbs} actions={mayAdd ? add : undefined}>
-      <AnswerState answer={site.data ? loops : { ...site, data: undefined }}>
+      <Answer of={site.data ? loops : { ...site, data: undefined }}>
         {({ items }) => (
           <View style={{ gap: 16 }}>
             {items.length === 0 || !site.data ? (
@@ -55,7 +55,7 @@ export function LoopsScreen() {
             <ArchivedSwitch shown={showArchived} />
           </View>
         )}
-      </AnswerState>
+      </Answer>
     </Screen>
   );
 }

@@ -10,10 +10,9 @@ import {
   type Point,
   type Site,
 } from "@shared/contracts/places";
-import { call } from "@features/api";
+import { Answer, call } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import { Banner, Button, DeniedState, LoopTag, Screen, useToast } from "@features/ui";
-import { AnswerState } from "./answer-state";
 import { BoreHistory } from "./bore-history";
 import { DraftNotice } from "./draft-notice";
 import { NONE } from "./loop-values";
@@ -58,9 +57,7 @@ function PointFormLoader(props: { siteId: string; loopId: string; pointId: strin
       title={t(pointId === null ? "point.add" : "point.edit")}
       crumbs={[{ label: t("sites.title"), href: placesPaths.sites }]}
     >
-      <AnswerState answer={{ ...waiting, data: waiting.data as unknown }}>
-        {() => <DeniedState />}
-      </AnswerState>
+      <Answer of={{ ...waiting, data: waiting.data as unknown }}>{() => <DeniedState />}</Answer>
     </Screen>
   );
 }

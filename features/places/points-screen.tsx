@@ -2,6 +2,7 @@ import { useQuery } from "@tanstack/react-query";
 import { useLocalSearchParams } from "expo-router";
 import { View } from "react-native";
 import type { Loop, Point, Site } from "@shared/contracts/places";
+import { Answer } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Button,
@@ -17,7 +18,6 @@ import {
   type RowCard,
 } from "@features/ui";
 import { importPaths } from "@features/imports/import-paths";
-import { AnswerState } from "./answer-state";
 import { ArchivedSwitch } from "./archived-switch";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
@@ -57,7 +57,7 @@ export function PointsScreen() {
       }
       actions={mayAdd ? add : undefined}
     >
-      <AnswerState answer={{ ...waiting, data: points.data && site.data && loop.data }}>
+      <Answer of={{ ...waiting, data: points.data && site.data && loop.data }}>
         {() =>
           site.data && loop.data ? (
             <View style={{ gap: 16 }}>
@@ -74,7 +74,7 @@ export function PointsScreen() {
             </View>
           ) : null
         }
-      </AnswerState>
+      </Answer>
     </Screen>
   );
 }

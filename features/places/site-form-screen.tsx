@@ -3,10 +3,9 @@ import { useLocalSearchParams, useRouter } from "expo-router";
 import { useState } from "react";
 import { View } from "react-native";
 import { createSite, removeSite, updateSite, type Site } from "@shared/contracts/places";
-import { call } from "@features/api";
+import { Answer, call } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, DeniedState, Screen, useToast } from "@features/ui";
-import { AnswerState } from "./answer-state";
 import { DraftNotice } from "./draft-notice";
 import { PlaceActions } from "./place-actions";
 import { placesPaths } from "./places-paths";
@@ -30,7 +29,7 @@ export function EditSiteScreen() {
     );
   return (
     <Screen title={t("site.edit")} crumbs={[{ label: t("sites.title"), href: placesPaths.sites }]}>
-      <AnswerState answer={answer}>{() => <DeniedState />}</AnswerState>
+      <Answer of={answer}>{() => <DeniedState />}</Answer>
     </Screen>
   );
 }

@@ -4,6 +4,7 @@ import { View } from "react-native";
 import type { z } from "zod";
 import type { getSiteOverview, Site } from "@shared/contracts/places";
 import { rangeOfDates } from "@shared/domain/time/local-calendar";
+import { Answer } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   addDays,
@@ -17,7 +18,6 @@ import {
   Screen,
   useBreakpoint,
 } from "@features/ui";
-import { AnswerState } from "./answer-state";
 import { groupByBuilding } from "./building-groups";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
@@ -34,9 +34,9 @@ export function SiteScreen() {
   if (answer.data) return <SitePage site={answer.data} week={week} />;
   return (
     <Screen title={t("sites.one")} crumbs={[{ label: t("sites.title"), href: placesPaths.sites }]}>
-      <AnswerState answer={answer} blocks={planBlocks}>
+      <Answer of={answer} blocks={planBlocks}>
         {() => null}
-      </AnswerState>
+      </Answer>
     </Screen>
   );
 }
@@ -103,9 +103,9 @@ function SitePage({ site, week }: { site: Site; week: string | undefined }) {
       subtitle={<SiteMarks site={site} />}
       actions={actions}
     >
-      <AnswerState answer={overview} blocks={planBlocks}>
+      <Answer of={overview} blocks={planBlocks}>
         {(data) => <SiteContent site={site} monday={monday} now={now} data={data} />}
-      </AnswerState>
+      </Answer>
     </Screen>
   );
 }

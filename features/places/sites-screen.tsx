@@ -2,6 +2,7 @@ import { useInfiniteQuery } from "@tanstack/react-query";
 import { useLocalSearchParams } from "expo-router";
 import { View } from "react-native";
 import type { Site } from "@shared/contracts/places";
+import { Answer } from "@features/api";
 import { useWords } from "@features/i18n";
 import {
   Button,
@@ -15,7 +16,6 @@ import {
   type Column,
   type RowCard,
 } from "@features/ui";
-import { AnswerState } from "./answer-state";
 import { ArchivedSwitch } from "./archived-switch";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
@@ -30,7 +30,7 @@ export function SitesScreen() {
   const add = <Button icon="plus" label={t("site.add")} href={placesPaths.newSite} />;
   return (
     <Screen title={t("sites.title")} actions={mayCreate ? add : undefined}>
-      <AnswerState answer={answer}>
+      <Answer of={answer}>
         {(data) => {
           const sites = data.pages.flatMap((page) => page.items);
           if (sites.length === 0 && !showArchived)
@@ -59,7 +59,7 @@ export function SitesScreen() {
             </View>
           );
         }}
-      </AnswerState>
+      </Answer>
     </Screen>
   );
 }
