@@ -66,6 +66,9 @@ async function newPoint(tag: string): Promise<Point> {
   });
 }
 
+/** A job's worker yields to everything else on the machine. */
+const patience = { timeout: 60_000 };
+
 /** The first number after some words, as a person reads it: thousands grouped, then its unit. */
 async function figureAfter(page: Page, words: string): Promise<{ value: number; unit: string }> {
   const text = await page.getByRole("main").innerText();
@@ -96,7 +99,7 @@ async function importTwoFiles(page: Page, hands: Hands, tag: string) {
       buffer: Buffer.from(bytes),
     })),
   );
-  await page.getByText("Semicolon").nth(1).waitFor();
+  await page.getByText("Semicolon").nth(1).waitFor(patience);
   await expectNoSeriousAxe(page);
   await hands.press(button("Next: columns and units"));
 
@@ -117,7 +120,7 @@ async function importTwoFiles(page: Page, hands: Hands, tag: string) {
   await hands.press(button("Next: checks"));
 
   const confirm = button(/^Import [\d,]+ rows$/);
-  await confirm.waitFor();
+  await confirm.waitFor(patience);
   await expectNoSeriousAxe(page);
   const checks = await page.getByRole("main").innerText();
   for (const { repeats, moved } of [log.defects.flow, log.defects.temperature]) {
@@ -129,7 +132,7 @@ async function importTwoFiles(page: Page, hands: Hands, tag: string) {
       expect(checks).toContain(`${token}: ${count}`);
   await hands.press(confirm);
 
-  await heading(new RegExp(`rows are in ${tag}`)).waitFor({ timeout: 60_000 });
+  await heading(new RegExp(`rows are in ${tag}`)).waitFor(patience);
   await expectNoSeriousAxe(page);
   return figureAfter(page, "Cooling energy in this file");
 }
