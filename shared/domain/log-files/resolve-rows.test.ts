@@ -88,6 +88,18 @@ describe("the hour that clocks show twice", () => {
     expect(instants(resolve(file)).map((at) => at.slice(11))).toEqual(expected);
   });
 
+  it("keeps both passes of shuffled rows, and calls them unclear", () => {
+    // Found by hand: 02:00 and 02:30 stand twice, so the two hours have all four rows between them.
+    const labels = "02:30 01:00 03:00 02:00 04:00 02:30 03:30 01:30 02:00".split(" ");
+    const file = ["Time,Flow m³/h", ...labels.map((label) => `2025-10-26 ${label},10`)].join("\n");
+    const shuffled = resolve(file);
+    expect(instants(shuffled).map((at) => at.slice(11))).toEqual(
+      "23:00 23:30 00:00 00:30 01:00 01:30 02:00 02:30 03:00".split(" "),
+    );
+    expect(stepOf(shuffled, "repeatedHour")?.countByKind).toEqual({ unclear: 4 });
+    expect(stepOf(shuffled, "identicalRepeats")).toBeUndefined();
+  });
+
   it("is called unclear when a gap leaves either pass possible", () => {
     const labels = ["00:40", "00:50", "01:00", "02:30", "02:40", "04:00", "04:10", "04:20"];
     const file = [

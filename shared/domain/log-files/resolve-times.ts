@@ -9,11 +9,16 @@ import { choosePasses } from "./repeated-hour";
 const MS_PER_MINUTE = 60_000;
 /** The rows of a repeated hour are judged together with this many after it. */
 const ROWS_AFTER = 8;
+/** In a log with gaps and misplaced stretches most steps still lead on; in a shuffled one, about half. */
+const SHARE_IN_ORDER = 0.6;
 
 export interface ResolvedTimes {
   /** UTC ms of each row in file order; NaN for a row left out because its local time never was. */
   readonly instantMs: Float64Array;
-  /** Rows in an hour the clock showed twice, by the offset they got; "unclear" where a gap hides which pass it is. */
+  /**
+   * Rows in an hour the clock showed twice, by the offset they got; "unclear" where a gap or shuffled rows
+   * hide which pass it is.
+   */
   readonly repeatedHour: Tally;
   /** Rows in an hour the clock jumped over. */
   readonly missingHour: Tally;
@@ -56,6 +61,8 @@ class WallClockReading {
   private chain: number[] = [];
   private chainIsRepeated: boolean[] = [];
   private sinceRepeated = 0;
+  /** Rows of repeated hours by label, kept only where the rows are shuffled; else null. */
+  private readonly rowsByLabel: Map<number, number[]> | null;
 
   constructor(
     private readonly raw: RawRows,
@@ -65,6 +72,7 @@ class WallClockReading {
     this.instantMs = new Float64Array(raw.rowCount);
     this.clock = createLocalClock(zone);
     this.stepMs = nominalStepMs(raw.timeMs) ?? 0;
+    this.rowsByLabel = isShuffled(raw.timeMs) ? new Map() : null;
   }
 
   read(): ResolvedTimes {
@@ -79,10 +87,12 @@ class WallClockReading {
       instantMs[i] = clock.toUtc(ms);
       if (clock.lastKind !== "unique") {
         if (clock.lastKind === "missing") this.readMissing(i, ms);
+        else if (this.rowsByLabel !== null) this.rememberLabel(this.rowsByLabel, i, ms);
         else this.link(i, true);
       } else if (this.chain.length > 0) this.link(i, false);
     }
     this.judgeChain();
+    if (this.rowsByLabel !== null) this.judgeLabels(this.rowsByLabel);
     return { instantMs, repeatedHour: this.repeatedHour, missingHour: this.missingHour };
   }
 
@@ -96,6 +106,34 @@ class WallClockReading {
       cell: null,
       instantMs: before,
     }));
+  }
+
+  private rememberLabel(rowsByLabel: Map<number, number[]>, row: number, localMs: number): void {
+    const rows = rowsByLabel.get(localMs);
+    if (rows === undefined) rowsByLabel.set(localMs, [row]);
+    else rows.push(row);
+  }
+
+  /**
+   * Shuffled rows tell nothing of the passes by where they stand, but a label that stands twice is once
+   * of each: both hours stay covered and their sum right, though either row may be the other's.
+   */
+  private judgeLabels(rowsByLabel: ReadonlyMap<number, readonly number[]>): void {
+    const offsets = zoneOffsets(this.zone);
+    for (const [localMs, rows] of rowsByLabel) {
+      const meaning = offsets.fromLocal(localMs);
+      if (meaning.kind !== "repeated") continue;
+      rows.forEach((row, k) => {
+        const at = k % 2 === 0 ? meaning.earlierMs : meaning.laterMs;
+        this.instantMs[row] = at;
+        this.count(row, "unclear", at);
+      });
+    }
+  }
+
+  private count(row: number, kind: string, at: number): void {
+    const line = this.raw.line[row] as number;
+    tally(this.repeatedHour, kind, () => ({ line, column: null, cell: null, instantMs: at }));
   }
 
   private link(row: number, isRepeated: boolean): void {
@@ -146,15 +184,21 @@ class WallClockReading {
       const row = chain[k] as number;
       const at = chosen[place[k] as number] as number;
       instantMs[row] = at;
-      const kind = isUnclear ? "unclear" : offsetName((raw.timeMs[row] as number) - at);
-      tally(this.repeatedHour, kind, () => ({
-        line: raw.line[row] as number,
-        column: null,
-        cell: null,
-        instantMs: at,
-      }));
+      this.count(row, isUnclear ? "unclear" : offsetName((raw.timeMs[row] as number) - at), at);
     }
   }
+}
+
+/** True where the times lead neither on nor back: the order of the rows says nothing of them. */
+function isShuffled(timeMs: Float64Array): boolean {
+  let forward = 0;
+  let backward = 0;
+  for (let i = 1; i < timeMs.length; i++) {
+    const step = (timeMs[i] as number) - (timeMs[i - 1] as number);
+    if (step > 0) forward++;
+    else if (step < 0) backward++;
+  }
+  return Math.max(forward, backward) < SHARE_IN_ORDER * (forward + backward);
 }
 
 /** `+02:00` */
