@@ -64,7 +64,6 @@ export function totalRow(
     });
     return weight === 0 ? null : sum / weight;
   };
-  const covered = totals.coveredS > 0;
   const longer =
     totals.heating.runningS > totals.cooling.runningS ? totals.heating : totals.cooling;
   return {
@@ -73,12 +72,9 @@ export function totalRow(
     supplyC: weighted(columns.meanSupplyC),
     returnC: weighted(columns.meanReturnC),
     deltaTK: longer.flowWeightedDeltaTK,
-    flowM3PerHour: meanFlow(covered ? totals.volumeM3 : null, totals.coveredS),
-    volumeM3: covered ? totals.volumeM3 : null,
-    kwh: {
-      heating: covered ? totals.heating.energyKwh : null,
-      cooling: covered ? totals.cooling.energyKwh : null,
-    },
+    flowM3PerHour: meanFlow(totals.volumeM3, totals.coveredS),
+    volumeM3: totals.volumeM3,
+    kwh: { heating: totals.heating.energyKwh, cooling: totals.cooling.energyKwh },
     missingS: rows.reduce((sum, row) => sum + row.missingS, 0),
   };
 }

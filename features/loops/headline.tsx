@@ -51,8 +51,7 @@ function RegisterFigure(
   const { register, summary, format, rangeName } = props;
   const t = useWords("loops");
   const title = t(`headline.energy.${register}`, { range: rangeName });
-  const covered = summary.totals.coveredS > 0;
-  const energy = covered ? summary.totals[register].energyKwh : null;
+  const energy = summary.totals[register].energyKwh;
   return (
     <View>
       <Text variant="small" tone="ink3" hidden>
@@ -84,8 +83,8 @@ function OtherRegister(props: LoopFigures & { shown: readonly RegisterName[] }) 
   const [only] = shown;
   if (shown.length !== 1 || only === undefined) return null;
   const other = only === "heating" ? "cooling" : "heating";
-  const energy = summary.totals[other].energyKwh;
-  if (energy <= remarkableShare * Math.max(summary.totals[only].energyKwh, 1)) return null;
+  const energy = summary.totals[other].energyKwh ?? 0;
+  if (energy <= remarkableShare * Math.max(summary.totals[only].energyKwh ?? 0, 1)) return null;
   return (
     <Text variant="small" tone="ink2">
       {t(`headline.other.${other}`, { energy: format.withUnit(energy, energyQuantity[other]) })}

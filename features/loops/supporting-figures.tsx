@@ -63,7 +63,7 @@ export function SupportingFigures(props: LoopFigures & { onWorkings: () => void 
       </Cell>
       <Cell title={t(summary.basis.blockedBy ? "figures.covered" : "figures.rows")}>
         <Shown
-          said={t("figures.rows")}
+          said={t(summary.basis.blockedBy ? "figures.covered" : "figures.rows")}
           figure={{ value: share === null ? null : share * 100, unit: shareUnit, places: 1 }}
           onWorkings={onWorkings}
         />
@@ -81,7 +81,7 @@ function hour(value: number, short: boolean): string {
 export function leading({ summary, loop }: LoopFigures): keyof typeof energyQuantity {
   const { heating, cooling } = summary.totals;
   if (loop.service === "changeover")
-    return heating.energyKwh > cooling.energyKwh ? "heating" : "cooling";
+    return (heating.energyKwh ?? 0) > (cooling.energyKwh ?? 0) ? "heating" : "cooling";
   return loop.service === "hot" ? "heating" : "cooling";
 }
 

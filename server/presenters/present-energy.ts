@@ -20,11 +20,16 @@ export function roundedOrNull(value: number | null, decimals: number): number | 
   return value === null || Number.isNaN(value) ? null : rounded(value, decimals);
 }
 
-function presentRegister(register: RegisterTotals): TotalsAnswer["heating"] {
+/** A sum over nothing is unknown, not zero. */
+function figureOrNull(value: number, energyS: number): number | null {
+  return energyS > 0 ? rounded(value, 6) : null;
+}
+
+function presentRegister(register: RegisterTotals, energyS: number): TotalsAnswer["heating"] {
   const means = deltaTMeans(register);
   return {
-    energyKwh: rounded(register.energyKwh, 6),
-    volumeM3: rounded(register.volumeM3, 6),
+    energyKwh: figureOrNull(register.energyKwh, energyS),
+    volumeM3: figureOrNull(register.volumeM3, energyS),
     runningS: rounded(register.runningS, 3),
     flowWeightedDeltaTK: roundedOrNull(means.flowWeightedK, 6),
     energyWeightedDeltaTK: roundedOrNull(means.energyWeightedK, 6),
@@ -32,17 +37,21 @@ function presentRegister(register: RegisterTotals): TotalsAnswer["heating"] {
   };
 }
 
-/** `expectedRows` are those due by the loggers' own steps; null where nobody counted them. */
+/**
+ * `expectedRows` are those due by the loggers' own steps; null where nobody counted them. `energyS`
+ * are the seconds energy was worked out for, where readings cover more than that.
+ */
 export function presentTotals(
   totals: EnergyTotals,
   expectedS: number,
   expectedRows: number | null,
+  energyS: number = totals.coveredS,
 ): TotalsAnswer {
   return {
-    heating: presentRegister(totals.heating),
-    cooling: presentRegister(totals.cooling),
-    volumeM3: rounded(totals.volumeM3, 6),
-    suppressedKwh: rounded(totals.suppressedKwh, 6),
+    heating: presentRegister(totals.heating, energyS),
+    cooling: presentRegister(totals.cooling, energyS),
+    volumeM3: figureOrNull(totals.volumeM3, energyS),
+    suppressedKwh: figureOrNull(totals.suppressedKwh, energyS),
     suppressedS: rounded(totals.suppressedS, 3),
     coveredS: rounded(totals.coveredS, 3),
     expectedS: rounded(expectedS, 3),

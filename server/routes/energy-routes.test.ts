@@ -74,6 +74,9 @@ describe("getEnergy", () => {
     expect(answer.columns?.coveredS).toEqual([3600, 0, 59 * 60]);
     expect(answer.columns?.coolingKwh[1]).toBeNull();
     expect(answer.totals.coverage).toBeCloseTo(119 / 180, 4);
+    const hole = "from=2026-01-10T01:15:00Z&to=2026-01-10T01:45:00Z&step=total";
+    const { totals } = await energyOf(engineer, pointId, hole);
+    expect(totals).toMatchObject({ coverage: 0, volumeM3: null, cooling: { energyKwh: null } });
   });
 
   it.each([
@@ -139,7 +142,7 @@ describe("getPointSummary", () => {
     const summary: PointSummary = answer.body;
     expect(summary.basis.blockedBy).toBe("glycol");
     expect(summary.totals.coverage).toBe(1);
-    expect(summary.totals.cooling.energyKwh).toBe(0);
+    expect(summary.totals.cooling.energyKwh).toBeNull();
     expect(summary.busiest).toBeNull();
     const marks = await engineer.get(`/points/${pointId}/days?from=2026-01-11&to=2026-01-13`);
     expect(marks.body.days.map((day: { kind: string }) => day.kind)).toEqual(["none", "measured"]);

@@ -9,9 +9,14 @@ const pointId = z.object({ pointId: id });
 const edge = z.union([z.iso.datetime({ offset: true }), z.iso.date()]);
 const range = z.object({ from: edge, to: edge.describe("exclusive") });
 
+/** Nothing covered is not nothing used: a script must be able to tell a hole from a still pump. */
+const figure = z
+  .number()
+  .nullable()
+  .describe("null where energy was worked out for none of the range");
 const register = z.object({
-  energyKwh: z.number(),
-  volumeM3: z.number(),
+  energyKwh: figure,
+  volumeM3: figure,
   /** Seconds this register ran. */
   runningS: z.number(),
   flowWeightedDeltaTK: z.number().nullable(),
@@ -22,8 +27,8 @@ const register = z.object({
 export const energyTotals = z.object({
   heating: register,
   cooling: register,
-  volumeM3: z.number(),
-  suppressedKwh: z.number(),
+  volumeM3: figure,
+  suppressedKwh: figure,
   suppressedS: z.number(),
   coveredS: z.number(),
   expectedS: z.number(),

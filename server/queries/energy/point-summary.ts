@@ -58,7 +58,7 @@ export async function pointSummary(
     from: instantText(new Date(range.startMs)),
     to: instantText(new Date(range.endMs)),
     basis,
-    totals: presentTotals(totals, expectedSeconds(range, nowMs), expectedRows),
+    totals: presentTotals(totals, expectedSeconds(range, nowMs), expectedRows, summed.coveredS),
     days: presentDays(rows, range, zone),
     ...busiest,
     nightBase: night && {
