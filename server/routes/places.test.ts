@@ -53,6 +53,15 @@ describe("sites", () => {
     });
   });
 
+  test("a name cannot carry lines of its own into letters and CSV files", async () => {
+    const engineer = await signedIn(app);
+    for (const name of ["Quay\r\nBcc: all", "Quay\u0000", "Quay\u0085"]) {
+      const answer = await engineer.post("/sites", { ...quay, name });
+      expect([name, answer.status]).toEqual([name, 422]);
+    }
+    await makeSite(engineer, { name: "Kai Süd · 東 ✓" });
+  });
+
   test("a zone the world does not know is refused at its field", async () => {
     const engineer = await signedIn(app);
     const answer = await engineer.post("/sites", { ...quay, zone: "Europe/Atlantis" });

@@ -55,6 +55,18 @@ export function contract<
 }
 
 export const id = z.string().regex(/^[1-9]\d{0,18}$/, "an id is a positive whole number, as text");
+/**
+ * One line of text people give a thing. Control characters are refused: a line break in a name would
+ * write lines of its own into letters and CSV files.
+ */
+export function oneLine(maxLength: number) {
+  return z
+    .string()
+    .trim()
+    .min(1)
+    .max(maxLength)
+    .refine((text) => !/\p{Cc}/u.test(text), "a single line without control characters");
+}
 export const instant = z.iso.datetime({ offset: true }).describe("UTC instant, ISO 8601");
 export const localDate = z.iso.date().describe("calendar day in the site's zone, YYYY-MM-DD");
 

@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { contract, id, instant, nothing, page, pageQuery } from "./contract";
+import { contract, id, instant, nothing, oneLine, page, pageQuery } from "./contract";
 
 export const role = z.enum([
   "administrator",
@@ -82,7 +82,7 @@ export const updateAccount = contract({
   method: "patch",
   path: "/account",
   body: z.object({
-    name: z.string().trim().min(1).max(120).optional(),
+    name: oneLine(120).optional(),
     language: language.optional(),
     unitSystem: unitSystem.nullable().optional(),
   }),
@@ -199,7 +199,7 @@ export const acceptInvitation = contract({
   path: "/invitations/accept",
   body: z.object({
     secret: z.string().min(20).max(200),
-    name: z.string().trim().min(1).max(120),
+    name: oneLine(120),
     password: newPassword,
   }),
   answer: session,
@@ -227,7 +227,7 @@ export const createAccessToken = contract({
   method: "post",
   path: "/access-tokens",
   body: z.object({
-    name: z.string().trim().min(1).max(120),
+    name: oneLine(120),
     expiresInDays: z.number().int().min(1).max(730).nullable(),
   }),
   answer: accessToken.extend({ secret: z.string() }),

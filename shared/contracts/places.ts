@@ -1,8 +1,8 @@
 import { z } from "zod";
-import { contract, id, instant, nothing, page, pageQuery } from "./contract";
+import { contract, id, instant, nothing, oneLine, page, pageQuery } from "./contract";
 import { unitSystem } from "./people";
 
-const name = z.string().trim().min(1).max(120);
+const name = oneLine(120);
 const notes = z.string().trim().max(2000);
 /** Archived things are left out unless asked for; "false" in a query must not read as true. */
 const archived = z.object({
@@ -159,7 +159,7 @@ export const fluid = z.discriminatedUnion("kind", [
 ]);
 export type Fluid = z.infer<typeof fluid>;
 const loopFields = z.object({
-  tag: z.string().trim().min(1).max(24).describe("as painted on the pipe, such as CHW-1B"),
+  tag: oneLine(24).describe("as painted on the pipe, such as CHW-1B"),
   name,
   buildingId: id.nullable(),
   parentLoopId: id.nullable().describe("the loop that feeds this one"),
@@ -264,7 +264,7 @@ export const pipe = z.discriminatedUnion("kind", [
 ]);
 export type Pipe = z.infer<typeof pipe>;
 const pointFields = z.object({
-  code: z.string().trim().min(1).max(40).describe("printed on the pipe"),
+  code: oneLine(40).describe("printed on the pipe"),
   name,
   role: pointRole,
   parentPointId: id.nullable(),
