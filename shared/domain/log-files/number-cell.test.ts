@@ -69,6 +69,7 @@ describe("no reading", () => {
   it("is known by word or number in any case and sign, and zero is a reading", () => {
     for (const token of [
       "OL",
+      "Overrange",
       "+OL",
       "---",
       "--.-",
