@@ -1,5 +1,6 @@
 import { QueryTypes, type Transaction } from "sequelize";
-import type { Interval } from "@shared/domain/time/interval";
+import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
+import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import { enqueueJob } from "@server/jobs/job-queue";
 import { inTransaction } from "@server/database/transaction";
 import type { JobContext } from "@server/jobs/job-context";
@@ -7,10 +8,10 @@ import { JobRefused } from "@server/jobs/job-outcome";
 import { LogFile } from "@server/models/log-file";
 import type { LogImport } from "@server/models/log-import";
 import { loadEnergySettings } from "@server/readings/energy-settings";
-import { loadSources } from "@server/readings/load-segments";
+import { loadSources, trimSegments } from "@server/readings/load-segments";
 import { lockPoint, recalculateEnergy } from "@server/readings/recalculate-energy";
 import { storeBlocks } from "@server/readings/store-blocks";
-import { overlapsOf, spanOf } from "./check-import";
+import { overlapsOf, sourcesOf, spanOf } from "./check-import";
 import type { CheckedFile } from "./file-checks";
 import { importOfJob, loadFile, openFiles } from "./load-files";
 import { storedRowsOf } from "./resolved-file";
@@ -56,7 +57,8 @@ async function storeAll(
 ): Promise<"stored" | "metAnother"> {
   const { database } = context;
   const span = spanOf(files);
-  const precedence = await precedenceOf(context, transaction, row, files, span);
+  const already = span ? await storedAround(context, transaction, row.pointId, span) : [];
+  const precedence = await precedenceOf(context, transaction, row, files, already);
   if (precedence === null) return "metAnother";
   let stored = 0;
   for (const file of files) {
@@ -74,7 +76,9 @@ async function storeAll(
   }
   context.report({ stage: "energy", rowsRead: 0, rowsTotal });
   if (span !== null) {
+    const segments = resolveSegments([...already, ...sourcesOf(files, precedence)]);
     await recalculateEnergy(database, transaction, row.pointId, span, {
+      segmentsOf: (fromMs, toMs) => trimSegments(segments, fromMs, toMs),
       onProgress(share) {
         context.checkpoint();
         context.report({ stage: "energy", rowsRead: Math.round(share * rowsTotal), rowsTotal });
@@ -90,6 +94,20 @@ async function storeAll(
 }
 
 /**
+ * What other files hold of every local day the import touches, and of the steps that reach into
+ * them: a day's energy is all of its readings'.
+ */
+function storedAround(
+  { database }: JobContext,
+  transaction: Transaction,
+  pointId: string,
+  span: Interval,
+): Promise<ReadingSource[]> {
+  const margin = 2 * DAY_MS;
+  return loadSources(database, pointId, span.startMs - margin, span.endMs + margin, transaction);
+}
+
+/**
  * Which readings win where this import meets stored ones: above all others, or below all where the
  * earlier ones are kept. Null where it meets different readings that no choice was made about,
  * because another import was stored since the check.
@@ -99,7 +117,7 @@ async function precedenceOf(
   transaction: Transaction,
   row: LogImport,
   files: readonly CheckedFile[],
-  span: Interval | null,
+  already: readonly ReadingSource[],
 ): Promise<number | null> {
   const [found] = await database.query<{ least: number | null; greatest: number | null }>(
     `SELECT MIN(precedence) AS least, MAX(precedence) AS greatest
@@ -107,11 +125,8 @@ async function precedenceOf(
     { replacements: { pointId: row.pointId }, type: QueryTypes.SELECT, transaction },
   );
   const above = (found?.greatest ?? 0) + 1;
-  if (span === null) return above;
-  const { startMs, endMs } = span;
-  const stored = await loadSources(database, row.pointId, startMs, endMs + 1, transaction);
-  if (stored.length === 0 && files.length < 2) return above;
-  const differs = overlapsOf(files, stored).some((overlap) => (overlap?.different.count ?? 0) > 0);
+  if (already.length === 0 && files.length < 2) return above;
+  const differs = overlapsOf(files, already).some((overlap) => (overlap?.different.count ?? 0) > 0);
   if (!differs || row.repair.overlap === "useThis") return above;
   return row.repair.overlap === null ? null : (found?.least ?? 0) - 1;
 }

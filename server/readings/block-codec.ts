@@ -77,16 +77,20 @@ export function decodeBlock(packed: Uint8Array, format: number): StoredRows {
   };
 }
 
+/** Steps within a day stay below 2^27 ms, so their differences fit the fast integers. */
 function writeInstants(out: ByteWriter, instantMs: Float64Array): void {
   let before = instantMs[0] as number;
   let step = 0;
   out.signed(before);
+  const coded = new Uint32Array(instantMs.length - 1);
   for (let i = 1; i < instantMs.length; i++) {
     const at = instantMs[i] as number;
-    out.signed(at - before - step);
+    const difference = at - before - step;
+    coded[i - 1] = difference < 0 ? -2 * difference - 1 : 2 * difference;
     step = at - before;
     before = at;
   }
+  out.integers(coded);
 }
 
 function readInstants(input: ByteReader, count: number): Float64Array {
@@ -94,8 +98,10 @@ function readInstants(input: ByteReader, count: number): Float64Array {
   let at = input.signed();
   let step = 0;
   instantMs[0] = at;
+  const coded = input.integers(count - 1);
   for (let i = 1; i < count; i++) {
-    step += input.signed();
+    const code = coded[i - 1] as number;
+    step += (code & 1) === 0 ? code >>> 1 : -(code >>> 1) - 1;
     at += step;
     instantMs[i] = at;
   }
@@ -126,26 +132,23 @@ function readQuality(input: ByteReader, count: number): Uint8Array {
 
 function writeChannel(out: ByteWriter, { unit, values }: StoredChannel<ColumnUnit>): void {
   out.byte(unitCodes.indexOf(unit));
-  const decimals = decimalsOf(values);
-  out.byte(decimals ?? AS_DOUBLES);
-  if (decimals === null) {
+  const quantised = quantise(values);
+  out.byte(quantised?.decimals ?? AS_DOUBLES);
+  if (quantised === null) {
     out.doubles(values);
     return;
   }
-  const scale = 10 ** decimals;
+  const { whole } = quantised;
+  const coded = new Uint32Array(values.length);
   let before = 0;
-  for (let i = 0; i < values.length; i++) {
-    const value = values[i] as number;
+  for (let i = 0; i < coded.length; i++) {
     // 0 stands for "no reading", which is why every difference is one higher.
-    if (value !== value) {
-      out.integer(0);
-      continue;
-    }
-    const whole = Math.round(value * scale);
-    const difference = whole - before;
-    out.integer(difference < 0 ? -2 * difference : 2 * difference + 1);
-    before = whole;
+    if (values[i] !== values[i]) continue;
+    const difference = (whole[i] as number) - before;
+    coded[i] = difference < 0 ? -2 * difference : 2 * difference + 1;
+    before = whole[i] as number;
   }
+  out.integers(coded);
 }
 
 function readChannel(input: ByteReader, count: number): StoredChannel<ColumnUnit> {
@@ -155,44 +158,43 @@ function readChannel(input: ByteReader, count: number): StoredChannel<ColumnUnit
   const decimals = input.byte();
   if (decimals === AS_DOUBLES) return { unit, values: input.doubles(count) };
   const scale = 10 ** decimals;
+  const coded = input.integers(count);
   const values = new Float64Array(count);
   let whole = 0;
   for (let i = 0; i < count; i++) {
-    const coded = input.integer();
-    if (coded === 0) {
+    const code = coded[i] as number;
+    if (code === 0) {
       values[i] = NaN;
       continue;
     }
-    whole += coded % 2 === 0 ? -coded / 2 : (coded - 1) / 2;
+    whole += (code & 1) === 0 ? -(code >>> 1) : code >>> 1;
     values[i] = whole / scale;
   }
   return { unit, values };
 }
 
 /**
- * The least number of decimals with which every value is a whole number of its last decimal and
- * comes back bit for bit, or null. A decimal number as read is the double nearest to n / 10^d, and
- * so is the quotient, so for numbers a logger wrote the comparison is exact.
+ * The values as whole numbers of their last decimal, with the fewest decimals under which each comes
+ * back bit for bit, or null where there are too many. A decimal number as read is the double nearest
+ * to n / 10^d, and so is the quotient, so for numbers a logger wrote the comparison is exact.
  */
-function decimalsOf(values: Float64Array): number | null {
+function quantise(values: Float64Array): { decimals: number; whole: Int32Array } | null {
+  const whole = new Int32Array(values.length);
   let decimals = 0;
   let scale = 1;
   for (let i = 0; i < values.length; i++) {
     const value = values[i] as number;
     if (value !== value) continue;
-    for (;;) {
-      const whole = Math.round(value * scale);
-      if (whole > LARGEST || whole < -LARGEST) return null;
-      if (whole / scale === value) break;
-      if (++decimals > MOST_DECIMALS) return null;
-      scale *= 10;
+    const rounded = Math.round(value * scale);
+    if (rounded > LARGEST || rounded < -LARGEST) return null;
+    if (rounded / scale === value) {
+      whole[i] = rounded;
+      continue;
     }
+    if (++decimals > MOST_DECIMALS) return null;
+    scale = 10 ** decimals;
+    // All before are to be scaled anew; it happens a few times a block at most.
+    i = -1;
   }
-  // More decimals may have been asked for after a large number had already fitted with fewer.
-  for (let i = 0; i < values.length; i++) {
-    const value = values[i] as number;
-    if (value === value && !(Math.abs(value) * scale <= LARGEST)) return null;
-    if (value === value && Math.round(value * scale) / scale !== value) return null;
-  }
-  return decimals;
+  return { decimals, whole };
 }

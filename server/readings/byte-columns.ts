@@ -41,6 +41,22 @@ export class ByteWriter {
     this.integer(value < 0 ? -2 * value - 1 : 2 * value);
   }
 
+  /** Many integers at once, each below 2^32. */
+  integers(values: Uint32Array): void {
+    this.reserve(values.length * 5);
+    const { bytes } = this;
+    let at = this.length;
+    for (let i = 0; i < values.length; i++) {
+      let rest = values[i] as number;
+      while (rest > 127) {
+        bytes[at++] = (rest & 127) | 0x80;
+        rest >>>= 7;
+      }
+      bytes[at++] = rest;
+    }
+    this.length = at;
+  }
+
   doubles(values: Float64Array): void {
     this.reserve(values.length * 8);
     const view = new DataView(this.bytes.buffer);
@@ -98,6 +114,26 @@ export class ByteReader {
   signed(): number {
     const value = this.integer();
     return value % 2 === 0 ? value / 2 : -(value + 1) / 2;
+  }
+
+  /** Many integers at once, each below 2^32. */
+  integers(length: number): Uint32Array {
+    const { bytes } = this;
+    const values = new Uint32Array(length);
+    let at = this.at;
+    for (let i = 0; i < length; i++) {
+      let byte = bytes[at++] as number;
+      let value = byte & 127;
+      for (let shift = 7; byte > 127; shift += 7) {
+        byte = bytes[at++] as number;
+        value |= (byte & 127) << shift;
+      }
+      values[i] = value;
+    }
+    // Past the end every byte reads as undefined and ends its number.
+    if (at > bytes.length) throw new RangeError("a reading block ends too soon");
+    this.at = at;
+    return values;
   }
 
   doubles(length: number): Float64Array {

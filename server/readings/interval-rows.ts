@@ -23,11 +23,14 @@ import type { Database } from "@server/database/connect";
  */
 const registerNames = ["heating", "cooling"] as const;
 const registerParts = ["kwh", "m3", "flow_dt", "power_dt", "dt", "s"] as const;
+type RegisterColumn = `${(typeof registerNames)[number]}_${(typeof registerParts)[number]}`;
 const columns = [
   "point_id",
   "start_s",
   "covered_s",
-  ...registerNames.flatMap((name) => registerParts.map((part) => `${name}_${part}`)),
+  ...registerNames.flatMap((name) =>
+    registerParts.map((part): RegisterColumn => `${name}_${part}`),
+  ),
   "volume_m3",
   "suppressed_kwh",
   "suppressed_s",
@@ -182,53 +185,60 @@ function emptyColumns(count: number): IntervalEnergyColumns {
   };
 }
 
+/** Places in a selected row, which has every column but the point's. */
+const at = Object.fromEntries(columns.slice(1).map((name, index) => [name, index])) as Record<
+  Exclude<(typeof columns)[number], "point_id">,
+  number
+>;
+const registerAt = { heating: at.heating_kwh, cooling: at.cooling_kwh } as const;
+
 function fillRegister(
   energy: IntervalEnergyColumns,
   name: keyof typeof signs,
   i: number,
   row: SqlRow,
 ): void {
-  const from = at(`${name}_kwh`);
+  const from = registerAt[name];
   if (row[from] === null) return;
   const register = energy[name];
   const covered = energy.coveredS[i] as number;
-  register.energyKwh[i] = Number(row[from]);
-  register.volumeM3[i] = Number(row[from + 1]);
-  register.flowDeltaTM3K[i] = Number(row[from + 2]);
-  register.powerDeltaTKwhK[i] = Number(row[from + 3]);
-  register.deltaTKs[i] = Number(
-    row[from + 4] ??
-      deltaTFromMeans(name, Number(row[at("supply_c")]), Number(row[at("return_c")]), covered),
-  );
-  register.runningS[i] = Number(row[from + 5] ?? covered);
+  register.energyKwh[i] = row[from] as number;
+  register.volumeM3[i] = row[from + 1] as number;
+  register.flowDeltaTM3K[i] = row[from + 2] as number;
+  register.powerDeltaTKwhK[i] = row[from + 3] as number;
+  register.deltaTKs[i] = (row[from + 4] ??
+    deltaTFromMeans(
+      name,
+      row[at.supply_c] as number,
+      row[at.return_c] as number,
+      covered,
+    )) as number;
+  register.runningS[i] = (row[from + 5] ?? covered) as number;
 }
 
-const position = new Map<string, number>(columns.slice(1).map((name, index) => [name, index]));
-const at = (name: (typeof columns)[number]): number => position.get(name) as number;
-
 function fillRow(energy: IntervalEnergyColumns, i: number, row: SqlRow): void {
-  const orZero = (name: (typeof columns)[number]) => Number(row[at(name)] ?? 0);
-  const orNaN = (name: (typeof columns)[number]) => Number(row[at(name)] ?? NaN);
-  const covered = Number(row[at("covered_s")] ?? wholeIntervalS);
-  energy.startMs[i] = Number(row[at("start_s")]) * 1000;
+  // FLOAT, DOUBLE and INT arrive as numbers through the binary protocol.
+  const value = (index: number, otherwise: number) => (row[index] ?? otherwise) as number;
+  const covered = value(at.covered_s, wholeIntervalS);
+  energy.startMs[i] = value(at.start_s, NaN) * 1000;
   energy.coveredS[i] = covered;
   fillRegister(energy, "heating", i, row);
   fillRegister(energy, "cooling", i, row);
   const registersVolume =
     (energy.heating.volumeM3[i] as number) + (energy.cooling.volumeM3[i] as number);
-  energy.volumeM3[i] = Number(row[at("volume_m3")] ?? registersVolume);
-  energy.suppressedKwh[i] = orZero("suppressed_kwh");
-  energy.suppressedS[i] = orZero("suppressed_s");
-  energy.minPowerKw[i] = orNaN("min_power_kw");
-  energy.maxPowerKw[i] = orNaN("max_power_kw");
-  energy.minFlowM3PerHour[i] = orNaN("min_flow");
-  energy.maxFlowM3PerHour[i] = orNaN("max_flow");
-  energy.supplyCs[i] = orZero("supply_c") * covered;
-  energy.returnCs[i] = orZero("return_c") * covered;
-  energy.measuredRows[i] = orZero("measured_rows");
-  energy.excludedRows[i] = orZero("excluded_rows");
-  energy.noReadingRows[i] = orZero("no_reading_rows");
-  energy.apportioned[i] = orZero("apportioned");
+  energy.volumeM3[i] = value(at.volume_m3, registersVolume);
+  energy.suppressedKwh[i] = value(at.suppressed_kwh, 0);
+  energy.suppressedS[i] = value(at.suppressed_s, 0);
+  energy.minPowerKw[i] = value(at.min_power_kw, NaN);
+  energy.maxPowerKw[i] = value(at.max_power_kw, NaN);
+  energy.minFlowM3PerHour[i] = value(at.min_flow, NaN);
+  energy.maxFlowM3PerHour[i] = value(at.max_flow, NaN);
+  energy.supplyCs[i] = value(at.supply_c, 0) * covered;
+  energy.returnCs[i] = value(at.return_c, 0) * covered;
+  energy.measuredRows[i] = value(at.measured_rows, 0);
+  energy.excludedRows[i] = value(at.excluded_rows, 0);
+  energy.noReadingRows[i] = value(at.no_reading_rows, 0);
+  energy.apportioned[i] = value(at.apportioned, 0);
 }
 
 /**

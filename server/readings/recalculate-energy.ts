@@ -1,4 +1,5 @@
 import { QueryTypes, type Transaction } from "sequelize";
+import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import { HOUR_MS, type Interval } from "@shared/domain/time/interval";
 import { addDays, localDaysBetween, type LocalDay } from "@shared/domain/time/local-calendar";
 import { INTERVAL_MS, type IntervalEnergyColumns } from "@shared/domain/energy/interval-energy";
@@ -13,9 +14,14 @@ import { refreshPointReadings } from "./point-readings";
 /** Days worked out at a time, so that memory stays flat however long a point has been measured. */
 const daysAtOnce = 92;
 
-export interface RecalculationHooks {
+export interface RecalculationOptions {
+  /**
+   * The point's readings over [fromMs, toMs) where the caller has them at hand: an import that just
+   * stored them need not read them back.
+   */
+  readonly segmentsOf?: (fromMs: number, toMs: number) => ReadingSegment[];
   /** Called after each stretch with the share done, 0 to 1; may throw to stop the work. */
-  onProgress?(share: number): void;
+  readonly onProgress?: (share: number) => void;
 }
 
 /**
@@ -29,7 +35,7 @@ export async function recalculateEnergy(
   transaction: Transaction,
   pointId: string,
   range: Interval | null,
-  hooks: RecalculationHooks = {},
+  options: RecalculationOptions = {},
 ): Promise<void> {
   const settings = await loadEnergySettings(database, pointId, transaction);
   const reach = await reachOfPoint(database, pointId, transaction);
@@ -39,12 +45,16 @@ export async function recalculateEnergy(
       { startMs: whole.startMs - reach, endMs: whole.endMs + reach },
       settings.zone,
     );
+    const segmentsOf =
+      options.segmentsOf ??
+      ((fromMs: number, toMs: number) =>
+        loadSegments(database, pointId, fromMs, toMs, transaction));
     const isEverything = range === null;
     if (isEverything) await deleteDays(database, transaction, pointId);
     for (let from = 0; from < days.length; from += daysAtOnce) {
       const stretch = days.slice(from, from + daysAtOnce);
-      await recalculateStretch(database, transaction, settings, stretch);
-      hooks.onProgress?.(Math.min(1, (from + daysAtOnce) / days.length));
+      await recalculateStretch(database, transaction, settings, stretch, segmentsOf);
+      options.onProgress?.(Math.min(1, (from + daysAtOnce) / days.length));
     }
   }
   await refreshPointReadings(database, transaction, settings);
@@ -55,6 +65,7 @@ async function recalculateStretch(
   transaction: Transaction,
   settings: Awaited<ReturnType<typeof loadEnergySettings>>,
   days: readonly LocalDay[],
+  segmentsOf: (fromMs: number, toMs: number) => ReadingSegment[] | Promise<ReadingSegment[]>,
 ): Promise<void> {
   const first = days[0];
   const last = days[days.length - 1];
@@ -63,8 +74,7 @@ async function recalculateStretch(
   // Days of a zone off the quarter hour would share an interval with their neighbour: none today.
   const fromMs = Math.floor(first.startMs / INTERVAL_MS) * INTERVAL_MS;
   const toMs = Math.ceil(last.endMs / INTERVAL_MS) * INTERVAL_MS;
-  const segments = await loadSegments(database, pointId, fromMs, toMs, transaction);
-  const energy = calculateEnergy(segments, settings, days);
+  const energy = calculateEnergy(await segmentsOf(fromMs, toMs), settings, days);
   const intervals = energy?.intervals ?? noIntervals;
   await replaceIntervals(database, transaction, pointId, { fromMs, toMs }, intervals);
   await replaceDays(

@@ -17,6 +17,9 @@ const insert = `INSERT INTO reading_block
   ON DUPLICATE KEY UPDATE row_count = VALUES(row_count), first_ms = VALUES(first_ms),
     last_ms = VALUES(last_ms), format = VALUES(format), data = VALUES(data)`;
 
+/** A day of seconds packs into a quarter of a megabyte. */
+const blocksAtOnce = 16;
+
 function* blocksOf(owner: BlockOwner, rows: StoredRows): Generator<SqlValue[]> {
   const { instantMs } = rows;
   const channelSet = channelSetOf(rows);
@@ -50,5 +53,5 @@ export async function storeBlocks(
   owner: BlockOwner,
   rows: StoredRows,
 ): Promise<void> {
-  await insertMany(transaction, insert, blocksOf(owner, rows));
+  await insertMany(transaction, insert, blocksOf(owner, rows), blocksAtOnce);
 }
