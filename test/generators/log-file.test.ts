@@ -64,7 +64,11 @@ describe("a known series written in a random dialect", () => {
       // A gap of about an hour inside a repeated hour leaves its pass open; the step says so.
       const repeated = resolved.steps.find(({ code }) => code === "repeatedHour");
       if (repeated?.countByKind.unclear !== undefined) continue;
-      if (repeated !== undefined && resolved.questions.some(({ code }) => code === "conflictingRepeats")) continue;
+      if (
+        repeated !== undefined &&
+        resolved.questions.some(({ code }) => code === "conflictingRepeats")
+      )
+        continue;
       const found = {
         questions: resolved.questions,
         instants: resolved.columns === null ? [] : [...resolved.columns.instantMs],

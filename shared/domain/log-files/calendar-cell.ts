@@ -1,25 +1,15 @@
-import { isWeekday, monthOf } from "./month-names";
+import { readDateWords } from "./date-words";
+import { DATE_ORDERS, dayMsOf, OrderBit } from "./date-orders";
 import type { DateOrder } from "./recipe";
 
-/** Bits of the orders in which a date can be read. */
-export const OrderBit = {
-  dayMonthYear: 1,
-  monthDayYear: 2,
-  yearMonthDay: 4,
-} as const satisfies Record<DateOrder, number>;
-export const DATE_ORDERS: readonly DateOrder[] = ["dayMonthYear", "monthDayYear", "yearMonthDay"];
-
 const MS_PER_DAY = 86_400_000;
-const MS_PER_MINUTE = 60_000;
 /** No timestamp is longer; longer cells are something else. */
 const MAX_BYTES = 64;
-/** Years outside are typing errors or broken clocks. */
-const FIRST_YEAR = 1970;
-const LAST_YEAR = 2199;
-/** Two-digit years from here on belong to the last century: loggers are younger than that. */
-const TWO_DIGIT_PIVOT = 70;
+
+const MAX_PREFIX_BYTES = 10;
 
 const decoder = new TextDecoder("utf-8");
+const encoder = new TextEncoder();
 
 /**
  * Splits one calendar timestamp into its fields without deciding the order of day, month and year.
@@ -52,7 +42,12 @@ export class CalendarCell {
   private at = 0;
   private end = 0;
   private digits = 0;
-  private cachedKey = -1;
+  /** The date as written in the last cell that had one in figures; its fields are still in place. */
+  private readonly prefix = new Uint8Array(MAX_PREFIX_BYTES);
+  private prefixLength = 0;
+  private cachedFirst = -1;
+  private cachedSecond = -1;
+  private cachedThird = -1;
   private cachedOrder: DateOrder | null = null;
   private cachedDayMs = 0;
 
@@ -72,6 +67,10 @@ export class CalendarCell {
     while (this.end > this.at && bytes[this.end - 1] === 32) this.end--;
     const start = this.at;
     if (start >= this.end) return false;
+    if (this.prefixLength > 0 && this.hasSameDate(start)) {
+      this.hasDate = true;
+      return this.parseAfterDate();
+    }
     const value = this.readDigits();
     if (this.digits >= 8) return this.parseCompact(start);
     const separator = bytes[this.at];
@@ -95,12 +94,30 @@ export class CalendarCell {
         this.thirdDigits = this.digits;
         if (this.digits > 0) {
           this.hasDate = true;
+          this.keepPrefix(start);
           return this.parseAfterDate();
         }
       }
     }
     this.at = start;
     return this.parseWords();
+  }
+
+  /** Most rows repeat the date of the row before: comparing ten bytes costs less than reading them. */
+  private hasSameDate(start: number): boolean {
+    const { prefix, prefixLength, bytes } = this;
+    const next = start + prefixLength;
+    if (next > this.end) return false;
+    for (let i = 0; i < prefixLength; i++) if (bytes[start + i] !== prefix[i]) return false;
+    if (next < this.end && isDigitByte(bytes[next] as number)) return false;
+    this.at = next;
+    return true;
+  }
+
+  private keepPrefix(start: number): void {
+    const length = this.at - start;
+    this.prefixLength = length <= MAX_PREFIX_BYTES ? length : 0;
+    for (let i = 0; i < this.prefixLength; i++) this.prefix[i] = this.bytes[start + i] as number;
   }
 
   /** Bits of {@link OrderBit} under which the date exists; 0 without a date or for one like 31/31/2025. */
@@ -113,41 +130,22 @@ export class CalendarCell {
 
   /** Midnight of the date as if its zone were UTC, or null if there is no such date in this order. */
   dayMs(order: DateOrder): number | null {
-    const key = this.first * 1e8 + this.second * 1e4 + this.third;
-    if (this.namedField < 0 && key === this.cachedKey && order === this.cachedOrder)
-      return this.cachedDayMs;
-    const dayMs = this.computeDayMs(order);
+    const isCached =
+      this.first === this.cachedFirst &&
+      this.second === this.cachedSecond &&
+      this.third === this.cachedThird &&
+      order === this.cachedOrder &&
+      this.namedField < 0;
+    if (isCached) return this.cachedDayMs;
+    const dayMs = dayMsOf(this, order);
     if (dayMs !== null && this.namedField < 0) {
-      this.cachedKey = key;
+      this.cachedFirst = this.first;
+      this.cachedSecond = this.second;
+      this.cachedThird = this.third;
       this.cachedOrder = order;
       this.cachedDayMs = dayMs;
     }
     return dayMs;
-  }
-
-  private computeDayMs(order: DateOrder): number | null {
-    if (this.namedField === 0 && order !== "monthDayYear") return null;
-    if (this.namedField === 1 && order === "monthDayYear") return null;
-    let year = this.third;
-    let yearDigits = this.thirdDigits;
-    let month = this.second;
-    let day = this.first;
-    let otherDigits = this.firstDigits;
-    if (order === "monthDayYear") {
-      month = this.first;
-      day = this.second;
-    } else if (order === "yearMonthDay") {
-      year = this.first;
-      yearDigits = this.firstDigits;
-      day = this.third;
-      otherDigits = this.thirdDigits;
-    }
-    if (otherDigits > 2 || (this.namedField !== 1 && this.secondDigits > 2)) return null;
-    if (yearDigits === 2) year += year < TWO_DIGIT_PIVOT ? 2000 : 1900;
-    else if (yearDigits !== 4) return null;
-    if (year < FIRST_YEAR || year > LAST_YEAR || month < 1 || month > 12 || day < 1) return null;
-    if (day > daysInMonth(year, month)) return null;
-    return Date.UTC(year, month - 1, day);
   }
 
   private readDigits(): number {
@@ -187,6 +185,7 @@ export class CalendarCell {
   }
 
   private parseCompact(start: number): boolean {
+    this.prefixLength = 0;
     const length = this.digits;
     const two = (offset: number): number =>
       ((this.bytes[start + offset] as number) - 48) * 10 +
@@ -319,80 +318,20 @@ export class CalendarCell {
 
   /** Dates with a month name, or with spaces between the fields: `15. Juli 2025 12:00`, `Jul 15, 2025`. */
   private parseWords(): boolean {
-    const start = this.at;
-    const text = decoder.decode(this.bytes.subarray(start, this.end));
-    const colon = text.indexOf(":");
-    let timeAt = colon < 0 ? text.length : colon;
-    while (colon >= 0 && timeAt > 0 && isDigit(text[timeAt - 1] as string)) timeAt--;
-    const words = splitWords(text.slice(0, timeAt));
-    if (words === null) return false;
-    const fields = words.filter(
-      (word, i) =>
-        !(isWeekday(word) || ORDINALS.has(word) || (i === words.length - 1 && word === "t")),
-    );
-    if (fields.length !== 3) return false;
-    const named = fields.findIndex((word) => monthOf(word) > 0);
-    if (named !== 0 && named !== 1) return false;
-    const numbers = fields.map((word, i) =>
-      i === named ? monthOf(word) : isDigit(word[0] as string) ? Number(word) : NaN,
-    );
-    if (numbers.some(Number.isNaN)) return false;
-    [this.first, this.second, this.third] = numbers as [number, number, number];
-    [this.firstDigits, this.secondDigits, this.thirdDigits] = fields.map((word) => word.length) as [
-      number,
-      number,
-      number,
-    ];
-    if (named === 0) this.firstDigits = 2;
-    this.namedField = named;
+    this.prefixLength = 0;
+    const found = readDateWords(decoder.decode(this.bytes.subarray(this.at, this.end)));
+    if (found === null) return false;
+    [this.first, this.second, this.third] = found.fields;
+    [this.firstDigits, this.secondDigits, this.thirdDigits] = found.digits;
+    this.namedField = found.namedField;
     this.hasDate = true;
-    if (timeAt >= text.length) return true;
-    // The time is ASCII up to its colon, so its place in the bytes counts from the end.
-    this.at = this.end - new TextEncoder().encode(text.slice(timeAt)).length;
+    if (found.timeText === "") return true;
+    // What comes after the date may hold spaces of several bytes, so its place counts from the end.
+    this.at = this.end - encoder.encode(found.timeText).length;
     return this.parseTime();
   }
 }
 
-const ORDINALS: ReadonlySet<string> = new Set(["st", "nd", "rd", "th"]);
-
-function daysInMonth(year: number, month: number): number {
-  if (month === 2) return year % 4 === 0 && (year % 100 !== 0 || year % 400 === 0) ? 29 : 28;
-  return month === 4 || month === 6 || month === 9 || month === 11 ? 30 : 31;
-}
-
-function isDigit(c: string): boolean {
-  return c >= "0" && c <= "9";
-}
-
-function isLetter(c: string): boolean {
-  return c.toLowerCase() !== c.toUpperCase();
-}
-
-/** Lower-case runs of letters and of digits; null if anything but plain punctuation stands between. */
-function splitWords(text: string): string[] | null {
-  const words: string[] = [];
-  let word = "";
-  let wordIsDigits = false;
-  for (const c of text) {
-    const digit = isDigit(c);
-    if (digit || isLetter(c)) {
-      if (word !== "" && digit !== wordIsDigits) {
-        words.push(word);
-        word = "";
-      }
-      word += c.toLowerCase();
-      wordIsDigits = digit;
-    } else {
-      if (!" .,-/\u00a0\u202f".includes(c)) return null;
-      if (word !== "") words.push(word);
-      word = "";
-    }
-  }
-  if (word !== "") words.push(word);
-  return words;
-}
-
-/** Local wall time in milliseconds as if its zone were UTC, turned to UTC where the cell has its own offset. */
-export function applyOffset(localMs: number, offsetMinutes: number | null): number {
-  return offsetMinutes === null ? localMs : localMs - offsetMinutes * MS_PER_MINUTE;
+function isDigitByte(byte: number): boolean {
+  return byte >= 48 && byte <= 57;
 }

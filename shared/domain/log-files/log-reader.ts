@@ -1,4 +1,3 @@
-import { GrowingColumn } from "./growing-column";
 import { CellStatus, NumberCell } from "./number-cell";
 import { MAX_PROBLEMS, newTally, tally } from "./raw-rows";
 import type { ChannelMeaning, RawRows, RemedyCode, RowProblem, RowProblemCode } from "./raw-rows";
@@ -32,10 +31,12 @@ export function createLogReader(recipe: FileRecipe, context: LogReaderContext = 
 /** Lines after the last reading up to this many are a footer; more are rows that cannot be read. */
 const MAX_FOOTER_LINES = 20;
 const MAX_CELL_CHARACTERS = 60;
+const MIN_CAPACITY = 16;
+const GROWTH = 1.6;
 
 class Channel {
   decimals = 0;
-  readonly values: GrowingColumn;
+  values: Float64Array;
   readonly index: number;
   readonly mark: DecimalMark;
 
@@ -45,7 +46,7 @@ class Channel {
   ) {
     this.index = column.index;
     this.mark = column.decimalMark;
-    this.values = new GrowingColumn(capacity);
+    this.values = new Float64Array(capacity);
   }
 }
 
@@ -60,9 +61,12 @@ class Reader implements LogReader {
   private readonly time;
   private readonly channels: readonly Channel[];
   private readonly number = new NumberCell();
-  private readonly lines: GrowingColumn;
-  private readonly times: GrowingColumn;
+  private rowCount = 0;
+  private capacity: number;
+  private lines: Uint32Array;
+  private times: Float64Array;
   private utcFlags: Uint8Array;
+  private readonly firstDataLine: number;
   private readonly columnCount: number;
   private readonly problems: RowProblem[] = [];
   private problemCount = 0;
@@ -75,20 +79,23 @@ class Reader implements LogReader {
 
   constructor(
     private readonly recipe: FileRecipe,
-    capacity: number,
+    expectedRows: number,
   ) {
+    const capacity = Math.max(MIN_CAPACITY, expectedRows);
+    this.capacity = capacity;
+    this.firstDataLine = recipe.dialect.firstDataLine;
     this.time = createTimeReader(recipe);
     this.channels = recipe.columns.filter(isChannel).map((column) => new Channel(column, capacity));
     this.columnCount = recipe.columns.reduce((most, column) => Math.max(most, column.index + 1), 0);
-    this.lines = new GrowingColumn(capacity);
-    this.times = new GrowingColumn(capacity);
-    this.utcFlags = new Uint8Array(Math.max(16, capacity));
+    this.lines = new Uint32Array(capacity);
+    this.times = new Float64Array(capacity);
+    this.utcFlags = new Uint8Array(capacity);
     this.tokeniser = new RowTokeniser(recipe.dialect, (row) => this.readRow(row));
     this.stream = createUtf8Stream(recipe.dialect.encoding);
   }
 
   get rowsRead(): number {
-    return this.times.length;
+    return this.rowCount;
   }
 
   push(bytes: Uint8Array): void {
@@ -98,6 +105,7 @@ class Reader implements LogReader {
   end(): RawRows {
     this.tokeniser.push(this.stream.finish());
     this.tokeniser.end();
+    const { rowCount } = this;
     const footer = newTally();
     // A last line that begins like a time is a row cut off or damaged, not a footer.
     const last = this.pending;
@@ -107,17 +115,17 @@ class Reader implements LogReader {
       if (!startsWithDigit(cell)) tally(footer, "", () => example(line, null, cell));
     }
     return {
-      rowCount: this.times.length,
-      line: new Uint32Array(this.lines.view()),
-      timeMs: this.times.view(),
-      isUtc: this.utcFlags.subarray(0, this.times.length),
+      rowCount,
+      line: this.lines.subarray(0, rowCount),
+      timeMs: this.times.subarray(0, rowCount),
+      isUtc: this.utcFlags.subarray(0, rowCount),
       channels: this.channels.map(({ column, decimals, values }) => ({
         meaning: column.meaning as ChannelMeaning,
         columnIndex: column.index,
         header: column.header,
         unit: column.unit,
         decimals,
-        values: values.view(),
+        values: values.subarray(0, rowCount),
       })),
       problems: this.problems,
       problemCount: this.problemCount,
@@ -130,7 +138,7 @@ class Reader implements LogReader {
   }
 
   private readRow(row: RowTokeniser): void {
-    if (row.line < this.recipe.dialect.firstDataLine) return;
+    if (row.line < this.firstDataLine) return;
     const { time } = this;
     if (row.cellCount < time.neededCells || !time.read(row)) {
       this.keepPending(row);
@@ -142,41 +150,45 @@ class Reader implements LogReader {
       this.addRowProblem("longRow", row);
       return;
     }
-    const length = this.times.length;
-    if (length === this.utcFlags.length) this.growFlags();
-    this.utcFlags[length] = time.isUtc ? 1 : 0;
-    this.lines.push(row.line);
-    this.times.push(time.ms);
+    const at = this.rowCount++;
+    if (at === this.capacity) this.grow();
+    this.utcFlags[at] = time.isUtc ? 1 : 0;
+    this.lines[at] = row.line;
+    this.times[at] = time.ms;
+    const { number, channels } = this;
+    const { cellCount, buffer, starts, ends } = row;
     let isShort = false;
-    for (const channel of this.channels) {
+    for (let k = 0; k < channels.length; k++) {
+      const channel = channels[k] as Channel;
       const { index } = channel;
-      if (index >= row.cellCount) {
+      channel.values[at] = NaN;
+      if (index >= cellCount) {
         isShort = true;
-        channel.values.push(NaN);
         continue;
       }
-      const { number } = this;
       const status = number.parse(
-        row.buffer,
-        row.starts[index] as number,
-        row.ends[index] as number,
+        buffer,
+        starts[index] as number,
+        ends[index] as number,
         channel.mark,
       );
       if (status === CellStatus.number) {
-        channel.values.push(number.value);
+        channel.values[at] = number.value;
         if (number.decimals > channel.decimals) channel.decimals = number.decimals;
-      } else {
-        channel.values.push(NaN);
-        this.addCell(row, channel, status);
-      }
+      } else this.addCell(row, channel, status);
     }
     if (isShort) this.addRowProblem("shortRow", row);
   }
 
-  private growFlags(): void {
-    const next = new Uint8Array(Math.ceil(this.utcFlags.length * 1.6));
-    next.set(this.utcFlags);
-    this.utcFlags = next;
+  /** Makes room for more rows than were expected. */
+  private grow(): void {
+    this.capacity = Math.ceil(this.capacity * GROWTH);
+    this.lines = enlarge(this.lines, new Uint32Array(this.capacity));
+    this.times = enlarge(this.times, new Float64Array(this.capacity));
+    this.utcFlags = enlarge(this.utcFlags, new Uint8Array(this.capacity));
+    for (const channel of this.channels) {
+      channel.values = enlarge(channel.values, new Float64Array(this.capacity));
+    }
   }
 
   private hasExtraCells(row: RowTokeniser): boolean {
@@ -258,6 +270,11 @@ class Reader implements LogReader {
 
 function isChannel({ meaning }: ColumnRecipe): boolean {
   return meaning === "flow" || meaning === "supply" || meaning === "return" || meaning === "signal";
+}
+
+function enlarge<T extends Uint8Array | Uint32Array | Float64Array>(from: T, to: T): T {
+  to.set(from);
+  return to;
 }
 
 function startsWithDigit(cell: string): boolean {

@@ -12,7 +12,7 @@
 export interface PassChoice {
   /** The instant of each row. */
   readonly instantMs: readonly number[];
-  /** All rows lie in one pass and the other would fit as well: the file has a gap of about an hour there. */
+  /** A gap or a step back in the hour leaves more than one way open; the likeliest was taken. */
   readonly isUnclear: boolean;
 }
 
@@ -70,8 +70,10 @@ function stepCost(fromMs: number, toMs: number, stepMs: number): number {
   return weight * Math.sqrt(Math.abs(step - stepMs));
 }
 
-const UNCLEAR_SHARE = 0.5;
-
+/**
+ * True where a row of the hour lies further from its neighbour than half the repeated stretch: such a gap,
+ * or such a step back, may hide the change of pass.
+ */
 function isUnclear(
   previousMs: number,
   chosen: readonly number[],
@@ -79,20 +81,15 @@ function isUnclear(
   laterMs: readonly number[],
   stepMs: number,
 ): boolean {
-  const isIn = (candidates: readonly number[]): boolean =>
-    chosen.every((at, i) => at === candidates[i]);
-  const other = isIn(earlierMs) ? laterMs : isIn(laterMs) ? earlierMs : null;
-  if (other === null) return false;
-  const difference = pathCost(previousMs, other, stepMs) - pathCost(previousMs, chosen, stepMs);
-  return difference < UNCLEAR_SHARE * Math.sqrt(Math.abs(stepMs));
-}
-
-function pathCost(previousMs: number, instants: readonly number[], stepMs: number): number {
-  let cost = 0;
   let before = previousMs;
-  for (const at of instants) {
-    cost += stepCost(before, at, stepMs);
+  let shiftBefore = 0;
+  for (let i = 0; i < chosen.length; i++) {
+    const at = chosen[i] as number;
+    const shift = (laterMs[i] as number) - (earlierMs[i] as number);
+    const stretch = Math.max(shift, shiftBefore);
+    if (stretch > 0 && Math.abs(at - before - stepMs) >= stretch / 2) return true;
     before = at;
+    shiftBefore = shift;
   }
-  return cost;
+  return false;
 }

@@ -128,12 +128,13 @@ export class RowTokeniser {
 
   /** Reads whole rows from `from` on; returns where the first incomplete row starts. */
   private readRows(from: number, final: boolean): number {
+    if (this.isPlain) return this.readPlainRows(from, final);
     const length = this.buffer.length;
     let at = from;
     while (at < length) {
       this.lineBreaksInRow = 0;
       this.doubled.length = 0;
-      const next = this.isPlain ? this.readPlainRow(at, final) : this.readRow(at, final);
+      const next = this.readRow(at, final);
       if (next < 0) return at;
       if (this.doubled.length > 0) this.closeUpQuotes();
       this.line = this.nextLine;
@@ -147,32 +148,55 @@ export class RowTokeniser {
     return at;
   }
 
-  /** {@link readRow} for dialects without quotes and collapsing spaces: the way nearly all bytes go. */
-  private readPlainRow(from: number, final: boolean): number {
-    const { buffer, classes, starts, ends } = this;
+  /**
+   * {@link readRows} for dialects without quotes and collapsing spaces: the way nearly all bytes go,
+   * so the whole loop is spelled out here.
+   */
+  private readPlainRows(from: number, final: boolean): number {
+    const { buffer, classes, starts, ends, onRow } = this;
     const length = buffer.length;
-    let cell = 0;
+    const maxCells = MAX_CELLS;
+    let rowStart = from;
     let start = from;
+    let cell = 0;
     for (let at = from; at < length; at++) {
-      const kind = classes[buffer[at] as number];
-      if (kind === PLAIN) continue;
-      if (cell < MAX_CELLS) {
+      const kind = classes[buffer[at] as number] as number;
+      if (kind === 0) continue;
+      if (cell < maxCells) {
         starts[cell] = start;
         ends[cell] = at;
       }
       cell++;
-      if (kind === IS_LINE_END) {
-        this.cellCount = cell;
-        return this.afterLineEnd(at, final);
+      if (kind === IS_SEPARATOR) {
+        start = at + 1;
+        continue;
       }
-      start = at + 1;
+      let next = at + 1;
+      if (buffer[at] === CARRIAGE_RETURN) {
+        // At the very end of a chunk it may be followed by its line feed.
+        if (next >= length && !final) break;
+        if (buffer[next] === LINE_FEED) next++;
+      }
+      this.line = this.nextLine++;
+      if (cell > 1 || at > start) {
+        this.cellCount = cell;
+        this.oversize = false;
+        onRow(this);
+      }
+      cell = 0;
+      rowStart = next;
+      start = next;
+      at = next - 1;
     }
-    if (!final) return -1;
-    if (cell < MAX_CELLS) {
+    if (!final || rowStart >= length) return rowStart;
+    if (cell < maxCells) {
       starts[cell] = start;
       ends[cell] = length;
     }
     this.cellCount = cell + 1;
+    this.oversize = false;
+    this.line = this.nextLine++;
+    onRow(this);
     return length;
   }
 

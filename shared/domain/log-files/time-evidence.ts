@@ -1,5 +1,6 @@
-import { DATE_ORDERS, OrderBit, type CalendarCell } from "./calendar-cell";
+import type { CalendarCell } from "./calendar-cell";
 import type { Place } from "./column-evidence";
+import { DATE_ORDERS, OrderBit } from "./date-orders";
 import type { DateOrder } from "./recipe";
 import type { RowTokeniser } from "./row-tokeniser";
 
