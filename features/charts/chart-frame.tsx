@@ -276,18 +276,20 @@ function ColumnNames({ labels, layout, names, format, xOf }: Placed) {
       {ruleY === null ? null : (
         <Line x1={left} x2={right} y1={ruleY} y2={ruleY} stroke={colour.rule} />
       )}
-      {energyBaselines.map((y, row) => (
-        <SvgText
-          key={y}
-          x={right + 8}
-          y={y}
-          fill={colour.ink3}
-          fontFamily={typeScale.chip.fontFamily}
-          fontSize={typeScale.chip.fontSize}
-        >
-          {names.energyUnits[row] ?? ""}
-        </SvgText>
-      ))}
+      {energyBaselines.map((y, row) =>
+        labels.every(({ energies }) => energies[row] === undefined) ? null : (
+          <SvgText
+            key={y}
+            x={right + 8}
+            y={y}
+            fill={colour.ink3}
+            fontFamily={typeScale.chip.fontFamily}
+            fontSize={typeScale.chip.fontSize}
+          >
+            {names.energyUnits[row] ?? ""}
+          </SvgText>
+        ),
+      )}
     </G>
   );
 }

@@ -22,8 +22,8 @@ export interface ChartLayout {
 /** Under this width the chart drops the names at its right and the energy under the days. */
 const NARROW = 560;
 
-/** @param registers how many energies stand under each column: 1, or 2 on a changeover loop. */
-export function chartLayout(width: number, registers: 1 | 2): ChartLayout {
+/** @param registers how many energies stand under each column: 2 on a changeover loop, 0 for none. */
+export function chartLayout(width: number, registers: 0 | 1 | 2): ChartLayout {
   if (width < NARROW) {
     return {
       width,
@@ -41,18 +41,19 @@ export function chartLayout(width: number, registers: 1 | 2): ChartLayout {
       leastColumn: 3.5,
     };
   }
-  const energyBaselines = registers === 1 ? [396] : [396, 418];
+  const energyBaselines = [396, 418].slice(0, registers);
   return {
     width,
-    height: (energyBaselines.at(-1) ?? 396) + 8,
+    height: (energyBaselines.at(-1) ?? 370) + 8,
     left: 38,
-    right: width - 64,
+    // Two energies need their registers' names beside them.
+    right: width - (registers === 2 ? 84 : 64),
     temperature: { top: 34, bottom: 245 },
     flow: { top: 265, bottom: 327 },
     quality: { top: 337, bottom: 344 },
     dayBaseline: 366,
     energyBaselines,
-    ruleY: 375,
+    ruleY: registers === 0 ? null : 375,
     named: true,
     cursorTop: 26,
     leastColumn: 2,

@@ -40,7 +40,8 @@ export interface LoopChartProps {
   range: Interval;
   zone: string;
   format: Format;
-  days: readonly ChartDay[];
+  /** Energy to write under the days; null where none is worked out. */
+  days: readonly ChartDay[] | null;
   load: LoadSeries;
   /** The key, left of the note on averaging. */
   foot?: ReactNode;
@@ -54,7 +55,7 @@ const tagServices = { chilled: "cooling", hot: "heating", changeover: "changeove
  */
 export function LoopChart(props: LoopChartProps) {
   const [width, onLayout] = useMeasuredWidth();
-  const { height } = chartLayout(width || 806, props.service === "changeover" ? 2 : 1);
+  const { height } = chartLayout(width || 806, energyRows(props));
   return (
     <View onLayout={onLayout} style={{ minHeight: height, alignSelf: "stretch" }}>
       {width > 0 ? <MeasuredChart {...props} width={width} /> : null}
@@ -62,13 +63,20 @@ export function LoopChart(props: LoopChartProps) {
   );
 }
 
+function energyRows({ days, service }: Pick<LoopChartProps, "days" | "service">): 0 | 1 | 2 {
+  if (days === null) return 0;
+  return service === "changeover" ? 2 : 1;
+}
+
+const noDays: readonly ChartDay[] = [];
+
 function MeasuredChart(props: LoopChartProps & { width: number }) {
   const { service, range, zone, format, days, load, width } = props;
   const t = useWords("charts");
   const hintId = useId();
   const layout = useMemo(
-    () => chartLayout(width, service === "changeover" ? 2 : 1),
-    [width, service],
+    () => chartLayout(width, energyRows({ days, service })),
+    [width, days, service],
   );
   const units = useMemo(() => chartUnits(format), [format]);
   const [nominalStepS, setStep] = useState<number | null>(null);
@@ -79,11 +87,16 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
   const loaded = useChartSeries({ range, view, pixels, units, load });
   const { overview, shown } = loaded;
   if (overview && overview.nominalStepS !== nominalStepS) setStep(overview.nominalStepS);
+  const [coldest = null, warmest = null] = loaded.temperatureExtent ?? [];
   const temperature = useMemo(
-    () => temperatureAxis(overview?.temperatureExtent ?? null),
-    [overview],
+    () => temperatureAxis(coldest === null || warmest === null ? null : [coldest, warmest]),
+    [coldest, warmest],
   );
-  const flow = useMemo(() => flowAxis(overview?.flowExtent ?? null), [overview]);
+  const [leastFlow = null, mostFlow = null] = loaded.flowExtent ?? [];
+  const flow = useMemo(
+    () => flowAxis(leastFlow === null || mostFlow === null ? null : [leastFlow, mostFlow]),
+    [leastFlow, mostFlow],
+  );
   const picture = useMemo(
     () => shown && plotPicture({ series: shown, view, layout, temperature, flow, service }),
     [shown, view, layout, temperature, flow, service],
@@ -101,7 +114,7 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
         view,
         zone,
         layout,
-        days,
+        days: days ?? noDays,
         registers,
         format,
         weekName: (week) => t("week", { week }),
@@ -119,9 +132,10 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
       quality: t("quality"),
       temperatureUnit: units.temperature.unit,
       flowUnit: units.flow.unit,
-      energyUnits: registers.map((register) =>
-        register === "heating" ? units.heatingEnergy.unit : units.coolingEnergy.unit,
-      ),
+      energyUnits: registers.map((register) => {
+        const { unit } = register === "heating" ? units.heatingEnergy : units.coolingEnergy;
+        return registers.length === 1 ? unit : `${t(`register.${register}`)} ${unit}`;
+      }),
     }),
     [t, units, registers],
   );

@@ -18,6 +18,9 @@ export interface LoadedSeries {
   readonly overview: ChartSeries | null;
   /** The finest that covers the view. */
   readonly shown: ChartSeries | null;
+  /** Over everything fetched so far, so that an axis only ever grows. */
+  readonly temperatureExtent: readonly [number, number] | null;
+  readonly flowExtent: readonly [number, number] | null;
   readonly failed: boolean;
   readonly retry: () => void;
 }
@@ -104,7 +107,23 @@ export function useChartSeries({ range, view, pixels, units, load }: Wish): Load
     setFailed(false);
     setAttempt((count) => count + 1);
   }, []);
-  return { overview, shown, failed, retry };
+  return {
+    overview,
+    shown,
+    temperatureExtent: widest(series.map((one) => one.temperatureExtent)),
+    flowExtent: widest(series.map((one) => one.flowExtent)),
+    failed,
+    retry,
+  };
+}
+
+function widest(
+  extents: readonly (readonly [number, number] | null)[],
+): readonly [number, number] | null {
+  return extents.reduce((all, one) => {
+    if (all === null || one === null) return all ?? one;
+    return [Math.min(all[0], one[0]), Math.max(all[1], one[1])];
+  }, null);
 }
 
 function covers({ range }: ChartSeries, view: Interval): boolean {

@@ -96,13 +96,11 @@ function Picture(props: ChartCardProps) {
       range={range}
       zone={site.zone}
       format={format}
-      days={summary.basis.blockedBy ? noDays : summary.days}
+      days={summary.basis.blockedBy ? null : summary.days}
       load={load}
     />
   );
 }
-
-const noDays: LoopFigures["summary"]["days"] = [];
 
 /** What the picture shows, in one sentence, for those who do not see it. */
 function useChartSummary({ summary, loop, format, rangeName }: LoopFigures): string {

@@ -1,8 +1,8 @@
-import type { ReactNode } from "react";
+import { useState, type ReactNode } from "react";
 import { View } from "react-native";
 
 import { useWords } from "@features/i18n";
-import { Button, Row, SelectField, Strong, Text, useTheme } from "@features/ui";
+import { Button, Row, SelectField, Strong, Text, TextLink, useTheme } from "@features/ui";
 
 import type { LoopFigures, LoopView } from "./loop-context";
 import { loopsPaths } from "./loops-paths";
@@ -86,9 +86,14 @@ function Pipe({ point, loop, format }: LoopView) {
   );
 }
 
+/** More than these hide what stands below them. */
+const fewRuns = 8;
+
 /** The longest stretches that do not count, in order of time. */
 function LeftOut({ summary, format }: LoopFigures) {
   const t = useWords("loops");
+  const [all, setAll] = useState(false);
+  const shown = all ? summary.leftOut : summary.leftOut.slice(0, fewRuns);
   const more = summary.leftOutCount - summary.leftOut.length;
   return (
     <View>
@@ -101,7 +106,7 @@ function LeftOut({ summary, format }: LoopFigures) {
         </Line>
       ) : (
         <View role="list" aria-label={t("leftOut.title")}>
-          {summary.leftOut.map((run) => {
+          {shown.map((run) => {
             const from = Date.parse(run.from);
             const to = Date.parse(run.to);
             const sameDay = format.date(from) === format.date(to);
@@ -129,7 +134,15 @@ function LeftOut({ summary, format }: LoopFigures) {
           })}
         </View>
       )}
-      {more > 0 ? (
+      {shown.length < summary.leftOut.length ? (
+        <Line>
+          <TextLink
+            variant="small"
+            label={t("leftOut.all", { count: summary.leftOut.length })}
+            onPress={() => setAll(true)}
+          />
+        </Line>
+      ) : more > 0 ? (
         <Line>
           <Text variant="small" tone="ink2">
             {t("leftOut.more", { count: more })}

@@ -4,17 +4,14 @@ import { useState, type ReactNode } from "react";
 import { View } from "react-native";
 
 import type { Site } from "@shared/contracts/places";
-import { ApiError, NoAnswer } from "@features/api";
+import { FailedAnswer } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Button,
   Chip,
   dayInZone,
-  DeniedState,
   EmptyState,
-  ErrorState,
   LoadingBlocks,
-  OfflineState,
   Screen,
   SelectField,
   Text,
@@ -35,7 +32,7 @@ export function TodayScreen() {
     return (
       <Screen title={t("title")}>
         {sites.error ? (
-          <Failed error={sites.error} onRetry={() => void sites.refetch()} />
+          <FailedAnswer error={sites.error} onRetry={() => void sites.refetch()} />
         ) : (
           <LoadingBlocks blocks={blocks} />
         )}
@@ -106,7 +103,7 @@ function SiteToday({ site, sites }: { site: Site; sites: readonly Site[] }) {
     >
       {today.data === undefined ? (
         today.error ? (
-          <Failed error={today.error} onRetry={() => void today.refetch()} />
+          <FailedAnswer error={today.error} onRetry={() => void today.refetch()} />
         ) : (
           <LoadingBlocks blocks={blocks} />
         )
@@ -147,14 +144,5 @@ function Subtitle(props: { line: string | null; invented: boolean; children: Rea
       ) : null}
       {props.children}
     </View>
-  );
-}
-
-function Failed({ error, onRetry }: { error: Error; onRetry: () => void }) {
-  const [sinceMs] = useState(() => Date.now());
-  if (error instanceof NoAnswer) return <OfflineState sinceMs={sinceMs} onRetry={onRetry} />;
-  if (error instanceof ApiError && error.status === 403) return <DeniedState />;
-  return (
-    <ErrorState problem={error instanceof ApiError ? error.problem : null} onRetry={onRetry} />
   );
 }

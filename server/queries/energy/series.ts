@@ -150,7 +150,11 @@ function present(
             ]
           : [columns.supplyC, columns.returnC],
       ),
-      flowM3PerHour: extent([columns.flowM3PerHour]),
+      flowM3PerHour: extent(
+        envelope
+          ? [columns.flowM3PerHour, envelope.flowGreatestM3PerHour]
+          : [columns.flowM3PerHour],
+      ),
     },
   };
 }

@@ -1,0 +1,297 @@
+import { fireEvent, screen, waitFor, within } from "@testing-library/react";
+
+import type { PointSummary, SeriesAnswer } from "@shared/contracts/energy";
+import {
+  loopOf,
+  openWith,
+  pointOf,
+  sent,
+  serverAnswers,
+  serverIsSilent,
+  serverRefuses,
+  show,
+  siteOf,
+} from "@features/places/test-kit";
+
+import { LoopScreen } from "./loop-screen";
+
+// The drawing part is behind one door, which a test of the page keeps shut.
+jest.mock("@features/charts/plot-door", () => ({
+  usePlotDoor: () => ({ Plot: null, failed: false, retry: () => undefined }),
+}));
+// jsdom has no layout; a chart waits for its width.
+jest.mock("@features/ui/theme/use-measured-width", () => ({
+  useMeasuredWidth: () => [806, () => undefined],
+}));
+
+const week = "from=2026-05-11&to=2026-05-18";
+const from = "2026-05-10T23:00:00.000Z";
+const to = "2026-05-17T23:00:00.000Z";
+
+const register = (energyKwh: number, deltaT: number | null) => ({
+  energyKwh,
+  volumeM3: energyKwh / 5.68,
+  runningS: energyKwh > 0 ? 590_000 : 0,
+  flowWeightedDeltaTK: deltaT,
+  energyWeightedDeltaTK: deltaT && deltaT + 0.2,
+  timeMeanDeltaTK: deltaT && deltaT - 0.6,
+});
+
+function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
+  return {
+    zone: "Europe/London",
+    from,
+    to,
+    basis: {
+      engineVersion: 1,
+      pressure: { absoluteMPa: 1.6, assumed: true },
+      meterSide: "return",
+      blockedBy: null,
+      recalculating: false,
+    },
+    totals: {
+      heating: register(0, null),
+      cooling: register(14_940, 4.87),
+      volumeM3: 2630,
+      suppressedKwh: 0,
+      suppressedS: 0,
+      coveredS: 596_220,
+      expectedS: 604_800,
+      coverage: 0.9858,
+      rows: { measured: 9937, excluded: 37, noReading: 0, expected: 10_080 },
+      apportioned: false,
+    },
+    days: Array.from({ length: 7 }, (_, i) => ({
+      date: `2026-05-${11 + i}`,
+      heatingKwh: 0,
+      coolingKwh: 2000 + i,
+      volumeM3: 370,
+      coveredS: 86_400,
+      lengthS: 86_400,
+    })),
+    busiest: {
+      from: "2026-05-14T14:30:00.000Z",
+      to: "2026-05-14T15:00:00.000Z",
+      supplyC: 6.59,
+      returnC: 12.65,
+      flowM3PerHour: 35.1,
+      deltaTK: 6.06,
+      powerKw: 247.8,
+      register: "cooling",
+    },
+    busiestDay: { date: "2026-05-14", energyKwh: 2763 },
+    nightBase: { fromHour: 0, toHour: 5, powerKw: 23, register: "cooling", coverage: 1 },
+    leftOut: [
+      {
+        kind: "excluded",
+        from: "2026-05-14T21:03:00.000Z",
+        to: "2026-05-14T21:41:00.000Z",
+        rows: 37,
+        reason: "weakSignal",
+      },
+    ],
+    leftOutCount: 1,
+    firstReadingAt: "2025-05-01T00:00:00.000Z",
+    lastReadingAt: "2026-05-17T22:59:00.000Z",
+    ...more,
+  };
+}
+
+const series: SeriesAnswer = {
+  zone: "Europe/London",
+  fromMs: Date.parse(from),
+  toMs: Date.parse(to),
+  nominalStepS: 60,
+  rows: 9974,
+  averagedOverS: 1800,
+  t0Ms: Date.parse(from),
+  tMs: null,
+  supplyC: Array.from({ length: 336 }, () => 6.5),
+  returnC: Array.from({ length: 336 }, () => 12),
+  flowM3PerHour: Array.from({ length: 336 }, () => 20),
+  powerKw: Array.from({ length: 336 }, () => -127.6),
+  envelope: null,
+  quality: [{ fromMs: Date.parse(from), toMs: Date.parse(to), kind: "measured" }],
+  yExtent: { temperatureC: [6, 12], flowM3PerHour: [20, 20] },
+};
+
+const summaryCall = `GET /points/9/summary?${week}`;
+const seriesCall = `GET /points/9/series?from=${encodeURIComponent(from)}&to=${encodeURIComponent(to)}&pixels=704`;
+
+function marks(today: string, until: string) {
+  return `GET /points/9/days?from=${today}&to=${until}`;
+}
+
+beforeEach(() => {
+  jest.spyOn(Date, "now").mockReturnValue(Date.parse("2026-05-19T09:00:00Z"));
+  openWith({ loopId: "7" });
+  serverAnswers("GET /loops/7", loopOf({ tag: "CHW-1B", name: "Ropewalk House chilled water" }));
+  serverAnswers("GET /loops/7/points", { items: [pointOf()] });
+  serverAnswers("GET /sites/1", siteOf());
+  serverAnswers(marks("2026-05-18", "2026-05-25"), {
+    zone: "Europe/London",
+    days: [],
+    firstReadingAt: "2025-05-01T00:00:00.000Z",
+    lastReadingAt: "2026-05-17T22:59:00.000Z",
+  });
+  serverAnswers(summaryCall, summaryOf());
+  serverAnswers(seriesCall, series);
+});
+afterEach(() => jest.restoreAllMocks());
+
+it("opens on the last week with readings and says how much of it they cover", async () => {
+  show(<LoopScreen />);
+  expect(
+    await screen.findByRole("button", { name: /^Cooling energy, week 20: 14,940 kilowatt hours/ }),
+  ).toBeVisible();
+  expect(screen.getByText("Readings cover 165.6 of 168 h")).toBeVisible();
+  expect(screen.getByText("Thu 14 May, 15:30")).toBeVisible();
+  expect(screen.getByRole("button", { name: /^Night base, 00:00 to 05:00: 23.0/ })).toBeVisible();
+  expect(screen.getByText(/Weak signal/)).toBeVisible();
+  // No ± is worked out yet, so none may show.
+  expect(screen.queryByText(/±/)).toBeNull();
+});
+
+it("shows what a figure was worked out from, the three means together", async () => {
+  show(<LoopScreen />);
+  fireEvent.click(await screen.findByRole("button", { name: /^Cooling energy/ }));
+  const panel = await screen.findByRole("dialog", { name: "How this was worked out" });
+  expect(within(panel).getByText(/1.600 MPa absolute, assumed/)).toBeVisible();
+  expect(within(panel).getByText(/at the return/)).toBeVisible();
+  for (const mean of ["4.87", "5.07", "4.27"])
+    expect(within(panel).getByText(new RegExp(mean))).toBeVisible();
+});
+
+it("never nets a changeover loop's registers", async () => {
+  serverAnswers("GET /loops/7", loopOf({ service: "changeover" }));
+  const totals = {
+    ...summaryOf().totals,
+    heating: register(1646.25, 5),
+    cooling: register(1569.19, 5),
+  };
+  serverAnswers(summaryCall, summaryOf({ totals }));
+  show(<LoopScreen />);
+  expect(await screen.findByRole("button", { name: /^Heating energy.*1,646/ })).toBeVisible();
+  expect(screen.getByRole("button", { name: /^Cooling energy.*1,569/ })).toBeVisible();
+  expect(screen.queryByText(/77/)).toBeNull();
+});
+
+it("shows energy a cut-off held back, with its time", async () => {
+  const totals = { ...summaryOf().totals, suppressedKwh: 8.369, suppressedS: 15_300 };
+  serverAnswers(summaryCall, summaryOf({ totals }));
+  show(<LoopScreen />);
+  expect(await screen.findByText(/^8.37 kWh over 4 h 15 min held back/)).toBeVisible();
+});
+
+it("gives glycol's reason instead of an energy, and keeps the chart", async () => {
+  const { basis, totals } = summaryOf();
+  serverAnswers(
+    summaryCall,
+    summaryOf({
+      basis: { ...basis, blockedBy: "glycol" },
+      totals: { ...totals, cooling: register(0, null) },
+      busiest: null,
+      busiestDay: null,
+      nightBase: null,
+    }),
+  );
+  show(<LoopScreen />);
+  expect((await screen.findAllByText("No energy for glycol yet")).length).toBeGreaterThan(0);
+  expect(screen.queryByText(/^0 kWh/)).toBeNull();
+  expect(screen.getByRole("img", { name: /no energy/ })).toBeVisible();
+});
+
+it("moves the chart's cursor by keys and says what stands there", async () => {
+  show(<LoopScreen />);
+  const chart = await screen.findByRole("group", { name: /^Supply, return and flow, CHW-1B/ });
+  expect(
+    screen.getByRole("img", { name: /cooling 14,940\skWh. Busiest at Thu 14 May, 15:30/ }),
+  ).toBeInTheDocument();
+  await screen.findByText(/shown as 30 min means/);
+  fireEvent.keyDown(chart, { key: "Home" });
+  expect(await screen.findByText(/^Mon 11 May, 00:00: supply 6.50 °C/)).toBeInTheDocument();
+  fireEvent.keyDown(chart, { key: "ArrowRight" });
+  expect(await screen.findByText(/^Mon 11 May, 00:30:/)).toBeInTheDocument();
+  fireEvent.keyDown(chart, { key: "PageDown" });
+  expect(await screen.findByText(/^Tue 12 May, 00:30:/)).toBeInTheDocument();
+  fireEvent.keyDown(chart, { key: "+" });
+  fireEvent.click(await screen.findByRole("button", { name: "Show all" }));
+  await waitFor(() => expect(screen.queryByRole("button", { name: "Show all" })).toBeNull());
+});
+
+it("takes the range before from the arrow and fetches its figures", async () => {
+  const before = "from=2026-05-04&to=2026-05-11";
+  serverAnswers(`GET /points/9/summary?${before}`, summaryOf());
+  show(<LoopScreen />);
+  await screen.findByText("Week 20");
+  fireEvent.click(screen.getByRole("button", { name: "Earlier" }));
+  expect(await screen.findByText("Week 19")).toBeVisible();
+  await waitFor(() =>
+    expect(sent.map(({ call }) => call)).toContain(`GET /points/9/summary?${before}`),
+  );
+});
+
+it("shows the table's days with their sum", async () => {
+  openWith({ loopId: "7", week: "2026-05-11", show: "table" });
+  const day = (value: number) => Array.from({ length: 7 }, () => value);
+  serverAnswers(`GET /points/9/energy?${week}&step=day`, {
+    zone: "Europe/London",
+    from,
+    to,
+    basis: summaryOf().basis,
+    totals: summaryOf().totals,
+    columns: {
+      startMs: Array.from({ length: 7 }, (_, i) => Date.parse(from) + i * 86_400_000),
+      lengthS: day(86_400),
+      coveredS: [86_400, 83_100, ...day(86_400).slice(2)],
+      heatingKwh: day(0),
+      coolingKwh: day(2134.3),
+      volumeM3: day(375),
+      meanSupplyC: day(6.4),
+      meanReturnC: day(11.3),
+      flowWeightedDeltaTK: day(4.9),
+      suppressedKwh: day(0),
+      minPowerKw: day(-240),
+      maxPowerKw: day(0),
+    },
+  });
+  show(<LoopScreen />);
+  const table = await screen.findByRole("table");
+  const rows = within(table).getAllByRole("row");
+  expect(rows).toHaveLength(9);
+  expect(rows[2]).toHaveTextContent(/^Tue 12 May.*2,134.*55 min$/);
+  expect(rows[8]).toHaveTextContent(/^Total.*14,940/);
+});
+
+it("says what to do where a loop has no point, and where a point has no readings", async () => {
+  serverAnswers("GET /loops/7/points", { items: [] });
+  const { unmount } = show(<LoopScreen />);
+  expect(await screen.findByRole("heading", { name: "No metering point yet" })).toBeVisible();
+  unmount();
+
+  serverAnswers("GET /loops/7/points", { items: [pointOf()] });
+  serverAnswers(marks("2026-05-18", "2026-05-25"), {
+    zone: "Europe/London",
+    days: [],
+    firstReadingAt: null,
+    lastReadingAt: null,
+  });
+  serverAnswers(
+    "GET /points/9/summary?from=2026-05-18&to=2026-05-25",
+    summaryOf({ firstReadingAt: null, lastReadingAt: null }),
+  );
+  show(<LoopScreen />);
+  expect(await screen.findByRole("heading", { name: "No readings yet" })).toBeVisible();
+  for (const link of screen.getAllByRole("link", { name: "Import a log" }))
+    expect(link).toHaveAttribute("href", "/logs/new?point=9");
+});
+
+it("tells a loop that is gone from a server that is silent", async () => {
+  serverRefuses("GET /loops/7", 404, "not-found");
+  const { unmount } = show(<LoopScreen />);
+  expect(await screen.findByRole("link", { name: /Sites/ })).toBeVisible();
+  unmount();
+  serverIsSilent("GET /loops/7");
+  show(<LoopScreen />);
+  expect(await screen.findByText(/[Oo]ffline/)).toBeVisible();
+});
