@@ -86,7 +86,14 @@ function ConfirmButton({ detail, actions }: WizardFooterProps) {
   const { checks } = detail;
   const stops = checks?.undecided.length ?? 0;
   const rows = checks?.files.reduce((sum, file) => sum + file.rowsKept, 0) ?? 0;
-  const why = !checks ? t("checks.working") : stops > 0 ? t("checks.settleWhy") : undefined;
+  const twice = detail.files.some((file) => file.sameAs !== null);
+  const why = !checks
+    ? t("checks.working")
+    : stops > 0
+      ? t("checks.settleWhy")
+      : twice
+        ? t("checks.storedAlready")
+        : undefined;
   return (
     <View style={{ flexGrow: phone ? 1 : 0 }}>
       <Button

@@ -111,8 +111,11 @@ export function presentImportDetail(
   const place = placeOf(row, facts);
   const { bore } = more;
   const { pressureMPa, assumed } = absolutePressureMPa(place.gaugePressureMPa);
+  const summary = presentImport(row, facts, actor);
   return {
-    ...presentImport(row, facts, actor),
+    ...summary,
+    // Bytes that are stored already must not count twice: confirming would be refused.
+    can: { ...summary.can, confirm: summary.can.confirm && more.twins.length === 0 },
     files: more.files.map((file) => presentFile(file, more.twins)),
     repair: row.repair,
     checks: row.checks,
