@@ -14,8 +14,9 @@ async function recalculate(
   transaction: Transaction,
 ): Promise<void> {
   const holdings = await pointHoldings(database, scope.organisationId, of, [id], transaction);
-  for (const { pointId, hasReadings } of holdings) {
-    if (!hasReadings) continue;
+  // Also a point without readings yet: an import of it may be storing some at this moment, worked
+  // out with what is being changed here. The job waits for it; with nothing stored it does nothing.
+  for (const { pointId } of holdings) {
     const { organisationId } = scope;
     await enqueueRecalculation(database, transaction, { organisationId, pointId });
   }

@@ -22,6 +22,8 @@ export interface FileStore {
   has(sha256: string): Promise<boolean>;
   /** A path on this machine for readers that seek, such as import workers. */
   localPath(sha256: string): Promise<string>;
+  /** Removes what uploads that broke off a day ago or earlier left behind. */
+  removeAbandoned(nowMs: number): Promise<void>;
 }
 
 /** The store has lost a file that a row still names: restore it from the backup of that day. */

@@ -66,7 +66,6 @@ export class FolderFileStore implements FileStore {
     return this.placeOf(sha256);
   }
 
-  /** Removes what uploads that broke off a day ago or earlier left behind. */
   async removeAbandoned(nowMs: number): Promise<void> {
     const names = await readdir(this.incoming).catch((error: NodeJS.ErrnoException) => {
       if (error.code === "ENOENT") return [];

@@ -11,6 +11,7 @@ import { inTransaction } from "@server/database/transaction";
 import type { Context } from "@server/http/context";
 import { Conflict, Denied, Invalid, NotFound } from "@server/http/errors";
 import { cancelJobs, enqueueJob } from "@server/jobs/job-queue";
+import { Job } from "@server/models/job";
 import { LogFile } from "@server/models/log-file";
 import { LogImport } from "@server/models/log-import";
 import { MeteringPoint } from "@server/models/metering-point";
@@ -327,6 +328,9 @@ export async function startUndo(context: Importing, importId: string): Promise<L
       );
     const { organisationId, pointId } = row;
     const job = { organisationId, pointId, importId: row.id, kind: "undo" as const };
+    const state = ["queued", "running"];
+    const where = { organisationId, importId: row.id, kind: job.kind, state };
+    if ((await Job.count({ where, transaction })) > 0) return;
     await enqueueJob(context.database, transaction, job);
     await audit(context, "import-undone", row, {}, transaction);
   });

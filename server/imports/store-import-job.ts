@@ -4,7 +4,7 @@ import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import { enqueueJob } from "@server/jobs/job-queue";
 import { inTransaction } from "@server/database/transaction";
 import type { JobContext } from "@server/jobs/job-context";
-import { JobRefused } from "@server/jobs/job-outcome";
+import { JobDropped, JobRefused } from "@server/jobs/job-outcome";
 import { LogFile } from "@server/models/log-file";
 import type { LogImport } from "@server/models/log-import";
 import { loadEnergySettings } from "@server/readings/energy-settings";
@@ -32,9 +32,12 @@ export async function storeImportJob(context: JobContext): Promise<void> {
 
   await inTransaction(database, async (transaction) => {
     await lockPoint(database, transaction, job.pointId);
+    const outcome = await storeAll(context, transaction, row, loaded, rows.total);
+    // Locked only now, so that somebody who cancels meanwhile need not wait; then this rolls back.
     const fresh = await importOfJob(context, transaction);
-    const outcome = await storeAll(context, transaction, fresh, loaded, rows.total);
+    if (fresh.state !== "importing") throw new JobDropped();
     if (outcome === "metAnother") await checkAgain(context, transaction, fresh);
+    else await record(context, transaction, fresh, loaded);
     await context.finish(transaction);
   });
 }
@@ -85,12 +88,22 @@ async function storeAll(
       },
     });
   }
-  const [first, last] = instantsOf(files);
+  return "stored";
+}
+
+/** Says on the import what was stored. */
+async function record(
+  context: JobContext,
+  transaction: Transaction,
+  row: LogImport,
+  files: readonly CheckedFile[],
+): Promise<void> {
+  const rowsStored = files.reduce((sum, { columns }) => sum + (columns?.instantMs.length ?? 0), 0);
+  const [firstInstant, lastInstant] = instantsOf(files);
   move(row, "stored");
-  row.set({ rowsStored: stored, firstInstant: first, lastInstant: last, failure: null });
+  row.set({ rowsStored, firstInstant, lastInstant, failure: null });
   row.importedAt = await databaseNow(context, transaction);
   await row.save({ transaction });
-  return "stored";
 }
 
 /**

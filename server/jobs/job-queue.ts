@@ -161,6 +161,14 @@ export async function releaseDeadOwners(database: Database): Promise<number> {
   return dead.length;
 }
 
+/** Ended jobs are of no use after a month; what they did is in imports and the audit trail. */
+export async function forgetOldJobs(database: Database): Promise<void> {
+  await database.query(
+    `DELETE FROM job WHERE state IN ('done', 'cancelled', 'failed')
+        AND finished_at < UTC_TIMESTAMP(3) - INTERVAL 30 DAY LIMIT 5000`,
+  );
+}
+
 /** Renews the leases that are still ours; answers the ids of those that are not any more. */
 export async function renewLeases(
   database: Database,

@@ -9,6 +9,7 @@ import { newOwner } from "./job-owner";
 import {
   claimJob,
   failJob,
+  forgetOldJobs,
   MOST_FAILURES,
   MOST_INTERRUPTIONS,
   releaseDeadOwners,
@@ -105,6 +106,7 @@ export class JobRunner implements JobSignals {
     await this.guarded(async () => {
       const dead = await releaseDeadOwners(this.database);
       if (dead > 0) this.log.info({ dead }, "took over the jobs of servers that died");
+      await forgetOldJobs(this.database);
     });
     while (!this.stopping) {
       const claimed = await this.guarded(() => this.claimSome());

@@ -1,12 +1,13 @@
 import { setTimeout as sleep } from "node:timers/promises";
 import { QueryTypes } from "sequelize";
 import type { Database } from "@server/database/connect";
-import type { FileStore } from "@server/files/file-store";
+import { FileMissing, type FileStore } from "@server/files/file-store";
 import { checkImportJob } from "@server/imports/check-import-job";
 import { recogniseFileJob } from "@server/imports/recognise-file-job";
 import { storeImportJob } from "@server/imports/store-import-job";
 import { undoImportJob } from "@server/imports/undo-import-job";
 import type { JobKind, JobProgress } from "@server/models/job";
+import type { Failure } from "@server/models/log-import";
 import { finisher, type JobContext } from "./job-context";
 import {
   isDatabaseAway,
@@ -71,8 +72,15 @@ export async function runJob(job: ClaimedJob, around: JobSurroundings): Promise<
   }
 }
 
+const missingFile: Failure = {
+  code: "file-missing",
+  detail: "The server no longer holds a file of this import.",
+  remedy: "Upload the file again, or have the server's files restored from their backup.",
+};
+
 function outcomeOf(error: unknown): JobOutcome {
   if (error instanceof JobRefused) return { kind: "refused", failure: error.failure };
+  if (error instanceof FileMissing) return { kind: "refused", failure: missingFile };
   if (error instanceof JobDropped) return { kind: "dropped" };
   if (error instanceof JobHandedBack) return { kind: "handedBack" };
   if (error instanceof Error) {

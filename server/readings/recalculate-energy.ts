@@ -113,19 +113,25 @@ async function deleteDays(database: Database, transaction: Transaction, pointId:
 }
 
 /**
- * Waits until no other job works on the point and keeps it so until the transaction ends. Must be
- * its first statement: what is read afterwards then sees what the other job has committed.
+ * Waits until no other job works on the point's readings and keeps it so until the transaction ends.
+ * Must be its first statement: what is read afterwards then sees what the other job has committed.
+ *
+ * The lock is the row of the point's readings, made here if need be, and not the point's own row:
+ * whatever refers to a point, such as opening or cancelling an import, would wait for that one.
  */
 export async function lockPoint(
   database: Database,
   transaction: Transaction,
   pointId: string,
 ): Promise<void> {
-  await database.query("SELECT id FROM metering_point WHERE id = :pointId FOR UPDATE", {
-    replacements: { pointId },
-    type: QueryTypes.SELECT,
-    transaction,
-  });
+  await database.query(
+    `INSERT INTO point_readings
+            (point_id, organisation_id, revision, zone, row_count, engine_version, calculated_at)
+     SELECT id, organisation_id, 0, '', 0, 0, UTC_TIMESTAMP(3)
+       FROM metering_point WHERE id = :pointId
+     ON DUPLICATE KEY UPDATE revision = point_readings.revision`,
+    { replacements: { pointId }, transaction },
+  );
 }
 
 const none = new Float64Array(0);

@@ -96,6 +96,7 @@ export const importRoutes = [
   defineEndpoint(contracts.addImportFile, {
     policy: may("importLogs"),
     status: 201,
+    limit: { perAddress: 300, minutes: 10 },
     // The handler takes the file in itself, once it knows that the import is there.
     receive: (_request, _response, next) => next(),
     async handle(context, { params }) {

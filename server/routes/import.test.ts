@@ -1,8 +1,14 @@
+import { rmSync } from "node:fs";
+import path from "node:path";
 import type { ImportDetail } from "@shared/contracts/imports";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import { QueryTypes } from "sequelize";
 import { AuditEvent } from "@server/models/audit-event";
+import type { JobOutcome } from "@server/jobs/job-outcome";
+import { claimJob } from "@server/jobs/job-queue";
+import { runJob } from "@server/jobs/run-job";
 import { loadDays } from "@server/readings/day-rows";
+import { lockPoint } from "@server/readings/recalculate-energy";
 import { signedIn, type Agent } from "@server/testing/factories";
 import { pointToMeter } from "@server/testing/place-factories";
 import { runJobs } from "@server/testing/run-jobs";
@@ -179,6 +185,8 @@ test("the same file again is recognised by its bytes and refused until the first
   const refused = await agent.post(`/imports/${id}/confirm`).expect(409);
   expect(refused.body.code).toBe("same-file-imported");
   await agent.post(`/imports/${first.id}/undo`).expect(202);
+  // Pressed twice it is undone once.
+  await agent.post(`/imports/${first.id}/undo`).expect(202);
   await runJobs(app);
   expect(await coolingKwh(point.id)).toBe(0);
   await agent.post(`/imports/${id}/confirm`).expect(202);
@@ -260,6 +268,34 @@ test("a cancelled import stores nothing and keeps its files for another try", as
   await runJobs(app);
   expect(await read(agent, id)).toMatchObject({ state: "cancelled", fileNames: ["log.csv"] });
   expect(await blockCount(point.id)).toBe(0);
+});
+
+test("an import can be cancelled while its job stores, without waiting for it", async () => {
+  const { agent, point, id } = await started(steadyLog(13));
+  await agent.post(`/imports/${id}/confirm`).expect(202);
+  const job = await claimJob(app.database, "busy", app.clock.date());
+  if (job === null) throw new Error("the confirmed import has no job");
+  let outcome: Promise<JobOutcome> | undefined;
+  // Another job of the point holds it, so that this one stands still in the midst of storing.
+  await app.database.transaction(async (transaction) => {
+    await lockPoint(app.database, transaction, point.id);
+    const { files } = app.services;
+    const around = { database: app.database, files, owner: "busy" };
+    outcome = runJob(job, { ...around, wanted: () => "go on", onProgress: () => undefined });
+    await agent.post(`/imports/${id}/cancel`).expect(200);
+  });
+  expect(await outcome).toEqual({ kind: "dropped" });
+  expect((await read(agent, id)).state).toBe("cancelled");
+  expect(await blockCount(point.id)).toBe(0);
+});
+
+test("an import whose file the server has lost fails with what to do, and at once", async () => {
+  const { agent, id } = await started(steadyLog(13));
+  await agent.post(`/imports/${id}/confirm`).expect(202);
+  rmSync(path.join(app.config.dataDir, "files"), { recursive: true });
+  await runJobs(app);
+  const failed = await read(agent, id);
+  expect(failed).toMatchObject({ state: "failed", failure: { code: "file-missing" } });
 });
 
 test("what is no text log is refused with the reason, and one that cannot be read says why", async () => {

@@ -19,6 +19,10 @@ export interface BackgroundService {
 /** Run in this order. The demo's tasks ask `config.demo`, which is never on in production. */
 export const startUpTasks: readonly StartUpTask[] = [
   {
+    name: "abandoned uploads",
+    run: ({ files, clock }) => files.removeAbandoned(clock.now()),
+  },
+  {
     name: "demo people",
     async run(services) {
       if (services.config.demo) await ensureDemoPeople(services);
