@@ -45,6 +45,7 @@ export class CalendarCell {
   /** The date as written in the last cell that had one in figures; its fields are still in place. */
   private readonly prefix = new Uint8Array(MAX_PREFIX_BYTES);
   private prefixLength = 0;
+  private prefixOffset = 0;
   private cachedFirst = -1;
   private cachedSecond = -1;
   private cachedThird = -1;
@@ -66,6 +67,7 @@ export class CalendarCell {
     this.skipSpaces();
     while (this.end > this.at && bytes[this.end - 1] === 32) this.end--;
     const start = this.at;
+    this.prefixOffset = start - from;
     if (start >= this.end) return false;
     if (this.prefixLength > 0 && this.hasSameDate(start)) {
       this.hasDate = true;
@@ -118,6 +120,11 @@ export class CalendarCell {
     const length = this.at - start;
     this.prefixLength = length <= MAX_PREFIX_BYTES ? length : 0;
     for (let i = 0; i < this.prefixLength; i++) this.prefix[i] = this.bytes[start + i] as number;
+  }
+
+  /** Bytes of the date at the very start of the cell last read; 0 for dates with names or spaces before them. */
+  get datePrefixLength(): number {
+    return this.prefixOffset === 0 ? this.prefixLength : 0;
   }
 
   /** Bits of {@link OrderBit} under which the date exists; 0 without a date or for one like 31/31/2025. */

@@ -1,8 +1,10 @@
 import { CellStatus, NumberCell } from "./number-cell";
 import { MAX_PROBLEMS, newTally, tally } from "./raw-rows";
 import type { ChannelMeaning, RawRows, RemedyCode, RowProblem, RowProblemCode } from "./raw-rows";
-import type { ColumnRecipe, DecimalMark, FileRecipe } from "./recipe";
+import { PlainRows } from "./plain-rows";
+import type { ColumnRecipe, FileRecipe } from "./recipe";
 import type { RowExample } from "./repair-step";
+import { RowStore, type StoredChannel } from "./row-store";
 import { MAX_CELLS, RowTokeniser } from "./row-tokeniser";
 import { createUtf8Stream } from "./text-encoding";
 import { createTimeReader } from "./time-reader";
@@ -31,24 +33,6 @@ export function createLogReader(recipe: FileRecipe, context: LogReaderContext = 
 /** Lines after the last reading up to this many are a footer; more are rows that cannot be read. */
 const MAX_FOOTER_LINES = 20;
 const MAX_CELL_CHARACTERS = 60;
-const MIN_CAPACITY = 16;
-const GROWTH = 1.6;
-
-class Channel {
-  decimals = 0;
-  values: Float64Array;
-  readonly index: number;
-  readonly mark: DecimalMark;
-
-  constructor(
-    readonly column: ColumnRecipe,
-    capacity: number,
-  ) {
-    this.index = column.index;
-    this.mark = column.decimalMark;
-    this.values = new Float64Array(capacity);
-  }
-}
 
 interface PendingLine {
   readonly line: number;
@@ -59,13 +43,9 @@ class Reader implements LogReader {
   private readonly tokeniser: RowTokeniser;
   private readonly stream;
   private readonly time;
-  private readonly channels: readonly Channel[];
   private readonly number = new NumberCell();
-  private rowCount = 0;
-  private capacity: number;
-  private lines: Uint32Array;
-  private times: Float64Array;
-  private utcFlags: Uint8Array;
+  private readonly store: RowStore;
+  private readonly plainRows: PlainRows | null;
   private readonly firstDataLine: number;
   private readonly columnCount: number;
   private readonly problems: RowProblem[] = [];
@@ -81,21 +61,17 @@ class Reader implements LogReader {
     private readonly recipe: FileRecipe,
     expectedRows: number,
   ) {
-    const capacity = Math.max(MIN_CAPACITY, expectedRows);
-    this.capacity = capacity;
     this.firstDataLine = recipe.dialect.firstDataLine;
     this.time = createTimeReader(recipe);
-    this.channels = recipe.columns.filter(isChannel).map((column) => new Channel(column, capacity));
+    this.store = new RowStore(recipe.columns.filter(isChannel), expectedRows);
     this.columnCount = recipe.columns.reduce((most, column) => Math.max(most, column.index + 1), 0);
-    this.lines = new Uint32Array(capacity);
-    this.times = new Float64Array(capacity);
-    this.utcFlags = new Uint8Array(capacity);
-    this.tokeniser = new RowTokeniser(recipe.dialect, (row) => this.readRow(row));
+    this.plainRows = PlainRows.suits(recipe) ? new PlainRows(recipe, this.store) : null;
+    this.tokeniser = new RowTokeniser(recipe.dialect, (row) => this.readRow(row), this.plainRows);
     this.stream = createUtf8Stream(recipe.dialect.encoding);
   }
 
   get rowsRead(): number {
-    return this.rowCount;
+    return this.store.rowCount;
   }
 
   push(bytes: Uint8Array): void {
@@ -105,7 +81,7 @@ class Reader implements LogReader {
   end(): RawRows {
     this.tokeniser.push(this.stream.finish());
     this.tokeniser.end();
-    const { rowCount } = this;
+    const { rowCount, lines, timeMs, isUtc, channels } = this.store;
     const footer = newTally();
     // A last line that begins like a time is a row cut off or damaged, not a footer.
     const last = this.pending;
@@ -116,10 +92,10 @@ class Reader implements LogReader {
     }
     return {
       rowCount,
-      line: this.lines.subarray(0, rowCount),
-      timeMs: this.times.subarray(0, rowCount),
-      isUtc: this.utcFlags.subarray(0, rowCount),
-      channels: this.channels.map(({ column, decimals, values }) => ({
+      line: lines.subarray(0, rowCount),
+      timeMs: timeMs.subarray(0, rowCount),
+      isUtc: isUtc.subarray(0, rowCount),
+      channels: channels.map(({ column, decimals, values }) => ({
         meaning: column.meaning as ChannelMeaning,
         columnIndex: column.index,
         header: column.header,
@@ -150,16 +126,18 @@ class Reader implements LogReader {
       this.addRowProblem("longRow", row);
       return;
     }
-    const at = this.rowCount++;
-    if (at === this.capacity) this.grow();
-    this.utcFlags[at] = time.isUtc ? 1 : 0;
-    this.lines[at] = row.line;
-    this.times[at] = time.ms;
-    const { number, channels } = this;
+    const { store, number } = this;
+    const at = store.rowCount++;
+    if (at === store.capacity) store.grow();
+    store.isUtc[at] = time.isUtc ? 1 : 0;
+    store.lines[at] = row.line;
+    store.timeMs[at] = time.ms;
+    if (this.plainRows !== null) time.teach(row, this.plainRows);
+    const { channels } = store;
     const { cellCount, buffer, starts, ends } = row;
     let isShort = false;
     for (let k = 0; k < channels.length; k++) {
-      const channel = channels[k] as Channel;
+      const channel = channels[k] as StoredChannel;
       const { index } = channel;
       channel.values[at] = NaN;
       if (index >= cellCount) {
@@ -180,17 +158,6 @@ class Reader implements LogReader {
     if (isShort) this.addRowProblem("shortRow", row);
   }
 
-  /** Makes room for more rows than were expected. */
-  private grow(): void {
-    this.capacity = Math.ceil(this.capacity * GROWTH);
-    this.lines = enlarge(this.lines, new Uint32Array(this.capacity));
-    this.times = enlarge(this.times, new Float64Array(this.capacity));
-    this.utcFlags = enlarge(this.utcFlags, new Uint8Array(this.capacity));
-    for (const channel of this.channels) {
-      channel.values = enlarge(channel.values, new Float64Array(this.capacity));
-    }
-  }
-
   private hasExtraCells(row: RowTokeniser): boolean {
     if (row.cellCount > MAX_CELLS) return true;
     for (let i = this.columnCount; i < row.cellCount; i++) {
@@ -199,7 +166,7 @@ class Reader implements LogReader {
     return false;
   }
 
-  private addCell(row: RowTokeniser, channel: Channel, status: number): void {
+  private addCell(row: RowTokeniser, channel: StoredChannel, status: number): void {
     const { line } = row;
     const text = this.number.text.slice(0, MAX_CELL_CHARACTERS);
     const show = (): RowExample => example(line, channel.column.header, text);
@@ -230,6 +197,7 @@ class Reader implements LogReader {
       return;
     }
     // A broken time may still be part of the footer; only what follows can tell.
+    if (this.plainRows !== null) this.plainRows.isAllowed = false;
     this.pending.push({
       line: row.line,
       cell: row
@@ -246,6 +214,7 @@ class Reader implements LogReader {
       this.addProblem("unreadableTime", line, column, cell, "checkTimeFormat");
     }
     this.pending = [];
+    if (this.plainRows !== null) this.plainRows.isAllowed = true;
   }
 
   private addProblem(
@@ -270,11 +239,6 @@ class Reader implements LogReader {
 
 function isChannel({ meaning }: ColumnRecipe): boolean {
   return meaning === "flow" || meaning === "supply" || meaning === "return" || meaning === "signal";
-}
-
-function enlarge<T extends Uint8Array | Uint32Array | Float64Array>(from: T, to: T): T {
-  to.set(from);
-  return to;
 }
 
 function startsWithDigit(cell: string): boolean {

@@ -1,4 +1,5 @@
 import type { Dialect } from "./recipe";
+import type { RowsAhead } from "./plain-rows";
 import { concatBytes } from "./text-encoding";
 
 /** Cells after this many are counted, not kept: no logger row is that wide. */
@@ -56,6 +57,8 @@ export class RowTokeniser {
   constructor(
     dialect: Pick<Dialect, "separator" | "quote">,
     private readonly onRow: (row: RowTokeniser) => void,
+    /** Takes plain rows before they are split into cells; only used where there are no quotes. */
+    private readonly ahead: RowsAhead | null = null,
   ) {
     this.separator = dialect.separator.charCodeAt(0);
     this.quote = dialect.quote === null ? -1 : dialect.quote.charCodeAt(0);
@@ -153,13 +156,21 @@ export class RowTokeniser {
    * so the whole loop is spelled out here.
    */
   private readPlainRows(from: number, final: boolean): number {
-    const { buffer, classes, starts, ends, onRow } = this;
+    const { buffer, classes, starts, ends, onRow, ahead } = this;
     const length = buffer.length;
     const maxCells = MAX_CELLS;
     let rowStart = from;
     let start = from;
     let cell = 0;
     for (let at = from; at < length; at++) {
+      if (ahead !== null && at === rowStart) {
+        const next = ahead.readFrom(buffer, at, this.nextLine);
+        this.nextLine += ahead.linesRead;
+        rowStart = next;
+        start = next;
+        if (next >= length) break;
+        at = next;
+      }
       const kind = classes[buffer[at] as number] as number;
       if (kind === 0) continue;
       if (cell < maxCells) {

@@ -1,5 +1,6 @@
 import { CalendarCell } from "./calendar-cell";
 import { CellStatus, NumberCell } from "./number-cell";
+import type { PlainRows } from "./plain-rows";
 import type { ColumnRecipe, DateOrder, FileRecipe } from "./recipe";
 import type { RowTokeniser } from "./row-tokeniser";
 
@@ -21,6 +22,8 @@ export interface TimeReader {
   readonly columnIndex: number;
   /** False if the row's time cannot be read. */
   read(row: RowTokeniser): boolean;
+  /** Tells the fast way how the date of the row just read is written. */
+  teach(row: RowTokeniser, plainRows: PlainRows): void;
 }
 
 /** @throws Error for a recipe without time column or with an unanswered date order: ask {@link openQuestions} first. */
@@ -66,6 +69,10 @@ class CalendarTimeReader implements TimeReader {
     this.ms = dayMs + cell.timeOfDayMs - (offset === null ? 0 : offset * MS_PER_MINUTE);
     return true;
   }
+
+  teach(row: RowTokeniser, plainRows: PlainRows): void {
+    teachDate(this.cell, row.starts[this.columnIndex] as number, row, plainRows, this.order);
+  }
 }
 
 class SplitTimeReader implements TimeReader {
@@ -99,6 +106,10 @@ class SplitTimeReader implements TimeReader {
     this.isUtc = offset !== null;
     this.ms = dayMs + time.timeOfDayMs - (offset === null ? 0 : offset * MS_PER_MINUTE);
     return true;
+  }
+
+  teach(row: RowTokeniser, plainRows: PlainRows): void {
+    teachDate(this.date, row.starts[this.dateIndex] as number, row, plainRows, this.order);
   }
 }
 
@@ -134,4 +145,21 @@ class NumericTimeReader implements TimeReader {
     else this.ms = Math.round((number.value - SPREADSHEET_EPOCH_DAY) * MS_PER_DAY);
     return this.ms >= 0 && this.ms < LAST_MS;
   }
+
+  /** Epochs and serial days have no date to look out for. */
+  teach(): void {
+    return;
+  }
+}
+
+function teachDate(
+  cell: CalendarCell,
+  from: number,
+  row: RowTokeniser,
+  plainRows: PlainRows,
+  order: DateOrder,
+): void {
+  const length = cell.datePrefixLength;
+  const dayMs = cell.dayMs(order);
+  if (dayMs !== null) plainRows.learn(row.buffer, from, length, dayMs);
 }
