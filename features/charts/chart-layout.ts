@@ -27,17 +27,18 @@ export function chartLayout(width: number, registers: 0 | 1 | 2): ChartLayout {
   if (width < NARROW) {
     return {
       width,
-      height: 252,
+      height: 270,
       left: 30,
       right: Math.max(31, width - 6),
-      temperature: { top: 12, bottom: 149 },
-      flow: { top: 165, bottom: 208 },
-      quality: { top: 218, bottom: 224 },
-      dayBaseline: 246,
+      // Room above for what the cursor reads: it must not hide a peak.
+      temperature: { top: 30, bottom: 167 },
+      flow: { top: 183, bottom: 226 },
+      quality: { top: 236, bottom: 242 },
+      dayBaseline: 264,
       energyBaselines: [],
       ruleY: null,
       named: false,
-      cursorTop: 4,
+      cursorTop: 22,
       leastColumn: 3.5,
     };
   }

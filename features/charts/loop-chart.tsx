@@ -290,7 +290,7 @@ function ChartNote(props: {
         : t("note.means", { step, over: format.duration(series.averagedOverS) });
   return (
     <Row gap={4} justify="space-between" wrap style={{ paddingLeft: props.left, marginTop: 8 }}>
-      {props.foot}
+      <View style={{ flexShrink: 1, minWidth: 0 }}>{props.foot}</View>
       {props.whole ? null : (
         <TextLink variant="small" label={t("showAll")} onPress={props.onShowAll} />
       )}

@@ -137,8 +137,26 @@ function Rows(props: ChartCardProps) {
   ] as const;
   const download = () =>
     saveFile(downloadAddress(point.id, range, step === "row" ? "readings" : step));
+  const chips = (
+    <Row gap={2} wrap>
+      <Text variant="table" tone="ink2">
+        {t("table.rowsOf")}
+      </Text>
+      {steps.map(([key, label]) => (
+        <TapChip
+          key={key}
+          label={label}
+          picked={step === key}
+          size={phone ? "default" : "dense"}
+          onPress={() => onStep(key)}
+        />
+      ))}
+    </Row>
+  );
   return (
     <View style={{ gap: 12 }}>
+      {/* Cards are many and tall: what they are stands above them on a phone. */}
+      {phone ? chips : null}
       <View style={{ marginHorizontal: phone ? 0 : -16 }}>
         {step === "row" ? (
           <ReadingsTable {...props} />
@@ -147,20 +165,7 @@ function Rows(props: ChartCardProps) {
         )}
       </View>
       <Row justify="space-between" wrap gap={3}>
-        <Row gap={2} wrap>
-          <Text variant="table" tone="ink2">
-            {t("table.rowsOf")}
-          </Text>
-          {steps.map(([key, label]) => (
-            <TapChip
-              key={key}
-              label={label}
-              picked={step === key}
-              size={phone ? "default" : "dense"}
-              onPress={() => onStep(key)}
-            />
-          ))}
-        </Row>
+        {phone ? null : chips}
         <TextLink label={t("table.download")} variant="bodyWide" onPress={download} />
       </Row>
     </View>

@@ -2,7 +2,7 @@ import { Link } from "expo-router";
 import { Pressable, View } from "react-native";
 
 import { useWords } from "@features/i18n";
-import { Card, Figure, Icon, Inline, Text, useTheme } from "@features/ui";
+import { Card, Figure, Icon, Inline, Row, Text, useTheme } from "@features/ui";
 
 import type { LoopFigures } from "./loop-context";
 import { loopsPaths } from "./loops-paths";
@@ -17,6 +17,7 @@ export function DayList({ summary, loop, point, format }: LoopFigures) {
   const t = useWords("loops");
   const { colour } = useTheme();
   const { days } = summary;
+  const registers = registersOf(loop.service);
   if (days.length < 2 || days.length > mostDays || summary.basis.blockedBy) return null;
   return (
     <View style={{ gap: 6 }}>
@@ -53,14 +54,22 @@ export function DayList({ summary, loop, point, format }: LoopFigures) {
                         {String(Number(day.date.slice(8)))}
                       </Text>
                       <View style={{ flexDirection: "row", alignItems: "center", gap: 12 }}>
-                        {registersOf(loop.service).map((register) => (
-                          <Figure
-                            key={register}
-                            {...shownFigure(format, kwh[register], energyQuantity[register])}
-                            size="s"
-                            said={t(`table.${register}`)}
-                          />
-                        ))}
+                        <View style={{ alignItems: "flex-end" }}>
+                          {registers.map((register) => (
+                            <Row key={register} gap={2}>
+                              {registers.length > 1 ? (
+                                <Text variant="unit" tone="ink3" hidden>
+                                  {t(`table.${register}`)}
+                                </Text>
+                              ) : null}
+                              <Figure
+                                {...shownFigure(format, kwh[register], energyQuantity[register])}
+                                size="s"
+                                said={t(`table.${register}`)}
+                              />
+                            </Row>
+                          ))}
+                        </View>
                         <Icon name="right" size={18} />
                       </View>
                     </View>

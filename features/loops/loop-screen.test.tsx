@@ -136,6 +136,7 @@ beforeEach(() => {
   });
   serverAnswers(summaryCall, summaryOf());
   serverAnswers(seriesCall, series);
+  serverAnswers("GET /imports?pointId=9&state=imported&limit=50", { items: [], nextCursor: null });
 });
 afterEach(() => jest.restoreAllMocks());
 

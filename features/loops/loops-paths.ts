@@ -9,5 +9,6 @@ export const loopsPaths = {
   point: (siteId: string, loopId: string, pointId: string) =>
     `/sites/${siteId}/loops/${loopId}/points/${pointId}`,
   newPoint: (siteId: string, loopId: string) => `/sites/${siteId}/loops/${loopId}/points/new`,
+  import: (importId: string) => `/logs/${importId}`,
   importLog: (pointId: string) => `/logs/new?point=${pointId}`,
 } as const;

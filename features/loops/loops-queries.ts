@@ -7,6 +7,7 @@ import {
   getReadings,
   getSeries,
 } from "@shared/contracts/energy";
+import { listImports } from "@shared/contracts/imports";
 import { getLoop, getSite, listPoints } from "@shared/contracts/places";
 import type { Interval } from "@shared/domain/time/interval";
 import { call } from "@features/api";
@@ -73,6 +74,14 @@ export const loopsQueries = {
         }),
       initialPageParam: null as string | null,
       getNextPageParam: (page) => page.nextCursor,
+    }),
+  /** Files whose rows are stored for the point. */
+  imports: (pointId: string) =>
+    queryOptions({
+      ...fresh,
+      queryKey: ["loops", "imports", pointId],
+      queryFn: ({ signal }) =>
+        call(listImports, { query: { pointId, state: "imported", limit: 50 }, signal }),
     }),
   series: (pointId: string, window: Interval, pixels: number) =>
     queryOptions({

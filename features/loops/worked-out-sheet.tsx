@@ -1,9 +1,12 @@
+import { useQuery } from "@tanstack/react-query";
 import { View } from "react-native";
 
 import { useWords } from "@features/i18n";
 import { DefinitionRows, Sheet, Text, TextLink, useTheme, type Definition } from "@features/ui";
 
 import type { LoopFigures } from "./loop-context";
+import { loopsPaths } from "./loops-paths";
+import { loopsQueries } from "./loops-queries";
 import { leading } from "./supporting-figures";
 
 /** How the figures of this page were worked out: only what is true of these figures. */
@@ -28,8 +31,8 @@ export function WorkedOutSheet(props: LoopFigures & { open: boolean; onClose: ()
     {
       label: t("workings.covered"),
       value: t("workings.coveredValue", {
-        time: format.duration(totals.coveredS),
-        of: format.duration(totals.expectedS),
+        hours: format.number(totals.coveredS / 3600, 1),
+        of: format.number(totals.expectedS / 3600, 1),
       }),
     },
     {
@@ -70,8 +73,39 @@ export function WorkedOutSheet(props: LoopFigures & { open: boolean; onClose: ()
         <Text variant="small" tone="ink2">
           {t("workings.noUncertainty")}
         </Text>
-        <TextLink label={t("workings.files")} href={`/logs?point=${point.id}`} variant="small" />
+        {open ? <Files point={point} summary={summary} /> : null}
       </View>
     </Sheet>
+  );
+}
+
+/** Files whose rows lie in the range; the first and last row of each say so. */
+function Files({ point, summary }: Pick<LoopFigures, "point" | "summary">) {
+  const t = useWords("loops");
+  const answer = useQuery(loopsQueries.imports(point.id));
+  const from = Date.parse(summary.from);
+  const to = Date.parse(summary.to);
+  const files = (answer.data?.items ?? []).filter(
+    ({ firstInstant, lastInstant }) =>
+      firstInstant !== null &&
+      lastInstant !== null &&
+      Date.parse(firstInstant) < to &&
+      Date.parse(lastInstant) >= from,
+  );
+  if (files.length === 0) return null;
+  return (
+    <View style={{ gap: 8 }}>
+      <Text variant="subhead" level={3}>
+        {t("workings.files")}
+      </Text>
+      {files.map(({ id, fileNames }) => (
+        <TextLink
+          key={id}
+          label={fileNames.join(", ")}
+          href={loopsPaths.import(id)}
+          variant="small"
+        />
+      ))}
+    </View>
   );
 }
