@@ -176,7 +176,7 @@ export async function giveRecipe(
         file.unreadable ? "This file cannot be read at all." : "This file is still being read.",
         file.unreadable ? "Take it out and export the log anew." : "Wait until it is recognised.",
       );
-    const problems = recipeProblems(recipe, recognition.columnCount);
+    const problems = recipeProblems(recipe, recognition);
     if (problems.length > 0) throw new Invalid(problems);
     await stopChecks(context.database, transaction, row);
     await file.update({ recipe, questions: questionsLeftBy(recipe, recognition) }, { transaction });

@@ -1,5 +1,6 @@
-import type { ColumnRecipe, FileRecipe } from "@shared/domain/log-files/recipe";
+import type { ColumnRecipe, DateOrder, FileRecipe } from "@shared/domain/log-files/recipe";
 import type { FieldError } from "@server/http/errors";
+import type { RecognitionFindings } from "@server/models/log-file";
 
 const flowUnits = ["m3/h", "L/s", "L/min", "US gpm"];
 const temperatureUnits = ["degC", "degF", "K"];
@@ -11,8 +12,9 @@ function unitsOf(meaning: ColumnRecipe["meaning"]): readonly string[] {
   return meaning === "signal" ? ["%"] : [];
 }
 
-/** What makes a recipe unusable whatever the file holds: columns that contradict each other. */
-export function recipeProblems(recipe: FileRecipe, columnCount: number): FieldError[] {
+/** What makes a recipe unusable: columns that contradict each other, dates that the file disproves. */
+export function recipeProblems(recipe: FileRecipe, recognition: RecognitionFindings): FieldError[] {
+  const { columnCount } = recognition;
   const problems: FieldError[] = [];
   const add = (path: string, code: string, message: string) =>
     problems.push({ pointer: `/body/${path}`, code, message });
@@ -33,6 +35,8 @@ export function recipeProblems(recipe: FileRecipe, columnCount: number): FieldEr
     add("columns", "two-times", "Give either one time column or a date and a time of day.");
   if (!seen.has("flow") && !seen.has("supply") && !seen.has("return"))
     add("columns", "no-quantity", "Name at least a flow or a temperature column.");
+  const disproof = dateOrderDisproof(recipe, recognition);
+  if (disproof) add("time/format/order", "disproved", disproof);
   const { firstDataLine, headerLine, unitsLine } = recipe.dialect;
   for (const [name, line] of [
     ["headerLine", headerLine] as const,
@@ -41,4 +45,25 @@ export function recipeProblems(recipe: FileRecipe, columnCount: number): FieldEr
     if (line !== null && line >= firstDataLine)
       add(`dialect/${name}`, "after-data", "This line must stand before the first row of data.");
   return problems;
+}
+
+const MONTH_PLACE: Readonly<Record<DateOrder, number>> = {
+  dayMonthYear: 1,
+  monthDayYear: 0,
+  yearMonthDay: 1,
+};
+
+/** The row of recognition's proof that cannot be read in the order given; null where it can. */
+function dateOrderDisproof(recipe: FileRecipe, { proofs }: RecognitionFindings): string | null {
+  const { format } = recipe.time;
+  if (format.kind !== "calendar" || format.order === null) return null;
+  const proof = proofs.find(
+    ({ about, certainty }) => about === "dateOrder" && certainty === "proved",
+  );
+  const parts = proof?.cell?.match(/\d+/g) ?? [];
+  const month = Number(parts[MONTH_PLACE[format.order]]);
+  const yearElsewhere = parts[0]?.length === 4 && format.order !== "yearMonthDay";
+  const readable = month <= 12 && !yearElsewhere;
+  if (!proof || parts.length < 3 || readable) return null;
+  return `Line ${proof.line} says "${proof.cell}", which cannot be read in this order.`;
 }
