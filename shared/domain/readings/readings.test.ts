@@ -2,7 +2,6 @@ import { alignTemperatures } from "./align-temperatures";
 import { coverage, gaps } from "./coverage";
 import { nominalStepMs } from "./nominal-step";
 import { RowQuality, type ReadingColumns } from "./reading-columns";
-import { reduceForScreen } from "./reduce-for-screen";
 
 const T0 = Date.UTC(2026, 4, 14);
 const minute = 60_000;
@@ -83,35 +82,5 @@ describe("temperatures at the flow's instants", () => {
     expect([...alignTemperatures(at(5), missing)]).toEqual([21]);
     const excluded = series(at(0, 5, 10, 15), [20, 99, 98, 23], [0, 1, 1, 0]);
     expect([...alignTemperatures(at(2, 5), excluded)]).toEqual([NaN, NaN]);
-  });
-});
-
-describe("what a screen can show", () => {
-  const count = 10_000;
-  const instants = Float64Array.from({ length: count }, (_, i) => T0 + i * minute);
-  const values = Float64Array.from({ length: count }, (_, i) => Math.sin(i / 50));
-  const window = { startMs: T0, endMs: T0 + count * minute, pixels: 300, gapMs: 3 * minute };
-
-  test("keeps every extreme within two points a pixel, in order of time", () => {
-    const spiked = values.slice();
-    spiked[5_003] = 40;
-    const shown = reduceForScreen(instants, spiked, window);
-    expect(shown.values.length).toBeLessThanOrEqual(600);
-    expect(Math.max(...shown.values)).toBe(40);
-    expect(Math.min(...shown.values)).toBe(Math.min(...values));
-    expect(shown.instantMs.every((ms, i) => i === 0 || ms > shown.instantMs[i - 1]!)).toBe(true);
-  });
-
-  test("keeps holes, whether rows are absent or hold nothing", () => {
-    const holed = values.slice().fill(NaN, 2_000, 2_500);
-    expect(reduceForScreen(instants, holed, window).values.filter(Number.isNaN)).toHaveLength(1);
-    const keep = instants.filter((_, i) => i < 2_000 || i >= 2_500);
-    const kept = values.filter((_, i) => i < 2_000 || i >= 2_500);
-    expect(reduceForScreen(keep, kept, window).values.filter(Number.isNaN)).toHaveLength(1);
-  });
-
-  test("sends few rows as they are, with the pen lifted over a gap", () => {
-    const shown = reduceForScreen(at(0, 1, 10, 11), Float64Array.of(1, 2, 3, 4), window);
-    expect([...shown.values]).toEqual([1, 2, NaN, 3, 4]);
   });
 });
