@@ -4,12 +4,14 @@ import type { Database } from "./connect";
 const deadlock = 1213;
 const attempts = 4;
 
+function errnoOf(error: unknown): unknown {
+  return typeof error === "object" && error !== null && "errno" in error ? error.errno : undefined;
+}
+
+/** As Sequelize wraps it, or as the connector throws it where rows go in or out in bulk. */
 function isDeadlock(error: unknown): boolean {
-  if (!(error instanceof BaseError) || !("parent" in error)) return false;
-  const parent = error.parent;
-  return typeof parent === "object" && parent !== null && "errno" in parent
-    ? parent.errno === deadlock
-    : false;
+  const cause = error instanceof BaseError && "parent" in error ? error.parent : error;
+  return errnoOf(cause) === deadlock;
 }
 
 /**
