@@ -1,7 +1,7 @@
 import { CellStatus, NumberCell } from "./number-cell";
 import type { DecimalMark } from "./recipe";
 import type { RowTokeniser } from "./row-tokeniser";
-import { isNumericSentinel, looksLikeEndStop } from "./sentinels";
+import { isNumericSentinel, looksLikeEndStop, LOWEST_USUAL } from "./sentinels";
 
 /** A cell that shows something, and where it stands. */
 export interface Place {
@@ -20,6 +20,13 @@ export const MarkKind = {
 } as const;
 
 const MAX_TOKENS = 50;
+const MAX_EXACT_DIGITS = 15;
+const POWERS_OF_TEN = Float64Array.from({ length: MAX_EXACT_DIGITS + 1 }, (_, i) =>
+  Number(`1e${i}`),
+);
+const COMMA = 44;
+const MINUS = 45;
+const POINT = 46;
 
 /**
  * Gathers what the cells of one column prove about its decimal mark, and the range of its values.
@@ -45,6 +52,7 @@ export class ColumnEvidence {
   add(row: RowTokeniser, index: number): void {
     const from = row.starts[index] as number;
     const to = row.ends[index] as number;
+    if (this.addUsual(row.buffer, from, to)) return;
     const kind = markKind(row.buffer, from, to);
     if (kind === MarkKind.noNumber) {
       this.addOther(row, index, from, to);
@@ -74,6 +82,31 @@ export class ColumnEvidence {
     this.sure.add(value);
     if (kind === MarkKind.provesPoint) this.pointProof ??= place(row, index);
     else if (kind === MarkKind.provesComma) this.commaProof ??= place(row, index);
+  }
+
+  /** The usual cell, a bare decimal in the mark already proved, in one pass; false for any other. */
+  private addUsual(bytes: Uint8Array, from: number, to: number): boolean {
+    const mark = this.pointProof !== null ? POINT : this.commaProof !== null ? COMMA : -1;
+    let at = from;
+    const negative = at < to && bytes[at] === MINUS;
+    if (negative) at++;
+    const start = at;
+    let mantissa = 0;
+    let markAt = -1;
+    for (; at < to; at++) {
+      const byte = bytes[at] as number;
+      const digit = byte - 48;
+      if (digit >= 0 && digit <= 9) mantissa = mantissa * 10 + digit;
+      else if (byte === mark && markAt < 0) markAt = at;
+      else return false;
+    }
+    const digits = at - start - (markAt < 0 ? 0 : 1);
+    if (digits === 0 || digits > MAX_EXACT_DIGITS) return false;
+    const value = markAt < 0 ? mantissa : mantissa / (POWERS_OF_TEN[to - markAt - 1] as number);
+    if (negative && -value <= LOWEST_USUAL) return false;
+    this.numbers++;
+    this.sure.add(negative ? -value : value);
+    return true;
   }
 
   private addOther(row: RowTokeniser, index: number, from: number, to: number): void {
@@ -142,9 +175,6 @@ class Extremes {
       : this.max;
   }
 }
-
-const COMMA = 44;
-const POINT = 46;
 
 /** Classifies the marks of a number in UTF-8 bytes without reading its value; see {@link MarkKind}. */
 export function markKind(bytes: Uint8Array, from: number, to: number): number {

@@ -1,7 +1,7 @@
 import Papa from "papaparse";
 import { readLogFixture } from "@test/fixtures/log-files/read-fixture";
 import { Random } from "@test/generators/random";
-import { writeLogFile } from "@test/generators/log-file";
+import { writeLogFile, writeTwoFileLog } from "@test/generators/log-file";
 import { createLogReader } from "./log-reader";
 import { PlainRows } from "./plain-rows";
 import type { RawRows } from "./raw-rows";
@@ -200,6 +200,35 @@ describe("the fast way for plain rows", () => {
       expect(read(plain, 1 + ((seed * 6007) % 3000))).toEqual(read(careful, 1 << 20));
     }
     expect(fast).toBeGreaterThan(40);
+  });
+
+  it("needs no chunk after it was pushed: callers read the next into the same buffer", () => {
+    const log = writeTwoFileLog({ seed: 9, days: 1 });
+    const found = recogniseLogFile(log.flowFile.bytes);
+    if ("code" in found) throw new Error(found.code);
+    const { format } = found.recipe.time;
+    const settled: FileRecipe = {
+      ...found.recipe,
+      time: {
+        clock: null,
+        format: format.kind === "calendar" ? { ...format, order: "dayMonthYear" } : format,
+      },
+    };
+    for (const recipe of [
+      settled,
+      { ...settled, dialect: { ...settled.dialect, quote: '"' as const } },
+    ]) {
+      const whole = createLogReader(recipe);
+      whole.push(log.flowFile.bytes);
+      const reused = createLogReader(recipe);
+      const chunk = Buffer.alloc(1000);
+      for (let i = 0; i < log.flowFile.bytes.length; i += 1000) {
+        const piece = log.flowFile.bytes.subarray(i, i + 1000);
+        chunk.set(piece);
+        reused.push(piece.length === 1000 ? chunk : chunk.subarray(0, piece.length));
+      }
+      expect(reused.end()).toEqual(whole.end());
+    }
   });
 
   it("leaves rows that are not plain to the careful way, between rows that are", () => {

@@ -3,6 +3,8 @@ import type { RowStore } from "./row-store";
 
 /** Reads rows ahead of the tokeniser, straight from the bytes. */
 export interface RowsAhead {
+  /** Comes before every stretch of bytes that {@link readFrom} is asked about. */
+  begin(bytes: Uint8Array): void;
   /**
    * Reads whole rows from `from` on, as many as it can; returns where the next row starts. `line` is the
    * number of the row at `from`; each row read is one line.
@@ -46,7 +48,6 @@ export class PlainRows implements RowsAhead {
   private prefixLength = 0;
   private dayMs = 0;
   private misses = 0;
-  private endOf: Uint8Array | null = null;
   private lastLineFeed = -1;
 
   constructor(
@@ -91,6 +92,10 @@ export class PlainRows implements RowsAhead {
     this.dayMs = dayMs;
   }
 
+  begin(bytes: Uint8Array): void {
+    this.lastLineFeed = bytes.lastIndexOf(10);
+  }
+
   readFrom(bytes: Uint8Array, from: number, line: number): number {
     this.linesRead = 0;
     if (
@@ -100,10 +105,6 @@ export class PlainRows implements RowsAhead {
       line < this.firstDataLine
     )
       return from;
-    if (bytes !== this.endOf) {
-      this.endOf = bytes;
-      this.lastLineFeed = bytes.lastIndexOf(10);
-    }
     let at = from;
     // Every look at a byte stops at a line feed, so rows before the last one never look past the end.
     while (at <= this.lastLineFeed) {

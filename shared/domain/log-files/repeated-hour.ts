@@ -72,7 +72,8 @@ function stepCost(fromMs: number, toMs: number, stepMs: number): number {
 
 /**
  * True where a row of the hour lies further from its neighbour than half the repeated stretch: such a gap,
- * or such a step back, may hide the change of pass.
+ * or such a step back, may hide the change of pass. Also where the file ends within the hour after one
+ * pass and nothing but unbroken rows before it could tell which.
  */
 function isUnclear(
   previousMs: number,
@@ -82,14 +83,21 @@ function isUnclear(
   stepMs: number,
 ): boolean {
   let before = previousMs;
-  let shiftBefore = 0;
+  let shift = 0;
+  let hasGap = Number.isNaN(previousMs);
+  let earlierRows = 0;
+  let laterRows = 0;
   for (let i = 0; i < chosen.length; i++) {
     const at = chosen[i] as number;
-    const shift = (laterMs[i] as number) - (earlierMs[i] as number);
-    const stretch = Math.max(shift, shiftBefore);
-    if (stretch > 0 && Math.abs(at - before - stepMs) >= stretch / 2) return true;
+    const shiftBefore = shift;
+    shift = (laterMs[i] as number) - (earlierMs[i] as number);
+    const away = Math.abs(at - before - stepMs);
+    if (Math.max(shift, shiftBefore) > 0 && away >= Math.max(shift, shiftBefore) / 2) return true;
+    if (away > Math.abs(stepMs) / 2) hasGap = true;
+    if (shift > 0 && at === earlierMs[i]) earlierRows++;
+    else if (shift > 0) laterRows++;
     before = at;
-    shiftBefore = shift;
   }
-  return false;
+  const endsInHour = shift > 0;
+  return endsInHour && hasGap && (earlierRows === 0 || laterRows === 0);
 }

@@ -100,6 +100,11 @@ describe("the hour that clocks show twice", () => {
     expect(stepOf(shuffled, "identicalRepeats")).toBeUndefined();
   });
 
+  it("is called unclear when the file begins and ends within it", () => {
+    const file = ["Time,Flow m³/h", "2025-10-26 02:10,10.5", "2025-10-26 02:20,10.6"].join("\n");
+    expect(stepOf(resolve(file), "repeatedHour")?.countByKind).toEqual({ unclear: 2 });
+  });
+
   it("is called unclear when a gap leaves either pass possible", () => {
     const labels = ["00:40", "00:50", "01:00", "02:30", "02:40", "04:00", "04:10", "04:20"];
     const file = [

@@ -1,6 +1,6 @@
 import type { Dialect } from "./recipe";
 import type { RowsAhead } from "./plain-rows";
-import { concatBytes } from "./text-encoding";
+import { concatBytes, copyBytes } from "./text-encoding";
 
 /** Cells after this many are counted, not kept: no logger row is that wide. */
 export const MAX_CELLS = 512;
@@ -93,7 +93,7 @@ export class RowTokeniser {
       this.discarding = true;
       this.carry = EMPTY;
     } else {
-      this.carry = this.buffer.slice(from);
+      this.carry = copyBytes(this.buffer.subarray(from));
     }
     this.buffer = EMPTY;
   }
@@ -131,7 +131,14 @@ export class RowTokeniser {
 
   /** Reads whole rows from `from` on; returns where the first incomplete row starts. */
   private readRows(from: number, final: boolean): number {
-    if (this.isPlain) return this.readPlainRows(from, final);
+    // A stretch without any quote needs no looking out for them.
+    const isPlain =
+      this.isPlain ||
+      (this.quote >= 0 && this.separator !== SPACE && !this.buffer.includes(this.quote, from));
+    if (isPlain) {
+      this.ahead?.begin(this.buffer);
+      return this.readPlainRows(from, final);
+    }
     const length = this.buffer.length;
     let at = from;
     while (at < length) {
@@ -316,7 +323,7 @@ export class RowTokeniser {
 
   /** Turns the doubled quotes of the row into single ones, in a copy: the bytes are the caller's. */
   private closeUpQuotes(): void {
-    if (!this.ownsBuffer) this.buffer = this.buffer.slice();
+    if (!this.ownsBuffer) this.buffer = copyBytes(this.buffer);
     this.ownsBuffer = true;
     for (let i = 0; i < this.doubled.length; i += 2) {
       let write = this.doubled[i] as number;

@@ -126,7 +126,7 @@ class MarkStripper implements Utf8Stream {
     if (this.started) return chunk;
     const bytes = this.held.length === 0 ? chunk : concatBytes(this.held, chunk);
     if (bytes.length < 3) {
-      this.held = bytes.slice();
+      this.held = copyBytes(bytes);
       return EMPTY;
     }
     this.started = true;
@@ -232,6 +232,11 @@ function writeUtf8(out: Uint8Array, from: number, codePoint: number): number {
     out[at++] = 0x80 | (codePoint & 0x3f);
   }
   return at;
+}
+
+/** A copy of its own: the `slice` of a Node.js Buffer would be a view of bytes the caller may write over. */
+export function copyBytes(bytes: Uint8Array): Uint8Array {
+  return new Uint8Array(bytes);
 }
 
 export function concatBytes(first: Uint8Array, second: Uint8Array): Uint8Array {
