@@ -184,7 +184,15 @@ function Unreadable(props: {
   unreadable: NonNullable<ImportFile["unreadable"]>;
 }) {
   const t = useWords("imports");
-  const known = ["empty", "notText", "noTimes", "noRows", "tooManyColumns"] as const;
+  const known = [
+    "empty",
+    "notText",
+    "noTimes",
+    "noRows",
+    "tooManyColumns",
+    "columnsDoNotMatchHeader",
+    "halfDayUnknown",
+  ] as const;
   const code = known.find((name) => name === props.unreadable.code) ?? "other";
   const seen = props.unreadable.cell?.slice(0, 200);
   return (

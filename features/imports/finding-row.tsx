@@ -2,7 +2,7 @@ import { View } from "react-native";
 import { useFormat, useWords } from "@features/i18n";
 import { Mark, Segments, Spark, Text, useBreakpoint } from "@features/ui";
 import type { ImportChecks, ImportDetail, RepairStepView } from "@shared/contracts/imports";
-import type { ChoiceName, Finding } from "./findings";
+import { isUnclear, type ChoiceName, type Finding } from "./findings";
 import type { ImportActions } from "./imports-queries";
 
 const MARKS = { stop: "wrong", look: "look", note: "note" } as const;
@@ -142,14 +142,17 @@ function useFindingWords(finding: Finding, detail: ImportDetail) {
           count: what.step.count,
           percent: detail.repair.weakSignalBelowPercent,
         }),
-        text: t(`checks.step.${what.step.code}.text`, { kinds: kindsText(what.step) }) + inFile,
+        text:
+          t(`checks.step.${what.step.code}.text`, { kinds: kindsText(what.step) }) +
+          (isUnclear(what.step) ? ` ${t("checks.step.repeatedHour.unclear")}` : "") +
+          inFile,
         examples: exampleText(what.step),
       };
   }
 
   function kindsText(step: RepairStepView): string {
     return Object.entries(step.countByKind)
-      .map(([kind, count]) => `${kind}: ${format.number(count, 0)}`)
+      .map(([kind, count]) => `${kind || t("checks.emptyCell")}: ${format.number(count, 0)}`)
       .join(", ");
   }
 

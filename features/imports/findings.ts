@@ -36,6 +36,10 @@ const WORTH_A_LOOK: readonly RepairStepView["code"][] = [
   "overlapDifferent",
 ];
 
+/** Rows of the repeated hour that nothing in the file places in the first or second pass. */
+export const isUnclear = (step: RepairStepView): boolean =>
+  step.code === "repeatedHour" && (step.countByKind.unclear ?? 0) > 0;
+
 const GAPS_SHOWN = 4;
 const ORDER = { stop: 0, look: 1, note: 2 } as const;
 
@@ -49,7 +53,11 @@ export function findingsOf(checks: ImportChecks, repair: Repair): Finding[] {
         const undecided = choice !== null && repair[choice] === null;
         return {
           key: `${file.fileId} ${step.code}`,
-          weight: undecided ? "stop" : WORTH_A_LOOK.includes(step.code) ? "look" : "note",
+          weight: undecided
+            ? "stop"
+            : WORTH_A_LOOK.includes(step.code) || isUnclear(step)
+              ? "look"
+              : "note",
           fileId: file.fileId,
           what: { kind: "step", step, choice },
         };
