@@ -137,6 +137,9 @@ function Sides({ detail, checks }: { detail: ImportDetail; checks: ImportChecks 
       {checks.energyBlockedBy ? (
         <Text tone="ink2">{t(`checks.energyNone.${checks.energyBlockedBy}`)}</Text>
       ) : null}
+      {(checks.rowsOutsideWater ?? 0) > 0 ? (
+        <Text tone="ink2">{t("checks.outsideWater", { count: checks.rowsOutsideWater })}</Text>
+      ) : null}
       {checks.clean.length > 0 ? (
         <SideRows
           title={t("checks.clean", { count: checks.clean.length })}
