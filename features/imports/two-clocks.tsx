@@ -109,28 +109,23 @@ function ClockTick(props: { x: number; logger: string | null; local: string | nu
     <>
       <Line x1={props.x} x2={props.x} y1={16} y2={24} stroke={colour.ink} strokeWidth={1.6} />
       <Line x1={props.x} x2={props.x} y1={76} y2={84} stroke={colour.ink} strokeWidth={1.6} />
-      {props.logger ? (
-        <SvgText
-          x={props.x + 5}
-          y={17}
-          fontSize={14}
-          fontFamily={font.mono.regular}
-          fill={colour.ink2}
-        >
-          {props.logger}
-        </SvgText>
-      ) : null}
-      {props.local ? (
-        <SvgText
-          x={props.x + 5}
-          y={96}
-          fontSize={14}
-          fontFamily={font.mono.regular}
-          fill={colour.ink2}
-        >
-          {props.local}
-        </SvgText>
-      ) : null}
+      {props.logger ? <TickLabel x={props.x} y={17} text={props.logger} /> : null}
+      {props.local ? <TickLabel x={props.x} y={96} text={props.local} /> : null}
     </>
+  );
+}
+
+function TickLabel(props: { x: number; y: number; text: string }) {
+  const { colour } = useTheme();
+  return (
+    <SvgText
+      x={props.x + 5}
+      y={props.y}
+      fontSize={14}
+      fontFamily={font.mono.regular}
+      fill={colour.ink2}
+    >
+      {props.text}
+    </SvgText>
   );
 }
