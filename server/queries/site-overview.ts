@@ -125,7 +125,9 @@ function overviewOf(
   const register = { chilled: "cooling", hot: "heating", changeover: null }[service];
   const volume = counted && register && Number(counted[`${register as "heating"}M3`]);
   const expectedS = (soFar.endMs - soFar.startMs) / 1000;
-  const hasReadings = readings !== undefined && readings.firstMs !== null;
+  // A glycol loop has readings but no intervals: its coverage is not known here, and not missing.
+  const isJudged =
+    readings !== undefined && readings.firstMs !== null && energyBlockedBy(loop) === null;
   return {
     loop: {
       id,
@@ -146,8 +148,8 @@ function overviewOf(
         ? Number(counted[`${register as "heating"}FlowDt`]) / volume
         : null,
     coverage:
-      hasReadings && expectedS > 0 ? Math.min(1, Number(energy?.coveredS ?? 0) / expectedS) : null,
-    quality: hasReadings
+      isJudged && expectedS > 0 ? Math.min(1, Number(energy?.coveredS ?? 0) / expectedS) : null,
+    quality: isJudged
       ? (strip ?? []).map(({ startMs, endMs, kind }) => ({
           from: new Date(startMs).toISOString(),
           to: new Date(endMs).toISOString(),
