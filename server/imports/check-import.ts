@@ -176,11 +176,11 @@ function energyOf(
   const blockedBy = energyBlock(settings, {
     channels: span ? channelsOf(segments) : null,
     measuredRows: totals?.measuredRows ?? 0,
-    outsideWaterRows: result?.outsideWaterRows ?? 0,
+    outsideFluidRows: result?.outsideFluidRows ?? 0,
   });
   const outside = {
-    rowsOutsideWater: result?.outsideWaterRows ?? 0,
-    outsideWaterExamples: (result?.outsideWater ?? []).map(({ instantMs, channel, problem }) => ({
+    rowsOutsideWater: result?.outsideFluidRows ?? 0,
+    outsideWaterExamples: (result?.outsideFluid ?? []).map(({ instantMs, channel, problem }) => ({
       instant: new Date(instantMs).toISOString(),
       channel,
       valueC: problem.value,

@@ -1,6 +1,6 @@
 import { integrateEnergy } from "@shared/domain/energy/integrate";
 import type { IntervalEnergyColumns } from "@shared/domain/energy/interval-energy";
-import { rowsOutsideWater, type OutsideWater } from "@shared/domain/energy/water-range";
+import { rowsOutsideFluid, type OutsideFluid } from "@shared/domain/energy/fluid-range";
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import type { Interval } from "@shared/domain/time/interval";
 import type { LocalDay } from "@shared/domain/time/local-calendar";
@@ -11,9 +11,9 @@ import { indexFrom, sliceColumns } from "./load-segments";
 export interface CalculatedEnergy {
   readonly intervals: IntervalEnergyColumns;
   readonly days: DayEnergy[];
-  readonly outsideWaterRows: number;
+  readonly outsideFluidRows: number;
   /** The first few of them. */
-  readonly outsideWater: readonly OutsideWater[];
+  readonly outsideFluid: readonly OutsideFluid[];
 }
 
 /**
@@ -32,8 +32,8 @@ export function calculateEnergy(
   if (!options || !first || !last) return null;
   const window: Interval = within ?? { startMs: first.startMs, endMs: last.endMs };
   const intervals = integrateEnergy(segments, { ...options, window });
-  let outsideWaterRows = 0;
-  const outsideWater: OutsideWater[] = [];
+  let outsideFluidRows = 0;
+  const outsideFluid: OutsideFluid[] = [];
   const byDay = new Map<string, number>();
   for (const { columns } of segments) {
     const rows = sliceColumns(
@@ -41,22 +41,22 @@ export function calculateEnergy(
       indexFrom(columns.instantMs, window.startMs),
       indexFrom(columns.instantMs, window.endMs),
     );
-    const found = rowsOutsideWater(rows, options.water);
+    const found = rowsOutsideFluid(rows, options.fluid);
     if (found.count === 0) continue;
-    outsideWaterRows += found.count;
-    outsideWater.push(...found.examples.slice(0, 20 - outsideWater.length));
+    outsideFluidRows += found.count;
+    outsideFluid.push(...found.examples.slice(0, 20 - outsideFluid.length));
     for (const day of days) {
       const from = indexFrom(rows.instantMs, day.startMs);
       const to = indexFrom(rows.instantMs, day.endMs);
       if (from === to) continue;
-      const { count } = rowsOutsideWater(sliceColumns(rows, from, to), options.water, 0);
+      const { count } = rowsOutsideFluid(sliceColumns(rows, from, to), options.fluid, 0);
       if (count > 0) byDay.set(day.date, (byDay.get(day.date) ?? 0) + count);
     }
   }
   return {
     intervals,
     days: sumDays(intervals, days, (day) => byDay.get(day.date) ?? 0),
-    outsideWaterRows,
-    outsideWater,
+    outsideFluidRows,
+    outsideFluid,
   };
 }

@@ -10,7 +10,7 @@ export interface DayEnergy extends LocalDay {
   readonly lengthS: number;
   readonly totals: EnergyTotals;
   /** Measured rows at temperatures that liquid water cannot have; they gave no energy. */
-  readonly outsideWaterRows: number;
+  readonly outsideFluidRows: number;
 }
 
 const registerNames = ["heating", "cooling"] as const;
@@ -76,7 +76,7 @@ function rowOf(organisationId: string, pointId: string, day: DayEnergy): SqlValu
     totals.measuredRows,
     totals.excludedRows,
     totals.noReadingRows,
-    day.outsideWaterRows,
+    day.outsideFluidRows,
     totals.apportioned ? 1 : 0,
     ENGINE_VERSION,
   ];
@@ -86,14 +86,14 @@ function rowOf(organisationId: string, pointId: string, day: DayEnergy): SqlValu
 export function sumDays(
   intervals: IntervalEnergyColumns,
   days: readonly LocalDay[],
-  outsideWaterRowsOf: (day: LocalDay) => number,
+  outsideFluidRowsOf: (day: LocalDay) => number,
 ): DayEnergy[] {
   return days.flatMap((day) => {
     const totals = totalEnergy(intervals, day);
     if (totals.measuredRows + totals.excludedRows + totals.noReadingRows + totals.coveredS === 0)
       return [];
     const lengthS = (day.endMs - day.startMs) / 1000;
-    return [{ ...day, lengthS, totals, outsideWaterRows: outsideWaterRowsOf(day) }];
+    return [{ ...day, lengthS, totals, outsideFluidRows: outsideFluidRowsOf(day) }];
   });
 }
 
@@ -148,7 +148,7 @@ function dayOf(row: SqlRow): DayEnergy {
     startMs,
     endMs: startMs + lengthS * 1000,
     lengthS,
-    outsideWaterRows: number(row, "outside_water_rows"),
+    outsideFluidRows: number(row, "outside_water_rows"),
     totals: {
       coveredS,
       volumeM3: number(row, "volume_m3"),

@@ -80,5 +80,5 @@ export function powerOptionsOf(settings: EnergySettings): PowerOptions | null {
     settings.service
   ];
   const { meterSide, cutOffs } = settings;
-  return { water: settings.fluid.water, meterSide, service, cutOffs };
+  return { fluid: settings.fluid.fluid, meterSide, service, cutOffs };
 }

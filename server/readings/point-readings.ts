@@ -17,7 +17,7 @@ export interface PointReadings {
   readonly nominalStepMs: number | null;
   /** Why there is no energy; null where there is. */
   readonly blockedBy: EnergyBlock | null;
-  readonly outsideWaterRows: number;
+  readonly outsideFluidRows: number;
   readonly engineVersion: number | null;
   /** A change waits or is being worked out, so that energy is not the latest yet. */
   readonly recalculating: boolean;
@@ -30,7 +30,7 @@ interface Stored {
   lastMs: string | null;
   nominalStepMs: number | null;
   blockedBy: EnergyBlock | null;
-  outsideWaterRows: number;
+  outsideFluidRows: number;
   engineVersion: number;
   recalculating: number;
 }
@@ -42,7 +42,7 @@ const nothingYet: PointReadings = {
   lastMs: null,
   nominalStepMs: null,
   blockedBy: null,
-  outsideWaterRows: 0,
+  outsideFluidRows: 0,
   engineVersion: null,
   recalculating: false,
 };
@@ -59,7 +59,7 @@ export async function loadPointReadings(
   const rows = await database.query<Stored & { pointId: string }>(
     `SELECT r.point_id AS pointId, r.revision, r.row_count AS rowCount, r.first_ms AS firstMs,
             r.last_ms AS lastMs, r.nominal_step_ms AS nominalStepMs, r.blocked_by AS blockedBy,
-            r.outside_water_rows AS outsideWaterRows, r.engine_version AS engineVersion,
+            r.outside_water_rows AS outsideFluidRows, r.engine_version AS engineVersion,
             EXISTS (SELECT 1 FROM job j WHERE j.point_id = r.point_id AND j.kind = 'recalculate'
                       AND j.state IN ('queued', 'running')) AS recalculating
        FROM point_readings r
@@ -119,12 +119,12 @@ export async function refreshPointReadings(
       WHERE b.point_id = :pointId ORDER BY f.precedence DESC LIMIT 1`,
     { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
   );
-  const outsideWaterRows = Number(days?.outside ?? 0);
+  const outsideFluidRows = Number(days?.outside ?? 0);
   await database.query(
     `INSERT INTO point_readings (point_id, organisation_id, revision, zone, row_count, first_ms,
             last_ms, nominal_step_ms, blocked_by, outside_water_rows, engine_version, calculated_at)
      VALUES (:pointId, :organisationId, 1, :zone, :rowCount, :firstMs, :lastMs, :step, :blockedBy,
-            :outsideWaterRows, :engineVersion, UTC_TIMESTAMP(3))
+            :outsideFluidRows, :engineVersion, UTC_TIMESTAMP(3))
      ON DUPLICATE KEY UPDATE revision = revision + 1, zone = VALUES(zone),
        row_count = VALUES(row_count), first_ms = VALUES(first_ms), last_ms = VALUES(last_ms),
        nominal_step_ms = VALUES(nominal_step_ms), blocked_by = VALUES(blocked_by),
@@ -142,9 +142,9 @@ export async function refreshPointReadings(
         blockedBy: energyBlock(settings, {
           channels: Number(blocks?.count ?? 0) === 0 ? null : Number(blocks?.channels),
           measuredRows: Number(days?.measured ?? 0),
-          outsideWaterRows,
+          outsideFluidRows,
         }),
-        outsideWaterRows,
+        outsideFluidRows,
         engineVersion: ENGINE_VERSION,
       },
       transaction,
@@ -159,14 +159,14 @@ export function energyBlock(
     /** Sum of {@link ChannelBit}; null where there is no reading at all. */
     readonly channels: number | null;
     readonly measuredRows: number;
-    readonly outsideWaterRows: number;
+    readonly outsideFluidRows: number;
   },
 ): EnergyBlock | null {
   if (!settings.fluid.ok)
-    return settings.fluid.problem.code === "glycolNotComputed" ? "glycol" : "outsideWater";
+    return settings.fluid.problem.code === "concentrationOutOfRange" ? "glycol" : "outsideWater";
   if (found.channels === null) return null;
   if ((found.channels & ChannelBit.flow) === 0) return "noFlow";
   const temperatures = ChannelBit.supply | ChannelBit.return;
   if ((found.channels & temperatures) !== temperatures) return "noTemperature";
-  return found.outsideWaterRows > 0 && found.measuredRows === 0 ? "outsideWater" : null;
+  return found.outsideFluidRows > 0 && found.measuredRows === 0 ? "outsideWater" : null;
 }

@@ -9,7 +9,7 @@ import { resolveSegments, type ReadingSource } from "@shared/domain/readings/res
 const T0 = Date.UTC(2026, 4, 14, 0, 3);
 const NOMINAL = 300_000;
 const options: IntegrationOptions = {
-  water: waterAtPressure(1.6),
+  fluid: waterAtPressure(1.6),
   meterSide: "supply",
   service: "changeover",
   cutOffs: { flowM3PerHour: 1, deltaTK: 0.5 },

@@ -15,7 +15,7 @@ const segments = resolveSegments([
   { precedence: 0, kind: "instantaneous", nominalStepMs: null, columns },
 ]);
 const withoutCutOffs: PowerOptions = {
-  water: waterAtPressure(1.6),
+  fluid: waterAtPressure(1.6),
   meterSide: "supply",
   service: "changeover",
   cutOffs: NO_CUT_OFFS,

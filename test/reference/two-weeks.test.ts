@@ -31,7 +31,7 @@ describe.each([
     { precedence: 0, kind: "meanFromLabel", nominalStepMs: null, columns },
   ]);
   const intervals = integrateEnergy(segments, {
-    water: waterAtPressure(1.6),
+    fluid: waterAtPressure(1.6),
     meterSide: "return",
     service: "cooling",
     cutOffs: NO_CUT_OFFS,

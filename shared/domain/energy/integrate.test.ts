@@ -3,13 +3,13 @@ import { RowQuality, type ReadingSegment, type SeriesKind } from "../readings/re
 import { integrateEnergy, type IntegrationOptions } from "./integrate";
 import { NO_CUT_OFFS, samplePower, thermalPowerKw } from "./power";
 import { totalEnergy } from "./totals";
-import { rowsOutsideWater } from "./water-range";
+import { rowsOutsideFluid } from "./fluid-range";
 
 const T0 = Date.UTC(2026, 4, 14);
 const minute = 60_000;
 const water = waterAtPressure(1.6);
 const options: IntegrationOptions = {
-  water,
+  fluid: water,
   meterSide: "return",
   service: "cooling",
   cutOffs: NO_CUT_OFFS,
@@ -152,7 +152,7 @@ test("temperatures water cannot have carry no energy and are reported", () => {
   const columns = integrateEnergy([bad], options);
   expect(columns.coveredS[0]).toBe(60);
   expect(columns.noReadingRows[0]).toBe(2);
-  expect(rowsOutsideWater(bad.columns, water)).toMatchObject({
+  expect(rowsOutsideFluid(bad.columns, water)).toMatchObject({
     count: 2,
     examples: [
       { instantMs: T0 + minute, channel: "supply", problem: { code: "belowFreezing", value: -4 } },

@@ -1,11 +1,11 @@
-import type { WaterAtPressure } from "../fluids/water-at-pressure";
+import type { FluidAtPressure } from "../fluids/fluid-at-pressure";
 import { RowQuality, type ReadingColumns } from "../readings/reading-columns";
 
 /**
  * Thermal power of each row, before anything is summed.
  *
  * P = q·ρ(θ_m)/3600·[h(θ_s) − h(θ_r)] in kW, with q in m³/h, ρ at the side where the flow meter
- * sits, and h at the loop's pressure. The water gives off heat where P > 0 (heating) and takes it up
+ * sits, and h at the loop's pressure. The fluid gives off heat where P > 0 (heating) and takes it up
  * where P < 0 (cooling). Example: 28.8 m³/h on the return, 6.90 → 12.80 °C → −197.798 kW.
  */
 export type MeterSide = "supply" | "return";
@@ -20,7 +20,7 @@ export interface CutOffs {
 export const NO_CUT_OFFS: CutOffs = { flowM3PerHour: null, deltaTK: null };
 
 export interface PowerOptions {
-  readonly water: WaterAtPressure;
+  readonly fluid: FluidAtPressure;
   readonly meterSide: MeterSide;
   readonly service: LoopService;
   readonly cutOffs: CutOffs;
@@ -28,7 +28,7 @@ export interface PowerOptions {
 
 /** Where the power of a sample goes. */
 export const Register = {
-  /** The row cannot be used: excluded, without a reading, or outside liquid water. */
+  /** The row cannot be used: excluded, without a reading, or outside what the fluid can be. */
   unusable: 0,
   /** Usable, and no heat moves. */
   idle: 1,
@@ -51,20 +51,20 @@ const MEASURED = RowQuality.measured;
 /** 0.50 K from two readings in hundredths is not below a cut-off of 0.5 K. */
 const DECIMAL_NOISE = 1e-9;
 
-/** Power in kW of one state; temperatures must be liquid water at the water's pressure. */
+/** Power in kW of one state; temperatures must lie within the fluid's lowest and highest. */
 export function thermalPowerKw(
   flowM3PerHour: number,
   supplyC: number,
   returnC: number,
-  water: WaterAtPressure,
+  fluid: FluidAtPressure,
   meterSide: MeterSide,
 ): number {
-  const density = water.density(meterSide === "supply" ? supplyC : returnC);
-  return (flowM3PerHour * density * (water.enthalpy(supplyC) - water.enthalpy(returnC))) / 3600;
+  const density = fluid.density(meterSide === "supply" ? supplyC : returnC);
+  return (flowM3PerHour * density * (fluid.enthalpy(supplyC) - fluid.enthalpy(returnC))) / 3600;
 }
 
 /**
- * A property of water with its last result for each hundredth of a degree. Loggers write few
+ * A property of a fluid with its last result for each hundredth of a degree. Loggers write few
  * decimals, so the same temperatures come again and again; only the very same one is reused, which
  * leaves every result as it is.
  */
@@ -74,15 +74,16 @@ class Remembered {
 
   constructor(
     private readonly property: (temperatureC: number) => number,
+    private readonly lowestC: number,
     highestC: number,
   ) {
-    const places = Math.ceil(highestC * 100) + 2;
+    const places = Math.ceil((highestC - lowestC) * 100) + 2;
     this.temperatureC = new Float64Array(places).fill(NaN);
     this.result = new Float64Array(places);
   }
 
   at(temperatureC: number): number {
-    const place = (temperatureC * 100 + 0.5) | 0;
+    const place = ((temperatureC - this.lowestC) * 100 + 0.5) | 0;
     if (this.temperatureC[place] !== temperatureC) {
       this.temperatureC[place] = temperatureC;
       this.result[place] = this.property(temperatureC);
@@ -98,11 +99,11 @@ export function samplePower(columns: ReadingColumns, options: PowerOptions): Sam
   const powerKw = new Float64Array(count).fill(NaN);
   const register = new Uint8Array(count);
   if (!flowM3PerHour || !supplyC || !returnC) return { powerKw, register };
-  const { water, meterSide, service, cutOffs } = options;
-  const { lowestC, highestC } = water;
+  const { fluid, meterSide, service, cutOffs } = options;
+  const { lowestC, highestC } = fluid;
   const meterC = meterSide === "supply" ? supplyC : returnC;
-  const density = new Remembered(water.density, highestC);
-  const enthalpy = new Remembered(water.enthalpy, highestC);
+  const density = new Remembered(fluid.density, lowestC, highestC);
+  const enthalpy = new Remembered(fluid.enthalpy, lowestC, highestC);
   const flowCut = (cutOffs.flowM3PerHour ?? -Infinity) - DECIMAL_NOISE;
   const deltaTCut = (cutOffs.deltaTK ?? 0) - DECIMAL_NOISE;
   const home =

@@ -3,13 +3,14 @@ export interface FluidProblem {
   readonly code:
     | "temperatureMissing"
     | "belowFreezing"
+    | "belowRange"
     | "aboveRange"
     | "boiling"
     | "pressureOutOfRange"
-    | "glycolNotComputed";
+    | "concentrationOutOfRange";
   /** Which input is at fault. */
-  readonly place: "temperature" | "pressure" | "fluid";
-  /** The value met, in °C for a temperature, MPa absolute for a pressure, percent for a glycol. */
+  readonly place: "temperature" | "pressure" | "concentration";
+  /** The value met: °C for a temperature, MPa absolute for a pressure, percent as entered for glycol. */
   readonly value: number | null;
   readonly message: string;
   readonly remedy: string;

@@ -46,7 +46,10 @@ test("a gauge reading gains one standard atmosphere and a blank one is an assump
 
 test("a glycol loop gets a reason and never water's properties", () => {
   const glycol = fluidForEnergy({ kind: "propyleneGlycol", percent: 30, basis: "mass" }, 0.2);
-  expect(glycol).toMatchObject({ ok: false, problem: { code: "glycolNotComputed", value: 30 } });
+  expect(glycol).toMatchObject({
+    ok: false,
+    problem: { code: "concentrationOutOfRange", value: 30 },
+  });
   expect(fluidForEnergy({ kind: "water" }, null)).toMatchObject({ ok: true });
   expect(fluidForEnergy({ kind: "water" }, -0.2)).toMatchObject({ ok: false });
 });

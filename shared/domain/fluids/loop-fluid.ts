@@ -1,6 +1,7 @@
 import type { FluidProblem } from "./fluid-problem";
 import { HIGHEST_PRESSURE_MPA, LOWEST_PRESSURE_MPA, waterProblem } from "./water";
-import { waterAtPressure, type WaterAtPressure } from "./water-at-pressure";
+import type { FluidAtPressure } from "./fluid-at-pressure";
+import { waterAtPressure } from "./water-at-pressure";
 
 /** What fills a loop. */
 export type LoopFluid =
@@ -29,7 +30,7 @@ export function absolutePressureMPa(gaugeMPa: number | null): LoopPressure {
 }
 
 export type FluidForEnergy =
-  | { readonly ok: true; readonly water: WaterAtPressure; readonly pressure: LoopPressure }
+  | { readonly ok: true; readonly fluid: FluidAtPressure; readonly pressure: LoopPressure }
   | { readonly ok: false; readonly problem: FluidProblem };
 
 /**
@@ -41,8 +42,8 @@ export function fluidForEnergy(fluid: LoopFluid, gaugeMPa: number | null): Fluid
     return {
       ok: false,
       problem: {
-        code: "glycolNotComputed",
-        place: "fluid",
+        code: "concentrationOutOfRange",
+        place: "concentration",
         value: fluid.percent,
         message: "Energy is not computed for glycol; the readings are kept as they are.",
         remedy:
@@ -56,5 +57,5 @@ export function fluidForEnergy(fluid: LoopFluid, gaugeMPa: number | null): Fluid
   const problem = inRange ? null : waterProblem(20, pressure.pressureMPa);
   return problem
     ? { ok: false, problem }
-    : { ok: true, water: waterAtPressure(pressure.pressureMPa), pressure };
+    : { ok: true, fluid: waterAtPressure(pressure.pressureMPa), pressure };
 }

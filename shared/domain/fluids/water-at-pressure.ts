@@ -1,29 +1,14 @@
 import if97 from "../../data/if97_region1_coefficients.json";
+import type { FluidAtPressure } from "./fluid-at-pressure";
 import { saturationTemperatureC } from "./saturation";
 import {
   HIGHEST_PRESSURE_MPA,
   HIGHEST_WATER_C,
   LOWEST_PRESSURE_MPA,
   LOWEST_WATER_C,
+  waterRegion1,
 } from "./water";
-
-/**
- * Water at one fixed pressure, fast enough for a year of minutes in a blink.
- *
- * A loop has one pressure, so (7.1 − π)^I of every IF97 term is a constant: the 34 terms fold into
- * one coefficient for each power of b = τ − 1.222, and the sum is Horner's rule in b and 1/b. That
- * is the whole equation, not a fit: it agrees with the full sum to rounding.
- */
-export interface WaterAtPressure {
-  readonly pressureMPa: number;
-  /** Lowest and highest temperature at which this water is liquid and computed, °C. */
-  readonly lowestC: number;
-  readonly highestC: number;
-  /** kg/m³; `temperatureC` must lie within `lowestC` and `highestC`. */
-  density(temperatureC: number): number;
-  /** kJ/kg; `temperatureC` must lie within `lowestC` and `highestC`. */
-  enthalpy(temperatureC: number): number;
-}
+import { waterViscosityPaS } from "./water-viscosity";
 
 /** Powers of b that occur in Region 1, in the order in which {@link powerSum} reads them. */
 const POWERS = [
@@ -54,11 +39,18 @@ function powerSum(c: Float64Array, b: number, y: number): number {
 }
 
 /**
- * Folds IF97 Region 1 at `pressureMPa` absolute (0.01 to 100 MPa; anything else is a RangeError,
- * because a loop's pressure is checked before it is stored).
+ * Water at one fixed pressure, fast enough for a year of minutes in a blink.
+ *
+ * A loop has one pressure, so (7.1 − π)^I of every IF97 term is a constant: the 34 terms fold into
+ * one coefficient for each power of b = τ − 1.222, and the sum is Horner's rule in b and 1/b. That
+ * is the whole equation, not a fit: density and enthalpy agree with the full sum to rounding. Heat
+ * capacity and viscosity are asked once a period, not once a row, and use the full sum.
+ *
+ * `pressureMPa` is absolute, 0.01 to 100; anything else is a RangeError, because a loop's pressure is
+ * checked before it is stored.
  * Example: at 1.6 MPa `density(12)` is 1000.20678 kg/m³ and `enthalpy(12)` 51.9560697 kJ/kg.
  */
-export function waterAtPressure(pressureMPa: number): WaterAtPressure {
+export function waterAtPressure(pressureMPa: number): FluidAtPressure {
   if (!(pressureMPa >= LOWEST_PRESSURE_MPA && pressureMPa <= HIGHEST_PRESSURE_MPA)) {
     throw new RangeError(
       `Water is computed from ${LOWEST_PRESSURE_MPA} to ${HIGHEST_PRESSURE_MPA} MPa absolute, not at ${pressureMPa}. Check the loop's pressure.`,
@@ -77,22 +69,26 @@ export function waterAtPressure(pressureMPa: number): WaterAtPressure {
   }
   const rTStar = R * T_star_K;
   const densityFactor = (1000 * p_star_MPa) / R;
+  const density = (temperatureC: number) => {
+    const kelvin = temperatureC + 273.15;
+    const b = T_star_K / kelvin - tau_offset;
+    return densityFactor / (kelvin * powerSum(gammaPi, b, 1 / b));
+  };
   return {
+    kind: "water",
     pressureMPa,
     lowestC: LOWEST_WATER_C,
     highestC:
       pressureMPa >= 1
         ? HIGHEST_WATER_C
         : Math.min(HIGHEST_WATER_C, saturationTemperatureC(pressureMPa)),
-    density(temperatureC) {
-      const kelvin = temperatureC + 273.15;
-      const b = T_star_K / kelvin - tau_offset;
-      return densityFactor / (kelvin * powerSum(gammaPi, b, 1 / b));
-    },
+    density,
     enthalpy(temperatureC) {
       const b = T_star_K / (temperatureC + 273.15) - tau_offset;
       const y = 1 / b;
       return rTStar * y * powerSum(gammaTauB, b, y);
     },
+    heatCapacity: (temperatureC) => waterRegion1(temperatureC, pressureMPa).heatCapacityKjPerKgK,
+    viscosityPaS: (temperatureC) => waterViscosityPaS(temperatureC, density(temperatureC)),
   };
 }
