@@ -1,6 +1,6 @@
-import { peakWindow } from "@shared/domain/energy/peak-window";
+import { peakDemand } from "@shared/domain/energy/demand";
+import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
 import { sumIntervals, totalEnergy } from "@shared/domain/energy/totals";
-import { HOUR_MS } from "@shared/domain/time/interval";
 import { localDay, localHoursBetween } from "@shared/domain/time/local-calendar";
 import { createLocalClock } from "@shared/domain/time/local-clock";
 import { intervalColumns } from "./interval-columns";
@@ -35,20 +35,20 @@ describe.each([
 
   test("gives the day's energy and its peaks, fixed and rolling", () => {
     expect(totalEnergy(columns, range).cooling.energyKwh).toBeCloseTo(Number(day.energy_kWh), 3);
-    const peak = (windowMs: number, alignment: "fixed" | "rolling") =>
-      peakWindow(columns, { register: "cooling", windowMs, alignment });
+    const { startMs, coveredS, cooling } = columns;
+    const steps = { stepMs: INTERVAL_MS, startMs, coveredS, energyKwh: cooling.energyKwh };
+    const peak = (windowMinutes: number, kind: "fixed" | "rolling") =>
+      peakDemand(steps, { kind, windowMinutes });
     for (const [own, key] of [
-      [peak(HOUR_MS / 4, "fixed"), "peak15_kW"],
-      [peak(HOUR_MS / 2, "fixed"), "peak30_fixed_kW"],
-      [peak(HOUR_MS, "fixed"), "peak60_fixed_kW"],
-      [peak(HOUR_MS, "rolling"), "peak60_rolling_kW"],
+      [peak(15, "fixed"), "peak15_kW"],
+      [peak(30, "fixed"), "peak30_fixed_kW"],
+      [peak(60, "fixed"), "peak60_fixed_kW"],
+      [peak(60, "rolling"), "peak60_rolling_kW"],
     ] as const) {
       expect(relativeError(own?.powerKw ?? NaN, Number(day[key]))).toBeLessThan(1e-4);
     }
-    expect(peak(HOUR_MS, "fixed")?.startMs).toBe(Date.parse(String(day.peak60_fixed_start_utc)));
-    expect(peak(HOUR_MS, "rolling")?.startMs).toBe(
-      Date.parse(String(day.peak60_rolling_start_utc)),
-    );
+    expect(peak(60, "fixed")?.startMs).toBe(Date.parse(String(day.peak60_fixed_start_utc)));
+    expect(peak(60, "rolling")?.startMs).toBe(Date.parse(String(day.peak60_rolling_start_utc)));
   });
 
   test("has as many hours as the clock showed, and they add up", () => {

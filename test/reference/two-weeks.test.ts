@@ -1,18 +1,9 @@
 import { integrateEnergy } from "@shared/domain/energy/integrate";
 import { NO_CUT_OFFS } from "@shared/domain/energy/power";
-import { peakWindow } from "@shared/domain/energy/peak-window";
-import {
-  completeness,
-  deltaTMeans,
-  specificFlowLPerSPerKw,
-  sumIntervals,
-  totalEnergy,
-  volumePerEnergyM3PerKwh,
-} from "@shared/domain/energy/totals";
+import { completeness, deltaTMeans, sumIntervals, totalEnergy } from "@shared/domain/energy/totals";
 import { waterAtPressure } from "@shared/domain/fluids/water-at-pressure";
 import { resolveSegments } from "@shared/domain/readings/resolve-segments";
 import { localDaysBetween, weekRange } from "@shared/domain/time/local-calendar";
-import { HOUR_MS } from "@shared/domain/time/interval";
 import { readJson, relativeError } from "./read-csv";
 import { readingsOf } from "./scenario-readings";
 
@@ -47,15 +38,9 @@ describe.each([
       [means.flowWeightedK, "flow_weighted_dT_K"],
       [means.energyWeightedK, "energy_weighted_dT_K"],
       [means.timeMeanK, "simple_mean_dT_K"],
-      [specificFlowLPerSPerKw(totals.cooling), "L_s_per_kW"],
-      [peakWindow(intervals, { register: "cooling", windowMs: HOUR_MS })?.powerKw, "peak_kW"],
     ] as const) {
       expect(relativeError(own ?? NaN, expected[name][key]!)).toBeLessThan(5e-4);
     }
-    expect(volumePerEnergyM3PerKwh(totals.cooling)! / 3.6).toBeCloseTo(
-      specificFlowLPerSPerKw(totals.cooling)!,
-      12,
-    );
     expect(totals.heating.energyKwh).toBe(0);
   });
 

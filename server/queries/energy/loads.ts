@@ -1,6 +1,6 @@
 import type { LoopService } from "@shared/contracts/places";
-import { INTERVAL_MS, type IntervalEnergyColumns } from "@shared/domain/energy/interval-energy";
-import { peakWindow } from "@shared/domain/energy/peak-window";
+import { peakDemand } from "@shared/domain/energy/demand";
+import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
 import { deltaTMeans, type EnergyTotals } from "@shared/domain/energy/totals";
 import { HOUR_MS, type Interval } from "@shared/domain/time/interval";
 import { zoneOffsets } from "@shared/domain/time/zone-offsets";
@@ -79,48 +79,20 @@ export async function loadPowerColumns(
 
 /** The busiest fully covered half hour of the wall clock, of either register. */
 export function busiestHalfHour(
-  columns: PowerColumns,
+  { startMs, coveredS, kwh }: PowerColumns,
   zone: string,
   registers: readonly RegisterName[],
 ): (Interval & { register: RegisterName }) | null {
-  const offsetMs = zoneOffsets(zone).offsetAt(columns.startMs[0] ?? 0);
+  const offsets = zoneOffsets(zone);
+  const halfHour = { kind: "fixed", windowMinutes: 30 } as const;
   const found = registers.flatMap((register) => {
-    const window = peakWindow(asIntervals(columns), { register, alignment: "fixed", offsetMs });
-    return window ? [{ ...window, register }] : [];
+    const steps = { stepMs: INTERVAL_MS, startMs, coveredS, energyKwh: kwh[register] };
+    const peak = peakDemand(steps, halfHour, (ms) => offsets.offsetAt(ms));
+    // A register that did nothing was never busy.
+    return peak && peak.powerKw > 0 ? [{ ...peak, register }] : [];
   });
   found.sort((a, b) => b.powerKw - a.powerKw);
   return found[0] ?? null;
-}
-
-/** The peak search reads starts, cover and energy only; the rest stays empty. */
-function asIntervals({ startMs, coveredS, kwh }: PowerColumns): IntervalEnergyColumns {
-  const none = new Float64Array(0);
-  const rest = {
-    volumeM3: none,
-    flowDeltaTM3K: none,
-    powerDeltaTKwhK: none,
-    deltaTKs: none,
-    runningS: none,
-  };
-  return {
-    startMs,
-    coveredS,
-    heating: { energyKwh: kwh.heating, ...rest },
-    cooling: { energyKwh: kwh.cooling, ...rest },
-    volumeM3: none,
-    suppressedKwh: none,
-    suppressedS: none,
-    minPowerKw: none,
-    maxPowerKw: none,
-    minFlowM3PerHour: none,
-    maxFlowM3PerHour: none,
-    supplyCs: none,
-    returnCs: none,
-    measuredRows: none,
-    excludedRows: none,
-    noReadingRows: none,
-    apportioned: new Uint8Array(0),
-  };
 }
 
 /** Named wherever the figure is shown: a night base without its hours cannot be compared. */

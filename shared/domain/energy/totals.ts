@@ -81,17 +81,6 @@ export function deltaTMeans(register: RegisterTotals): DeltaTMeans {
   };
 }
 
-/** Water moved for each kWh, m³/kWh; null without energy. Chilled 12/6 °C moves about 0.143. */
-export function volumePerEnergyM3PerKwh(register: RegisterTotals): number | null {
-  return quotient(register.volumeM3, register.energyKwh);
-}
-
-/** Specific flow in L/s for each kW. */
-export function specificFlowLPerSPerKw(register: RegisterTotals): number | null {
-  const volumePerEnergy = volumePerEnergyM3PerKwh(register);
-  return volumePerEnergy === null ? null : volumePerEnergy / 3.6;
-}
-
 function quotient(numerator: number, denominator: number): number | null {
   return denominator === 0 ? null : numerator / denominator;
 }
