@@ -1,9 +1,9 @@
 import i18next, { type i18n } from "i18next";
 import { initReactI18next } from "react-i18next";
 
-import { words, type Namespace } from "./resources";
+import type { Language } from "@shared/formats/language";
 
-export type Language = "en" | "de";
+import { words, type Namespace } from "./resources";
 
 function bundle(language: Language): Record<Namespace, object> {
   const entries = Object.entries(words).map(([name, both]) => [name, both[language]] as const);

@@ -1,4 +1,5 @@
-export { i18nInstance, type Language } from "./i18n";
+export { i18nInstance } from "./i18n";
+export type { Language } from "@shared/formats/language";
 export {
   formatFigure,
   formatNumber,
@@ -7,10 +8,11 @@ export {
   NO_BREAK_SPACE,
   sensiblePlaces,
   uncertaintyPlaces,
-} from "./numbers";
-export { dayInstant, formatDate, formatTime, type DateStyle } from "./dates";
+} from "@shared/formats/numbers";
+export { dayInstant, formatDate, formatTime, type DateStyle } from "@shared/formats/dates";
 export { PreferencesProvider, usePreferences } from "./preferences";
 export { words, type Namespace } from "./resources";
-export { makeFormat, useFormat, type Format } from "./use-format";
+export { makeFormat, type Format } from "@shared/formats/format";
+export { useFormat } from "./use-format";
 export { useWords } from "./use-words";
 export { useFieldWords, useProblemWords, type ProblemWords } from "./use-problem-words";

@@ -11,9 +11,10 @@ import {
 import { I18nextProvider } from "react-i18next";
 
 import type { UnitSystem } from "@shared/domain/units/display-units";
+import type { Language } from "@shared/formats/language";
 
 import { readDevice, writeDevice } from "./device-store";
-import { i18nInstance, type Language } from "./i18n";
+import { i18nInstance } from "./i18n";
 
 interface Preferences {
   readonly language: Language;

@@ -1,4 +1,4 @@
-import type { Language } from "./i18n";
+import type { Language } from "./language";
 import { localeOf } from "./numbers";
 
 export type DateStyle =

@@ -1,4 +1,4 @@
-import type { Language } from "./i18n";
+import type { Language } from "./language";
 
 /** U+00A0, between a value and its unit so a line never breaks there. */
 export const NO_BREAK_SPACE = "\u00A0";

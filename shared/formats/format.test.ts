@@ -1,4 +1,4 @@
-import { makeFormat } from "./use-format";
+import { makeFormat } from "./format";
 
 describe("dates and durations on screen", () => {
   const london = makeFormat("en", "si", "Europe/London");
