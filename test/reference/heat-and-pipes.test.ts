@@ -1,4 +1,5 @@
-import { thermalPowerKw } from "@shared/domain/energy/power";
+import { energyOfVolumeKwh, heatCoefficient } from "@shared/domain/energy/heat-coefficient";
+import { thermalPowerKw, type MeterSide } from "@shared/domain/energy/power";
 import { waterAtPressure } from "@shared/domain/fluids/water-at-pressure";
 import { flowAtVelocityM3PerHour, velocityMPerS } from "@shared/domain/pipes/bore";
 import { pipeSize } from "@shared/domain/pipes/pipe-tables";
@@ -8,16 +9,8 @@ import { differenceToKelvin, toCelsius } from "@shared/domain/units/temperature"
 import { readCsv, relativeError } from "./read-csv";
 
 const at16 = waterAtPressure(1.6);
-
-/** k = P / (q·Δθ) in MJ/(m³·K): the form of EN 1434-1 and OIML R 75-1 (from memory). */
-function heatCoefficient(
-  supplyC: number,
-  returnC: number,
-  meterSide: "supply" | "return",
-  water = at16,
-): number {
-  return (thermalPowerKw(1, supplyC, returnC, water, meterSide) * 3.6) / (supplyC - returnC);
-}
+const mjPerM3K = (supplyC: number, returnC: number, side: MeterSide, fluid = at16) =>
+  heatCoefficient(fluid, side, supplyC, returnC)!.mjPerM3K;
 
 // Every number computed with IF97 by another program; no published table of k could be read.
 test("heat coefficients equal those computed by another program, on either side", () => {
@@ -32,8 +25,10 @@ test("heat coefficients equal those computed by another program, on either side"
     ] as const) {
       for (const side of ["supply", "return"] as const) {
         const expected = Number(row[`k_${side}_MJ_m3K_${name}`]);
-        const own = heatCoefficient(supplyC, returnC, side, waterAtPressure(pressure));
-        expect(relativeError(own, expected)).toBeLessThan(3e-9);
+        const own = heatCoefficient(waterAtPressure(pressure), side, supplyC, returnC)!;
+        expect(relativeError(own.mjPerM3K, expected)).toBeLessThan(3e-9);
+        const inKwh = Number(row[`k_${side}_kWh_m3K_${name}`]);
+        expect(relativeError(own.kwhPerM3K, inKwh)).toBeLessThan(5e-9);
       }
     }
   }
@@ -49,15 +44,26 @@ test("heat coefficients of usual hot and chilled loops", () => {
     [80, 60, "return", 4.117625],
     [45, 35, "return", 4.152832],
   ] as const) {
-    expect(heatCoefficient(supplyC, returnC, side)).toBeCloseTo(expected, 6);
+    expect(mjPerM3K(supplyC, returnC, side)).toBeCloseTo(expected, 6);
   }
 });
 
+test("the hot loop's coefficient in kWh", () => {
+  expect(heatCoefficient(at16, "return", 70, 40)!.kwhPerM3K).toBeCloseTo(1.152371, 6);
+});
+
+test("a heat coefficient at equal temperatures is the limit, and outside the fluid there is none", () => {
+  const limit = heatCoefficient(at16, "return", 12, 12)!.mjPerM3K;
+  expect(relativeError(limit, mjPerM3K(12.001, 11.999, "return"))).toBeLessThan(1e-6);
+  expect(heatCoefficient(at16, "return", -1, 12)).toBeNull();
+  expect(heatCoefficient(at16, "supply", 12, 151)).toBeNull();
+});
+
 test("density at the wrong side reads 1.454 % low at 70/40 °C and 0.047 % off at 6/12 °C", () => {
-  const wrong = (supplyC: number, returnC: number, taken: "supply" | "return") => {
+  const wrong = (supplyC: number, returnC: number, taken: MeterSide) => {
     const right = taken === "supply" ? "return" : "supply";
-    const own = heatCoefficient(supplyC, returnC, taken);
-    return 100 * (own / heatCoefficient(supplyC, returnC, right) - 1);
+    const own = mjPerM3K(supplyC, returnC, taken);
+    return 100 * (own / mjPerM3K(supplyC, returnC, right) - 1);
   };
   expect(wrong(70, 40, "supply")).toBeCloseTo(-1.454, 3);
   expect(wrong(6, 12, "return")).toBeCloseTo(-0.047, 3);
@@ -71,7 +77,9 @@ test("the worked interval gives its density, enthalpies, power, energy and speed
   const power = -thermalPowerKw(toM3PerHour(8, "L/s"), 6.9, 12.8, at16, "return");
   expect(power).toBeCloseTo(197.798, 3);
   expect((power * 300) / 3600).toBeCloseTo(16.4832, 4);
-  expect(heatCoefficient(6.9, 12.8, "return")).toBeCloseTo(4.19064, 5);
+  expect(mjPerM3K(6.9, 12.8, "return")).toBeCloseTo(4.19064, 5);
+  const coefficient = heatCoefficient(at16, "return", 6.9, 12.8)!;
+  expect(energyOfVolumeKwh(coefficient, 2.4, 6.9, 12.8)).toBeCloseTo(-16.4832, 4);
   expect(velocityMPerS(28.8, 102.965)).toBeCloseTo(0.960771, 5);
   // Constant density 1000 and 4.186 kJ/(kg·K) are 0.110792 % off: good for a sanity check only.
   expect(100 * ((8 * 4.186 * 5.9) / power - 1)).toBeCloseTo(-0.110792, 5);

@@ -2,6 +2,7 @@ import { IAPWS97_EoS } from "@neutrium/thermo.eos.iapws97";
 import { saturationPressureMPa, saturationTemperatureC } from "@shared/domain/fluids/saturation";
 import { waterRegion1 } from "@shared/domain/fluids/water";
 import { waterAtPressure } from "@shared/domain/fluids/water-at-pressure";
+import { waterViscosityPaS } from "@shared/domain/fluids/water-viscosity";
 import { readCsv, readJson, relativeError } from "./read-csv";
 
 interface Published {
@@ -35,6 +36,17 @@ test("the boiling line gives the published verification values, both ways", () =
   }
 });
 
+// IAPWS R12-08, table 4: all eleven points, μ₂ = 1, to the last digit printed.
+test("viscosity gives the published verification values", () => {
+  const { verification_Table4: points } = readJson(
+    "shared/data/viscosity_r12_08_coefficients.json",
+  ) as { verification_Table4: { T_K: number; rho_kg_m3: number; mu_uPas: number }[] };
+  expect(points).toHaveLength(11);
+  for (const { T_K, rho_kg_m3, mu_uPas } of points) {
+    expect(Math.abs(waterViscosityPaS(T_K - 273.15, rho_kg_m3) * 1e6 - mu_uPas)).toBeLessThan(6e-7);
+  }
+});
+
 describe("from 1 to 130 °C and 0.3 to 1.6 MPa", () => {
   const rows = readCsv("test/reference/data/water_check_values.csv").map((row) =>
     Object.fromEntries(Object.entries(row).map(([name, cell]) => [name, Number(cell)])),
@@ -62,6 +74,28 @@ describe("from 1 to 130 °C and 0.3 to 1.6 MPa", () => {
       const water = waterAtPressure(row.p_MPa!);
       expect(relativeError(water.density(row.t_C!), row.iapws95_rho_kg_m3!)).toBeLessThan(1.48e-5);
       expect(Math.abs(water.enthalpy(row.t_C!) - row.iapws95_h_kJ_kg!)).toBeLessThan(0.072);
+      // Heat capacity 0.079 %, sound speed 2.86 m/s (computed from that table).
+      expect(relativeError(water.heatCapacity(row.t_C!), row.iapws95_cp_kJ_kgK!)).toBeLessThan(
+        7.9e-4,
+      );
+      const { soundSpeedMPerS } = waterRegion1(row.t_C!, row.p_MPa!);
+      expect(Math.abs(soundSpeedMPerS - row.iapws95_w_m_s!)).toBeLessThan(2.86);
+    }
+  });
+
+  // IAPWS R12-08 at IF97's density, by the same program; printed to nine digits.
+  test("another program gives the same viscosity", () => {
+    for (const row of rows) {
+      const own = waterAtPressure(row.p_MPa!).viscosityPaS(row.t_C!);
+      expect(relativeError(own * 1000, row.r12_mu_mPas_at_if97_rho!)).toBeLessThan(1e-8);
+    }
+  });
+
+  // The density of the independent equation instead of IF97's moves the viscosity by 2e-5 at most.
+  test("viscosity at the scientific equation's density agrees within the stated deviation", () => {
+    for (const row of rows) {
+      const own = waterViscosityPaS(row.t_C!, row.iapws95_rho_kg_m3!);
+      expect(relativeError(own * 1000, row.r12_mu_mPas_at_if97_rho!)).toBeLessThan(5e-5);
     }
   });
 });

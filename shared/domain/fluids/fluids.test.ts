@@ -44,12 +44,34 @@ test("a gauge reading gains one standard atmosphere and a blank one is an assump
   expect(absolutePressureMPa(null)).toEqual({ pressureMPa: 1.6, assumed: true });
 });
 
-test("a glycol loop gets a reason and never water's properties", () => {
+test("a glycol loop gets its mixture's properties and never water's", () => {
   const glycol = fluidForEnergy({ kind: "propyleneGlycol", percent: 30, basis: "mass" }, 0.2);
   expect(glycol).toMatchObject({
-    ok: false,
-    problem: { code: "concentrationOutOfRange", value: 30 },
+    ok: true,
+    fluid: { kind: "propyleneGlycol", highestC: 100 },
+    pressure: { pressureMPa: 0.301325, assumed: false },
   });
   expect(fluidForEnergy({ kind: "water" }, null)).toMatchObject({ ok: true });
-  expect(fluidForEnergy({ kind: "water" }, -0.2)).toMatchObject({ ok: false });
+  expect(fluidForEnergy({ kind: "water" }, -0.2)).toMatchObject({
+    ok: false,
+    problem: { code: "pressureOutOfRange" },
+  });
+});
+
+test("a percentage outside the tables is refused, and an unknown one is not zero", () => {
+  const problemOf = (percent: number, basis: "mass" | "volume") => {
+    const result = fluidForEnergy({ kind: "ethyleneGlycol", percent, basis }, null);
+    return result.ok ? null : result.problem;
+  };
+  expect(problemOf(60, "volume")).toBeNull();
+  expect(problemOf(60, "mass")).toBeNull();
+  expect(problemOf(60.1, "volume")).toMatchObject({
+    code: "concentrationOutOfRange",
+    place: "concentration",
+    value: 60.1,
+  });
+  // 64 % by mass is 61.9 % by volume.
+  expect(problemOf(64, "mass")).toMatchObject({ value: 64 });
+  expect(problemOf(-1, "mass")).toMatchObject({ value: -1 });
+  expect(problemOf(NaN, "mass")).toMatchObject({ code: "concentrationOutOfRange", value: null });
 });
