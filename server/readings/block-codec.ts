@@ -53,20 +53,36 @@ export function encodeBlock(rows: StoredRows): Buffer {
   return deflateRawSync(out.finish(), deflateOptions);
 }
 
+/** Where a block's columns are unpacked to: arrays of just so many rows. */
+export interface BlockRoom {
+  instants(count: number): Float64Array;
+  /** `bit` is the channel's. */
+  numbers(bit: number, count: number): Float64Array;
+  quality(count: number): Uint8Array;
+}
+
+const newRoom: BlockRoom = {
+  instants: (count) => new Float64Array(count),
+  numbers: (_bit, count) => new Float64Array(count),
+  quality: (count) => new Uint8Array(count),
+};
+
 /**
- * Unpacks what {@link encodeBlock} packed.
+ * Unpacks what {@link encodeBlock} packed into new arrays, or into those that `room` gives.
  * @throws RangeError for another format or damaged bytes.
  */
-export function decodeBlock(packed: Uint8Array, format: number): StoredRows {
+export function decodeBlock(packed: Uint8Array, format: number, room = newRoom): StoredRows {
   if (format !== BLOCK_FORMAT)
     throw new RangeError(`reading block of format ${format}; this server reads ${BLOCK_FORMAT}`);
   const input = new ByteReader(inflateRawSync(packed));
   const channels = input.byte();
   const count = input.integer();
-  const instantMs = readInstants(input, count);
-  const quality = readQuality(input, count);
+  const instantMs = readInstants(input, room.instants(count));
+  const quality = readQuality(input, room.quality(count));
   const read = <Unit extends ColumnUnit>(bit: number): StoredChannel<Unit> | null =>
-    (channels & bit) === 0 ? null : (readChannel(input, count) as StoredChannel<Unit>);
+    (channels & bit) === 0
+      ? null
+      : (readChannel(input, room.numbers(bit, count)) as StoredChannel<Unit>);
   return {
     instantMs,
     flow: read<FlowUnit>(ChannelBit.flow),
@@ -93,8 +109,8 @@ function writeInstants(out: ByteWriter, instantMs: Float64Array): void {
   out.integers(coded);
 }
 
-function readInstants(input: ByteReader, count: number): Float64Array {
-  const instantMs = new Float64Array(count);
+function readInstants(input: ByteReader, instantMs: Float64Array): Float64Array {
+  const count = instantMs.length;
   let at = input.signed();
   let step = 0;
   instantMs[0] = at;
@@ -119,9 +135,8 @@ function writeQuality(out: ByteWriter, quality: Uint8Array): void {
   }
 }
 
-function readQuality(input: ByteReader, count: number): Uint8Array {
-  const quality = new Uint8Array(count);
-  for (let from = 0; from < count;) {
+function readQuality(input: ByteReader, quality: Uint8Array): Uint8Array {
+  for (let from = 0; from < quality.length;) {
     const code = input.byte();
     const length = input.integer();
     quality.fill(code, from, from + length);
@@ -151,25 +166,13 @@ function writeChannel(out: ByteWriter, { unit, values }: StoredChannel<ColumnUni
   out.integers(coded);
 }
 
-function readChannel(input: ByteReader, count: number): StoredChannel<ColumnUnit> {
+function readChannel(input: ByteReader, values: Float64Array): StoredChannel<ColumnUnit> {
   const code = input.byte();
   const unit = unitCodes[code];
   if (unit === undefined) throw new RangeError(`unknown unit ${code} in a reading block`);
   const decimals = input.byte();
-  if (decimals === AS_DOUBLES) return { unit, values: input.doubles(count) };
-  const scale = 10 ** decimals;
-  const coded = input.integers(count);
-  const values = new Float64Array(count);
-  let whole = 0;
-  for (let i = 0; i < count; i++) {
-    const code = coded[i] as number;
-    if (code === 0) {
-      values[i] = NaN;
-      continue;
-    }
-    whole += (code & 1) === 0 ? -(code >>> 1) : code >>> 1;
-    values[i] = whole / scale;
-  }
+  if (decimals === AS_DOUBLES) input.doubles(values);
+  else input.differences(values, 10 ** decimals);
   return { unit, values };
 }
 

@@ -5,9 +5,9 @@ import type {
   SeriesKind,
 } from "@shared/domain/readings/reading-columns";
 import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
-import { selectMany } from "@server/database/bulk";
+import { selectMany, type SqlRow } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
-import { decodeBlock } from "./block-codec";
+import { decodeBlock, type BlockRoom } from "./block-codec";
 import { inSiUnits } from "./stored-rows";
 
 interface FileOfPoint {
@@ -48,6 +48,33 @@ export async function reachOfPoint(
 
 const utcDate = (ms: number) => new Date(ms).toISOString().slice(0, 10);
 
+/** What is stored of a point, as it comes from the database: see {@link sourcesOf}. */
+export interface StoredBlocks {
+  readonly files: readonly FileOfPoint[];
+  readonly rows: readonly SqlRow[];
+}
+
+/** The blocks of each file over [fromMs, toMs) and somewhat beyond: whole UTC days, with room. */
+export async function loadBlocks(
+  database: Database,
+  pointId: string,
+  fromMs: number,
+  toMs: number,
+  transaction?: Transaction,
+): Promise<StoredBlocks> {
+  const files = await filesOf(database, pointId, transaction);
+  if (files.length === 0 || !(fromMs < toMs)) return { files, rows: [] };
+  const reach = reachOf(files);
+  const rows = await selectMany(
+    database,
+    `SELECT log_file_id, channel_set, row_count, format, data FROM reading_block
+      WHERE point_id = ? AND day >= ? AND day <= ? ORDER BY day`,
+    [pointId, utcDate(fromMs - reach), utcDate(toMs + reach)],
+    transaction,
+  );
+  return { files, rows };
+}
+
 /**
  * What each file of a point holds in [fromMs, toMs) and somewhat beyond: whole UTC days, with room
  */
@@ -58,22 +85,18 @@ export async function loadSources(
   toMs: number,
   transaction?: Transaction,
 ): Promise<ReadingSource[]> {
-  const files = await filesOf(database, pointId, transaction);
-  if (files.length === 0 || !(fromMs < toMs)) return [];
-  const reach = reachOf(files);
-  const rows = await selectMany(
-    database,
-    `SELECT log_file_id, channel_set, format, data FROM reading_block
-      WHERE point_id = ? AND day >= ? AND day <= ? ORDER BY day`,
-    [pointId, utcDate(fromMs - reach), utcDate(toMs + reach)],
-    transaction,
-  );
-  const blocksBySource = new Map<string, ReadingColumns[]>();
-  for (const [fileId, channelSet, format, data] of rows) {
-    if (!Buffer.isBuffer(data)) throw new Error(`a reading block of point ${pointId} has no data`);
+  return sourcesOf(await loadBlocks(database, pointId, fromMs, toMs, transaction));
+}
+
+/** Blocks unpacked, each file's channel set joined to one source. */
+function sourcesOf({ files, rows }: StoredBlocks): ReadingSource[] {
+  const blocksBySource = new Map<string, PackedBlock[]>();
+  for (const [fileId, channelSet, rowCount, format, data] of rows) {
+    if (!Buffer.isBuffer(data))
+      throw new Error(`a reading block of file ${String(fileId)} is empty`);
     const key = `${String(fileId)}/${String(channelSet)}`;
     const blocks = blocksBySource.get(key) ?? [];
-    blocks.push(inSiUnits(decodeBlock(data, Number(format))));
+    blocks.push({ rowCount: Number(rowCount), format: Number(format), data });
     blocksBySource.set(key, blocks);
   }
   const byId = new Map(files.map((file) => [String(file.id), file]));
@@ -81,7 +104,7 @@ export async function loadSources(
     const file = byId.get(key.slice(0, key.indexOf("/")));
     if (!file) return [];
     const { precedence, kind, nominalStepMs } = file;
-    return [{ precedence, kind, nominalStepMs, columns: joinColumns(blocks) }];
+    return [{ precedence, kind, nominalStepMs, columns: joinBlocks(blocks) }];
   });
 }
 
@@ -98,8 +121,13 @@ export async function loadSegments(
   toMs: number,
   transaction?: Transaction,
 ): Promise<ReadingSegment[]> {
-  const sources = await loadSources(database, pointId, fromMs, toMs, transaction);
-  return trimSegments(resolveSegments(sources), fromMs, toMs);
+  const blocks = await loadBlocks(database, pointId, fromMs, toMs, transaction);
+  return segmentsOf(blocks, fromMs, toMs);
+}
+
+/** The second half of {@link loadSegments}, which needs no database. */
+export function segmentsOf(blocks: StoredBlocks, fromMs: number, toMs: number): ReadingSegment[] {
+  return trimSegments(resolveSegments(sourcesOf(blocks)), fromMs, toMs);
 }
 
 /** Rows of [fromMs, toMs) with one neighbour at either end, however the segments lie. */
@@ -154,33 +182,68 @@ export function sliceColumns(columns: ReadingColumns, from: number, to: number):
   };
 }
 
-function joinColumns(blocks: readonly ReadingColumns[]): ReadingColumns {
-  const [first] = blocks;
-  if (!first || blocks.length === 1) return first as ReadingColumns;
-  const length = blocks.reduce((sum, block) => sum + block.instantMs.length, 0);
-  const join = (pick: (block: ReadingColumns) => Float64Array | null): Float64Array | null => {
-    if (pick(first) === null) return null;
-    const joined = new Float64Array(length);
-    let at = 0;
-    for (const block of blocks) {
-      const part = pick(block);
-      if (part) joined.set(part, at);
-      at += block.instantMs.length;
-    }
-    return joined;
-  };
-  const quality = new Uint8Array(length);
-  let at = 0;
-  for (const block of blocks) {
-    quality.set(block.quality, at);
-    at += block.quality.length;
+interface PackedBlock {
+  readonly rowCount: number;
+  readonly format: number;
+  readonly data: Buffer;
+}
+
+/** Blocks of the same channels as one, unpacked straight into the columns they share. */
+function joinBlocks(blocks: readonly PackedBlock[]): ReadingColumns {
+  const room = new JoinedRoom(blocks.reduce((sum, block) => sum + block.rowCount, 0));
+  let joined: ReadingColumns | undefined;
+  for (const { data, format } of blocks) {
+    joined = inSiUnits(decodeBlock(data, format, room));
+    room.next();
   }
+  if (joined === undefined || !room.isFull)
+    throw new RangeError("reading blocks hold other rows than were counted");
+  const whole = (column: Float64Array | null) => column && new Float64Array(column.buffer);
   return {
-    instantMs: join((block) => block.instantMs) as Float64Array,
-    flowM3PerHour: join((block) => block.flowM3PerHour),
-    supplyC: join((block) => block.supplyC),
-    returnC: join((block) => block.returnC),
-    signalPercent: join((block) => block.signalPercent),
-    quality,
+    instantMs: new Float64Array(joined.instantMs.buffer),
+    flowM3PerHour: whole(joined.flowM3PerHour),
+    supplyC: whole(joined.supplyC),
+    returnC: whole(joined.returnC),
+    signalPercent: whole(joined.signalPercent),
+    quality: new Uint8Array(joined.quality.buffer),
   };
+}
+
+/** Room for many blocks one after the other: every column of a block lies in an array of all rows. */
+class JoinedRoom implements BlockRoom {
+  private at = 0;
+  private taken = 0;
+  private readonly allInstants: Float64Array;
+  private readonly allQuality: Uint8Array;
+  private readonly byBit = new Map<number, Float64Array>();
+
+  constructor(private readonly rows: number) {
+    this.allInstants = new Float64Array(rows);
+    this.allQuality = new Uint8Array(rows);
+  }
+
+  instants(count: number): Float64Array {
+    if (this.at + count > this.rows)
+      throw new RangeError("a reading block holds more rows than were counted");
+    this.taken = count;
+    return this.allInstants.subarray(this.at, this.at + count);
+  }
+
+  numbers(bit: number, count: number): Float64Array {
+    const column = this.byBit.get(bit) ?? new Float64Array(this.rows);
+    this.byBit.set(bit, column);
+    return column.subarray(this.at, this.at + count);
+  }
+
+  quality(count: number): Uint8Array {
+    return this.allQuality.subarray(this.at, this.at + count);
+  }
+
+  next(): void {
+    this.at += this.taken;
+  }
+
+  get isFull(): boolean {
+    return this.at === this.rows;
+  }
 }

@@ -35,14 +35,14 @@ export function channelSetOf(rows: StoredRows): number {
   );
 }
 
-/** The same rows in m³/h, °C and percent. The given rows stay as they are. */
+/** The rows in m³/h, °C and percent. Their numbers are converted where they lie. */
 export function inSiUnits(rows: StoredRows): ReadingColumns {
   return {
     instantMs: rows.instantMs,
-    flowM3PerHour: rows.flow && columnToM3PerHour(rows.flow.values.slice(), rows.flow.unit),
-    supplyC: rows.supply && columnToCelsius(rows.supply.values.slice(), rows.supply.unit),
-    returnC: rows.return && columnToCelsius(rows.return.values.slice(), rows.return.unit),
-    signalPercent: rows.signal && rows.signal.values.slice(),
+    flowM3PerHour: rows.flow && columnToM3PerHour(rows.flow.values, rows.flow.unit),
+    supplyC: rows.supply && columnToCelsius(rows.supply.values, rows.supply.unit),
+    returnC: rows.return && columnToCelsius(rows.return.values, rows.return.unit),
+    signalPercent: rows.signal && rows.signal.values,
     quality: rows.quality,
   };
 }
