@@ -33,5 +33,7 @@ export function intervalColumns(
     excludedRows: filled(0),
     noReadingRows: filled(0),
     apportioned: new Uint8Array(count),
+    meterOnlyS: filled(0),
+    againstRows: filled(0),
   };
 }

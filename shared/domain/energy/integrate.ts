@@ -3,12 +3,14 @@ import { RowQuality, type ReadingColumns, type ReadingSegment } from "../reading
 import type { Interval } from "../time/interval";
 import { INTERVAL_MS, type IntervalEnergyColumns } from "./interval-energy";
 import { IntervalTable, RegisterSum, Sum } from "./interval-table";
-import { Register, samplePower, type PowerOptions, type SamplePower } from "./power";
+import { Register, type PowerOptions, type SamplePower } from "./power";
+import { segmentPower } from "./segment-power";
 
 // Taken out of their modules once: looking an import up for every row costs more than the sum.
 const LENGTH_MS = INTERVAL_MS;
 const { unusable: UNUSABLE, heating: HEATING, cooling: COOLING, suppressed: SUPPRESSED } = Register;
-const EXCLUDED = RowQuality.excluded;
+const { against: AGAINST, both: BOTH } = Register;
+const { excluded: EXCLUDED, opening: OPENING } = RowQuality;
 const SUM = Sum;
 const { energyKwh, volumeM3, flowDeltaTM3K, powerDeltaTKwhK, deltaTKs, runningS } = RegisterSum;
 
@@ -20,7 +22,9 @@ const { energyKwh, volumeM3, flowDeltaTM3K, powerDeltaTKwhK, deltaTKs, runningS 
  * and never netted. What a step is, and where there is none, is said in `covered-steps`. A step that
  * crosses an interval's boundary is split in proportion to time and both parts are marked
  * apportioned. Extremes are those of the rows whose steps reach into the interval, power as it
- * counts: 0 where a cut-off holds it back.
+ * counts: 0 where a cut-off holds it back. Time that only a permanent meter's power speaks for adds
+ * energy and leaves volume, temperatures and ΔT alone; it is summed apart, so that their means stay
+ * means over the time they were measured in.
  *
  * Example: 28.8 m³/h on the return at 6.90 → 12.80 °C for 300 s cools 16.4832 kWh.
  */
@@ -37,7 +41,7 @@ export function integrateEnergy(
   options: IntegrationOptions,
 ): IntervalEnergyColumns {
   const table = new IntervalTable(expectedIntervals(segments));
-  const powers = segments.map(({ columns }) => samplePower(columns, options));
+  const powers = segments.map((segment) => segmentPower(segment, options));
   const rows = segments.map(({ columns }, s) => new SegmentRows(columns, powers[s]!));
   const windowStart = options.window?.startMs ?? -Infinity;
   const windowEnd = options.window?.endMs ?? Infinity;
@@ -85,8 +89,9 @@ export function integrateEnergy(
     (segment, row) => {
       const instant = segments[segment]!.columns.instantMs[row]!;
       if (instant < windowStart || instant >= windowEnd) return;
-      const counted = rows[segment]!.countedAs(row);
-      table.sums[table.baseAt(instant) + counted]! += 1;
+      const base = table.baseAt(instant);
+      table.sums[base + rows[segment]!.countedAs(row)]! += 1;
+      if (powers[segment]!.register[row] === AGAINST) table.sums[base + SUM.againstRows]! += 1;
     },
   );
   release();
@@ -113,23 +118,60 @@ class SegmentRows {
   private readonly power: Float64Array;
   private readonly register: Uint8Array;
   private readonly quality: Uint8Array;
+  private readonly meterOnly: Uint8Array | null;
+  private readonly heatingKw: Float64Array;
+  private readonly coolingKw: Float64Array;
 
-  constructor(columns: ReadingColumns, { powerKw, register }: SamplePower) {
+  constructor(columns: ReadingColumns, { powerKw, register, meterOnly }: SamplePower) {
     this.flow = columns.flowM3PerHour ?? EMPTY;
     this.supply = columns.supplyC ?? EMPTY;
     this.back = columns.returnC ?? EMPTY;
     this.power = powerKw;
     this.register = register;
     this.quality = columns.quality;
+    this.meterOnly = meterOnly;
+    this.heatingKw = columns.heatingKw ?? EMPTY;
+    this.coolingKw = columns.coolingKw ?? EMPTY;
   }
 
   /** The sum in which a row is counted. */
   countedAs(row: number): number {
     if (this.register[row] !== UNUSABLE) return SUM.measuredRows;
+    // The reading that opens a counter's first step was read like the others.
+    if (this.quality[row] === OPENING) return SUM.measuredRows;
     return this.quality[row] === EXCLUDED ? SUM.excludedRows : SUM.noReadingRows;
   }
 
+  /** Energy by the meter alone: power of one register, or of both, for a weight of time. */
+  private addMetered(sums: Float64Array, base: number, row: number, seconds: number): void {
+    sums[base + SUM.coveredS]! += seconds;
+    sums[base + SUM.meterOnlyS]! += seconds;
+    const register = this.register[row]!;
+    const hours = seconds / 3600;
+    const power = this.power[row]!;
+    if (register === HEATING || register === COOLING) {
+      const at = base + (register === HEATING ? SUM.heating : SUM.cooling);
+      sums[at + energyKwh]! += Math.abs(power) * hours;
+      sums[at + runningS]! += seconds;
+    } else if (register === BOTH) {
+      sums[base + SUM.heating + energyKwh]! += this.heatingKw[row]! * hours;
+      sums[base + SUM.heating + runningS]! += seconds;
+      sums[base + SUM.cooling + energyKwh]! += this.coolingKw[row]! * hours;
+      sums[base + SUM.cooling + runningS]! += seconds;
+      // Its water moved, but belongs to neither register alone.
+      const volume = this.flow[row]! * hours;
+      if (volume === volume) sums[base + SUM.volumeM3]! += volume;
+    }
+    const counted = register === AGAINST ? 0 : power;
+    if (!(sums[base + SUM.minPowerKw]! <= counted)) sums[base + SUM.minPowerKw] = counted;
+    if (!(sums[base + SUM.maxPowerKw]! >= counted)) sums[base + SUM.maxPowerKw] = counted;
+  }
+
   addTo(sums: Float64Array, base: number, row: number, seconds: number): void {
+    if (this.meterOnly !== null && this.meterOnly[row] === 1) {
+      this.addMetered(sums, base, row, seconds);
+      return;
+    }
     const flow = this.flow[row]!;
     const supply = this.supply[row]!;
     const back = this.back[row]!;

@@ -42,7 +42,7 @@ export interface IntervalEnergyColumns {
   readonly maxPowerKw: Float64Array;
   readonly minFlowM3PerHour: Float64Array;
   readonly maxFlowM3PerHour: Float64Array;
-  /** ∫ θ dt in °C·s over covered time; divide by coveredS for the mean. */
+  /** ∫ θ dt in °C·s; divide by coveredS − meterOnlyS for the mean. */
   readonly supplyCs: Float64Array;
   readonly returnCs: Float64Array;
   /** Rows whose instant falls in the interval, by quality. */
@@ -51,4 +51,8 @@ export interface IntervalEnergyColumns {
   readonly noReadingRows: Float64Array;
   /** 1 where a step was split in proportion at a boundary of this interval. */
   readonly apportioned: Uint8Array;
+  /** Seconds of the covered time that only a permanent meter's power speaks for: no volume, no ΔT. */
+  readonly meterOnlyS: Float64Array;
+  /** Rows of a meter's power against the register of the loop's service. */
+  readonly againstRows: Float64Array;
 }

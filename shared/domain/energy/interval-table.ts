@@ -22,6 +22,8 @@ export const Sum = {
   apportioned: 14,
   heating: 15,
   cooling: 21,
+  meterOnlyS: 27,
+  againstRows: 28,
 } as const;
 
 /** Offsets inside a register, from `Sum.heating` or `Sum.cooling`. */
@@ -34,7 +36,7 @@ export const RegisterSum = {
   runningS: 5,
 } as const;
 
-const STRIDE = 27;
+const STRIDE = 29;
 /** Taken out of its module once: it is asked for every row. */
 const LENGTH_MS = INTERVAL_MS;
 
@@ -110,6 +112,8 @@ export class IntervalTable {
       excludedRows: all[Sum.excludedRows]!,
       noReadingRows: all[Sum.noReadingRows]!,
       apportioned: Uint8Array.from(all[Sum.apportioned]!),
+      meterOnlyS: all[Sum.meterOnlyS]!,
+      againstRows: all[Sum.againstRows]!,
     };
   }
 }

@@ -7,6 +7,11 @@ import { RowQuality, type ReadingColumns } from "../readings/reading-columns";
  * P = q·ρ(θ_m)/3600·[h(θ_s) − h(θ_r)] in kW, with q in m³/h, ρ at the side where the flow meter
  * sits, and h at the loop's pressure. The fluid gives off heat where P > 0 (heating) and takes it up
  * where P < 0 (cooling). Example: 28.8 m³/h on the return, 6.90 → 12.80 °C → −197.798 kW.
+ *
+ * Where a row holds the power of a permanent meter, that is its power; cut-offs do not apply to it.
+ * In a loop of one service a power of the other sign counts in neither register: it is "against the
+ * register" and counted as such. Two counters of one meter may move in the same step: then the row
+ * runs in both registers, and nothing is netted.
  */
 export type MeterSide = "supply" | "return";
 export type LoopService = "heating" | "cooling" | "changeover";
@@ -36,6 +41,10 @@ export const Register = {
   cooling: 3,
   /** A cut-off keeps it out of both registers. */
   suppressed: 4,
+  /** A meter's power of the sign that the loop's service cannot have. */
+  against: 5,
+  /** A meter's heating and cooling counters both moved. */
+  both: 6,
 } as const;
 
 export interface SamplePower {
@@ -43,6 +52,8 @@ export interface SamplePower {
   readonly powerKw: Float64Array;
   /** One {@link Register} code a row. */
   readonly register: Uint8Array;
+  /** 1 where the energy is a meter's and no register's water; null where no row has such a power. */
+  readonly meterOnly: Uint8Array | null;
 }
 
 // Taken out of its module once: it is compared with in every row.
@@ -94,11 +105,54 @@ class Remembered {
 
 /** Power and register of every row; see the method above. */
 export function samplePower(columns: ReadingColumns, options: PowerOptions): SamplePower {
-  const { flowM3PerHour, supplyC, returnC, quality } = columns;
-  const count = quality.length;
+  const count = columns.quality.length;
   const powerKw = new Float64Array(count).fill(NaN);
   const register = new Uint8Array(count);
-  if (!flowM3PerHour || !supplyC || !returnC) return { powerKw, register };
+  formPower(columns, options, powerKw, register);
+  const isMetered = !!columns.powerKw || !!columns.heatingKw || !!columns.coolingKw;
+  const meterOnly = isMetered ? takeMetered(columns, options.service, powerKw, register) : null;
+  return { powerKw, register, meterOnly };
+}
+
+/** Puts the meter's power over the water's where there is one; see {@link SamplePower.meterOnly}. */
+function takeMetered(
+  { powerKw: metered, heatingKw, coolingKw, quality }: ReadingColumns,
+  service: LoopService,
+  powerKw: Float64Array,
+  register: Uint8Array,
+): Uint8Array {
+  const meterOnly = new Uint8Array(quality.length);
+  for (let i = 0; i < quality.length; i++) {
+    if (quality[i] !== MEASURED) continue;
+    const heating = heatingKw?.[i] ?? NaN;
+    const cooling = coolingKw?.[i] ?? NaN;
+    const counted = heating === heating || cooling === cooling;
+    const power = counted ? (heating || 0) - (cooling || 0) : (metered?.[i] ?? NaN);
+    if (power !== power) continue;
+    meterOnly[i] = register[i] === Register.unusable ? 1 : 0;
+    powerKw[i] = power;
+    if (counted && heating > 0 && cooling > 0) {
+      register[i] = Register.both;
+      meterOnly[i] = 1;
+    } else if (power > 0)
+      register[i] = !counted && service === "cooling" ? Register.against : Register.heating;
+    else if (power < 0)
+      register[i] = !counted && service === "heating" ? Register.against : Register.cooling;
+    else register[i] = Register.idle;
+  }
+  return meterOnly;
+}
+
+/** Power from flow and temperatures, into the arrays given. */
+function formPower(
+  columns: ReadingColumns,
+  options: PowerOptions,
+  powerKw: Float64Array,
+  register: Uint8Array,
+): void {
+  const { flowM3PerHour, supplyC, returnC, quality } = columns;
+  const count = quality.length;
+  if (!flowM3PerHour || !supplyC || !returnC) return;
   const { fluid, meterSide, service, cutOffs } = options;
   const { lowestC, highestC } = fluid;
   const meterC = meterSide === "supply" ? supplyC : returnC;
@@ -129,7 +183,6 @@ export function samplePower(columns: ReadingColumns, options: PowerOptions): Sam
     // Flow without a temperature difference is still flow of the loop's own service.
     else register[i] = flow !== 0 ? home : Register.idle;
   }
-  return { powerKw, register };
 }
 
 /** How many usable samples each cut-off holds back; one below both counts as below the flow's. */

@@ -14,7 +14,7 @@ export interface EnergyTotals {
   readonly maxPowerKw: number | null;
   readonly minFlowM3PerHour: number | null;
   readonly maxFlowM3PerHour: number | null;
-  /** Means over covered time; null where nothing is covered. */
+  /** Means over the time water was measured; null where it never was. */
   readonly meanSupplyC: number | null;
   readonly meanReturnC: number | null;
   readonly measuredRows: number;
@@ -22,6 +22,10 @@ export interface EnergyTotals {
   readonly noReadingRows: number;
   /** Whether any step was split at a boundary of these intervals. */
   readonly apportioned: boolean;
+  /** Part of `coveredS` that only a permanent meter's power speaks for: without volume and ΔT. */
+  readonly meterOnlyS: number;
+  /** Rows of a meter's power against the register of the loop's service; they gave no energy. */
+  readonly againstRows: number;
 }
 
 export interface RegisterTotals {
@@ -73,9 +77,27 @@ export interface DeltaTMeans {
   readonly timeMeanK: number | null;
 }
 
-export function deltaTMeans(register: RegisterTotals): DeltaTMeans {
+/** Seconds for which flow and temperatures were measured; volume and means are of this time. */
+export function waterSeconds({
+  coveredS,
+  meterOnlyS,
+}: Pick<EnergyTotals, "coveredS" | "meterOnlyS">): number {
+  const seconds = coveredS - meterOnlyS;
+  return seconds > ROUNDING_S ? seconds : 0;
+}
+
+/** What sums of seconds may differ by and still be the same time. */
+const ROUNDING_S = 1e-3;
+
+/**
+ * With time that only a meter's power speaks for, the register's energy and running time are not
+ * those of its ΔT: only the flow-weighted mean, whose both sums are the water's, remains.
+ */
+export function deltaTMeans(register: RegisterTotals, meterOnlyS = 0): DeltaTMeans {
+  const flowWeightedK = quotient(register.flowDeltaTM3K, register.volumeM3);
+  if (meterOnlyS > 0) return { flowWeightedK, energyWeightedK: null, timeMeanK: null };
   return {
-    flowWeightedK: quotient(register.flowDeltaTM3K, register.volumeM3),
+    flowWeightedK,
     energyWeightedK: quotient(register.powerDeltaTKwhK, register.energyKwh),
     timeMeanK: quotient(register.deltaTKs, register.runningS),
   };
@@ -87,7 +109,9 @@ function quotient(numerator: number, denominator: number): number | null {
 
 function sumRange(columns: IntervalEnergyColumns, from: number, to: number): EnergyTotals {
   const coveredS = sum(columns.coveredS, from, to);
-  const mean = (integral: Float64Array) => quotient(sum(integral, from, to), coveredS);
+  const meterOnlyS = sum(columns.meterOnlyS, from, to);
+  const waterS = waterSeconds({ coveredS, meterOnlyS });
+  const mean = (integral: Float64Array) => quotient(sum(integral, from, to), waterS);
   let apportioned = false;
   for (let i = from; i < to; i++) apportioned ||= columns.apportioned[i] === 1;
   return {
@@ -107,6 +131,8 @@ function sumRange(columns: IntervalEnergyColumns, from: number, to: number): Ene
     excludedRows: sum(columns.excludedRows, from, to),
     noReadingRows: sum(columns.noReadingRows, from, to),
     apportioned,
+    meterOnlyS,
+    againstRows: sum(columns.againstRows, from, to),
   };
 }
 

@@ -1,5 +1,4 @@
-import { columnToM3PerHour } from "../units/flow";
-import { columnToCelsius } from "../units/temperature";
+import { isCounter } from "./column-units";
 import { newTally, tally, type RawChannel, type RawRows, type Tally } from "./raw-rows";
 import type { ColumnUnit, RepairChoices } from "./recipe";
 import {
@@ -58,7 +57,10 @@ function blankChannel(
   choice: RepairChoices["sentinels"],
   sentinels: Tally,
 ): Float64Array {
-  const extremes = findRepeatedExtremes(channel.values, possibleRange(channel.unit));
+  // A counter rests at any number, and at its last one for as long as nothing moves.
+  const extremes = isCounter(channel.meaning)
+    ? []
+    : findRepeatedExtremes(channel.values, possibleRange(channel.unit));
   let blanked: Float64Array | null = null;
   const lowest = LOWEST_USUAL;
   const highest = HIGHEST_USUAL;
@@ -87,24 +89,4 @@ export function gather(values: Float64Array, order: Uint32Array | null): Float64
   const out = new Float64Array(order.length);
   for (let i = 0; i < order.length; i++) out[i] = values[order[i] as number] as number;
   return out;
-}
-
-/** A column in m³/h, °C or percent; the column itself where it already is. */
-export function toStoredUnit(values: Float64Array, unit: ColumnUnit): Float64Array {
-  switch (unit) {
-    case "m3/h":
-    case "degC":
-    case "%":
-      return values;
-    case "degF":
-    case "K":
-      return columnToCelsius(values.slice(), unit);
-    default:
-      return columnToM3PerHour(values.slice(), unit);
-  }
-}
-
-export function storedUnit(unit: ColumnUnit): ColumnUnit {
-  if (unit === "%") return "%";
-  return unit === "degC" || unit === "degF" || unit === "K" ? "degC" : "m3/h";
 }

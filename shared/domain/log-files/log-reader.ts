@@ -1,3 +1,4 @@
+import { isChannelMeaning } from "./column-units";
 import { CellStatus, NumberCell } from "./number-cell";
 import { MAX_PROBLEMS, newTally, tally } from "./raw-rows";
 import type { ChannelMeaning, RawRows, RemedyCode, RowProblem, RowProblemCode } from "./raw-rows";
@@ -63,7 +64,10 @@ class Reader implements LogReader {
   ) {
     this.firstDataLine = recipe.dialect.firstDataLine;
     this.time = createTimeReader(recipe);
-    this.store = new RowStore(recipe.columns.filter(isChannel), expectedRows);
+    this.store = new RowStore(
+      recipe.columns.filter(({ meaning }) => isChannelMeaning(meaning)),
+      expectedRows,
+    );
     this.columnCount = recipe.columns.reduce((most, column) => Math.max(most, column.index + 1), 0);
     this.plainRows = PlainRows.suits(recipe) ? new PlainRows(recipe, this.store) : null;
     this.tokeniser = new RowTokeniser(recipe.dialect, (row) => this.readRow(row), this.plainRows);
@@ -235,10 +239,6 @@ class Reader implements LogReader {
       remedy,
     });
   }
-}
-
-function isChannel({ meaning }: ColumnRecipe): boolean {
-  return meaning === "flow" || meaning === "supply" || meaning === "return" || meaning === "signal";
 }
 
 function startsWithDigit(cell: string): boolean {

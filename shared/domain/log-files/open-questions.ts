@@ -1,10 +1,20 @@
+import { isChannelMeaning } from "./column-units";
+import type { ChannelMeaning } from "./raw-rows";
 import type { FileRecipe } from "./recipe";
 
 /** An answer a recipe still lacks before its file can be read (`dateOrder`, `timeColumn`) or resolved. */
 export type OpenQuestion =
   | { readonly code: "dateOrder" }
   | { readonly code: "timeColumn" }
-  | { readonly code: "flowUnit" | "temperatureUnit"; readonly columnIndex: number };
+  | { readonly code: UnitQuestionCode; readonly columnIndex: number };
+
+export type UnitQuestionCode = "flowUnit" | "temperatureUnit" | "columnUnit";
+
+/** Which question asks for the unit of a column of this meaning. */
+export function unitQuestionOf(meaning: ChannelMeaning): UnitQuestionCode {
+  if (meaning === "flow") return "flowUnit";
+  return meaning === "supply" || meaning === "return" ? "temperatureUnit" : "columnUnit";
+}
 
 /** What keeps a recipe from being used, in the order of the wizard. The clock is asked by {@link resolveRows}. */
 export function openQuestions(recipe: FileRecipe): readonly OpenQuestion[] {
@@ -13,10 +23,8 @@ export function openQuestions(recipe: FileRecipe): readonly OpenQuestion[] {
     recipe.columns.some((column) => column.meaning === meaning);
   if (!has("time") && !has("date")) questions.push({ code: "timeColumn" });
   for (const { index, meaning, unit } of recipe.columns) {
-    if (unit !== null) continue;
-    if (meaning === "flow") questions.push({ code: "flowUnit", columnIndex: index });
-    if (meaning === "supply" || meaning === "return")
-      questions.push({ code: "temperatureUnit", columnIndex: index });
+    if (unit !== null || !isChannelMeaning(meaning) || meaning === "signal") continue;
+    questions.push({ code: unitQuestionOf(meaning), columnIndex: index });
   }
   if (recipe.time.format.kind === "calendar" && recipe.time.format.order === null)
     questions.push({ code: "dateOrder" });

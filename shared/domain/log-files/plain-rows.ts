@@ -1,3 +1,4 @@
+import { isChannelMeaning } from "./column-units";
 import type { FileRecipe } from "./recipe";
 import type { RowStore } from "./row-store";
 
@@ -74,7 +75,7 @@ export class PlainRows implements RowsAhead {
     const splits = columns.filter(
       ({ meaning }) => meaning === "date" || meaning === "timeOfDay",
     ).length;
-    const channels = columns.filter(({ meaning }) => CHANNELS.has(meaning)).length;
+    const channels = columns.filter(({ meaning }) => isChannelMeaning(meaning)).length;
     return (
       dialect.quote === null &&
       dialect.separator !== " " &&
@@ -205,8 +206,6 @@ export class PlainRows implements RowsAhead {
     return at + 1;
   }
 }
-
-const CHANNELS: ReadonlySet<string> = new Set(["flow", "supply", "return", "signal"]);
 
 /** Two digits at a place as a number, negative where there are none; looks no further than the first other byte. */
 function twoDigits(bytes: Uint8Array, at: number): number {

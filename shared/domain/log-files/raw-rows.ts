@@ -2,7 +2,15 @@ import type { ColumnUnit } from "./recipe";
 import type { RowExample } from "./repair-step";
 
 /** The columns of a file that energy or its quality needs. */
-export type ChannelMeaning = "flow" | "supply" | "return" | "signal";
+export type ChannelMeaning =
+  | "flow"
+  | "supply"
+  | "return"
+  | "signal"
+  | "power"
+  | "volumeCounter"
+  | "heatingCounter"
+  | "coolingCounter";
 
 /** One channel as the file has it: original unit, original decimals, file order; NaN where no number stands. */
 export interface RawChannel {

@@ -1,3 +1,4 @@
+import type { PositivePower } from "../readings/orient-power";
 import type { SeriesKind } from "../readings/reading-columns";
 
 /**
@@ -9,6 +10,17 @@ export interface FileRecipe {
   readonly columns: readonly ColumnRecipe[];
   readonly time: TimeRecipe;
   readonly seriesKind: SeriesKind;
+  /** Somebody chose the kind, though the header says otherwise. */
+  readonly kindChosen?: boolean;
+  /** Only for files of a permanent meter. */
+  readonly meter?: MeterRecipe;
+}
+
+export interface MeterRecipe {
+  /** What a positive power is; asked where the loop changes over and no temperature tells. */
+  readonly positivePower: PositivePower | null;
+  /** UTC instants (ISO 8601) at which the meter was exchanged. */
+  readonly exchangedAt: readonly string[];
 }
 
 export type TextEncoding = "utf-8" | "utf-16le" | "utf-16be" | "windows-1252";
@@ -25,11 +37,28 @@ export interface Dialect {
 }
 
 export type ColumnMeaning =
-  "time" | "date" | "timeOfDay" | "flow" | "supply" | "return" | "signal" | "skip";
+  | "time"
+  | "date"
+  | "timeOfDay"
+  | "flow"
+  | "supply"
+  | "return"
+  | "signal"
+  /** Heat power of a permanent meter. */
+  | "power"
+  | "volumeCounter"
+  | "heatingCounter"
+  | "coolingCounter"
+  | "skip";
 
 export type FlowUnit = "m3/h" | "L/s" | "L/min" | "US gpm";
 export type TemperatureUnit = "degC" | "degF" | "K";
-export type ColumnUnit = FlowUnit | TemperatureUnit | "%";
+/** MBH is a thousand Btu an hour, ton a ton of refrigeration. */
+export type MeterPowerUnit = "kW" | "MW" | "W" | "MBH" | "ton";
+export type CountedVolumeUnit = "m3" | "L" | "US gal" | "ft3";
+export type CountedEnergyUnit = "kWh" | "MWh" | "MJ" | "GJ" | "kBtu" | "MMBtu";
+export type ColumnUnit =
+  FlowUnit | TemperatureUnit | "%" | MeterPowerUnit | CountedVolumeUnit | CountedEnergyUnit;
 
 export type DecimalMark = "." | ",";
 
@@ -42,6 +71,8 @@ export interface ColumnRecipe {
   /** Null for times and skipped columns, and for a quantity whose unit is still to be chosen. */
   readonly unit: ColumnUnit | null;
   readonly decimalMark: DecimalMark;
+  /** Where a counter starts from zero again, in the column's unit; null or left out where unknown. */
+  readonly capacity?: number | null;
 }
 
 export type DateOrder = "dayMonthYear" | "monthDayYear" | "yearMonthDay";

@@ -26,6 +26,10 @@ export type RepairStepCode =
   | "overlapEqual"
   | "overlapDifferent"
   | "unitConversion"
+  | "counterRollover"
+  | "counterReset"
+  | "counterJump"
+  | "counterExchange"
   | "footer";
 
 export interface RowExample {

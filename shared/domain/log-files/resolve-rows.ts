@@ -1,5 +1,6 @@
 import { RowQuality, type ReadingColumns } from "../readings/reading-columns";
-import { blankSentinels, gather, storedUnit, toStoredUnit } from "./clean-values";
+import { blankSentinels, gather } from "./clean-values";
+import { columnToStoredUnit, storedUnitOf } from "./column-units";
 import { findGaps, nominalStepMs } from "./find-gaps";
 import { orderRows } from "./order-rows";
 import {
@@ -12,12 +13,13 @@ import {
 } from "./raw-rows";
 import type { ColumnUnit, FileRecipe, RepairChoices } from "./recipe";
 import type { Gap, RepairStep, RepairStepCode, RowExample } from "./repair-step";
+import { unitQuestionOf } from "./open-questions";
 import { resolveTimes } from "./resolve-times";
 
 /** A choice that must be made before the rows can be stored. */
 export type RepairQuestion =
   | { readonly code: "loggerClock" }
-  | { readonly code: "flowUnit" | "temperatureUnit"; readonly columnIndex: number }
+  | { readonly code: "flowUnit" | "temperatureUnit" | "columnUnit"; readonly columnIndex: number }
   | {
       readonly code: "conflictingRepeats" | "weakSignal";
       readonly count: number;
@@ -93,7 +95,7 @@ export function resolveRows(
     ordered.order === null ? raw.line : ordered.order.map((row) => raw.line[row] as number);
   const original = raw.channels.map((channel, i): OriginalChannel => ({
     meaning: channel.meaning,
-    unit: channel.unit ?? "m3/h",
+    unit: channel.unit ?? storedUnitOf(channel.meaning),
     decimals: channel.decimals,
     values: gather(cleaned.values[i] as Float64Array, ordered.order),
   }));
@@ -102,16 +104,23 @@ export function resolveRows(
     const channel = original.find((other) => other.meaning === meaning);
     if (channel === undefined) return null;
     countConversion(conversion, channel);
-    return toStoredUnit(channel.values, channel.unit);
+    return columnToStoredUnit(channel.values, channel.unit);
   };
   const flowM3PerHour = stored("flow");
   const supplyC = stored("supply");
   const returnC = stored("return");
   const signalPercent = stored("signal");
+  const powerKw = stored("power");
+  const volumeCounterM3 = stored("volumeCounter");
+  const heatingCounterKwh = stored("heatingCounter");
+  const coolingCounterKwh = stored("coolingCounter");
+  const metered = [powerKw, heatingCounterKwh, coolingCounterKwh].filter(
+    (channel) => channel !== null,
+  );
   const { quality, weakSignal } = judgeRows(
     instantMs,
     line,
-    [flowM3PerHour, supplyC, returnC],
+    noReadings(instantMs.length, [volumeCounterM3 ?? flowM3PerHour, supplyC, returnC], metered),
     signalPercent,
     choices,
   );
@@ -128,7 +137,18 @@ export function resolveRows(
     columns:
       questions.length > 0
         ? null
-        : { instantMs, flowM3PerHour, supplyC, returnC, signalPercent, quality },
+        : {
+            instantMs,
+            flowM3PerHour,
+            supplyC,
+            returnC,
+            signalPercent,
+            ...(powerKw && { powerKw }),
+            ...(volumeCounterM3 && { volumeCounterM3 }),
+            ...(heatingCounterKwh && { heatingCounterKwh }),
+            ...(coolingCounterKwh && { coolingCounterKwh }),
+            quality,
+          },
     original,
     line,
     steps: [
@@ -154,7 +174,7 @@ export function resolveRows(
 function unitQuestions(raw: RawRows): RepairQuestion[] {
   return raw.channels.flatMap(({ unit, meaning, columnIndex }: RawChannel): RepairQuestion[] => {
     if (unit !== null || meaning === "signal") return [];
-    return [{ code: meaning === "flow" ? "flowUnit" : "temperatureUnit", columnIndex }];
+    return [{ code: unitQuestionOf(meaning), columnIndex }];
   });
 }
 
@@ -202,7 +222,7 @@ function asQuestion(
 }
 
 function countConversion(into: Tally, { unit, values, meaning }: OriginalChannel): void {
-  const target = storedUnit(unit);
+  const target = storedUnitOf(meaning);
   if (unit === target) return;
   let cells = 0;
   for (let i = 0; i < values.length; i++) if (!Number.isNaN(values[i])) cells++;
@@ -210,20 +230,38 @@ function countConversion(into: Tally, { unit, values, meaning }: OriginalChannel
   into.countByKind[`${meaning}: ${unit} → ${target}`] = cells;
 }
 
+/**
+ * The quality of rows by what they lack: any of the water's channels the file has, unless a
+ * permanent meter's power or counter is there; and in a file of a meter, that, unless the water's
+ * three are all there.
+ */
+function noReadings(
+  count: number,
+  water: readonly (Float64Array | null)[],
+  metered: readonly Float64Array[],
+): Uint8Array {
+  const quality = new Uint8Array(count);
+  const noReading = RowQuality.noReading;
+  for (const channel of water) {
+    if (channel === null) {
+      if (metered.length > 0) quality.fill(noReading);
+      continue;
+    }
+    for (let i = 0; i < count; i++) if (Number.isNaN(channel[i])) quality[i] = noReading;
+  }
+  for (const channel of metered)
+    for (let i = 0; i < count; i++) if (!Number.isNaN(channel[i])) quality[i] = RowQuality.measured;
+  return quality;
+}
+
 function judgeRows(
   instantMs: Float64Array,
   line: Uint32Array,
-  needed: readonly (Float64Array | null)[],
+  quality: Uint8Array,
   signalPercent: Float64Array | null,
   choices: RepairChoices,
 ): { quality: Uint8Array; weakSignal: Tally } {
-  const quality = new Uint8Array(instantMs.length);
   const weakSignal = newTally();
-  for (const channel of needed) {
-    if (channel === null) continue;
-    for (let i = 0; i < channel.length; i++)
-      if (Number.isNaN(channel[i])) quality[i] = RowQuality.noReading;
-  }
   if (signalPercent === null) return { quality, weakSignal };
   for (let i = 0; i < signalPercent.length; i++) {
     const signal = signalPercent[i] as number;

@@ -1,6 +1,6 @@
 import type { Gap } from "../log-files/repair-step";
 import { durationMs, type Interval } from "../time/interval";
-import { forEachCoveredStep, SURVEY_GAP_FACTOR, usableRows } from "./covered-steps";
+import { forEachCoveredStep, SURVEY_GAP_FACTOR, usableReadings } from "./covered-steps";
 import type { ReadingColumns, ReadingSegment } from "./reading-columns";
 
 /** How much of a stretch of time usable readings speak for. */
@@ -11,16 +11,14 @@ export interface Coverage {
   readonly completeness: number | null;
 }
 
-/** Coverage of `interval` by rows that hold flow and both temperatures. */
+/** Coverage of `interval` by rows that hold flow and both temperatures, or a meter's power. */
 export function coverage(
   segments: readonly ReadingSegment[],
   interval: Interval,
   gapFactor = SURVEY_GAP_FACTOR,
 ): Coverage {
   let coveredMs = 0;
-  const usable = segments.map(({ columns }) =>
-    usableRows(columns.quality, [columns.flowM3PerHour, columns.supplyC, columns.returnC]),
-  );
+  const usable = segments.map(({ columns }) => usableReadings(columns));
   forEachCoveredStep(
     segments,
     usable,

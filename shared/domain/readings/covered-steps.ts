@@ -1,4 +1,4 @@
-import { RowQuality, type ReadingSegment } from "./reading-columns";
+import { RowQuality, type ReadingColumns, type ReadingSegment } from "./reading-columns";
 
 /**
  * Which stretch of time each row, or pair of rows, speaks for.
@@ -13,6 +13,14 @@ import { RowQuality, type ReadingSegment } from "./reading-columns";
 
 /** Survey rule; billing tightens it to 1.5 of a calculation, never of what is stored. */
 export const SURVEY_GAP_FACTOR = 3;
+export const BILLING_GAP_FACTOR = 1.5;
+
+export type GapRule = "survey" | "billing";
+/** A step over this many nominal steps is a hole. */
+export const GAP_FACTOR: Readonly<Record<GapRule, number>> = {
+  survey: SURVEY_GAP_FACTOR,
+  billing: BILLING_GAP_FACTOR,
+};
 
 /** `first` and `second` are row indexes in their segments; for a mean both name the same row. */
 export type VisitStep = (
@@ -117,6 +125,18 @@ export function usableRows(
     if (channel === null) continue;
     // NaN is the one value that differs from itself; asking Number costs four times as much.
     for (let i = 0; i < channel.length; i++) if (channel[i] !== channel[i]) usable[i] = 0;
+  }
+  return usable;
+}
+
+/** 1 for measured rows that say how much heat moved: by flow and both temperatures, or by a meter. */
+export function usableReadings(columns: ReadingColumns): Uint8Array {
+  const { quality, flowM3PerHour, supplyC, returnC } = columns;
+  const usable = usableRows(quality, [flowM3PerHour, supplyC, returnC]);
+  for (const metered of [columns.powerKw, columns.heatingKw, columns.coolingKw]) {
+    if (!metered) continue;
+    for (let i = 0; i < usable.length; i++)
+      if (metered[i] === metered[i] && quality[i] === RowQuality.measured) usable[i] = 1;
   }
   return usable;
 }

@@ -13,6 +13,8 @@ export interface MergeSource {
   /** Greater wins. */
   readonly precedence: number;
   readonly kind: SeriesKind;
+  /** Rows of counters, which make steps only with each other. */
+  readonly counts?: boolean;
   readonly nominalStepMs: number;
   /** Strictly ascending. */
   readonly instantMs: Float64Array;
@@ -30,7 +32,11 @@ const SAME_STEP = 0.1;
 
 export function sameSeries(a: MergeSource, b: MergeSource): boolean {
   const most = Math.max(a.nominalStepMs, b.nominalStepMs);
-  return a.kind === b.kind && Math.abs(a.nominalStepMs - b.nominalStepMs) <= SAME_STEP * most;
+  return (
+    a.kind === b.kind &&
+    (a.counts ?? false) === (b.counts ?? false) &&
+    Math.abs(a.nominalStepMs - b.nominalStepMs) <= SAME_STEP * most
+  );
 }
 
 /** The kept rows of all sources as runs in ascending order of time. */

@@ -1,5 +1,10 @@
 import type { Interval } from "../time/interval";
-import { forEachCoveredStep, segmentOrder, SURVEY_GAP_FACTOR, usableRows } from "./covered-steps";
+import {
+  forEachCoveredStep,
+  segmentOrder,
+  SURVEY_GAP_FACTOR,
+  usableReadings,
+} from "./covered-steps";
 import { RowQuality, type ReadingSegment } from "./reading-columns";
 
 /**
@@ -19,7 +24,11 @@ export type LeftOutReason = "weakSignal" | "noReading" | "noRows" | "noTemperatu
  * The whole of `window` as runs, in order, without holes between them. Time before the first and
  * after the last row is missing.
  */
-export function qualityRuns(segments: readonly ReadingSegment[], window: Interval): QualityRun[] {
+export function qualityRuns(
+  segments: readonly ReadingSegment[],
+  window: Interval,
+  gapFactor = SURVEY_GAP_FACTOR,
+): QualityRun[] {
   const runs: QualityRun[] = [];
   const rest = new LeftOutCounter(segments);
   let openMs = window.startMs;
@@ -27,9 +36,7 @@ export function qualityRuns(segments: readonly ReadingSegment[], window: Interva
   const close = (untilMs: number) => {
     if (untilMs > openMs) runs.push(rest.run(openMs, untilMs));
   };
-  const usable = segments.map(({ columns }) =>
-    usableRows(columns.quality, [columns.flowM3PerHour, columns.supplyC, columns.returnC]),
-  );
+  const usable = segments.map(({ columns }) => usableReadings(columns));
   const endMeasured = () => {
     if (measuredFrom < openMs)
       runs.push({ startMs: measuredFrom, endMs: openMs, kind: "measured", rows: 0, reason: null });
@@ -38,7 +45,7 @@ export function qualityRuns(segments: readonly ReadingSegment[], window: Interva
   forEachCoveredStep(
     segments,
     usable,
-    SURVEY_GAP_FACTOR,
+    gapFactor,
     (_s, _row, _s2, _row2, fromMs, toMs) => {
       const from = Math.max(fromMs, window.startMs);
       const to = Math.min(toMs, window.endMs);
@@ -81,7 +88,8 @@ class LeftOutCounter {
         if (at >= endMs + late) break;
         if (quality[row] === RowQuality.excluded) counts.excluded++;
         else if (quality[row] === RowQuality.noReading) counts.noReading++;
-        else if (isUnusable(segment, row)) counts.noTemperature++;
+        else if (quality[row] !== RowQuality.opening && isUnusable(segment, row))
+          counts.noTemperature++;
         else if (at === startMs) startsOnRow = true;
       }
     }
@@ -100,6 +108,11 @@ class LeftOutCounter {
 }
 
 function isUnusable({ columns }: ReadingSegment, row: number): boolean {
+  const { powerKw, heatingKw, coolingKw } = columns;
+  const isMetered = [powerKw, heatingKw, coolingKw].some(
+    (channel) => channel && !Number.isNaN(channel[row]),
+  );
+  if (isMetered) return false;
   return (
     columns.supplyC === null ||
     columns.returnC === null ||

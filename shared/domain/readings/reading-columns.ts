@@ -1,9 +1,11 @@
+import type { FluidSpan } from "./corrections/fluid-span";
+
 /**
  * Readings of one metering point as parallel columns.
  *
  * A column is a `Float64Array`, one entry a row; `NaN` stands for "no reading" (the one place where
  * unknown is not `null`, because typed arrays cannot hold it). Instants are UTC milliseconds since
- * 1970, strictly ascending. Units are fixed: m³/h, °C, percent.
+ * 1970, strictly ascending. Units are fixed: m³/h, °C, percent, kW; counters in m³ and kWh.
  */
 export interface ReadingColumns {
   readonly instantMs: Float64Array;
@@ -12,8 +14,49 @@ export interface ReadingColumns {
   readonly returnC: Float64Array | null;
   /** Signal strength in percent where the logger wrote one. */
   readonly signalPercent: Float64Array | null;
+  /** Heat power of a permanent meter, heating positive once segments are resolved. */
+  readonly powerKw?: Float64Array | null;
+  /** Mean powers from the counters of a permanent meter, each ≥ 0, over the step ending at the label. */
+  readonly heatingKw?: Float64Array | null;
+  readonly coolingKw?: Float64Array | null;
+  /** Counters as read. Resolving turns them into flow and power: see `counter-steps`. */
+  readonly volumeCounterM3?: Float64Array | null;
+  readonly heatingCounterKwh?: Float64Array | null;
+  readonly coolingCounterKwh?: Float64Array | null;
   /** One {@link RowQuality} code a row. */
   readonly quality: Uint8Array;
+}
+
+export const READING_CHANNELS = [
+  "flowM3PerHour",
+  "supplyC",
+  "returnC",
+  "signalPercent",
+  "powerKw",
+  "heatingKw",
+  "coolingKw",
+  "volumeCounterM3",
+  "heatingCounterKwh",
+  "coolingCounterKwh",
+] as const;
+export type ReadingChannel = (typeof READING_CHANNELS)[number];
+export const COUNTER_CHANNELS = [
+  "volumeCounterM3",
+  "heatingCounterKwh",
+  "coolingCounterKwh",
+] as const satisfies readonly ReadingChannel[];
+
+/** Each channel that is there through `change`; the others stay as they are. */
+export function mapChannels(
+  columns: ReadingColumns,
+  change: (values: Float64Array, channel: ReadingChannel) => Float64Array,
+): Pick<ReadingColumns, ReadingChannel> {
+  const changed: Partial<Record<ReadingChannel, Float64Array>> = {};
+  for (const channel of READING_CHANNELS) {
+    const values = columns[channel];
+    if (values) changed[channel] = change(values, channel);
+  }
+  return { flowM3PerHour: null, supplyC: null, returnC: null, signalPercent: null, ...changed };
 }
 
 /** What a row is worth. The code is stored; never renumber. */
@@ -24,6 +67,8 @@ export const RowQuality = {
   excluded: 1,
   /** The logger wrote that it had no reading (a sentinel or an empty cell) in a channel energy needs. */
   noReading: 2,
+  /** A counter's reading that opens a step: read, and speaking for no time. Made, never stored. */
+  opening: 3,
 } as const;
 export type RowQualityCode = (typeof RowQuality)[keyof typeof RowQuality];
 
@@ -39,4 +84,6 @@ export interface ReadingSegment {
   readonly kind: SeriesKind;
   readonly nominalStepMs: number;
   readonly columns: ReadingColumns;
+  /** Stretches in which another fluid than the loop's filled it; left out where there are none. */
+  readonly fluids?: readonly FluidSpan[];
 }

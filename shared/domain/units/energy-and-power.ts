@@ -6,13 +6,14 @@
  */
 export const JOULES_PER_BTU = 1055.05585262;
 
-export type PowerUnit = "kW" | "MW" | "Btu/h" | "MBH" | "ton";
+export type PowerUnit = "W" | "kW" | "MW" | "Btu/h" | "MBH" | "ton";
 export type EnergyUnit = "kWh" | "MWh" | "MJ" | "GJ" | "kBtu" | "MMBtu" | "ton-h";
 
 const KW_PER_BTU_PER_HOUR = JOULES_PER_BTU / 3_600_000;
 const KW_PER_TON = (288_000 / 24) * KW_PER_BTU_PER_HOUR;
 
 export const KW_PER: Readonly<Record<PowerUnit, number>> = {
+  W: 0.001,
   kW: 1,
   MW: 1000,
   "Btu/h": KW_PER_BTU_PER_HOUR,

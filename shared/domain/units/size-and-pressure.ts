@@ -7,7 +7,7 @@ import { LITRES_PER_US_GALLON } from "./flow";
 export type LengthUnit = "mm" | "in" | "m" | "ft";
 export type SpeedUnit = "m/s" | "ft/s";
 export type AreaUnit = "m2" | "ft2";
-export type VolumeUnit = "m3" | "L" | "US gal";
+export type VolumeUnit = "m3" | "L" | "US gal" | "ft3";
 export type PressureUnit = "MPa" | "bar" | "kPa" | "psi";
 
 export const MM_PER: Readonly<Record<LengthUnit, number>> = { mm: 1, in: 25.4, m: 1000, ft: 304.8 };
@@ -17,6 +17,7 @@ export const M3_PER: Readonly<Record<VolumeUnit, number>> = {
   m3: 1,
   L: 0.001,
   "US gal": LITRES_PER_US_GALLON / 1000,
+  ft3: 0.3048 ** 3,
 };
 export const MPA_PER: Readonly<Record<PressureUnit, number>> = {
   MPa: 1,
