@@ -19,7 +19,9 @@ export const correctionChange = z.discriminatedUnion("kind", [
       .object({
         channel: z.enum(["flow", "supply", "return", "power", "deltaT", "signal"]),
         is: z.enum(["below", "above"]),
-        value: z.number().describe("m³/h, °C, kW, K or %"),
+        value: z
+          .number()
+          .describe("m³/h, °C, kW, K or %; ΔT and power by size, power a meter's own"),
       })
       .nullable(),
   }),
@@ -41,7 +43,16 @@ export const correctionChange = z.discriminatedUnion("kind", [
     addK: z.number().min(-10).max(10).describe("added to what the probe read"),
     bathCheckId: id.nullable(),
   }),
-  z.object({ kind: z.literal("swapSides"), ...span }),
+  z.object({
+    kind: z.literal("swapSides"),
+    ...span,
+    swapped: z
+      .enum(["probes", "channels"])
+      .default("probes")
+      .describe(
+        "probes: they sat on the other pipes than recorded, so a probe's offset goes to the other side with its readings; channels: the log named them the wrong way round, the probes were where they were recorded",
+      ),
+  }),
   z.object({ kind: z.literal("flipFlow"), ...span }),
   z.object({
     kind: z.literal("scaleByBore"),
@@ -67,6 +78,7 @@ export const correctionEffect = z.object({
   after: registers,
   rowsChanged: z.number().int(),
 });
+export type CorrectionEffect = z.infer<typeof correctionEffect>;
 
 export const correction = z.object({
   id,
