@@ -105,6 +105,7 @@ export function siteOf(more: Partial<Site> = {}): Site {
     zone: "Europe/London",
     currency: "GBP",
     unitSystem: "si",
+    occupiedHours: { weekdays: [1, 2, 3, 4, 5], start: "07:00", end: "19:00", assumed: true },
     address: null,
     isDemo: false,
     archivedAt: null,

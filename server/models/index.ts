@@ -6,6 +6,7 @@ import { BoreVersion } from "./bore-version";
 import { Building } from "./building";
 import { Invitation } from "./invitation";
 import { Loop } from "./loop";
+import { LoopPump } from "./loop-pump";
 import { Job } from "./job";
 import { LogFile } from "./log-file";
 import { LogImport } from "./log-import";
@@ -39,6 +40,7 @@ const models: readonly ModelDefinition[] = [
   Site,
   Building,
   Loop,
+  LoopPump,
   MeteringPoint,
   BoreVersion,
   LogImport,

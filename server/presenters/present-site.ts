@@ -1,4 +1,5 @@
 import type { Site as SiteAnswer } from "@shared/contracts/places";
+import { clockOfMinute } from "@shared/domain/analysis/occupied-hours";
 import { instantTextOrNull } from "@server/database/conversions";
 import type { Site } from "@server/models/site";
 import type { Actor } from "@server/policies/actor";
@@ -13,6 +14,15 @@ export interface SiteFacts {
   readonly holdsFiles: boolean;
 }
 
+export function presentOccupied({ occupied }: Site): SiteAnswer["occupiedHours"] {
+  return {
+    weekdays: [...occupied.weekdays],
+    start: clockOfMinute(occupied.startMinute),
+    end: clockOfMinute(occupied.endMinute),
+    assumed: occupied.assumed,
+  };
+}
+
 export function presentSite(site: Site, facts: SiteFacts, actor: Actor): SiteAnswer {
   const { editSites, importLogs } = can(actor);
   const inUse = site.archivedAt === null;
@@ -23,6 +33,7 @@ export function presentSite(site: Site, facts: SiteFacts, actor: Actor): SiteAns
     currency: site.currency,
     unitSystem: site.unitSystem,
     address: site.address,
+    occupiedHours: presentOccupied(site),
     isDemo: site.isDemo,
     archivedAt: instantTextOrNull(site.archivedAt),
     buildingCount: facts.buildingCount,

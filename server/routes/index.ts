@@ -7,6 +7,7 @@ import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
 import { placesRoutes } from "./places-routes";
 import { sessionRoutes } from "./session-routes";
+import { shapeRoutes } from "./shape-routes";
 import { systemRoutes } from "./system-routes";
 import { todayRoutes } from "./today-routes";
 
@@ -20,6 +21,7 @@ const productEndpoints: readonly Endpoint[] = [
   ...placesRoutes,
   ...importRoutes,
   ...energyRoutes,
+  ...shapeRoutes,
   ...todayRoutes,
 ];
 

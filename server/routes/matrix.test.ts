@@ -75,6 +75,11 @@ const matrix = `
   getReadings              ✓   ✓   ✓   ✓   –   –
   downloadIntervals        ✓   ✓   ✓   ✓   –   –
   downloadReadings         ✓   ✓   ✓   ✓   –   –
+  getPointShape            ✓   ✓   ✓   ✓   –   –
+  downloadDurationCurve    ✓   ✓   ✓   ✓   –   –
+  getLoopPump              ✓   ✓   ✓   ✓   –   –
+  saveLoopPump             ✓   –   ✓   –   –   –
+  removeLoopPump           ✓   –   ✓   –   –   –
   getDayMarks              ✓   ✓   ✓   ✓   –   –
   getToday                 ✓   ✓   ✓   ✓   –   –
 `;

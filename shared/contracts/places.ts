@@ -30,15 +30,41 @@ export const currency = z
 const ability = z.object({ edit: z.boolean(), archive: z.boolean(), remove: z.boolean() });
 
 // Sites ---------------------------------------------------------------------------------------
+/** On the quarter-hour, because energy is stored by it. */
+const clock = (pattern: RegExp) => z.string().regex(pattern, "a quarter-hour, such as 07:00");
+export const occupiedHours = z
+  .object({
+    weekdays: z
+      .array(z.number().int().min(1).max(7))
+      .min(1)
+      .max(7)
+      .refine((days) => new Set(days).size === days.length, "each weekday once")
+      .describe("1 Monday to 7 Sunday"),
+    start: clock(/^([01]\d|2[0-3]):(00|15|30|45)$/),
+    end: clock(/^(([01]\d|2[0-3]):(00|15|30|45)|24:00)$/).describe(
+      "later than start; 24:00 at most",
+    ),
+  })
+  .refine(({ start, end }) => start < end, {
+    path: ["end"],
+    message: "must be later than the start",
+  });
 const siteFields = z.object({
   name,
   zone: ianaZone,
   currency,
   unitSystem,
   address: z.string().trim().max(300).nullable(),
+  occupiedHours: occupiedHours
+    .nullable()
+    .describe("when people are in, by the site's clock; null: Monday to Friday 07:00 to 19:00"),
 });
 export const site = siteFields.extend({
   id,
+  occupiedHours: z.object({
+    ...occupiedHours.shape,
+    assumed: z.boolean().describe("nobody has set them"),
+  }),
   isDemo: z.boolean().describe("invented data, shown as such"),
   archivedAt: instant.nullable(),
   buildingCount: z.number().int(),
@@ -63,7 +89,7 @@ export const createSite = contract({
   tag: "Places",
   method: "post",
   path: "/sites",
-  body: siteFields.partial({ address: true, unitSystem: true }),
+  body: siteFields.partial({ address: true, unitSystem: true, occupiedHours: true }),
   answer: site,
 });
 export const getSite = contract({

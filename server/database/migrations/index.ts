@@ -2,6 +2,7 @@ import type { QueryInterface } from "sequelize";
 import { people } from "./001-people";
 import { places } from "./002-places";
 import { importsAndReadings } from "./003-imports-readings";
+import { occupiedHours } from "./006-occupied-hours";
 
 /**
  * One step of the schema. To add one: write `NNN-subject.ts` beside this file, export a Migration
@@ -14,4 +15,9 @@ export interface Migration {
   up(schema: QueryInterface): Promise<void>;
 }
 
-export const migrations: readonly Migration[] = [people, places, importsAndReadings];
+export const migrations: readonly Migration[] = [
+  people,
+  places,
+  importsAndReadings,
+  occupiedHours,
+];

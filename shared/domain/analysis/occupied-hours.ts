@@ -42,3 +42,15 @@ export function isOccupied(localMs: number, hours: OccupiedHours): boolean {
   const minute = ((Math.floor(localMs / MINUTE_MS) % DAY_MINUTES) + DAY_MINUTES) % DAY_MINUTES;
   return minute >= hours.startMinute && minute < hours.endMinute;
 }
+
+/** "07:00" to "24:00" as minutes since midnight; the contract has checked the form. */
+export function minuteOfClock(text: string): number {
+  const [hour = "", minute = ""] = text.split(":");
+  return Number(hour) * 60 + Number(minute);
+}
+
+/** Minutes since midnight as "07:00"; the end of the day is "24:00". */
+export function clockOfMinute(minute: number): string {
+  const two = (value: number) => String(value).padStart(2, "0");
+  return `${two(Math.floor(minute / 60))}:${two(minute % 60)}`;
+}
