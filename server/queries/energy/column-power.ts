@@ -1,25 +1,25 @@
 import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
 import { samplePower } from "@shared/domain/energy/power";
-import type { ChartColumns } from "@shared/domain/readings/chart-columns";
+import type { ChartColumns, ColumnFrame } from "@shared/domain/readings/chart-columns";
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import { selectMany } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
 import { powerOptionsOf, type EnergySettings } from "@server/readings/energy-settings";
 
+/** Whether every column is whole quarter-hours, so that {@link storedPower} knows its power. */
+export function isStored({ columnMs }: ColumnFrame): boolean {
+  return columnMs % INTERVAL_MS === 0;
+}
+
 /**
- * Mean power of each column of a chart, kW, heating positive; NaN where there is none. Wide columns
- * take it from the stored energy, narrow ones from their rows.
+ * Mean power of each column of a chart from the rows in it, kW, heating positive; NaN where there is
+ * none.
  */
-export async function columnPower(
-  database: Database,
-  pointId: string,
+export function powerOfRows(
   settings: EnergySettings,
   segments: readonly ReadingSegment[],
-  columns: ChartColumns,
-): Promise<Float64Array> {
-  const { columnMs, startMs } = columns;
-  if (columnMs !== null && columnMs % INTERVAL_MS === 0)
-    return storedPower(database, pointId, startMs, columnMs);
+  { columnMs, startMs }: ChartColumns,
+): Float64Array {
   const options = powerOptionsOf(settings);
   if (options === null) return new Float64Array(startMs.length).fill(NaN);
   const sums = new Float64Array(startMs.length);
@@ -41,23 +41,21 @@ export async function columnPower(
   return sums.map((sum, column) => sum / (counts[column] as number));
 }
 
-async function storedPower(
+/** The same of columns that are whole quarter-hours, from the stored energy alone. */
+export async function storedPower(
   database: Database,
   pointId: string,
-  startMs: Float64Array,
-  columnMs: number,
+  { firstMs, columnMs, count }: ColumnFrame,
 ): Promise<Float64Array> {
-  const power = new Float64Array(startMs.length).fill(NaN);
-  const first = startMs[0];
-  if (first === undefined) return power;
-  const endS = (first + startMs.length * columnMs) / 1000;
+  const power = new Float64Array(count).fill(NaN);
+  const endS = (firstMs + count * columnMs) / 1000;
   const rows = await selectMany(
     database,
     `SELECT (start_s - ?) DIV ? AS place, SUM(COALESCE(heating_kwh, 0) - COALESCE(cooling_kwh, 0)),
             SUM(COALESCE(covered_s, ?))
        FROM interval_energy WHERE point_id = ? AND start_s >= ? AND start_s < ?
       GROUP BY place`,
-    [first / 1000, columnMs / 1000, INTERVAL_MS / 1000, pointId, first / 1000, endS],
+    [firstMs / 1000, columnMs / 1000, INTERVAL_MS / 1000, pointId, firstMs / 1000, endS],
   );
   for (const [place, kwh, coveredS] of rows) {
     if (Number(coveredS) > 0) power[Number(place)] = Number(kwh) / (Number(coveredS) / 3600);

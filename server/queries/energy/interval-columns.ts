@@ -1,8 +1,8 @@
 import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
 import {
-  columnLengthMs,
+  columnStarts,
   type ChartColumns,
-  type ChartWindow,
+  type ColumnFrame,
 } from "@shared/domain/readings/chart-columns";
 import type { QualityRun } from "@shared/domain/readings/quality-runs";
 import type { Interval } from "@shared/domain/time/interval";
@@ -18,12 +18,10 @@ const intervalS = INTERVAL_MS / 1000;
 export async function intervalColumns(
   database: Database,
   pointId: string,
-  window: ChartWindow,
+  window: Interval,
+  frame: ColumnFrame,
 ): Promise<ChartColumns> {
-  const columnMs = Math.max(INTERVAL_MS, columnLengthMs(window, window.most));
-  const before = Math.floor((window.startMs - window.anchorMs) / columnMs);
-  const firstMs = window.anchorMs + before * columnMs;
-  const count = Math.ceil((window.endMs - firstMs) / columnMs);
+  const { firstMs, columnMs, count } = frame;
   const column = () => new Float64Array(count).fill(NaN);
   const [flow, supply, back] = [column(), column(), column()];
   const rows = await selectMany(
@@ -53,7 +51,7 @@ export async function intervalColumns(
     back[Number(place)] = Number(returnCs) / coveredS;
   }
   return {
-    startMs: Float64Array.from({ length: count }, (_, i) => firstMs + i * columnMs),
+    startMs: columnStarts(frame),
     columnMs,
     flowM3PerHour: flow,
     supplyC: supply,

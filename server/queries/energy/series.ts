@@ -1,8 +1,11 @@
 import type { SeriesAnswer } from "@shared/contracts/energy";
+import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
 import {
-  chartColumns,
+  ChartBuilder,
+  columnFrame,
   type ChartColumns,
   type ChartWindow,
+  type ColumnFrame,
 } from "@shared/domain/readings/chart-columns";
 import { qualityRuns, type QualityRun } from "@shared/domain/readings/quality-runs";
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
@@ -12,7 +15,7 @@ import { selectMany } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
 import { roundedOrNull } from "@server/presenters/present-energy";
 import { indexFrom, sliceColumns } from "@server/readings/load-segments";
-import { columnPower } from "./column-power";
+import { isStored, powerOfRows, storedPower } from "./column-power";
 import type { EnergyPoint } from "./energy-point";
 import { intervalColumns, intervalQuality } from "./interval-columns";
 import { appendRuns } from "./left-out";
@@ -42,10 +45,15 @@ export async function chartSeries(
     anchorMs: startOfLocalDay(localDateOf(range.startMs, site.zone), site.zone),
   };
   const seen = { startMs: range.startMs, endMs: Math.min(range.endMs, nowMs) };
-  const tooMany = (await rowsBehind(database, point.id, range)) > mostRows;
-  const drawn = tooMany
-    ? await fromIntervals(database, energyPoint, window, seen)
-    : await fromReadings(database, energyPoint, window, seen);
+  const held = await rowsBehind(database, point.id, range);
+  const frame = columnFrame(window);
+  const drawn =
+    held > mostRows
+      ? await fromIntervals(database, energyPoint, window, seen)
+      : // Fewer rows than columns are drawn as they are, whatever the columns' length would be.
+        held > window.most && isStored(frame)
+        ? await fromManyReadings(database, energyPoint, window, seen, frame)
+        : await fromReadings(database, energyPoint, window, seen);
   return present(energyPoint, range, drawn, pixels);
 }
 
@@ -66,26 +74,63 @@ async function rowsBehind(database: Database, pointId: string, range: Interval):
   return Number(row?.[0] ?? 0);
 }
 
+interface ChartOfReadings {
+  readonly chart: ChartBuilder;
+  readonly quality: readonly QualityRun[];
+  /** The rows themselves, unless they became columns of means as they came. */
+  readonly segments: readonly ReadingSegment[];
+}
+
+async function readChart(
+  database: Database,
+  pointId: string,
+  window: ChartWindow,
+  seen: Interval,
+  keepsRows: boolean,
+): Promise<ChartOfReadings> {
+  const chart = new ChartBuilder(window);
+  const quality: QualityRun[] = [];
+  let segments: ReadingSegment[] = [];
+  for await (const part of readingParts(database, pointId, window)) {
+    const until = Math.min(part.endMs, seen.endMs);
+    if (until > part.startMs)
+      appendRuns(quality, qualityRuns(part.segments, { startMs: part.startMs, endMs: until }));
+    // The rows beyond a part's ends come again in its neighbours.
+    const inside = part.segments.map((segment) => within(segment, part));
+    chart.add(inside);
+    segments = keepsRows || chart.isOfRows ? [...segments, ...inside] : [];
+  }
+  return { chart, quality, segments };
+}
+
 async function fromReadings(
   database: Database,
   { point, settings }: EnergyPoint,
   window: ChartWindow,
   seen: Interval,
 ): Promise<Drawn> {
-  const quality: QualityRun[] = [];
-  const segments: ReadingSegment[] = [];
-  for await (const part of readingParts(database, point.id, window)) {
-    const until = Math.min(part.endMs, seen.endMs);
-    if (until > part.startMs)
-      appendRuns(quality, qualityRuns(part.segments, { startMs: part.startMs, endMs: until }));
-    // The rows beyond a part's ends come again in its neighbours.
-    segments.push(...part.segments.map((segment) => within(segment, part)));
-  }
-  const columns = chartColumns(segments, window);
+  const { chart, quality, segments } = await readChart(database, point.id, window, seen, true);
+  const columns = chart.columns();
+  return { columns, quality, power: powerOfRows(settings, segments, columns) };
+}
+
+/** The same where the stored energy knows the columns' power: it is asked while the rows are read. */
+async function fromManyReadings(
+  database: Database,
+  { point, settings }: EnergyPoint,
+  window: ChartWindow,
+  seen: Interval,
+  frame: ColumnFrame,
+): Promise<Drawn> {
+  const [{ chart, quality, segments }, stored] = await Promise.all([
+    readChart(database, point.id, window, seen, false),
+    storedPower(database, point.id, frame),
+  ]);
+  const columns = chart.columns();
   return {
     columns,
     quality,
-    power: await columnPower(database, point.id, settings, segments, columns),
+    power: chart.isOfRows ? powerOfRows(settings, segments, columns) : stored,
   };
 }
 
@@ -98,16 +143,17 @@ function within(segment: ReadingSegment, { startMs, endMs }: Interval): ReadingS
 
 async function fromIntervals(
   database: Database,
-  { point, settings }: EnergyPoint,
+  { point }: EnergyPoint,
   window: ChartWindow,
   seen: Interval,
 ): Promise<Drawn> {
-  const columns = await intervalColumns(database, point.id, window);
-  return {
-    columns,
-    quality: await intervalQuality(database, point.id, seen),
-    power: await columnPower(database, point.id, settings, [], columns),
-  };
+  const frame = columnFrame(window, INTERVAL_MS);
+  const [columns, quality, power] = await Promise.all([
+    intervalColumns(database, point.id, window, frame),
+    intervalQuality(database, point.id, seen),
+    storedPower(database, point.id, frame),
+  ]);
+  return { columns, quality, power };
 }
 
 function present(

@@ -60,14 +60,69 @@ export function chartColumns(
   segments: readonly ReadingSegment[],
   window: ChartWindow,
 ): ChartColumns {
-  if (!(window.endMs > window.startMs) || !(window.most >= 1))
-    throw new RangeError("a chart needs a stretch of time and room for at least one column");
-  const parts = segments
-    .map((segment) => partOf(segment, window))
-    .filter((part) => part.to > part.from)
-    .sort((a, b) => instantAt(a, a.from) - instantAt(b, b.from));
-  const rows = parts.reduce((sum, part) => sum + part.to - part.from, 0);
-  return rows <= window.most ? rowColumns(parts, rows) : meanColumns(parts, rows, window);
+  const chart = new ChartBuilder(window);
+  chart.add(segments);
+  return chart.columns();
+}
+
+/**
+ * Makes {@link chartColumns} of readings that come a stretch of time after the other, so that a year
+ * of rows need never be held at once.
+ */
+export class ChartBuilder {
+  private rows = 0;
+  private readonly kept: Part[] = [];
+  private means: MeanColumns | null = null;
+
+  /** @throws RangeError for a window without length or room for no column. */
+  constructor(private readonly window: ChartWindow) {
+    if (!(window.endMs > window.startMs) || !(window.most >= 1))
+      throw new RangeError("a chart needs a stretch of time and room for at least one column");
+  }
+
+  /** Whether the rows so far are few enough for each to be its own column. */
+  get isOfRows(): boolean {
+    return this.means === null;
+  }
+
+  /** Adds segments of one stretch of time; a later call's rows must follow those before. */
+  add(segments: readonly ReadingSegment[]): void {
+    const parts = segments
+      .map((segment) => partOf(segment, this.window))
+      .filter((part) => part.to > part.from)
+      .sort((a, b) => instantAt(a, a.from) - instantAt(b, b.from));
+    this.rows += parts.reduce((sum, part) => sum + part.to - part.from, 0);
+    if (this.means === null) this.kept.push(...parts);
+    else for (const part of parts) this.means.add(part);
+    if (this.means !== null || this.rows <= this.window.most) return;
+    this.means = new MeanColumns(this.window);
+    for (const part of this.kept.splice(0)) this.means.add(part);
+  }
+
+  columns(): ChartColumns {
+    return this.means?.columns(this.rows) ?? rowColumns(this.kept, this.rows);
+  }
+}
+
+/** Where the columns of means lie. */
+export interface ColumnFrame {
+  /** Start of the first column, at or before the window's. */
+  readonly firstMs: number;
+  readonly columnMs: number;
+  readonly count: number;
+}
+
+/** Columns of at least `leastMs`, no more of them than the window has room for. */
+export function columnFrame(window: ChartWindow, leastMs = 0): ColumnFrame {
+  const columnMs = Math.max(leastMs, columnLengthMs(window, window.most));
+  const before = Math.floor((window.startMs - window.anchorMs) / columnMs);
+  const firstMs = window.anchorMs + before * columnMs;
+  return { firstMs, columnMs, count: Math.ceil((window.endMs - firstMs) / columnMs) };
+}
+
+/** Start of each column of the frame, UTC ms. */
+export function columnStarts({ firstMs, columnMs, count }: ColumnFrame): Float64Array {
+  return Float64Array.from({ length: count }, (_, column) => firstMs + column * columnMs);
 }
 
 interface Part {
@@ -186,15 +241,22 @@ class ColumnSums {
   }
 }
 
-function meanColumns(parts: readonly Part[], rows: number, window: ChartWindow): ChartColumns {
-  const columnMs = columnLengthMs(window, window.most);
-  const before = Math.floor((window.startMs - window.anchorMs) / columnMs);
-  const firstMs = window.anchorMs + before * columnMs;
-  const columns = Math.ceil((window.endMs - firstMs) / columnMs);
-  const flow = new ColumnSums(columns);
-  const supply = new ColumnSums(columns);
-  const ret = new ColumnSums(columns);
-  for (const { segment, from, to } of parts) {
+class MeanColumns {
+  private readonly frame: ColumnFrame;
+  private readonly flow: ColumnSums;
+  private readonly supply: ColumnSums;
+  private readonly ret: ColumnSums;
+
+  constructor(window: ChartWindow) {
+    this.frame = columnFrame(window);
+    const { count } = this.frame;
+    this.flow = new ColumnSums(count);
+    this.supply = new ColumnSums(count);
+    this.ret = new ColumnSums(count);
+  }
+
+  add({ segment, from, to }: Part): void {
+    const { firstMs, columnMs } = this.frame;
     const { instantMs, flowM3PerHour, supplyC, returnC, quality } = segment.columns;
     for (let row = from; row < to;) {
       const column = Math.floor(((instantMs[row] as number) - firstMs) / columnMs);
@@ -202,24 +264,28 @@ function meanColumns(parts: readonly Part[], rows: number, window: ChartWindow):
       const first = row;
       do row++;
       while (row < to && (instantMs[row] as number) < columnEndMs);
-      if (flowM3PerHour) flow.add(column, flowM3PerHour, quality, first, row);
-      if (supplyC) supply.add(column, supplyC, quality, first, row);
-      if (returnC) ret.add(column, returnC, quality, first, row);
+      if (flowM3PerHour) this.flow.add(column, flowM3PerHour, quality, first, row);
+      if (supplyC) this.supply.add(column, supplyC, quality, first, row);
+      if (returnC) this.ret.add(column, returnC, quality, first, row);
     }
   }
-  return {
-    startMs: Float64Array.from({ length: columns }, (_, column) => firstMs + column * columnMs),
-    columnMs,
-    flowM3PerHour: flow.means(),
-    supplyC: supply.means(),
-    returnC: ret.means(),
-    envelope: {
-      supplyLeastC: supply.least,
-      supplyGreatestC: supply.greatest,
-      returnLeastC: ret.least,
-      returnGreatestC: ret.greatest,
-      flowGreatestM3PerHour: flow.greatest,
-    },
-    rows,
-  };
+
+  columns(rows: number): ChartColumns {
+    const { flow, supply, ret } = this;
+    return {
+      startMs: columnStarts(this.frame),
+      columnMs: this.frame.columnMs,
+      flowM3PerHour: flow.means(),
+      supplyC: supply.means(),
+      returnC: ret.means(),
+      envelope: {
+        supplyLeastC: supply.least,
+        supplyGreatestC: supply.greatest,
+        returnLeastC: ret.least,
+        returnGreatestC: ret.greatest,
+        flowGreatestM3PerHour: flow.greatest,
+      },
+      rows,
+    };
+  }
 }

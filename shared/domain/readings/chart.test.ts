@@ -1,5 +1,5 @@
 import { HOUR_MS, MINUTE_MS } from "../time/interval";
-import { chartColumns, columnLengthMs } from "./chart-columns";
+import { ChartBuilder, chartColumns, columnLengthMs } from "./chart-columns";
 import { qualityRuns } from "./quality-runs";
 import { RowQuality, type ReadingSegment, type SeriesKind } from "./reading-columns";
 
@@ -37,6 +37,25 @@ const window = (hours: number) => ({ startMs: midnight, endMs: midnight + hours 
 describe("chartColumns", () => {
   it("makes half hours of a week of one-minute rows on 352 columns", () => {
     expect(columnLengthMs(window(168), 352)).toBe(30 * MINUTE_MS);
+  });
+
+  it.each([
+    ["means", 6],
+    ["rows", 500],
+  ])("makes the same columns of %s whether readings come at once or in parts", (_kind, most) => {
+    // Parts end within a column, one is empty, and the rows outgrow the columns in the second.
+    const rows = minutes(0, 300).map((row) => ({ ...row, flow: row.minute % 7, ret: row.minute }));
+    const chosen = { ...window(6), most, anchorMs: midnight };
+    const chart = new ChartBuilder(chosen);
+    for (const [from, to] of [
+      [0, 5] as const,
+      [5, 95] as const,
+      [95, 95] as const,
+      [95, 300] as const,
+    ])
+      chart.add([segmentOf(rows.slice(from, to))]);
+    expect(chart.isOfRows).toBe(most === 500);
+    expect(chart.columns()).toEqual(chartColumns([segmentOf(rows)], chosen));
   });
 
   it("draws the mean of a column's measured rows and keeps its peak in the envelope", () => {
