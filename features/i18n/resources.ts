@@ -1,3 +1,6 @@
+import deWorkings from "@shared/words/de/workings.json";
+import enWorkings from "@shared/words/en/workings.json";
+
 import deCharts from "./locales/de/charts.json";
 import deEnergy from "./locales/de/energy.json";
 import deImports from "./locales/de/imports.json";
@@ -19,7 +22,10 @@ import enShell from "./locales/en/shell.json";
 import enToday from "./locales/en/today.json";
 import enUi from "./locales/en/ui.json";
 
-/** One namespace per feature, one line each; English and German have the same keys. */
+/**
+ * One namespace per feature, one line each; English and German have the same keys. Words that the
+ * server prints too stand in shared/words.
+ */
 export const words = {
   charts: { en: enCharts, de: deCharts },
   energy: { en: enEnergy, de: deEnergy },
@@ -31,6 +37,7 @@ export const words = {
   shell: { en: enShell, de: deShell },
   today: { en: enToday, de: deToday },
   ui: { en: enUi, de: deUi },
+  workings: { en: enWorkings, de: deWorkings },
 } as const;
 
 export type Namespace = keyof typeof words;

@@ -2,6 +2,7 @@ import { z } from "zod";
 import { contract, id, instant, nothing } from "./contract";
 import { budgetTerm, verdict } from "./evidence";
 import { correction, fill } from "./corrections";
+import { fluid } from "./places";
 
 /*
  * The workings of one figure: one model that the screen, the PDF, the CSV and a script read. Codes
@@ -163,12 +164,25 @@ export const workings = z.object({
     pointVersion: z.string().nullable(),
     absoluteMPa: z.number(),
     pressureAssumed: z.boolean(),
-    fluid: z.string().describe("in short: water, propyleneGlycol 30 % by mass"),
+    fluid,
     meansOnly: z.boolean(),
     recalculating: z.boolean(),
   }),
   /** Published methods used, with edition: "formulas from", never a claim to comply. */
-  formulasFrom: z.array(z.object({ name: z.string(), edition: z.string(), forWhat: z.string() })),
+  formulasFrom: z.array(
+    z.object({
+      name: z.string(),
+      edition: z.string(),
+      forWhat: z.enum([
+        "waterProperties",
+        "heatCoefficient",
+        "uncertainty",
+        "probeClass",
+        "glycolProperties",
+        "meterLimits",
+      ]),
+    }),
+  ),
   cautions: z.array(z.string()).describe("codes, such as indicativeOnly, defaultsOnly, meansOnly"),
 });
 export type Workings = z.infer<typeof workings>;

@@ -13,9 +13,9 @@ export interface UsedWord {
   readonly text: string;
 }
 
-/** Source files of the client, tests left out. */
+/** Source files that ask for words: the client, and the text of workings that is printed too. */
 export function clientSources(root: string): string[] {
-  return ["app", "features"].flatMap((folder) =>
+  return ["app", "features", path.join("shared", "workings")].flatMap((folder) =>
     readdirSync(path.join(root, folder), { recursive: true, withFileTypes: true })
       .filter((entry) => entry.isFile() && /(?<!\.test)\.tsx?$/.test(entry.name))
       .map((entry) => path.relative(root, path.join(entry.parentPath, entry.name))),

@@ -3,7 +3,11 @@ import path from "node:path";
 import { clientSources, usedWords } from "./used-words";
 
 const root = path.join(__dirname, "..", "..");
-const folderOf = (language: string) => path.join(root, "features", "i18n", "locales", language);
+/** Words of screens alone, and those that the server prints too. */
+const foldersOf = (language: string) => [
+  path.join(root, "features", "i18n", "locales", language),
+  path.join(root, "shared", "words", language),
+];
 
 type Words = ReadonlyMap<string, string>;
 
@@ -18,12 +22,12 @@ function flatten(value: unknown, prefix: string, into: Map<string, string>): Map
 
 function read(language: string): ReadonlyMap<string, Words> {
   return new Map(
-    readdirSync(folderOf(language)).map((file) => {
-      const content: unknown = JSON.parse(
-        readFileSync(path.join(folderOf(language), file), "utf8"),
-      );
-      return [path.basename(file, ".json"), flatten(content, "", new Map<string, string>())];
-    }),
+    foldersOf(language).flatMap((folder) =>
+      readdirSync(folder).map((file): [string, Words] => {
+        const content: unknown = JSON.parse(readFileSync(path.join(folder, file), "utf8"));
+        return [path.basename(file, ".json"), flatten(content, "", new Map<string, string>())];
+      }),
+    ),
   );
 }
 
