@@ -4,6 +4,7 @@ export { ApiError, NoAnswer } from "./api-error";
 export { call, type CallInput } from "./call";
 export { createQueryClient } from "./query-client";
 export { sessionQuery, useSession } from "./session-queries";
+export { useChange, type Change } from "./use-change";
 export { upload } from "./upload";
 export { useOfflineSince } from "./use-offline";
 export { useErrorWords } from "./use-error-words";

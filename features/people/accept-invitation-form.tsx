@@ -2,13 +2,12 @@ import { router } from "expo-router";
 import { useState } from "react";
 
 import { acceptInvitation } from "@shared/contracts/people";
-import { ApiError, call } from "@features/api";
+import { ApiError, call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Banner, Button, Form, TextField, useBreakpoint } from "@features/ui";
 
 import { NewPasswordField } from "./new-password-field";
 import { passwordProblem } from "./password-rules";
-import { useChange } from "./use-change";
 import { useEnter } from "./use-enter";
 
 /**

@@ -2,14 +2,13 @@ import { router } from "expo-router";
 import { useState } from "react";
 
 import { changePassword } from "@shared/contracts/people";
-import { call } from "@features/api";
+import { call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, Card, Form, Row, Screen, Text, TextField, useToast } from "@features/ui";
 
 import { NewPasswordField } from "./new-password-field";
 import { passwordProblem } from "./password-rules";
 import { peoplePaths } from "./people-paths";
-import { useChange } from "./use-change";
 
 /** A new own password, proven with the current one; other browsers are signed out. */
 export function ChangePasswordScreen() {

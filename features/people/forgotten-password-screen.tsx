@@ -1,14 +1,13 @@
 import { useState } from "react";
 
 import { requestPasswordReset } from "@shared/contracts/people";
-import { call } from "@features/api";
+import { call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Banner, Button, Form, TextField, TextLink, useBreakpoint } from "@features/ui";
 
 import { emailProblem } from "./email-problem";
 import { EntryFrame } from "./entry-frame";
 import { peoplePaths } from "./people-paths";
-import { useChange } from "./use-change";
 
 /** Asks for a reset link; the answer is the same whether the address is known or not. */
 export function ForgottenPasswordScreen() {

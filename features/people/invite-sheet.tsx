@@ -2,14 +2,13 @@ import { useQueryClient } from "@tanstack/react-query";
 import { useState } from "react";
 
 import { inviteMember, type Role } from "@shared/contracts/people";
-import { call } from "@features/api";
+import { call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, ChoiceTiles, Form, Sheet, Text, TextField, useToast } from "@features/ui";
 
 import { emailProblem } from "./email-problem";
 import { peopleQueries } from "./people-queries";
 import { useRoleChoices } from "./role-choices";
-import { useChange } from "./use-change";
 
 /** An address and a role; the role has no default, because it decides what somebody sees. */
 export function InviteSheet({ onClose }: { onClose: () => void }) {

@@ -2,13 +2,12 @@ import { useQueryClient } from "@tanstack/react-query";
 import { useState } from "react";
 
 import { createAccessToken } from "@shared/contracts/people";
-import { call } from "@features/api";
+import { call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, ChoiceTiles, Form, Sheet, TextField } from "@features/ui";
 
 import type { NewToken } from "./made-token";
 import { peopleQueries } from "./people-queries";
-import { useChange } from "./use-change";
 
 const lifetimes = ["days30", "days90", "days365", "days730", "forever"] as const;
 type Lifetime = (typeof lifetimes)[number];

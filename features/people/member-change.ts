@@ -7,13 +7,12 @@ import {
   type Member,
   type Role,
 } from "@shared/contracts/people";
-import { call, sessionQuery, useErrorWords } from "@features/api";
+import { call, sessionQuery, useChange, useErrorWords } from "@features/api";
 import { useWords } from "@features/i18n";
 import { useToast } from "@features/ui";
 
 import { nameOf } from "./member-words";
 import { peopleQueries } from "./people-queries";
-import { useChange } from "./use-change";
 
 export type MemberChange =
   | { readonly kind: "role"; readonly role: Role }

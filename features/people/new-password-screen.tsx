@@ -1,7 +1,7 @@
 import { useState } from "react";
 
 import { resetPassword } from "@shared/contracts/people";
-import { ApiError, call } from "@features/api";
+import { ApiError, call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Banner, Button, Form, Text, useBreakpoint } from "@features/ui";
 
@@ -9,7 +9,6 @@ import { EntryFrame } from "./entry-frame";
 import { NewPasswordField } from "./new-password-field";
 import { passwordProblem } from "./password-rules";
 import { peoplePaths } from "./people-paths";
-import { useChange } from "./use-change";
 import { useLinkSecret } from "./use-link-secret";
 
 /** Where the link of a reset letter leads. */

@@ -2,12 +2,11 @@ import { useQueryClient } from "@tanstack/react-query";
 import type { z } from "zod";
 
 import { revokeAccessToken, type accessToken } from "@shared/contracts/people";
-import { call } from "@features/api";
+import { call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Banner, Dialog, Text, useToast } from "@features/ui";
 
 import { peopleQueries } from "./people-queries";
-import { useChange } from "./use-change";
 
 export type AccessToken = z.infer<typeof accessToken>;
 

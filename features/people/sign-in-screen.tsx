@@ -3,7 +3,7 @@ import { useState } from "react";
 import { View } from "react-native";
 
 import { signIn } from "@shared/contracts/people";
-import { ApiError, call, NoAnswer, useOfflineSince, useSession } from "@features/api";
+import { ApiError, call, NoAnswer, useChange, useOfflineSince, useSession } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Banner, Button, Form, Text, TextField, useBreakpoint } from "@features/ui";
 
@@ -11,7 +11,6 @@ import { askedPage } from "./asked-page";
 import { emailProblem } from "./email-problem";
 import { EntryFrame } from "./entry-frame";
 import { peoplePaths } from "./people-paths";
-import { useChange } from "./use-change";
 import { useEnter } from "./use-enter";
 
 /** Sign-in; leads on to the page that was asked for. */

@@ -1,10 +1,8 @@
 import { useQueryClient } from "@tanstack/react-query";
 
 import { updateAccount } from "@shared/contracts/people";
-import { call, sessionQuery, type CallInput } from "@features/api";
+import { call, type CallInput, sessionQuery, useChange } from "@features/api";
 import { usePreferences } from "@features/i18n";
-
-import { useChange } from "./use-change";
 
 type AccountChange = NonNullable<CallInput<typeof updateAccount>["body"]>;
 

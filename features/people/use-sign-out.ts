@@ -2,10 +2,9 @@ import { useQueryClient } from "@tanstack/react-query";
 import { router } from "expo-router";
 
 import { signOut, signOutEverywhere } from "@shared/contracts/people";
-import { call, sessionQuery } from "@features/api";
+import { call, sessionQuery, useChange } from "@features/api";
 
 import { peoplePaths } from "./people-paths";
-import { useChange } from "./use-change";
 
 /** Ends this session, or all of them, and forgets everything this page had read. */
 export function useSignOut() {

@@ -12,15 +12,22 @@ import {
 } from "@shared/contracts/places";
 import { Answer, call } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
-import { Banner, Button, DeniedState, LoopTag, Screen, useToast } from "@features/ui";
-import { DraftNotice } from "./draft-notice";
+import {
+  Banner,
+  Button,
+  DeniedState,
+  DraftNotice,
+  LoopTag,
+  Screen,
+  useDraft,
+  useToast,
+} from "@features/ui";
 import { LoopForm, loopServerFields, type LoopField, type LoopProblems } from "./loop-form";
 import { changesEnergy, loopBody, loopValues, NONE } from "./loop-values";
 import { PlaceActions } from "./place-actions";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
 import { tagService } from "./service-words";
-import { useDraft } from "./use-draft";
 import { useSave } from "./use-save";
 
 export function NewLoopScreen() {

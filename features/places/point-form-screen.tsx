@@ -12,9 +12,17 @@ import {
 } from "@shared/contracts/places";
 import { Answer, call } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
-import { Banner, Button, DeniedState, LoopTag, Screen, useToast } from "@features/ui";
+import {
+  Banner,
+  Button,
+  DeniedState,
+  DraftNotice,
+  LoopTag,
+  Screen,
+  useDraft,
+  useToast,
+} from "@features/ui";
 import { BoreHistory } from "./bore-history";
-import { DraftNotice } from "./draft-notice";
 import { NONE } from "./loop-values";
 import { PlaceActions } from "./place-actions";
 import { placesPaths } from "./places-paths";
@@ -22,7 +30,6 @@ import { placesQueries } from "./places-queries";
 import { PointForm, pointServerFields, type PointField, type PointProblems } from "./point-form";
 import { pipeOf, pointValues, resolvedPipe, type MeterSide, type PointRole } from "./point-values";
 import { tagService } from "./service-words";
-import { useDraft } from "./use-draft";
 import { useSave } from "./use-save";
 
 export function NewPointScreen() {

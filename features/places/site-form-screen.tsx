@@ -5,13 +5,11 @@ import { View } from "react-native";
 import { createSite, removeSite, updateSite, type Site } from "@shared/contracts/places";
 import { Answer, call } from "@features/api";
 import { useWords } from "@features/i18n";
-import { Button, DeniedState, Screen, useToast } from "@features/ui";
-import { DraftNotice } from "./draft-notice";
+import { Button, DeniedState, DraftNotice, Screen, useDraft, useToast } from "@features/ui";
 import { PlaceActions } from "./place-actions";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
 import { SiteForm, siteFields, siteValues, type SiteProblems } from "./site-form";
-import { useDraft } from "./use-draft";
 import { useSave } from "./use-save";
 
 export function NewSiteScreen() {

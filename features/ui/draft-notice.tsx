@@ -1,10 +1,12 @@
 import { useWords } from "@features/i18n";
-import { Banner, TextLink } from "@features/ui";
+
+import { Banner } from "./banner";
+import { TextLink } from "./text-link";
 import type { Draft } from "./use-draft";
 
 /** Says that what is on screen was typed on an earlier visit and is not saved yet. */
 export function DraftNotice({ draft }: { draft: Pick<Draft<object>, "resumed" | "clear"> }) {
-  const t = useWords("places");
+  const t = useWords("ui");
   if (!draft.resumed) return null;
   return (
     <Banner

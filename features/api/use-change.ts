@@ -1,7 +1,9 @@
 import { useMutation } from "@tanstack/react-query";
 
-import { ApiError, useErrorWords } from "@features/api";
 import { useFieldWords } from "@features/i18n";
+
+import { ApiError } from "./api-error";
+import { useErrorWords } from "./use-error-words";
 
 /** A change being sent: whether it is under way, and what the server said against it. */
 export interface Change<Input, Answer> {
@@ -17,7 +19,7 @@ export interface Change<Input, Answer> {
 }
 
 /**
- * Sends a change of people's things. Without a network it fails at once and says so, instead of
+ * Sends a change. Without a network it fails at once and says so, instead of
  * being sent unseen when the network comes back.
  *
  * @param fields fields of the body the form can show an error at
