@@ -29,6 +29,8 @@ export const ORIGIN_CODES = {
   enthalpyFormula: ["percent"],
   pairFromBath: ["firstSerial", "secondSerial", "checkedOn", "residualK"],
   pairNotCorrected: ["firstSerial", "secondSerial", "checkedOn", "residualK", "meanDifferenceK"],
+  pairLargeDifference: ["firstSerial", "secondSerial", "checkedOn", "residualK", "meanDifferenceK"],
+  pairFewReadings: ["firstSerial", "secondSerial", "checkedOn", "residualK", "pairs", "factor"],
   pairFromClass: ["supplyClass", "returnClass", "supplyC", "returnC"],
   pairClassAssumed: ["supplyClass", "returnClass", "supplyC", "returnC"],
   mountingStated: ["halfWidthK"],
