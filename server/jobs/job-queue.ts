@@ -19,6 +19,7 @@ export interface ClaimedJob {
   readonly pointId: string;
   readonly importId: string | null;
   readonly logFileId: string | null;
+  readonly correctionId: string | null;
   readonly revision: number | null;
   readonly failures: number;
   readonly interruptions: number;
@@ -30,6 +31,7 @@ export interface NewJob {
   readonly pointId: string;
   readonly importId?: string;
   readonly logFileId?: string;
+  readonly correctionId?: string;
   readonly revision?: number;
 }
 
@@ -41,17 +43,23 @@ export async function enqueueJob(
   transaction: Transaction,
   job: NewJob,
 ): Promise<void> {
-  // One recalculation that still waits will see every change made until it starts.
-  const waitingKey = job.kind === "recalculate" ? `recalculate-${job.pointId}` : null;
+  // One that still waits will see every change made until it starts.
+  const waitingKey =
+    job.kind === "recalculate"
+      ? `recalculate-${job.pointId}`
+      : job.correctionId === undefined
+        ? null
+        : `correction-${job.correctionId}`;
   await database.query(
     `INSERT IGNORE INTO job (organisation_id, kind, state, point_id, import_id, log_file_id,
-            revision, waiting_key, run_after, progress, created_at)
-     VALUES (:organisationId, :kind, 'queued', :pointId, :importId, :logFileId, :revision,
-            :waitingKey, UTC_TIMESTAMP(3), :progress, UTC_TIMESTAMP(3))`,
+            correction_id, revision, waiting_key, run_after, progress, created_at)
+     VALUES (:organisationId, :kind, 'queued', :pointId, :importId, :logFileId, :correctionId,
+            :revision, :waitingKey, UTC_TIMESTAMP(3), :progress, UTC_TIMESTAMP(3))`,
     {
       replacements: {
         importId: null,
         logFileId: null,
+        correctionId: null,
         revision: null,
         ...job,
         waitingKey,
@@ -90,11 +98,11 @@ const candidates = `
                 GROUP BY organisation_id) s ON s.organisation_id = j.organisation_id
    WHERE ((j.state = 'queued' AND j.run_after <= GREATEST(UTC_TIMESTAMP(3), :now))
        OR (j.state = 'running' AND j.lease_until <= UTC_TIMESTAMP(3)))
-     AND (j.kind IN ('recognise', 'check') OR NOT EXISTS (
+     AND (j.kind IN ('recognise', 'check', 'correction') OR NOT EXISTS (
            SELECT 1 FROM job o WHERE o.point_id = j.point_id AND o.state = 'running'
               AND o.id <> j.id AND o.lease_until > UTC_TIMESTAMP(3)
               AND o.kind IN ('import', 'undo', 'recalculate')))
-   ORDER BY COALESCE(r.jobs, 0), j.kind NOT IN ('recognise', 'check'), s.at, j.id
+   ORDER BY COALESCE(r.jobs, 0), j.kind NOT IN ('recognise', 'check', 'correction'), s.at, j.id
    LIMIT 8`;
 
 /** Takes the next job for `owner`, or null where there is none. */
@@ -124,7 +132,8 @@ async function claimOne(
 ): Promise<ClaimedJob | null> {
   const [job] = await database.query<ClaimedJob & { state: string }>(
     `SELECT id, organisation_id AS organisationId, kind, state, point_id AS pointId,
-            import_id AS importId, log_file_id AS logFileId, revision, failures,
+            import_id AS importId, log_file_id AS logFileId, correction_id AS correctionId, revision,
+            failures,
             interruptions + (state = 'running') AS interruptions
        FROM job
       WHERE id = :id AND (state = 'queued' OR (state = 'running' AND lease_until <= UTC_TIMESTAMP(3)))
@@ -239,11 +248,11 @@ export async function requeueJob(
   );
 }
 
-/** Ends a job as failed, and with it the import it worked for. */
+/** Ends a job as failed, and with it the import or the correction it worked for. */
 export async function failJob(
   database: Database,
   owner: string,
-  job: Pick<ClaimedJob, "id" | "importId" | "kind">,
+  job: Pick<ClaimedJob, "id" | "importId" | "correctionId" | "kind">,
   failure: Failure,
 ): Promise<void> {
   await inTransaction(database, async (transaction) => {
@@ -257,7 +266,16 @@ export async function failJob(
         transaction,
       },
     );
-    if (changed !== 1 || job.importId === null) return;
+    if (changed !== 1) return;
+    if (job.correctionId !== null)
+      await database.query(
+        "UPDATE correction SET state = 'failed', failure = :failure WHERE id = :id AND state = 'working'",
+        {
+          replacements: { id: job.correctionId, failure: JSON.stringify(failure) },
+          transaction,
+        },
+      );
+    if (job.importId === null) return;
     // An undo that failed leaves the import as it was, with the reason beside it.
     const state = job.kind === "undo" ? "" : "state = 'failed', ";
     await database.query(`UPDATE log_import SET ${state}failure = :failure WHERE id = :importId`, {

@@ -8,6 +8,7 @@ import { storeImportJob } from "@server/imports/store-import-job";
 import { undoImportJob } from "@server/imports/undo-import-job";
 import type { JobKind, JobProgress } from "@server/models/job";
 import type { Failure } from "@server/models/log-import";
+import { correctionEffectJob } from "./correction-effect-job";
 import { finisher, type JobContext } from "./job-context";
 import {
   isDatabaseAway,
@@ -25,6 +26,7 @@ const works: Record<JobKind, (context: JobContext) => Promise<void>> = {
   import: storeImportJob,
   undo: undoImportJob,
   recalculate: recalculateJob,
+  correction: correctionEffectJob,
 };
 
 export interface JobSurroundings {

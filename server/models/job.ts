@@ -10,7 +10,14 @@ import { idColumn, instantColumn, optionalInstant, optionalReference, reference 
 import { optionalJson } from "./json-column";
 import type { Failure } from "./log-import";
 
-export const jobKinds = ["recognise", "check", "import", "undo", "recalculate"] as const;
+export const jobKinds = [
+  "recognise",
+  "check",
+  "import",
+  "undo",
+  "recalculate",
+  "correction",
+] as const;
 export type JobKind = (typeof jobKinds)[number];
 
 export interface JobProgress {
@@ -30,6 +37,7 @@ export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job
   declare pointId: string;
   declare importId: CreationOptional<string | null>;
   declare logFileId: CreationOptional<string | null>;
+  declare correctionId: CreationOptional<string | null>;
   /** Revision of the import it was queued for. */
   declare revision: CreationOptional<number | null>;
   /** Unique while it waits, where a second one like it would do the same. */
@@ -60,6 +68,7 @@ export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job
         pointId: reference,
         importId: optionalReference,
         logFileId: optionalReference,
+        correctionId: optionalReference,
         revision: { type: DataTypes.INTEGER.UNSIGNED, allowNull: true },
         waitingKey: { type: DataTypes.STRING(60), allowNull: true },
         failures: count,

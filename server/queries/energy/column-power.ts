@@ -1,5 +1,5 @@
 import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
-import { samplePower } from "@shared/domain/energy/power";
+import { segmentPower } from "@shared/domain/energy/segment-power";
 import type { ChartColumns, ColumnFrame } from "@shared/domain/readings/chart-columns";
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import { selectMany } from "@server/database/bulk";
@@ -25,7 +25,7 @@ export function powerOfRows(
   const sums = new Float64Array(startMs.length);
   const counts = new Uint32Array(startMs.length);
   for (const segment of segments) {
-    const { powerKw } = samplePower(segment.columns, options);
+    const { powerKw } = segmentPower(segment, options);
     let column = 0;
     segment.columns.instantMs.forEach((instant, row) => {
       const power = powerKw[row] as number;

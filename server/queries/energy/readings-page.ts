@@ -1,4 +1,4 @@
-import { samplePower } from "@shared/domain/energy/power";
+import { segmentPower } from "@shared/domain/energy/segment-power";
 import { RowQuality, type ReadingSegment } from "@shared/domain/readings/reading-columns";
 import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import type { Database } from "@server/database/connect";
@@ -23,6 +23,7 @@ const qualityNames = {
   [RowQuality.measured]: "measured",
   [RowQuality.excluded]: "excluded",
   [RowQuality.noReading]: "noReading",
+  [RowQuality.opening]: "measured",
 } as const;
 
 /**
@@ -46,7 +47,7 @@ export async function* readingRows(
     const segments = await loadSegments(database, point.id, fromMs, toMs);
     const rows = segments
       .flatMap((segment) =>
-        rowsOf(segment, options ? samplePower(segment.columns, options).powerKw : null, {
+        rowsOf(segment, options ? segmentPower(segment, options).powerKw : null, {
           startMs: fromMs,
           endMs: toMs,
         }),
