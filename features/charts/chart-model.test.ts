@@ -1,5 +1,6 @@
 import { makeFormat } from "@features/i18n";
 import type { SeriesAnswer } from "@shared/contracts/energy";
+import { packNumbers } from "@shared/domain/readings/packed-numbers";
 import { DAY_MS, HOUR_MS } from "@shared/domain/time/interval";
 import { rangeOfDates } from "@shared/domain/time/local-calendar";
 
@@ -18,6 +19,12 @@ const week = rangeOfDates("2026-05-11", "2026-05-18", zone);
 const format = makeFormat("en", "si", zone);
 const units = chartUnits(format);
 
+const columnOf = (value: (column: number) => number | null) =>
+  packNumbers(
+    Array.from({ length: 336 }, (_, i) => value(i)),
+    2,
+  );
+
 function answer(change: Partial<SeriesAnswer> = {}): SeriesAnswer {
   return {
     zone,
@@ -28,10 +35,10 @@ function answer(change: Partial<SeriesAnswer> = {}): SeriesAnswer {
     averagedOverS: 1800,
     t0Ms: week.startMs,
     tMs: null,
-    supplyC: Array.from({ length: 336 }, () => 6),
-    returnC: Array.from({ length: 336 }, (_, i) => (i === 100 ? null : 12)),
-    flowM3PerHour: Array.from({ length: 336 }, () => 20),
-    powerKw: Array.from({ length: 336 }, () => -140),
+    supplyC: columnOf(() => 6),
+    returnC: columnOf((i) => (i === 100 ? null : 12)),
+    flowM3PerHour: columnOf(() => 20),
+    powerKw: columnOf(() => -140),
     envelope: null,
     quality: [],
     yExtent: { temperatureC: [6, 12], flowM3PerHour: [20, 20] },
@@ -146,7 +153,7 @@ describe("the picture", () => {
 
   it("splits a changeover loop's band by what each column did", () => {
     const { band } = picture("changeover", {
-      supplyC: Array.from({ length: 336 }, (_, i) => (i < 168 ? 40 : 6)),
+      supplyC: columnOf((i) => (i < 168 ? 40 : 6)),
     });
     expect(band.heating[10]?.y).not.toBeNull();
     expect(band.cooling[10]?.y).toBeNull();
@@ -156,7 +163,13 @@ describe("the picture", () => {
 });
 
 describe("the columns", () => {
-  const series = chartSeries(answer({ supplyC: [6, null, 6], flowM3PerHour: [1, null, 1] }), units);
+  const series = chartSeries(
+    answer({
+      supplyC: packNumbers([6, null, 6], 2),
+      flowM3PerHour: packNumbers([1, null, 1], 2),
+    }),
+    units,
+  );
 
   it("are found by time and stepped through over holes", () => {
     expect(nearestColumn(series, week.startMs + 1900 * 1000)).toBe(1);
@@ -169,7 +182,10 @@ describe("the columns", () => {
     expect(lacks(whole, week, 704)).toBe(false);
     const day = { startMs: week.startMs, endMs: week.startMs + DAY_MS };
     expect(lacks(whole, day, 704)).toBe(true);
-    const rows = chartSeries(answer({ averagedOverS: null, tMs: [0, 1, 2] }), units);
+    const rows = chartSeries(
+      answer({ averagedOverS: null, tMs: packNumbers([0, 1, 2], 0) }),
+      units,
+    );
     expect(lacks(rows, day, 704)).toBe(false);
     // Fifteen-minute rows have nothing finer to give.
     const quarter = chartSeries(answer({ averagedOverS: 900, nominalStepS: 900 }), units);

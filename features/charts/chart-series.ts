@@ -1,4 +1,5 @@
 import type { SeriesAnswer } from "@shared/contracts/energy";
+import { unpackNumbers, type PackedNumbers } from "@shared/domain/readings/packed-numbers";
 import type { Interval } from "@shared/domain/time/interval";
 import { toDisplay, type DisplayUnit } from "@shared/domain/units/display-units";
 
@@ -38,8 +39,8 @@ export interface ChartSeries {
   readonly flowExtent: readonly [number, number] | null;
 }
 
-function shown(values: readonly (number | null)[], unit: DisplayUnit): Float64Array {
-  return Float64Array.from(values, (value) => (value === null ? NaN : toDisplay(value, unit)));
+function shown(packed: PackedNumbers, unit: DisplayUnit): Float64Array {
+  return unpackNumbers(packed).map((value) => toDisplay(value, unit));
 }
 
 function shownPair(
@@ -51,9 +52,11 @@ function shownPair(
 
 export function chartSeries(answer: SeriesAnswer, units: ChartUnits): ChartSeries {
   const { averagedOverS, t0Ms, tMs, envelope } = answer;
-  const count = answer.supplyC.length;
+  const supplyC = unpackNumbers(answer.supplyC);
   const stepMs = (averagedOverS ?? answer.nominalStepS ?? 60) * 1000;
-  const startMs = Float64Array.from({ length: count }, (_, i) => t0Ms + (tMs?.[i] ?? i * stepMs));
+  const startMs = tMs
+    ? unpackNumbers(tMs).map((offset) => t0Ms + offset)
+    : supplyC.map((_, i) => t0Ms + i * stepMs);
   const endMs = startMs.map((at, i) => Math.min(startMs[i + 1] ?? Infinity, at + stepMs));
   const { temperature, flow } = units;
   return {
@@ -63,10 +66,10 @@ export function chartSeries(answer: SeriesAnswer, units: ChartUnits): ChartSerie
     rows: answer.rows,
     startMs,
     endMs,
-    supply: shown(answer.supplyC, temperature),
+    supply: supplyC.map((value) => toDisplay(value, temperature)),
     return: shown(answer.returnC, temperature),
     flow: shown(answer.flowM3PerHour, flow),
-    powerKw: Float64Array.from(answer.powerKw, (value) => value ?? NaN),
+    powerKw: unpackNumbers(answer.powerKw),
     envelope: envelope && {
       supplyLeast: shown(envelope.supplyLeastC, temperature),
       supplyGreatest: shown(envelope.supplyGreatestC, temperature),

@@ -1,6 +1,7 @@
 import { fireEvent, screen, waitFor, within } from "@testing-library/react";
 
 import type { PointSummary, SeriesAnswer } from "@shared/contracts/energy";
+import { packNumbers } from "@shared/domain/readings/packed-numbers";
 import {
   loopOf,
   openWith,
@@ -97,6 +98,8 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
   };
 }
 
+const steady = (value: number) => packNumbers(new Float64Array(336).fill(value), 1);
+
 const series: SeriesAnswer = {
   zone: "Europe/London",
   fromMs: Date.parse(from),
@@ -106,10 +109,10 @@ const series: SeriesAnswer = {
   averagedOverS: 1800,
   t0Ms: Date.parse(from),
   tMs: null,
-  supplyC: Array.from({ length: 336 }, () => 6.5),
-  returnC: Array.from({ length: 336 }, () => 12),
-  flowM3PerHour: Array.from({ length: 336 }, () => 20),
-  powerKw: Array.from({ length: 336 }, () => -127.6),
+  supplyC: steady(6.5),
+  returnC: steady(12),
+  flowM3PerHour: steady(20),
+  powerKw: steady(-127.6),
   envelope: null,
   quality: [{ fromMs: Date.parse(from), toMs: Date.parse(to), kind: "measured" }],
   yExtent: { temperatureC: [6, 12], flowM3PerHour: [20, 20] },

@@ -156,8 +156,12 @@ export const getPointSummary = contract({
 });
 export type PointSummary = z.infer<(typeof getPointSummary)["answer"]>;
 
-const drawn = z.array(z.number().nullable());
-/** Columns as a chart draws them: one entry a column, all arrays of one length, null lifts the pen. */
+const drawn = z
+  .object({ decimals: z.number().int(), differences: z.string() })
+  .describe(
+    "Numbers packed for a chart, one a column: each as the difference from the one before, in units of the last decimal, as Base64 VLQ (ECMA-426); a full stop where there is none, which lifts the pen",
+  );
+/** Columns as a chart draws them: one number a column, all of one length, unknown lifts the pen. */
 export const getSeries = contract({
   operationId: "getSeries",
   summary: "What a chart of the given width can draw of the readings",
@@ -185,7 +189,7 @@ export const getSeries = contract({
     /** Start of the first column; column i starts `averagedOverS` × i later. */
     t0Ms: z.number(),
     /** Offsets from `t0Ms` where columns are rows; else null. */
-    tMs: z.array(z.number()).nullable(),
+    tMs: drawn.nullable(),
     supplyC: drawn,
     returnC: drawn,
     flowM3PerHour: drawn,

@@ -7,13 +7,13 @@ import {
   type ChartWindow,
   type ColumnFrame,
 } from "@shared/domain/readings/chart-columns";
+import { packNumbers, type PackedNumbers } from "@shared/domain/readings/packed-numbers";
 import { qualityRuns, type QualityRun } from "@shared/domain/readings/quality-runs";
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import type { Interval } from "@shared/domain/time/interval";
 import { localDateOf, startOfLocalDay } from "@shared/domain/time/local-calendar";
 import { selectMany } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
-import { roundedOrNull } from "@server/presenters/present-energy";
 import { indexFrom, sliceColumns } from "@server/readings/load-segments";
 import { isStored, powerOfRows, storedPower } from "./column-power";
 import type { EnergyPoint } from "./energy-point";
@@ -172,16 +172,22 @@ function present(
     rows: columns.rows,
     averagedOverS: columnMs === null ? null : columnMs / 1000,
     t0Ms,
-    tMs: columnMs === null ? Array.from(columns.startMs, (ms) => ms - t0Ms) : null,
-    supplyC: decimals(columns.supplyC, 2),
-    returnC: decimals(columns.returnC, 2),
+    tMs:
+      columnMs === null
+        ? packNumbers(
+            columns.startMs.map((ms) => ms - t0Ms),
+            0,
+          )
+        : null,
+    supplyC: temperatures(columns.supplyC),
+    returnC: temperatures(columns.returnC),
     flowM3PerHour: digits(columns.flowM3PerHour),
     powerKw: digits(power),
     envelope: envelope && {
-      supplyLeastC: decimals(envelope.supplyLeastC, 2),
-      supplyGreatestC: decimals(envelope.supplyGreatestC, 2),
-      returnLeastC: decimals(envelope.returnLeastC, 2),
-      returnGreatestC: decimals(envelope.returnGreatestC, 2),
+      supplyLeastC: temperatures(envelope.supplyLeastC),
+      supplyGreatestC: temperatures(envelope.supplyGreatestC),
+      returnLeastC: temperatures(envelope.returnLeastC),
+      returnGreatestC: temperatures(envelope.returnGreatestC),
       flowGreatestM3PerHour: digits(envelope.flowGreatestM3PerHour),
     },
     quality: screenQuality(quality, (range.endMs - range.startMs) / pixels),
@@ -205,13 +211,29 @@ function present(
   };
 }
 
-function decimals(values: Float64Array, places: number): (number | null)[] {
-  return Array.from(values, (value) => roundedOrNull(value, places));
+function temperatures(values: Float64Array): PackedNumbers {
+  return packNumbers(values, 2);
 }
 
+const significant = 4;
+/** A trickle this much smaller than the column's greatest is no longer told from nothing. */
+const widestDigits = 7;
+
 /** Four significant digits: a trickle keeps its digits and a main does not drag useless ones. */
-function digits(values: Float64Array): (number | null)[] {
-  return Array.from(values, (value) => (Number.isNaN(value) ? null : Number(value.toPrecision(4))));
+function digits(values: Float64Array): PackedNumbers {
+  const shown = values.map((value) => Number(value.toPrecision(significant)));
+  const greatest = shown.reduce((best, value) => Math.max(best, Math.abs(value) || 0), 0);
+  const whole = greatest > 0 ? Math.floor(Math.log10(greatest)) + 1 : 0;
+  const most = Math.min(9, Math.max(0, widestDigits - whole));
+  let decimals = 0;
+  for (const value of shown) while (decimals < most && !isWhole(value, decimals)) decimals++;
+  return packNumbers(shown, decimals);
+}
+
+/** NaN has no decimals to keep. */
+function isWhole(value: number, decimals: number): boolean {
+  const scale = 10 ** decimals;
+  return Number.isNaN(value) || Math.round(value * scale) / scale === value;
 }
 
 function extent(channels: readonly Float64Array[]): [number, number] | null {
