@@ -43,7 +43,7 @@ const UNKNOWN_FILL_PERCENT = 30;
  * Volume takes the terms of flow with the mean speed, ΔT the terms of ΔT.
  *
  * Dividing the whole by √N is the classic error: with the worked interval's budget, 2016 like
- * readings and ρ = 0.5 leave 1.9207 %, not 0.047 %. Null where a term cannot be put, see
+ * readings and ρ = 0.6 leave 1.9208 %, not 0.047 %. Null where a term cannot be put, see
  * combine-interval, and where there are no readings.
  */
 export function combinePeriod(budget: Budget, state: PeriodState): CombinedUncertainty | null {

@@ -15,7 +15,7 @@ export function pairConditions(input: ConditionsInput): ConditionVerdict[] {
 
 /**
  * Standard uncertainty of one reading's ΔT, K: the budget's ΔT terms, all of which are in K.
- * Example: the worked interval's budget → 0.0706 K.
+ * Example: the worked interval's budget → 0.0704 K.
  */
 export function deltaTStandardK(budget: Budget): number {
   const ofDeltaT = budget.terms.filter((term) => term.actsOn === "deltaT");
