@@ -2,8 +2,12 @@ import type { Sequelize } from "sequelize";
 import { AccessToken } from "./access-token";
 import { Account } from "./account";
 import { AuditEvent } from "./audit-event";
+import { BathCheck } from "./bath-check";
 import { BoreVersion } from "./bore-version";
 import { Building } from "./building";
+import { Certificate } from "./certificate";
+import { Installation } from "./installation";
+import { Instrument } from "./instrument";
 import { Invitation } from "./invitation";
 import { Loop } from "./loop";
 import { LoopPump } from "./loop-pump";
@@ -43,6 +47,10 @@ const models: readonly ModelDefinition[] = [
   LoopPump,
   MeteringPoint,
   BoreVersion,
+  Instrument,
+  Certificate,
+  BathCheck,
+  Installation,
   LogImport,
   LogFile,
   Job,

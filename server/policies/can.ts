@@ -1,4 +1,5 @@
 import type { Actor } from "./actor";
+import { evidenceAbilities } from "./evidence-policy";
 import { logsAbilities } from "./logs-policy";
 import { peopleAbilities } from "./people-policy";
 import { placesAbilities } from "./places-policy";
@@ -12,6 +13,7 @@ export function can(actor: Actor) {
   return {
     ...placesAbilities(actor),
     ...logsAbilities(actor),
+    ...evidenceAbilities(actor),
     ...peopleAbilities(actor),
   };
 }

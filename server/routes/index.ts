@@ -3,6 +3,7 @@ import { accessTokenRoutes } from "./access-token-routes";
 import { accountRoutes } from "./account-routes";
 import { developmentRoutes } from "./development-routes";
 import { energyRoutes } from "./energy-routes";
+import { evidenceRoutes } from "./evidence-routes";
 import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
 import { placesRoutes } from "./places-routes";
@@ -20,6 +21,7 @@ const productEndpoints: readonly Endpoint[] = [
   ...developmentRoutes,
   ...placesRoutes,
   ...importRoutes,
+  ...evidenceRoutes,
   ...energyRoutes,
   ...shapeRoutes,
   ...todayRoutes,

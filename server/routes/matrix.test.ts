@@ -81,6 +81,20 @@ const matrix = `
   saveLoopPump             ✓   –   ✓   –   –   –
   removeLoopPump           ✓   –   ✓   –   –   –
   getDayMarks              ✓   ✓   ✓   ✓   –   –
+  listInstruments          ✓   ✓   ✓   ✓   –   –
+  getInstrument            ✓   ✓   ✓   ✓   –   –
+  createInstrument         ✓   ✓   ✓   –   –   –
+  updateInstrument         ✓   ✓   ✓   –   –   –
+  addCertificate           ✓   ✓   ✓   –   –   –
+  withdrawCertificate      ✓   ✓   ✓   –   –   –
+  listBathChecks           ✓   ✓   ✓   ✓   –   –
+  getBathCheck             ✓   ✓   ✓   ✓   –   –
+  createBathCheck          ✓   ✓   ✓   –   –   –
+  listInstallations        ✓   ✓   ✓   ✓   –   –
+  getInstallation          ✓   ✓   ✓   ✓   –   –
+  createInstallation       ✓   ✓   ✓   –   –   –
+  tryInstallation          ✓   ✓   ✓   –   –   –
+  withdrawInstallation     ✓   ✓   ✓   –   –   –
   getToday                 ✓   ✓   ✓   ✓   –   –
 `;
 

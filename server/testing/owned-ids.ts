@@ -1,6 +1,7 @@
 import { AccessToken } from "@server/models/access-token";
 import { Building } from "@server/models/building";
 import { secretHash } from "@server/security/secrets";
+import { evidenceOfPoint } from "./evidence-factories";
 import { person, type Person } from "./factories";
 import { recognisedImport } from "./import-factories";
 import { pointToMeter } from "./place-factories";
@@ -40,12 +41,23 @@ const logs: MakeIds = async (app, { organisationId }) => {
   return { importId: row.id, fileId: file.id };
 };
 
+const evidence: MakeIds = async (app, { organisationId }) => {
+  const { point } = await pointToMeter(app, organisationId);
+  const made = await evidenceOfPoint(app, organisationId, point.id);
+  return {
+    instrumentId: made.meter.id,
+    certificateId: made.certificate.id,
+    bathCheckId: made.check.id,
+    installationId: made.installation.id,
+  };
+};
+
 /**
  * Makes one row of everything whose id stands in a path of the API, and answers the ids by the
  * path's parameter name. A new `:xId` needs a line here: the tenancy test asks for it.
  */
 export async function ownedIds(app: TestApp, owner: Person): Promise<Record<string, string>> {
-  const families = [people, places, logs];
+  const families = [people, places, logs, evidence];
   const ids = [];
   for (const make of families) ids.push(await make(app, owner));
   return Object.assign({}, ...ids) as Record<string, string>;

@@ -42,5 +42,10 @@ export const sampleInputs: Readonly<Record<string, SampleInput>> = {
   getDayMarks: { query: days },
   addImportFile: { file: "time,flow\n2026-02-02 00:00,1.0\n" },
   chooseRecipe: { body: plainRecipe },
+  addCertificate: { body: { number: "C-9", issuedOn: "2026-02-01", expanded: 1 } },
+  withdrawCertificate: { body: { reason: "Of another instrument" } },
+  createInstallation: { body: { startsAt: "2026-02-02T08:00:00Z" } },
+  tryInstallation: { body: { startsAt: "2026-02-02T08:00:00Z" } },
+  withdrawInstallation: { body: { reason: "On another point" } },
   chooseRepairs: { body: { overlap: "useThis" } },
 };

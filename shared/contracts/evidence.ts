@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { BUDGET_TERM_KINDS } from "../domain/uncertainty/point-evidence";
-import { contract, id, instant, nothing, oneLine, page, pageQuery } from "./contract";
+import { contract, id, instant, oneLine, page, pageQuery } from "./contract";
+import { loopService } from "./places";
 
 /*
  * The evidence behind a point's figures: instruments with their certificates, same-bath checks of
@@ -32,20 +33,49 @@ const certificateFields = z.object({
   expanded: z.number().gt(0).max(100),
   k: z.number().min(1).max(4).default(2),
 });
+export const certificateState = z
+  .enum(["inDate", "dueSoon", "lapsed", "openEnded"])
+  .describe("dueSoon: within 30 days; openEnded: it names no day to be renewed by");
+export type CertificateState = z.infer<typeof certificateState>;
 export const certificate = certificateFields.extend({
   id,
-  state: z.enum(["inDate", "dueSoon", "lapsed"]).describe("dueSoon: within 30 days"),
+  state: certificateState,
+  recordedBy: z.string(),
+  withdrawnAt: instant.nullable(),
+  withdrawnReason: z.string().nullable(),
 });
+export type Certificate = z.infer<typeof certificate>;
 const instrumentFields = z.object({
   kind: instrumentKind,
   serial,
+  label: oneLine(40).nullable().describe("what people here call it, such as FM-05"),
   make: oneLine(120).nullable().describe("maker and model, as the user writes it"),
+  range: oneLine(80).nullable().describe("what it may be used for, such as DN 50 to 200"),
   probeClass: z.enum(["AA", "A", "B"]).nullable().describe("IEC 60751 class, probes only"),
+  outOfService: oneLine(200).nullable().describe("why it must not be used; null while it may"),
   notes,
 });
+/** A point an instrument was or is installed on. */
+export const placement = z.object({
+  installationId: id,
+  siteId: id,
+  siteName: z.string(),
+  loopId: id,
+  loopTag: z.string(),
+  service: loopService,
+  pointId: id,
+  pointCode: z.string(),
+  zone: z.string(),
+  startsAt: instant,
+  endsAt: instant.nullable().describe("null while it is there"),
+});
+export type Placement = z.infer<typeof placement>;
 export const instrument = instrumentFields.extend({
   id,
-  certificates: z.array(certificate).describe("newest first"),
+  certificates: z.array(certificate).describe("newest first; withdrawn ones last"),
+  /** What its calibration comes to today; `none` where no certificate counts. */
+  calibration: z.enum([...certificateState.options, "none"]),
+  placements: z.array(placement).describe("newest first"),
   archivedAt: instant.nullable(),
   can: z.object({ edit: z.boolean() }),
 });
@@ -58,8 +88,14 @@ export const listInstruments = contract({
   tag: "Evidence",
   method: "get",
   path: "/instruments",
-  query: pageQuery.extend({ kind: instrumentKind.optional() }),
-  answer: page(instrument).extend({ can: z.object({ create: z.boolean() }) }),
+  query: pageQuery.extend({
+    kind: instrumentKind.optional(),
+    archived: z.stringbool().default(false).describe("archived ones too"),
+  }),
+  answer: page(instrument).extend({
+    today: day.describe("the day calibration is judged by, UTC"),
+    can: z.object({ create: z.boolean() }),
+  }),
 });
 export const createInstrument = contract({
   operationId: "createInstrument",
@@ -67,7 +103,7 @@ export const createInstrument = contract({
   tag: "Evidence",
   method: "post",
   path: "/instruments",
-  body: instrumentFields.partial({ make: true, probeClass: true, notes: true }),
+  body: instrumentFields.partial().required({ kind: true, serial: true }),
   answer: instrument,
 });
 export const getInstrument = contract({
@@ -86,7 +122,10 @@ export const updateInstrument = contract({
   method: "patch",
   path: "/instruments/:instrumentId",
   params: instrumentId,
-  body: instrumentFields.partial().extend({ archived: z.boolean().optional() }),
+  body: instrumentFields
+    .omit({ kind: true })
+    .partial()
+    .extend({ archived: z.boolean().optional() }),
   answer: instrument,
 });
 export const addCertificate = contract({
@@ -96,12 +135,23 @@ export const addCertificate = contract({
   method: "post",
   path: "/instruments/:instrumentId/certificates",
   params: instrumentId,
-  body: certificateFields.partial({ laboratory: true, accredited: true, dueOn: true, k: true }),
+  body: certificateFields.partial({ laboratory: true, accredited: true, dueOn: true }),
+  answer: instrument,
+});
+export const withdrawCertificate = contract({
+  operationId: "withdrawCertificate",
+  summary: "Take a certificate out of use; it stays readable",
+  tag: "Evidence",
+  method: "post",
+  path: "/certificates/:certificateId/withdrawal",
+  params: z.object({ certificateId: id }),
+  body: z.object({ reason: oneLine(300) }),
   answer: instrument,
 });
 
 // Same-bath checks ----------------------------------------------------------------------------
-const bathReading = z.object({ firstC: z.number(), secondC: z.number() });
+const bathC = z.number().min(-50).max(200);
+const bathReading = z.object({ firstC: bathC, secondC: bathC });
 const bathCheckFields = z.object({
   firstProbeId: id,
   secondProbeId: id,
@@ -122,7 +172,8 @@ export const bathCheck = bathCheckFields.extend({
   residualK: z.number().describe("standard uncertainty of the pair after the check"),
   driftK: z.number().nullable().describe("against the check before; null with one"),
   verdicts: z.array(z.object({ code: z.string(), weight: z.enum(["fine", "look", "stop"]) })),
-  supersededAt: instant.nullable(),
+  replacesId: id.nullable(),
+  supersededAt: instant.nullable().describe("set where another check stands in its place"),
   recordedAt: instant,
   recordedBy: z.string(),
   can: z.object({ edit: z.boolean() }),
@@ -135,7 +186,10 @@ export const listBathChecks = contract({
   tag: "Evidence",
   method: "get",
   path: "/bath-checks",
-  query: pageQuery.extend({ probeId: id.optional() }),
+  query: pageQuery.extend({
+    probeId: id.optional(),
+    superseded: z.stringbool().default(false).describe("replaced ones too"),
+  }),
   answer: page(bathCheck).extend({ can: z.object({ create: z.boolean() }) }),
 });
 export const createBathCheck = contract({
@@ -178,7 +232,8 @@ const probeOnPipe = z.object({
   depthMm: z.number().min(20).max(300).nullable(),
   insulated: z.boolean(),
 });
-const installationFields = z.object({
+const probeInDocument = probeOnPipe.omit({ probeId: true });
+export const installationFields = z.object({
   /** From when this evidence speaks for the point's readings; the end is open or the next one's start. */
   startsAt: instant,
   endsAt: instant.nullable(),
@@ -213,6 +268,8 @@ const installationFields = z.object({
       action: z.enum(["none", "setOnMeter", "corrected"]),
     })
     .nullable(),
+  /** What the meter shows with water moving as usual: for the checks of speed and Reynolds number. */
+  shownFlowLPerS: z.number().min(-10_000).max(10_000).nullable(),
   soundSpeed: z
     .object({
       displayedMPerS: z.number().min(1000).max(2000),
@@ -255,6 +312,12 @@ const installationFields = z.object({
   notes,
 });
 export type InstallationFields = z.infer<typeof installationFields>;
+
+/** What is kept as one document: all of it but what queries ask for. */
+export const installationDocument = installationFields
+  .omit({ startsAt: true, endsAt: true, flowMeterId: true, loggerId: true, bathCheckId: true })
+  .extend({ probes: z.object({ supply: probeInDocument, return: probeInDocument }).nullable() });
+export type InstallationDocument = z.infer<typeof installationDocument>;
 
 /** A condition looked at, in words: what was found, what it means, and the term or block it adds. */
 export const verdict = z.object({
@@ -302,15 +365,26 @@ export const budgetTerm = z.object({
   }),
 });
 
-export const installation = installationFields.extend({
-  id,
-  pointId: id,
-  version: z.number().int().describe("1, 2, … as it was corrected"),
-  supersededAt: instant.nullable().describe("set where a later version stands in its place"),
-  supersedesId: id.nullable(),
-  recordedAt: instant,
-  recordedBy: z.string(),
-  reason: z.string().nullable().describe("why it was corrected"),
+/** A budget put to the point's usual state, largest term first. */
+const sizedBudget = z.object({
+  terms: z.array(
+    budgetTerm.extend({
+      percent: z.number().nullable().describe("standard, of heat; null where it cannot be put"),
+    }),
+  ),
+  expandedPercent: z.number().nullable().describe("of heat, k = 2, for one reading at this state"),
+  at: z.object({
+    deltaTK: z.number(),
+    deltaTFrom: z.enum(["design", "assumed"]),
+    velocityMPerS: z.number(),
+    velocityFrom: z.enum(["shown", "design", "assumed"]),
+  }),
+});
+export type SizedBudget = z.infer<typeof sizedBudget>;
+
+const instrumentName = z.object({ id, serial, label: z.string().nullable(), kind: instrumentKind });
+/** What follows from an installation's fields, kept or not. */
+const workedOut = z.object({
   bore: z
     .object({
       outsideDiameterMm: z.number(),
@@ -322,8 +396,48 @@ export const installation = installationFields.extend({
       flowFactor: z.number().nullable(),
     })
     .nullable(),
+  /** The flow shown put right by the bore, L/s; null where either is not known. */
+  correctedFlowLPerS: z.number().nullable(),
+  /** The zero's reading or half-width as flow in this pipe, L/s. */
+  zeroLPerS: z.number().nullable(),
+  /** Measured bore, else the bore of the point's own pipe, mm. */
+  boreUsedMm: z.number().nullable(),
+  bathCheckUsed: bathCheck
+    .pick({
+      id: true,
+      checkedOn: true,
+      firstSerial: true,
+      secondSerial: true,
+      meanDifferenceK: true,
+      residualK: true,
+      driftK: true,
+    })
+    .nullable(),
+  instruments: z.object({
+    flowMeter: instrumentName.nullable(),
+    logger: instrumentName.nullable(),
+    supplyProbe: instrumentName.nullable(),
+    returnProbe: instrumentName.nullable(),
+  }),
+  /** A clamp-on meter or a probe on the pipe's surface: not for billing unless agreement and law allow. */
+  indicativeOnly: z.boolean(),
   verdicts: z.array(verdict),
-  budget: z.array(budgetTerm),
+  budget: sizedBudget,
+});
+
+export const installation = installationFields.extend({
+  ...workedOut.shape,
+  id,
+  pointId: id,
+  version: z.number().int().describe("1, 2, … as it was corrected"),
+  supersededAt: instant.nullable().describe("set where a later version stands in its place"),
+  supersedesId: id.nullable(),
+  withdrawnAt: instant.nullable(),
+  withdrawnBy: z.string().nullable(),
+  withdrawnReason: z.string().nullable(),
+  recordedAt: instant,
+  recordedBy: z.string(),
+  reason: z.string().nullable().describe("why it was corrected"),
   can: z.object({ edit: z.boolean() }),
 });
 export type Installation = z.infer<typeof installation>;
@@ -336,11 +450,13 @@ export const listInstallations = contract({
   method: "get",
   path: "/points/:pointId/installations",
   params: pointId,
-  query: z.object({ superseded: z.stringbool().default(false) }),
+  query: z.object({
+    superseded: z.stringbool().default(false).describe("superseded and withdrawn ones too"),
+  }),
   answer: z.object({
     items: z.array(installation),
     /** The budget of times no installation speaks for. */
-    defaultBudget: z.array(budgetTerm),
+    defaultBudget: sizedBudget,
     can: z.object({ create: z.boolean() }),
   }),
 });
@@ -369,8 +485,9 @@ export const tryInstallation = contract({
   path: "/points/:pointId/installations/try",
   params: pointId,
   body: installationFields.partial().required({ startsAt: true }),
-  answer: installation.pick({ bore: true, verdicts: true, budget: true }),
+  answer: workedOut,
 });
+export type WorkedOutInstallation = z.infer<typeof workedOut>;
 export const getInstallation = contract({
   operationId: "getInstallation",
   summary: "One installation, in whatever version",
@@ -388,5 +505,5 @@ export const withdrawInstallation = contract({
   path: "/installations/:installationId/withdrawal",
   params: z.object({ installationId: id }),
   body: z.object({ reason: oneLine(300) }),
-  answer: nothing,
+  answer: installation,
 });

@@ -24,7 +24,7 @@ const WRITINGS: readonly Writing[] = [
   { ends: /C$/, quantity: "temperature", places: 1 },
   { ends: /LPerS$/, places: 3, unit: "L/s" },
   { ends: /S$/, places: 0, unit: "s" },
-  { ends: /^(reynolds|least|most|days|pairs|wallReadings|advised)$/, places: 0 },
+  { ends: /^(reynolds|least|most|days|pairs|wallReadings|advised|times)$/, places: 0 },
   { ends: /Bores$|^advised(Up|Down)stream$/, places: 1, unit: "D" },
 ];
 

@@ -3,6 +3,7 @@ import { people } from "./001-people";
 import { places } from "./002-places";
 import { importsAndReadings } from "./003-imports-readings";
 import { occupiedHours } from "./006-occupied-hours";
+import { evidence } from "./007-evidence";
 
 /**
  * One step of the schema. To add one: write `NNN-subject.ts` beside this file, export a Migration
@@ -20,4 +21,5 @@ export const migrations: readonly Migration[] = [
   places,
   importsAndReadings,
   occupiedHours,
+  evidence,
 ];
