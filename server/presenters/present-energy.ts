@@ -13,7 +13,13 @@ import type { Load } from "@server/queries/energy/loads";
 
 /** Rounds to so many decimals: more than any meter resolves, fewer than a double prints. */
 export function rounded(value: number, decimals: number): number {
-  return Number(value.toFixed(decimals));
+  const scale = 10 ** decimals;
+  const scaled = value * scale;
+  const whole = Math.round(scaled);
+  // Far from a half the quotient is the double that the text would be read as, for a tenth of the
+  // time; near one, and beyond what doubles count in ones, the text decides.
+  const isClear = Math.abs(scaled) < 2 ** 40 && Math.abs(Math.abs(scaled - whole) - 0.5) > 1e-3;
+  return isClear ? whole / scale : Number(value.toFixed(decimals));
 }
 
 export function roundedOrNull(value: number | null, decimals: number): number | null {
