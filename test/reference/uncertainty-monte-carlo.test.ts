@@ -9,14 +9,16 @@ import { WORKED_INPUT, WORKED_STATE } from "./uncertainty-worked-interval";
  * program's run of 400 000 draws gave s = 2.1318 % and −4.10 to +4.20 % for 95 %.
  */
 const DRAWS = 200_000;
+// Taken out of Math once: in a test every look at a global is slow.
+const { cos, imul, log, sqrt, PI } = Math;
 
 /** 0 ≤ x < 1, mulberry32; kept in 32-bit integers because millions are drawn. */
 function generator(seed: number): () => number {
   let state = seed | 0;
   return () => {
     state = (state + 0x6d2b79f5) | 0;
-    let t = Math.imul(state ^ (state >>> 15), state | 1);
-    t ^= t + Math.imul(t ^ (t >>> 7), t | 61);
+    let t = imul(state ^ (state >>> 15), state | 1);
+    t ^= t + imul(t ^ (t >>> 7), t | 61);
     return ((t ^ (t >>> 14)) >>> 0) / 4_294_967_296;
   };
 }
@@ -28,7 +30,7 @@ function errorsOf(term: BudgetTerm, next: () => number): () => number {
   if (kind === "deltaTStep") return () => given * (next() - next());
   if (distribution === "rectangular") return () => given * (2 * next() - 1);
   // Box and Muller; 1 − x keeps the logarithm off 0.
-  return () => standard * Math.sqrt(-2 * Math.log(1 - next())) * Math.cos(2 * Math.PI * next());
+  return () => standard * sqrt(-2 * log(1 - next())) * cos(2 * PI * next());
 }
 
 /** Relative errors of power, %, in order. */

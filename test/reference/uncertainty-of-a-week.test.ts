@@ -2,10 +2,9 @@ import { integrateEnergy } from "@shared/domain/energy/integrate";
 import { NO_CUT_OFFS } from "@shared/domain/energy/power";
 import { totalEnergy } from "@shared/domain/energy/totals";
 import { waterAtPressure } from "@shared/domain/fluids/water-at-pressure";
-import { flowAtVelocityM3PerHour } from "@shared/domain/pipes/bore";
+import { flowAtVelocityM3PerHour, velocityMPerS } from "@shared/domain/pipes/bore";
 import { resolveSegments } from "@shared/domain/readings/resolve-segments";
 import { combinePeriod } from "@shared/domain/uncertainty/combine-period";
-import { weightedState } from "@shared/domain/uncertainty/weighted-state";
 import { budgetTerm, originOf, standard } from "@shared/domain/uncertainty/budget-term";
 import { readingsOf } from "./scenario-readings";
 
@@ -49,7 +48,12 @@ test.each(["week_A", "week_B"])("an offset shifts %s by as much as its budget sa
       {
         figure: "energy",
         value: cooling.energyKwh,
-        ...weightedState(cooling, BORE_MM),
+        flowWeightedDeltaTK: cooling.flowDeltaTM3K / cooling.volumeM3,
+        deltaTWeightedVelocityMPerS: velocityMPerS(
+          cooling.flowDeltaTM3K / (cooling.deltaTKs / 3600),
+          BORE_MM,
+        ),
+        meanVelocityMPerS: null,
         samples: 168,
         flowSpreadM3PerHour: null,
         deltaTSpreadK: null,
