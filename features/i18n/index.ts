@@ -13,6 +13,7 @@ export { dayInstant, formatDate, formatTime, type DateStyle } from "@shared/form
 export { PreferencesProvider, usePreferences } from "./preferences";
 export { words, type Namespace } from "./resources";
 export { makeFormat, type Format } from "@shared/formats/format";
+export { useFluidWords } from "./use-fluid-words";
 export { useFormat } from "./use-format";
 export { useWords } from "./use-words";
 export { useFieldWords, useProblemWords, type ProblemWords } from "./use-problem-words";

@@ -137,8 +137,14 @@ function Sides({ detail, checks }: { detail: ImportDetail; checks: ImportChecks 
       {checks.energyBlockedBy ? (
         <Text tone="ink2">{t(`checks.energyNone.${checks.energyBlockedBy}`)}</Text>
       ) : null}
-      {(checks.rowsOutsideWater ?? 0) > 0 ? (
-        <Text tone="ink2">{t("checks.outsideWater", { count: checks.rowsOutsideWater })}</Text>
+      {(checks.rowsOutsideFluid ?? 0) > 0 && checks.liquidC ? (
+        <Text tone="ink2">
+          {t("checks.outsideFluid", {
+            count: checks.rowsOutsideFluid,
+            lowest: format.withUnit(checks.liquidC.lowest, "temperature", 1),
+            highest: format.withUnit(checks.liquidC.highest, "temperature", 1),
+          })}
+        </Text>
       ) : null}
       {checks.clean.length > 0 ? (
         <SideRows

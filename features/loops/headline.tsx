@@ -1,6 +1,6 @@
 import { View } from "react-native";
 
-import { useWords } from "@features/i18n";
+import { useFluidWords, useWords } from "@features/i18n";
 import { Banner, Figure, Row, Text, TextLink, useBreakpoint } from "@features/ui";
 
 import type { LoopFigures } from "./loop-context";
@@ -111,20 +111,26 @@ function Suppressed({ summary, format, loop }: LoopFigures) {
 function Blocked(
   props: LoopFigures & { reason: NonNullable<LoopFigures["summary"]["basis"]["blockedBy"]> },
 ) {
-  const { reason, loop, point, site } = props;
+  const { reason, loop, point, site, format } = props;
+  const { basis } = props.summary;
   const t = useWords("loops");
+  const fluidWords = useFluidWords();
   const ways = {
-    glycol: loop.can.edit ? (
+    concentration: editWay(),
+    pressure: editWay(),
+    outsideFluid: editWay(),
+    noFlow: importWay(),
+    noTemperature: importWay(),
+  } as const;
+  function editWay() {
+    return loop.can.edit ? (
       <TextLink
         label={t("blocked.editLoop")}
         href={`/sites/${site.id}/loops/${loop.id}/edit`}
         variant="small"
       />
-    ) : undefined,
-    outsideWater: undefined,
-    noFlow: importWay(),
-    noTemperature: importWay(),
-  } as const;
+    ) : undefined;
+  }
   function importWay() {
     return point.can.import ? (
       <TextLink label={t("import")} href={`/logs/new?point=${point.id}`} variant="small" />
@@ -133,7 +139,11 @@ function Blocked(
   return (
     <View style={{ gap: 8 }}>
       <Banner kind="look" lead={t(`blocked.${reason}.title`)} action={ways[reason]}>
-        {t(`blocked.${reason}.detail`)}
+        {t(`blocked.${reason}.detail`, {
+          fluid: fluidWords(basis.fluid),
+          lowest: format.withUnit(basis.liquidC?.lowest ?? null, "temperature", 1),
+          highest: format.withUnit(basis.liquidC?.highest ?? null, "temperature", 1),
+        })}
       </Banner>
       <Text variant="small" tone="ink3">
         <CoveredWords {...props} />

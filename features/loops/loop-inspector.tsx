@@ -4,6 +4,7 @@ import { View } from "react-native";
 import { useWords } from "@features/i18n";
 import { Button, Row, SelectField, Strong, Text, TextLink, useTheme } from "@features/ui";
 
+import { FluidSection } from "./fluid-section";
 import type { LoopFigures, LoopView } from "./loop-context";
 import { loopsPaths } from "./loops-paths";
 import { PipeSection, places } from "./pipe-section";
@@ -18,6 +19,7 @@ export function LoopInspector(
   return (
     <View style={{ gap: 18 }}>
       <Pipe {...props} />
+      <FluidSection loop={loop} format={props.format} />
       {points.length > 1 ? (
         <SelectField
           label={t("inspector.point")}

@@ -47,6 +47,8 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       engineVersion: 1,
       pressure: { absoluteMPa: 1.6, assumed: true },
       meterSide: "return",
+      fluid: { kind: "water" },
+      liquidC: { lowest: 0, highest: 150 },
       blockedBy: null,
       recalculating: false,
     },
@@ -187,12 +189,44 @@ it("shows energy a cut-off held back, with its time", async () => {
   expect(await screen.findByText(/^8.37 kWh over 4 h 15 min held back/)).toBeVisible();
 });
 
-it("gives glycol's reason instead of an energy, and keeps the chart", async () => {
+it("says what fills a glycol loop, where it freezes and what a weak mixture costs", async () => {
+  const fluid = {
+    kind: "ethyleneGlycol",
+    percent: 5,
+    basis: "volume",
+    testedOn: "2026-03-02",
+    testMethod: "refractometer",
+  } as const;
+  serverAnswers("GET /loops/7", loopOf({ fluid }));
+  show(<LoopScreen />);
+  fireEvent.click(await screen.findByRole("button", { name: "This loop" }));
+  expect(await screen.findByText("Ethylene glycol, 5\u00A0% by volume")).toBeVisible();
+  expect(screen.getByText(/^Freezes at −1\.\d\s°C$/)).toBeVisible();
+  expect(screen.getByText("Tested 2 Mar 2026, refractometer")).toBeVisible();
+  expect(screen.getByText(/^Under 10 % by volume/)).toBeVisible();
+});
+
+it("says between which temperatures the fluid is liquid when no reading is", async () => {
   const { basis, totals } = summaryOf();
   serverAnswers(
     summaryCall,
     summaryOf({
-      basis: { ...basis, blockedBy: "glycol" },
+      basis: { ...basis, blockedBy: "outsideFluid" },
+      totals: { ...totals, cooling: register(0, null) },
+    }),
+  );
+  show(<LoopScreen />);
+  expect(
+    await screen.findByText(/^Water is liquid and known from 0\.0\s°C to 150\.0\s°C/),
+  ).toBeVisible();
+});
+
+it("gives the reason instead of an energy, and keeps the chart", async () => {
+  const { basis, totals } = summaryOf();
+  serverAnswers(
+    summaryCall,
+    summaryOf({
+      basis: { ...basis, blockedBy: "concentration" },
       totals: { ...totals, cooling: register(0, null) },
       busiest: null,
       busiestDay: null,
@@ -200,7 +234,9 @@ it("gives glycol's reason instead of an energy, and keeps the chart", async () =
     }),
   );
   show(<LoopScreen />);
-  expect((await screen.findAllByText("No energy for glycol yet")).length).toBeGreaterThan(0);
+  expect(
+    (await screen.findAllByText("The glycol percentage is outside the tables")).length,
+  ).toBeGreaterThan(0);
   expect(screen.queryByText(/^0 kWh/)).toBeNull();
   expect(screen.getByRole("img", { name: /no energy/ })).toBeVisible();
 });

@@ -1,7 +1,8 @@
 import { useQuery } from "@tanstack/react-query";
 import { View } from "react-native";
 
-import { useWords } from "@features/i18n";
+import { fluidFacts } from "@shared/domain/fluids/fluid-facts";
+import { useFluidWords, useWords } from "@features/i18n";
 import { DefinitionRows, Sheet, Text, TextLink, useTheme, type Definition } from "@features/ui";
 
 import type { LoopFigures } from "./loop-context";
@@ -14,12 +15,20 @@ export function WorkedOutSheet(props: LoopFigures & { open: boolean; onClose: ()
   const { summary, format, point, open, onClose } = props;
   const t = useWords("loops");
   const { colour } = useTheme();
+  const fluidWords = useFluidWords();
   const { basis, totals } = summary;
   const register = leading(props);
   const means = totals[register];
   const kelvin = (value: number | null) => format.withUnit(value, "temperatureDifference", 2);
+  const named = { fluid: fluidWords(basis.fluid) };
+  const fluidSource =
+    basis.fluid.kind === "water"
+      ? t("workings.fluidWater")
+      : fluidFacts(basis.fluid, null)?.interpolated
+        ? t("workings.fluidInterpolated", named)
+        : t("workings.fluidGlycol", named);
   const energyRows: Definition[] = [
-    { label: t("workings.water"), value: t("workings.waterValue") },
+    { label: t("workings.fluid"), value: fluidSource },
     {
       label: t("workings.pressure"),
       value: t(basis.pressure.assumed ? "workings.pressureAssumed" : "workings.pressureGiven", {

@@ -11,7 +11,7 @@ import {
   siteOf,
   visited,
 } from "./test-kit";
-import { screen, waitFor } from "@testing-library/react";
+import { fireEvent, screen, waitFor } from "@testing-library/react";
 
 import { EditLoopScreen, NewLoopScreen } from "./loop-form-screen";
 
@@ -52,21 +52,62 @@ it("works the absolute pressure out beside the gauge, and stores MPa", async () 
   expect(body.gaugePressureMPa).toBeCloseTo(0.4, 12);
 });
 
-it("asks for percent and basis of glycol, and says that energy waits", async () => {
+it("asks for percent and basis of glycol, and says where the mixture freezes", async () => {
   serverAnswers(create, loopOf());
   await open();
   pick(/^Chilled water/);
   pick("Propylene glycol");
-  expect(screen.getByText("No energy for glycol yet.")).toBeVisible();
   press("Add a loop");
   expect(await screen.findByText("Give the percentage of glycol.")).toBeVisible();
   fill("Glycol", "30");
   pick("Mass");
+  // ASHRAE tables: 30 % by mass is 29.4 % by volume and freezes at −12.7 °C.
+  expect(screen.getByText("29.4")).toBeVisible();
+  expect(screen.getByText("−12.7")).toBeVisible();
+  expect(screen.queryByText(/Under 10 % by volume/)).toBeNull();
+  fill("Tested on", "2026-03-02");
+  fireEvent.change(screen.getByLabelText("Tested with"), { target: { value: "refractometer" } });
   press("Add a loop");
   await waitFor(() => expect(visited.replace).toHaveBeenCalled());
   expect(bodyOf(create)).toMatchObject({
-    fluid: { kind: "propyleneGlycol", percent: 30, basis: "mass" },
+    fluid: {
+      kind: "propyleneGlycol",
+      percent: 30,
+      basis: "mass",
+      testedOn: "2026-03-02",
+      testMethod: "refractometer",
+    },
   });
+});
+
+it("says what a weak mixture costs in certainty, and that a strong one gives no energy", async () => {
+  await open();
+  pick("Ethylene glycol");
+  pick("Volume");
+  fill("Glycol", "5");
+  expect(screen.getByText(/Under 10 % by volume there are no tables/)).toBeVisible();
+  fill("Glycol", "65");
+  expect(screen.getByText(/the loop gives no energy/)).toBeVisible();
+});
+
+it("does not say that energy changes where only the test of the glycol does", async () => {
+  openWith({ siteId: "1", loopId: "7" });
+  const fluid = {
+    kind: "propyleneGlycol",
+    percent: 30,
+    basis: "mass",
+    testedOn: null,
+    testMethod: null,
+  } as const;
+  serverAnswers("GET /sites/1/loops?archived=true", {
+    items: [loopOf({ hasReadings: true, fluid })],
+  });
+  show(<EditLoopScreen />);
+  await screen.findByLabelText("Tag");
+  fill("Tested on", "2026-03-02");
+  expect(screen.queryByText("Energy changes.")).toBeNull();
+  fill("Glycol", "31");
+  expect(screen.getByText("Energy changes.")).toBeVisible();
 });
 
 it("suggests cut-offs from the design flow and the service, and never sets them alone", async () => {

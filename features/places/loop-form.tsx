@@ -40,6 +40,8 @@ export const serverNames: Partial<Record<LoopField, string>> = {
   fluidKind: "fluid/kind",
   glycolPercent: "fluid/percent",
   glycolBasis: "fluid/basis",
+  glycolTestedOn: "fluid/testedOn",
+  glycolTestMethod: "fluid/testMethod",
   gaugePressure: "gaugePressureMPa",
   designFlow: "designFlowM3PerHour",
   designDeltaT: "designDeltaTK",

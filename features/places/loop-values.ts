@@ -1,4 +1,4 @@
-import type { Fluid, Loop, LoopService } from "@shared/contracts/places";
+import type { Fluid, GlycolTestMethod, Loop, LoopService } from "@shared/contracts/places";
 import type { Format } from "@features/i18n";
 import { shownValue, storedValue } from "./shown-range";
 
@@ -12,6 +12,8 @@ export interface LoopValues {
   readonly fluidKind: Fluid["kind"];
   readonly glycolPercent: number | null;
   readonly glycolBasis: "mass" | "volume" | null;
+  readonly glycolTestedOn: string | null;
+  readonly glycolTestMethod: GlycolTestMethod | null;
   readonly gaugePressure: number | null;
   readonly designFlow: number | null;
   readonly designDeltaT: number | null;
@@ -20,7 +22,7 @@ export interface LoopValues {
   readonly notes: string;
 }
 
-/** An empty choice of a select: no building, no feeding loop. */
+/** An empty choice of a select: no building, no feeding loop, no test method. */
 export const NONE = "none";
 
 export function loopValues(loop: Loop | null, format: Format, buildingId: string): LoopValues {
@@ -34,6 +36,8 @@ export function loopValues(loop: Loop | null, format: Format, buildingId: string
     fluidKind: loop?.fluid.kind ?? "water",
     glycolPercent: glycol?.percent ?? null,
     glycolBasis: glycol?.basis ?? null,
+    glycolTestedOn: glycol?.testedOn ?? null,
+    glycolTestMethod: glycol?.testMethod ?? null,
     gaugePressure: shownValue(format, "pressure", loop?.gaugePressureMPa ?? null),
     designFlow: shownValue(format, "flow", loop?.designFlowM3PerHour ?? null),
     designDeltaT: shownValue(format, "temperatureDifference", loop?.designDeltaTK ?? null),
@@ -65,17 +69,28 @@ export function loopBody(values: LoopValues, loop: Loop | null, format: Format) 
   };
 }
 
-function fluidOf({ fluidKind, glycolPercent, glycolBasis }: LoopValues): Fluid {
-  if (fluidKind === "water") return { kind: "water" };
-  // Both are checked before this is called; the server refuses a percent of 0 all the same.
-  return { kind: fluidKind, percent: glycolPercent ?? 0, basis: glycolBasis ?? "mass" };
+function fluidOf(values: LoopValues): Fluid {
+  if (values.fluidKind === "water") return { kind: "water" };
+  return {
+    kind: values.fluidKind,
+    // Both are checked before this is called; the server refuses a percent of 0 all the same.
+    percent: values.glycolPercent ?? 0,
+    basis: values.glycolBasis ?? "mass",
+    testedOn: values.glycolTestedOn,
+    testMethod: values.glycolTestMethod,
+  };
+}
+
+/** What energy is worked out with: when and how the percentage was tested changes no figure. */
+function mixtureOf(fluid: Fluid): string {
+  return fluid.kind === "water" ? fluid.kind : `${fluid.kind} ${fluid.percent} ${fluid.basis}`;
 }
 
 /** A change of these recalculates the energy of readings that are already there. */
 export function changesEnergy(body: ReturnType<typeof loopBody>, loop: Loop, service: LoopService) {
   return (
     service !== loop.service ||
-    JSON.stringify(body.fluid) !== JSON.stringify(loop.fluid) ||
+    mixtureOf(body.fluid) !== mixtureOf(loop.fluid) ||
     body.gaugePressureMPa !== loop.gaugePressureMPa ||
     body.flowCutOffM3PerHour !== loop.flowCutOffM3PerHour ||
     body.deltaTCutOffK !== loop.deltaTCutOffK

@@ -2,8 +2,9 @@ import { useQuery } from "@tanstack/react-query";
 import { useLocalSearchParams } from "expo-router";
 import { View } from "react-native";
 import type { Building, Loop, Site } from "@shared/contracts/places";
+import { fluidFacts } from "@shared/domain/fluids/fluid-facts";
 import { Answer } from "@features/api";
-import { useFormat, useWords } from "@features/i18n";
+import { useFluidWords, useFormat, useWords } from "@features/i18n";
 import {
   Button,
   Card,
@@ -21,7 +22,6 @@ import { ArchivedSwitch } from "./archived-switch";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
 import { tagService } from "./service-words";
-import { useFluidWords } from "./use-fluid-words";
 import { Way } from "./way";
 
 /** The loops of a site as a register: what each is, and the way to its points and to editing it. */
@@ -74,6 +74,14 @@ function LoopsTable(props: { site: Site; loops: readonly Loop[]; buildings: read
     const shown = format.withUnit(pressure.absoluteMPa, "pressure", 2);
     return pressure.assumed ? t("loops.assumed", { value: shown }) : shown;
   };
+  const fluidOf = (loop: Loop) => {
+    const facts =
+      loop.fluid.kind === "water" ? null : fluidFacts(loop.fluid, loop.gaugePressureMPa);
+    const freezes =
+      facts &&
+      t("loops.freezes", { temperature: format.withUnit(facts.freezesAtC, "temperature", 1) });
+    return [fluidWords(loop.fluid), freezes].filter(Boolean).join(", ");
+  };
   const tag = (loop: Loop) => (
     <LoopTag tag={loop.tag} service={tagService(loop.service)} outline={loop.archivedAt !== null} />
   );
@@ -108,7 +116,7 @@ function LoopsTable(props: { site: Site; loops: readonly Loop[]; buildings: read
     },
     { key: "building", header: t("loop.building"), render: buildingOf },
     { key: "parent", header: t("loop.parent"), render: parentOf, wideOnly: true },
-    { key: "fluid", header: t("loop.fluidTitle"), render: (loop) => fluidWords(loop.fluid) },
+    { key: "fluid", header: t("loop.fluidTitle"), render: fluidOf },
     {
       key: "pressure",
       header: t("loop.absolutePressure"),
@@ -132,7 +140,7 @@ function LoopsTable(props: { site: Site; loops: readonly Loop[]; buildings: read
     title: tag,
     lines: (loop) => [
       <TextLink key="name" label={loop.name} href={placesPaths.loop(loop.id)} />,
-      [buildingOf(loop), fluidWords(loop.fluid)].filter(Boolean).join(", "),
+      [buildingOf(loop), fluidOf(loop)].filter(Boolean).join(", "),
       parentOf(loop) ? t("loops.fedBy", { tag: parentOf(loop) }) : null,
       loop.archivedAt === null ? null : <Chip key="archived" label={t("archive.archived")} />,
       <View key="ways" style={{ marginTop: 6 }}>

@@ -62,7 +62,7 @@ const quantityOf = { heating: "heatingEnergy", cooling: "coolingEnergy" } as con
 function useNoFigureReason({ loop, mainPointId, coverage, energyKwh, heatingKwh }: OverviewLoop) {
   const t = useWords("places");
   if (mainPointId === null) return t("overview.noPoint");
-  if (loop.energyBlockedBy === "glycol") return t("overview.glycol");
+  if (loop.energyBlockedBy !== null) return t(`overview.${loop.energyBlockedBy}`);
   if (energyKwh !== null || heatingKwh !== null) return null;
   return coverage === null ? t("overview.noReadings") : t("overview.noEnergy");
 }

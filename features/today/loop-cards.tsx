@@ -100,7 +100,8 @@ function OneLoop({
     const kinds: Partial<Record<typeof reason, MarkKind>> = {
       noReadingInFile: "wrong",
       noReadingsThatDay: "wrong",
-      glycol: "look",
+      concentration: "look",
+      pressure: "look",
     };
     return {
       empty: {

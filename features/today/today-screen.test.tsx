@@ -119,7 +119,7 @@ it("makes sentences of what the server found, each leading to its place", async 
 it("gives an empty loop its reason instead of zeros", async () => {
   serverAnswers(
     todayCall,
-    todayOf({ loops: [loopOf({ card: null, energyKwh: null, emptyReason: "glycol" })] }),
+    todayOf({ loops: [loopOf({ card: null, energyKwh: null, emptyReason: "concentration" })] }),
   );
   show(<TodayScreen />);
   expect(await screen.findByText("Glycol")).toBeVisible();

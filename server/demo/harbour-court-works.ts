@@ -8,7 +8,7 @@ import type { createBuilding, createLoop, createPoint, createSite } from "@share
 export interface DemoLoop {
   readonly buildingName: string;
   readonly parentTag: string | null;
-  readonly loop: Omit<z.input<typeof createLoop.body>, "buildingId" | "parentLoopId">;
+  readonly loop: Omit<z.output<typeof createLoop.body>, "buildingId" | "parentLoopId">;
   readonly point: Omit<z.input<typeof createPoint.body>, "parentPointId">;
 }
 

@@ -8,6 +8,7 @@ import type { Interval } from "@shared/domain/time/interval";
 import { localDaysBetween } from "@shared/domain/time/local-calendar";
 import { calculateEnergy } from "@server/readings/calculate-energy";
 import type { EnergySettings } from "@server/readings/energy-settings";
+import { liquidC } from "@server/readings/fluid-block";
 import { energyBlock } from "@server/readings/point-readings";
 import { ChannelBit } from "@server/readings/stored-rows";
 import { findOverlap, type Overlap } from "./overlap";
@@ -164,7 +165,7 @@ function energyOf(
   span: Interval | null,
 ): Pick<
   ImportChecks,
-  "energy" | "energyBlockedBy" | "daily" | "rowsOutsideWater" | "outsideWaterExamples"
+  "energy" | "energyBlockedBy" | "daily" | "rowsOutsideFluid" | "outsideFluidExamples" | "liquidC"
 > {
   const days = span
     ? localDaysBetween({ ...span, endMs: Math.max(span.endMs, span.startMs + 1) }, settings.zone)
@@ -179,8 +180,9 @@ function energyOf(
     outsideFluidRows: result?.outsideFluidRows ?? 0,
   });
   const outside = {
-    rowsOutsideWater: result?.outsideFluidRows ?? 0,
-    outsideWaterExamples: (result?.outsideFluid ?? []).map(({ instantMs, channel, problem }) => ({
+    rowsOutsideFluid: result?.outsideFluidRows ?? 0,
+    liquidC: liquidC(settings.fluid),
+    outsideFluidExamples: (result?.outsideFluid ?? []).map(({ instantMs, channel, problem }) => ({
       instant: new Date(instantMs).toISOString(),
       channel,
       valueC: problem.value,

@@ -7,8 +7,8 @@ import {
   type NonAttribute,
   type Sequelize,
 } from "sequelize";
-import type { Fluid, LoopService } from "@shared/contracts/places";
-import { loopService } from "@shared/contracts/places";
+import type { Fluid, GlycolTestMethod, LoopService } from "@shared/contracts/places";
+import { glycolTestMethod, loopService } from "@shared/contracts/places";
 import { idColumn, instantColumn, optionalInstant, optionalReference, reference } from "./columns";
 
 const optionalDouble = { type: DataTypes.DOUBLE, allowNull: true, defaultValue: null } as const;
@@ -25,9 +25,12 @@ export class Loop extends Model<InferAttributes<Loop>, InferCreationAttributes<L
   declare name: string;
   declare service: LoopService;
   declare fluidKind: CreationOptional<Fluid["kind"]>;
-  /** Above 0, at most 60; null with water. */
+  /** Above 0, at most 100; null with water. Energy ends at 60 % by volume. */
   declare glycolPercent: CreationOptional<number | null>;
   declare glycolBasis: CreationOptional<"mass" | "volume" | null>;
+  /** Day of the test the percentage comes from; null where nobody said. */
+  declare glycolTestedOn: CreationOptional<string | null>;
+  declare glycolTestMethod: CreationOptional<GlycolTestMethod | null>;
   /** Null: nobody read the gauge, and 1.6 MPa absolute is assumed. */
   declare gaugePressureMPa: CreationOptional<number | null>;
   declare designFlowM3PerHour: CreationOptional<number | null>;
@@ -61,6 +64,12 @@ export class Loop extends Model<InferAttributes<Loop>, InferCreationAttributes<L
           allowNull: true,
           defaultValue: null,
         },
+        glycolTestedOn: { type: DataTypes.DATEONLY, allowNull: true, defaultValue: null },
+        glycolTestMethod: {
+          type: DataTypes.ENUM(...glycolTestMethod.options),
+          allowNull: true,
+          defaultValue: null,
+        },
         gaugePressureMPa: { ...optionalDouble, field: "gauge_pressure_mpa" },
         designFlowM3PerHour: { ...optionalDouble, field: "design_flow_m3_per_hour" },
         designDeltaTK: { ...optionalDouble, field: "design_delta_t_k" },
@@ -79,13 +88,24 @@ export class Loop extends Model<InferAttributes<Loop>, InferCreationAttributes<L
     if (fluidKind === "water") return { kind: "water" };
     if (glycolPercent === null || glycolBasis === null)
       throw new Error(`loop ${this.id} holds glycol but no percent or basis is stored`);
-    return { kind: fluidKind, percent: glycolPercent, basis: glycolBasis };
+    return {
+      kind: fluidKind,
+      percent: glycolPercent,
+      basis: glycolBasis,
+      testedOn: this.glycolTestedOn,
+      testMethod: this.glycolTestMethod,
+    };
   }
 }
 
 /** A fluid as the columns that store it. */
 export function fluidColumns(fluid: Fluid) {
-  return fluid.kind === "water"
-    ? { fluidKind: fluid.kind, glycolPercent: null, glycolBasis: null }
-    : { fluidKind: fluid.kind, glycolPercent: fluid.percent, glycolBasis: fluid.basis };
+  const glycol = fluid.kind === "water" ? null : fluid;
+  return {
+    fluidKind: fluid.kind,
+    glycolPercent: glycol?.percent ?? null,
+    glycolBasis: glycol?.basis ?? null,
+    glycolTestedOn: glycol?.testedOn ?? null,
+    glycolTestMethod: glycol?.testMethod ?? null,
+  };
 }

@@ -10,6 +10,7 @@ import { instantText } from "@server/database/conversions";
 import type { EnergyPoint } from "@server/queries/energy/energy-point";
 import type { EnergyRow } from "@server/queries/energy/energy-rows";
 import type { Load } from "@server/queries/energy/loads";
+import { fluidBlock, liquidC } from "@server/readings/fluid-block";
 
 /** Rounds to so many decimals: more than any meter resolves, fewer than a double prints. */
 export function rounded(value: number, decimals: number): number {
@@ -81,8 +82,10 @@ export function presentBasis({
     engineVersion: readings.engineVersion,
     pressure: { absoluteMPa: settings.pressure.pressureMPa, assumed: settings.pressure.assumed },
     meterSide: point.meterSide,
+    fluid: settings.loopFluid,
+    liquidC: liquidC(settings.fluid),
     // A point without readings yet has no state of its own: its loop's fluid already decides.
-    blockedBy: readings.blockedBy ?? (settings.fluid.ok ? null : "glycol"),
+    blockedBy: readings.blockedBy ?? fluidBlock(settings.fluid),
     recalculating: readings.recalculating,
   };
 }

@@ -1,13 +1,14 @@
-import type { Loop as LoopAnswer } from "@shared/contracts/places";
-import { absolutePressureMPa } from "@shared/domain/fluids/loop-fluid";
+import type { FluidBlock, Loop as LoopAnswer } from "@shared/contracts/places";
+import { absolutePressureMPa, fluidForEnergy } from "@shared/domain/fluids/loop-fluid";
 import { instantTextOrNull } from "@server/database/conversions";
 import type { Loop } from "@server/models/loop";
 import type { Actor } from "@server/policies/actor";
 import { can } from "@server/policies/can";
+import { fluidBlock } from "@server/readings/fluid-block";
 
-/** Until glycol is computed its readings are kept without energy; it is never read as water. */
-export function energyBlockedBy(loop: Loop): "glycol" | null {
-  return loop.fluidKind === "water" ? null : "glycol";
+/** What a loop's fluid cannot be worked out for; its readings are kept, and never read as water. */
+export function energyBlockedBy(loop: Loop): FluidBlock | null {
+  return fluidBlock(fluidForEnergy(loop.fluid, loop.gaugePressureMPa));
 }
 
 /** `holdsFiles` also counts log files of which no row counts: they are kept, so is their place. */

@@ -125,7 +125,8 @@ function overviewOf(
   const register = { chilled: "cooling", hot: "heating", changeover: null }[service];
   const volume = counted && register && Number(counted[`${register as "heating"}M3`]);
   const expectedS = (soFar.endMs - soFar.startMs) / 1000;
-  // A glycol loop has readings but no intervals: its coverage is not known here, and not missing.
+  // A loop whose fluid gives no energy has readings but no intervals: its coverage is not known here,
+  // and not missing.
   const isJudged =
     readings !== undefined && readings.firstMs !== null && energyBlockedBy(loop) === null;
   return {

@@ -1,5 +1,5 @@
 import { QueryTypes, type Transaction } from "sequelize";
-import type { LoopService } from "@shared/contracts/places";
+import type { Fluid, GlycolTestMethod, LoopService } from "@shared/contracts/places";
 import type { CutOffs, MeterSide, PowerOptions } from "@shared/domain/energy/power";
 import {
   absolutePressureMPa,
@@ -20,6 +20,8 @@ export interface EnergySettings {
   readonly meterSide: MeterSide;
   readonly cutOffs: CutOffs;
   readonly pressure: LoopPressure;
+  /** As the loop says it. */
+  readonly loopFluid: Fluid;
   readonly fluid: FluidForEnergy;
 }
 
@@ -31,6 +33,8 @@ interface Row {
   fluidKind: "water" | "ethyleneGlycol" | "propyleneGlycol";
   glycolPercent: number | null;
   glycolBasis: "mass" | "volume" | null;
+  testedOn: string | null;
+  testMethod: GlycolTestMethod | null;
   gaugePressure: number | null;
   flowCutOff: number | null;
   deltaTCutOff: number | null;
@@ -46,6 +50,8 @@ export async function loadEnergySettings(
     `SELECT p.organisation_id AS organisationId, s.zone AS zone, l.service AS service,
             p.meter_side AS meterSide, l.fluid_kind AS fluidKind,
             l.glycol_percent AS glycolPercent, l.glycol_basis AS glycolBasis,
+            DATE_FORMAT(l.glycol_tested_on, '%Y-%m-%d') AS testedOn,
+            l.glycol_test_method AS testMethod,
             l.gauge_pressure_mpa AS gaugePressure, l.flow_cut_off_m3_per_hour AS flowCutOff,
             l.delta_t_cut_off_k AS deltaTCutOff
        FROM metering_point p JOIN \`loop\` l ON l.id = p.loop_id JOIN site s ON s.id = l.site_id
@@ -58,8 +64,11 @@ export async function loadEnergySettings(
       ? ({ kind: "water" } as const)
       : {
           kind: row.fluidKind,
-          percent: row.glycolPercent ?? 0,
+          // Unknown is refused with a reason, never taken for 0 %.
+          percent: row.glycolBasis === null ? NaN : (row.glycolPercent ?? NaN),
           basis: row.glycolBasis ?? ("mass" as const),
+          testedOn: row.testedOn,
+          testMethod: row.testMethod,
         };
   return {
     organisationId: row.organisationId,
@@ -69,6 +78,7 @@ export async function loadEnergySettings(
     meterSide: row.meterSide,
     cutOffs: { flowM3PerHour: row.flowCutOff, deltaTK: row.deltaTCutOff },
     pressure: absolutePressureMPa(row.gaugePressure),
+    loopFluid: fluid,
     fluid: fluidForEnergy(fluid, row.gaugePressure),
   };
 }

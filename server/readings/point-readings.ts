@@ -1,10 +1,10 @@
 import { QueryTypes, type Transaction } from "sequelize";
 import type { Database } from "@server/database/connect";
+import type { EnergyBlock } from "@shared/contracts/energy";
 import type { EnergySettings } from "./energy-settings";
+import { fluidBlock } from "./fluid-block";
 import { ENGINE_VERSION } from "@shared/domain/energy/interval-energy";
 import { ChannelBit } from "./stored-rows";
-
-export type EnergyBlock = "glycol" | "noTemperature" | "noFlow" | "outsideWater";
 
 /** What is known of a point's readings as a whole, without reading any. */
 export interface PointReadings {
@@ -162,11 +162,11 @@ export function energyBlock(
     readonly outsideFluidRows: number;
   },
 ): EnergyBlock | null {
-  if (!settings.fluid.ok)
-    return settings.fluid.problem.code === "concentrationOutOfRange" ? "glycol" : "outsideWater";
+  const byFluid = fluidBlock(settings.fluid);
+  if (byFluid !== null) return byFluid;
   if (found.channels === null) return null;
   if ((found.channels & ChannelBit.flow) === 0) return "noFlow";
   const temperatures = ChannelBit.supply | ChannelBit.return;
   if ((found.channels & temperatures) !== temperatures) return "noTemperature";
-  return found.outsideFluidRows > 0 && found.measuredRows === 0 ? "outsideWater" : null;
+  return found.outsideFluidRows > 0 && found.measuredRows === 0 ? "outsideFluid" : null;
 }

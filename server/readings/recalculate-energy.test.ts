@@ -2,6 +2,7 @@ import { readFileSync } from "node:fs";
 import { QueryTypes } from "sequelize";
 import { integrateEnergy } from "@shared/domain/energy/integrate";
 import { totalEnergy } from "@shared/domain/energy/totals";
+import { energyBlocks } from "@server/database/migrations/008-energy-blocks";
 import { inTransaction } from "@server/database/transaction";
 import { LogFile } from "@server/models/log-file";
 import { LogImport } from "@server/models/log-import";
@@ -171,16 +172,68 @@ test("another zone of the site moves the days, and none of the old ones stays", 
   expect(days.map((day) => [day.date, day.totals.coveredS])).toEqual([["2025-07-15", 7200]]);
 });
 
-test("a glycol loop keeps its readings and shows no energy, with the reason", async () => {
+test("a loop of 30 % propylene glycol by mass has 5.88 % less energy than one of water", async () => {
   const { id: organisationId } = await organisation(app);
-  const { point } = await pointToMeter(app, organisationId, { fluidKind: "propyleneGlycol" });
+  const energyOf = async (fluidKind: "water" | "propyleneGlycol") => {
+    const { point } = await pointToMeter(app, organisationId, { fluidKind });
+    const rows = steadyRows(13, Date.UTC(2025, 6, 14));
+    rows.supply?.values.fill(6);
+    rows.return?.values.fill(12);
+    await store(point.id, organisationId, rows);
+    const state = await loadOnePointReadings(app.database, organisationId, point.id);
+    expect(state).toMatchObject({ blockedBy: null, rowCount: 13 });
+    const intervals = await loadIntervals(app.database, point.id, ...always);
+    return intervals.cooling.energyKwh.reduce((sum, kwh) => sum + kwh, 0);
+  };
+  const glycol = await energyOf("propyleneGlycol");
+  expect(glycol).toBeGreaterThan(0);
+  expect(100 * (glycol / (await energyOf("water")) - 1)).toBeCloseTo(-5.88, 2);
+});
+
+test("a loop of a concentration outside the tables keeps its readings and shows no energy, with the reason", async () => {
+  const { id: organisationId } = await organisation(app);
+  const { point } = await pointToMeter(app, organisationId, {
+    fluidKind: "propyleneGlycol",
+    glycolVolumePercent: 61,
+  });
   await store(point.id, organisationId, steadyRows(13, Date.UTC(2025, 6, 14)));
   const state = await loadOnePointReadings(app.database, organisationId, point.id);
-  expect(state).toMatchObject({ blockedBy: "glycol", rowCount: 13, nominalStepMs: 300_000 });
+  expect(state).toMatchObject({ blockedBy: "concentration", rowCount: 13, nominalStepMs: 300_000 });
   expect((await loadIntervals(app.database, point.id, ...always)).startMs.length).toBe(0);
   expect((await loadSegments(app.database, point.id, ...always))[0]?.columns.instantMs.length).toBe(
     13,
   );
+});
+
+test("frozen readings of a glycol loop give no energy, and water's limit is not theirs", async () => {
+  const { id: organisationId } = await organisation(app);
+  const blockAt = async (temperatureC: number) => {
+    const { point } = await pointToMeter(app, organisationId, { fluidKind: "propyleneGlycol" });
+    const rows = steadyRows(13, Date.UTC(2025, 6, 14));
+    rows.supply?.values.fill(temperatureC);
+    await store(point.id, organisationId, rows);
+    return loadOnePointReadings(app.database, organisationId, point.id);
+  };
+  // ASHRAE tables: 30 % propylene glycol by mass freezes at −12.7 °C.
+  expect(await blockAt(-12)).toMatchObject({ blockedBy: null, outsideFluidRows: 0 });
+  expect(await blockAt(-13)).toMatchObject({ blockedBy: "outsideFluid", outsideFluidRows: 13 });
+});
+
+test("points that glycol used to block are worked out again after the update", async () => {
+  const { id: organisationId } = await organisation(app);
+  const { point } = await pointToMeter(app, organisationId, { fluidKind: "propyleneGlycol" });
+  await store(point.id, organisationId, steadyRows(13, Date.UTC(2025, 6, 14)));
+  const write = (sql: string) => app.database.query(sql, { replacements: { id: point.id } });
+  await write("UPDATE point_readings SET blocked_by = 'glycol' WHERE point_id = :id");
+  await energyBlocks.up(app.database.getQueryInterface());
+  await energyBlocks.up(app.database.getQueryInterface());
+  const state = await loadOnePointReadings(app.database, organisationId, point.id);
+  expect(state).toMatchObject({ blockedBy: null, recalculating: true });
+  const jobs = await app.database.query("SELECT kind, state FROM job WHERE point_id = :id", {
+    replacements: { id: point.id },
+    type: QueryTypes.SELECT,
+  });
+  expect(jobs).toEqual([{ kind: "recalculate", state: "queued" }]);
 });
 
 test("a year of minutes takes at most twelve bytes a reading, all tables together", async () => {

@@ -132,16 +132,35 @@ describe("getPointSummary", () => {
     expect(summary.totals.cooling.flowWeightedDeltaTK).toBeCloseTo(5.9, 6);
   });
 
-  it("shows a glycol loop its covered time and the reason, and no energy", async () => {
+  it("gives a glycol loop energy, and says what it was worked out with", async () => {
     const { engineer, pointId } = await meteredPoint(
       { fromMs: Date.UTC(2026, 0, 12), count: 1441, stepMs: MINUTE_MS },
       { zone: "UTC", fluidKind: "propyleneGlycol" },
+    );
+    const { body } = await engineer
+      .get(`/points/${pointId}/summary?from=2026-01-12&to=2026-01-13`)
+      .expect(200);
+    const summary: PointSummary = body;
+    expect(summary.basis).toMatchObject({
+      blockedBy: null,
+      fluid: { kind: "propyleneGlycol", percent: 30, basis: "mass" },
+      liquidC: { highest: 100 },
+    });
+    // ASHRAE tables: 29.4 % by volume freezes at −12.7 °C.
+    expect(summary.basis.liquidC?.lowest).toBeCloseTo(-12.7, 1);
+    expect(summary.totals.cooling.energyKwh).toBeGreaterThan(0);
+  });
+
+  it("shows a loop of an unusable concentration its covered time and the reason, and no energy", async () => {
+    const { engineer, pointId } = await meteredPoint(
+      { fromMs: Date.UTC(2026, 0, 12), count: 1441, stepMs: MINUTE_MS },
+      { zone: "UTC", fluidKind: "propyleneGlycol", glycolVolumePercent: 61 },
     );
     const answer = await engineer
       .get(`/points/${pointId}/summary?from=2026-01-12&to=2026-01-13`)
       .expect(200);
     const summary: PointSummary = answer.body;
-    expect(summary.basis.blockedBy).toBe("glycol");
+    expect(summary.basis).toMatchObject({ blockedBy: "concentration", liquidC: null });
     expect(summary.totals.coverage).toBe(1);
     expect(summary.totals.cooling.energyKwh).toBeNull();
     expect(summary.busiest).toBeNull();

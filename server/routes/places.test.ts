@@ -193,12 +193,19 @@ describe("loops", () => {
     expect(body.pressure.absoluteMPa).toBeCloseTo(0.501325, 9);
   });
 
-  test("a glycol loop says why it gives no energy, and turns to water again", async () => {
+  test("a glycol loop keeps when and how it was tested, gives energy, and turns to water again", async () => {
     const engineer = await signedIn(app);
     const site = await makeSite(engineer);
     const fluid = { kind: "propyleneGlycol", percent: 30, basis: "mass" };
     const loop = await makeLoop(engineer, site.id, { fluid });
-    expect(loop).toMatchObject({ fluid, energyBlockedBy: "glycol" });
+    expect(loop).toMatchObject({
+      fluid: { ...fluid, testedOn: null, testMethod: null },
+      energyBlockedBy: null,
+    });
+    const tested = { ...fluid, testedOn: "2026-03-02", testMethod: "refractometer" };
+    await engineer.patch(`/loops/${loop.id}`, { fluid: tested }).expect(200);
+    const { body: kept } = await engineer.get(`/loops/${loop.id}`);
+    expect(kept.fluid).toEqual(tested);
     const { body } = await engineer.patch(`/loops/${loop.id}`, { fluid: { kind: "water" } });
     expect(body).toMatchObject({ fluid: { kind: "water" }, energyBlockedBy: null });
   });

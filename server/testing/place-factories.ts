@@ -8,6 +8,8 @@ interface PlaceWishes {
   service?: "chilled" | "hot" | "changeover";
   meterSide?: "supply" | "return";
   fluidKind?: "water" | "propyleneGlycol";
+  /** Instead of 30 % by mass. */
+  glycolVolumePercent?: number;
   flowCutOffM3PerHour?: number | null;
   deltaTCutOffK?: number | null;
 }
@@ -37,8 +39,8 @@ export async function pointToMeter(
     name: `Loop ${count}`,
     service: wishes.service ?? "chilled",
     fluidKind: wishes.fluidKind ?? "water",
-    glycolPercent: isWater ? null : 30,
-    glycolBasis: isWater ? null : "mass",
+    glycolPercent: isWater ? null : (wishes.glycolVolumePercent ?? 30),
+    glycolBasis: isWater ? null : wishes.glycolVolumePercent === undefined ? "mass" : "volume",
     flowCutOffM3PerHour: wishes.flowCutOffM3PerHour ?? null,
     deltaTCutOffK: wishes.deltaTCutOffK ?? null,
     createdAt,

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { contract, id, instant, nothing } from "./contract";
+import { fluid, fluidBlock } from "./places";
 
 /*
  * Energy and readings of one metering point. Ranges are half-open. A range may be given as UTC
@@ -43,11 +44,25 @@ export const energyTotals = z.object({
 });
 export type EnergyTotals = z.infer<typeof energyTotals>;
 
+/** Why a point's readings give no energy: its loop's fluid, what was not measured, what cannot be. */
+export const energyBlock = z.enum([
+  ...fluidBlock.options,
+  "noTemperature",
+  "noFlow",
+  "outsideFluid",
+]);
+export type EnergyBlock = z.infer<typeof energyBlock>;
+
 export const energyBasis = z.object({
   engineVersion: z.number().int().nullable(),
   pressure: z.object({ absoluteMPa: z.number(), assumed: z.boolean() }),
   meterSide: z.enum(["supply", "return"]),
-  blockedBy: z.enum(["glycol", "noTemperature", "noFlow", "outsideWater"]).nullable(),
+  fluid: fluid.describe("what fills the loop"),
+  liquidC: z
+    .object({ lowest: z.number(), highest: z.number() })
+    .nullable()
+    .describe("the fluid is liquid and known between these, °C; null where it gives no energy"),
+  blockedBy: energyBlock.nullable(),
   recalculating: z.boolean(),
 });
 
@@ -352,7 +367,13 @@ export const getToday = contract({
         card: loadCard.nullable().describe("means over the day"),
         energyKwh: z.number().nullable(),
         emptyReason: z
-          .enum(["noPoint", "noReadings", "noReadingsThatDay", "noReadingInFile", "glycol"])
+          .enum([
+            "noPoint",
+            "noReadings",
+            "noReadingsThatDay",
+            "noReadingInFile",
+            ...fluidBlock.options,
+          ])
           .nullable(),
         lastReadingAt: instant.nullable(),
       }),

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { contract, id, instant, nothing, page, pageQuery } from "./contract";
+import { energyBlock } from "./energy";
 import { ianaZone } from "./places";
 
 /*
@@ -232,9 +233,14 @@ export const importChecks = z.object({
   }),
   /** Rows whose flow instant found no temperature within two steps. */
   rowsWithoutTemperature: z.number().int(),
-  /** Measured rows at temperatures liquid water cannot have: stored, but they give no energy. */
-  rowsOutsideWater: z.number().int().optional(),
-  outsideWaterExamples: z
+  /** Measured rows at temperatures at which the fluid is not liquid: stored, but without energy. */
+  rowsOutsideFluid: z.number().int().optional(),
+  liquidC: z
+    .object({ lowest: z.number(), highest: z.number() })
+    .nullable()
+    .optional()
+    .describe("the loop's fluid is liquid and known between these, °C"),
+  outsideFluidExamples: z
     .array(
       z.object({
         instant,
@@ -254,7 +260,7 @@ export const importChecks = z.object({
     })
     .nullable()
     .describe("null where the loop's energy cannot be worked out, see energyBlockedBy"),
-  energyBlockedBy: z.enum(["glycol", "noTemperature", "noFlow", "outsideWater"]).nullable(),
+  energyBlockedBy: energyBlock.nullable(),
   /** A small picture of the whole file: 240 columns of flow and ΔT, null in holes. */
   picture: z
     .object({

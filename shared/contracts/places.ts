@@ -175,15 +175,26 @@ export const removeBuilding = contract({
 // Loops ---------------------------------------------------------------------------------------
 export const loopService = z.enum(["chilled", "hot", "changeover"]);
 export type LoopService = z.infer<typeof loopService>;
+export const glycolTestMethod = z.enum(["refractometer", "hydrometer", "laboratory", "unknown"]);
+export type GlycolTestMethod = z.infer<typeof glycolTestMethod>;
 export const fluid = z.discriminatedUnion("kind", [
   z.object({ kind: z.literal("water") }),
   z.object({
     kind: z.enum(["ethyleneGlycol", "propyleneGlycol"]),
-    percent: z.number().gt(0).max(60),
+    percent: z.number().gt(0).max(100).describe("above 60 % by volume there is no energy"),
     basis: z.enum(["mass", "volume"]),
+    testedOn: z.iso
+      .date()
+      .nullable()
+      .default(null)
+      .describe("day of the test the percentage comes from, YYYY-MM-DD"),
+    testMethod: glycolTestMethod.nullable().default(null),
   }),
 ]);
 export type Fluid = z.infer<typeof fluid>;
+/** A fluid that gives no energy: outside the glycol tables, or at a pressure water is not known at. */
+export const fluidBlock = z.enum(["concentration", "pressure"]);
+export type FluidBlock = z.infer<typeof fluidBlock>;
 const loopFields = z.object({
   tag: oneLine(24).describe("as painted on the pipe, such as CHW-1B"),
   name,
@@ -208,7 +219,7 @@ export const loop = loopFields.extend({
   siteId: id,
   archivedAt: instant.nullable(),
   pressure: z.object({ absoluteMPa: z.number(), assumed: z.boolean() }),
-  energyBlockedBy: z.enum(["glycol"]).nullable().describe("why readings give no energy"),
+  energyBlockedBy: fluidBlock.nullable().describe("why readings give no energy"),
   hasReadings: z.boolean(),
   can: ability.extend({ addPoint: z.boolean() }),
 });

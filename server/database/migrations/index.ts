@@ -2,8 +2,10 @@ import type { QueryInterface } from "sequelize";
 import { people } from "./001-people";
 import { places } from "./002-places";
 import { importsAndReadings } from "./003-imports-readings";
+import { fluids } from "./004-fluids";
 import { occupiedHours } from "./006-occupied-hours";
 import { evidence } from "./007-evidence";
+import { energyBlocks } from "./008-energy-blocks";
 
 /**
  * One step of the schema. To add one: write `NNN-subject.ts` beside this file, export a Migration
@@ -20,6 +22,8 @@ export const migrations: readonly Migration[] = [
   people,
   places,
   importsAndReadings,
+  fluids,
   occupiedHours,
   evidence,
+  energyBlocks,
 ];

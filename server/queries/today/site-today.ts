@@ -81,7 +81,8 @@ function presentDay({ loop, point, readings, week }: SiteLoop, day: string | nul
   });
   if (!point) return empty("noPoint");
   if (!readings || readings.rowCount === 0 || day === null) return empty("noReadings");
-  if (energyBlockedBy(loop)) return empty("glycol");
+  const block = energyBlockedBy(loop);
+  if (block) return empty(block);
   const found = week.find(({ date }) => date === day);
   if (!found) return empty("noReadingsThatDay");
   const register = registerOf(loop.service, found.totals);

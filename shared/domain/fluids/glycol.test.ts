@@ -11,6 +11,7 @@ import {
   fluidHeatUncertaintyPercent,
   INTERPOLATION_HALF_WIDTH_PERCENT,
 } from "./fluid-heat-uncertainty";
+import { fluidFacts } from "./fluid-facts";
 import { freezingPointC } from "./freezing-point";
 import { temperatureProblem } from "./temperature-problem";
 import { waterAtPressure } from "./water-at-pressure";
@@ -153,4 +154,18 @@ test("from 5 to 10 % the term's width covers the ASHRAE fits continued below the
       }
     }
   }
+});
+
+test("what a person should know of a mixture: both percentages, freezing point, interpolation", () => {
+  const thirty = fluidFacts({ kind: "propyleneGlycol", percent: 30, basis: "mass" }, 0.3);
+  expect(thirty).toMatchObject({ massPercent: 30, highestC: 100, interpolated: false });
+  // ASHRAE tables: 29.4 % by volume, −12.7 °C.
+  expect(thirty?.volumePercent).toBeCloseTo(29.4, 1);
+  expect(thirty?.freezesAtC).toBeCloseTo(-12.7, 1);
+  expect(thirty?.lowestC).toBe(thirty?.freezesAtC);
+  const dilute = fluidFacts({ kind: "ethyleneGlycol", percent: 5, basis: "volume" }, null);
+  expect(dilute).toMatchObject({ interpolated: true, lowestC: 0 });
+  expect(dilute!.freezesAtC).toBeLessThan(-1);
+  expect(fluidFacts({ kind: "water" }, null)).toMatchObject({ freezesAtC: 0, highestC: 150 });
+  expect(fluidFacts({ kind: "ethyleneGlycol", percent: 70, basis: "volume" }, null)).toBeNull();
 });

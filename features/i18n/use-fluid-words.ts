@@ -1,5 +1,6 @@
 import type { Fluid } from "@shared/contracts/places";
-import { useFormat, useWords } from "@features/i18n";
+import { useFormat } from "./use-format";
+import { useWords } from "./use-words";
 
 /** “Water”, “Propylene glycol, 30 % by mass”. */
 export function useFluidWords(): (fluid: Fluid) => string {
