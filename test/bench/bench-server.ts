@@ -18,6 +18,8 @@ export interface BenchServer {
   get<T>(path: string): Promise<T>;
   send<T>(method: "POST" | "PUT" | "PATCH", path: string, body?: object): Promise<T>;
   upload<T>(path: string, name: string, bytes: Buffer): Promise<T>;
+  /** Where and with what somebody signed in asks for a path of the API, for calls made elsewhere. */
+  request(path: string): { readonly url: string; readonly headers: Record<string, string> };
   /** Greatest memory the process has held since it started, MB. */
   peakMb(): number;
   /** What it holds now, MB. */
@@ -57,11 +59,14 @@ export async function startBenchServer(
   await foundEngineer(databaseUrl);
   const cookie = await signIn(address);
 
-  async function call<T>(method: string, url: string, init: RequestInit = {}): Promise<T> {
-    const headers = new Headers(init.headers);
-    headers.set("cookie", cookie);
-    headers.set("X-Loopwright-Request", "1");
-    const answer = await fetch(`${address}/api/v1${url}`, { ...init, method, headers });
+  const request = (path: string) => ({
+    url: `${address}/api/v1${path}`,
+    headers: { cookie, "X-Loopwright-Request": "1" },
+  });
+
+  async function call<T>(method: string, path: string, init: RequestInit = {}): Promise<T> {
+    const { url, headers } = request(path);
+    const answer = await fetch(url, { ...init, method, headers: { ...init.headers, ...headers } });
     const text = await answer.text();
     if (!answer.ok) throw new Error(`${method} ${url}: ${answer.status} ${text}`);
     return JSON.parse(text) as T;
@@ -75,6 +80,7 @@ export async function startBenchServer(
   return {
     databaseName,
     databaseUrl,
+    request,
     get: (url) => call("GET", url),
     send: (method, url, body) =>
       call(method, url, {

@@ -1,4 +1,6 @@
+import path from "node:path";
 import { setTimeout as sleep } from "node:timers/promises";
+import { Worker } from "node:worker_threads";
 import type { BenchServer } from "./bench-server";
 import { quantile } from "./measure";
 
@@ -13,18 +15,16 @@ export async function p99OfSmallCall(
   server: BenchServer,
   until: { readonly seconds: number } | { readonly busy: Promise<unknown> },
 ): Promise<{ p99S: number; calls: number }> {
-  let over = false;
-  const end = "busy" in until ? until.busy : sleep(until.seconds * 1000);
-  const ended = end.finally(() => {
-    over = true;
+  const worker = new Worker(path.join(__dirname, "small-calls.mjs"), {
+    workerData: { ...server.request("/session"), pauseMs },
   });
-  const took: number[] = [];
-  while (!over) {
-    const started = performance.now();
-    await server.get("/session");
-    took.push((performance.now() - started) / 1000);
-    await sleep(pauseMs);
-  }
-  await ended;
+  const times = new Promise<number[]>((resolve, reject) => {
+    worker.once("message", resolve);
+    worker.once("error", reject);
+  });
+  const end = "busy" in until ? until.busy : sleep(until.seconds * 1000);
+  await Promise.race([end, times]);
+  worker.postMessage("enough");
+  const took = await times;
   return { p99S: quantile(took, 0.99), calls: took.length };
 }
