@@ -1,6 +1,7 @@
 import { FolderFileStore } from "./files/folder-file-store";
 import { JobRunner } from "./jobs/job-runner";
 import { createJobThreads } from "./jobs/job-threads";
+import { createPrinter } from "./print/printer";
 import { createPasswords } from "./security/passwords";
 import type { Services } from "./services";
 
@@ -13,6 +14,7 @@ export async function createServices(given: Given): Promise<Services> {
   return {
     ...given,
     passwords: createPasswords(config.passwordCost),
+    printer: createPrinter(),
     files: new FolderFileStore(config.dataDir),
     jobs: new JobRunner(database, threads, clock, log),
   };
@@ -21,6 +23,7 @@ export async function createServices(given: Given): Promise<Services> {
 /** Lets go of everything in the reverse order; the database last. */
 export async function closeServices(services: Services): Promise<void> {
   await services.jobs.stop();
+  await services.printer.close();
   await services.passwords.close();
   await services.database.close();
 }

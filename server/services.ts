@@ -4,6 +4,7 @@ import type { Config } from "./config";
 import type { Database } from "./database/connect";
 import type { FileStore } from "./files/file-store";
 import type { JobRunner } from "./jobs/job-runner";
+import type { Printer } from "./print/printer";
 import type { Passwords } from "./security/passwords";
 
 /** What lives as long as the process; made once by main.ts and by the test app. */
@@ -13,6 +14,7 @@ export interface Services {
   readonly clock: Clock;
   readonly log: Logger;
   readonly passwords: Passwords;
+  readonly printer: Printer;
   readonly files: FileStore;
   /** Poke it after queueing a job; it runs once the server has started it. */
   readonly jobs: JobRunner;

@@ -5,6 +5,7 @@ import {
   type IntervalEnergyColumns,
   type RegisterColumns,
 } from "@shared/domain/energy/interval-energy";
+import { waterSeconds } from "@shared/domain/energy/totals";
 import { insertMany, selectMany, type SqlRow, type SqlValue } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
 
@@ -17,8 +18,9 @@ import type { Database } from "@server/database/connect";
  *   <register>_s         the register ran all the covered time
  *   <register>_dt        and Δθ's integral is what the mean temperatures give
  *   volume_m3            the sum of both registers' volumes
- *   suppressed_…, …_rows, apportioned   0
- *   min_…, max_…, …_c    nothing is covered
+ *   suppressed_…, …_rows, apportioned, meter_only_s   0
+ *   min_…, max_…         nothing is covered
+ *   …_c                  no water was measured
  * Mean temperatures are kept instead of their integrals, whose size a float would round.
  */
 const registerNames = ["heating", "cooling"] as const;
@@ -44,6 +46,8 @@ const columns = [
   "excluded_rows",
   "no_reading_rows",
   "apportioned",
+  "meter_only_s",
+  "against_rows",
   "engine_version",
 ] as const;
 
@@ -105,6 +109,8 @@ function* rowsOf(pointId: string, energy: IntervalEnergyColumns): Generator<SqlV
   for (let i = 0; i < energy.startMs.length; i++) {
     const coveredS = energy.coveredS[i] as number;
     const volume = energy.volumeM3[i] as number;
+    const meterOnlyS = energy.meterOnlyS[i] as number;
+    const waterS = waterSeconds({ coveredS, meterOnlyS });
     const registersVolume =
       (energy.heating.volumeM3[i] as number) + (energy.cooling.volumeM3[i] as number);
     yield [
@@ -120,12 +126,14 @@ function* rowsOf(pointId: string, energy: IntervalEnergyColumns): Generator<SqlV
       known(energy.maxPowerKw[i] as number),
       known(energy.minFlowM3PerHour[i] as number),
       known(energy.maxFlowM3PerHour[i] as number),
-      coveredS > 0 ? (energy.supplyCs[i] as number) / coveredS : null,
-      coveredS > 0 ? (energy.returnCs[i] as number) / coveredS : null,
+      waterS > 0 ? (energy.supplyCs[i] as number) / waterS : null,
+      waterS > 0 ? (energy.returnCs[i] as number) / waterS : null,
       some(energy.measuredRows[i] as number),
       some(energy.excludedRows[i] as number),
       some(energy.noReadingRows[i] as number),
       energy.apportioned[i] ? 1 : null,
+      some(meterOnlyS),
+      some(energy.againstRows[i] as number),
       ENGINE_VERSION,
     ];
   }
@@ -198,6 +206,8 @@ function emptyColumns(count: number): IntervalEnergyColumns {
     excludedRows: column(),
     noReadingRows: column(),
     apportioned: new Uint8Array(count),
+    meterOnlyS: column(),
+    againstRows: column(),
   };
 }
 
@@ -249,8 +259,11 @@ function fillRow(energy: IntervalEnergyColumns, i: number, row: SqlRow): void {
   energy.maxPowerKw[i] = value(at.max_power_kw, NaN);
   energy.minFlowM3PerHour[i] = value(at.min_flow, NaN);
   energy.maxFlowM3PerHour[i] = value(at.max_flow, NaN);
-  energy.supplyCs[i] = value(at.supply_c, 0) * covered;
-  energy.returnCs[i] = value(at.return_c, 0) * covered;
+  energy.meterOnlyS[i] = value(at.meter_only_s, 0);
+  energy.againstRows[i] = value(at.against_rows, 0);
+  const waterS = waterSeconds({ coveredS: covered, meterOnlyS: energy.meterOnlyS[i] as number });
+  energy.supplyCs[i] = value(at.supply_c, 0) * waterS;
+  energy.returnCs[i] = value(at.return_c, 0) * waterS;
   energy.measuredRows[i] = value(at.measured_rows, 0);
   energy.excludedRows[i] = value(at.excluded_rows, 0);
   energy.noReadingRows[i] = value(at.no_reading_rows, 0);
@@ -275,6 +288,39 @@ export async function loadIntervals(
     [pointId, Math.ceil(fromMs / 1000), Math.ceil(toMs / 1000)],
     transaction,
   );
+  const energy = emptyColumns(rows.length);
+  rows.forEach((row, i) => fillRow(energy, i, row));
+  return energy;
+}
+
+/** Stretches asked for in one query; more would make it long without making it quicker. */
+const mostSpans = 200;
+
+/**
+ * The same for stretches of time in ascending order, such as the nights of a year: a fifth of the
+ * rows. They must not overlap.
+ */
+export async function loadIntervalsOf(
+  database: Database,
+  pointId: string,
+  spans: readonly { readonly startMs: number; readonly endMs: number }[],
+): Promise<IntervalEnergyColumns> {
+  const rows: SqlRow[] = [];
+  for (let from = 0; from < spans.length; from += mostSpans) {
+    const asked = spans.slice(from, from + mostSpans);
+    const seconds = asked.flatMap(({ startMs, endMs }) => [
+      Math.ceil(startMs / 1000),
+      Math.ceil(endMs / 1000),
+    ]);
+    rows.push(
+      ...(await selectMany(
+        database,
+        `SELECT ${columns.slice(1).join(", ")} FROM interval_energy WHERE point_id = ?
+            AND (${asked.map(() => "start_s >= ? AND start_s < ?").join(" OR ")}) ORDER BY start_s`,
+        [pointId, ...seconds],
+      )),
+    );
+  }
   const energy = emptyColumns(rows.length);
   rows.forEach((row, i) => fillRow(energy, i, row));
   return energy;

@@ -11,6 +11,8 @@ export interface SampleInput {
 const days = { from: "2026-02-02", to: "2026-02-09" };
 const instants = { from: "2026-02-02T00:00:00Z", to: "2026-02-09T00:00:00Z" };
 
+const flip = { kind: "flipFlow", from: instants.from, to: null };
+
 /**
  * By operation, where nothing at all will not do. The tenancy test sends them with the owner's ids
  * too, so one that is wrong shows.
@@ -26,6 +28,9 @@ export const sampleInputs: Readonly<Record<string, SampleInput>> = {
   getReadings: { query: instants },
   downloadIntervals: { query: instants },
   downloadReadings: { query: instants },
+  getWorkings: { query: { ...days, figure: "energy" } },
+  downloadWorkingsCsv: { query: { ...days, figure: "energy" } },
+  downloadWorkingsPdf: { query: { ...days, figure: "energy" } },
   getPointShape: { query: instants },
   downloadDurationCurve: { query: instants },
   saveLoopPump: {
@@ -40,6 +45,9 @@ export const sampleInputs: Readonly<Record<string, SampleInput>> = {
     },
   },
   getDayMarks: { query: days },
+  proposeCorrection: { body: { change: flip, reason: "Arrow against the flow" } },
+  withdrawCorrection: { body: { reason: "Right after all" } },
+  proposeFill: { body: { ...instants, method: "likeDays", reason: "Flat battery" } },
   addImportFile: { file: "time,flow\n2026-02-02 00:00,1.0\n" },
   chooseRecipe: { body: plainRecipe },
   addCertificate: { body: { number: "C-9", issuedOn: "2026-02-01", expanded: 1 } },
