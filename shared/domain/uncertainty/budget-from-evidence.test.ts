@@ -254,3 +254,20 @@ test("the density is taken where the flow meter sits", () => {
   const onSupply = term("density", {}, { state: hot, meterSide: "supply" });
   expect(onSupply.standard).toBeGreaterThan(onReturn.standard);
 });
+
+test("a temperature at which the fluid is not liquid takes the density's widest term", () => {
+  const frozen = { supplyC: 6, returnC: -20, velocityMPerS: null };
+  const unknown = term("density", {}, { state: null });
+  expect(term("density", {}, { state: frozen }).standard).toBe(unknown.standard);
+  expect(unknown.standard).toBeGreaterThan(term("density").standard);
+});
+
+test("one default among the recorded terms makes the whole rest on defaults in part", () => {
+  const evidence = { ...WORKED_EVIDENCE, remountPercent: null };
+  expect(budgetBasis(budgetFromEvidence({ ...WORKED_INPUT, evidence }))).toBe("partlyDefaults");
+  const nearly = { ...WORKED_INPUT, evidence: null, pipe: null };
+  const edits = [{ kind: "zero", value: 0.01, reason: "valve shut" }] as const;
+  const edited = { ...WORKED_EVIDENCE, edits, remountPercent: 0.4 };
+  expect(budgetBasis(budgetFromEvidence(nearly))).toBe("defaults");
+  expect(budgetBasis(budgetFromEvidence({ ...WORKED_INPUT, evidence: edited }))).toBe("evidence");
+});

@@ -97,3 +97,15 @@ test("a figure less itself has only its random part left", () => {
   const own = differenceUncertainty(a, a, "all");
   expect(own.standard).toBeCloseTo(Math.SQRT2, 12);
 });
+
+test("what was filled in one week is no error of the other", () => {
+  const filled = budgetTerm("filled", standard(1, "%"), origin);
+  const week = (value: number) => ({
+    value,
+    combined: combineTerms([{ term: filled, percent: 1, shrinks: false }], value, 100, 50),
+  });
+  expect(differenceUncertainty(week(1000), week(1000), "all").standard).toBeCloseTo(
+    10 * Math.SQRT2,
+    9,
+  );
+});
