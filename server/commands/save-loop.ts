@@ -21,6 +21,9 @@ type LoopFields = Omit<LoopChanges, "archived">;
 
 /** What the energy of a loop's readings hangs on. */
 const energyColumns = [
+  // They bound what a counter can have counted.
+  "designFlowM3PerHour",
+  "designDeltaTK",
   "service",
   "fluidKind",
   "glycolPercent",

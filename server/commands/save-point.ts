@@ -1,4 +1,4 @@
-import type { Transaction } from "sequelize";
+import { QueryTypes, type Transaction } from "sequelize";
 import type { z } from "zod";
 import type {
   createPoint as createContract,
@@ -9,6 +9,7 @@ import { inTransaction } from "@server/database/transaction";
 import { Conflict } from "@server/http/errors";
 import { Loop } from "@server/models/loop";
 import { MeteringPoint } from "@server/models/metering-point";
+import { ChannelBit } from "@server/readings/stored-rows";
 import { changesOf, recordPlaceEvent, type Acting } from "./acting";
 import { keepBoreVersion } from "./keep-bore-version";
 import { requireParent } from "./parent-rules";
@@ -83,7 +84,8 @@ export async function createPoint(
 
 /**
  * Changes, archives or restores a metering point. Another meter side changes the density its energy
- * is worked out with, so that is recalculated; another pipe becomes a dated version of its bore.
+ * is worked out with and another gap rule the time it covers, so that is recalculated; another pipe
+ * becomes a dated version of its bore, which also bounds what a counter there can have counted.
  */
 export async function updatePoint(
   acting: Acting,
@@ -109,7 +111,9 @@ export async function updatePoint(
     await namingFields(() => point.save({ transaction }), flips && !archived);
     if (pipe !== undefined)
       Object.assign(changes, await changePipe(acting, pointId, pipe, transaction));
-    if ("meterSide" in changes) await recalculatePoint(acting, pointId, transaction);
+    const counts = "pipe" in changes && (await holdsCounters(acting, pointId, transaction));
+    if ("meterSide" in changes || "gapRule" in changes || counts)
+      await recalculatePoint(acting, pointId, transaction);
     if (Object.keys(changes).length > 0)
       await recordPlaceEvent(
         acting,
@@ -120,6 +124,19 @@ export async function updatePoint(
       );
     return point;
   });
+}
+
+async function holdsCounters(
+  { database }: Acting,
+  pointId: string,
+  transaction: Transaction,
+): Promise<boolean> {
+  const counters = ChannelBit.volumeCounter | ChannelBit.heatingCounter | ChannelBit.coolingCounter;
+  const found = await database.query(
+    `SELECT 1 FROM reading_block WHERE point_id = :pointId AND (channel_set & :counters) <> 0 LIMIT 1`,
+    { replacements: { pointId, counters }, type: QueryTypes.SELECT, transaction },
+  );
+  return found.length > 0;
 }
 
 async function changePipe(

@@ -1,5 +1,6 @@
 import { Op, type Transaction } from "sequelize";
 import { MAX_FILES_PER_IMPORT } from "@shared/contracts/imports";
+import { isCounter } from "@shared/domain/log-files/column-units";
 import {
   DEFAULT_REPAIR_CHOICES,
   type FileRecipe,
@@ -16,6 +17,7 @@ import { LogFile } from "@server/models/log-file";
 import { LogImport } from "@server/models/log-import";
 import { MeteringPoint } from "@server/models/metering-point";
 import { can } from "@server/policies/can";
+import { loadEnergySettings } from "@server/readings/energy-settings";
 import { isCancellable, isEditable, isReopenable } from "./import-states";
 import { questionsLeftBy } from "./open-questions";
 import type { ReceivedFile } from "./receive-log-file";
@@ -179,10 +181,19 @@ export async function giveRecipe(
     const problems = recipeProblems(recipe, recognition);
     if (problems.length > 0) throw new Invalid(problems);
     await stopChecks(context.database, transaction, row);
-    await file.update({ recipe, questions: questionsLeftBy(recipe, recognition) }, { transaction });
+    const { service } = await loadEnergySettings(context.database, row.pointId, transaction);
+    const questions = questionsLeftBy(recipe, recognition, service);
+    await file.update({ recipe: withMeter(recipe), questions }, { transaction });
     await settleImport(context.database, transaction, row);
     await audit(context, "recipe-chosen", row, { file: file.name, recipe }, transaction);
   });
+}
+
+/** A permanent meter's file says so in its recipe, which is how its readings are found again. */
+function withMeter(recipe: FileRecipe): FileRecipe {
+  const isMetered = recipe.columns.some(({ meaning }) => meaning === "power" || isCounter(meaning));
+  if (!isMetered || recipe.meter) return recipe;
+  return { ...recipe, meter: { positivePower: null, exchangedAt: [] } };
 }
 
 /** Another encoding, separator or header line: what the columns are must be found out again. */

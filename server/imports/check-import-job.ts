@@ -5,6 +5,7 @@ import { JobDropped } from "@server/jobs/job-outcome";
 import { LogFile } from "@server/models/log-file";
 import { loadEnergySettings } from "@server/readings/energy-settings";
 import { loadSources } from "@server/readings/load-segments";
+import { loadPointCorrections } from "@server/readings/point-corrections";
 import { checkImport, spanOf } from "./check-import";
 import type { CheckedFile } from "./file-checks";
 import { importOfJob, loadFile, openFiles } from "./load-files";
@@ -24,7 +25,8 @@ export async function checkImportJob(context: JobContext): Promise<void> {
   const span = spanOf(loaded);
   const stored = span ? await loadSources(database, row.pointId, span.startMs, span.endMs + 1) : [];
   context.checkpoint();
-  const checks = checkImport({ files: loaded, stored, settings, choices: row.repair });
+  const { segments: corrections } = await loadPointCorrections(database, row.pointId);
+  const checks = checkImport({ files: loaded, stored, settings, choices: row.repair, corrections });
   const unclear = unclearFiles(loaded);
 
   await inTransaction(database, async (transaction) => {

@@ -1,16 +1,27 @@
 import type { ImportChecks } from "@shared/contracts/imports";
-import { totalEnergy } from "@shared/domain/energy/totals";
+import { totalEnergy, waterSeconds } from "@shared/domain/energy/totals";
 import type { RepairStepCode } from "@shared/domain/log-files/repair-step";
 import type { RepairChoices } from "@shared/domain/log-files/recipe";
-import { RowQuality, type ReadingSegment } from "@shared/domain/readings/reading-columns";
+import {
+  RowQuality,
+  type ReadingChannel,
+  type ReadingSegment,
+} from "@shared/domain/readings/reading-columns";
+import { hasCounters } from "@shared/domain/readings/counter-steps";
+import {
+  correctSegments,
+  type SegmentCorrection,
+} from "@shared/domain/readings/corrections/correct-segments";
 import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
 import type { Interval } from "@shared/domain/time/interval";
 import { localDaysBetween } from "@shared/domain/time/local-calendar";
 import { calculateEnergy } from "@server/readings/calculate-energy";
 import type { EnergySettings } from "@server/readings/energy-settings";
 import { liquidC } from "@server/readings/fluid-block";
+import { meterFacts, type MeterPlace } from "@server/readings/meter-facts";
 import { energyBlock } from "@server/readings/point-readings";
 import { ChannelBit } from "@server/readings/stored-rows";
+import { counterEventSteps } from "./counter-events";
 import { findOverlap, type Overlap } from "./overlap";
 import { fileChecks, type CheckedFile } from "./file-checks";
 import { pictureOf } from "./picture";
@@ -38,15 +49,24 @@ export interface CheckInput {
   readonly stored: readonly ReadingSource[];
   readonly settings: EnergySettings;
   readonly choices: RepairChoices;
+  /** What corrects stretches of the point, the files' own included. */
+  readonly corrections: readonly SegmentCorrection[];
 }
 
 /** Above or below whatever is stored, as the choice says. */
 const farAbove = 1e9;
 
-export function sourcesOf(files: readonly CheckedFile[], precedence: number): ReadingSource[] {
-  return files.flatMap(({ kind, resolved, columns }) =>
-    columns === null ? [] : [{ precedence, kind, nominalStepMs: resolved.nominalStepMs, columns }],
-  );
+export function sourcesOf(
+  files: readonly CheckedFile[],
+  precedence: number,
+  place: MeterPlace,
+): ReadingSource[] {
+  return files.flatMap(({ kind, resolved, columns, recipe }) => {
+    if (columns === null) return [];
+    const meter = meterFacts(recipe, place);
+    const { nominalStepMs } = resolved;
+    return [{ precedence, kind, nominalStepMs, columns, ...(meter && { meter }) }];
+  });
 }
 
 /** From the first to the last moment the files speak for; null where no row is left. */
@@ -84,9 +104,16 @@ export function overlapsOf(
  * figures take the first reading of a conflict, keep weak signals and keep what is stored.
  */
 export function checkImport(input: CheckInput): ImportChecks {
-  const { files, stored, settings, choices } = input;
+  const { files, stored, settings, choices, corrections } = input;
   const overlaps = overlapsOf(files, stored);
-  const checked = files.map((file, i) => fileChecks(file, overlaps[i] ?? null, settings.zone));
+  const checked = files.map((file, i) =>
+    fileChecks(
+      file,
+      overlaps[i] ?? null,
+      settings.zone,
+      counterEventSteps(file, settings.meterPlace),
+    ),
+  );
   const asked = new Set(
     files.flatMap(({ resolved }) => resolved.questions.map(({ code }) => code)),
   );
@@ -97,9 +124,12 @@ export function checkImport(input: CheckInput): ImportChecks {
   if (isDifferent && choices.overlap === null) undecided.push("overlap");
 
   const span = spanOf(files);
-  const own = resolveSegments(sourcesOf(files, 1));
+  const own = resolveSegments(sourcesOf(files, 1, settings.meterPlace));
   const precedence = choices.overlap === "useThis" || !isDifferent ? farAbove : -farAbove;
-  const together = resolveSegments([...stored, ...sourcesOf(files, precedence)]);
+  const together = resolveSegments([
+    ...stored,
+    ...sourcesOf(files, precedence, settings.meterPlace),
+  ]);
   const found = new Set<string>(
     checked.flatMap((file) => [
       ...file.steps.map(({ code }) => code),
@@ -111,10 +141,15 @@ export function checkImport(input: CheckInput): ImportChecks {
     files: checked,
     rows: rowsOf(own),
     rowsWithoutTemperature: rowsWithoutTemperature(files, together, span),
-    ...energyOf(together, settings, span),
+    ...energyOf(correctSegments(together, corrections), settings, span),
     picture: span && pictureOf(own, span),
-    clean: lookedFor.filter((name) => !found.has(name)),
+    clean: [...lookedFor, ...lookedForInCounters(files)].filter((name) => !found.has(name)),
   };
+}
+
+function lookedForInCounters(files: readonly CheckedFile[]): RepairStepCode[] {
+  const counts = files.some(({ columns }) => columns !== null && hasCounters(columns));
+  return counts ? ["counterReset", "counterJump"] : [];
 }
 
 function rowsOf(segments: readonly ReadingSegment[]): ImportChecks["rows"] {
@@ -142,13 +177,14 @@ function rowsWithoutTemperature(
   span: Interval | null,
 ): number {
   const borrows = files.some(
-    ({ columns }) => columns?.flowM3PerHour && !(columns.supplyC && columns.returnC),
+    ({ columns }) =>
+      (columns?.flowM3PerHour || columns?.volumeCounterM3) && !(columns.supplyC && columns.returnC),
   );
   if (!borrows || span === null) return 0;
   let count = 0;
   for (const { columns } of together) {
     const { instantMs, flowM3PerHour, supplyC, returnC, quality } = columns;
-    if (!flowM3PerHour) continue;
+    if (!flowM3PerHour || columns.powerKw || columns.heatingKw || columns.coolingKw) continue;
     for (let i = 0; i < instantMs.length; i++) {
       const at = instantMs[i] as number;
       if (at < span.startMs || at > span.endMs || quality[i] === RowQuality.excluded) continue;
@@ -165,7 +201,13 @@ function energyOf(
   span: Interval | null,
 ): Pick<
   ImportChecks,
-  "energy" | "energyBlockedBy" | "daily" | "rowsOutsideFluid" | "outsideFluidExamples" | "liquidC"
+  | "energy"
+  | "energyBlockedBy"
+  | "rowsAgainstRegister"
+  | "daily"
+  | "rowsOutsideFluid"
+  | "outsideFluidExamples"
+  | "liquidC"
 > {
   const days = span
     ? localDaysBetween({ ...span, endMs: Math.max(span.endMs, span.startMs + 1) }, settings.zone)
@@ -196,10 +238,11 @@ function energyOf(
       heatingKwh: totals.heating.energyKwh,
       coolingKwh: totals.cooling.energyKwh,
       suppressedKwh: totals.suppressedKwh,
-      volumeM3: totals.volumeM3,
+      volumeM3: waterSeconds(totals) > 0 ? totals.volumeM3 : null,
       coveredS: totals.coveredS,
     },
     energyBlockedBy: null,
+    rowsAgainstRegister: totals.againstRows,
     daily: result.days.map(({ date, lengthS, totals: day }) => ({
       date,
       heatingKwh: day.coveredS > 0 ? day.heating.energyKwh : null,
@@ -212,9 +255,11 @@ function energyOf(
 }
 
 function channelsOf(segments: readonly ReadingSegment[]): number {
-  const has = (name: "flowM3PerHour" | "supplyC" | "returnC") =>
-    segments.some(({ columns }) => columns[name] !== null);
+  const has = (name: ReadingChannel) => segments.some(({ columns }) => !!columns[name]);
   return (
+    (has("powerKw") ? ChannelBit.power : 0) +
+    (has("heatingKw") ? ChannelBit.heatingCounter : 0) +
+    (has("coolingKw") ? ChannelBit.coolingCounter : 0) +
     (has("flowM3PerHour") ? ChannelBit.flow : 0) +
     (has("supplyC") ? ChannelBit.supply : 0) +
     (has("returnC") ? ChannelBit.return : 0)

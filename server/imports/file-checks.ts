@@ -1,5 +1,6 @@
 import type { ImportChecks } from "@shared/contracts/imports";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
+import type { RepairStep } from "@shared/domain/log-files/repair-step";
 import { zoneOffsets } from "@shared/domain/time/zone-offsets";
 import type { RecognitionFindings } from "@server/models/log-file";
 import type { Overlap } from "./overlap";
@@ -21,14 +22,20 @@ export function fileChecks(
   file: CheckedFile,
   overlap: Overlap | null,
   siteZone: string,
+  counterSteps: readonly RepairStep[],
 ): ImportChecks["files"][number] {
   const { resolved } = file;
   const { counts, gaps } = resolved;
   return {
     fileId: file.fileId,
-    steps: withSteps(resolved.steps, overlap ? [overlap.equal, overlap.different] : []).map(
-      (step) => ({ ...step, examples: [...step.examples], countByKind: { ...step.countByKind } }),
-    ),
+    steps: withSteps(resolved.steps, [
+      ...counterSteps,
+      ...(overlap ? [overlap.equal, overlap.different] : []),
+    ]).map((step) => ({
+      ...step,
+      examples: [...step.examples],
+      countByKind: { ...step.countByKind },
+    })),
     rowsRead: counts.read,
     rowsKept: counts.kept,
     firstInstant: isoOrNull(resolved.firstInstantMs),

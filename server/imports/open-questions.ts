@@ -1,8 +1,13 @@
-import { openQuestions } from "@shared/domain/log-files/open-questions";
-import type { ColumnRecipe, FileRecipe, FlowUnit } from "@shared/domain/log-files/recipe";
+import { openQuestions, unitQuestionOf } from "@shared/domain/log-files/open-questions";
+import {
+  FLOW_UNITS,
+  isChannelMeaning,
+  unitsOfMeaning,
+} from "@shared/domain/log-files/column-units";
+import { saysMean } from "@shared/domain/log-files/header-words";
+import type { ColumnRecipe, FileRecipe } from "@shared/domain/log-files/recipe";
+import type { LoopService } from "@shared/contracts/places";
 import type { Question, SampleRow } from "@shared/domain/log-files/recognition";
-
-const flowUnits: readonly FlowUnit[] = ["m3/h", "L/s", "L/min", "US gpm"];
 
 interface Findings {
   readonly asked: readonly Question[];
@@ -14,8 +19,15 @@ interface Findings {
  * those it raises itself, such as the unit of a column that was skipped before. Giving a recipe
  * answers what it states without a null: decimal marks and the columns' meanings.
  */
-export function questionsLeftBy(recipe: FileRecipe, findings: Findings): Question[] {
-  const left = findings.asked.filter((question) => isOpen(question, recipe));
+export function questionsLeftBy(
+  recipe: FileRecipe,
+  findings: Findings,
+  service: LoopService,
+): Question[] {
+  const left = findings.asked.filter(
+    (question) =>
+      isOpen(question, recipe) && (question.code !== "positivePower" || service === "changeover"),
+  );
   const has = (code: Question["code"], columnIndex?: number) =>
     left.some(
       (question) =>
@@ -29,10 +41,18 @@ export function questionsLeftBy(recipe: FileRecipe, findings: Findings): Questio
     if (open.code === "dateOrder") return has("dateOrder") ? [] : [dateOrderOf(recipe, findings)];
     if (has(open.code, open.columnIndex)) return [];
     const range = rangeOf(recipe, open.columnIndex, findings.sampleRows);
-    return open.code === "flowUnit"
-      ? [{ ...open, code: "flowUnit", ...range, choices: flowUnits }]
-      : [{ ...open, code: "temperatureUnit", ...range }];
+    if (open.code === "flowUnit")
+      return [{ ...open, code: "flowUnit", ...range, choices: FLOW_UNITS }];
+    if (open.code === "temperatureUnit") return [{ ...open, code: "temperatureUnit", ...range }];
+    const meaning = recipe.columns.find(({ index }) => index === open.columnIndex)?.meaning;
+    const choices = meaning === undefined ? [] : unitsOfMeaning(meaning);
+    return [{ ...open, code: "columnUnit", ...range, choices }];
   });
+  const power = recipe.columns.find(({ meaning }) => meaning === "power");
+  if (power && service === "changeover" && !recipe.meter?.positivePower && !has("positivePower")) {
+    const range = rangeOf(recipe, power.index, findings.sampleRows);
+    raised.push({ code: "positivePower", columnIndex: power.index, ...range });
+  }
   return [...left, ...raised];
 }
 
@@ -45,11 +65,23 @@ function isOpen(question: Question, recipe: FileRecipe): boolean {
     case "decimalMark":
     case "columnMeaning":
       return false;
-    case "flowUnit":
-    case "temperatureUnit": {
+    case "seriesKind": {
+      // Answered by any kind of mean, or by saying that moments are meant all the same.
       const column = recipe.columns.find(({ index }) => index === question.columnIndex);
-      const meanings = question.code === "flowUnit" ? ["flow"] : ["supply", "return"];
-      return column !== undefined && meanings.includes(column.meaning) && column.unit === null;
+      const isRead = column !== undefined && column.meaning !== "skip" && saysMean(column.header);
+      return isRead && recipe.seriesKind === "instantaneous" && recipe.kindChosen !== true;
+    }
+    case "positivePower": {
+      const column = recipe.columns.find(({ index }) => index === question.columnIndex);
+      return column?.meaning === "power" && !recipe.meter?.positivePower;
+    }
+    case "flowUnit":
+    case "temperatureUnit":
+    case "columnUnit": {
+      const column = recipe.columns.find(({ index }) => index === question.columnIndex);
+      if (column === undefined || column.unit !== null || !isChannelMeaning(column.meaning))
+        return false;
+      return unitQuestionOf(column.meaning) === question.code;
     }
   }
 }

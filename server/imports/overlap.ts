@@ -1,5 +1,5 @@
 import type { RepairStep, RowExample } from "@shared/domain/log-files/repair-step";
-import type { ReadingColumns } from "@shared/domain/readings/reading-columns";
+import type { ReadingChannel, ReadingColumns } from "@shared/domain/readings/reading-columns";
 import { indexFrom } from "@server/readings/load-segments";
 
 /** Rows of a file at instants that another file of the point holds as well. */
@@ -8,7 +8,15 @@ export interface Overlap {
   readonly different: RepairStep;
 }
 
-const channels = ["flowM3PerHour", "supplyC", "returnC"] as const;
+const channels = [
+  "flowM3PerHour",
+  "supplyC",
+  "returnC",
+  "powerKw",
+  "volumeCounterM3",
+  "heatingCounterKwh",
+  "coolingCounterKwh",
+] as const satisfies readonly ReadingChannel[];
 const mostExamples = 20;
 /** The same reading exported in another unit differs by rounding only; a real one by far more. */
 const closeEnough = 1e-9;
@@ -30,7 +38,7 @@ export function findOverlap(
   const { instantMs } = columns;
   const verdict = new Uint8Array(instantMs.length);
   for (const other of others) {
-    const shared = channels.filter((name) => columns[name] !== null && other[name] !== null);
+    const shared = channels.filter((name) => !!columns[name] && !!other[name]);
     if (shared.length === 0) continue;
     compare(columns, other, shared, verdict);
   }

@@ -1,5 +1,6 @@
 import type { ImportDetail, ImportFile, ImportSummary } from "@shared/contracts/imports";
 import { absolutePressureMPa } from "@shared/domain/fluids/loop-fluid";
+import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import { pipeLabel } from "@shared/domain/pipes/resolve-pipe";
 import { instantText, instantTextOrNull } from "@server/database/conversions";
 import type { BoreVersion } from "@server/models/bore-version";
@@ -62,6 +63,14 @@ export interface Twin {
   readonly importedAt: Date;
 }
 
+function presentRecipe({ meter, ...recipe }: FileRecipe): NonNullable<ImportFile["recipe"]> {
+  return {
+    ...recipe,
+    columns: [...recipe.columns],
+    ...(meter && { meter: { ...meter, exchangedAt: [...meter.exchangedAt] } }),
+  };
+}
+
 function presentFile(file: LogFile, twins: readonly Twin[]): ImportFile {
   const twin = twins.find((other) => other.file.id === file.id);
   const { recognition } = file;
@@ -87,7 +96,7 @@ function presentFile(file: LogFile, twins: readonly Twin[]): ImportFile {
       columnCount: recognition.columnCount,
       preamble: recognition.preamble.map((entry) => ({ ...entry })),
     },
-    recipe: file.recipe && { ...file.recipe, columns: [...file.recipe.columns] },
+    recipe: file.recipe && presentRecipe(file.recipe),
     questions: (file.questions ?? []).map((question) => {
       if (question.code === "dateOrder")
         return {
@@ -95,9 +104,9 @@ function presentFile(file: LogFile, twins: readonly Twin[]): ImportFile {
           choices: [...question.choices],
           stepSeconds: [...question.stepSeconds],
         };
-      return question.code === "flowUnit"
-        ? { ...question, choices: [...question.choices] }
-        : { ...question };
+      if (question.code === "flowUnit") return { ...question, choices: [...question.choices] };
+      if (question.code === "columnUnit") return { ...question, choices: [...question.choices] };
+      return { ...question };
     }),
   };
 }

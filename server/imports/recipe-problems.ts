@@ -1,16 +1,7 @@
-import type { ColumnRecipe, DateOrder, FileRecipe } from "@shared/domain/log-files/recipe";
+import { isChannelMeaning, isCounter, unitsOfMeaning } from "@shared/domain/log-files/column-units";
+import type { DateOrder, FileRecipe } from "@shared/domain/log-files/recipe";
 import type { FieldError } from "@server/http/errors";
 import type { RecognitionFindings } from "@server/models/log-file";
-
-const flowUnits = ["m3/h", "L/s", "L/min", "US gpm"];
-const temperatureUnits = ["degC", "degF", "K"];
-
-/** Units a column of this meaning may have; an empty list where it has none. */
-function unitsOf(meaning: ColumnRecipe["meaning"]): readonly string[] {
-  if (meaning === "flow") return flowUnits;
-  if (meaning === "supply" || meaning === "return") return temperatureUnits;
-  return meaning === "signal" ? ["%"] : [];
-}
 
 /** What makes a recipe unusable: columns that contradict each other, dates that the file disproves. */
 export function recipeProblems(recipe: FileRecipe, recognition: RecognitionFindings): FieldError[] {
@@ -27,14 +18,23 @@ export function recipeProblems(recipe: FileRecipe, recognition: RecognitionFindi
     if (seen.has(column.meaning))
       add(`${at}/meaning`, "twice", `Two columns cannot both be ${column.meaning}. Skip one.`);
     seen.set(column.meaning, i);
-    const units = unitsOf(column.meaning);
+    const units: readonly string[] = unitsOfMeaning(column.meaning);
     if (column.unit !== null && !units.includes(column.unit))
       add(`${at}/unit`, "wrong-unit", `A ${column.meaning} column cannot be in ${column.unit}.`);
   });
   if (seen.has("time") && (seen.has("date") || seen.has("timeOfDay")))
     add("columns", "two-times", "Give either one time column or a date and a time of day.");
-  if (!seen.has("flow") && !seen.has("supply") && !seen.has("return"))
-    add("columns", "no-quantity", "Name at least a flow or a temperature column.");
+  const named = recipe.columns.map(({ meaning }) => meaning);
+  if (!named.some((meaning) => isChannelMeaning(meaning) && meaning !== "signal"))
+    add("columns", "no-quantity", "Name at least a flow, a temperature, a power or a counter.");
+  if (seen.has("flow") && seen.has("volumeCounter"))
+    add("columns", "two-flows", "Give either a flow rate or a volume counter. Skip one.");
+  if (seen.has("power") && (seen.has("heatingCounter") || seen.has("coolingCounter")))
+    add("columns", "two-powers", "Give either a power or energy counters. Skip one.");
+  recipe.columns.forEach((column, i) => {
+    if ((column.capacity ?? null) !== null && !isCounter(column.meaning))
+      add(`columns/${i}/capacity`, "no-counter", "Only a counter starts from zero again.");
+  });
   const disproof = dateOrderDisproof(recipe, recognition);
   if (disproof) add("time/format/order", "disproved", disproof);
   const { firstDataLine, headerLine, unitsLine } = recipe.dialect;

@@ -1,3 +1,4 @@
+import type { LoopService } from "@shared/domain/energy/power";
 import { createFileScan } from "@shared/domain/log-files/file-scan";
 import { finishRecognition } from "@shared/domain/log-files/finish-recognition";
 import {
@@ -11,6 +12,8 @@ import { inTransaction } from "@server/database/transaction";
 import type { JobContext } from "@server/jobs/job-context";
 import { JobDropped } from "@server/jobs/job-outcome";
 import { LogFile } from "@server/models/log-file";
+import { loadEnergySettings } from "@server/readings/energy-settings";
+import { SERVICE_OF_ENERGY } from "@server/readings/meter-facts";
 import { importOfJob } from "./load-files";
 import { readChunks } from "./read-log-file";
 import { settleImport } from "./settle-import";
@@ -20,7 +23,8 @@ export async function recogniseFileJob(context: JobContext): Promise<void> {
   const { database, job } = context;
   const file = await LogFile.findOne({ where: { id: job.logFileId ?? "0" } });
   if (file === null) throw new JobDropped();
-  const found = await recognise(context, file);
+  const { service } = await loadEnergySettings(database, file.pointId);
+  const found = await recognise(context, file, SERVICE_OF_ENERGY[service]);
   await inTransaction(database, async (transaction) => {
     const row = await importOfJob(context, transaction);
     const fresh = await LogFile.findOne({ where: { id: file.id }, transaction });
@@ -42,6 +46,7 @@ export async function recogniseFileJob(context: JobContext): Promise<void> {
 async function recognise(
   { files, checkpoint, report }: JobContext,
   file: LogFile,
+  service: LoopService,
 ): Promise<Recognition | Unreadable> {
   const path = await files.localPath(file.sha256);
   // A recipe before recognition is one whose separator, header line or encoding somebody changed.
@@ -71,5 +76,5 @@ async function recognise(
   });
   head ??= recogniseHead(new Uint8Array(0), true);
   if (isUnreadable(head)) return head;
-  return finishRecognition(head, (scan ?? createFileScan(head)).end());
+  return finishRecognition(head, (scan ?? createFileScan(head)).end(), service);
 }

@@ -1,6 +1,9 @@
 import type {
+  CountedEnergyUnit,
+  CountedVolumeUnit,
   FileRecipe,
   FlowUnit,
+  MeterPowerUnit,
   RepairChoices,
   TemperatureUnit,
 } from "@shared/domain/log-files/recipe";
@@ -71,6 +74,10 @@ export function storedRowsOf(
     supply: channel<TemperatureUnit>("supply"),
     return: channel<TemperatureUnit>("return"),
     signal: channel<"%">("signal"),
+    power: channel<MeterPowerUnit>("power"),
+    volumeCounter: channel<CountedVolumeUnit>("volumeCounter"),
+    heatingCounter: channel<CountedEnergyUnit>("heatingCounter"),
+    coolingCounter: channel<CountedEnergyUnit>("coolingCounter"),
     quality: columns.quality,
   };
 }

@@ -79,7 +79,8 @@ async function storeAll(
   }
   context.report({ stage: "energy", rowsRead: 0, rowsTotal });
   if (span !== null) {
-    const segments = resolveSegments([...already, ...sourcesOf(files, precedence)]);
+    const { meterPlace } = await loadEnergySettings(database, row.pointId, transaction);
+    const segments = resolveSegments([...already, ...sourcesOf(files, precedence, meterPlace)]);
     await recalculateEnergy(database, transaction, row.pointId, span, {
       segmentsOf: (fromMs, toMs) => trimSegments(segments, fromMs, toMs),
       onProgress(share) {

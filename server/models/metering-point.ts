@@ -7,7 +7,7 @@ import {
   type Sequelize,
 } from "sequelize";
 import type { z } from "zod";
-import { meterSide, pointRole } from "@shared/contracts/places";
+import { gapRule, meterSide, pointRole } from "@shared/contracts/places";
 import { idColumn, instantColumn, optionalInstant, optionalReference, reference } from "./columns";
 
 /** A place on a loop where flow and both temperatures are measured. */
@@ -25,6 +25,8 @@ export class MeteringPoint extends Model<
   declare role: z.infer<typeof pointRole>;
   /** Which pipe the flow meter sits on: the water's density is taken at that side. */
   declare meterSide: z.infer<typeof meterSide>;
+  /** What counts as a gap between its readings; the energy's rule, never that of what is stored. */
+  declare gapRule: CreationOptional<z.infer<typeof gapRule>>;
   declare notes: CreationOptional<string | null>;
   declare archivedAt: CreationOptional<Date | null>;
   declare createdAt: Date;
@@ -40,6 +42,11 @@ export class MeteringPoint extends Model<
         name: { type: DataTypes.STRING(120), allowNull: false },
         role: { type: DataTypes.ENUM(...pointRole.options), allowNull: false },
         meterSide: { type: DataTypes.ENUM(...meterSide.options), allowNull: false },
+        gapRule: {
+          type: DataTypes.ENUM(...gapRule.options),
+          allowNull: false,
+          defaultValue: "survey",
+        },
         notes: { type: DataTypes.STRING(2000), allowNull: true, defaultValue: null },
         archivedAt: optionalInstant,
         createdAt: instantColumn,

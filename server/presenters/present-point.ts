@@ -36,6 +36,7 @@ export function presentPoint(
     name: point.name,
     role: point.role,
     meterSide: point.meterSide,
+    gapRule: point.gapRule,
     pipe: bore && bore.pipe,
     bore: bore && presentBore(bore),
     notes: point.notes,

@@ -1,7 +1,20 @@
 import { constants, deflateRawSync, inflateRawSync } from "node:zlib";
-import type { ColumnUnit, FlowUnit, TemperatureUnit } from "@shared/domain/log-files/recipe";
+import type {
+  ColumnUnit,
+  CountedEnergyUnit,
+  CountedVolumeUnit,
+  FlowUnit,
+  MeterPowerUnit,
+  TemperatureUnit,
+} from "@shared/domain/log-files/recipe";
 import { ByteReader, ByteWriter } from "./byte-columns";
-import { ChannelBit, channelSetOf, type StoredChannel, type StoredRows } from "./stored-rows";
+import {
+  CHANNEL_NAMES,
+  ChannelBit,
+  channelSetOf,
+  type StoredChannel,
+  type StoredRows,
+} from "./stored-rows";
 
 /**
  * A reading block: the rows of one file on one UTC day, packed.
@@ -27,6 +40,21 @@ const unitCodes: readonly ColumnUnit[] = [
   "degF",
   "K",
   "%",
+  "kW",
+  "MW",
+  "W",
+  "MBH",
+  "ton",
+  "m3",
+  "L",
+  "US gal",
+  "ft3",
+  "kWh",
+  "MWh",
+  "MJ",
+  "GJ",
+  "kBtu",
+  "MMBtu",
 ];
 const AS_DOUBLES = 255;
 const MOST_DECIMALS = 9;
@@ -47,7 +75,8 @@ export function encodeBlock(rows: StoredRows): Buffer {
   out.integer(count);
   writeInstants(out, rows.instantMs);
   writeQuality(out, rows.quality);
-  for (const channel of [rows.flow, rows.supply, rows.return, rows.signal]) {
+  for (const name of CHANNEL_NAMES) {
+    const channel = rows[name];
     if (channel) writeChannel(out, channel);
   }
   return deflateRawSync(out.finish(), deflateOptions);
@@ -83,12 +112,20 @@ export function decodeBlock(packed: Uint8Array, format: number, room = newRoom):
     (channels & bit) === 0
       ? null
       : (readChannel(input, room.numbers(bit, count)) as StoredChannel<Unit>);
-  return {
-    instantMs,
+  const water = {
     flow: read<FlowUnit>(ChannelBit.flow),
     supply: read<TemperatureUnit>(ChannelBit.supply),
     return: read<TemperatureUnit>(ChannelBit.return),
     signal: read<"%">(ChannelBit.signal),
+  };
+  if (channels < ChannelBit.power) return { instantMs, ...water, quality };
+  return {
+    instantMs,
+    ...water,
+    power: read<MeterPowerUnit>(ChannelBit.power),
+    volumeCounter: read<CountedVolumeUnit>(ChannelBit.volumeCounter),
+    heatingCounter: read<CountedEnergyUnit>(ChannelBit.heatingCounter),
+    coolingCounter: read<CountedEnergyUnit>(ChannelBit.coolingCounter),
     quality,
   };
 }

@@ -1,6 +1,11 @@
 import type { Transaction } from "sequelize";
 import { ENGINE_VERSION, type IntervalEnergyColumns } from "@shared/domain/energy/interval-energy";
-import { totalEnergy, type EnergyTotals, type RegisterTotals } from "@shared/domain/energy/totals";
+import {
+  totalEnergy,
+  waterSeconds,
+  type EnergyTotals,
+  type RegisterTotals,
+} from "@shared/domain/energy/totals";
 import type { LocalDay } from "@shared/domain/time/local-calendar";
 import { insertMany, selectMany, type SqlRow, type SqlValue } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
@@ -44,6 +49,8 @@ const columns = [
   "no_reading_rows",
   "outside_water_rows",
   "apportioned",
+  "meter_only_s",
+  "against_rows",
   "engine_version",
 ];
 
@@ -71,13 +78,15 @@ function rowOf(organisationId: string, pointId: string, day: DayEnergy): SqlValu
     totals.maxPowerKw,
     totals.minFlowM3PerHour,
     totals.maxFlowM3PerHour,
-    (totals.meanSupplyC ?? 0) * totals.coveredS,
-    (totals.meanReturnC ?? 0) * totals.coveredS,
+    (totals.meanSupplyC ?? 0) * waterSeconds(totals),
+    (totals.meanReturnC ?? 0) * waterSeconds(totals),
     totals.measuredRows,
     totals.excludedRows,
     totals.noReadingRows,
     day.outsideFluidRows,
     totals.apportioned ? 1 : 0,
+    totals.meterOnlyS,
+    totals.againstRows,
     ENGINE_VERSION,
   ];
 }
@@ -142,7 +151,9 @@ function dayOf(row: SqlRow): DayEnergy {
   const coveredS = number(row, "covered_s");
   const startMs = number(row, "start_ms");
   const lengthS = number(row, "length_s");
-  const mean = (name: string) => (coveredS > 0 ? number(row, name) / coveredS : null);
+  const meterOnlyS = number(row, "meter_only_s");
+  const waterS = waterSeconds({ coveredS, meterOnlyS });
+  const mean = (name: string) => (waterS > 0 ? number(row, name) / waterS : null);
   return {
     date: String(cell(row, "local_date")),
     startMs,
@@ -166,6 +177,8 @@ function dayOf(row: SqlRow): DayEnergy {
       excludedRows: number(row, "excluded_rows"),
       noReadingRows: number(row, "no_reading_rows"),
       apportioned: number(row, "apportioned") === 1,
+      meterOnlyS,
+      againstRows: number(row, "against_rows"),
     },
   };
 }

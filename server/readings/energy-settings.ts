@@ -9,6 +9,7 @@ import {
 } from "@shared/domain/fluids/loop-fluid";
 import type { Database } from "@server/database/connect";
 import { NotFound } from "@server/http/errors";
+import { meterPlaceColumns, SERVICE_OF_ENERGY, type MeterPlace } from "./meter-facts";
 
 /** Everything about a point that its energy depends on besides its readings. */
 export interface EnergySettings {
@@ -23,12 +24,13 @@ export interface EnergySettings {
   /** As the loop says it. */
   readonly loopFluid: Fluid;
   readonly fluid: FluidForEnergy;
+  /** What a permanent meter at the point can count, and what its gaps are. */
+  readonly meterPlace: MeterPlace;
 }
 
-interface Row {
+interface Row extends MeterPlace {
   organisationId: string;
   zone: string;
-  service: LoopService;
   meterSide: MeterSide;
   fluidKind: "water" | "ethyleneGlycol" | "propyleneGlycol";
   glycolPercent: number | null;
@@ -47,11 +49,10 @@ export async function loadEnergySettings(
   transaction?: Transaction,
 ): Promise<EnergySettings> {
   const [row] = await database.query<Row>(
-    `SELECT p.organisation_id AS organisationId, s.zone AS zone, l.service AS service,
+    `SELECT p.organisation_id AS organisationId, s.zone AS zone, ${meterPlaceColumns},
             p.meter_side AS meterSide, l.fluid_kind AS fluidKind,
             l.glycol_percent AS glycolPercent, l.glycol_basis AS glycolBasis,
-            DATE_FORMAT(l.glycol_tested_on, '%Y-%m-%d') AS testedOn,
-            l.glycol_test_method AS testMethod,
+            DATE_FORMAT(l.glycol_tested_on, '%Y-%m-%d') AS testedOn, l.glycol_test_method AS testMethod,
             l.gauge_pressure_mpa AS gaugePressure, l.flow_cut_off_m3_per_hour AS flowCutOff,
             l.delta_t_cut_off_k AS deltaTCutOff
        FROM metering_point p JOIN \`loop\` l ON l.id = p.loop_id JOIN site s ON s.id = l.site_id
@@ -76,6 +77,13 @@ export async function loadEnergySettings(
     zone: row.zone,
     service: row.service,
     meterSide: row.meterSide,
+    meterPlace: {
+      service: row.service,
+      designFlowM3PerHour: row.designFlowM3PerHour,
+      designDeltaTK: row.designDeltaTK,
+      insideDiameterMm: row.insideDiameterMm,
+      gapRule: row.gapRule,
+    },
     cutOffs: { flowM3PerHour: row.flowCutOff, deltaTK: row.deltaTCutOff },
     pressure: absolutePressureMPa(row.gaugePressure),
     loopFluid: fluid,
@@ -86,9 +94,7 @@ export async function loadEnergySettings(
 /** How power is to be formed, or null where the loop's fluid gives no energy. */
 export function powerOptionsOf(settings: EnergySettings): PowerOptions | null {
   if (!settings.fluid.ok) return null;
-  const service = ({ hot: "heating", chilled: "cooling", changeover: "changeover" } as const)[
-    settings.service
-  ];
+  const service = SERVICE_OF_ENERGY[settings.service];
   const { meterSide, cutOffs } = settings;
   return { fluid: settings.fluid.fluid, meterSide, service, cutOffs };
 }

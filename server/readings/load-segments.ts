@@ -1,20 +1,36 @@
 import { QueryTypes, type Transaction } from "sequelize";
-import type {
-  ReadingColumns,
-  ReadingSegment,
-  SeriesKind,
+import type { FileRecipe } from "@shared/domain/log-files/recipe";
+import {
+  mapChannels,
+  type ReadingColumns,
+  type ReadingSegment,
+  type SeriesKind,
 } from "@shared/domain/readings/reading-columns";
-import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
+import {
+  resolveSegments,
+  type MeterFacts,
+  type ReadingSource,
+} from "@shared/domain/readings/resolve-segments";
 import { selectMany, type SqlRow } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
 import { decodeBlock, type BlockRoom } from "./block-codec";
-import { inSiUnits } from "./stored-rows";
+import { correctClock, loggerInstantMs } from "@shared/domain/readings/corrections/clock";
+import { correctSegments } from "@shared/domain/readings/corrections/correct-segments";
+import {
+  loadPointCorrections,
+  type FileCorrections,
+  type PointCorrections,
+} from "./point-corrections";
+import { meterFacts, meterPlaceColumns, type MeterPlace } from "./meter-facts";
+import { inSiUnits, inUnits } from "./stored-rows";
 
 interface FileOfPoint {
   readonly id: string;
   readonly precedence: number;
   readonly kind: SeriesKind;
   readonly nominalStepMs: number | null;
+  /** Only for a file of a permanent meter. */
+  readonly meter: MeterFacts | null;
 }
 
 /** A step over this many nominal steps is a hole everywhere, so no row reaches further. */
@@ -25,11 +41,23 @@ async function filesOf(
   pointId: string,
   transaction?: Transaction,
 ): Promise<FileOfPoint[]> {
-  return database.query<FileOfPoint>(
-    `SELECT id, precedence, series_kind AS kind, nominal_step_ms AS nominalStepMs
-       FROM log_file WHERE point_id = :pointId AND precedence IS NOT NULL`,
+  const rows = await database.query<
+    Omit<FileOfPoint, "meter"> & MeterPlace & { meterRecipe: string | null }
+  >(
+    // Only recipes of permanent meters hold a "meter".
+    `SELECT f.id, f.precedence, f.series_kind AS kind, f.nominal_step_ms AS nominalStepMs,
+            IF(JSON_EXISTS(f.recipe, '$.meter'), f.recipe, NULL) AS meterRecipe, ${meterPlaceColumns}
+       FROM log_file f JOIN metering_point p ON p.id = f.point_id JOIN \`loop\` l ON l.id = p.loop_id
+      WHERE f.point_id = :pointId AND f.precedence IS NOT NULL`,
     { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
   );
+  return rows.map(({ id, precedence, kind, nominalStepMs, meterRecipe, ...place }) => ({
+    id,
+    precedence,
+    kind,
+    nominalStepMs,
+    meter: meterRecipe === null ? null : meterFacts(JSON.parse(meterRecipe) as FileRecipe, place),
+  }));
 }
 
 /** How far outside a range a row can still matter inside it, ms; at least an hour. */
@@ -52,31 +80,60 @@ const utcDate = (ms: number) => new Date(ms).toISOString().slice(0, 10);
 export interface StoredBlocks {
   readonly files: readonly FileOfPoint[];
   readonly rows: readonly SqlRow[];
+  readonly corrections: PointCorrections;
 }
 
-/** The blocks of each file over [fromMs, toMs) and somewhat beyond: whole UTC days, with room. */
+/**
+ * The blocks of each file over [fromMs, toMs) and somewhat beyond: whole UTC days, with room. A file
+ * whose clock was off is asked for the days its logger showed then. `corrections` are the applied
+ * ones unless given.
+ */
 export async function loadBlocks(
   database: Database,
   pointId: string,
   fromMs: number,
   toMs: number,
   transaction?: Transaction,
+  corrections?: PointCorrections,
 ): Promise<StoredBlocks> {
-  const files = await filesOf(database, pointId, transaction);
-  if (files.length === 0 || !(fromMs < toMs)) return { files, rows: [] };
+  const [files, standing] = await Promise.all([
+    filesOf(database, pointId, transaction),
+    corrections ?? loadPointCorrections(database, pointId, transaction),
+  ]);
+  if (files.length === 0 || !(fromMs < toMs)) return { files, rows: [], corrections: standing };
   const reach = reachOf(files);
-  const rows = await selectMany(
-    database,
-    `SELECT log_file_id, channel_set, row_count, format, data FROM reading_block
-      WHERE point_id = ? AND day >= ? AND day <= ? ORDER BY day`,
-    [pointId, utcDate(fromMs - reach), utcDate(toMs + reach)],
-    transaction,
-  );
-  return { files, rows };
+  const shifted = files.flatMap(({ id }) => {
+    const clock = standing.files.get(id)?.clock;
+    return clock ? [{ id, clock }] : [];
+  });
+  const others = shifted.length === 0 ? "" : `AND log_file_id NOT IN (${shifted.map(() => "?")})`;
+  const rows = [
+    ...(await selectMany(
+      database,
+      `${selectBlocks} WHERE point_id = ? AND day >= ? AND day <= ? ${others} ORDER BY day`,
+      [pointId, utcDate(fromMs - reach), utcDate(toMs + reach), ...shifted.map(({ id }) => id)],
+      transaction,
+    )),
+  ];
+  for (const { id, clock } of shifted) {
+    const days = [fromMs - reach, toMs + reach].map((ms) => utcDate(loggerInstantMs(ms, clock)));
+    rows.push(
+      ...(await selectMany(
+        database,
+        `${selectBlocks} WHERE point_id = ? AND day >= ? AND day <= ? AND log_file_id = ? ORDER BY day`,
+        [pointId, ...days, id],
+        transaction,
+      )),
+    );
+  }
+  return { files, rows, corrections: standing };
 }
 
+const selectBlocks = "SELECT log_file_id, channel_set, row_count, format, data FROM reading_block";
+
 /**
- * What each file of a point holds in [fromMs, toMs) and somewhat beyond: whole UTC days, with room
+ * What each file of a point holds in [fromMs, toMs) and somewhat beyond: whole UTC days, with room.
+ * Clocks and units are put right; what corrects stretches of the point is put on resolved segments.
  */
 export async function loadSources(
   database: Database,
@@ -89,7 +146,7 @@ export async function loadSources(
 }
 
 /** Blocks unpacked, each file's channel set joined to one source. */
-function sourcesOf({ files, rows }: StoredBlocks): ReadingSource[] {
+function sourcesOf({ files, rows, corrections }: StoredBlocks): ReadingSource[] {
   const blocksBySource = new Map<string, PackedBlock[]>();
   for (const [fileId, channelSet, rowCount, format, data] of rows) {
     if (!Buffer.isBuffer(data))
@@ -103,16 +160,27 @@ function sourcesOf({ files, rows }: StoredBlocks): ReadingSource[] {
   return [...blocksBySource].flatMap(([key, blocks]) => {
     const file = byId.get(key.slice(0, key.indexOf("/")));
     if (!file) return [];
-    const { precedence, kind, nominalStepMs } = file;
-    return [{ precedence, kind, nominalStepMs, columns: joinBlocks(blocks) }];
+    const { precedence, kind, nominalStepMs, meter } = file;
+    const corrected = corrections.files.get(String(file.id));
+    const columns = joinBlocks(blocks, corrected?.units ?? {});
+    const { clock = null } = corrected ?? {};
+    return [
+      {
+        precedence,
+        kind,
+        nominalStepMs,
+        ...(meter && { meter }),
+        columns: clock === null ? columns : correctClock(columns, clock),
+      },
+    ];
   });
 }
 
 /**
  * The readings of a point over [fromMs, toMs), resolved: overlapping files settled, temperatures
  * aligned to flow. Besides the rows inside, each end carries the one row beyond it, so that lines
- * and steps can be drawn and integrated up to the edge. SI units; see {@link ReadingColumns}. The
- * point must have been found through the organisation's scope.
+ * and steps can be drawn and integrated up to the edge. Corrections are on them. SI units; see
+ * {@link ReadingColumns}. The point must have been found through the organisation's scope.
  */
 export async function loadSegments(
   database: Database,
@@ -120,14 +188,16 @@ export async function loadSegments(
   fromMs: number,
   toMs: number,
   transaction?: Transaction,
+  corrections?: PointCorrections,
 ): Promise<ReadingSegment[]> {
-  const blocks = await loadBlocks(database, pointId, fromMs, toMs, transaction);
+  const blocks = await loadBlocks(database, pointId, fromMs, toMs, transaction, corrections);
   return segmentsOf(blocks, fromMs, toMs);
 }
 
 /** The second half of {@link loadSegments}, which needs no database. */
 export function segmentsOf(blocks: StoredBlocks, fromMs: number, toMs: number): ReadingSegment[] {
-  return trimSegments(resolveSegments(sourcesOf(blocks)), fromMs, toMs);
+  const segments = trimSegments(resolveSegments(sourcesOf(blocks)), fromMs, toMs);
+  return [...correctSegments(segments, blocks.corrections.segments)];
 }
 
 /** Rows of [fromMs, toMs) with one neighbour at either end, however the segments lie. */
@@ -174,10 +244,7 @@ export function sliceColumns(columns: ReadingColumns, from: number, to: number):
   if (from === 0 && to === columns.instantMs.length) return columns;
   return {
     instantMs: columns.instantMs.subarray(from, to),
-    flowM3PerHour: columns.flowM3PerHour?.subarray(from, to) ?? null,
-    supplyC: columns.supplyC?.subarray(from, to) ?? null,
-    returnC: columns.returnC?.subarray(from, to) ?? null,
-    signalPercent: columns.signalPercent?.subarray(from, to) ?? null,
+    ...mapChannels(columns, (values) => values.subarray(from, to)),
     quality: columns.quality.subarray(from, to),
   };
 }
@@ -189,22 +256,21 @@ interface PackedBlock {
 }
 
 /** Blocks of the same channels as one, unpacked straight into the columns they share. */
-function joinBlocks(blocks: readonly PackedBlock[]): ReadingColumns {
+function joinBlocks(
+  blocks: readonly PackedBlock[],
+  units: FileCorrections["units"],
+): ReadingColumns {
   const room = new JoinedRoom(blocks.reduce((sum, block) => sum + block.rowCount, 0));
   let joined: ReadingColumns | undefined;
   for (const { data, format } of blocks) {
-    joined = inSiUnits(decodeBlock(data, format, room));
+    joined = inSiUnits(inUnits(decodeBlock(data, format, room), units));
     room.next();
   }
   if (joined === undefined || !room.isFull)
     throw new RangeError("reading blocks hold other rows than were counted");
-  const whole = (column: Float64Array | null) => column && new Float64Array(column.buffer);
   return {
     instantMs: new Float64Array(joined.instantMs.buffer),
-    flowM3PerHour: whole(joined.flowM3PerHour),
-    supplyC: whole(joined.supplyC),
-    returnC: whole(joined.returnC),
-    signalPercent: whole(joined.signalPercent),
+    ...mapChannels(joined, (values) => new Float64Array(values.buffer)),
     quality: new Uint8Array(joined.quality.buffer),
   };
 }

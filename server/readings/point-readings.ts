@@ -4,7 +4,14 @@ import type { EnergyBlock } from "@shared/contracts/energy";
 import type { EnergySettings } from "./energy-settings";
 import { fluidBlock } from "./fluid-block";
 import { ENGINE_VERSION } from "@shared/domain/energy/interval-energy";
+import type { PointCorrections } from "./point-corrections";
+import { fileSpans } from "./reading-span";
 import { ChannelBit } from "./stored-rows";
+
+/** Channels of a permanent meter that say how much heat moved. */
+const meteredChannels = ChannelBit.power | ChannelBit.heatingCounter | ChannelBit.coolingCounter;
+/** Channels whose file gives a point's readings their step. */
+const leadingChannels = ChannelBit.flow | ChannelBit.volumeCounter | meteredChannels;
 
 /** What is known of a point's readings as a whole, without reading any. */
 export interface PointReadings {
@@ -18,6 +25,10 @@ export interface PointReadings {
   /** Why there is no energy; null where there is. */
   readonly blockedBy: EnergyBlock | null;
   readonly outsideFluidRows: number;
+  /** The logger stored only means of flow and temperatures. */
+  readonly meansOnly: boolean;
+  /** Rows of a meter's power against the register of the loop's service. */
+  readonly againstRows: number;
   readonly engineVersion: number | null;
   /** A change waits or is being worked out, so that energy is not the latest yet. */
   readonly recalculating: boolean;
@@ -31,6 +42,8 @@ interface Stored {
   nominalStepMs: number | null;
   blockedBy: EnergyBlock | null;
   outsideFluidRows: number;
+  meansOnly: number;
+  againstRows: number;
   engineVersion: number;
   recalculating: number;
 }
@@ -43,6 +56,8 @@ const nothingYet: PointReadings = {
   nominalStepMs: null,
   blockedBy: null,
   outsideFluidRows: 0,
+  meansOnly: false,
+  againstRows: 0,
   engineVersion: null,
   recalculating: false,
 };
@@ -59,7 +74,8 @@ export async function loadPointReadings(
   const rows = await database.query<Stored & { pointId: string }>(
     `SELECT r.point_id AS pointId, r.revision, r.row_count AS rowCount, r.first_ms AS firstMs,
             r.last_ms AS lastMs, r.nominal_step_ms AS nominalStepMs, r.blocked_by AS blockedBy,
-            r.outside_water_rows AS outsideFluidRows, r.engine_version AS engineVersion,
+            r.outside_water_rows AS outsideFluidRows,
+            r.means_only AS meansOnly, r.against_rows AS againstRows, r.engine_version AS engineVersion,
             EXISTS (SELECT 1 FROM job j WHERE j.point_id = r.point_id AND j.kind = 'recalculate'
                       AND j.state IN ('queued', 'running')) AS recalculating
        FROM point_readings r
@@ -73,6 +89,7 @@ export async function loadPointReadings(
         ...row,
         firstMs: whole(row.firstMs),
         lastMs: whole(row.lastMs),
+        meansOnly: Number(row.meansOnly) === 1,
         recalculating: Number(row.recalculating) === 1,
       },
     ]),
@@ -94,41 +111,56 @@ export async function refreshPointReadings(
   database: Database,
   transaction: Transaction,
   settings: EnergySettings,
+  corrections: PointCorrections,
 ): Promise<void> {
   const { pointId, organisationId, zone } = settings;
+  const spans = await fileSpans(database, pointId, corrections.files, transaction);
   const [blocks] = await database.query<{
     count: string;
     rowCount: string | null;
-    firstMs: string | null;
-    lastMs: string | null;
     channels: string;
   }>(
-    `SELECT COUNT(*) AS count, SUM(row_count) AS rowCount, MIN(first_ms) AS firstMs,
-            MAX(last_ms) AS lastMs, BIT_OR(channel_set) AS channels
+    `SELECT COUNT(*) AS count, SUM(row_count) AS rowCount, BIT_OR(channel_set) AS channels
        FROM reading_block WHERE point_id = :pointId`,
     { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
   );
-  const [days] = await database.query<{ outside: string | null; measured: string | null }>(
-    `SELECT SUM(outside_water_rows) AS outside, SUM(measured_rows) AS measured
+  const [days] = await database.query<{
+    outside: string | null;
+    measured: string | null;
+    against: string | null;
+  }>(
+    `SELECT SUM(outside_water_rows) AS outside, SUM(measured_rows) AS measured,
+            SUM(against_rows) AS against
        FROM day_energy WHERE point_id = :pointId`,
     { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
   );
   const [file] = await database.query<{ step: number | null }>(
     `SELECT f.nominal_step_ms AS step FROM log_file f
-       JOIN reading_block b ON b.log_file_id = f.id AND (b.channel_set & ${ChannelBit.flow}) <> 0
+       JOIN reading_block b ON b.log_file_id = f.id AND (b.channel_set & ${leadingChannels}) <> 0
       WHERE b.point_id = :pointId ORDER BY f.precedence DESC LIMIT 1`,
+    { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
+  );
+  // A counter's step is a mean as well. A meter that forms the power itself has lost nothing.
+  const [kinds] = await database.query<{ meansOnly: number | null }>(
+    `SELECT MIN(f.series_kind <> 'instantaneous'
+                OR (b.channel_set & ${ChannelBit.volumeCounter}) <> 0) AS meansOnly
+       FROM log_file f JOIN reading_block b ON b.log_file_id = f.id
+      WHERE b.point_id = :pointId AND (b.channel_set & ${meteredChannels}) = 0
+        AND (b.channel_set & ${leadingChannels}) <> 0`,
     { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
   );
   const outsideFluidRows = Number(days?.outside ?? 0);
   await database.query(
     `INSERT INTO point_readings (point_id, organisation_id, revision, zone, row_count, first_ms,
-            last_ms, nominal_step_ms, blocked_by, outside_water_rows, engine_version, calculated_at)
+            last_ms, nominal_step_ms, blocked_by, outside_water_rows, means_only, against_rows,
+            engine_version, calculated_at)
      VALUES (:pointId, :organisationId, 1, :zone, :rowCount, :firstMs, :lastMs, :step, :blockedBy,
-            :outsideFluidRows, :engineVersion, UTC_TIMESTAMP(3))
+            :outsideFluidRows, :meansOnly, :againstRows, :engineVersion, UTC_TIMESTAMP(3))
      ON DUPLICATE KEY UPDATE revision = revision + 1, zone = VALUES(zone),
        row_count = VALUES(row_count), first_ms = VALUES(first_ms), last_ms = VALUES(last_ms),
        nominal_step_ms = VALUES(nominal_step_ms), blocked_by = VALUES(blocked_by),
-       outside_water_rows = VALUES(outside_water_rows),
+       outside_water_rows = VALUES(outside_water_rows), means_only = VALUES(means_only),
+       against_rows = VALUES(against_rows),
        engine_version = VALUES(engine_version), calculated_at = VALUES(calculated_at)`,
     {
       replacements: {
@@ -136,8 +168,8 @@ export async function refreshPointReadings(
         organisationId,
         zone,
         rowCount: Number(blocks?.rowCount ?? 0),
-        firstMs: blocks?.firstMs ?? null,
-        lastMs: blocks?.lastMs ?? null,
+        firstMs: spans.length === 0 ? null : Math.min(...spans.map(({ firstMs }) => firstMs)),
+        lastMs: spans.length === 0 ? null : Math.max(...spans.map(({ lastMs }) => lastMs)),
         step: file?.step ?? null,
         blockedBy: energyBlock(settings, {
           channels: Number(blocks?.count ?? 0) === 0 ? null : Number(blocks?.channels),
@@ -145,6 +177,8 @@ export async function refreshPointReadings(
           outsideFluidRows,
         }),
         outsideFluidRows,
+        meansOnly: Number(kinds?.meansOnly ?? 0),
+        againstRows: Number(days?.against ?? 0),
         engineVersion: ENGINE_VERSION,
       },
       transaction,
@@ -154,7 +188,7 @@ export async function refreshPointReadings(
 
 /** Why there is no energy: the fluid first, then what was not measured, then what was implausible. */
 export function energyBlock(
-  settings: Pick<EnergySettings, "fluid">,
+  settings: Pick<EnergySettings, "fluid" | "meterPlace">,
   found: {
     /** Sum of {@link ChannelBit}; null where there is no reading at all. */
     readonly channels: number | null;
@@ -165,7 +199,12 @@ export function energyBlock(
   const byFluid = fluidBlock(settings.fluid);
   if (byFluid !== null) return byFluid;
   if (found.channels === null) return null;
-  if ((found.channels & ChannelBit.flow) === 0) return "noFlow";
+  if ((found.channels & meteredChannels) !== 0) {
+    const isOpen =
+      settings.meterPlace.service === "changeover" && (found.channels & ChannelBit.power) !== 0;
+    return isOpen && found.measuredRows === 0 ? "powerRegister" : null;
+  }
+  if ((found.channels & (ChannelBit.flow | ChannelBit.volumeCounter)) === 0) return "noFlow";
   const temperatures = ChannelBit.supply | ChannelBit.return;
   if ((found.channels & temperatures) !== temperatures) return "noTemperature";
   return found.outsideFluidRows > 0 && found.measuredRows === 0 ? "outsideFluid" : null;

@@ -1,23 +1,28 @@
 import { QueryTypes, type Transaction } from "sequelize";
+import { correctSegments } from "@shared/domain/readings/corrections/correct-segments";
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import { HOUR_MS, type Interval } from "@shared/domain/time/interval";
 import { addDays, localDaysBetween, type LocalDay } from "@shared/domain/time/local-calendar";
 import { INTERVAL_MS, type IntervalEnergyColumns } from "@shared/domain/energy/interval-energy";
 import type { Database } from "@server/database/connect";
 import { calculateEnergy } from "./calculate-energy";
+import { workOutEffectsAnew } from "./correction-effects";
 import { replaceDays } from "./day-rows";
+import { keepEnergyResult } from "./energy-results";
 import { loadEnergySettings } from "./energy-settings";
 import { replaceIntervals } from "./interval-rows";
 import { loadSegments, reachOfPoint } from "./load-segments";
+import { loadPointCorrections, type PointCorrections } from "./point-corrections";
 import { refreshPointReadings } from "./point-readings";
+import { fileSpans } from "./reading-span";
 
 /** Days worked out at a time, so that memory stays flat however long a point has been measured. */
 const daysAtOnce = 92;
 
 export interface RecalculationOptions {
   /**
-   * The point's readings over [fromMs, toMs) where the caller has them at hand: an import that just
-   * stored them need not read them back.
+   * The point's readings over [fromMs, toMs) where the caller has them at hand, without corrections:
+   * an import that just stored them need not read them back.
    */
   readonly segmentsOf?: (fromMs: number, toMs: number) => ReadingSegment[];
   /** Called after each stretch with the share done, 0 to 1; may throw to stop the work. */
@@ -39,17 +44,23 @@ export async function recalculateEnergy(
 ): Promise<void> {
   const settings = await loadEnergySettings(database, pointId, transaction);
   const reach = await reachOfPoint(database, pointId, transaction);
-  const whole = range ?? (await rangeOfEverything(database, transaction, pointId));
+  const corrections = await loadPointCorrections(database, pointId, transaction);
+  // A clock that was corrected moves a file's rows out of the range its own labels name.
+  const moved = [...corrections.files.values()].some(({ clock }) => clock !== null);
+  const isEverything = range === null || moved;
+  const whole = isEverything
+    ? await rangeOfEverything(database, transaction, pointId, corrections)
+    : range;
   if (whole !== null) {
     const days = localDaysBetween(
       { startMs: whole.startMs - reach, endMs: whole.endMs + reach },
       settings.zone,
     );
-    const segmentsOf =
-      options.segmentsOf ??
-      ((fromMs: number, toMs: number) =>
-        loadSegments(database, pointId, fromMs, toMs, transaction));
-    const isEverything = range === null;
+    const given = corrections.files.size === 0 ? options.segmentsOf : undefined;
+    const segmentsOf = given
+      ? (fromMs: number, toMs: number) => correctSegments(given(fromMs, toMs), corrections.segments)
+      : (fromMs: number, toMs: number) =>
+          loadSegments(database, pointId, fromMs, toMs, transaction, corrections);
     if (isEverything) await deleteDays(database, transaction, pointId);
     for (let from = 0; from < days.length; from += daysAtOnce) {
       const stretch = days.slice(from, from + daysAtOnce);
@@ -57,7 +68,9 @@ export async function recalculateEnergy(
       options.onProgress?.(Math.min(1, (from + daysAtOnce) / days.length));
     }
   }
-  await refreshPointReadings(database, transaction, settings);
+  await refreshPointReadings(database, transaction, settings, corrections);
+  await keepEnergyResult(database, transaction, settings);
+  await workOutEffectsAnew(database, transaction, settings);
 }
 
 async function recalculateStretch(
@@ -65,7 +78,10 @@ async function recalculateStretch(
   transaction: Transaction,
   settings: Awaited<ReturnType<typeof loadEnergySettings>>,
   days: readonly LocalDay[],
-  segmentsOf: (fromMs: number, toMs: number) => ReadingSegment[] | Promise<ReadingSegment[]>,
+  segmentsOf: (
+    fromMs: number,
+    toMs: number,
+  ) => readonly ReadingSegment[] | Promise<readonly ReadingSegment[]>,
 ): Promise<void> {
   const first = days[0];
   const last = days[days.length - 1];
@@ -91,17 +107,20 @@ async function rangeOfEverything(
   database: Database,
   transaction: Transaction,
   pointId: string,
+  { files }: PointCorrections,
 ): Promise<Interval | null> {
-  const [found] = await database.query<{ firstMs: string | null; lastMs: string | null }>(
-    `SELECT MIN(first_ms) AS firstMs, MAX(last_ms) AS lastMs FROM (
-       SELECT MIN(first_ms) AS first_ms, MAX(last_ms) AS last_ms FROM reading_block WHERE point_id = :pointId
-       UNION ALL
-       SELECT MIN(start_s) * 1000, MAX(start_s) * 1000 FROM interval_energy WHERE point_id = :pointId
-     ) AS stored`,
+  const spans = await fileSpans(database, pointId, files, transaction);
+  const [stored] = await database.query<{ firstS: number | null; lastS: number | null }>(
+    `SELECT MIN(start_s) AS firstS, MAX(start_s) AS lastS FROM interval_energy
+      WHERE point_id = :pointId`,
     { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
   );
-  if (!found || found.firstMs === null || found.lastMs === null) return null;
-  return { startMs: Number(found.firstMs), endMs: Number(found.lastMs) + HOUR_MS };
+  const figures = [stored?.firstS ?? null, stored?.lastS ?? null].flatMap((second) =>
+    second === null ? [] : [second * 1000],
+  );
+  const instants = [...spans.flatMap(({ firstMs, lastMs }) => [firstMs, lastMs]), ...figures];
+  if (instants.length === 0) return null;
+  return { startMs: Math.min(...instants), endMs: Math.max(...instants) + HOUR_MS };
 }
 
 /** Days of a zone the site no longer has lie across the new ones, so all of them go. */
@@ -161,4 +180,6 @@ const noIntervals: IntervalEnergyColumns = {
   excludedRows: none,
   noReadingRows: none,
   apportioned: new Uint8Array(0),
+  meterOnlyS: none,
+  againstRows: none,
 };

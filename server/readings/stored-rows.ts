@@ -1,7 +1,19 @@
-import type { FlowUnit, TemperatureUnit } from "@shared/domain/log-files/recipe";
+import { convertInPlace } from "@shared/domain/log-files/column-units";
+import type {
+  ColumnUnit,
+  CountedEnergyUnit,
+  CountedVolumeUnit,
+  FlowUnit,
+  MeterPowerUnit,
+  TemperatureUnit,
+} from "@shared/domain/log-files/recipe";
+import {
+  isFlowUnit,
+  isMeterPowerUnit,
+  isTemperatureUnit,
+  type UnitChannel,
+} from "@shared/domain/readings/corrections/unit";
 import type { ReadingColumns } from "@shared/domain/readings/reading-columns";
-import { columnToM3PerHour } from "@shared/domain/units/flow";
-import { columnToCelsius } from "@shared/domain/units/temperature";
 
 /** One quantity as its logger wrote it: numbers in the logger's own unit, NaN for "no reading". */
 export interface StoredChannel<Unit extends string> {
@@ -20,30 +32,69 @@ export interface StoredRows {
   readonly supply: StoredChannel<TemperatureUnit> | null;
   readonly return: StoredChannel<TemperatureUnit> | null;
   readonly signal: StoredChannel<"%"> | null;
+  /** Of a permanent meter; left out where there is none. */
+  readonly power?: StoredChannel<MeterPowerUnit> | null;
+  readonly volumeCounter?: StoredChannel<CountedVolumeUnit> | null;
+  readonly heatingCounter?: StoredChannel<CountedEnergyUnit> | null;
+  readonly coolingCounter?: StoredChannel<CountedEnergyUnit> | null;
   readonly quality: Uint8Array;
 }
 
 /** Which channels a file holds, as a sum of these; part of a block's key. Never renumber. */
-export const ChannelBit = { flow: 1, supply: 2, return: 4, signal: 8 } as const;
+export const ChannelBit = {
+  flow: 1,
+  supply: 2,
+  return: 4,
+  signal: 8,
+  power: 16,
+  volumeCounter: 32,
+  heatingCounter: 64,
+  coolingCounter: 128,
+} as const;
+export type ChannelName = keyof typeof ChannelBit;
+
+/** In the order in which a block holds them. */
+export const CHANNEL_NAMES = Object.keys(ChannelBit) as readonly ChannelName[];
 
 export function channelSetOf(rows: StoredRows): number {
-  return (
-    (rows.flow ? ChannelBit.flow : 0) +
-    (rows.supply ? ChannelBit.supply : 0) +
-    (rows.return ? ChannelBit.return : 0) +
-    (rows.signal ? ChannelBit.signal : 0)
-  );
+  return CHANNEL_NAMES.reduce((set, name) => set + (rows[name] ? ChannelBit[name] : 0), 0);
 }
 
-/** The rows in m³/h, °C and percent. Their numbers are converted where they lie. */
+/** The rows in m³/h, °C, percent, kW, m³ and kWh. Their numbers are converted where they lie. */
 export function inSiUnits(rows: StoredRows): ReadingColumns {
+  const converted = (channel: StoredChannel<ColumnUnit> | null | undefined) =>
+    channel ? convertInPlace(channel.values, channel.unit) : null;
   return {
     instantMs: rows.instantMs,
-    flowM3PerHour: rows.flow && columnToM3PerHour(rows.flow.values, rows.flow.unit),
-    supplyC: rows.supply && columnToCelsius(rows.supply.values, rows.supply.unit),
-    returnC: rows.return && columnToCelsius(rows.return.values, rows.return.unit),
-    signalPercent: rows.signal && rows.signal.values,
+    flowM3PerHour: converted(rows.flow),
+    supplyC: converted(rows.supply),
+    returnC: converted(rows.return),
+    signalPercent: converted(rows.signal),
+    ...(rows.power && { powerKw: converted(rows.power) }),
+    ...(rows.volumeCounter && { volumeCounterM3: converted(rows.volumeCounter) }),
+    ...(rows.heatingCounter && { heatingCounterKwh: converted(rows.heatingCounter) }),
+    ...(rows.coolingCounter && { coolingCounterKwh: converted(rows.coolingCounter) }),
     quality: rows.quality,
+  };
+}
+
+/** The same numbers read in other units than they were stored with; a unit of no such kind is left. */
+export function inUnits(
+  rows: StoredRows,
+  { flow, supply, return: back, power }: Readonly<Partial<Record<UnitChannel, string>>>,
+): StoredRows {
+  const asFlow = (channel: StoredRows["flow"]) =>
+    channel && flow !== undefined && isFlowUnit(flow) ? { ...channel, unit: flow } : channel;
+  const asTemperature = (channel: StoredRows["supply"], unit: string | undefined) =>
+    channel && unit !== undefined && isTemperatureUnit(unit) ? { ...channel, unit } : channel;
+  return {
+    ...rows,
+    flow: asFlow(rows.flow),
+    supply: asTemperature(rows.supply, supply),
+    return: asTemperature(rows.return, back),
+    ...(rows.power && power !== undefined && isMeterPowerUnit(power)
+      ? { power: { ...rows.power, unit: power } }
+      : {}),
   };
 }
 
@@ -59,6 +110,10 @@ export function sliceRows(rows: StoredRows, from: number, to: number): StoredRow
     supply: cut(rows.supply),
     return: cut(rows.return),
     signal: cut(rows.signal),
+    ...(rows.power && { power: cut(rows.power) }),
+    ...(rows.volumeCounter && { volumeCounter: cut(rows.volumeCounter) }),
+    ...(rows.heatingCounter && { heatingCounter: cut(rows.heatingCounter) }),
+    ...(rows.coolingCounter && { coolingCounter: cut(rows.coolingCounter) }),
     quality: rows.quality.subarray(from, to),
   };
 }

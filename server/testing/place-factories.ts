@@ -12,6 +12,8 @@ interface PlaceWishes {
   glycolVolumePercent?: number;
   flowCutOffM3PerHour?: number | null;
   deltaTCutOffK?: number | null;
+  designFlowM3PerHour?: number;
+  designDeltaTK?: number;
 }
 
 let count = 0;
@@ -43,6 +45,8 @@ export async function pointToMeter(
     glycolBasis: isWater ? null : wishes.glycolVolumePercent === undefined ? "mass" : "volume",
     flowCutOffM3PerHour: wishes.flowCutOffM3PerHour ?? null,
     deltaTCutOffK: wishes.deltaTCutOffK ?? null,
+    designFlowM3PerHour: wishes.designFlowM3PerHour ?? null,
+    designDeltaTK: wishes.designDeltaTK ?? null,
     createdAt,
   });
   const point = await MeteringPoint.create({

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { contract, id, instant, nothing } from "./contract";
 import { fluid, fluidBlock } from "./places";
+import { energyPlusMinus, plusMinus, rangePlusMinus } from "./plus-minus";
 
 /*
  * Energy and readings of one metering point. Ranges are half-open. A range may be given as UTC
@@ -41,6 +42,16 @@ export const energyTotals = z.object({
     expected: z.number().nullable(),
   }),
   apportioned: z.boolean(),
+  /** Beside what was measured, never in it; null where nothing is filled. */
+  filled: z
+    .object({
+      heatingKwh: z.number(),
+      coolingKwh: z.number(),
+      volumeM3: z.number().nullable(),
+      filledS: z.number().describe("time without readings that a fill stands for"),
+      approvedOnly: z.boolean().describe("false while a proposal is among them"),
+    })
+    .nullable(),
 });
 export type EnergyTotals = z.infer<typeof energyTotals>;
 
@@ -50,6 +61,8 @@ export const energyBlock = z.enum([
   "noTemperature",
   "noFlow",
   "outsideFluid",
+  /** A meter's power in a changeover loop, and nobody has said which heat it is. */
+  "powerRegister",
 ]);
 export type EnergyBlock = z.infer<typeof energyBlock>;
 
@@ -63,6 +76,15 @@ export const energyBasis = z.object({
     .nullable()
     .describe("the fluid is liquid and known between these, °C; null where it gives no energy"),
   blockedBy: energyBlock.nullable(),
+  meansOnly: z
+    .boolean()
+    .describe(
+      "the logger stored only means: mean flow × mean ΔT leaves out how they move together",
+    ),
+  rowsAgainstRegister: z
+    .number()
+    .int()
+    .describe("rows of a meter's power of the other sign than the loop's service; no energy"),
   recalculating: z.boolean(),
 });
 
@@ -97,20 +119,26 @@ export const getEnergy = contract({
     to: instant,
     basis: energyBasis,
     totals: energyTotals,
+    plusMinus: rangePlusMinus.nullable().describe("of the totals; only for `total`"),
     /** Absent for `total`. */
     columns: energyColumns.nullable(),
   }),
 });
 export type EnergyAnswer = z.infer<(typeof getEnergy)["answer"]>;
 
+const measured = z
+  .number()
+  .nullable()
+  .describe("null where a permanent meter gives the power and the water was not measured");
 export const loadCard = z.object({
   from: instant,
   to: instant,
-  supplyC: z.number(),
-  returnC: z.number(),
-  flowM3PerHour: z.number(),
-  deltaTK: z.number(),
+  supplyC: measured,
+  returnC: measured,
+  flowM3PerHour: measured,
+  deltaTK: measured,
   powerKw: z.number().describe("≥ 0, of the register named"),
+  plusMinus: plusMinus.nullable().describe("of the power"),
   register: z.enum(["heating", "cooling"]),
 });
 
@@ -130,6 +158,7 @@ export const getPointSummary = contract({
     to: instant,
     basis: energyBasis,
     totals: energyTotals,
+    plusMinus: rangePlusMinus.describe("of the totals"),
     days: z.array(
       z.object({
         date: z.iso.date(),
@@ -138,11 +167,16 @@ export const getPointSummary = contract({
         volumeM3: z.number().nullable(),
         coveredS: z.number(),
         lengthS: z.number(),
+        plusMinus: energyPlusMinus,
       }),
     ),
     busiest: loadCard.nullable().describe("busiest fully covered half hour"),
     busiestDay: z
-      .object({ date: z.iso.date(), energyKwh: z.number() })
+      .object({
+        date: z.iso.date(),
+        energyKwh: z.number(),
+        plusMinus: plusMinus.nullable(),
+      })
       .nullable()
       .describe("the day that holds the busiest half hour, by the same register"),
     nightBase: z
@@ -152,6 +186,7 @@ export const getPointSummary = contract({
         powerKw: z.number(),
         register: z.enum(["heating", "cooling"]),
         coverage: z.number(),
+        plusMinus: plusMinus.nullable(),
       })
       .nullable()
       .describe("mean power over the named night hours of the range"),
@@ -366,6 +401,7 @@ export const getToday = contract({
         meterSide: z.enum(["supply", "return"]).nullable(),
         card: loadCard.nullable().describe("means over the day"),
         energyKwh: z.number().nullable(),
+        energyPlusMinus: plusMinus.nullable(),
         emptyReason: z
           .enum([
             "noPoint",

@@ -45,16 +45,45 @@ export const columnMeaning = z.enum([
   "supply",
   "return",
   "signal",
+  "power",
+  "volumeCounter",
+  "heatingCounter",
+  "coolingCounter",
   "skip",
 ]);
 export const flowUnit = z.enum(["m3/h", "L/s", "L/min", "US gpm"]);
 export const temperatureUnit = z.enum(["degC", "degF", "K"]);
+export const meterPowerUnit = z.enum(["kW", "MW", "W", "MBH", "ton"]);
+export const countedVolumeUnit = z.enum(["m3", "L", "US gal", "ft3"]);
+export const countedEnergyUnit = z.enum(["kWh", "MWh", "MJ", "GJ", "kBtu", "MMBtu"]);
+export const columnUnit = z.union([
+  flowUnit,
+  temperatureUnit,
+  z.literal("%"),
+  meterPowerUnit,
+  countedVolumeUnit,
+  countedEnergyUnit,
+]);
 export const columnRecipe = z.object({
   index: z.number().int().min(0),
   header: z.string(),
   meaning: columnMeaning,
-  unit: z.union([flowUnit, temperatureUnit, z.literal("%")]).nullable(),
+  unit: columnUnit.nullable(),
   decimalMark: z.enum([".", ","]),
+  capacity: z
+    .number()
+    .gt(0)
+    .max(1e15)
+    .nullable()
+    .optional()
+    .describe("where a counter starts from zero again, in the column's unit; 9999.9 means 10000"),
+});
+export const meterRecipe = z.object({
+  positivePower: z
+    .enum(["heating", "cooling", "byTemperature"])
+    .nullable()
+    .describe("what a positive power is; only asked where the loop changes over"),
+  exchangedAt: z.array(instant).max(50).describe("when the meter was exchanged"),
 });
 export const dateOrder = z.enum(["dayMonthYear", "monthDayYear", "yearMonthDay"]);
 export const timeFormat = z.discriminatedUnion("kind", [
@@ -74,6 +103,11 @@ export const fileRecipe = z.object({
   columns: z.array(columnRecipe).max(200),
   time: z.object({ format: timeFormat, clock: loggerClock.nullable() }),
   seriesKind,
+  kindChosen: z
+    .boolean()
+    .optional()
+    .describe("true: moments, though the header says the rows are means"),
+  meter: meterRecipe.optional().describe("of a permanent meter's file"),
 });
 export const repairChoices = z.object({
   identicalRepeats: z.enum(["dropRepeats", "leaveOutAll"]),
@@ -108,6 +142,10 @@ export const repairStep = z.object({
     "overlapEqual",
     "overlapDifferent",
     "unitConversion",
+    "counterRollover",
+    "counterReset",
+    "counterJump",
+    "counterExchange",
     "footer",
   ]),
   count: z.number().int(),
@@ -161,6 +199,24 @@ export const question = z.discriminatedUnion("code", [
     line: z.number(),
   }),
   z.object({ code: z.literal("columnMeaning"), meaning: columnMeaning }),
+  z.object({
+    code: z.literal("columnUnit"),
+    columnIndex: z.number(),
+    minValue: z.number(),
+    maxValue: z.number(),
+    choices: z.array(columnUnit),
+  }),
+  z.object({
+    code: z.literal("seriesKind"),
+    columnIndex: z.number(),
+    header: z.string(),
+  }),
+  z.object({
+    code: z.literal("positivePower"),
+    columnIndex: z.number(),
+    minValue: z.number(),
+    maxValue: z.number(),
+  }),
   z.object({ code: z.literal("loggerClock") }),
 ]);
 export type QuestionView = z.infer<typeof question>;
@@ -255,12 +311,17 @@ export const importChecks = z.object({
       heatingKwh: z.number(),
       coolingKwh: z.number(),
       suppressedKwh: z.number(),
-      volumeM3: z.number(),
+      volumeM3: z
+        .number()
+        .nullable()
+        .describe("null where a permanent meter gives the energy and no water was measured"),
       coveredS: z.number(),
     })
     .nullable()
     .describe("null where the loop's energy cannot be worked out, see energyBlockedBy"),
   energyBlockedBy: energyBlock.nullable(),
+  /** Rows of a meter's power of the other sign than the loop's service: they give no energy. */
+  rowsAgainstRegister: z.number().int().optional(),
   /** A small picture of the whole file: 240 columns of flow and ΔT, null in holes. */
   picture: z
     .object({

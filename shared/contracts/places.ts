@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { contract, id, instant, nothing, oneLine, page, pageQuery } from "./contract";
+import { rangePlusMinus } from "./plus-minus";
 import { unitSystem } from "./people";
 
 const name = oneLine(120);
@@ -300,12 +301,16 @@ export const pipe = z.discriminatedUnion("kind", [
   }),
 ]);
 export type Pipe = z.infer<typeof pipe>;
+export const gapRule = z
+  .enum(["survey", "billing"])
+  .describe("a step over 3 (survey) or 1.5 (billing) usual steps is a hole in the energy");
 const pointFields = z.object({
   code: oneLine(40).describe("printed on the pipe"),
   name,
   role: pointRole,
   parentPointId: id.nullable(),
   meterSide: meterSide.describe("where the flow meter sits; there is no default"),
+  gapRule,
   pipe: pipe.nullable(),
   notes: notes.nullable(),
 });
@@ -326,7 +331,12 @@ export const point = pointFields.extend({
 });
 export type Point = z.infer<typeof point>;
 const pointId = z.object({ pointId: id });
-const optionalPointFields = pointFields.partial({ parentPointId: true, pipe: true, notes: true });
+const optionalPointFields = pointFields.partial({
+  parentPointId: true,
+  gapRule: true,
+  pipe: true,
+  notes: true,
+});
 
 export const listPoints = contract({
   operationId: "listPoints",
@@ -440,6 +450,7 @@ export const siteOverviewLoop = z.object({
     .describe("of the register of the loop's service; null for changeover, which has two"),
   heatingKwh: z.number().nullable(),
   coolingKwh: z.number().nullable(),
+  plusMinus: rangePlusMinus.nullable().describe("of the energies and of ΔT; null without a point"),
   flowWeightedDeltaTK: z.number().nullable(),
   coverage: z.number().nullable().describe("covered share of the period so far, 0 to 1"),
   quality: z.array(

@@ -3,6 +3,9 @@ import { integrateEnergy, type IntegrationOptions } from "@shared/domain/energy/
 import { NO_CUT_OFFS } from "@shared/domain/energy/power";
 import { totalEnergy, type EnergyTotals } from "@shared/domain/energy/totals";
 import { waterAtPressure } from "@shared/domain/fluids/water-at-pressure";
+import { fromCelsius, toCelsius } from "@shared/domain/units/temperature";
+import { fromM3PerHour, toM3PerHour } from "@shared/domain/units/flow";
+import { fromKw, toKw } from "@shared/domain/units/energy-and-power";
 import type { ReadingColumns, SeriesKind } from "@shared/domain/readings/reading-columns";
 import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
 
@@ -146,5 +149,113 @@ test("both registers are never negative and nothing covers time twice", () => {
       expect(columns.coveredS.every((s) => s <= 900.000001)).toBe(true);
     }),
     { numRuns: 30 },
+  );
+});
+
+/** Rows of a permanent meter alone: a power that may be of either sign. */
+function meterColumns(rows: readonly Row[], order: readonly number[]): ReadingColumns {
+  const columns = toColumns(rows, order);
+  const powerKw = Float64Array.from(order, (i) => 10 * (rows[i]!.supply - rows[i]!.back));
+  return { ...columns, flowM3PerHour: null, supplyC: null, returnC: null, powerKw };
+}
+
+test("a meter's energy is additive over any split, adds no volume and covers what it speaks for", () => {
+  fc.assert(
+    fc.property(rowsOf, kind, fc.double({ min: 0, max: 1, noNaN: true }), (rows, k, share) => {
+      const source = asSource(meterColumns(rows, inOrder(rows)), k);
+      const end = source.columns.instantMs[rows.length - 1]!;
+      const cutMs = Math.round(T0 + share * (end - T0));
+      const before = energy([source], { window: { startMs: -Infinity, endMs: cutMs } });
+      const after = energy([source], { window: { startMs: cutMs, endMs: Infinity } });
+      const whole = energy([source]);
+      expectClose(
+        sums(before).map((value, i) => value + sums(after)[i]!),
+        sums(whole),
+      );
+      expect(whole.volumeM3).toBe(0);
+      expect(whole.meanSupplyC).toBeNull();
+      expect(whole.meterOnlyS).toBeCloseTo(whole.coveredS, 9);
+    }),
+    { numRuns: 60 },
+  );
+});
+
+test("a meter's power of the other sign swaps the registers, and in one service never counts", () => {
+  fc.assert(
+    fc.property(rowsOf, kind, (rows, k) => {
+      const columns = meterColumns(rows, inOrder(rows));
+      const turned = { ...columns, powerKw: columns.powerKw!.map((kw) => 0 - kw) };
+      const own = energy([asSource(columns, k)]);
+      const other = energy([asSource(turned, k)]);
+      expect(other.heating.energyKwh).toBeCloseTo(own.cooling.energyKwh, 9);
+      expect(other.cooling.energyKwh).toBeCloseTo(own.heating.energyKwh, 9);
+      const single = energy([asSource(columns, k)], { service: "heating" });
+      expect(single.cooling.energyKwh).toBe(0);
+      expect(single.heating.energyKwh).toBeCloseTo(own.heating.energyKwh, 9);
+      expect(single.coveredS).toBeCloseTo(own.coveredS, 9);
+      const against = rows.filter((r) => r.quality === 0 && r.supply < r.back);
+      expect(single.againstRows).toBe(against.length);
+    }),
+    { numRuns: 60 },
+  );
+});
+
+test("energy is the same after every reading went through another unit and back", () => {
+  fc.assert(
+    fc.property(rowsOf, kind, (rows, k) => {
+      const columns = toColumns(rows, inOrder(rows));
+      const there = {
+        ...columns,
+        flowM3PerHour: columns.flowM3PerHour!.map((flow) =>
+          toM3PerHour(fromM3PerHour(flow, "US gpm"), "US gpm"),
+        ),
+        supplyC: columns.supplyC!.map((t) => toCelsius(fromCelsius(t, "degF"), "degF")),
+        returnC: columns.returnC!.map((t) => toCelsius(fromCelsius(t, "K"), "K")),
+      };
+      // A cut-off is a threshold: a last digit may cross it.
+      const changed = { cutOffs: NO_CUT_OFFS };
+      expectClose(
+        sums(energy([asSource(there, k)], changed)),
+        sums(energy([asSource(columns, k)], changed)),
+      );
+      const metered = meterColumns(rows, inOrder(rows));
+      const tons = {
+        ...metered,
+        powerKw: metered.powerKw!.map((kw) => toKw(fromKw(kw, "ton"), "ton")),
+      };
+      expectClose(sums(energy([asSource(tons, k)])), sums(energy([asSource(metered, k)])));
+    }),
+    { numRuns: 60 },
+  );
+});
+
+/** The rows as a volume counter and its temperatures would have written them. */
+test("a counter's energy is that of its volume, whatever files its rows are spread over", () => {
+  const spread = rowsOf.chain((rows) =>
+    fc.record({
+      rows: fc.constant(rows.map((r) => ({ ...r, quality: 0, stepMs: NOMINAL }))),
+      files: fc.array(fc.integer({ min: 0, max: 2 }), {
+        minLength: rows.length,
+        maxLength: rows.length,
+      }),
+    }),
+  );
+  fc.assert(
+    fc.property(spread, ({ rows, files }) => {
+      let total = 0;
+      const counter = rows.map((r) => (total += r.flow));
+      const counted = (order: readonly number[]): ReadingColumns => ({
+        ...toColumns(rows, order),
+        flowM3PerHour: null,
+        volumeCounterM3: Float64Array.from(order, (i) => counter[i]!),
+      });
+      const uncut = { cutOffs: NO_CUT_OFFS };
+      const whole = energy([asSource(counted(inOrder(rows)), "instantaneous")], uncut);
+      expect(whole.volumeM3).toBeCloseTo(total - counter[0]!, 6);
+      const parts = [0, 1, 2].map((file) => inOrder(rows).filter((i) => files[i] === file));
+      const split = parts.map((part) => asSource(counted(part), "instantaneous"));
+      expectClose(sums(energy(split, uncut)), sums(whole));
+    }),
+    { numRuns: 60 },
   );
 });

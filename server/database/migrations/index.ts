@@ -3,8 +3,10 @@ import { people } from "./001-people";
 import { places } from "./002-places";
 import { importsAndReadings } from "./003-imports-readings";
 import { fluids } from "./004-fluids";
+import { seriesKinds } from "./005-series-kinds";
 import { occupiedHours } from "./006-occupied-hours";
 import { evidence } from "./007-evidence";
+import { corrections } from "./008-corrections";
 import { energyBlocks } from "./008-energy-blocks";
 
 /**
@@ -23,7 +25,9 @@ export const migrations: readonly Migration[] = [
   places,
   importsAndReadings,
   fluids,
+  seriesKinds,
   occupiedHours,
   evidence,
   energyBlocks,
+  corrections,
 ];

@@ -1,4 +1,4 @@
-import type { EnergyTotals, RegisterTotals } from "@shared/domain/energy/totals";
+import { waterSeconds, type EnergyTotals, type RegisterTotals } from "@shared/domain/energy/totals";
 
 const noRegister: RegisterTotals = {
   energyKwh: 0,
@@ -9,13 +9,14 @@ const noRegister: RegisterTotals = {
   runningS: 0,
 };
 
-/** The totals of stretches that do not overlap, as one. Means are weighted by covered time. */
+/** The totals of stretches that do not overlap, as one. Means are weighted by the time of their water. */
 export function combineTotals(parts: readonly EnergyTotals[]): EnergyTotals {
   const sum = (of: (part: EnergyTotals) => number) =>
     parts.reduce((total, part) => total + of(part), 0);
   const coveredS = sum((part) => part.coveredS);
+  const waterS = sum(waterSeconds);
   const mean = (of: (part: EnergyTotals) => number | null) =>
-    coveredS === 0 ? null : sum((part) => (of(part) ?? 0) * part.coveredS) / coveredS;
+    waterS === 0 ? null : sum((part) => (of(part) ?? 0) * waterSeconds(part)) / waterS;
   const extreme = (of: (part: EnergyTotals) => number | null, better: typeof Math.min) =>
     parts.reduce<number | null>((best, part) => {
       const value = of(part);
@@ -45,5 +46,7 @@ export function combineTotals(parts: readonly EnergyTotals[]): EnergyTotals {
     excludedRows: sum((part) => part.excludedRows),
     noReadingRows: sum((part) => part.noReadingRows),
     apportioned: parts.some((part) => part.apportioned),
+    meterOnlyS: sum((part) => part.meterOnlyS),
+    againstRows: sum((part) => part.againstRows),
   };
 }

@@ -1,6 +1,7 @@
 import { Readable } from "node:stream";
 import { DAY_MS } from "@shared/domain/time/interval";
 import { addDays, localDateOf, startOfLocalDay } from "@shared/domain/time/local-calendar";
+import { waterSeconds } from "@shared/domain/energy/totals";
 import type { Database } from "@server/database/connect";
 import { FileAnswer } from "@server/http/file-answer";
 import { breathe } from "./breathe";
@@ -110,7 +111,7 @@ function intervalRecord(
     numberCell(totals.coveredS, 3),
     covered(totals.heating.energyKwh, 6),
     covered(totals.cooling.energyKwh, 6),
-    covered(totals.volumeM3, 6),
+    covered(waterSeconds(totals) > 0 ? totals.volumeM3 : null, 6),
     covered(totals.meanSupplyC, 4),
     covered(totals.meanReturnC, 4),
     numberCell(totals.suppressedKwh, 6),

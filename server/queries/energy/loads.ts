@@ -1,7 +1,7 @@
 import type { LoopService } from "@shared/contracts/places";
 import { peakDemand } from "@shared/domain/energy/demand";
 import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
-import { deltaTMeans, type EnergyTotals } from "@shared/domain/energy/totals";
+import { deltaTMeans, waterSeconds, type EnergyTotals } from "@shared/domain/energy/totals";
 import { HOUR_MS, type Interval } from "@shared/domain/time/interval";
 import { zoneOffsets } from "@shared/domain/time/zone-offsets";
 import { selectMany } from "@server/database/bulk";
@@ -12,10 +12,11 @@ export type RegisterName = "heating" | "cooling";
 /** What a loop card shows: means over a stretch, all of the same register and time. */
 export interface Load extends Interval {
   readonly register: RegisterName;
-  readonly supplyC: number;
-  readonly returnC: number;
-  readonly flowM3PerHour: number;
-  readonly deltaTK: number;
+  /** Null where only a permanent meter's power is known. */
+  readonly supplyC: number | null;
+  readonly returnC: number | null;
+  readonly flowM3PerHour: number | null;
+  readonly deltaTK: number | null;
   readonly powerKw: number;
 }
 
@@ -33,18 +34,27 @@ export function loadOf(
 ): Load | null {
   const { flowWeightedK } = deltaTMeans(totals[register]);
   const { meanSupplyC, meanReturnC, coveredS } = totals;
-  if (coveredS === 0 || meanSupplyC === null || meanReturnC === null) return null;
-  const hours = coveredS / 3600;
+  if (coveredS === 0) return null;
+  const load = { startMs: period.startMs, endMs: period.endMs, register };
+  const powerKw = totals[register].energyKwh / (coveredS / 3600);
+  const hours = waterSeconds(totals) / 3600;
+  if (hours === 0 || meanSupplyC === null || meanReturnC === null)
+    return {
+      ...load,
+      supplyC: null,
+      returnC: null,
+      flowM3PerHour: null,
+      deltaTK: null,
+      powerKw,
+    };
   const sign = register === "heating" ? 1 : -1;
   return {
-    startMs: period.startMs,
-    endMs: period.endMs,
-    register,
+    ...load,
     supplyC: meanSupplyC,
     returnC: meanReturnC,
     flowM3PerHour: totals.volumeM3 / hours,
     deltaTK: flowWeightedK ?? sign * (meanSupplyC - meanReturnC),
-    powerKw: totals[register].energyKwh / hours,
+    powerKw,
   };
 }
 

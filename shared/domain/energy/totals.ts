@@ -87,7 +87,7 @@ export function waterSeconds({
 }
 
 /** What sums of seconds may differ by and still be the same time. */
-const ROUNDING_S = 1e-3;
+export const ROUNDING_S = 1e-3;
 
 /**
  * With time that only a meter's power speaks for, the register's energy and running time are not

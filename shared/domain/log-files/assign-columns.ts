@@ -1,8 +1,11 @@
 import type { ColumnEvidence } from "./column-evidence";
-import { headerMeaning, splitName, type HeaderMeaning } from "./header-words";
+import { assignMeter } from "./assign-meter";
+import { headerMeaning, isNotHeat, splitName, type HeaderMeaning } from "./header-words";
 import type { ColumnMeaning, ColumnUnit } from "./recipe";
+import type { SampleRow } from "./recognition";
 import type { HeadRecognition } from "./recognise-head";
 import { splitHeader, type UnitWord } from "./unit-words";
+import type { LoopService } from "../energy/power";
 
 export interface ColumnAssignment {
   readonly meaning: ColumnMeaning;
@@ -17,20 +20,42 @@ export interface Assignment {
   readonly asked: readonly ColumnMeaning[];
 }
 
-type Role = "flow" | "supply" | "return" | "signal" | "someTemperature" | "unknown" | "skip";
+type Role =
+  | "flow"
+  | "supply"
+  | "return"
+  | "signal"
+  | "someTemperature"
+  | "power"
+  | "volume"
+  | "energy"
+  | "volumeCounter"
+  | "heatingCounter"
+  | "coolingCounter"
+  | "unknown"
+  | "skip";
 
-interface Candidate {
+export interface Candidate {
   readonly index: number;
   role: Role;
   readonly unit: ColumnUnit | null;
   certainty: "proved" | "likely";
   readonly words: readonly string[];
+  readonly name: string;
+}
+
+/** What recognition knows besides the file's first lines. */
+export interface AssignmentContext {
+  readonly sampleRows: readonly SampleRow[];
+  /** Null where it is not known. */
+  readonly service: LoopService | null;
 }
 
 /** Gives each column its meaning from its header, its unit and its values; asks where two would fit. */
 export function assignColumns(
   head: HeadRecognition,
   evidence: readonly ColumnEvidence[],
+  context: AssignmentContext,
 ): Assignment {
   const candidates = evidence.map((column, index) => candidateOf(head, column, index));
   const asked: ColumnMeaning[] = [];
@@ -41,10 +66,12 @@ export function assignColumns(
   nameNeutralProbes(candidates);
 
   const flows = preferFlowUnit(withRole("flow"));
+  const meter = assignMeter(candidates, flows.length > 0, context);
+  asked.push(...meter.asked);
   const open = withRole("unknown").length > 0 || withRole("someTemperature").length > 0;
   const temperaturesFound = withRole("supply").length + withRole("return").length;
-  if (flows.length > 1 || (flows.length === 0 && (open || temperaturesFound === 0)))
-    asked.push("flow");
+  const flowLacks = flows.length === 0 && !meter.saysHowMuch;
+  if (flows.length > 1 || (flowLacks && (open || temperaturesFound === 0))) asked.push("flow");
   for (const role of ["supply", "return"] as const) {
     const found = withRole(role).length;
     // Temperatures may stand in a file of their own; only columns nobody has named could be them.
@@ -69,12 +96,21 @@ export function assignColumns(
     const isSettled =
       role === "flow"
         ? kept.has(candidate)
-        : role === "signal" || ((role === "supply" || role === "return") && !asked.includes(role));
+        : role === "signal" ||
+          METER_ROLES.has(role) ||
+          ((role === "supply" || role === "return") && !asked.includes(role));
     if (!isSettled) return { meaning: "skip", unit: null, certainty: "likely" };
     return { meaning: role as ColumnMeaning, unit: role === "signal" ? "%" : unit, certainty };
   });
   return { columns, asked };
 }
+
+const METER_ROLES: ReadonlySet<Role> = new Set<Role>([
+  "power",
+  "volumeCounter",
+  "heatingCounter",
+  "coolingCounter",
+]);
 
 function timeMeaning(head: HeadRecognition, index: number): ColumnMeaning | null {
   const { times } = head;
@@ -91,18 +127,28 @@ function candidateOf(head: HeadRecognition, column: ColumnEvidence, index: numbe
   const said = headerMeaning(name);
   const hasNumbers = column.numbers > 0 && column.numbers >= column.texts;
   const role =
-    timeMeaning(head, index) === null && hasNumbers ? roleOf(said, unitFound, column) : "skip";
+    timeMeaning(head, index) === null && hasNumbers
+      ? roleOf(said, unitFound, column, name)
+      : "skip";
   return {
     index,
     role,
     unit: unitFound?.unit ?? null,
     certainty: role === "signal" ? "likely" : (said?.certainty ?? "likely"),
     words,
+    name,
   };
 }
 
-function roleOf(said: HeaderMeaning, unit: UnitWord | null, column: ColumnEvidence): Role {
+function roleOf(
+  said: HeaderMeaning,
+  unit: UnitWord | null,
+  column: ColumnEvidence,
+  name: string,
+): Role {
   const meaning = said?.meaning;
+  const meterRole = unit === null || isNotHeat(name) ? null : meterRoleOf(unit);
+  if (meterRole !== null) return meterRole;
   if (meaning === "known") return "skip";
   if (unit !== null && unit.unit === null)
     return unit.other === "otherFlow" && meaning !== "signal" ? "flow" : "skip";
@@ -122,12 +168,44 @@ function roleOf(said: HeaderMeaning, unit: UnitWord | null, column: ColumnEviden
           : "someTemperature";
     case "%":
       return meaning === "signal" ? "signal" : "skip";
-    default:
+    case undefined:
       break;
+    default:
+      // Power or energy of something that is no heat of the loop.
+      return "skip";
   }
   if (meaning === "signal") return isPercent(column) ? "signal" : "skip";
   if (meaning === "time" || meaning === "date" || meaning === "timeOfDay") return "skip";
   return meaning ?? "unknown";
+}
+
+function meterRoleOf(unit: UnitWord): "power" | "volume" | "energy" | null {
+  switch (unit.unit) {
+    case null:
+      return unit.other === "power" || unit.other === "energy" || unit.other === "volume"
+        ? unit.other
+        : null;
+    case "kW":
+    case "MW":
+    case "W":
+    case "MBH":
+    case "ton":
+      return "power";
+    case "m3":
+    case "L":
+    case "US gal":
+    case "ft3":
+      return "volume";
+    case "kWh":
+    case "MWh":
+    case "MJ":
+    case "GJ":
+    case "kBtu":
+    case "MMBtu":
+      return "energy";
+    default:
+      return null;
+  }
 }
 
 function isPercent(column: ColumnEvidence): boolean {

@@ -1,5 +1,5 @@
 import { KW_PER, KWH_PER } from "../units/energy-and-power";
-import { columnToM3PerHour, M3_PER_HOUR_PER } from "../units/flow";
+import { M3_PER_HOUR_PER } from "../units/flow";
 import { M3_PER } from "../units/size-and-pressure";
 import { columnToCelsius } from "../units/temperature";
 import type { ChannelMeaning } from "./raw-rows";
@@ -90,21 +90,17 @@ export function toStoredScale(value: number, unit: ColumnUnit): number {
 
 /** A column in m³/h, °C, percent, kW, m³ or kWh; the column itself where it already is. */
 export function columnToStoredUnit(values: Float64Array, unit: ColumnUnit): Float64Array {
-  switch (unit) {
-    case "degC":
-    case "%":
-      return values;
-    case "degF":
-    case "K":
-      return columnToCelsius(values.slice(), unit);
-    case "m3/h":
-    case "L/s":
-    case "L/min":
-    case "US gpm":
-      return unit === "m3/h" ? values : columnToM3PerHour(values.slice(), unit);
-    default: {
-      const factor = FACTOR[unit] ?? 1;
-      return factor === 1 ? values : values.map((value) => value * factor);
-    }
-  }
+  return STORED.has(unit) ? values : convertInPlace(values.slice(), unit);
+}
+
+const STORED: ReadonlySet<ColumnUnit> = new Set(
+  Object.values(UNITS_OF).map(([unit]) => unit as ColumnUnit),
+);
+
+/** Converts a whole column as {@link columnToStoredUnit} does, where it lies. NaN stays NaN. */
+export function convertInPlace(values: Float64Array, unit: ColumnUnit): Float64Array {
+  if (unit === "degF" || unit === "K") return columnToCelsius(values, unit);
+  const factor = FACTOR[unit] ?? 1;
+  if (factor !== 1) for (let i = 0; i < values.length; i++) values[i] = values[i]! * factor;
+  return values;
 }

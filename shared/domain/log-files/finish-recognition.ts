@@ -1,27 +1,35 @@
+import type { LoopService } from "../energy/power";
 import { assignColumns, type ColumnAssignment } from "./assign-columns";
+import { FLOW_UNITS, isChannelMeaning, unitsOfMeaning } from "./column-units";
 import { findDecimalMarks, type MarkFinding } from "./decimal-marks";
 import type { ScanResult } from "./file-scan";
-import { seriesKindOf, splitName } from "./header-words";
+import { saysMean, seriesKindOf, splitName } from "./header-words";
 import { preambleClock } from "./preamble-clock";
 import { guessTemperatureUnit } from "./temperature-guess";
-import type { ColumnRecipe, FlowUnit, LoggerClock, TimeRecipe } from "./recipe";
+import type { ColumnRecipe, LoggerClock, MeterRecipe, TimeRecipe } from "./recipe";
 import type { HeadRecognition } from "./recognise-head";
 import type { Proof, Question, Recognition, SampleRow, Unreadable } from "./recognition";
 
-const FLOW_UNITS: readonly FlowUnit[] = ["m3/h", "L/s", "L/min", "US gpm"];
 const SHOWN_SAMPLES = 12;
 
-/** Puts the head and the pass over the whole file together: a recipe, its proofs, and what must be asked. */
+/**
+ * Puts the head and the pass over the whole file together: a recipe, its proofs, and what must be
+ * asked. The loop's service says which register a permanent meter counts in; null leaves that open.
+ */
 export function finishRecognition(
   head: HeadRecognition,
   scan: ScanResult,
+  service: LoopService | null = null,
 ): Recognition | Unreadable {
   if (scan.dataRowCount === 0)
     return { code: "noRows", line: head.dialect.firstDataLine, cell: null };
   const halfDay = scan.time.halfDayUnknown();
   if (halfDay !== null) return { code: "halfDayUnknown", line: halfDay.line, cell: halfDay.cell };
 
-  const { columns: assigned, asked } = assignColumns(head, scan.columns);
+  const { columns: assigned, asked } = assignColumns(head, scan.columns, {
+    sampleRows: scan.sampleRows,
+    service,
+  });
   const temperatures = assigned.flatMap((column, i) =>
     column.meaning === "supply" || column.meaning === "return" ? [i] : [],
   );
@@ -53,6 +61,9 @@ export function finishRecognition(
     ),
   );
   const seriesKind = seriesKindOf(head.header.headers);
+  if (seriesKind === null) questions.push(...kindQuestion(withUnits));
+  const meter = meterOf(withUnits, service);
+  if (meter?.positivePower === null) questions.push(...powerQuestion(withUnits, scan, service));
   proofs.push({
     about: "seriesKind",
     columnIndex: null,
@@ -78,6 +89,7 @@ export function finishRecognition(
       columns: withUnits,
       time,
       seriesKind: seriesKind ?? "instantaneous",
+      ...(meter && { meter }),
     },
     proofs,
     questions,
@@ -87,6 +99,41 @@ export function finishRecognition(
     columnCount: head.columnCount,
     preamble: head.header.preamble,
   };
+}
+
+/** Rows that a header calls means, and no header says of which step: never taken for moments. */
+function kindQuestion(columns: readonly ColumnRecipe[]): Question[] {
+  const mean = columns.find(({ meaning, header }) => isRate(meaning) && saysMean(header));
+  return mean ? [{ code: "seriesKind", columnIndex: mean.index, header: mean.header }] : [];
+}
+
+function isRate(meaning: ColumnRecipe["meaning"]): boolean {
+  return meaning === "flow" || meaning === "supply" || meaning === "return" || meaning === "power";
+}
+
+/** In a changeover loop both temperatures tell heating from cooling; without them somebody must. */
+function meterOf(
+  columns: readonly ColumnRecipe[],
+  service: LoopService | null,
+): MeterRecipe | null {
+  const has = (wanted: ColumnRecipe["meaning"]) =>
+    columns.some(({ meaning }) => meaning === wanted);
+  const counts = has("volumeCounter") || has("heatingCounter") || has("coolingCounter");
+  if (!has("power") && !counts) return null;
+  const told = service === "changeover" && has("supply") && has("return");
+  return { positivePower: told ? "byTemperature" : null, exchangedAt: [] };
+}
+
+function powerQuestion(
+  columns: readonly ColumnRecipe[],
+  scan: ScanResult,
+  service: LoopService | null,
+): Question[] {
+  const power = columns.find(({ meaning }) => meaning === "power");
+  if (service !== "changeover" || !power) return [];
+  const range = scan.columns[power.index]?.range(power.decimalMark);
+  const [minValue, maxValue] = [range?.min ?? 0, range?.max ?? 0];
+  return [{ code: "positivePower", columnIndex: power.index, minValue, maxValue }];
 }
 
 function headProofs(head: HeadRecognition): Proof[] {
@@ -201,6 +248,16 @@ function settleColumn(
       });
     else proofs.push({ about: "columnUnit", ...place, certainty: "likely" });
     return { ...column, unit };
+  }
+  if (column.unit === null && isChannelMeaning(meaning) && meaning !== "signal") {
+    questions.push({
+      code: "columnUnit",
+      columnIndex: index,
+      minValue: range?.min ?? 0,
+      maxValue: range?.max ?? 0,
+      choices: unitsOfMeaning(meaning),
+    });
+    return column;
   }
   if (column.unit !== null) proofs.push({ about: "columnUnit", ...place, certainty: "proved" });
   return column;

@@ -36,6 +36,18 @@ const OTHER = words(
     "density dichte pressure druck pression err error status fehler state alarm flag battery batterie batt voltage record index nr no id row " +
     "gain sos pump pumpe valve ventil setpoint sollwert humidity comment bemerkung note remark kanal position",
 );
+/** Power and energy of these are no heat of the loop. */
+const NOT_HEAT = words(
+  "pump pumpe pompe electric electrical electricity elektrisch strom stromverbrauch electrique électrique " +
+    "compressor kompressor compresseur fan ventilator motor active reactive wirkleistung blindleistung",
+);
+const HEATING = words(
+  "heating heat wärme waerme heizen heizung heizenergie wärmemenge chauffage chaleur hot",
+);
+const COOLING = words(
+  "cooling cool cold kälte kaelte kühlen kühlung kälteenergie kältemenge chilled froid refroidissement",
+);
+const MEAN = words("mean avg average mittel mittelwert moyenne moy");
 const TIME = words(
   "timestamp datetime zeitstempel horodatage zeitpunkt time zeit uhrzeit heure datetimestamp datumzeit epoch unixtime unix local utc",
 );
@@ -63,6 +75,25 @@ export function headerMeaning(name: string): HeaderMeaning {
   if (has(DATE)) return { meaning: "date", certainty: "likely" };
   if (has(TIME)) return { meaning: "time", certainty: "likely" };
   return null;
+}
+
+/** Whether a column of power or energy is something else's than the loop's heat. */
+export function isNotHeat(name: string): boolean {
+  return splitName(name).some((part) => NOT_HEAT.has(part));
+}
+
+/** The register a header names; null where it names none or both. */
+export function registerWord(name: string): "heating" | "cooling" | null {
+  const parts = splitName(name);
+  const heating = parts.some((part) => HEATING.has(part));
+  const cooling = parts.some((part) => COOLING.has(part));
+  if (heating === cooling) return null;
+  return heating ? "heating" : "cooling";
+}
+
+/** Whether a header says that its column holds means: of which step, it may leave open. */
+export function saysMean(header: string): boolean {
+  return splitName(header).some((part) => MEAN.has(part));
 }
 
 /** T1, T2, TA, temp1, ch1temp. */

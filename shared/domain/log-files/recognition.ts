@@ -1,4 +1,4 @@
-import type { ColumnMeaning, FileRecipe, FlowUnit } from "./recipe";
+import type { ColumnMeaning, ColumnUnit, FileRecipe, FlowUnit } from "./recipe";
 
 /** What recognition found in a file: a proposed recipe, the proof of each guess, and what it must ask. */
 export interface Recognition {
@@ -73,6 +73,23 @@ export type Question =
       readonly line: number;
     }
   | { readonly code: "columnMeaning"; readonly meaning: ColumnMeaning }
+  /** The unit of a meter's power or counter. */
+  | {
+      readonly code: "columnUnit";
+      readonly columnIndex: number;
+      readonly minValue: number;
+      readonly maxValue: number;
+      readonly choices: readonly ColumnUnit[];
+    }
+  /** A header says that rows are means and not of which step. */
+  | { readonly code: "seriesKind"; readonly columnIndex: number; readonly header: string }
+  /** A meter's power in a changeover loop: which heat is the positive one. */
+  | {
+      readonly code: "positivePower";
+      readonly columnIndex: number;
+      readonly minValue: number;
+      readonly maxValue: number;
+    }
   | { readonly code: "loggerClock" };
 
 /** Why a file cannot be read at all. `remedy` codes are translated on screen. */

@@ -1,6 +1,7 @@
 import { displayUnits, fromDisplay, toDisplay } from "./display-units";
 import { fromKw, KW_PER, toKwh } from "./energy-and-power";
 import { columnToM3PerHour, toM3PerHour } from "./flow";
+import { columnToStoredUnit, toStoredScale } from "../log-files/column-units";
 import { fromMm, toMPa } from "./size-and-pressure";
 import { columnToCelsius, differenceToKelvin, toCelsius } from "./temperature";
 
@@ -46,4 +47,19 @@ test("what an account types in its own units is stored as it was before", () => 
   }
   expect(toDisplay(6.666667, displayUnits("inchPound").temperature)).toBeCloseTo(44, 5);
   expect(toDisplay(100, displayUnits("inchPound").flow)).toBeCloseTo(440.2868, 4);
+});
+
+// NIST SP 811, appendix B.8: Btu(IT) 1055.056 J, gallon 231 in³, cubic foot 0.02831685 m³.
+test("a meter's power and counters come to kW, m³ and kWh by the published factors", () => {
+  expect(toStoredScale(1, "MBH")).toBeCloseTo(0.2930711, 7);
+  expect(toStoredScale(1, "ton")).toBeCloseTo(3.516853, 6);
+  expect([toStoredScale(2, "MW"), toStoredScale(2000, "W")]).toEqual([2000, 2]);
+  expect(toStoredScale(1, "ft3")).toBeCloseTo(0.02831685, 8);
+  expect(toStoredScale(1, "US gal")).toBeCloseTo(0.003785412, 9);
+  expect(toStoredScale(3.6, "GJ")).toBeCloseTo(1000, 9);
+  expect(toStoredScale(1, "MMBtu")).toBeCloseTo(293.0711, 4);
+  expect(toStoredScale(1, "kBtu")).toBeCloseTo(0.2930711, 7);
+  const litres = Float64Array.of(1000, NaN);
+  expect([...columnToStoredUnit(litres, "L")]).toEqual([1, NaN]);
+  expect([...litres]).toEqual([1000, NaN]);
 });
