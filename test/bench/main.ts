@@ -5,6 +5,7 @@ import path from "node:path";
 import { parseArgs } from "node:util";
 import { connectDatabase } from "@server/database/connect";
 import { startBenchServer } from "./bench-server";
+import { benchFluids } from "./bench-fluids";
 import { benchImport } from "./bench-import";
 import { benchLargeFile } from "./bench-large-file";
 import { benchParsing } from "./bench-parsing";
@@ -44,6 +45,7 @@ async function main(): Promise<void> {
     const reads = await benchReads(bench, imports.pointId);
     const responsiveness = await benchResponsiveness(bench, site);
     const large = values["without-large"] ? [] : await benchLargeFile(bench);
+    const fluids = await benchFluids(rounds);
     const cores = os.availableParallelism();
     console.log(
       `\n${YEAR.rowCount.toLocaleString("en")} one-minute rows, ${(bench.bytes.length / 1e6).toFixed(1)} MB; ` +
@@ -54,7 +56,7 @@ async function main(): Promise<void> {
         "Without python3-pandas, python3-sqlalchemy and python3-pymysql: no pandas peers.",
       );
     console.log(
-      `\n${table([...imports.lines, ...large, ...parsing, ...reads, ...responsiveness])}`,
+      `\n${table([...imports.lines, ...large, ...parsing, ...reads, ...responsiveness, ...fluids])}`,
     );
   } finally {
     await database.close();
