@@ -1,7 +1,7 @@
 import { QueryTypes } from "sequelize";
 import type { CorrectionChange } from "@shared/contracts/corrections";
 import { fluidForEnergy } from "@shared/domain/fluids/loop-fluid";
-import { isFlowUnit, isTemperatureUnit } from "@shared/domain/readings/corrections/unit";
+import { isUnitOf } from "@shared/domain/readings/corrections/unit";
 import { Conflict, Invalid } from "@server/http/errors";
 import { BathCheck } from "@server/models/bath-check";
 import { Instrument } from "@server/models/instrument";
@@ -83,7 +83,7 @@ async function requireUnit(
   { channel, unit, logFileId }: Extract<CorrectionChange, { kind: "unit" }>,
 ): Promise<void> {
   await requireFile(acting, pointId, logFileId);
-  if (channel === "power" || !(channel === "flow" ? isFlowUnit(unit) : isTemperatureUnit(unit)))
+  if (!isUnitOf(channel, unit))
     throw wrong("unit", "unit-unknown", "This is not a unit of that reading.");
   const [held] = await acting.database.query<{ channels: number | null }>(
     "SELECT BIT_OR(channel_set) AS channels FROM reading_block WHERE log_file_id = :logFileId",

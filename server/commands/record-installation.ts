@@ -7,14 +7,18 @@ import { Installation } from "@server/models/installation";
 import { MeteringPoint } from "@server/models/metering-point";
 import { columnsOf, completeFields } from "@server/queries/evidence/installation-fields";
 import { requireUsableFields } from "@server/queries/evidence/require-usable-fields";
+import { standingCorrections } from "@server/readings/point-corrections";
 import type { Acting } from "./acting";
+import { recalculateIfProbeCorrected } from "./recalculate-corrected";
+import { recalculatePoint } from "./recalculate-points";
 import { recordAudit } from "./record-audit";
 
 type Given = z.output<(typeof createInstallation)["body"]>;
 
 /**
  * Keeps how a point was measured. With `supersedes`, the version named there stops counting and
- * stays readable. Figures stored stay as they are: only their ± follows from it.
+ * stays readable. Figures stored stay as they are, unless an applied offset follows one of its
+ * probes: otherwise only their ± follows from it.
  * @throws Invalid for fields that contradict; Conflict for a version that no longer stands.
  */
 export async function recordInstallation(
@@ -31,6 +35,7 @@ export async function recordInstallation(
     const lock = transaction.LOCK.UPDATE;
     await scope.get(MeteringPoint, pointId, "metering point", { transaction, lock });
     await requireUsableFields(scope, fields, transaction);
+    const carried = await carriesOffset(acting, pointId, transaction);
     const now = clock.date();
     const before =
       supersedes === undefined ? null : await standing(acting, pointId, supersedes, transaction);
@@ -53,9 +58,22 @@ export async function recordInstallation(
     const kind = before ? "installation-corrected" : "installation-recorded";
     const details = { pointId, startsAt: fields.startsAt, supersedes: before?.id ?? null, reason };
     const subject = { kind: "installation", id: row.id };
+    await recalculateIfProbeCorrected(acting, pointId, transaction);
     await recordAudit(acting, { kind, subject, details }, transaction);
+    if (carried || (await carriesOffset(acting, pointId, transaction)))
+      await recalculatePoint(acting, pointId, transaction);
     return row;
   });
+}
+
+/** Whether an applied correction of a probe touches the point, as its installations stand now. */
+async function carriesOffset(
+  { database }: Acting,
+  pointId: string,
+  transaction: Transaction,
+): Promise<boolean> {
+  const standing = await standingCorrections(database, pointId, transaction);
+  return standing.some(({ change }) => change.kind === "probeOffset");
 }
 
 /** Takes an installation out of use, such as one recorded on the wrong point. */
@@ -66,6 +84,7 @@ export async function withdrawInstallation(
 ): Promise<Installation> {
   return inTransaction(acting.database, async (transaction) => {
     const row = await standing(acting, null, installationId, transaction);
+    const carried = await carriesOffset(acting, row.pointId, transaction);
     await row.update(
       {
         withdrawnAt: acting.clock.date(),
@@ -74,9 +93,11 @@ export async function withdrawInstallation(
       },
       { transaction },
     );
+    await recalculateIfProbeCorrected(acting, row.pointId, transaction);
     const subject = { kind: "installation", id: row.id };
     const details = { pointId: row.pointId, reason };
     await recordAudit(acting, { kind: "installation-withdrawn", subject, details }, transaction);
+    if (carried) await recalculatePoint(acting, row.pointId, transaction);
     return row;
   });
 }

@@ -10,8 +10,10 @@ import type { JobContext } from "./job-context";
  */
 export async function correctionEffectJob(context: JobContext): Promise<void> {
   const { database, job } = context;
+  const id = job.correctionId;
+  if (id === null) throw new Error("a correction's job names no correction");
   const correction = await Correction.findOne({
-    where: { id: job.correctionId, organisationId: job.organisationId },
+    where: { id, organisationId: job.organisationId },
   });
   const weighed =
     correction?.state === "working"
@@ -30,7 +32,7 @@ export async function correctionEffectJob(context: JobContext): Promise<void> {
     if (weighed !== null)
       await Correction.update(
         { state: "proposed", effect: weighed, failure: null },
-        { where: { id: job.correctionId, state: "working" }, transaction },
+        { where: { id, state: "working" }, transaction },
       );
     await context.finish(transaction);
   });

@@ -6,6 +6,8 @@ import { BathCheck } from "./bath-check";
 import { BoreVersion } from "./bore-version";
 import { Building } from "./building";
 import { Certificate } from "./certificate";
+import { Correction } from "./correction";
+import { EnergyFill } from "./energy-fill";
 import { Installation } from "./installation";
 import { Instrument } from "./instrument";
 import { Invitation } from "./invitation";
@@ -53,6 +55,8 @@ const models: readonly ModelDefinition[] = [
   Installation,
   LogImport,
   LogFile,
+  Correction,
+  EnergyFill,
   Job,
 ];
 

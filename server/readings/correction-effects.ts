@@ -160,12 +160,10 @@ async function affectedRange(
   return "from" in change ? sharedSpan(held, spanOf(change)) : held;
 }
 
-const bitOf = { flow: ChannelBit.flow, supply: ChannelBit.supply, return: ChannelBit.return };
-
 /** Rows of the file a clock or unit is put right for; 0 for what corrects a stretch. */
 async function rowsOfFile(database: Database, change: CorrectionChange): Promise<number> {
   if (change.kind !== "clock" && change.kind !== "unit") return 0;
-  const bit = change.kind === "unit" && change.channel !== "power" ? bitOf[change.channel] : 0;
+  const bit = change.kind === "unit" ? ChannelBit[change.channel] : 0;
   const [row] = await database.query<{ count: string | null }>(
     `SELECT SUM(row_count) AS count FROM reading_block
       WHERE log_file_id = :logFileId AND (:bit = 0 OR (channel_set & :bit) <> 0)`,

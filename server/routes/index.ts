@@ -1,9 +1,11 @@
 import type { Endpoint } from "@server/http/define-endpoint";
 import { accessTokenRoutes } from "./access-token-routes";
 import { accountRoutes } from "./account-routes";
+import { correctionRoutes } from "./correction-routes";
 import { developmentRoutes } from "./development-routes";
 import { energyRoutes } from "./energy-routes";
 import { evidenceRoutes } from "./evidence-routes";
+import { fillRoutes } from "./fill-routes";
 import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
 import { placesRoutes } from "./places-routes";
@@ -11,6 +13,7 @@ import { sessionRoutes } from "./session-routes";
 import { shapeRoutes } from "./shape-routes";
 import { systemRoutes } from "./system-routes";
 import { todayRoutes } from "./today-routes";
+import { workingsRoutes } from "./workings-routes";
 
 /** To add routes: write `x-routes.ts` exporting an array of endpoints and spread it here. */
 const productEndpoints: readonly Endpoint[] = [
@@ -23,8 +26,11 @@ const productEndpoints: readonly Endpoint[] = [
   ...importRoutes,
   ...evidenceRoutes,
   ...energyRoutes,
+  ...correctionRoutes,
+  ...fillRoutes,
   ...shapeRoutes,
   ...todayRoutes,
+  ...workingsRoutes,
 ];
 
 /** Every endpoint of the API; the router, its document, the matrix and the tenancy test read it. */

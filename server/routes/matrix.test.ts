@@ -75,6 +75,9 @@ const matrix = `
   getReadings              ✓   ✓   ✓   ✓   –   –
   downloadIntervals        ✓   ✓   ✓   ✓   –   –
   downloadReadings         ✓   ✓   ✓   ✓   –   –
+  getWorkings              ✓   ✓   ✓   ✓   –   –
+  downloadWorkingsCsv      ✓   ✓   ✓   ✓   –   –
+  downloadWorkingsPdf      ✓   ✓   ✓   ✓   –   –
   getPointShape            ✓   ✓   ✓   ✓   –   –
   downloadDurationCurve    ✓   ✓   ✓   ✓   –   –
   getLoopPump              ✓   ✓   ✓   ✓   –   –
@@ -95,6 +98,17 @@ const matrix = `
   createInstallation       ✓   ✓   ✓   –   –   –
   tryInstallation          ✓   ✓   ✓   –   –   –
   withdrawInstallation     ✓   ✓   ✓   –   –   –
+  listCorrections          ✓   ✓   ✓   ✓   –   –
+  getCorrection            ✓   ✓   ✓   ✓   –   –
+  proposeCorrection        ✓   ✓   ✓   –   –   –
+  applyCorrection          ✓   ✓   ✓   –   –   –
+  withdrawCorrection       ✓   ✓   ✓   –   –   –
+  listFills                ✓   ✓   ✓   ✓   –   –
+  proposeFill              ✓   ✓   ✓   –   –   –
+  approveFill              ✓   –   ✓   –   –   –
+  withdrawFill             ✓   ✓   ✓   –   –   –
+  listEnergyResults        ✓   ✓   ✓   ✓   –   –
+  getEnergyResult          ✓   ✓   ✓   ✓   –   –
   getToday                 ✓   ✓   ✓   ✓   –   –
 `;
 

@@ -2,6 +2,7 @@ import { AccessToken } from "@server/models/access-token";
 import { Building } from "@server/models/building";
 import { secretHash } from "@server/security/secrets";
 import { evidenceOfPoint } from "./evidence-factories";
+import { correctedPoint } from "./correction-factories";
 import { person, type Person } from "./factories";
 import { recognisedImport } from "./import-factories";
 import { pointToMeter } from "./place-factories";
@@ -52,12 +53,17 @@ const evidence: MakeIds = async (app, { organisationId }) => {
   };
 };
 
+const corrections: MakeIds = async (app, { organisationId }) => {
+  const { point } = await pointToMeter(app, organisationId);
+  return correctedPoint(app, { organisationId, pointId: point.id });
+};
+
 /**
  * Makes one row of everything whose id stands in a path of the API, and answers the ids by the
  * path's parameter name. A new `:xId` needs a line here: the tenancy test asks for it.
  */
 export async function ownedIds(app: TestApp, owner: Person): Promise<Record<string, string>> {
-  const families = [people, places, logs, evidence];
+  const families = [people, places, logs, evidence, corrections];
   const ids = [];
   for (const make of families) ids.push(await make(app, owner));
   return Object.assign({}, ...ids) as Record<string, string>;

@@ -1,7 +1,9 @@
 import { coverage } from "@shared/domain/readings/coverage";
 import { RowQuality } from "@shared/domain/readings/reading-columns";
+import { overlap } from "@shared/domain/time/interval";
 import { localDateOf, localDaysBetween, type LocalDay } from "@shared/domain/time/local-calendar";
 import type { Database } from "@server/database/connect";
+import { filledStretches, type FilledStretch } from "@server/readings/energy-fills";
 import { loadDays } from "@server/readings/day-rows";
 import { loadSegments } from "@server/readings/load-segments";
 import type { EnergyPoint } from "./energy-point";
@@ -10,7 +12,7 @@ import type { EnergyRange } from "./energy-range";
 export interface DayMark {
   readonly date: string;
   /** `none` where the point has no readings yet or any more; `missing` where some are lacking. */
-  readonly kind: "measured" | "excluded" | "missing" | "none";
+  readonly kind: "measured" | "filled" | "excluded" | "missing" | "none";
   readonly coverage: number;
 }
 
@@ -36,12 +38,19 @@ export async function dayMarks(
         ]),
       )
     : await fromReadings(database, energyPoint, days);
+  const stretches = await filledStretches(database, point.id, range);
   const firstDate = localDateOf(firstMs, site.zone);
   const lastDate = localDateOf(lastMs, site.zone);
   const stepS = (readings.nominalStepMs ?? 0) / 1000;
   return days.map((day): DayMark => {
     const { date } = day;
     const found = stored.get(date);
+    if (isFilled(day, found?.coveredS ?? 0, stretches))
+      return {
+        date,
+        kind: "filled",
+        coverage: (found?.coveredS ?? 0) / ((day.endMs - day.startMs) / 1000),
+      };
     if (!found) {
       const within = date >= firstDate && date <= lastDate;
       return { date, kind: within ? "missing" : "none", coverage: 0 };
@@ -53,6 +62,19 @@ export async function dayMarks(
     const excluded = found.excluded > 0 && mostlyExcluded;
     return { date, kind: excluded ? "excluded" : "missing", coverage: covered };
   });
+}
+
+/** Whether fills stand for what readings lack of a day, which lacks something. */
+function isFilled(day: LocalDay, coveredS: number, stretches: readonly FilledStretch[]): boolean {
+  const lengthS = (day.endMs - day.startMs) / 1000;
+  if (coveredS >= wholeDay * lengthS) return false;
+  const filledS = stretches.reduce((sum, stretch) => {
+    const shared = overlap(stretch, day);
+    if (!shared) return sum;
+    const share = (shared.endMs - shared.startMs) / (stretch.endMs - stretch.startMs);
+    return sum + stretch.filledS * share;
+  }, 0);
+  return coveredS + filledS >= wholeDay * lengthS;
 }
 
 async function fromReadings(

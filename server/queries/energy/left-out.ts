@@ -1,6 +1,7 @@
 import { qualityRuns, type QualityRun } from "@shared/domain/readings/quality-runs";
 import type { Interval } from "@shared/domain/time/interval";
 import type { Database } from "@server/database/connect";
+import type { ShownRun } from "./filled-runs";
 import { readingParts } from "./reading-parts";
 
 /**
@@ -34,12 +35,12 @@ function append(runs: QualityRun[], run: QualityRun): void {
 }
 
 /** Runs in which rows are left out. The step after a log's last row lacks time but no row. */
-export function leftOutRuns(runs: readonly QualityRun[]): QualityRun[] {
+export function leftOutRuns<Run extends ShownRun>(runs: readonly Run[]): Run[] {
   return runs.filter((run) => run.kind !== "measured" && run.rows > 0);
 }
 
 /** The longest of them, in order of time. */
-export function longest(runs: readonly QualityRun[], most: number): QualityRun[] {
+export function longest<Run extends ShownRun>(runs: readonly Run[], most: number): Run[] {
   return [...runs]
     .sort((a, b) => b.endMs - b.startMs - (a.endMs - a.startMs))
     .slice(0, most)

@@ -1,14 +1,11 @@
 import type { SeriesAnswer } from "@shared/contracts/energy";
-import type { QualityRun } from "@shared/domain/readings/quality-runs";
+import type { ShownRun } from "./filled-runs";
 
 /**
  * Runs as a strip can show them: troubles of one kind with less than `leastMs` measured between them
  * become one, so that a year of short gaps does not send thousands of marks for as many pixels.
  */
-export function screenQuality(
-  runs: readonly QualityRun[],
-  leastMs: number,
-): SeriesAnswer["quality"] {
+export function screenQuality(runs: readonly ShownRun[], leastMs: number): SeriesAnswer["quality"] {
   const shown: SeriesAnswer["quality"] = [];
   for (const given of runs) {
     // The step after a log's last row is not covered, yet no row is lacking: nothing to mark.

@@ -14,9 +14,11 @@ import type { Interval } from "@shared/domain/time/interval";
 import { localDateOf, startOfLocalDay } from "@shared/domain/time/local-calendar";
 import { selectMany } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
+import { filledStretches } from "@server/readings/energy-fills";
 import { indexFrom, sliceColumns } from "@server/readings/load-segments";
 import { isStored, powerOfRows, storedPower } from "./column-power";
 import type { EnergyPoint } from "./energy-point";
+import { withFills, type ShownRun } from "./filled-runs";
 import { intervalColumns, intervalQuality } from "./interval-columns";
 import { appendRuns } from "./left-out";
 import { readingParts } from "./reading-parts";
@@ -54,7 +56,8 @@ export async function chartSeries(
         held > window.most && isStored(frame)
         ? await fromManyReadings(database, energyPoint, window, seen, frame)
         : await fromReadings(database, energyPoint, window, seen);
-  return present(energyPoint, range, drawn, pixels);
+  const filled = await filledStretches(database, point.id, range);
+  return present(energyPoint, range, { ...drawn, quality: withFills(drawn.quality, filled) }, pixels);
 }
 
 interface Drawn {
@@ -159,7 +162,7 @@ async function fromIntervals(
 function present(
   { site, readings }: EnergyPoint,
   range: Interval,
-  { columns, power, quality }: Drawn,
+  { columns, power, quality }: Omit<Drawn, "quality"> & { quality: readonly ShownRun[] },
   pixels: number,
 ): SeriesAnswer {
   const t0Ms = columns.startMs[0] ?? range.startMs;

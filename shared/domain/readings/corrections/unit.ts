@@ -1,5 +1,6 @@
 import { M3_PER_HOUR_PER } from "../../units/flow";
-import type { FlowUnit, TemperatureUnit } from "../../log-files/recipe";
+import { METER_POWER_UNITS } from "../../log-files/column-units";
+import type { FlowUnit, MeterPowerUnit, TemperatureUnit } from "../../log-files/recipe";
 
 /**
  * The unit a file's numbers are really in, where its header or somebody's answer named a wrong one.
@@ -17,4 +18,14 @@ export function isFlowUnit(unit: string): unit is FlowUnit {
 
 export function isTemperatureUnit(unit: string): unit is TemperatureUnit {
   return (temperatureUnits as readonly string[]).includes(unit);
+}
+
+export function isMeterPowerUnit(unit: string): unit is MeterPowerUnit {
+  return (METER_POWER_UNITS as readonly string[]).includes(unit);
+}
+
+/** Whether numbers of a channel can be in such a unit. */
+export function isUnitOf(channel: UnitChannel, unit: string): boolean {
+  if (channel === "flow") return isFlowUnit(unit);
+  return channel === "power" ? isMeterPowerUnit(unit) : isTemperatureUnit(unit);
 }
