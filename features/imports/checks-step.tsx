@@ -97,7 +97,8 @@ function Sides({ detail, checks }: { detail: ImportDetail; checks: ImportChecks 
         value: format.withUnit(heatingKwh, "heatingEnergy"),
       });
     }
-    energy.push({ label: t("result.volume"), value: format.withUnit(volumeM3, "volume") });
+    if (volumeM3 !== null)
+      energy.push({ label: t("result.volume"), value: format.withUnit(volumeM3, "volume") });
     energy.push({ label: t("result.coveredShort"), value: format.duration(coveredS) });
     if (suppressedKwh > 0) {
       energy.push({
@@ -145,6 +146,9 @@ function Sides({ detail, checks }: { detail: ImportDetail; checks: ImportChecks 
             highest: format.withUnit(checks.liquidC.highest, "temperature", 1),
           })}
         </Text>
+      ) : null}
+      {(checks.rowsAgainstRegister ?? 0) > 0 ? (
+        <Text tone="ink2">{t("checks.against", { count: checks.rowsAgainstRegister })}</Text>
       ) : null}
       {checks.clean.length > 0 ? (
         <SideRows

@@ -2,14 +2,8 @@ import { useWords } from "@features/i18n";
 import { SelectField } from "@features/ui";
 import type { ImportFile, QuestionView } from "@shared/contracts/imports";
 import type { ColumnRecipe, DateOrder, FileRecipe } from "@shared/domain/log-files/recipe";
-import {
-  COLUMN_MEANINGS,
-  isTime,
-  unitsOf,
-  withDateOrder,
-  withMeaning,
-  withUnit,
-} from "./recipe-edits";
+import { unitsOfMeaning } from "@shared/domain/log-files/column-units";
+import { COLUMN_MEANINGS, isTime, withDateOrder, withMeaning, withUnit } from "./recipe-edits";
 
 export interface ColumnsProps {
   readonly name: string;
@@ -57,7 +51,7 @@ export function MeaningControl({ column, recipe, locked, onChange, long }: Contr
 export function UnitControl({ column, recipe, locked, questions, onChange }: ControlProps) {
   const t = useWords("imports");
   const name = useColumnName();
-  const units = unitsOf(column.meaning);
+  const units = unitsOfMeaning(column.meaning);
   if (units.length > 0) {
     const asked = questions.some(
       (question) => "columnIndex" in question && question.columnIndex === column.index,

@@ -1,18 +1,18 @@
 import { View } from "react-native";
 import { useFormat, useWords } from "@features/i18n";
-import { ChoiceTiles, Card, Text, useBreakpoint } from "@features/ui";
+import { Card, Text, useBreakpoint } from "@features/ui";
 import type { ImportDetail, ImportFile } from "@shared/contracts/imports";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
-import type { SeriesKind } from "@shared/domain/readings/reading-columns";
 import { ColumnCards } from "./column-cards";
 import { ColumnTable } from "./column-table";
+import { CounterFields } from "./counter-fields";
 import { withRecipe } from "./file-card";
 import type { ImportActions } from "./imports-queries";
+import { KindTiles } from "./kind-tiles";
 import { Questions } from "./questions";
+import { withKind } from "./recipe-edits";
 import { SideColumn } from "./side-column";
 import { SideRows } from "./side-rows";
-
-const KINDS: readonly SeriesKind[] = ["instantaneous", "meanFromLabel", "meanToLabel"];
 
 /** Step 2: what each column means and in which unit, and what one row stands for. */
 export function ColumnsStep({ detail, actions }: { detail: ImportDetail; actions: ImportActions }) {
@@ -48,6 +48,7 @@ function FileColumns(props: { file: ImportFile; detail: ImportDetail; actions: I
   if (!file.recipe || !file.recognition) return null;
   const change = (recipe: FileRecipe) =>
     actions.chooseRecipe.mutate({ fileId: file.id, recipe: withRecipe(recipe) });
+  const isKindAsked = file.questions.some(({ code }) => code === "seriesKind");
   const shared = {
     name: file.name,
     recipe: file.recipe,
@@ -60,21 +61,43 @@ function FileColumns(props: { file: ImportFile; detail: ImportDetail; actions: I
     <View style={{ gap: 16 }}>
       {detail.files.length > 1 ? <Text variant="asReadM">{file.name}</Text> : null}
       {phone ? <ColumnCards {...shared} /> : <ColumnTable {...shared} />}
-      <Card pad={5}>
-        <ChoiceTiles
-          label={t("columns.kind.title")}
-          value={file.recipe.seriesKind}
-          columns={phone ? 1 : 3}
-          choices={KINDS.map((kind) => ({
-            value: kind,
-            label: t(`columns.kind.${kind}`),
-            detail: t(`columns.kind.${kind}Hint`),
-          }))}
-          onChange={(seriesKind) => file.recipe && change({ ...file.recipe, seriesKind })}
-        />
-      </Card>
+      <CounterFields
+        recipe={file.recipe}
+        zone={detail.site.zone}
+        locked={!detail.can.edit}
+        onChange={change}
+      />
+      {file.recipe.columns.some(({ meaning }) => isRate(meaning)) ? (
+        <Card pad={5}>
+          <View style={{ gap: 12 }}>
+            <KindTiles
+              label={t("columns.kind.title")}
+              value={isKindAsked ? null : file.recipe.seriesKind}
+              columns={phone ? 1 : 3}
+              onChange={(kind) => file.recipe && change(withKind(file.recipe, kind))}
+            />
+            {losesCovariance(file.recipe) ? (
+              <Text variant="small" tone="ink2">
+                {t("columns.meansOnly")}
+              </Text>
+            ) : null}
+          </View>
+        </Card>
+      ) : null}
     </View>
   );
+}
+
+function isRate(meaning: FileRecipe["columns"][number]["meaning"]): boolean {
+  return meaning === "flow" || meaning === "supply" || meaning === "return" || meaning === "power";
+}
+
+/** Means of flow and temperatures, from which the product's mean cannot be had any more. */
+function losesCovariance({ columns, seriesKind }: FileRecipe): boolean {
+  const has = (...wanted: readonly string[]) =>
+    columns.some(({ meaning }) => wanted.includes(meaning));
+  if (has("power", "heatingCounter", "coolingCounter")) return false;
+  return has("volumeCounter") || (has("flow") && seriesKind !== "instantaneous");
 }
 
 function PointFacts({ detail }: { detail: ImportDetail }) {

@@ -176,7 +176,12 @@ function HeaderLine({ file, detail, actions }: Parameters<typeof FileCard>[0]) {
 
 /** The contract's arrays are mutable, the domain's are not. */
 export function withRecipe(recipe: ReturnType<typeof withHeaderLine>) {
-  return { ...recipe, columns: [...recipe.columns] };
+  const { meter, ...rest } = recipe;
+  return {
+    ...rest,
+    columns: [...recipe.columns],
+    ...(meter && { meter: { ...meter, exchangedAt: [...meter.exchangedAt] } }),
+  };
 }
 
 function Unreadable(props: {

@@ -3,12 +3,20 @@ import { View } from "react-native";
 import { useFormat, useWords } from "@features/i18n";
 import { Button, Card, Mark, Row, Text } from "@features/ui";
 import type { ImportDetail, ImportFile, QuestionView } from "@shared/contracts/imports";
+import { TEMPERATURE_UNITS } from "@shared/domain/log-files/column-units";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import { useColumnName } from "./column-controls";
 import { withRecipe } from "./file-card";
 import { FlowUnitQuestion } from "./flow-unit-question";
 import type { ImportActions } from "./imports-queries";
-import { TEMPERATURE_UNITS, withDateOrder, withDecimalMark, withUnit } from "./recipe-edits";
+import { KindTiles } from "./kind-tiles";
+import {
+  withDateOrder,
+  withDecimalMark,
+  withKind,
+  withPositivePower,
+  withUnit,
+} from "./recipe-edits";
 
 interface QuestionsProps {
   readonly file: ImportFile;
@@ -155,6 +163,62 @@ function OneQuestion(props: {
           })}
           text={t("columns.missing.text")}
         />
+      );
+    case "columnUnit":
+      return (
+        <QuestionCard
+          title={t("columns.columnUnit.title", { column: column ? name(column) : "" })}
+          text={t("columns.columnUnit.text", {
+            min: format.number(question.minValue),
+            max: format.number(question.maxValue),
+          })}
+        >
+          <Row gap={2} wrap>
+            {question.choices.map((unit) => (
+              <Button
+                key={unit}
+                kind="second"
+                label={t("columns.columnUnit.use", { unit: t(`columns.unit.${unit}`) })}
+                onPress={() => onChange(withUnit(recipe, question.columnIndex, unit))}
+              />
+            ))}
+          </Row>
+        </QuestionCard>
+      );
+    case "seriesKind":
+      return (
+        <QuestionCard
+          title={t("columns.seriesKind.title")}
+          text={t("columns.seriesKind.text", { header: question.header })}
+        >
+          <KindTiles
+            label={t("columns.seriesKind.title")}
+            value={null}
+            columns={1}
+            onChange={(kind) => onChange(withKind(recipe, kind))}
+          />
+        </QuestionCard>
+      );
+    case "positivePower":
+      return (
+        <QuestionCard
+          title={t("columns.positivePower.title")}
+          text={t("columns.positivePower.text", {
+            min: format.number(question.minValue),
+            max: format.number(question.maxValue),
+          })}
+        >
+          <Row gap={2} wrap>
+            {(["heating", "cooling", "byTemperature"] as const).map((positive) => (
+              <Button
+                key={positive}
+                kind="second"
+                label={t(`columns.positivePower.${positive}`)}
+                onPress={() => onChange(withPositivePower(recipe, positive))}
+              />
+            ))}
+          </Row>
+        </QuestionCard>
       );
     case "loggerClock":
       return null;

@@ -1,3 +1,6 @@
+import { isCounter, unitsOfMeaning } from "@shared/domain/log-files/column-units";
+import type { PositivePower } from "@shared/domain/readings/orient-power";
+import type { SeriesKind } from "@shared/domain/readings/reading-columns";
 import type {
   ColumnMeaning,
   ColumnRecipe,
@@ -5,9 +8,7 @@ import type {
   DateOrder,
   DecimalMark,
   FileRecipe,
-  FlowUnit,
   LoggerClock,
-  TemperatureUnit,
 } from "@shared/domain/log-files/recipe";
 
 export const COLUMN_MEANINGS: readonly ColumnMeaning[] = [
@@ -18,25 +19,12 @@ export const COLUMN_MEANINGS: readonly ColumnMeaning[] = [
   "supply",
   "return",
   "signal",
+  "power",
+  "volumeCounter",
+  "heatingCounter",
+  "coolingCounter",
   "skip",
 ];
-export const FLOW_UNITS: readonly FlowUnit[] = ["m3/h", "L/s", "L/min", "US gpm"];
-export const TEMPERATURE_UNITS: readonly TemperatureUnit[] = ["degC", "degF", "K"];
-
-/** Units a column of this meaning can have; none for times and skipped columns. */
-export function unitsOf(meaning: ColumnMeaning): readonly ColumnUnit[] {
-  switch (meaning) {
-    case "flow":
-      return FLOW_UNITS;
-    case "supply":
-    case "return":
-      return TEMPERATURE_UNITS;
-    case "signal":
-      return ["%"];
-    default:
-      return [];
-  }
-}
 
 export const isTime = (meaning: ColumnMeaning): boolean =>
   meaning === "time" || meaning === "date" || meaning === "timeOfDay";
@@ -45,18 +33,32 @@ function edit(recipe: FileRecipe, change: (column: ColumnRecipe) => ColumnRecipe
   return { ...recipe, columns: recipe.columns.map(change) };
 }
 
+/** What a file may hold only one of: rate or counter of the water, power or counters of the heat. */
+const RIVALS: Partial<Record<ColumnMeaning, readonly ColumnMeaning[]>> = {
+  flow: ["volumeCounter"],
+  volumeCounter: ["flow"],
+  power: ["heatingCounter", "coolingCounter"],
+  heatingCounter: ["power"],
+  coolingCounter: ["power"],
+};
+
 /**
  * Gives a column a meaning. Whoever held that meaning is skipped from now on, since a file has one
  * column of each; a unit that does not fit is dropped, and only a sole unit is filled in.
  */
 export function withMeaning(recipe: FileRecipe, index: number, meaning: ColumnMeaning): FileRecipe {
-  const units = unitsOf(meaning);
+  const units = unitsOfMeaning(meaning);
   return edit(recipe, (column) => {
     if (column.index === index) {
+      const { capacity, ...rest } = column;
       const kept = units.find((unit) => unit === column.unit) ?? null;
-      return { ...column, meaning, unit: kept ?? (units.length === 1 ? (units[0] ?? null) : null) };
+      const unit = kept ?? (units.length === 1 ? (units[0] ?? null) : null);
+      const counts = isCounter(meaning) && capacity !== undefined;
+      return { ...rest, meaning, unit, ...(counts ? { capacity } : {}) };
     }
-    const taken = meaning !== "skip" && column.meaning === meaning;
+    const taken =
+      (meaning !== "skip" && column.meaning === meaning) ||
+      RIVALS[meaning]?.includes(column.meaning);
     const clash =
       (meaning === "time" && isTime(column.meaning)) ||
       (isTime(meaning) && column.meaning === "time");
@@ -66,6 +68,31 @@ export function withMeaning(recipe: FileRecipe, index: number, meaning: ColumnMe
 
 export function withUnit(recipe: FileRecipe, index: number, unit: ColumnUnit): FileRecipe {
   return edit(recipe, (column) => (column.index === index ? { ...column, unit } : column));
+}
+
+/** Where a counter starts from zero again, in the column's unit. */
+export function withCapacity(
+  recipe: FileRecipe,
+  index: number,
+  capacity: number | null,
+): FileRecipe {
+  return edit(recipe, (column) => (column.index === index ? { ...column, capacity } : column));
+}
+
+const noMeter = { positivePower: null, exchangedAt: [] } as const;
+
+export function withPositivePower(recipe: FileRecipe, positivePower: PositivePower): FileRecipe {
+  return { ...recipe, meter: { ...(recipe.meter ?? noMeter), positivePower } };
+}
+
+/** Instants as ISO 8601 in UTC. */
+export function withExchanges(recipe: FileRecipe, exchangedAt: readonly string[]): FileRecipe {
+  return { ...recipe, meter: { ...(recipe.meter ?? noMeter), exchangedAt } };
+}
+
+/** A kind that somebody chose holds, whatever the header says. */
+export function withKind(recipe: FileRecipe, seriesKind: SeriesKind): FileRecipe {
+  return { ...recipe, seriesKind, kindChosen: true };
 }
 
 export function withDecimalMark(

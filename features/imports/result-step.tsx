@@ -130,16 +130,18 @@ function Energy({ checks, detail }: { checks: ImportChecks; detail: ImportDetail
               </View>
             ))}
           <Row gap={6} align="flex-end">
-            <View>
-              <Text variant="small" tone="ink2">
-                {t("result.volume")}
-              </Text>
-              <Figure
-                size="m"
-                value={format.toDisplay(volumeM3, "volume")}
-                unit={format.unit("volume").unit}
-              />
-            </View>
+            {volumeM3 === null ? null : (
+              <View>
+                <Text variant="small" tone="ink2">
+                  {t("result.volume")}
+                </Text>
+                <Figure
+                  size="m"
+                  value={format.toDisplay(volumeM3, "volume")}
+                  unit={format.unit("volume").unit}
+                />
+              </View>
+            )}
             <View>
               <Text variant="small" tone="ink2">
                 {t("result.measuredRows")}
@@ -151,6 +153,11 @@ function Energy({ checks, detail }: { checks: ImportChecks; detail: ImportDetail
         {suppressedKwh > 0 ? (
           <Text variant="small" tone="ink2">
             {t("result.suppressed", { energy: format.withUnit(suppressedKwh, "coolingEnergy") })}
+          </Text>
+        ) : null}
+        {(checks.rowsAgainstRegister ?? 0) > 0 ? (
+          <Text variant="small" tone="ink2">
+            {t("checks.against", { count: checks.rowsAgainstRegister })}
           </Text>
         ) : null}
         <DailyEnergy days={checks.daily} zone={detail.site.zone} />

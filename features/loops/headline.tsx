@@ -35,6 +35,16 @@ export function Headline(props: LoopFigures & { onWorkings: () => void }) {
         </Text>
         <OtherRegister {...props} shown={registers} />
         <Suppressed {...props} />
+        {summary.basis.rowsAgainstRegister > 0 ? (
+          <Text variant="small" tone="ink2">
+            {t("headline.against", { count: summary.basis.rowsAgainstRegister })}
+          </Text>
+        ) : null}
+        {summary.basis.meansOnly ? (
+          <Text variant="small" tone="ink3">
+            {t("headline.meansOnly")}
+          </Text>
+        ) : null}
         {summary.basis.recalculating ? (
           <Text variant="small" tone="brass" role="status">
             {t("headline.recalculating")}
@@ -121,6 +131,7 @@ function Blocked(
     outsideFluid: editWay(),
     noFlow: importWay(),
     noTemperature: importWay(),
+    powerRegister: undefined,
   } as const;
   function editWay() {
     return loop.can.edit ? (

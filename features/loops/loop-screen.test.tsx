@@ -50,6 +50,8 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       fluid: { kind: "water" },
       liquidC: { lowest: 0, highest: 150 },
       blockedBy: null,
+    meansOnly: false,
+    rowsAgainstRegister: 0,
       recalculating: false,
     },
     totals: {
@@ -63,6 +65,7 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       coverage: 0.9858,
       rows: { measured: 9937, excluded: 37, noReading: 0, expected: 10_080 },
       apportioned: false,
+      filled: null,
     },
     days: Array.from({ length: 7 }, (_, i) => ({
       date: `2026-05-${11 + i}`,

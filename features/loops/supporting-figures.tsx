@@ -16,6 +16,8 @@ export function SupportingFigures(props: LoopFigures & { onWorkings: () => void 
   const { totals, nightBase } = summary;
   const register = leading(props);
   const covered = totals.coveredS > 0 && summary.basis.blockedBy === null;
+  // Energy without water: a permanent meter gave its power alone.
+  const meterOnly = covered && totals[register].energyKwh !== null && totals.volumeM3 === null;
   const night = nightBase
     ? { from: hour(nightBase.fromHour, phone), to: hour(nightBase.toHour, phone) }
     : { from: hour(0, phone), to: hour(5, phone) };
@@ -37,6 +39,7 @@ export function SupportingFigures(props: LoopFigures & { onWorkings: () => void 
           figure={shownFigure(format, covered ? totals.volumeM3 : null, "volume")}
           onWorkings={onWorkings}
         />
+        {meterOnly ? <MeterOnly /> : null}
       </Cell>
       <Cell title={t(phone ? "figures.deltaTShort" : "figures.deltaT")}>
         <Shown
@@ -49,6 +52,7 @@ export function SupportingFigures(props: LoopFigures & { onWorkings: () => void 
           )}
           onWorkings={onWorkings}
         />
+        {meterOnly ? <MeterOnly /> : null}
       </Cell>
       <Cell title={t("figures.night", night)}>
         <Shown
@@ -69,6 +73,15 @@ export function SupportingFigures(props: LoopFigures & { onWorkings: () => void 
         />
       </Cell>
     </View>
+  );
+}
+
+function MeterOnly() {
+  const t = useWords("loops");
+  return (
+    <Text variant="small" tone="ink3">
+      {t("figures.meterOnly")}
+    </Text>
   );
 }
 

@@ -96,6 +96,7 @@ function PointEditor(props: {
       ...chosen,
       code: values.code.trim(),
       name: values.name.trim(),
+      gapRule: values.gapRule,
       parentPointId: values.parentPointId === NONE ? null : values.parentPointId,
       pipe,
       notes: values.notes.trim() || null,
@@ -183,7 +184,8 @@ function PointEditor(props: {
           point={point}
           points={points}
         />
-        {point?.hasReadings && values.meterSide !== point.meterSide ? (
+        {point?.hasReadings &&
+        (values.meterSide !== point.meterSide || values.gapRule !== point.gapRule) ? (
           <Banner kind="note" live lead={t("loop.recalculatesLead")}>
             {t("point.recalculates")}
           </Banner>

@@ -4,7 +4,13 @@ import { ChoiceTiles, FieldRow, Form, SelectField, TextField } from "@features/u
 import { Section, SoftWarning } from "./loop-form";
 import { NONE } from "./loop-values";
 import { PipeFields } from "./pipe-fields";
-import { possibleFeeders, type MeterSide, type PointRole, type PointValues } from "./point-values";
+import {
+  possibleFeeders,
+  type GapRule,
+  type MeterSide,
+  type PointRole,
+  type PointValues,
+} from "./point-values";
 import type { SaveErrors } from "./use-save";
 
 export type PointField = keyof PointValues;
@@ -39,6 +45,7 @@ export const pointServerFields = [
   "role",
   "parentPointId",
   "meterSide",
+  "gapRule",
   "notes",
   ...Object.values(serverNames),
 ];
@@ -122,6 +129,18 @@ export function PointForm(props: PointFormProps) {
       <Section title={t("pipe.title")}>
         <PipeFields {...props} />
       </Section>
+      <ChoiceTiles<GapRule>
+        label={t("point.gapRule")}
+        hint={t("point.gapRuleHint")}
+        value={values.gapRule}
+        columns={2}
+        choices={[
+          { value: "survey", label: t("gapRule.survey"), detail: t("gapRule.surveyDetail") },
+          { value: "billing", label: t("gapRule.billing"), detail: t("gapRule.billingDetail") },
+        ]}
+        onChange={(gapRule) => onChange({ gapRule })}
+        error={pointErrorOf(props, "gapRule")}
+      />
       <TextField
         label={t("loop.notes")}
         hint={t("point.notesHint")}

@@ -1,5 +1,5 @@
 import type { z } from "zod";
-import type { meterSide, Pipe, Point, pointRole } from "@shared/contracts/places";
+import type { gapRule, meterSide, Pipe, Point, pointRole } from "@shared/contracts/places";
 import { resolvePipe, type ResolvedPipe } from "@shared/domain/pipes/resolve-pipe";
 import type { Format } from "@features/i18n";
 import { NONE } from "./loop-values";
@@ -7,6 +7,7 @@ import { shownValue, storedValue } from "./shown-range";
 
 export type PointRole = z.infer<typeof pointRole>;
 export type MeterSide = z.infer<typeof meterSide>;
+export type GapRule = z.infer<typeof gapRule>;
 
 /** A point's fields as typed: diameters in the unit shown, null while empty. */
 export interface PointValues {
@@ -16,6 +17,7 @@ export interface PointValues {
   readonly parentPointId: string;
   /** Null until somebody chooses: the wrong side is an error of several per cent nobody sees. */
   readonly meterSide: MeterSide | null;
+  readonly gapRule: GapRule;
   readonly pipeKind: "table" | "measured" | "unknown";
   readonly tableId: string | null;
   readonly dn: number | null;
@@ -37,6 +39,7 @@ export function pointValues(point: Point | null, format: Format): PointValues {
     role: point?.role ?? null,
     parentPointId: point?.parentPointId ?? NONE,
     meterSide: point?.meterSide ?? null,
+    gapRule: point?.gapRule ?? "survey",
     pipeKind: pipe?.kind ?? (point ? "unknown" : "table"),
     tableId: table?.tableId ?? null,
     dn: table?.dn ?? null,

@@ -150,6 +150,7 @@ export function pointOf(more: Partial<Point> = {}): Point {
     name: "Main meter",
     role: "main",
     meterSide: "return",
+    gapRule: "survey",
     pipe: null,
     bore: null,
     notes: null,
