@@ -5,7 +5,14 @@ import type {
   energyBasis,
   loadCard,
 } from "@shared/contracts/energy";
-import { deltaTMeans, type EnergyTotals, type RegisterTotals } from "@shared/domain/energy/totals";
+import type { PlusMinus } from "@shared/contracts/plus-minus";
+import {
+  deltaTMeans,
+  waterSeconds,
+  type EnergyTotals,
+  type RegisterTotals,
+} from "@shared/domain/energy/totals";
+import type { FilledTotals } from "@server/readings/energy-fills";
 import { instantText } from "@server/database/conversions";
 import type { EnergyPoint } from "@server/queries/energy/energy-point";
 import type { EnergyRow } from "@server/queries/energy/energy-rows";
@@ -32,11 +39,15 @@ function figureOrNull(value: number, energyS: number): number | null {
   return energyS > 0 ? rounded(value, 6) : null;
 }
 
-function presentRegister(register: RegisterTotals, energyS: number): TotalsAnswer["heating"] {
-  const means = deltaTMeans(register);
+function presentRegister(
+  register: RegisterTotals,
+  energyS: number,
+  { waterS, meterOnlyS }: { waterS: number; meterOnlyS: number },
+): TotalsAnswer["heating"] {
+  const means = deltaTMeans(register, meterOnlyS);
   return {
     energyKwh: figureOrNull(register.energyKwh, energyS),
-    volumeM3: figureOrNull(register.volumeM3, energyS),
+    volumeM3: figureOrNull(register.volumeM3, waterS),
     runningS: rounded(register.runningS, 3),
     flowWeightedDeltaTK: roundedOrNull(means.flowWeightedK, 6),
     energyWeightedDeltaTK: roundedOrNull(means.energyWeightedK, 6),
@@ -52,12 +63,18 @@ export function presentTotals(
   totals: EnergyTotals,
   expectedS: number,
   expectedRows: number | null,
+  filled: FilledTotals | null,
   energyS: number = totals.coveredS,
 ): TotalsAnswer {
+  const { meterOnlyS } = totals;
+  const water = {
+    meterOnlyS,
+    waterS: energyS > 0 ? waterSeconds({ coveredS: energyS, meterOnlyS }) : 0,
+  };
   return {
-    heating: presentRegister(totals.heating, energyS),
-    cooling: presentRegister(totals.cooling, energyS),
-    volumeM3: figureOrNull(totals.volumeM3, energyS),
+    heating: presentRegister(totals.heating, energyS, water),
+    cooling: presentRegister(totals.cooling, energyS, water),
+    volumeM3: figureOrNull(totals.volumeM3, water.waterS),
     suppressedKwh: figureOrNull(totals.suppressedKwh, energyS),
     suppressedS: rounded(totals.suppressedS, 3),
     coveredS: rounded(totals.coveredS, 3),
@@ -70,6 +87,13 @@ export function presentTotals(
       expected: expectedRows,
     },
     apportioned: totals.apportioned,
+    filled: filled && {
+      heatingKwh: rounded(filled.heatingKwh, 6),
+      coolingKwh: rounded(filled.coolingKwh, 6),
+      volumeM3: roundedOrNull(filled.volumeM3, 6),
+      filledS: rounded(filled.filledS, 3),
+      approvedOnly: filled.approvedOnly,
+    },
   };
 }
 
@@ -77,7 +101,7 @@ export function presentBasis({
   point,
   settings,
   readings,
-}: EnergyPoint): z.input<typeof energyBasis> {
+}: EnergyPoint): z.output<typeof energyBasis> {
   return {
     engineVersion: readings.engineVersion,
     pressure: { absoluteMPa: settings.pressure.pressureMPa, assumed: settings.pressure.assumed },
@@ -86,6 +110,8 @@ export function presentBasis({
     liquidC: liquidC(settings.fluid),
     // A point without readings yet has no state of its own: its loop's fluid already decides.
     blockedBy: readings.blockedBy ?? fluidBlock(settings.fluid),
+    meansOnly: readings.meansOnly,
+    rowsAgainstRegister: readings.againstRows,
     recalculating: readings.recalculating,
   };
 }
@@ -103,7 +129,7 @@ export function presentColumns(rows: readonly EnergyRow[]): NonNullable<EnergyAn
     coveredS: rows.map(({ totals }) => rounded(totals.coveredS, 3)),
     heatingKwh: covered((totals) => totals.heating.energyKwh, 4),
     coolingKwh: covered((totals) => totals.cooling.energyKwh, 4),
-    volumeM3: covered((totals) => totals.volumeM3, 4),
+    volumeM3: covered((totals) => (waterSeconds(totals) > 0 ? totals.volumeM3 : null), 4),
     meanSupplyC: covered((totals) => totals.meanSupplyC, 3),
     meanReturnC: covered((totals) => totals.meanReturnC, 3),
     flowWeightedDeltaTK: covered((totals) => deltaTMeans(longer(totals)).flowWeightedK, 4),
@@ -113,15 +139,16 @@ export function presentColumns(rows: readonly EnergyRow[]): NonNullable<EnergyAn
   };
 }
 
-export function presentLoad(load: Load): z.input<typeof loadCard> {
+export function presentLoad(load: Load, plusMinus: PlusMinus | null): z.input<typeof loadCard> {
   return {
     from: instantText(new Date(load.startMs)),
     to: instantText(new Date(load.endMs)),
-    supplyC: rounded(load.supplyC, 3),
-    returnC: rounded(load.returnC, 3),
-    flowM3PerHour: rounded(load.flowM3PerHour, 4),
-    deltaTK: rounded(load.deltaTK, 3),
+    supplyC: roundedOrNull(load.supplyC, 3),
+    returnC: roundedOrNull(load.returnC, 3),
+    flowM3PerHour: roundedOrNull(load.flowM3PerHour, 4),
+    deltaTK: roundedOrNull(load.deltaTK, 3),
     powerKw: rounded(load.powerKw, 4),
+    plusMinus,
     register: load.register,
   };
 }

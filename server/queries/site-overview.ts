@@ -1,6 +1,7 @@
 import { QueryTypes } from "sequelize";
 import type { z } from "zod";
 import type { siteOverviewLoop } from "@shared/contracts/places";
+import type { RangePlusMinus } from "@shared/contracts/plus-minus";
 import { nearestNominalSizeDn } from "@shared/domain/pipes/resolve-pipe";
 import type { Interval } from "@shared/domain/time/interval";
 import { DAY_MS } from "@shared/domain/time/interval";
@@ -13,9 +14,12 @@ import { Building } from "@server/models/building";
 import { Loop } from "@server/models/loop";
 import type { Site } from "@server/models/site";
 import { energyBlockedBy } from "@server/presenters/present-loop";
+import { loadDaysOf, type DayEnergy } from "@server/readings/day-rows";
 import { currentBores } from "./current-bores";
 import { mainPoints } from "./main-points";
 import { qualityStrips, type QualitySegment } from "./quality-strip";
+import { loadFigureEvidences, type FigureEvidence } from "./workings/figure-evidence";
+import { rangePlusMinus } from "./workings/range-plus-minus";
 
 type OverviewLoop = z.input<typeof siteOverviewLoop>;
 
@@ -38,6 +42,7 @@ interface ReadingsRow {
   firstMs: string | number | null;
   lastMs: string | number | null;
   blockedBy: string | null;
+  nominalStepMs: number | null;
 }
 
 export interface SiteOverview {
@@ -68,15 +73,25 @@ export async function siteOverview(
   const range = rangeOfDates(dates.from, dates.to, site.zone);
   // What has not happened yet is not missing.
   const soFar = { startMs: range.startMs, endMs: Math.min(range.endMs, nowMs) };
-  const [bores, energies, readings, strips] = await Promise.all([
+  const [bores, energies, readings, days, strips] = await Promise.all([
     currentBores(scope, pointIds),
     energyOfPoints(database, scope, pointIds, dates),
     readingsOfPoints(database, scope, pointIds),
+    loadDaysOf(database, pointIds, dates.from, dates.to),
     soFar.endMs - soFar.startMs > LONGEST_STRIP_MS
       ? new Map<string, QualitySegment[]>()
       : qualityStrips(database, pointIds, soFar),
   ]);
   const known = [...readings.values()];
+  const evidence = await loadFigureEvidences(
+    scope,
+    loops.flatMap((loop) => {
+      const point = points.get(loop.id);
+      const stepMs = point && readings.get(point.id)?.nominalStepMs;
+      return point ? [{ point, loop, site, nominalStepMs: stepMs ?? null }] : [];
+    }),
+    range,
+  );
   return {
     buildings,
     loops: loops.map((loop) => {
@@ -87,6 +102,7 @@ export async function siteOverview(
         energy: energies.get(id),
         readings: readings.get(id),
         strip: strips.get(id),
+        plusMinus: plusMinusFor(evidence.get(id), days.get(id)),
       });
     }),
     firstReadingMs: extreme(known, "firstMs", Math.min),
@@ -108,13 +124,21 @@ interface LoopRows {
   readonly energy: EnergyRow | undefined;
   readonly readings: ReadingsRow | undefined;
   readonly strip: readonly QualitySegment[] | undefined;
+  readonly plusMinus: RangePlusMinus | null;
+}
+
+function plusMinusFor(
+  evidence: FigureEvidence | undefined,
+  days: readonly DayEnergy[] | undefined,
+): RangePlusMinus | null {
+  return evidence ? rangePlusMinus(evidence, days ?? []) : null;
 }
 
 function overviewOf(
   loop: Loop,
   mainPointId: string | null,
   soFar: Interval,
-  { bore, energy, readings, strip }: LoopRows,
+  { bore, energy, readings, strip, plusMinus }: LoopRows,
 ): OverviewLoop {
   const { id, tag, name, service, buildingId, parentLoopId } = loop;
   const covered = energy !== undefined && Number(energy.coveredS) > 0;
@@ -144,6 +168,7 @@ function overviewOf(
     energyKwh: { chilled: coolingKwh, hot: heatingKwh, changeover: null }[service],
     heatingKwh,
     coolingKwh,
+    plusMinus: counted ? plusMinus : null,
     flowWeightedDeltaTK:
       counted && register && volume
         ? Number(counted[`${register as "heating"}FlowDt`]) / volume
@@ -192,7 +217,8 @@ async function readingsOfPoints(
 ): Promise<Map<string, ReadingsRow>> {
   if (pointIds.length === 0) return new Map();
   const rows = await database.query<ReadingsRow>(
-    `SELECT point_id AS pointId, first_ms AS firstMs, last_ms AS lastMs, blocked_by AS blockedBy
+    `SELECT point_id AS pointId, first_ms AS firstMs, last_ms AS lastMs, blocked_by AS blockedBy,
+            nominal_step_ms AS nominalStepMs
      FROM point_readings
      WHERE organisation_id = :organisationId AND point_id IN (:pointIds)`,
     {

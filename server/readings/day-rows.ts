@@ -127,6 +127,9 @@ export async function replaceDays(
   );
 }
 
+const selectedColumns = columns
+  .map((name) => (name === "local_date" ? "CAST(local_date AS CHAR) AS local_date" : name))
+  .join(", ");
 const position = new Map(columns.map((name, index) => [name, index]));
 const cell = (row: SqlRow, name: string) => row[position.get(name) as number] ?? null;
 const number = (row: SqlRow, name: string) => Number(cell(row, name) ?? 0);
@@ -194,15 +197,35 @@ export async function loadDays(
   toDate: string,
   transaction?: Transaction,
 ): Promise<DayEnergy[]> {
-  const names = columns.map((name) =>
-    name === "local_date" ? "CAST(local_date AS CHAR) AS local_date" : name,
-  );
   const rows = await selectMany(
     database,
-    `SELECT ${names.join(", ")} FROM day_energy
+    `SELECT ${selectedColumns} FROM day_energy
       WHERE point_id = ? AND local_date >= ? AND local_date < ? ORDER BY day_energy.local_date`,
     [pointId, fromDate, toDate],
     transaction,
   );
   return rows.map(dayOf);
+}
+
+/** The same for several points, by point: one query. */
+export async function loadDaysOf(
+  database: Database,
+  pointIds: readonly string[],
+  fromDate: string,
+  toDate: string,
+): Promise<Map<string, DayEnergy[]>> {
+  const byPoint = new Map<string, DayEnergy[]>();
+  if (pointIds.length === 0) return byPoint;
+  const rows = await selectMany(
+    database,
+    `SELECT ${selectedColumns} FROM day_energy
+      WHERE point_id IN (${pointIds.map(() => "?").join(", ")})
+        AND local_date >= ? AND local_date < ? ORDER BY day_energy.local_date`,
+    [...pointIds, fromDate, toDate],
+  );
+  for (const row of rows) {
+    const pointId = String(cell(row, "point_id"));
+    byPoint.set(pointId, [...(byPoint.get(pointId) ?? []), dayOf(row)]);
+  }
+  return byPoint;
 }

@@ -25,7 +25,9 @@ import { expectedSeconds, readRange } from "@server/queries/energy/energy-range"
 import { energyRows, rangeTotals } from "@server/queries/energy/energy-rows";
 import { pointSummary } from "@server/queries/energy/point-summary";
 import { readingsPage } from "@server/queries/energy/readings-page";
+import { filledTotals } from "@server/readings/energy-fills";
 import { chartSeries } from "@server/queries/energy/series";
+import { loadRangePlusMinus } from "@server/queries/workings/range-plus-minus";
 
 const policy = may("seeEnergy");
 const atOrNull = (ms: number | null) => (ms === null ? null : instantText(new Date(ms)));
@@ -46,12 +48,17 @@ export const energyRoutes: readonly Endpoint[] = [
         ? combineTotals(rows.map((row) => row.totals))
         : await rangeTotals(database, params.pointId, range);
       const expectedS = expectedSeconds(range, clock.now());
+      const [filled, plusMinus] = await Promise.all([
+        filledTotals(database, params.pointId, range),
+        rows ? null : loadRangePlusMinus(context, energyPoint, range),
+      ]);
       return {
         zone,
         from: instantText(new Date(range.startMs)),
         to: instantText(new Date(range.endMs)),
         basis: presentBasis(energyPoint),
-        totals: presentTotals(totals, expectedS, null),
+        totals: presentTotals(totals, expectedS, null, filled),
+        plusMinus,
         columns: rows && presentColumns(rows),
       };
     },
@@ -61,7 +68,7 @@ export const energyRoutes: readonly Endpoint[] = [
     async handle(context, { params, query }) {
       const energyPoint = await loadEnergyPoint(context, params.pointId);
       const range = readRange(query, energyPoint.site.zone);
-      return pointSummary(context.database, energyPoint, range, context.clock.now());
+      return pointSummary(context, energyPoint, range, context.clock.now());
     },
   }),
   defineEndpoint(getSeries, {

@@ -3,6 +3,7 @@ import { contract, id, instant, nothing } from "./contract";
 import { budgetTerm, verdict } from "./evidence";
 import { correction, fill } from "./corrections";
 import { fluid } from "./places";
+import { plusMinus } from "./plus-minus";
 
 /*
  * The workings of one figure: one model that the screen, the PDF, the CSV and a script read. Codes
@@ -17,15 +18,6 @@ export const workingsFigure = z.enum([
   "completeness",
 ]);
 export type WorkingsFigure = z.infer<typeof workingsFigure>;
-
-/** An expanded uncertainty as screens print it beside a figure. */
-export const plusMinus = z.object({
-  expanded: z.number().describe("in the figure's unit, k = 2"),
-  percent: z.number().nullable().describe("of the figure; null where the figure is 0"),
-  /** Whether any evidence of the point went into it, or defaults only. */
-  basis: z.enum(["evidence", "partlyDefaults", "defaults"]),
-});
-export type PlusMinus = z.infer<typeof plusMinus>;
 
 const source = z.object({
   instrument: z.string().nullable().describe("serial"),

@@ -49,38 +49,64 @@ export async function loadInstallationsOf(
   transaction?: Transaction,
 ): Promise<PointInstallations> {
   const background = await loadPointBackground(scope, pointId, transaction);
+  const found = await loadInstallationsOfPoints(scope, [background], range, transaction);
+  return { background, installations: found.get(pointId) ?? [] };
+}
+
+/** The same for points whose background is known, by point: four queries, however many points. */
+export async function loadInstallationsOfPoints(
+  scope: Scope,
+  backgrounds: readonly PointBackground[],
+  range: { readonly startMs: number; readonly endMs: number } | null,
+  transaction?: Transaction,
+): Promise<Map<string, StandingInstallation[]>> {
+  if (backgrounds.length === 0) return new Map();
   const rows = await scope.list(Installation, {
-    where: { pointId, supersededAt: null, withdrawnAt: null },
+    where: {
+      pointId: backgrounds.map(({ point }) => point.id),
+      supersededAt: null,
+      withdrawnAt: null,
+    },
     order: [["startsAt", "ASC"]],
     transaction,
   });
-  const spans = rows.map((row, at) => {
-    const startMs = row.startsAt.getTime();
-    const ends = [row.endsAt, rows[at + 1]?.startsAt].flatMap((end) => end?.getTime() ?? []);
-    return { row, startMs, endMs: ends.length === 0 ? null : Math.min(...ends) };
+  const asked = backgrounds.flatMap((background) => {
+    const own = rows.filter(({ pointId }) => pointId === background.point.id);
+    return own
+      .map((row, at) => {
+        const startMs = row.startsAt.getTime();
+        const ends = [row.endsAt, own[at + 1]?.startsAt].flatMap((end) => end?.getTime() ?? []);
+        const endMs = ends.length === 0 ? null : Math.min(...ends);
+        return { background, row, fields: fieldsOf(row), startMs, endMs };
+      })
+      .filter(
+        ({ startMs, endMs }) =>
+          range === null || (startMs < range.endMs && (endMs === null || endMs > range.startMs)),
+      );
   });
-  const asked = spans.filter(
-    ({ startMs, endMs }) =>
-      range === null || (startMs < range.endMs && (endMs === null || endMs > range.startMs)),
+  const records = await loadEvidenceRecords(
+    scope,
+    asked.map(({ fields }) => fields),
+    transaction,
   );
-  const fields = asked.map(({ row }) => fieldsOf(row));
-  const records = await loadEvidenceRecords(scope, fields, transaction);
-  const installations = asked.map(({ row, startMs, endMs }, at) => {
-    const own = fields[at] ?? fieldsOf(row);
+  const byPoint = new Map<string, StandingInstallation[]>();
+  for (const { background, row, fields, startMs, endMs } of asked) {
     const startDay = localDateOf(startMs, background.site.zone);
-    return {
+    const list = byPoint.get(row.pointId) ?? [];
+    byPoint.set(row.pointId, list);
+    list.push({
       id: row.id,
       version: row.version,
       startMs,
       endMs,
       recordedBy: row.recordedByName,
-      fields: own,
-      evidence: evidenceOf(own, records, startDay, testedOnOf(background)),
-      bathCheckId: bathCheckOf(own, records, startDay)?.id ?? null,
-      indicativeOnly: isIndicativeOnly(own, records),
-    };
-  });
-  return { background, installations };
+      fields,
+      evidence: evidenceOf(fields, records, startDay, testedOnOf(background)),
+      bathCheckId: bathCheckOf(fields, records, startDay)?.id ?? null,
+      indicativeOnly: isIndicativeOnly(fields, records),
+    });
+  }
+  return byPoint;
 }
 
 export function testedOnOf({ loop }: PointBackground): string | null {

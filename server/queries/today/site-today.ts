@@ -8,6 +8,8 @@ import { presentLoad, rounded } from "@server/presenters/present-energy";
 import { energyBlockedBy } from "@server/presenters/present-loop";
 import { currentBores } from "@server/queries/current-bores";
 import { loadOf, registerOf } from "@server/queries/energy/loads";
+import { loadFigureEvidences, type FigureEvidence } from "@server/queries/workings/figure-evidence";
+import { plusMinusOf } from "@server/queries/workings/figure-uncertainty";
 import { balanceFindings } from "./balance-findings";
 import { importFindings } from "./import-findings";
 import { readingFindings, siteSilence, type Finding } from "./reading-findings";
@@ -24,9 +26,10 @@ export async function siteToday(
   const { scope } = context;
   const { day, loops } = await siteLoops(context, site);
   const points = loops.flatMap(({ point }) => (point ? [point.id] : []));
-  const [bores, findings] = await Promise.all([
+  const [bores, findings, evidence] = await Promise.all([
     currentBores(scope, points),
     allFindings(context, site, loops, day, nowMs),
+    evidenceOfDay(scope, site, loops, day),
   ]);
   return {
     site: { id: site.id, name: site.name, zone: site.zone, isDemo: site.isDemo },
@@ -46,7 +49,7 @@ export async function siteToday(
       pointId: siteLoop.point?.id ?? null,
       nominalSizeDn: (siteLoop.point && bores.get(siteLoop.point.id)?.dn) ?? null,
       meterSide: siteLoop.point?.meterSide ?? null,
-      ...presentDay(siteLoop, day, site.zone),
+      ...presentDay(siteLoop, day, site.zone, evidence.get(siteLoop.point?.id ?? "")),
       lastReadingAt:
         siteLoop.readings?.lastMs == null ? null : instantText(new Date(siteLoop.readings.lastMs)),
     })),
@@ -71,12 +74,35 @@ async function allFindings(
   return found.sort((a, b) => weights.indexOf(a.weight) - weights.indexOf(b.weight));
 }
 
-type DayAnswer = Pick<TodayAnswer["loops"][number], "card" | "energyKwh" | "emptyReason">;
+/** The evidence of every loop's point on the day shown. */
+async function evidenceOfDay(
+  scope: Scope,
+  site: Site,
+  loops: readonly SiteLoop[],
+  day: string | null,
+): Promise<Map<string, FigureEvidence>> {
+  if (day === null) return new Map();
+  const points = loops.flatMap(({ point, loop, readings }) =>
+    point ? [{ point, loop, site, nominalStepMs: readings?.nominalStepMs ?? null }] : [],
+  );
+  return loadFigureEvidences(scope, points, localDay(day, site.zone));
+}
 
-function presentDay({ loop, point, readings, week }: SiteLoop, day: string | null, zone: string) {
+type DayAnswer = Pick<
+  TodayAnswer["loops"][number],
+  "card" | "energyKwh" | "energyPlusMinus" | "emptyReason"
+>;
+
+function presentDay(
+  { loop, point, readings, week }: SiteLoop,
+  day: string | null,
+  zone: string,
+  evidence: FigureEvidence | undefined,
+) {
   const empty = (emptyReason: DayAnswer["emptyReason"]): DayAnswer => ({
     card: null,
     energyKwh: null,
+    energyPlusMinus: null,
     emptyReason,
   });
   if (!point) return empty("noPoint");
@@ -88,9 +114,13 @@ function presentDay({ loop, point, readings, week }: SiteLoop, day: string | nul
   const register = registerOf(loop.service, found.totals);
   const load = loadOf(localDay(day, zone), found.totals, register);
   if (!load) return empty("noReadingInFile");
+  const rows = [found];
+  const of = (figure: "power" | "energy") =>
+    evidence ? plusMinusOf(evidence, rows, { figure, register }) : null;
   return {
-    card: presentLoad(load),
+    card: presentLoad(load, of("power")),
     energyKwh: rounded(found.totals[register].energyKwh, 4),
+    energyPlusMinus: of("energy"),
     emptyReason: null,
   } satisfies DayAnswer;
 }

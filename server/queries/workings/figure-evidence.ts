@@ -1,10 +1,13 @@
 import { correctionChange, type CorrectionChange } from "@shared/contracts/corrections";
+import { fluidForEnergy } from "@shared/domain/fluids/loop-fluid";
 import type { Interval } from "@shared/domain/time/interval";
 import type { Scope } from "@server/database/scoped";
 import { Correction } from "@server/models/correction";
+import { currentBores } from "@server/queries/current-bores";
 import type { EnergyPoint } from "@server/queries/energy/energy-point";
+import type { PointBackground } from "@server/queries/evidence/point-background";
 import {
-  loadInstallationsOf,
+  loadInstallationsOfPoints,
   type PointInstallations,
   type StandingInstallation,
 } from "@server/queries/evidence/point-evidence";
@@ -20,18 +23,56 @@ export interface FigureEvidence extends PointInstallations {
   readonly offsets: readonly ProbeOffset[];
 }
 
+/** A point with what its background is made from, all loaded. */
+export interface EvidencePoint extends Pick<PointBackground, "point" | "loop" | "site"> {
+  readonly nominalStepMs: number | null;
+}
+
 /** The evidence of one point over a range. */
 export async function loadFigureEvidence(
   scope: Scope,
-  { point, site, readings }: Pick<EnergyPoint, "point" | "site" | "readings">,
+  { point, loop, site, readings }: Pick<EnergyPoint, "point" | "loop" | "site" | "readings">,
   range: Interval,
 ): Promise<FigureEvidence> {
-  const [installations, offsets] = await Promise.all([
-    loadInstallationsOf(scope, point.id, range),
+  const asked = { point, loop, site, nominalStepMs: readings.nominalStepMs };
+  const found = (await loadFigureEvidences(scope, [asked], range)).get(point.id);
+  if (!found) throw new Error(`no evidence was made for point ${point.id}`);
+  return found;
+}
+
+/** The same for several points, by point: six queries, however many. */
+export async function loadFigureEvidences(
+  scope: Scope,
+  points: readonly EvidencePoint[],
+  range: Interval,
+): Promise<Map<string, FigureEvidence>> {
+  const [bores, offsets] = await Promise.all([
+    currentBores(
+      scope,
+      points.map(({ point }) => point.id),
+    ),
     appliedOffsets(scope),
   ]);
-  const intervalS = readings.nominalStepMs === null ? null : readings.nominalStepMs / 1000;
-  return { ...installations, zone: site.zone, intervalS, offsets };
+  const backgrounds = points.map(({ point, loop, site }): PointBackground => ({
+    point,
+    loop,
+    site,
+    fluid: fluidForEnergy(loop.fluid, loop.gaugePressureMPa),
+    pipe: bores.get(point.id) ?? null,
+  }));
+  const installations = await loadInstallationsOfPoints(scope, backgrounds, range);
+  return new Map(
+    points.map(({ point, site, nominalStepMs }, at) => [
+      point.id,
+      {
+        background: backgrounds[at] as PointBackground,
+        installations: installations.get(point.id) ?? [],
+        zone: site.zone,
+        intervalS: nominalStepMs === null ? null : nominalStepMs / 1000,
+        offsets,
+      },
+    ]),
+  );
 }
 
 async function appliedOffsets(scope: Scope): Promise<ProbeOffset[]> {

@@ -9,7 +9,7 @@ import {
 } from "@shared/domain/uncertainty/combine-installations";
 import { combinePeriod } from "@shared/domain/uncertainty/combine-period";
 import type { UncertainFigure } from "@shared/domain/uncertainty/figures";
-import type { PlusMinus } from "@shared/contracts/workings";
+import type { PlusMinus } from "@shared/contracts/plus-minus";
 import { budgetOf, type StandingInstallation } from "@server/queries/evidence/point-evidence";
 import type { EnergyRow } from "@server/queries/energy/energy-rows";
 import type { RegisterName } from "@server/queries/energy/loads";

@@ -1,4 +1,3 @@
-import { fluid } from "@shared/contracts/places";
 import type { Workings, WorkingsFigure } from "@shared/contracts/workings";
 import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import type { Database } from "@server/database/connect";
@@ -152,7 +151,7 @@ export async function workingsOf(
       pointVersion: result?.point.version ?? null,
       absoluteMPa: settings.pressure.pressureMPa,
       pressureAssumed: settings.pressure.assumed,
-      fluid: fluid.parse(basis.fluid),
+      fluid: basis.fluid,
       meansOnly: readings.meansOnly,
       recalculating: readings.recalculating,
     },
