@@ -32,6 +32,13 @@ export function flowAxis(extent: readonly [number, number] | null): ValueAxis {
   return axis(Math.floor(least / step) * step, Math.ceil(greatest / step) * step, step);
 }
 
+/** Round ticks from zero to `greatest`, in about `count` steps. */
+export function zeroAxis(greatest: number, count = 4): ValueAxis {
+  const most = greatest > 0 ? greatest : 1;
+  const step = tickStep(0, most, count);
+  return axis(0, Math.ceil(most / step) * step, step);
+}
+
 function axis(low: number, high: number, step: number): ValueAxis {
   const decimals = Math.max(0, -Math.floor(Math.log10(step) + 1e-9));
   const count = Math.max(1, Math.round((high - low) / step));

@@ -4,6 +4,7 @@ import enWorkings from "@shared/words/en/workings.json";
 import deCharts from "./locales/de/charts.json";
 import deEnergy from "./locales/de/energy.json";
 import deImports from "./locales/de/imports.json";
+import deLoad from "./locales/de/load.json";
 import deLoops from "./locales/de/loops.json";
 import dePeople from "./locales/de/people.json";
 import dePlaces from "./locales/de/places.json";
@@ -14,6 +15,7 @@ import deUi from "./locales/de/ui.json";
 import enCharts from "./locales/en/charts.json";
 import enEnergy from "./locales/en/energy.json";
 import enImports from "./locales/en/imports.json";
+import enLoad from "./locales/en/load.json";
 import enLoops from "./locales/en/loops.json";
 import enPeople from "./locales/en/people.json";
 import enPlaces from "./locales/en/places.json";
@@ -30,6 +32,7 @@ export const words = {
   charts: { en: enCharts, de: deCharts },
   energy: { en: enEnergy, de: deEnergy },
   imports: { en: enImports, de: deImports },
+  load: { en: enLoad, de: deLoad },
   loops: { en: enLoops, de: deLoops },
   people: { en: enPeople, de: dePeople },
   places: { en: enPlaces, de: dePlaces },

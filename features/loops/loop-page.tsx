@@ -23,6 +23,7 @@ import { ChartCard, type TableStep } from "./chart-card";
 import { DayList } from "./day-list";
 import { DownloadsMenu } from "./downloads-menu";
 import { Headline } from "./headline";
+import { LoadView, type LoadParams } from "./load-view";
 import type { LoopFigures, LoopView } from "./loop-context";
 import { LoopInspector } from "./loop-inspector";
 import { loopsPaths } from "./loops-paths";
@@ -32,6 +33,7 @@ import { RangeBar, rangeWords } from "./range-bar";
 import { tagService } from "./register-words";
 import { askedRange, defaultRange, rangeParams, weekOf, type ShownRange } from "./shown-range";
 import { SupportingFigures } from "./supporting-figures";
+import { ViewTabs } from "./view-tabs";
 import { WorkedOutSheet } from "./worked-out-sheet";
 
 interface LoopPageProps {
@@ -41,7 +43,8 @@ interface LoopPageProps {
   site: Site;
 }
 
-type Params = Partial<Record<"week" | "from" | "to" | "point" | "show" | "rows", string>>;
+type Params = Partial<Record<"week" | "from" | "to" | "point" | "show" | "rows" | "view", string>> &
+  LoadParams;
 
 /** A point's page: everything that is picked on it stands in the address. */
 export function LoopPage(props: LoopPageProps) {
@@ -191,6 +194,7 @@ function Figures(props: LoopFigures & { stale: boolean; params: Params }) {
         }
       />
     );
+  const load = params.view === "load";
   const headline = <Headline {...props} onWorkings={openWorkings} />;
   const supporting = <SupportingFigures {...props} onWorkings={openWorkings} />;
   const chart = (
@@ -204,7 +208,13 @@ function Figures(props: LoopFigures & { stale: boolean; params: Params }) {
   );
   return (
     <View aria-busy={props.stale} style={{ gap: phone ? 12 : 20, opacity: props.stale ? 0.6 : 1 }}>
-      {phone ? (
+      <ViewTabs
+        current={load ? "load" : "energy"}
+        onChange={(view) => router.setParams({ view: view === "load" ? "load" : undefined })}
+      />
+      {load ? (
+        <LoadView {...props} blocked={summary.basis.blockedBy ? headline : null} />
+      ) : phone ? (
         <>
           {headline}
           <BusiestCard {...props} />

@@ -8,6 +8,9 @@ export const loopsPaths = {
   site: (siteId: string) => `/sites/${siteId}`,
   point: (siteId: string, loopId: string, pointId: string) =>
     `/sites/${siteId}/loops/${loopId}/points/${pointId}`,
+  editSite: (siteId: string) => `/sites/${siteId}/edit`,
+  editLoop: (siteId: string, loopId: string) => `/sites/${siteId}/loops/${loopId}/edit`,
+  pump: (siteId: string, loopId: string) => `/sites/${siteId}/loops/${loopId}/pump`,
   newPoint: (siteId: string, loopId: string) => `/sites/${siteId}/loops/${loopId}/points/new`,
   import: (importId: string) => `/logs/${importId}`,
   importLog: (pointId: string) => `/logs/new?point=${pointId}`,

@@ -9,6 +9,7 @@ import {
 } from "@shared/contracts/energy";
 import { listImports } from "@shared/contracts/imports";
 import { getLoop, getSite, listPoints } from "@shared/contracts/places";
+import { getPointShape } from "@shared/contracts/shape";
 import type { Interval } from "@shared/domain/time/interval";
 import { call } from "@features/api";
 
@@ -23,6 +24,9 @@ const dates = ({ from, until }: ShownRange) => ({ from, to: until });
 
 /** Figures change with an import, which starts from elsewhere: a minute is fresh enough. */
 const fresh = { staleTime: 60_000 } as const;
+
+/** Lengths of a peak, minutes. */
+export type PeakWindow = "15" | "30" | "60";
 
 /** Every question the loop page asks; the only home of its keys. */
 export const loopsQueries = {
@@ -54,6 +58,17 @@ export const loopsQueries = {
       queryKey: ["loops", "summary", pointId, range.from, range.until],
       queryFn: ({ signal }) =>
         call(getPointSummary, { params: { pointId }, query: dates(range), signal }),
+    }),
+  shape: (
+    pointId: string,
+    range: ShownRange,
+    asked: { readonly windowMinutes: PeakWindow; readonly hours: "all" | "unoccupied" },
+  ) =>
+    queryOptions({
+      ...fresh,
+      queryKey: ["loops", "shape", pointId, range.from, range.until, asked],
+      queryFn: ({ signal }) =>
+        call(getPointShape, { params: { pointId }, query: { ...dates(range), ...asked }, signal }),
     }),
   energy: (pointId: string, range: ShownRange, step: "day" | "hour") =>
     queryOptions({

@@ -12,6 +12,7 @@ import {
   listPoints,
   listSites,
 } from "@shared/contracts/places";
+import { getLoopPump } from "@shared/contracts/shape";
 
 const withArchived = (archived: boolean) => (archived ? ({ archived: "true" } as const) : {});
 
@@ -57,6 +58,11 @@ export const placesQueries = {
     queryOptions({
       queryKey: ["places", "loop", loopId],
       queryFn: ({ signal }) => call(getLoop, { params: { loopId }, signal }),
+    }),
+  pump: (loopId: string) =>
+    queryOptions({
+      queryKey: ["places", "pump", loopId],
+      queryFn: ({ signal }) => call(getLoopPump, { params: { loopId }, signal }),
     }),
   points: (loopId: string, archived = false) =>
     queryOptions({

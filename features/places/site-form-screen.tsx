@@ -9,7 +9,7 @@ import { Button, DeniedState, DraftNotice, Screen, useDraft, useToast } from "@f
 import { PlaceActions } from "./place-actions";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
-import { SiteForm, siteFields, siteValues, type SiteProblems } from "./site-form";
+import { occupiedHoursOf, SiteForm, siteFields, siteValues, type SiteProblems } from "./site-form";
 import { useSave } from "./use-save";
 
 export function NewSiteScreen() {
@@ -34,6 +34,7 @@ export function EditSiteScreen() {
 
 function SiteEditor({ site, title }: { site: Site | null; title: string }) {
   const t = useWords("places");
+  const load = useWords("load");
   const router = useRouter();
   const toast = useToast();
   const deviceZone = Intl.DateTimeFormat().resolvedOptions().timeZone;
@@ -41,7 +42,9 @@ function SiteEditor({ site, title }: { site: Site | null; title: string }) {
   const [problems, setProblems] = useState<SiteProblems>({});
   const { values } = draft;
   const saving = useSave(async () => {
+    const occupiedHours = occupiedHoursOf(values, site, deviceZone);
     const body = {
+      ...(occupiedHours ? { occupiedHours } : {}),
       name: values.name.trim(),
       zone: values.zone ?? "",
       currency: values.currency ?? "",
@@ -58,6 +61,8 @@ function SiteEditor({ site, title }: { site: Site | null; title: string }) {
       ...(values.name.trim() === "" ? { name: t("site.nameNeeded") } : {}),
       ...(values.zone === null ? { zone: t("site.zoneNeeded") } : {}),
       ...(values.currency === null ? { currency: t("site.currencyNeeded") } : {}),
+      ...(values.occupiedFrom >= values.occupiedTo ? { occupiedTo: load("occupied.order") } : {}),
+      ...(values.weekdays.length === 0 ? { occupiedTo: load("occupied.dayNeeded") } : {}),
     };
     setProblems(found);
     if (Object.keys(found).length > 0) return;
@@ -101,6 +106,7 @@ function SiteEditor({ site, title }: { site: Site | null; title: string }) {
           onSubmit={submit}
           problems={problems}
           errors={saving.errors}
+          hoursAssumed={site?.occupiedHours.assumed ?? true}
           storedZone={site === null || site.can.remove ? null : site.zone}
         />
         {site ? (

@@ -1,12 +1,14 @@
 import { useMemo } from "react";
+import { ASSUMED_OCCUPIED_HOURS, clockOfMinute } from "@shared/domain/analysis/occupied-hours";
 import type { Site } from "@shared/contracts/places";
 import { useFormat, useWords } from "@features/i18n";
 import { ChoiceTiles, Form, TextField } from "@features/ui";
+import { OccupiedFields, type OccupiedValues } from "./occupied-fields";
 import { knownCurrencies, knownZones } from "./known-zones";
 import { SearchPicker } from "./search-picker";
 import type { SaveErrors } from "./use-save";
 
-export interface SiteValues {
+export interface SiteValues extends OccupiedValues {
   readonly name: string;
   readonly address: string;
   readonly zone: string | null;
@@ -14,7 +16,15 @@ export interface SiteValues {
   readonly unitSystem: "si" | "inchPound" | null;
 }
 
-export const siteFields = ["name", "address", "zone", "currency", "unitSystem"] as const;
+export const siteFields = [
+  "name",
+  "address",
+  "zone",
+  "currency",
+  "unitSystem",
+  "occupiedHours",
+  "occupiedHours/end",
+] as const;
 
 export function siteValues(site: Site | null, deviceZone: string): SiteValues {
   return {
@@ -23,7 +33,23 @@ export function siteValues(site: Site | null, deviceZone: string): SiteValues {
     zone: site?.zone ?? deviceZone,
     currency: site?.currency ?? null,
     unitSystem: site?.unitSystem ?? "si",
+    weekdays: site?.occupiedHours.weekdays ?? ASSUMED_OCCUPIED_HOURS.weekdays,
+    occupiedFrom: site?.occupiedHours.start ?? clockOfMinute(ASSUMED_OCCUPIED_HOURS.startMinute),
+    occupiedTo: site?.occupiedHours.end ?? clockOfMinute(ASSUMED_OCCUPIED_HOURS.endMinute),
   };
+}
+
+/**
+ * The hours to send; undefined leaves them as they are, so that hours nobody touched stay assumed.
+ */
+export function occupiedHoursOf(values: SiteValues, site: Site | null, deviceZone: string) {
+  const before = siteValues(site, deviceZone);
+  const { occupiedFrom: start, occupiedTo: end } = values;
+  const same =
+    start === before.occupiedFrom &&
+    end === before.occupiedTo &&
+    values.weekdays.join() === before.weekdays.join();
+  return same ? undefined : { weekdays: [...values.weekdays], start, end };
 }
 
 export type SiteProblems = Partial<Record<keyof SiteValues, string>>;
@@ -38,6 +64,8 @@ export function SiteForm(props: {
   errors: SaveErrors;
   /** The zone stored now, where the site exists and has readings to rebuild. */
   storedZone: string | null;
+  /** Nobody has set the occupied hours yet. */
+  hoursAssumed: boolean;
 }) {
   const t = useWords("places");
   const { language } = useFormat();
@@ -93,6 +121,17 @@ export function SiteForm(props: {
         ]}
         onChange={(unitSystem) => onChange({ unitSystem })}
         error={error("unitSystem")}
+      />
+      <OccupiedFields
+        values={values}
+        onChange={onChange}
+        assumed={props.hoursAssumed}
+        error={
+          errors.field("occupiedHours") ??
+          errors.field("occupiedHours/end") ??
+          problems.occupiedTo ??
+          null
+        }
       />
     </Form>
   );

@@ -1,13 +1,14 @@
-import type { FluidAtPressure } from "../fluids/fluid-at-pressure";
+import { heatCoefficient } from "../energy/heat-coefficient";
 import type { MeterSide } from "../energy/power";
+import type { FluidAtPressure } from "../fluids/fluid-at-pressure";
 import { stepPowerKw, type LoadSteps } from "./load-steps";
 import { pumpPowerKw, type PumpCurve } from "./pump-power";
 
 /**
  * Water that was moved beyond what the load needed at the design temperature difference.
  *
- * For each step q_ideal = max(3600·P ÷ (k·Δθ_d), q_min), never above q, in m³/h, with the heat
- * coefficient k = ρ_m·(h₁ − h₂) ÷ Δθ of EN 1434-1 taken at the measured supply and the *design*
+ * For each step q_ideal = max(P ÷ (k·Δθ_d), q_min), never above q, in m³/h, with the heat
+ * coefficient k of EN 1434-1 in kWh/(m³·K) taken at the measured supply and the *design*
  * return (supply + Δθ_d for cooling, − Δθ_d for heating), not at the return that was measured. Excess
  * is V ÷ V_ideal − 1.
  *
@@ -19,7 +20,7 @@ import { pumpPowerKw, type PumpCurve } from "./pump-power";
  * needs 14.312 m³/h at 1.6 MPa; at 20 m³/h the excess is 39.7 %.
  */
 export interface ExcessFlowOptions {
-  readonly fluid: Pick<FluidAtPressure, "lowestC" | "highestC" | "density" | "enthalpy">;
+  readonly fluid: FluidAtPressure;
   readonly register: "heating" | "cooling";
   readonly meterSide: MeterSide;
   /** Above 0. */
@@ -54,11 +55,8 @@ export function flowAtDesignM3PerHour(
   { fluid, register, meterSide, designDeltaTK }: Omit<ExcessFlowOptions, "pump">,
 ): number | null {
   const returnC = register === "cooling" ? supplyC + designDeltaTK : supplyC - designDeltaTK;
-  const within = (c: number) => c >= fluid.lowestC && c <= fluid.highestC;
-  if (!within(supplyC) || !within(returnC)) return null;
-  const density = fluid.density(meterSide === "supply" ? supplyC : returnC);
-  const heat = Math.abs(fluid.enthalpy(supplyC) - fluid.enthalpy(returnC));
-  return (3600 * powerKw) / (density * heat);
+  const k = heatCoefficient(fluid, meterSide, supplyC, returnC);
+  return k && powerKw / (k.kwhPerM3K * designDeltaTK);
 }
 
 /** Sums over the steps with readings; null where there is none. */

@@ -1,0 +1,1 @@
+export { PumpFormScreen as default } from "@features/places/pump-form-screen";

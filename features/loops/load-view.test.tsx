@@ -1,0 +1,235 @@
+import { fireEvent, screen, waitFor, within } from "@testing-library/react";
+
+import type { PointShape } from "@shared/contracts/shape";
+import { makeFormat } from "@shared/formats/format";
+import {
+  loopOf,
+  openWith,
+  pointOf,
+  serverAnswers,
+  serverIsSilent,
+  serverRefuses,
+  show,
+  siteOf,
+} from "@features/places/test-kit";
+
+import { LoadView } from "./load-view";
+import { daysOf } from "./shown-range";
+
+// jsdom has no layout; a chart waits for its width.
+jest.mock("@features/ui/theme/use-measured-width", () => ({
+  useMeasuredWidth: () => [806, () => undefined],
+}));
+
+const peak = {
+  from: "2025-06-09T13:00:00.000Z",
+  to: "2025-06-09T14:00:00.000Z",
+  powerKw: 490.9348,
+  loadFactor: 0.434973,
+  fullLoadHours: 73.07546,
+};
+
+function shapeOf(more: Partial<PointShape> = {}): PointShape {
+  return {
+    zone: "Europe/London",
+    from: "2025-06-08T23:00:00.000Z",
+    to: "2025-06-15T23:00:00.000Z",
+    basis: {
+      engineVersion: 1,
+      pressure: { absoluteMPa: 1.6, assumed: true },
+      meterSide: "return",
+      fluid: { kind: "water" },
+      liquidC: { lowest: 0, highest: 150 },
+      blockedBy: null,
+      meansOnly: false,
+      rowsAgainstRegister: 0,
+      recalculating: false,
+    },
+    register: "cooling",
+    stepMinutes: 60,
+    windowMinutes: 60,
+    coveredS: 604_800,
+    expectedS: 604_800,
+    energyKwh: 35_875.29,
+    volumeM3: 8198.31,
+    meanKw: 213.5434,
+    peaks: { fixed: peak, rolling: peak },
+    design: null,
+    curve: [
+      { hours: 0, powerKw: 490.9348 },
+      { hours: 84, powerKw: 180 },
+      { hours: 168, powerKw: 60 },
+    ],
+    deltaT: {
+      flowWeightedK: 3.756808,
+      energyWeightedK: 3.813261,
+      timeMeanK: 3.499583,
+      fromEnergyK: 3.7566,
+    },
+    specificFlow: { m3PerKwh: 0.2285, litresPerSecondPerKw: 0.06347847, gpmPerTon: 3.538497 },
+    occupiedHours: { weekdays: [1, 2, 3, 4, 5], start: "07:00", end: "19:00", assumed: true },
+    baseLoad: { powerKw: 71.87869, percentile: 5, hours: "all", steps: 168 },
+    offHours: { energyShare: 0.2923193, energyKwh: 10_487, dayOffRatio: 0.41 },
+    pumpWithoutDeltaT: {
+      limitK: 1,
+      seconds: 7200,
+      runs: [{ from: "2025-06-10T01:00:00.000Z", to: "2025-06-10T03:00:00.000Z" }],
+      runCount: 1,
+    },
+    lowDeltaT: null,
+    excess: null,
+    pumping: null,
+    ...more,
+  };
+}
+
+const call = (asked = "windowMinutes=60&hours=all") =>
+  `GET /points/9/shape?from=2025-06-09&to=2025-06-16&${asked}`;
+
+function view(loop = loopOf({ tag: "CHW-1B" }), params = {}, blocked: React.ReactNode = null) {
+  return (
+    <LoadView
+      site={siteOf()}
+      loop={loop}
+      point={pointOf()}
+      points={[pointOf()]}
+      range={daysOf("2025-06-09", "2025-06-15")}
+      rangeName="week 24"
+      format={makeFormat("en", "si", "Europe/London")}
+      params={params}
+      blocked={blocked}
+    />
+  );
+}
+
+beforeEach(() => openWith({ loopId: "7", view: "load" }));
+
+it("names each peak by its definition and its instant, with the load factor it stands beside", async () => {
+  serverAnswers(call(), shapeOf());
+  show(view());
+  expect(await screen.findByText(/^Blocks on the clock: 490\.9 kilowatts$/)).toBeInTheDocument();
+  expect(screen.getByText(/^Any 60 min: 490\.9 kilowatts$/)).toBeInTheDocument();
+  expect(screen.getAllByText("Mon 9 Jun, 14:00 to 15:00")).toHaveLength(2);
+  expect(screen.getAllByText("Load factor 0.435")).toHaveLength(2);
+  expect(screen.queryByText(/^Design/)).toBeNull();
+});
+
+it("says which mean gives the energy back", async () => {
+  serverAnswers(call(), shapeOf());
+  show(view());
+  const means = await screen.findByRole("list", { name: "ΔT, three means" });
+  expect(within(means).getAllByRole("listitem")).toHaveLength(3);
+  expect(within(means).getByText(/^Weighted by flow: 3\.76 kelvin$/)).toBeInTheDocument();
+  expect(screen.getByText(/^Energy over volume gives 3\.76\sK, which is the mean/)).toBeVisible();
+});
+
+it("names the hours of the base load and says they are assumed", async () => {
+  serverAnswers(call(), shapeOf());
+  show(view());
+  expect(await screen.findByText("5 % of all covered time was below this")).toBeVisible();
+  expect(screen.getByText(/Mon to Fri, 07:00 to 19:00.*Assumed: nobody has set/)).toBeVisible();
+  expect(screen.getByRole("link", { name: "Set the hours" })).toHaveAttribute(
+    "href",
+    "/sites/1/edit",
+  );
+  expect(screen.getByText("Tue 10 Jun, 02:00 to 04:00")).toBeVisible();
+});
+
+it("asks for what it lacks instead of showing a zero", async () => {
+  serverAnswers(call(), shapeOf());
+  const { unmount } = show(view());
+  expect(await screen.findByText(/^Give the loop a design ΔT/)).toBeVisible();
+  unmount();
+  const excess = {
+    designDeltaTK: 6,
+    minimumFlowM3PerHour: null,
+    volumeM3: 8198.31,
+    idealVolumeM3: 5795.446,
+    excessShare: 0.4146124,
+    leftOutS: 0,
+  };
+  serverAnswers(call(), shapeOf({ excess }));
+  show(view(loopOf({ designDeltaTK: 6 })));
+  expect(await screen.findByText("Excess flow: 41.5 percent")).toBeInTheDocument();
+  expect(screen.getByText(/^No least flow is given/)).toBeVisible();
+  expect(screen.getByRole("link", { name: "Add the pump" })).toHaveAttribute(
+    "href",
+    "/sites/1/loops/7/pump",
+  );
+});
+
+it("gives the cost with what it stands on, and offers no form to who may not edit", async () => {
+  const excess = {
+    designDeltaTK: 6,
+    minimumFlowM3PerHour: 20,
+    volumeM3: 8198.31,
+    idealVolumeM3: 5795.446,
+    excessShare: 0.4146124,
+    leftOutS: 0,
+  };
+  const pumping = {
+    energyKwh: 548.1324,
+    idealEnergyKwh: 292.4693,
+    excessKwh: 255.6632,
+    kwhPerMwh: 15.27883,
+    cubeLawHolds: false,
+    pricePerKwh: "0.187",
+    currency: "GBP",
+    excessCost: 47.80901,
+  };
+  serverAnswers(call(), shapeOf({ excess, pumping }));
+  const can = { ...loopOf().can, edit: false };
+  show(view(loopOf({ designDeltaTK: 6, can })));
+  expect(await screen.findByText("Its cost: 47.81 GBP")).toBeInTheDocument();
+  expect(screen.getByText(/^At 0\.187\sGBP a kWh$/)).toBeVisible();
+  expect(screen.getByText(/^Advice, not a bill/)).toBeVisible();
+  expect(screen.getByText(/cube law is not used/)).toBeVisible();
+  expect(screen.queryByRole("link", { name: "Change the pump" })).toBeNull();
+});
+
+it("walks along the curve by keys, and shows the same points as a table", async () => {
+  serverAnswers(call(), shapeOf());
+  const { unmount } = show(view());
+  const chart = await screen.findByRole("group", { name: "Duration curve, CHW-1B" });
+  expect(
+    screen.getByRole("img", { name: /from 490\.9\skW down to 60\.0\skW, at or above 180\.0/ }),
+  ).toBeInTheDocument();
+  fireEvent.keyDown(chart, { key: "Home" });
+  expect(await screen.findByText(/^490\.9\skW or more for 0\sh/)).toBeInTheDocument();
+  fireEvent.keyDown(chart, { key: "ArrowRight" });
+  expect(await screen.findByText(/^180\.0\skW or more for 84\sh \(50\s%\)$/)).toBeInTheDocument();
+  fireEvent.keyDown(chart, { key: "Escape" });
+  await waitFor(() => expect(screen.queryByText(/or more for 84/)).toBeNull());
+  unmount();
+  show(view(undefined, { curve: "table" }));
+  const table = await screen.findByRole("table", { name: "Duration curve, week 24" });
+  expect(within(table).getAllByRole("row")).toHaveLength(4);
+});
+
+it("says why an hourly log has no quarter-hour peak", async () => {
+  const none = { fixed: null, rolling: null };
+  serverAnswers(call("windowMinutes=15&hours=all"), shapeOf({ windowMinutes: 15, peaks: none }));
+  show(view(undefined, { window: "15" }));
+  expect(await screen.findByText(/^The log writes every 1\sh, so it has no peak/)).toBeVisible();
+});
+
+it("shows days without readings, a silent server and a refusal as what they are", async () => {
+  serverAnswers(call(), shapeOf({ coveredS: 0 }));
+  const empty = show(view());
+  expect(await screen.findByText("No readings in these dates")).toBeVisible();
+  empty.unmount();
+  serverIsSilent(call());
+  const silent = show(view());
+  expect(await screen.findByRole("button", { name: "Try now" })).toBeVisible();
+  silent.unmount();
+  serverRefuses(call(), 403, "denied");
+  show(view());
+  expect(await screen.findByText("You cannot see this")).toBeVisible();
+});
+
+it("stands aside for the reason where readings give no energy", async () => {
+  serverAnswers(call(), shapeOf({ coveredS: 0 }));
+  show(view(undefined, {}, <p>no energy here</p>));
+  expect(await screen.findByText("no energy here")).toBeVisible();
+  expect(screen.queryByText("No readings in these dates")).toBeNull();
+});
