@@ -48,6 +48,7 @@ export class ColumnEvidence {
   private readonly ifDecimal = new Extremes();
   private readonly ifThousands = new Extremes();
   private readonly number = new NumberCell();
+  private usual = NaN;
 
   add(row: RowTokeniser, index: number): void {
     const from = row.starts[index] as number;
@@ -84,29 +85,49 @@ export class ColumnEvidence {
     else if (kind === MarkKind.provesComma) this.commaProof ??= place(row, index);
   }
 
-  /** The usual cell, a bare decimal in the mark already proved, in one pass; false for any other. */
+  /** The usual cell, in one pass; false for any other. */
   private addUsual(bytes: Uint8Array, from: number, to: number): boolean {
-    const mark = this.pointProof !== null ? POINT : this.commaProof !== null ? COMMA : -1;
+    if (this.readUsual(bytes, from) !== to) return false;
+    this.takeUsual();
+    return true;
+  }
+
+  /** The mark already proved, as a byte; -1 before. */
+  get provedMark(): number {
+    return this.pointProof !== null ? POINT : this.commaProof !== null ? COMMA : -1;
+  }
+
+  /**
+   * Reads the usual cell, a bare decimal in the mark already proved, and keeps its value for
+   * {@link takeUsual}. Returns where the number ends, or -1 where there is no usual one.
+   */
+  readUsual(bytes: Uint8Array, from: number): number {
+    const mark = this.provedMark;
     let at = from;
-    const negative = at < to && bytes[at] === MINUS;
+    const negative = bytes[at] === MINUS;
     if (negative) at++;
     const start = at;
     let mantissa = 0;
     let markAt = -1;
-    for (; at < to; at++) {
+    for (; ; at++) {
       const byte = bytes[at] as number;
       const digit = byte - 48;
       if (digit >= 0 && digit <= 9) mantissa = mantissa * 10 + digit;
       else if (byte === mark && markAt < 0) markAt = at;
-      else return false;
+      else break;
     }
     const digits = at - start - (markAt < 0 ? 0 : 1);
-    if (digits === 0 || digits > MAX_EXACT_DIGITS) return false;
-    const value = markAt < 0 ? mantissa : mantissa / (POWERS_OF_TEN[to - markAt - 1] as number);
-    if (negative && -value <= LOWEST_USUAL) return false;
+    if (digits === 0 || digits > MAX_EXACT_DIGITS) return -1;
+    const value = markAt < 0 ? mantissa : mantissa / (POWERS_OF_TEN[at - markAt - 1] as number);
+    if (negative && -value <= LOWEST_USUAL) return -1;
+    this.usual = negative ? -value : value;
+    return at;
+  }
+
+  /** Counts the number that {@link readUsual} has just read. */
+  takeUsual(): void {
     this.numbers++;
-    this.sure.add(negative ? -value : value);
-    return true;
+    this.sure.add(this.usual);
   }
 
   private addOther(row: RowTokeniser, index: number, from: number, to: number): void {

@@ -1,6 +1,7 @@
 import { CalendarCell } from "./calendar-cell";
 import { ColumnEvidence } from "./column-evidence";
 import { CellStatus, NumberCell } from "./number-cell";
+import { PlainScan, type PlainScanRows } from "./plain-scan";
 import type { HeadRecognition } from "./recognise-head";
 import type { SampleRow } from "./recognition";
 import { MAX_CELLS, RowTokeniser } from "./row-tokeniser";
@@ -47,8 +48,9 @@ export function createFileScan(head: HeadRecognition): FileScan {
   return new Scan(head);
 }
 
-class Scan implements FileScan {
+class Scan implements FileScan, PlainScanRows {
   rowsRead = 0;
+  private readonly plain: PlainScan;
   private readonly tokeniser: RowTokeniser;
   private readonly stream;
   private readonly columns: readonly ColumnEvidence[];
@@ -76,8 +78,11 @@ class Scan implements FileScan {
     // Quotes may first appear far below the head, so they are always looked for.
     const quote = head.dialect.quote ?? '"';
     this.quote = quote.charCodeAt(0);
-    this.tokeniser = new RowTokeniser({ separator: head.dialect.separator, quote }, (row) =>
-      this.readRow(row),
+    this.plain = new PlainScan(head, this.columns, this.time, this);
+    this.tokeniser = new RowTokeniser(
+      { separator: head.dialect.separator, quote },
+      (row) => this.readRow(row),
+      this.plain,
     );
     this.stream = createUtf8Stream(head.dialect.encoding);
     this.watchUtf8 = head.dialect.encoding === "utf-8" && head.encoding.certainty === "likely";
@@ -133,6 +138,19 @@ class Scan implements FileScan {
     if ((this.rowsRead - 1) % this.sampleEvery === 0) this.keepSample(row);
   }
 
+  /** The first row, and each that becomes a sample. */
+  get isNextWanted(): boolean {
+    return this.rowsRead % this.sampleEvery === 0;
+  }
+
+  takeRow(bytes: Uint8Array, timeFrom: number, timeTo: number): void {
+    this.footer = 0;
+    this.rowsRead++;
+    this.lastTimeFrom = timeFrom;
+    this.lastTimeTo = timeTo;
+    this.lastBuffer = bytes;
+  }
+
   private startsQuoted(row: RowTokeniser, index: number): boolean {
     const start = row.starts[index] as number;
     return start > 0 && row.buffer[start - 1] === this.quote;
@@ -151,7 +169,9 @@ class Scan implements FileScan {
       if (!this.hasQuotes && this.startsQuoted(row, times.index)) this.hasQuotes = true;
       if (!this.date.parse(row.buffer, from, row.ends[times.index] as number) || !this.date.hasDate)
         return false;
-      return this.addTime(row, this.date, this.date, times.index);
+      if (!this.addTime(row, this.date, this.date, times.index)) return false;
+      this.plain.learn(row.buffer, from, this.date.datePrefixLength);
+      return true;
     }
     if (times.kind === "split") {
       const { dateIndex, timeIndex } = times;

@@ -208,7 +208,7 @@ export class PlainRows implements RowsAhead {
 }
 
 /** Two digits at a place as a number, negative where there are none; looks no further than the first other byte. */
-function twoDigits(bytes: Uint8Array, at: number): number {
+export function twoDigits(bytes: Uint8Array, at: number): number {
   const tens = (bytes[at] as number) - 48;
   if (tens < 0 || tens > 9) return -1;
   const ones = (bytes[at + 1] as number) - 48;

@@ -81,9 +81,7 @@ export class TimeEvidence {
     if (date.offsetMinutes !== null || time.offsetMinutes !== null) this.withOffset++;
     this.watchHours(time, sameDate ? before : null, row, column);
     if (sameDate) {
-      const step = time.timeOfDayMs - before.timeOfDayMs;
-      if (this.plainSteps.length < MAX_STEPS && step > 0) this.plainSteps.push(step);
-      before.timeOfDayMs = time.timeOfDayMs;
+      this.addPlainStep(before, time.timeOfDayMs);
       return true;
     }
     const day = {
@@ -100,6 +98,26 @@ export class TimeEvidence {
       day,
     };
     return true;
+  }
+
+  /**
+   * {@link add} for a row with the date of the row before and a plain time without AM, PM or offset.
+   * False, and nothing is counted, where the row shows more than its time: then it needs `add`.
+   */
+  addSameDate(timeOfDayMs: number, hour: number): boolean {
+    const before = this.previous;
+    if (before === null || isHalfDayWrap(before.timeOfDayMs, timeOfDayMs)) return false;
+    this.rows++;
+    if (hour > this.maxHour) this.maxHour = hour;
+    if (hour < this.minHour) this.minHour = hour;
+    this.addPlainStep(before, timeOfDayMs);
+    return true;
+  }
+
+  private addPlainStep(before: { timeOfDayMs: number }, timeOfDayMs: number): void {
+    const step = timeOfDayMs - before.timeOfDayMs;
+    if (this.plainSteps.length < MAX_STEPS && step > 0) this.plainSteps.push(step);
+    before.timeOfDayMs = timeOfDayMs;
   }
 
   private weigh(mask: number, row: RowTokeniser, column: number): void {
@@ -140,9 +158,7 @@ export class TimeEvidence {
     if (time.hasHalfDayMark) this.halfDayMarks++;
     this.maxHour = Math.max(this.maxHour, time.writtenHour);
     this.minHour = Math.min(this.minHour, time.writtenHour);
-    const isWrap =
-      before !== null && before.timeOfDayMs >= DAY_MS / 2 && time.timeOfDayMs < 2 * 3_600_000;
-    if (isWrap) {
+    if (before !== null && isHalfDayWrap(before.timeOfDayMs, time.timeOfDayMs)) {
       this.halfDayWraps++;
       this.wrapPlace ??= placeOf(row, column);
     }
@@ -198,6 +214,10 @@ export class TimeEvidence {
     const sorted = steps.map(Math.abs).sort((a, b) => a - b);
     return (sorted[sorted.length >> 1] as number) / 1000;
   }
+}
+
+function isHalfDayWrap(beforeMs: number, timeOfDayMs: number): boolean {
+  return beforeMs >= DAY_MS / 2 && timeOfDayMs < 2 * 3_600_000;
 }
 
 function placeOf(row: RowTokeniser, column: number): Place {
