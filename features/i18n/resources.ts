@@ -1,9 +1,14 @@
+import deEvidence from "@shared/words/de/evidence.json";
 import deWorkings from "@shared/words/de/workings.json";
+import enEvidence from "@shared/words/en/evidence.json";
 import enWorkings from "@shared/words/en/workings.json";
 
 import deCharts from "./locales/de/charts.json";
+import deCorrections from "./locales/de/corrections.json";
 import deEnergy from "./locales/de/energy.json";
 import deImports from "./locales/de/imports.json";
+import deInstallation from "./locales/de/installation.json";
+import deKit from "./locales/de/kit.json";
 import deLoad from "./locales/de/load.json";
 import deLoops from "./locales/de/loops.json";
 import dePeople from "./locales/de/people.json";
@@ -13,8 +18,11 @@ import deShell from "./locales/de/shell.json";
 import deToday from "./locales/de/today.json";
 import deUi from "./locales/de/ui.json";
 import enCharts from "./locales/en/charts.json";
+import enCorrections from "./locales/en/corrections.json";
 import enEnergy from "./locales/en/energy.json";
 import enImports from "./locales/en/imports.json";
+import enInstallation from "./locales/en/installation.json";
+import enKit from "./locales/en/kit.json";
 import enLoad from "./locales/en/load.json";
 import enLoops from "./locales/en/loops.json";
 import enPeople from "./locales/en/people.json";
@@ -30,8 +38,12 @@ import enUi from "./locales/en/ui.json";
  */
 export const words = {
   charts: { en: enCharts, de: deCharts },
+  corrections: { en: enCorrections, de: deCorrections },
   energy: { en: enEnergy, de: deEnergy },
+  evidence: { en: enEvidence, de: deEvidence },
   imports: { en: enImports, de: deImports },
+  installation: { en: enInstallation, de: deInstallation },
+  kit: { en: enKit, de: deKit },
   load: { en: enLoad, de: deLoad },
   loops: { en: enLoops, de: deLoops },
   people: { en: enPeople, de: dePeople },
