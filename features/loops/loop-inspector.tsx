@@ -4,6 +4,8 @@ import { View } from "react-native";
 import { useWords } from "@features/i18n";
 import { Button, Row, SelectField, Strong, Text, TextLink, useTheme } from "@features/ui";
 
+import { correctionsPaths } from "@features/corrections/corrections-paths";
+
 import { FluidSection } from "./fluid-section";
 import type { LoopFigures, LoopView } from "./loop-context";
 import { loopsPaths } from "./loops-paths";
@@ -29,6 +31,14 @@ export function LoopInspector(
         />
       ) : null}
       {summary ? <LeftOut {...props} summary={summary} /> : null}
+      <TextLink
+        label={t("inspector.corrections")}
+        href={correctionsPaths.corrections({
+          siteId: site.id,
+          loopId: loop.id,
+          pointId: point.id,
+        })}
+      />
       <Row gap={3} wrap>
         {point.can.import ? (
           <Button
