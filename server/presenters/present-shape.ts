@@ -27,8 +27,8 @@ export function presentShape(
   const { site } = energyPoint;
   const { totals, steps } = load;
   const { coveredS } = totals;
-  const covered = (value: number, decimals: number) =>
-    coveredS > 0 ? rounded(value, decimals) : null;
+  const covered = (value: number | null, decimals: number) =>
+    coveredS > 0 && value !== null ? rounded(value, decimals) : null;
   const peak = (found: PeakDemand | null) =>
     found && {
       from: at(found.startMs),

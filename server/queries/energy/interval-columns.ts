@@ -6,6 +6,7 @@ import {
 } from "@shared/domain/readings/chart-columns";
 import type { QualityRun } from "@shared/domain/readings/quality-runs";
 import type { Interval } from "@shared/domain/time/interval";
+import { ROUNDING_S } from "@shared/domain/energy/totals";
 import { selectMany } from "@server/database/bulk";
 import type { Database } from "@server/database/connect";
 
@@ -26,9 +27,12 @@ export async function intervalColumns(
   const [flow, supply, back] = [column(), column(), column()];
   const rows = await selectMany(
     database,
-    `SELECT (start_s - ?) DIV ? AS place, SUM(COALESCE(covered_s, ?)) AS covered,
+    // Time that only a meter's power speaks for holds no flow and no temperature.
+    `SELECT (start_s - ?) DIV ? AS place,
+            SUM(COALESCE(covered_s, ?) - COALESCE(meter_only_s, 0)) AS water,
             SUM(COALESCE(volume_m3, COALESCE(heating_m3, 0) + COALESCE(cooling_m3, 0))),
-            SUM(supply_c * COALESCE(covered_s, ?)), SUM(return_c * COALESCE(covered_s, ?)),
+            SUM(supply_c * (COALESCE(covered_s, ?) - COALESCE(meter_only_s, 0))),
+            SUM(return_c * (COALESCE(covered_s, ?) - COALESCE(meter_only_s, 0))),
             SUM(COALESCE(measured_rows, 0) + COALESCE(excluded_rows, 0) + COALESCE(no_reading_rows, 0))
        FROM interval_energy WHERE point_id = ? AND start_s >= ? AND start_s < ?
       GROUP BY place`,
@@ -42,13 +46,13 @@ export async function intervalColumns(
     ],
   );
   let total = 0;
-  for (const [place, covered, volume, supplyCs, returnCs, held] of rows) {
+  for (const [place, water, volume, supplyCs, returnCs, held] of rows) {
     total += Number(held);
-    const coveredS = Number(covered);
-    if (coveredS === 0) continue;
-    flow[Number(place)] = Number(volume) / (coveredS / 3600);
-    supply[Number(place)] = Number(supplyCs) / coveredS;
-    back[Number(place)] = Number(returnCs) / coveredS;
+    const waterS = Number(water);
+    if (waterS < ROUNDING_S) continue;
+    flow[Number(place)] = Number(volume) / (waterS / 3600);
+    supply[Number(place)] = Number(supplyCs) / waterS;
+    back[Number(place)] = Number(returnCs) / waterS;
   }
   return {
     startMs: columnStarts(frame),

@@ -9,7 +9,12 @@ import { loadStepMs, loadSteps, type LoadSteps } from "@shared/domain/analysis/l
 import { specificFlow } from "@shared/domain/analysis/specific-flow";
 import { peakDemand, type PeakDemand } from "@shared/domain/energy/demand";
 import { heatCoefficient } from "@shared/domain/energy/heat-coefficient";
-import { deltaTMeans, totalEnergy, type EnergyTotals } from "@shared/domain/energy/totals";
+import {
+  deltaTMeans,
+  totalEnergy,
+  waterSeconds,
+  type EnergyTotals,
+} from "@shared/domain/energy/totals";
 import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import { zoneOffsets } from "@shared/domain/time/zone-offsets";
 import type { Database } from "@server/database/connect";
@@ -97,7 +102,7 @@ export function loadShape(
     carrying && totals.meanSupplyC !== null
       ? flowAtDesignM3PerHour(1, totals.meanSupplyC, carrying)
       : null;
-  const means = deltaTMeans(totals[register]);
+  const means = deltaTMeans(totals[register], totals.meterOnlyS);
   const { meanSupplyC } = totals;
   const signedK = (register === "cooling" ? 1 : -1) * (means.flowWeightedK ?? NaN);
   // At the mean supply and the return that the flow-weighted difference gives.
@@ -107,7 +112,7 @@ export function loadShape(
       : null;
   return {
     energyKwh,
-    volumeM3,
+    volumeM3: waterSeconds(totals) > 0 ? volumeM3 : null,
     peaks: { fixed: peak("fixed"), rolling: peak("rolling") },
     designKw:
       flowOfOneKw === null || designFlowM3PerHour === null
@@ -116,7 +121,7 @@ export function loadShape(
     curve: thinnedCurve(durationCurve(steps)) as readonly DurationPoint[],
     means,
     fromEnergyK: k && volumeM3 > 0 ? energyKwh / (k.kwhPerM3K * volumeM3) : null,
-    specificFlow: specificFlow(volumeM3, energyKwh),
+    specificFlow: waterSeconds(totals) > 0 ? specificFlow(volumeM3, energyKwh) : null,
     baseLoad: baseLoad(steps, wishes.hours, occupied, toLocal),
     offHours: offHours(steps, occupied, toLocal),
     still: lowDeltaT(steps, STILL_DELTA_T_K, stillM3PerHour),
