@@ -1,5 +1,5 @@
-import { INTERVAL_MS } from "@shared/domain/energy/interval-energy";
-import { sumIntervals, totalEnergy, type EnergyTotals } from "@shared/domain/energy/totals";
+import { INTERVAL_MS, type IntervalEnergyColumns } from "@shared/domain/energy/interval-energy";
+import { totalEnergy, type EnergyTotals } from "@shared/domain/energy/totals";
 import type { Interval } from "@shared/domain/time/interval";
 import {
   localDaysBetween,
@@ -10,6 +10,7 @@ import type { Database } from "@server/database/connect";
 import { Invalid } from "@server/http/errors";
 import { loadDays } from "@server/readings/day-rows";
 import { loadIntervals } from "@server/readings/interval-rows";
+import { loadIntervalSums, type Steps } from "@server/readings/interval-sums";
 import { combineTotals } from "./combine-totals";
 import { requireQuarterHours, type EnergyRange } from "./energy-range";
 
@@ -47,12 +48,50 @@ export async function energyRows(
   }
   requireQuarterHours(range);
   const periods = periodsOf(range, zone, step);
-  const columns = await loadIntervals(database, pointId, range.startMs, range.endMs);
-  return sumIntervals(columns, periods).map(({ startMs, endMs, ...totals }) => ({
+  if (step === "quarterHour")
+    return rowsOf(await loadIntervals(database, pointId, range.startMs, range.endMs), periods);
+  const rows: EnergyRow[] = [];
+  const runs = equalSteps(periods);
+  for (let from = 0; from < runs.length; from += sideBySide) {
+    const asked = runs.slice(from, from + sideBySide);
+    const found = await Promise.all(
+      asked.map(({ steps }) => loadIntervalSums(database, pointId, steps)),
+    );
+    asked.forEach((run, i) => rows.push(...rowsOf(found[i] as IntervalEnergyColumns, run.periods)));
+  }
+  return rows;
+}
+
+function rowsOf(columns: IntervalEnergyColumns, periods: readonly Interval[]): EnergyRow[] {
+  return periods.map(({ startMs, endMs }) => ({
     startMs,
     endMs,
-    totals,
+    totals: totalEnergy(columns, { startMs, endMs }),
   }));
+}
+
+/** Queries of one answer at a time: others need connections too. */
+const sideBySide = 2;
+/** Half a year of hours, so that two cores of the database share a year. */
+const mostSteps = 4_400;
+
+/**
+ * Periods that follow each other, as runs of one length: a year of hours is one, but for a range
+ * that cuts an hour or a zone that moves its clocks by half of one.
+ */
+function equalSteps(periods: readonly Interval[]): { steps: Steps; periods: Interval[] }[] {
+  const runs: { steps: Steps; periods: Interval[] }[] = [];
+  let from = 0;
+  for (let to = 1; to <= periods.length; to++) {
+    const { startMs, endMs } = periods[from] as Interval;
+    const stepMs = endMs - startMs;
+    const next = periods[to];
+    if (next && next.endMs - next.startMs === stepMs && to - from < mostSteps) continue;
+    const count = to - from;
+    runs.push({ steps: { startMs, stepMs, count }, periods: periods.slice(from, to) });
+    from = to;
+  }
+  return runs;
 }
 
 /** The range as one. Whole local days come from the stored days, which is a thousand times less. */
