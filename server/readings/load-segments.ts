@@ -1,5 +1,6 @@
 import { QueryTypes, type Transaction } from "sequelize";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
+import { GAP_FACTOR, type GapRule } from "@shared/domain/readings/covered-steps";
 import {
   mapChannels,
   type ReadingColumns,
@@ -31,6 +32,8 @@ interface FileOfPoint {
   readonly nominalStepMs: number | null;
   /** Only for a file of a permanent meter. */
   readonly meter: MeterFacts | null;
+  /** The point's rule for what a hole between its readings is. */
+  readonly gapRule: GapRule;
 }
 
 /** A step over this many nominal steps is a hole everywhere, so no row reaches further. */
@@ -42,7 +45,7 @@ async function filesOf(
   transaction?: Transaction,
 ): Promise<FileOfPoint[]> {
   const rows = await database.query<
-    Omit<FileOfPoint, "meter"> & MeterPlace & { meterRecipe: string | null }
+    Omit<FileOfPoint, "meter" | "gapRule"> & MeterPlace & { meterRecipe: string | null }
   >(
     // Only recipes of permanent meters hold a "meter".
     `SELECT f.id, f.precedence, f.series_kind AS kind, f.nominal_step_ms AS nominalStepMs,
@@ -56,6 +59,7 @@ async function filesOf(
     precedence,
     kind,
     nominalStepMs,
+    gapRule: place.gapRule,
     meter: meterRecipe === null ? null : meterFacts(JSON.parse(meterRecipe) as FileRecipe, place),
   }));
 }
@@ -81,6 +85,11 @@ export interface StoredBlocks {
   readonly files: readonly FileOfPoint[];
   readonly rows: readonly SqlRow[];
   readonly corrections: PointCorrections;
+}
+
+/** A step over this many nominal steps is a hole, by the rule of the point the blocks are of. */
+export function gapFactorOf({ files: [first] }: StoredBlocks): number {
+  return GAP_FACTOR[first?.gapRule ?? "survey"];
 }
 
 /**

@@ -325,6 +325,9 @@ test("the billing rule makes a hole of a step that the survey rule bridges, and 
   await agent.patch(`/points/${point.id}`).send({ gapRule: "billing" }).expect(200);
   await runJobs(app);
   expect(await energyKwh()).toBeCloseTo(60, 9);
+  const { leftOut } = await summaryOf(agent, point.id, "2025-05-18", "2025-05-19");
+  const hole = ["2025-05-18T00:45:00.000Z", "2025-05-18T01:15:00.000Z"];
+  expect(leftOut.map(({ from, to }) => [from, to])).toContainEqual(hole);
   const kept = await agent.patch(`/points/${point.id}`).send({ name: "Meter room" }).expect(200);
   expect(kept.body).toMatchObject({ gapRule: "billing" });
   await agent.patch(`/points/${point.id}`).send({ gapRule: "survey" }).expect(200);

@@ -17,7 +17,7 @@ export async function loadQualityRuns(
   const seen = { startMs: range.startMs, endMs: Math.min(range.endMs, nowMs) };
   const runs: QualityRun[] = [];
   for await (const part of readingParts(database, pointId, seen)) {
-    appendRuns(runs, qualityRuns(part.segments, part));
+    appendRuns(runs, qualityRuns(part.segments, part, part.gapFactor));
   }
   return runs;
 }

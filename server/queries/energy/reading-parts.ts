@@ -1,7 +1,7 @@
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import type { Database } from "@server/database/connect";
-import { loadBlocks, segmentsOf } from "@server/readings/load-segments";
+import { gapFactorOf, loadBlocks, segmentsOf } from "@server/readings/load-segments";
 import { breathe } from "./breathe";
 
 /** Two months of one-minute rows take some 20 ms to unpack: other requests are served between. */
@@ -10,6 +10,8 @@ const partMs = 60 * DAY_MS;
 export interface ReadingPart extends Interval {
   /** Rows of the part, and one beyond either end. */
   readonly segments: readonly ReadingSegment[];
+  /** A step over this many nominal steps is a hole, by the point's rule. */
+  readonly gapFactor: number;
 }
 
 /**
@@ -29,7 +31,12 @@ export async function* readingParts(
     if (blocks.status === "rejected") throw blocks.reason;
     const endMs = partEnd(startMs, range);
     if (endMs < range.endMs) following = load(endMs);
-    yield { startMs, endMs, segments: segmentsOf(blocks.value, startMs, endMs) };
+    yield {
+      startMs,
+      endMs,
+      segments: segmentsOf(blocks.value, startMs, endMs),
+      gapFactor: gapFactorOf(blocks.value),
+    };
     await breathe();
   }
 }

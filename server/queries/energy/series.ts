@@ -57,7 +57,12 @@ export async function chartSeries(
         ? await fromManyReadings(database, energyPoint, window, seen, frame)
         : await fromReadings(database, energyPoint, window, seen);
   const filled = await filledStretches(database, point.id, range);
-  return present(energyPoint, range, { ...drawn, quality: withFills(drawn.quality, filled) }, pixels);
+  return present(
+    energyPoint,
+    range,
+    { ...drawn, quality: withFills(drawn.quality, filled) },
+    pixels,
+  );
 }
 
 interface Drawn {
@@ -97,7 +102,10 @@ async function readChart(
   for await (const part of readingParts(database, pointId, window)) {
     const until = Math.min(part.endMs, seen.endMs);
     if (until > part.startMs)
-      appendRuns(quality, qualityRuns(part.segments, { startMs: part.startMs, endMs: until }));
+      appendRuns(
+        quality,
+        qualityRuns(part.segments, { startMs: part.startMs, endMs: until }, part.gapFactor),
+      );
     // The rows beyond a part's ends come again in its neighbours.
     const inside = part.segments.map((segment) => within(segment, part));
     chart.add(inside);
