@@ -46,10 +46,9 @@ export function LoadDeltaT({ shape, format, loop }: LoadFigures) {
               paddingRight: place === 2 ? 0 : 8,
               borderLeftWidth: place === 0 ? 0 : 1,
               borderLeftColor: colour.rule,
-              justifyContent: "space-between",
             }}
           >
-            <Text variant="small" tone="ink3" hidden>
+            <Text variant="small" tone="ink3" hidden style={{ minHeight: 36 }}>
               {t(`deltaT.${name}`)}
             </Text>
             <View>

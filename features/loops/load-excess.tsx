@@ -23,7 +23,14 @@ export function LoadExcess(props: LoadFigures) {
         <Missing {...props} />
       ) : (
         <View style={{ gap: 12 }}>
-          <View style={{ flexDirection: phone ? "column" : "row", gap: phone ? 12 : 28 }}>
+          <View
+            style={{
+              flexDirection: "row",
+              flexWrap: "wrap",
+              columnGap: phone ? 16 : 28,
+              rowGap: 12,
+            }}
+          >
             <LoadFigure
               title={t("excess.share")}
               size={phone ? "m" : "l"}
