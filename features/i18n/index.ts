@@ -15,5 +15,6 @@ export { words, type Namespace } from "./resources";
 export { makeFormat, type Format } from "@shared/formats/format";
 export { useFluidWords } from "./use-fluid-words";
 export { useFormat } from "./use-format";
+export { useEvidenceWords } from "./use-evidence-words";
 export { useWords } from "./use-words";
 export { useFieldWords, useProblemWords, type ProblemWords } from "./use-problem-words";

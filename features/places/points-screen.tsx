@@ -17,6 +17,7 @@ import {
   type Column,
   type RowCard,
 } from "@features/ui";
+import { evidencePaths } from "@features/evidence/evidence-paths";
 import { importPaths } from "@features/imports/import-paths";
 import { ArchivedSwitch } from "./archived-switch";
 import { placesPaths } from "./places-paths";
@@ -96,6 +97,12 @@ function PointsTable(props: { site: Site; loop: Loop; points: readonly Point[] }
     );
   const ways = (point: Point) => (
     <View style={{ flexDirection: "row", gap: phone ? 8 : 16, flexWrap: "wrap" }}>
+      <Way
+        phone={phone}
+        label={t("points.evidence")}
+        said={t("points.evidenceOf", { code: point.code })}
+        href={evidencePaths.evidence(site.id, loop.id, point.id)}
+      />
       {point.can.import ? (
         <Way
           phone={phone}
@@ -134,7 +141,7 @@ function PointsTable(props: { site: Site; loop: Loop; points: readonly Point[] }
     ...(points.some((point) => state(point) !== null)
       ? [{ key: "state", header: t("sites.marks"), render: state, wideOnly: true }]
       : []),
-    { key: "ways", header: t("loops.ways"), render: ways, width: 170 },
+    { key: "ways", header: t("loops.ways"), render: ways, width: 250 },
   ];
   const card: RowCard<Point> = {
     title: (point) => `${point.code}, ${point.name}`,

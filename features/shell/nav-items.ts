@@ -1,7 +1,7 @@
 import type { Role } from "@shared/contracts/people";
 import type { IconName } from "@features/ui";
 
-export type Destination = "today" | "sites" | "logs" | "settings";
+export type Destination = "today" | "sites" | "logs" | "kit" | "settings";
 
 interface NavItem {
   readonly href: string;
@@ -14,6 +14,7 @@ export const navItems: Readonly<Record<Destination, NavItem>> = {
   today: { href: "/", icon: "today", also: [] },
   sites: { href: "/sites", icon: "sites", also: ["/loops"] },
   logs: { href: "/logs", icon: "logs", also: [] },
+  kit: { href: "/kit", icon: "kit", also: [] },
   settings: { href: "/settings", icon: "settings", also: [] },
 };
 
@@ -28,14 +29,14 @@ interface RoleNav {
 /** What each role works with most stands on the bar; nothing is listed that a role cannot open. */
 const byRole: Readonly<Record<Role, RoleNav>> = {
   surveyor: {
-    bar: ["today", "logs"],
+    bar: ["today", "logs", "kit"],
     more: ["sites", "settings"],
-    rail: ["today", "sites", "logs", "settings"],
+    rail: ["today", "sites", "logs", "kit", "settings"],
   },
   engineer: {
     bar: ["today", "sites", "logs"],
-    more: ["settings"],
-    rail: ["today", "sites", "logs", "settings"],
+    more: ["kit", "settings"],
+    rail: ["today", "sites", "logs", "kit", "settings"],
   },
   billingClerk: {
     bar: ["today", "sites"],
@@ -44,8 +45,8 @@ const byRole: Readonly<Record<Role, RoleNav>> = {
   },
   administrator: {
     bar: ["today", "sites"],
-    more: ["logs", "settings"],
-    rail: ["today", "sites", "logs", "settings"],
+    more: ["logs", "kit", "settings"],
+    rail: ["today", "sites", "logs", "kit", "settings"],
   },
   tenantContact: { bar: ["settings"], more: [], rail: ["settings"] },
 };

@@ -19,7 +19,7 @@ async function requireEmpty(
 ): Promise<void> {
   const holdings = await pointHoldings(database, scope.organisationId, of, [id], transaction);
   if (holdings.length === 0) return;
-  const what = holdings.some((point) => point.hasReadings) ? "readings" : "log files";
+  const what = holdings.some((point) => point.hasReadings) ? "readings" : "log files or evidence";
   throw new Conflict(
     "holds-readings",
     `${name} holds ${what}, so it cannot be removed.`,

@@ -7,6 +7,7 @@ import type { Services } from "@server/services";
 import { demoActing } from "./demo-acting";
 import { DEMO_HISTORY_DAYS, demoLogFiles, type DemoLogFile } from "./demo-log-files";
 import { DEMO_LOOPS } from "./harbour-court-works";
+import { ensureDemoEvidence } from "./seed-evidence";
 import { importDemoFile } from "./seed-import";
 import { ensureDemoPlaces } from "./seed-places";
 
@@ -48,9 +49,11 @@ export async function seedDemo(
   const engineer = await demoActing(services, organisation, "engineer");
   const { site, pointIds } = await ensureDemoPlaces(engineer);
   const surveyor = { ...(await demoActing(services, organisation, "surveyor")), services };
+  const stopDate = endDate ?? localDateOf(site.createdAt.getTime(), site.zone);
+  await ensureDemoEvidence(surveyor, { zone: site.zone, endDate: stopDate }, pointIds);
   const files = demoLogFiles(
     site.zone,
-    endDate ?? localDateOf(site.createdAt.getTime(), site.zone),
+    stopDate,
     DEMO_LOOPS.map(({ loop }) => loop.tag),
     historyDays,
   );

@@ -2,12 +2,12 @@ import { QueryTypes, type Transaction } from "sequelize";
 import type { Database } from "@server/database/connect";
 import { wholeNumber } from "@server/database/conversions";
 
-/** A point that cannot simply disappear: readings or a log file hang on it. */
+/** A point that cannot simply disappear: readings, a log file or evidence hang on it. */
 export interface PointHolding {
   readonly siteId: string;
   readonly loopId: string;
   readonly pointId: string;
-  /** False where files were brought in but no row of them counts, such as after an undo. */
+  /** False where no row counts: only evidence is held, or every import was undone. */
   readonly hasReadings: boolean;
 }
 
@@ -20,7 +20,7 @@ interface Row {
 
 const columnOf = { site: "l.site_id", loop: "p.loop_id", point: "p.id" } as const;
 
-/** Points of the given sites, loops or points that hold readings or files; one query for a list. */
+/** Points of the given sites, loops or points that hold any of it; one query for a list. */
 export async function pointHoldings(
   database: Database,
   organisationId: string,
@@ -35,7 +35,8 @@ export async function pointHoldings(
      JOIN \`loop\` l ON l.id = p.loop_id
      LEFT JOIN point_readings r ON r.point_id = p.id
      WHERE p.organisation_id = :organisationId AND ${columnOf[of]} IN (:ids)
-       AND (r.row_count > 0 OR EXISTS (SELECT 1 FROM log_import i WHERE i.point_id = p.id))`,
+       AND (r.row_count > 0 OR EXISTS (SELECT 1 FROM log_import i WHERE i.point_id = p.id)
+            OR EXISTS (SELECT 1 FROM installation e WHERE e.point_id = p.id))`,
     { replacements: { organisationId, ids }, type: QueryTypes.SELECT, transaction },
   );
   return rows.map((row) => ({

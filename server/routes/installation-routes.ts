@@ -14,17 +14,22 @@ import {
   type PointBackground,
 } from "@server/queries/evidence/point-background";
 import { requireUsableFields } from "@server/queries/evidence/require-usable-fields";
+import { standingCorrections } from "@server/readings/point-corrections";
 import { defaultBudget, workOutInstallation } from "@server/queries/evidence/work-out-installation";
 
 async function presentAll(
-  { scope, actor }: Context,
+  { database, scope, actor }: Context,
   background: PointBackground,
   rows: readonly Installation[],
 ) {
-  const records = await loadEvidenceRecords(scope, rows.map(fieldsOf));
-  return rows.map((row) =>
-    presentInstallation(row, workOutInstallation(background, fieldsOf(row), records), actor),
-  );
+  const [records, corrections] = await Promise.all([
+    loadEvidenceRecords(scope, rows.map(fieldsOf)),
+    standingCorrections(database, background.point.id),
+  ]);
+  return rows.map((row) => {
+    const workedOut = workOutInstallation(background, fieldsOf(row), records, corrections);
+    return presentInstallation(row, workedOut, actor);
+  });
 }
 
 async function present(context: Context, row: Installation) {
@@ -66,11 +71,13 @@ export const installationRoutes = [
   }),
   defineEndpoint(contracts.tryInstallation, {
     policy: may("editEvidence"),
-    async handle({ scope }, { params, body }) {
+    async handle({ database, scope }, { params, body }) {
       const background = await loadPointBackground(scope, params.pointId);
       const fields = completeFields(body);
       await requireUsableFields(scope, fields);
-      return workOutInstallation(background, fields, await loadEvidenceRecords(scope, [fields]));
+      const records = await loadEvidenceRecords(scope, [fields]);
+      const corrections = await standingCorrections(database, params.pointId);
+      return workOutInstallation(background, fields, records, corrections);
     },
   }),
   defineEndpoint(contracts.getInstallation, {

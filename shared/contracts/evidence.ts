@@ -171,7 +171,13 @@ export const bathCheck = bathCheckFields.extend({
   deviationK: z.number(),
   residualK: z.number().describe("standard uncertainty of the pair after the check"),
   driftK: z.number().nullable().describe("against the check before; null with one"),
-  verdicts: z.array(z.object({ code: z.string(), weight: z.enum(["fine", "look", "stop"]) })),
+  verdicts: z.array(
+    z.object({
+      code: z.string(),
+      weight: z.enum(["fine", "look", "stop"]),
+      values: z.record(z.string(), z.union([z.string(), z.number()])),
+    }),
+  ),
   replacesId: id.nullable(),
   supersededAt: instant.nullable().describe("set where another check stands in its place"),
   recordedAt: instant,

@@ -5,18 +5,24 @@ import { localDateOf } from "@shared/domain/time/local-calendar";
 import { boreFromEvidence } from "@shared/domain/uncertainty/bore-from-evidence";
 import { conditionVerdicts } from "@shared/domain/uncertainty/conditions";
 import type { Instrument } from "@server/models/instrument";
+import type { StandingCorrection } from "@server/readings/point-corrections";
 import { bathCheckOf, evidenceOf } from "./evidence-of";
+import { putRightBy } from "./corrected-already";
 import type { EvidenceRecords } from "./evidence-records";
 import { budgetOf, isIndicativeOnly, testedOnOf } from "./point-evidence";
 import type { PointBackground } from "./point-background";
 import { sizeBudget } from "./size-budget";
 import { budgetStateOf, type BudgetState } from "./usual-state";
 
-/** What follows from an installation's fields, kept or not: bore, verdicts and budget. */
+/**
+ * What follows from an installation's fields, kept or not: bore, verdicts and budget.
+ * @param corrections applied to the point's readings: what they put right is held against nobody.
+ */
 export function workOutInstallation(
   background: PointBackground,
   fields: InstallationFields,
   records: EvidenceRecords,
+  corrections: readonly StandingCorrection[],
 ): WorkedOutInstallation {
   const { loop, point, site, pipe } = background;
   const startDay = localDateOf(Date.parse(fields.startsAt), site.zone);
@@ -24,7 +30,12 @@ export function workOutInstallation(
   const measured = boreFromEvidence(evidence.pipe, null);
   const boreMm = measured?.boreMm ?? pipe?.insideDiameterMm ?? null;
   const state = budgetStateOf(loop, point.meterSide, fields, boreMm);
-  const wishes = { onDate: startDay, state: state.usual };
+  const corrected = putRightBy(corrections, fields);
+  const wishes = {
+    onDate: startDay,
+    state: state.usual,
+    pairDifferenceCorrected: corrected.pairDifference,
+  };
   const budget = budgetOf(background, evidence, wishes);
   const factor = flowFactorOf(measured?.boreMm ?? null, fields.enteredBoreMm);
   const { shownFlowLPerS } = fields;
@@ -57,10 +68,10 @@ export function workOutInstallation(
       fluid: loop.fluid,
       state: judgedState(background, state, boreMm),
       enteredBoreMm: fields.enteredBoreMm,
-      enteredBoreCorrected: false,
+      enteredBoreCorrected: corrected.enteredBore,
       onDate: startDay,
       intervalS: null,
-      pairDifferenceCorrected: true,
+      pairDifferenceCorrected: corrected.pairDifference,
       completeness: null,
     }),
     budget: sizeBudget(budget, state),

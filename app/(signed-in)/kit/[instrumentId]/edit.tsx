@@ -1,0 +1,1 @@
+export { EditInstrumentScreen as default } from "@features/kit/instrument-form-screen";

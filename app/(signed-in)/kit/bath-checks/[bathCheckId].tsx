@@ -1,0 +1,1 @@
+export { BathCheckScreen as default } from "@features/kit/bath-check-screen";

@@ -1,0 +1,1 @@
+export { BathChecksScreen as default } from "@features/kit/bath-checks-screen";

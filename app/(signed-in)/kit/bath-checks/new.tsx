@@ -1,0 +1,1 @@
+export { BathCheckFormScreen as default } from "@features/kit/bath-check-form-screen";

@@ -1,0 +1,1 @@
+export { NewInstrumentScreen as default } from "@features/kit/instrument-form-screen";

@@ -1,0 +1,1 @@
+export { CorrectInstallationScreen as default } from "@features/evidence/installation-form-screen";

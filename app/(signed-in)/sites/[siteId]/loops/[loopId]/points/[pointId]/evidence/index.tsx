@@ -1,0 +1,1 @@
+export { EvidenceScreen as default } from "@features/evidence/evidence-screen";

@@ -1,0 +1,1 @@
+export { NewInstallationScreen as default } from "@features/evidence/installation-form-screen";
