@@ -4,6 +4,7 @@ import { Conflict } from "@server/http/errors";
 import { BoreVersion } from "@server/models/bore-version";
 import { Building } from "@server/models/building";
 import { Loop } from "@server/models/loop";
+import { MeterComparison } from "@server/models/meter-comparison";
 import { MeteringPoint } from "@server/models/metering-point";
 import { Site } from "@server/models/site";
 import { pointHoldings } from "@server/queries/point-holdings";
@@ -24,6 +25,20 @@ async function requireEmpty(
     "holds-readings",
     `${name} holds ${what}, so it cannot be removed.`,
     "Archive it instead: it leaves the lists, its readings stay, and it can be restored.",
+  );
+}
+
+/** A saved comparison is evidence too. */
+async function requireNoComparisons(
+  { scope }: Acting,
+  { id: siteId, name }: Site,
+  transaction: Transaction,
+): Promise<void> {
+  if ((await scope.count(MeterComparison, { where: { siteId }, transaction })) === 0) return;
+  throw new Conflict(
+    "holds-comparisons",
+    `${name} holds comparisons of meters, so it cannot be removed.`,
+    "Archive it instead: it leaves the lists, its comparisons stay, and it can be restored.",
   );
 }
 
@@ -67,6 +82,7 @@ export async function removeSite(acting: Acting, siteId: string): Promise<void> 
     const lock = transaction.LOCK.UPDATE;
     const site = await acting.scope.get(Site, siteId, "site", { transaction, lock });
     await requireEmpty(acting, "site", siteId, site.name, transaction);
+    await requireNoComparisons(acting, site, transaction);
     const loops = await acting.scope.list(Loop, { where: { siteId }, transaction });
     await removeLoops(acting, loops, transaction);
     const { organisationId } = acting.scope;

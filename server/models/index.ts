@@ -16,6 +16,7 @@ import { LoopPump } from "./loop-pump";
 import { Job } from "./job";
 import { LogFile } from "./log-file";
 import { LogImport } from "./log-import";
+import { MeterComparison } from "./meter-comparison";
 import { Membership } from "./membership";
 import { MeteringPoint } from "./metering-point";
 import { Organisation } from "./organisation";
@@ -57,6 +58,7 @@ const models: readonly ModelDefinition[] = [
   LogFile,
   Correction,
   EnergyFill,
+  MeterComparison,
   Job,
 ];
 

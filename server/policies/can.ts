@@ -1,4 +1,5 @@
 import type { Actor } from "./actor";
+import { comparisonsAbilities } from "./comparisons-policy";
 import { evidenceAbilities } from "./evidence-policy";
 import { logsAbilities } from "./logs-policy";
 import { peopleAbilities } from "./people-policy";
@@ -14,6 +15,7 @@ export function can(actor: Actor) {
     ...placesAbilities(actor),
     ...logsAbilities(actor),
     ...evidenceAbilities(actor),
+    ...comparisonsAbilities(actor),
     ...peopleAbilities(actor),
   };
 }

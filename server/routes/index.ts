@@ -8,6 +8,7 @@ import { evidenceRoutes } from "./evidence-routes";
 import { fillRoutes } from "./fill-routes";
 import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
+import { meterComparisonRoutes } from "./meter-comparison-routes";
 import { placesRoutes } from "./places-routes";
 import { sessionRoutes } from "./session-routes";
 import { shapeRoutes } from "./shape-routes";
@@ -28,6 +29,7 @@ const productEndpoints: readonly Endpoint[] = [
   ...energyRoutes,
   ...correctionRoutes,
   ...fillRoutes,
+  ...meterComparisonRoutes,
   ...shapeRoutes,
   ...todayRoutes,
   ...workingsRoutes,

@@ -107,6 +107,12 @@ const matrix = `
   proposeFill              ✓   ✓   ✓   –   –   –
   approveFill              ✓   –   ✓   –   –   –
   withdrawFill             ✓   ✓   ✓   –   –   –
+  listMeterComparisons     ✓   ✓   ✓   ✓   –   –
+  tryMeterComparison       ✓   ✓   ✓   ✓   –   –
+  createMeterComparison    ✓   –   ✓   –   –   –
+  getMeterComparison       ✓   ✓   ✓   ✓   –   –
+  withdrawMeterComparison  ✓   –   ✓   –   –   –
+  downloadMeterComparison  ✓   ✓   ✓   ✓   –   –
   listEnergyResults        ✓   ✓   ✓   ✓   –   –
   getEnergyResult          ✓   ✓   ✓   ✓   –   –
   getToday                 ✓   ✓   ✓   ✓   –   –

@@ -1,6 +1,7 @@
 import { AccessToken } from "@server/models/access-token";
 import { Building } from "@server/models/building";
 import { secretHash } from "@server/security/secrets";
+import { savedComparison } from "./comparison-factories";
 import { evidenceOfPoint } from "./evidence-factories";
 import { correctedPoint } from "./correction-factories";
 import { person, type Person } from "./factories";
@@ -58,12 +59,17 @@ const corrections: MakeIds = async (app, { organisationId }) => {
   return correctedPoint(app, { organisationId, pointId: point.id });
 };
 
+const comparisons: MakeIds = async (app, owner) => {
+  const { site } = await pointToMeter(app, owner.organisationId);
+  return { meterComparisonId: (await savedComparison(app, owner, site.id)).id };
+};
+
 /**
  * Makes one row of everything whose id stands in a path of the API, and answers the ids by the
  * path's parameter name. A new `:xId` needs a line here: the tenancy test asks for it.
  */
 export async function ownedIds(app: TestApp, owner: Person): Promise<Record<string, string>> {
-  const families = [people, places, logs, evidence, corrections];
+  const families = [people, places, logs, evidence, corrections, comparisons];
   const ids = [];
   for (const make of families) ids.push(await make(app, owner));
   return Object.assign({}, ...ids) as Record<string, string>;

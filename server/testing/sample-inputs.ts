@@ -1,3 +1,4 @@
+import { meterComparisonBody } from "./comparison-factories";
 import { plainRecipe } from "./import-factories";
 
 /** What an endpoint takes beside its ids, filled in so that validation lets it through. */
@@ -55,5 +56,8 @@ export const sampleInputs: Readonly<Record<string, SampleInput>> = {
   createInstallation: { body: { startsAt: "2026-02-02T08:00:00Z" } },
   tryInstallation: { body: { startsAt: "2026-02-02T08:00:00Z" } },
   withdrawInstallation: { body: { reason: "On another point" } },
+  tryMeterComparison: { body: meterComparisonBody },
+  createMeterComparison: { body: meterComparisonBody },
+  withdrawMeterComparison: { body: { reason: "Reads of another meter" } },
   chooseRepairs: { body: { overlap: "useThis" } },
 };

@@ -8,6 +8,7 @@ import { occupiedHours } from "./006-occupied-hours";
 import { evidence } from "./007-evidence";
 import { corrections } from "./008-corrections";
 import { energyBlocks } from "./008-energy-blocks";
+import { meterComparisons } from "./009-meter-comparisons";
 
 /**
  * One step of the schema. To add one: write `NNN-subject.ts` beside this file, export a Migration
@@ -30,4 +31,5 @@ export const migrations: readonly Migration[] = [
   evidence,
   energyBlocks,
   corrections,
+  meterComparisons,
 ];
