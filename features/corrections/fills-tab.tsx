@@ -44,7 +44,11 @@ export function FillsTab(props: FillsTabProps) {
   const lastAt = extent.data?.lastReadingAt ?? null;
   const lastDay = lastAt === null ? today : dayInZone(Date.parse(lastAt), site.zone);
   const until = props.until ?? lastDay;
-  const since = props.since ?? addDays(until, 1 - usualDays);
+  const usual = addDays(until, 1 - usualDays);
+  const firstAt = extent.data?.firstReadingAt ?? null;
+  const firstDay = firstAt === null ? usual : dayInZone(Date.parse(firstAt), site.zone);
+  // Nothing is missing from the time before anybody measured.
+  const since = props.since ?? (firstDay > usual && firstDay <= until ? firstDay : usual);
   const fills = useQuery(correctionsQueries.fills(point.id));
   const gaps = useQuery({
     ...correctionsQueries.gaps(point.id, { from: since, to: addDays(until, 1) }),

@@ -2,7 +2,6 @@ import { QueryTypes } from "sequelize";
 import type { Correction, CorrectionChange, EnergyResult } from "@shared/contracts/corrections";
 import { claimJob } from "@server/jobs/job-queue";
 import { runJob } from "@server/jobs/run-job";
-import { Installation } from "@server/models/installation";
 import { Instrument } from "@server/models/instrument";
 import { loadDays } from "@server/readings/day-rows";
 import { signedIn, type Agent } from "@server/testing/factories";
@@ -147,25 +146,25 @@ test("an offset of a probe changes every point an installation says it sat on, f
   await storedReadings(app, { organisationId, pointId: other.point.id }, rows, 5 * minute);
   const untouched = await pointToMeter(app, organisationId);
   await storedReadings(app, { organisationId, pointId: untouched.point.id }, rows, 5 * minute);
-  const probe = await Instrument.create({
-    organisationId,
-    kind: "probe",
-    serial: "4101",
-    createdAt: app.clock.date(),
-  });
-  const installed = (pointId: string, side: "supplyProbeId" | "returnProbeId") =>
-    Installation.create({
-      organisationId,
-      pointId,
-      startsAt: new Date(from - 1000),
-      [side]: probe.id,
-      document: {} as Installation["document"],
-      version: 1,
-      recordedAt: app.clock.date(),
-      recordedByName: "Test",
+  const made = (serial: string) =>
+    Instrument.create({ organisationId, kind: "probe", serial, createdAt: app.clock.date() });
+  const [probe, partner] = [await made("4101"), await made("4102")];
+  const installed = async (pointId: string, supply: Instrument, back: Instrument) => {
+    const on = ({ id }: Instrument) => ({
+      probeId: id,
+      mounting: "surface",
+      depthMm: null,
+      insulated: true,
     });
-  await installed(point.id, "returnProbeId");
-  await installed(other.point.id, "supplyProbeId");
+    const probes = { supply: on(supply), return: on(back) };
+    const startsAt = new Date(from - 1000).toISOString();
+    const { body } = await agent
+      .post(`/points/${pointId}/installations`, { startsAt, probes })
+      .expect(201);
+    return body.id as string;
+  };
+  await installed(point.id, partner, probe);
+  const otherInstallation = await installed(other.point.id, probe, partner);
   const change = {
     kind: "probeOffset",
     probeId: probe.id,
@@ -185,6 +184,12 @@ test("an offset of a probe changes every point an installation says it sat on, f
   await agent
     .post(`/points/${untouched.point.id}/corrections`, { change, reason: "not here" })
     .expect(422);
+  // The probe never sat there after all: its offset goes with the record of it.
+  await agent
+    .post(`/installations/${otherInstallation}/withdrawal`, { reason: "another visit's" })
+    .expect(200);
+  await runJobs(app);
+  expect((await energyOf(agent, other.point.id)).cooling).toBeCloseTo(4 * hourKwh, 1);
 });
 
 test("a slow clock moves the rows to their day, and withdrawn they are back where the log had them", async () => {
