@@ -54,7 +54,11 @@ export function UnitControl({ column, recipe, locked, questions, onChange }: Con
   const units = unitsOfMeaning(column.meaning);
   if (units.length > 0) {
     const asked = questions.some(
-      (question) => "columnIndex" in question && question.columnIndex === column.index,
+      (question) =>
+        (question.code === "flowUnit" ||
+          question.code === "temperatureUnit" ||
+          question.code === "columnUnit") &&
+        question.columnIndex === column.index,
     );
     return (
       <SelectField

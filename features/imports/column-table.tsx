@@ -1,6 +1,6 @@
 import { View } from "react-native";
 import { useWords } from "@features/i18n";
-import { Card, Text, useTheme } from "@features/ui";
+import { Card, radius, Text, useTheme } from "@features/ui";
 import { MeaningControl, UnitControl, useColumnName, type ColumnsProps } from "./column-controls";
 import { isTime } from "./recipe-edits";
 
@@ -18,7 +18,11 @@ export function ColumnTable(props: ColumnsProps) {
   return (
     <Card pad={0}>
       <View
-        style={{ overflow: "scroll" }}
+        style={{
+          overflow: "scroll",
+          borderTopLeftRadius: radius.card,
+          borderTopRightRadius: radius.card,
+        }}
         tabIndex={0}
         role="region"
         aria-label={t("columns.caption", { name: props.name })}

@@ -67,12 +67,12 @@ function FileColumns(props: { file: ImportFile; detail: ImportDetail; actions: I
         locked={!detail.can.edit}
         onChange={change}
       />
-      {file.recipe.columns.some(({ meaning }) => isRate(meaning)) ? (
+      {file.recipe.columns.some(({ meaning }) => isRate(meaning)) && !isKindAsked ? (
         <Card pad={5}>
           <View style={{ gap: 12 }}>
             <KindTiles
               label={t("columns.kind.title")}
-              value={isKindAsked ? null : file.recipe.seriesKind}
+              value={file.recipe.seriesKind}
               columns={phone ? 1 : 3}
               onChange={(kind) => file.recipe && change(withKind(file.recipe, kind))}
             />

@@ -23,6 +23,7 @@ import {
   type ImportDetail,
   type repairChoices,
 } from "@shared/contracts/imports";
+import { getEnergy } from "@shared/contracts/energy";
 import { listLoops, listPoints, listSites } from "@shared/contracts/places";
 import type { z } from "zod";
 import { call, upload } from "@features/api";
@@ -60,6 +61,14 @@ export const logRowsQuery = (importId: string, fileId: string, line: number) =>
     queryKey: [...keys.detail(importId), "rows", fileId, line] as const,
     queryFn: ({ signal }) =>
       call(previewLogRows, { params: { importId, fileId }, query: { line, limit: 12 }, signal }),
+  });
+
+/** Energy of a stretch in one sum, with its ±. */
+export const energyOfQuery = (pointId: string, range: { from: string; to: string }) =>
+  queryOptions({
+    queryKey: ["imports", "energy", pointId, range] as const,
+    queryFn: ({ signal }) =>
+      call(getEnergy, { params: { pointId }, query: { ...range, step: "total" }, signal }),
   });
 
 export const placesToImportQuery = {

@@ -192,7 +192,7 @@ function OneQuestion(props: {
           text={t("columns.seriesKind.text", { header: question.header })}
         >
           <KindTiles
-            label={t("columns.seriesKind.title")}
+            label={t("columns.kind.title")}
             value={null}
             columns={1}
             onChange={(kind) => onChange(withKind(recipe, kind))}

@@ -13,12 +13,18 @@ import {
   useBreakpoint,
 } from "@features/ui";
 import type { ImportChecks, ImportDetail } from "@shared/contracts/imports";
+import type { PlusMinus } from "@shared/contracts/plus-minus";
+import type { Quantity } from "@shared/domain/units/display-units";
+import { useWorkings } from "@features/workings/use-workings";
+import type { WorkingsKey } from "@features/workings/workings-key";
+import { WorkingsOverPage } from "@features/workings/workings-over-page";
 import { DailyEnergy } from "./daily-bars";
 import { rawFileAddress } from "./file-card";
 import { FindingRow } from "./finding-row";
 import { findingsOf } from "./findings";
 import { importPaths } from "./import-paths";
 import type { ImportActions } from "./imports-queries";
+import { resultRange, useResultPlusMinus } from "./result-plus-minus";
 import { RowCounts } from "./row-counts";
 import { SideColumn } from "./side-column";
 import { SideRows } from "./side-rows";
@@ -78,6 +84,8 @@ export function ResultStep({ detail, actions }: { detail: ImportDetail; actions:
 
 function Energy({ checks, detail }: { checks: ImportChecks; detail: ImportDetail }) {
   const t = useWords("imports");
+  const plusMinus = useResultPlusMinus(detail);
+  const workings = useWorkings();
   const format = useFormat(detail.site.zone);
   const phone = useBreakpoint() === "phone";
   if (!checks.energy) {
@@ -90,6 +98,15 @@ function Energy({ checks, detail }: { checks: ImportChecks; detail: ImportDetail
   const { coolingKwh, heatingKwh, volumeM3, suppressedKwh } = checks.energy;
   const counted =
     checks.rows.expected > 0 ? (100 * checks.rows.measured) / checks.rows.expected : null;
+  const range = resultRange(detail);
+  const opens = (key: WorkingsKey) =>
+    range && plusMinus
+      ? {
+          onOpenWorkings: () => workings.show({ ...key, pointId: detail.point.id, ...range }),
+        }
+      : {};
+  const expanded = (found: PlusMinus | null | undefined, quantity: Quantity) =>
+    found ? found.expanded * format.unit(quantity).factor : null;
   const registers = [
     {
       key: "cooling",
@@ -126,6 +143,9 @@ function Energy({ checks, detail }: { checks: ImportChecks; detail: ImportDetail
                   size="xl"
                   value={format.toDisplay(register.kwh, register.quantity)}
                   unit={format.unit(register.quantity).unit}
+                  uncertainty={expanded(plusMinus?.[register.key].energy, register.quantity)}
+                  said={t(`result.${register.key}`)}
+                  {...opens({ figure: "energy", register: register.key })}
                 />
               </View>
             ))}
@@ -139,6 +159,9 @@ function Energy({ checks, detail }: { checks: ImportChecks; detail: ImportDetail
                   size="m"
                   value={format.toDisplay(volumeM3, "volume")}
                   unit={format.unit("volume").unit}
+                  uncertainty={expanded(plusMinus?.volume, "volume")}
+                  said={t("result.volume")}
+                  {...opens({ figure: "volume" })}
                 />
               </View>
             )}
@@ -161,6 +184,7 @@ function Energy({ checks, detail }: { checks: ImportChecks; detail: ImportDetail
           </Text>
         ) : null}
         <DailyEnergy days={checks.daily} zone={detail.site.zone} />
+        <WorkingsOverPage />
       </View>
     </Card>
   );

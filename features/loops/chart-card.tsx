@@ -39,6 +39,7 @@ export function ChartCard(props: ChartCardProps) {
   const t = useWords("loops");
   const phone = useBreakpoint() === "phone";
   const service = tagService(loop.service);
+  if (isMeterOnly(props.summary)) return <MeterTable {...props} />;
   const segments = (
     <Segments
       label={t("chart.as")}
@@ -67,6 +68,31 @@ export function ChartCard(props: ChartCardProps) {
         )}
       </Row>
       {shows === "chart" ? <Picture {...props} /> : <Rows {...props} />}
+    </Card>
+  );
+}
+
+/** Energy without any water measured: a permanent meter gave its power alone. */
+function isMeterOnly({ totals, basis }: LoopFigures["summary"]): boolean {
+  const hasEnergy = totals.heating.energyKwh !== null || totals.cooling.energyKwh !== null;
+  return basis.blockedBy === null && hasEnergy && totals.volumeM3 === null;
+}
+
+/** There is no supply, return or flow to draw; the table holds all there is. */
+function MeterTable(props: ChartCardProps) {
+  const t = useWords("loops");
+  const phone = useBreakpoint() === "phone";
+  return (
+    <Card label={t("chart.meterTitle")} pad={phone ? 3 : 4}>
+      <View style={{ gap: 4, marginBottom: 12 }}>
+        <Text variant={phone ? "subhead" : "heading"} level={2}>
+          {t("chart.meterTitle")}
+        </Text>
+        <Text variant="small" tone="ink2">
+          {t("chart.meterOnly")}
+        </Text>
+      </View>
+      <Rows {...props} />
     </Card>
   );
 }

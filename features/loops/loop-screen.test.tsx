@@ -1,6 +1,7 @@
 import { fireEvent, screen, waitFor, within } from "@testing-library/react";
 
 import type { PointSummary, SeriesAnswer } from "@shared/contracts/energy";
+import type { PlusMinus } from "@shared/contracts/plus-minus";
 import { packNumbers } from "@shared/domain/readings/packed-numbers";
 import {
   loopOf,
@@ -38,6 +39,13 @@ const register = (energyKwh: number, deltaT: number | null) => ({
   timeMeanDeltaTK: deltaT && deltaT - 0.6,
 });
 
+/** A ± as the server gives it beside a figure. */
+const plusMinus = (expanded: number): PlusMinus => ({
+  expanded,
+  percent: 3.3,
+  basis: "evidence",
+});
+
 function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
   return {
     zone: "Europe/London",
@@ -50,9 +58,14 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       fluid: { kind: "water" },
       liquidC: { lowest: 0, highest: 150 },
       blockedBy: null,
-    meansOnly: false,
-    rowsAgainstRegister: 0,
+      meansOnly: false,
+      rowsAgainstRegister: 0,
       recalculating: false,
+    },
+    plusMinus: {
+      heating: { energy: null, deltaT: null },
+      cooling: { energy: plusMinus(498.7), deltaT: plusMinus(0.13) },
+      volume: plusMinus(51),
     },
     totals: {
       heating: register(0, null),
@@ -74,6 +87,7 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       volumeM3: 370,
       coveredS: 86_400,
       lengthS: 86_400,
+      plusMinus: { heating: null, cooling: plusMinus(86) },
     })),
     busiest: {
       from: "2026-05-14T14:30:00.000Z",
@@ -83,10 +97,18 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       flowM3PerHour: 35.1,
       deltaTK: 6.06,
       powerKw: 247.8,
+      plusMinus: plusMinus(7.7),
       register: "cooling",
     },
-    busiestDay: { date: "2026-05-14", energyKwh: 2763 },
-    nightBase: { fromHour: 0, toHour: 5, powerKw: 23, register: "cooling", coverage: 1 },
+    busiestDay: { date: "2026-05-14", energyKwh: 2763, plusMinus: plusMinus(86) },
+    nightBase: {
+      fromHour: 0,
+      toHour: 5,
+      powerKw: 23,
+      register: "cooling",
+      coverage: 1,
+      plusMinus: plusMinus(1.3),
+    },
     leftOut: [
       {
         kind: "excluded",
@@ -190,6 +212,34 @@ it("shows energy a cut-off held back, with its time", async () => {
   serverAnswers(summaryCall, summaryOf({ totals }));
   show(<LoopScreen />);
   expect(await screen.findByText(/^8.37 kWh over 4 h 15 min held back/)).toBeVisible();
+});
+
+it("shows a meter's energy with a dash and its reason where no water was measured", async () => {
+  const { basis, totals } = summaryOf();
+  const dry = { volumeM3: null, flowWeightedDeltaTK: null, energyWeightedDeltaTK: null };
+  serverAnswers(
+    summaryCall,
+    summaryOf({
+      basis: { ...basis, rowsAgainstRegister: 3 },
+      totals: { ...totals, volumeM3: null, cooling: { ...totals.cooling, ...dry } },
+    }),
+  );
+  show(<LoopScreen />);
+  expect(await screen.findByRole("heading", { name: "Energy by the meter" })).toBeVisible();
+  expect(screen.getAllByText("Not part of a meter’s power")).toHaveLength(2);
+  expect(screen.getByText(/^3 rows of the meter’s power have the other sign/)).toBeVisible();
+  expect(screen.queryByText("Supply, return and flow")).toBeNull();
+});
+
+it("says in one quiet line that a logger kept only means", async () => {
+  serverAnswers(summaryCall, summaryOf());
+  const { unmount } = show(<LoopScreen />);
+  await screen.findByText("Supply, return and flow");
+  expect(screen.queryByText(/^The logger stored only means/)).toBeNull();
+  unmount();
+  serverAnswers(summaryCall, summaryOf({ basis: { ...summaryOf().basis, meansOnly: true } }));
+  show(<LoopScreen />);
+  expect(await screen.findByText(/^The logger stored only means/)).toBeVisible();
 });
 
 it("says what fills a glycol loop, where it freezes and what a weak mixture costs", async () => {
