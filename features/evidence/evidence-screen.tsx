@@ -25,6 +25,7 @@ import { tagService } from "./tag-service";
 import { usePointCrumbs } from "./use-point-crumbs";
 import { VerdictList } from "./verdict-list";
 import { VersionList } from "./version-list";
+import { whenOf } from "./when-of";
 import { WithdrawSheet } from "./withdraw-sheet";
 
 type Params = {
@@ -190,7 +191,7 @@ function Shown(
 /** Says where a version no longer stands, and otherwise who recorded it and when. */
 function Standing({ installation, format }: { installation: Installation; format: Format }) {
   const t = useWords("installation");
-  const at = (instant: string) => format.dateTime(Date.parse(instant));
+  const at = whenOf(format);
   const { withdrawnAt, supersededAt } = installation;
   return (
     <View style={{ gap: 8 }}>

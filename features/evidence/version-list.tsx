@@ -3,6 +3,7 @@ import type { Installation } from "@shared/contracts/evidence";
 import { useWords, type Format } from "@features/i18n";
 import { Chip, ListRow, Text } from "@features/ui";
 import { evidencePaths } from "./evidence-paths";
+import { whenOf } from "./when-of";
 
 /** Every version of every installation of the point, newest first; each can be read. */
 export function VersionList(props: {
@@ -14,7 +15,7 @@ export function VersionList(props: {
   const t = useWords("installation");
   const { items, shown, format, params } = props;
   if (items.length === 0) return null;
-  const at = (instant: string) => format.dateTime(Date.parse(instant));
+  const at = whenOf(format);
   return (
     <View style={{ gap: 4 }}>
       <Text variant="heading">{t("history")}</Text>

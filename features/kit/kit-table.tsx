@@ -55,9 +55,11 @@ export function KitTable({ instruments, today }: KitTableProps) {
       render: (instrument) => (
         <View>
           {instrument.range ? <Text variant="table">{instrument.range}</Text> : null}
-          <Text variant="table" tone={instrument.range ? "ink2" : "ink"}>
-            {certified(instrument)}
-          </Text>
+          {certified(instrument) === null ? null : (
+            <Text variant="table" tone={instrument.range ? "ink2" : "ink"}>
+              {certified(instrument)}
+            </Text>
+          )}
         </View>
       ),
     },
@@ -89,10 +91,12 @@ export function KitTable({ instruments, today }: KitTableProps) {
         figure: (instrument) => <Where instrument={instrument} />,
         lines: (instrument) => [
           t("instrument.line", { kind: t(`kind.${instrument.kind}`), serial: instrument.serial }),
-          [instrument.range, certified(instrument)].filter(Boolean).join(", "),
-          <View key="life" style={{ paddingTop: 4 }}>
-            {bar(instrument)}
-          </View>,
+          [instrument.range, certified(instrument)].filter(Boolean).join(", ") || null,
+          instrument.calibration === "none" ? null : (
+            <View key="life" style={{ paddingTop: 4 }}>
+              {bar(instrument)}
+            </View>
+          ),
           <Row key="ends" justify="space-between">
             {ends(instrument)}
           </Row>,

@@ -1,5 +1,6 @@
 import type { EnergyAnswer, PointSummary } from "@shared/contracts/energy";
 import type { Loop, Point, Site } from "@shared/contracts/places";
+import type { BathCheck, Installation } from "@shared/contracts/evidence";
 import type { ImportSummary } from "@shared/contracts/imports";
 import { Account } from "@server/models/account";
 import { LogImport } from "@server/models/log-import";
@@ -97,6 +98,21 @@ test("a May week is of the size such a building has, and the main exceeds its br
   const unmetered = (await coolingKwh("CHW-1")) - branches;
   expect(unmetered).toBeGreaterThan(500);
   expect(unmetered).toBeLessThan(0.15 * branches);
+});
+
+test("the evidence of the demo's points is on record, with its gaps", async () => {
+  const codesOf = async (tag: string) => {
+    const path = `/points/${await pointOf(tag)}/installations`;
+    const { items } = await get<{ items: Installation[] }>(path);
+    expect(items).toHaveLength(1);
+    return items.flatMap(({ verdicts }) => verdicts.map(({ code }) => code));
+  };
+  expect(await codesOf("CHW-1B")).toEqual(
+    expect.arrayContaining(["certificateInDate", "bathCheckFine", "soundSpeedPlausible"]),
+  );
+  expect(await codesOf("CHW-1C")).toContain("bathCheckMissing");
+  expect(await codesOf("LTHW-4")).toContain("certificateLapsed");
+  expect((await get<{ items: BathCheck[] }>("/bath-checks")).items).toHaveLength(2);
 });
 
 test("there is no demo in production", async () => {

@@ -25,11 +25,20 @@ const WRITINGS: readonly Writing[] = [
   { ends: /LPerS$/, places: 3, unit: "L/s" },
   { ends: /S$/, places: 0, unit: "s" },
   { ends: /^(reynolds|least|most|days|pairs|wallReadings|advised|times)$/, places: 0 },
-  { ends: /Bores$|^advised(Up|Down)stream$/, places: 1, unit: "D" },
+  { ends: /Bores$|^advised(Up|Down)stream$/, places: 3, unit: "D" },
 ];
 
+/** Limits and factors are chosen, not measured: they are written with the decimals they have. */
+const CHOSEN = /^(least|limit|most|advised|wallTolerance|outsideTolerance)|^(k|factor)$/;
+
+function ownPlaces(value: number): number {
+  return Math.min(3, (String(value).split(".")[1] ?? "").length);
+}
+
 function written(name: string, value: number, format: Format): string {
-  const { quantity, places, unit } = WRITINGS.find(({ ends }) => ends.test(name)) ?? {};
+  const writing = WRITINGS.find(({ ends }) => ends.test(name)) ?? {};
+  const { quantity, unit } = writing;
+  const places = CHOSEN.test(name) ? ownPlaces(value) : writing.places;
   if (quantity !== undefined) return format.withUnit(value, quantity, places);
   const number = format.number(value, places);
   return unit === undefined ? number : `${number}${NO_BREAK_SPACE}${unit}`;
