@@ -92,6 +92,10 @@ test("withdrawing a correction gives the days back bit for bit, and an earlier r
   const during = await energyOf(agent, point.id);
   expect(during.coveredS).toBe((240 - 65) * 60);
   expect(during.rows).toMatchObject({ measured: 37, excluded: 12 });
+  const { body: summary } = await agent
+    .get(`/points/${point.id}/summary?from=2026-02-02&to=2026-02-03`)
+    .expect(200);
+  expect(summary.leftOut[0]).toMatchObject({ kind: "excluded", reason: "correction", rows: 12 });
   await agent.post(`/corrections/${id}/withdrawal`, { reason: "it was the pump" }).expect(202);
   await runJobs(app);
   expect(await days(point.id)).toEqual(before);

@@ -196,7 +196,7 @@ export const getPointSummary = contract({
         from: instant,
         to: instant,
         rows: z.number().nullable(),
-        reason: z.enum(["weakSignal", "noReading", "noRows", "noTemperature"]),
+        reason: z.enum(["weakSignal", "correction", "noReading", "noRows", "noTemperature"]),
       }),
     ),
     leftOutCount: z.number().int(),

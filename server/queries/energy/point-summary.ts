@@ -1,5 +1,6 @@
 import type { PointSummary } from "@shared/contracts/energy";
 import { totalEnergy, waterSeconds } from "@shared/domain/energy/totals";
+import { spansOverlap } from "@shared/domain/readings/corrections/correction-span";
 import { localDateOf, localDaysBetween } from "@shared/domain/time/local-calendar";
 import type { Database } from "@server/database/connect";
 import { instantText } from "@server/database/conversions";
@@ -19,6 +20,7 @@ import {
   windowPlusMinus,
 } from "@server/queries/workings/range-plus-minus";
 import { loadIntervals } from "@server/readings/interval-rows";
+import { spanOf, standingCorrections } from "@server/readings/point-corrections";
 import { combineTotals } from "./combine-totals";
 import type { EnergyPoint } from "./energy-point";
 import { filledStretches, filledTotals } from "@server/readings/energy-fills";
@@ -48,12 +50,13 @@ export async function pointSummary(
 ): Promise<PointSummary> {
   const { point, loop, site, readings } = energyPoint;
   const { zone } = site;
-  const [rows, columns, runs, filled, stretches, evidence, nights] = await Promise.all([
+  const [rows, columns, runs, filled, stretches, standing, evidence, nights] = await Promise.all([
     energyRows(database, { pointId: point.id, zone }, range, "day"),
     loadPowerColumns(database, point.id, range),
     loadQualityRuns(database, point.id, range, nowMs),
     filledTotals(database, point.id, range),
     filledStretches(database, point.id, range),
+    standingCorrections(database, point.id),
     loadFigureEvidence(scope, energyPoint, range),
     nightRows(database, point.id, range, zone),
   ]);
@@ -68,6 +71,9 @@ export async function pointSummary(
   // Rows due by the step of the log that was running, which may change within the range.
   const expectedRows = leftOutRuns(runs).reduce((sum, run) => sum + run.rows, totals.measuredRows);
   const leftOut = leftOutRuns(withFills(runs, stretches));
+  const exclusions = standing.flatMap(({ change }) =>
+    change.kind === "exclude" ? [spanOf(change)] : [],
+  );
   return {
     zone,
     from: instantText(new Date(range.startMs)),
@@ -100,7 +106,10 @@ export async function pointSummary(
       from: instantText(new Date(run.startMs)),
       to: instantText(new Date(run.endMs)),
       rows: run.rows,
-      reason: run.reason ?? "noRows",
+      reason:
+        run.reason === "weakSignal" && exclusions.some((span) => spansOverlap(span, run))
+          ? "correction"
+          : (run.reason ?? "noRows"),
     })),
     leftOutCount: leftOut.length,
     firstReadingAt: at(readings.firstMs),
