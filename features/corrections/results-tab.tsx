@@ -8,6 +8,7 @@ import {
   Card,
   Chip,
   EmptyState,
+  Row,
   Stack,
   Table,
   Text,
@@ -104,7 +105,11 @@ function ResultsTable(props: {
     />
   );
   const current = ({ result }: Listed) =>
-    result.isCurrent ? <Chip label={t("results.current")} tone="picked" /> : null;
+    result.isCurrent ? (
+      <Row>
+        <Chip label={t("results.current")} tone="picked" />
+      </Row>
+    ) : null;
   const columns: Column<Listed>[] = [
     { key: "at", header: t("results.at"), render: at },
     {
