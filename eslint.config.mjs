@@ -9,6 +9,7 @@ const elements = [
   { type: "api-client", pattern: "features/api" },
   { type: "i18n", pattern: "features/i18n" },
   { type: "charts", pattern: "features/charts" },
+  { type: "workings", pattern: "features/workings" },
   { type: "feature", pattern: "features/*", capture: ["feature"] },
   { type: "route", pattern: "app" },
   { type: "server", pattern: "server" },
@@ -18,8 +19,9 @@ const elements = [
   { type: "scripts", pattern: "scripts" },
 ];
 
-// The chart kit is a folder of its own only so that it can be loaded on demand.
-const featureBase = ["kit", "charts", "api-client", "i18n", "shared", "assets"];
+// The chart kit is a folder of its own only so that it can be loaded on demand; workings open from
+// every figure of every screen.
+const featureBase = ["kit", "charts", "workings", "api-client", "i18n", "shared", "assets"];
 // Where a feature's screens live is the one thing another feature may know: links need it.
 const files = [{ category: "paths", pattern: "features/*/*-paths.ts" }];
 
@@ -61,6 +63,15 @@ const arrows = [
     ["charts", "kit", "i18n", "shared", "assets"],
     "The chart kit draws what it is given: hand it columns, not a feature's or the API's things.",
   ),
+  ...arrow(
+    "workings",
+    ["workings", "api-client", "kit", "i18n", "shared"],
+    "Workings know a figure by its key: hand them that, not a screen's own things.",
+  ),
+  {
+    from: { element: { type: "workings" } },
+    allow: { to: { file: { categories: "paths" } } },
+  },
   ...arrow(
     "kit",
     ["kit", "i18n", "shared", "assets"],

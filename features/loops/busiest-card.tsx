@@ -3,15 +3,17 @@ import { View } from "react-native";
 import { useWords } from "@features/i18n";
 import { Card, LoopCard, Row, Text, useBreakpoint } from "@features/ui";
 
-import type { LoopFigures } from "./loop-context";
-import { energyQuantity, powerQuantity, tagService } from "./register-words";
+import type { FiguresWithWorkings } from "./loop-context";
+import { dayKey } from "./day-key";
+import { energyQuantity, powerQuantity, registersOf, tagService } from "./register-words";
 import { shownFigure } from "./shown-figure";
 
 /** The busiest half hour of the range as a loop card, with the energy of its day. */
-export function BusiestCard({ loop, point, summary, format }: LoopFigures) {
+export function BusiestCard({ loop, point, summary, format, workings }: FiguresWithWorkings) {
   const t = useWords("loops");
   const phone = useBreakpoint() === "phone";
   const { busiest, busiestDay, basis } = summary;
+  const alone = registersOf(loop.service).length === 1;
   const nominalMm =
     point.pipe?.kind === "table" ? point.pipe.dn : (point.bore?.insideDiameterMm ?? null);
   const base = {
@@ -46,7 +48,14 @@ export function BusiestCard({ loop, point, summary, format }: LoopFigures) {
             supply={shownFigure(format, busiest.supplyC, "temperature", 2)}
             return={shownFigure(format, busiest.returnC, "temperature", 2)}
             flow={shownFigure(format, busiest.flowM3PerHour, "flow", 1)}
-            power={shownFigure(format, busiest.powerKw, powerQuantity[busiest.register], 1)}
+            power={shownFigure(
+              format,
+              busiest.powerKw,
+              powerQuantity[busiest.register],
+              1,
+              busiest.plusMinus,
+            )}
+            powerWorkings={workings.figure({ figure: "power" })}
             deltaT={shownFigure(format, busiest.deltaTK, "temperatureDifference", 2)}
             {...(busiestDay
               ? {
@@ -54,6 +63,11 @@ export function BusiestCard({ loop, point, summary, format }: LoopFigures) {
                     format,
                     busiestDay.energyKwh,
                     energyQuantity[busiest.register],
+                    undefined,
+                    busiestDay.plusMinus,
+                  ),
+                  energyWorkings: workings.figure(
+                    dayKey(busiestDay.date, alone ? undefined : busiest.register),
                   ),
                   energyLabel: format.day(busiestDay.date, "weekdayShort"),
                 }

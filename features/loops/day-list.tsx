@@ -4,7 +4,8 @@ import { Pressable, View } from "react-native";
 import { useWords } from "@features/i18n";
 import { Card, Figure, Icon, Inline, Row, Text, useTheme } from "@features/ui";
 
-import type { LoopFigures } from "./loop-context";
+import { dayKey } from "./day-key";
+import type { FiguresWithWorkings } from "./loop-context";
 import { loopsPaths } from "./loops-paths";
 import { energyQuantity, registersOf } from "./register-words";
 import { shownFigure } from "./shown-figure";
@@ -13,7 +14,7 @@ import { shownFigure } from "./shown-figure";
 const mostDays = 31;
 
 /** Each day with its energy; a day opens by itself. */
-export function DayList({ summary, loop, point, format }: LoopFigures) {
+export function DayList({ summary, loop, point, format, workings }: FiguresWithWorkings) {
   const t = useWords("loops");
   const { colour } = useTheme();
   const { days } = summary;
@@ -30,51 +31,72 @@ export function DayList({ summary, loop, point, format }: LoopFigures) {
             const kwh = { heating: day.heatingKwh, cooling: day.coolingKwh };
             return (
               <View role="listitem" key={day.date}>
-                <Link
-                  href={loopsPaths.loop(loop.id, { point: point.id, from: day.date, to: day.date })}
-                  asChild
+                <View
+                  style={{
+                    flexDirection: "row",
+                    alignItems: "center",
+                    justifyContent: "space-between",
+                    gap: 12,
+                    paddingHorizontal: 14,
+                    borderTopWidth: index === 0 ? 0 : 1,
+                    borderTopColor: colour.rule,
+                  }}
                 >
-                  <Pressable role="link">
-                    <View
-                      style={{
-                        flexDirection: "row",
-                        alignItems: "center",
-                        justifyContent: "space-between",
-                        gap: 10,
-                        minHeight: 48,
-                        paddingHorizontal: 14,
-                        borderTopWidth: index === 0 ? 0 : 1,
-                        borderTopColor: colour.rule,
-                      }}
-                    >
-                      <Text tone="ink3">
-                        <Inline variant="subhead" tone="ink">
-                          {format.day(day.date, "weekdayShort")}
-                        </Inline>{" "}
-                        {String(Number(day.date.slice(8)))}
-                      </Text>
-                      <View style={{ flexDirection: "row", alignItems: "center", gap: 12 }}>
-                        <View style={{ alignItems: "flex-end" }}>
-                          {registers.map((register) => (
-                            <Row key={register} gap={2}>
-                              {registers.length > 1 ? (
-                                <Text variant="unit" tone="ink3" hidden>
-                                  {t(`table.${register}`)}
-                                </Text>
-                              ) : null}
-                              <Figure
-                                {...shownFigure(format, kwh[register], energyQuantity[register])}
-                                size="s"
-                                said={t(`table.${register}`)}
-                              />
-                            </Row>
-                          ))}
-                        </View>
+                  <Link
+                    href={loopsPaths.loop(loop.id, {
+                      point: point.id,
+                      from: day.date,
+                      to: day.date,
+                    })}
+                    asChild
+                  >
+                    <Pressable role="link" style={{ flexGrow: 1 }}>
+                      <View
+                        style={{
+                          flexDirection: "row",
+                          alignItems: "center",
+                          gap: 8,
+                          minHeight: 48,
+                        }}
+                      >
+                        <Text tone="ink3">
+                          <Inline variant="subhead" tone="ink">
+                            {format.day(day.date, "weekdayShort")}
+                          </Inline>{" "}
+                          {String(Number(day.date.slice(8)))}
+                        </Text>
                         <Icon name="right" size={18} />
                       </View>
-                    </View>
-                  </Pressable>
-                </Link>
+                    </Pressable>
+                  </Link>
+                  <View style={{ alignItems: "flex-end", gap: 10, paddingVertical: 8 }}>
+                    {registers.map((register) => (
+                      <Row key={register} gap={2}>
+                        {registers.length > 1 ? (
+                          <Text variant="unit" tone="ink3" hidden>
+                            {t(`table.${register}`)}
+                          </Text>
+                        ) : null}
+                        <Figure
+                          {...shownFigure(
+                            format,
+                            kwh[register],
+                            energyQuantity[register],
+                            undefined,
+                            day.plusMinus[register],
+                          )}
+                          size="s"
+                          said={`${format.day(day.date, "weekdayDay")}, ${t(`table.${register}`)}`}
+                          {...(kwh[register] === null
+                            ? {}
+                            : workings.figure(
+                                dayKey(day.date, registers.length > 1 ? register : undefined),
+                              ))}
+                        />
+                      </Row>
+                    ))}
+                  </View>
+                </View>
               </View>
             );
           })}

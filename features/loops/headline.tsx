@@ -3,7 +3,9 @@ import { View } from "react-native";
 import { useFluidWords, useWords } from "@features/i18n";
 import { Banner, Figure, Row, Text, TextLink, useBreakpoint } from "@features/ui";
 
-import type { LoopFigures } from "./loop-context";
+import type { WorkingsKey } from "@features/workings/workings-key";
+
+import type { FiguresWithWorkings, LoopFigures } from "./loop-context";
 import { energyQuantity, registersOf, type RegisterName } from "./register-words";
 import { shownFigure } from "./shown-figure";
 
@@ -11,7 +13,7 @@ import { shownFigure } from "./shown-figure";
 const remarkableShare = 0.001;
 
 /** Measured energy of the range, each register by itself, and how much time stands behind it. */
-export function Headline(props: LoopFigures & { onWorkings: () => void }) {
+export function Headline(props: FiguresWithWorkings) {
   const { loop, summary } = props;
   const t = useWords("loops");
   const phone = useBreakpoint() === "phone";
@@ -55,23 +57,24 @@ export function Headline(props: LoopFigures & { onWorkings: () => void }) {
   );
 }
 
-function RegisterFigure(
-  props: LoopFigures & { register: RegisterName; alone: boolean; onWorkings: () => void },
-) {
+function RegisterFigure(props: FiguresWithWorkings & { register: RegisterName; alone: boolean }) {
   const { register, summary, format, rangeName } = props;
   const t = useWords("loops");
   const title = t(`headline.energy.${register}`, { range: rangeName });
   const energy = summary.totals[register].energyKwh;
+  const plusMinus = summary.plusMinus[register].energy;
+  // A loop with one register needs not name it.
+  const key: WorkingsKey = props.alone ? { figure: "energy" } : { figure: "energy", register };
   return (
     <View>
       <Text variant="small" tone="ink3" hidden>
         {title}
       </Text>
       <Figure
-        {...shownFigure(format, energy, energyQuantity[register])}
+        {...shownFigure(format, energy, energyQuantity[register], undefined, plusMinus)}
         size={props.alone ? "xl" : "l"}
         said={title}
-        onOpenWorkings={props.onWorkings}
+        {...props.workings.figure(key)}
       />
     </View>
   );

@@ -2,6 +2,8 @@ import type { PointSummary } from "@shared/contracts/energy";
 import type { Loop, Point, Site } from "@shared/contracts/places";
 import type { Format } from "@features/i18n";
 
+import type { OpenWorkings } from "@features/workings/use-workings";
+
 import type { ShownRange } from "./shown-range";
 
 /** What every part of the loop page is about. */
@@ -18,4 +20,9 @@ export interface LoopView {
 
 export interface LoopFigures extends LoopView {
   readonly summary: PointSummary;
+}
+
+/** What a part needs whose figures open their workings. */
+export interface FiguresWithWorkings extends LoopFigures {
+  readonly workings: OpenWorkings;
 }

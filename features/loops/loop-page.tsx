@@ -6,6 +6,8 @@ import { View } from "react-native";
 import type { Loop, Point, Site } from "@shared/contracts/places";
 import { FailedAnswer } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
+import { useWorkings } from "@features/workings/use-workings";
+import { WorkingsAside } from "@features/workings/workings-panel";
 import {
   Button,
   dayInZone,
@@ -24,17 +26,17 @@ import { DayList } from "./day-list";
 import { DownloadsMenu } from "./downloads-menu";
 import { Headline } from "./headline";
 import { LoadView, type LoadParams } from "./load-view";
-import type { LoopFigures, LoopView } from "./loop-context";
+import type { FiguresWithWorkings, LoopView } from "./loop-context";
 import { LoopInspector } from "./loop-inspector";
 import { loopsPaths } from "./loops-paths";
 import { pageBlocks } from "./page-blocks";
 import { loopsQueries } from "./loops-queries";
 import { RangeBar, rangeWords } from "./range-bar";
 import { tagService } from "./register-words";
+import { askedFigure } from "./asked-figure";
 import { askedRange, defaultRange, rangeParams, weekOf, type ShownRange } from "./shown-range";
 import { SupportingFigures } from "./supporting-figures";
 import { ViewTabs } from "./view-tabs";
-import { WorkedOutSheet } from "./worked-out-sheet";
 
 interface LoopPageProps {
   loop: Loop;
@@ -148,7 +150,11 @@ function Ranged(props: RangedProps) {
       )}
     </>
   );
-  const aside = (
+  const workings = useWorkings();
+  const figure = workings.open && askedFigure(workings.open, view, summary.data ?? null);
+  const aside = figure ? (
+    <WorkingsAside asked={figure} onClose={workings.close} />
+  ) : (
     <Inspector title={t("inspector.title")} open={details} onClose={() => setDetails(false)}>
       <LoopInspector
         {...view}
@@ -163,6 +169,7 @@ function Ranged(props: RangedProps) {
         <Figures
           {...view}
           summary={summary.data}
+          workings={workings}
           stale={summary.isPlaceholderData}
           params={params}
         />
@@ -175,13 +182,11 @@ function Ranged(props: RangedProps) {
   );
 }
 
-function Figures(props: LoopFigures & { stale: boolean; params: Params }) {
+function Figures(props: FiguresWithWorkings & { stale: boolean; params: Params }) {
   const { summary, point, params } = props;
   const t = useWords("loops");
   const router = useRouter();
   const phone = useBreakpoint() === "phone";
-  const [workings, setWorkings] = useState(false);
-  const openWorkings = () => setWorkings(true);
   if (summary.firstReadingAt === null)
     return (
       <EmptyState
@@ -195,8 +200,8 @@ function Figures(props: LoopFigures & { stale: boolean; params: Params }) {
       />
     );
   const load = params.view === "load";
-  const headline = <Headline {...props} onWorkings={openWorkings} />;
-  const supporting = <SupportingFigures {...props} onWorkings={openWorkings} />;
+  const headline = <Headline {...props} />;
+  const supporting = <SupportingFigures {...props} />;
   const chart = (
     <ChartCard
       {...props}
@@ -234,7 +239,6 @@ function Figures(props: LoopFigures & { stale: boolean; params: Params }) {
           {chart}
         </>
       )}
-      <WorkedOutSheet {...props} open={workings} onClose={() => setWorkings(false)} />
     </View>
   );
 }

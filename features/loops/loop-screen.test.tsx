@@ -2,6 +2,7 @@ import { fireEvent, screen, waitFor, within } from "@testing-library/react";
 
 import type { PointSummary, SeriesAnswer } from "@shared/contracts/energy";
 import type { PlusMinus } from "@shared/contracts/plus-minus";
+import { SAMPLE_WORKINGS } from "@shared/workings/sample-workings";
 import { packNumbers } from "@shared/domain/readings/packed-numbers";
 import {
   loopOf,
@@ -173,24 +174,35 @@ afterEach(() => jest.restoreAllMocks());
 it("opens on the last week with readings and says how much of it they cover", async () => {
   show(<LoopScreen />);
   expect(
-    await screen.findByRole("button", { name: /^Cooling energy, week 20: 14,940 kilowatt hours/ }),
+    await screen.findByRole("button", {
+      name: /^Cooling energy, week 20: 14,940 plus or minus 500 kilowatt hours, show workings/,
+    }),
   ).toBeVisible();
   expect(screen.getByText("Readings cover 165.6 of 168 h")).toBeVisible();
   expect(screen.getByText("Thu 14 May, 15:30")).toBeVisible();
   expect(screen.getByRole("button", { name: /^Night base, 00:00 to 05:00: 23.0/ })).toBeVisible();
   expect(screen.getByText(/Weak signal/)).toBeVisible();
-  // No ± is worked out yet, so none may show.
-  expect(screen.queryByText(/±/)).toBeNull();
+  expect(
+    screen.getByRole("button", { name: /^ΔT, .*: 4.87 plus or minus 0.13 kelvin, show workings/ }),
+  ).toBeVisible();
 });
 
-it("shows what a figure was worked out from, the three means together", async () => {
+it("opens a figure's workings, says so in the address, and closes them on Escape", async () => {
+  const range = "from=2026-05-11&to=2026-05-18";
+  serverAnswers(`GET /points/9/workings?figure=energy&${range}`, SAMPLE_WORKINGS);
   show(<LoopScreen />);
-  fireEvent.click(await screen.findByRole("button", { name: /^Cooling energy/ }));
-  const panel = await screen.findByRole("dialog", { name: "How this was worked out" });
-  expect(within(panel).getByText(/1.600 MPa absolute, assumed/)).toBeVisible();
-  expect(within(panel).getByText(/at the return/)).toBeVisible();
-  for (const mean of ["4.87", "5.07", "4.27"])
-    expect(within(panel).getByText(new RegExp(mean))).toBeVisible();
+  const figure = await screen.findByRole("button", { name: /^Cooling energy/ });
+  fireEvent.click(figure);
+  const panel = await screen.findByRole("complementary", { name: "Workings" });
+  expect(await within(panel).findByText("Where the ± comes from")).toBeVisible();
+  expect(within(panel).getByText(/2,630.m³ × 1.166.kWh.*= 14,930.kWh/)).toBeVisible();
+  expect(within(panel).getByText("9,937 measured, 37 excluded, 106 missing")).toBeVisible();
+  expect(within(panel).getByRole("link", { name: "Open the evidence" })).toHaveAttribute(
+    "href",
+    "/sites/1/loops/3/points/7/evidence",
+  );
+  fireEvent.keyDown(panel, { key: "Escape" });
+  expect(screen.queryByRole("complementary", { name: "Workings" })).toBeNull();
 });
 
 it("never nets a changeover loop's registers", async () => {
@@ -200,10 +212,18 @@ it("never nets a changeover loop's registers", async () => {
     heating: register(1646.25, 5),
     cooling: register(1569.19, 5),
   };
-  serverAnswers(summaryCall, summaryOf({ totals }));
+  const registers = {
+    heating: { energy: plusMinus(55), deltaT: null },
+    cooling: { energy: plusMinus(52), deltaT: null },
+  };
+  serverAnswers(summaryCall, summaryOf({ totals, plusMinus: { ...registers, volume: null } }));
   show(<LoopScreen />);
-  expect(await screen.findByRole("button", { name: /^Heating energy.*1,646/ })).toBeVisible();
-  expect(screen.getByRole("button", { name: /^Cooling energy.*1,569/ })).toBeVisible();
+  expect(
+    await screen.findByRole("button", { name: /^Heating energy.*1,646 plus or minus 55/ }),
+  ).toBeVisible();
+  expect(
+    screen.getByRole("button", { name: /^Cooling energy.*1,569 plus or minus 52/ }),
+  ).toBeVisible();
   expect(screen.queryByText(/77/)).toBeNull();
 });
 
@@ -332,6 +352,7 @@ it("shows the table's days with their sum", async () => {
     to,
     basis: summaryOf().basis,
     totals: summaryOf().totals,
+    plusMinus: null,
     columns: {
       startMs: Array.from({ length: 7 }, (_, i) => Date.parse(from) + i * 86_400_000),
       lengthS: day(86_400),

@@ -4,13 +4,13 @@ import { View } from "react-native";
 import { useWords } from "@features/i18n";
 import { Figure, Text, useBreakpoint, useTheme, type ShownValue } from "@features/ui";
 
-import type { LoopFigures } from "./loop-context";
+import type { FiguresWithWorkings, LoopFigures } from "./loop-context";
 import { energyQuantity, powerQuantity } from "./register-words";
 import { shownFigure } from "./shown-figure";
 
 /** Volume, ΔT by flow, night base and how many rows count. */
-export function SupportingFigures(props: LoopFigures & { onWorkings: () => void }) {
-  const { summary, format, onWorkings } = props;
+export function SupportingFigures(props: FiguresWithWorkings) {
+  const { summary, format, workings } = props;
   const t = useWords("loops");
   const phone = useBreakpoint() === "phone";
   const { totals, nightBase } = summary;
@@ -36,8 +36,14 @@ export function SupportingFigures(props: LoopFigures & { onWorkings: () => void 
       <Cell title={t("figures.volume")}>
         <Shown
           said={t("figures.volume")}
-          figure={shownFigure(format, covered ? totals.volumeM3 : null, "volume")}
-          onWorkings={onWorkings}
+          figure={shownFigure(
+            format,
+            covered ? totals.volumeM3 : null,
+            "volume",
+            undefined,
+            summary.plusMinus.volume,
+          )}
+          workings={workings.figure({ figure: "volume" })}
         />
         {meterOnly ? <MeterOnly /> : null}
       </Cell>
@@ -49,8 +55,9 @@ export function SupportingFigures(props: LoopFigures & { onWorkings: () => void 
             totals[register].flowWeightedDeltaTK,
             "temperatureDifference",
             2,
+            summary.plusMinus[register].deltaT,
           )}
-          onWorkings={onWorkings}
+          workings={workings.figure({ figure: "deltaT" })}
         />
         {meterOnly ? <MeterOnly /> : null}
       </Cell>
@@ -61,15 +68,17 @@ export function SupportingFigures(props: LoopFigures & { onWorkings: () => void 
             format,
             nightBase?.powerKw ?? null,
             powerQuantity[nightBase?.register ?? register],
+            undefined,
+            nightBase?.plusMinus ?? null,
           )}
-          onWorkings={onWorkings}
+          workings={workings.figure({ figure: "nightBase" })}
         />
       </Cell>
       <Cell title={t(summary.basis.blockedBy ? "figures.covered" : "figures.rows")}>
         <Shown
           said={t(summary.basis.blockedBy ? "figures.covered" : "figures.rows")}
           figure={{ value: share === null ? null : share * 100, unit: shareUnit, places: 1 }}
-          onWorkings={onWorkings}
+          workings={workings.figure({ figure: "completeness" })}
         />
       </Cell>
     </View>
@@ -119,13 +128,17 @@ function Cell({ title, children }: { title: string; children: ReactNode }) {
   );
 }
 
-function Shown(props: { said: string; figure: ShownValue; onWorkings: () => void }) {
+function Shown(props: {
+  said: string;
+  figure: ShownValue;
+  workings: ReturnType<FiguresWithWorkings["workings"]["figure"]>;
+}) {
   return (
     <Figure
       {...props.figure}
       said={props.said}
       size="m"
-      {...(props.figure.value === null ? {} : { onOpenWorkings: props.onWorkings })}
+      {...(props.figure.value === null ? {} : props.workings)}
     />
   );
 }

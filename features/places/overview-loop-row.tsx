@@ -13,6 +13,10 @@ import {
   useBreakpoint,
   type QualityStretch,
 } from "@features/ui";
+import { addDays } from "@shared/domain/time/local-calendar";
+import type { PlusMinus } from "@shared/contracts/plus-minus";
+import type { Quantity } from "@shared/domain/units/display-units";
+import { useWorkings } from "@features/workings/use-workings";
 import { placesPaths } from "./places-paths";
 import { tagService } from "./service-words";
 
@@ -37,12 +41,20 @@ interface RowProps {
 export function OverviewLoopRow(props: RowProps) {
   const phone = useBreakpoint() === "phone";
   const { shown, monday } = props;
+  // The link lies under the row and the figures on it: a button inside a link could not be reached.
   return (
-    <Link href={placesPaths.loop(shown.loop.id, monday)} asChild>
-      <Pressable role="link" aria-label={useSaidRow(props)}>
+    <View>
+      <Link href={placesPaths.loop(shown.loop.id, monday)} asChild>
+        <Pressable
+          role="link"
+          aria-label={useSaidRow(props)}
+          style={{ position: "absolute", top: 0, right: 0, bottom: 0, left: 0 }}
+        />
+      </Link>
+      <View pointerEvents="box-none">
         {phone ? <PhoneRow {...props} /> : <WideRow {...props} />}
-      </Pressable>
-    </Link>
+      </View>
+    </View>
   );
 }
 
@@ -92,7 +104,10 @@ function percent(coverage: number, format: Format): string {
   return `${format.number(tenths / 10, 1)}\u00A0%`;
 }
 
-function Energies({ shown, format, size }: RowProps & { size: "m" | "s" }) {
+function Energies({ shown, format, monday, size }: RowProps & { size: "m" | "s" }) {
+  const t = useWords("places");
+  const workings = useWorkings();
+  const pointId = shown.mainPointId;
   const energies = energiesOf(shown);
   return (
     <View style={{ gap: 2, alignItems: size === "s" ? "flex-end" : "flex-start" }}>
@@ -104,7 +119,21 @@ function Energies({ shown, format, size }: RowProps & { size: "m" | "s" }) {
             <Figure
               value={kwh === null ? null : format.toDisplay(kwh, quantity)}
               unit={format.unit(quantity).unit}
+              uncertainty={expandedIn(shown.plusMinus?.[kind].energy, format, quantity)}
+              said={`${shown.loop.tag}, ${t(`register.${kind}`)}`}
               size={size}
+              {...(kwh === null || pointId === null
+                ? {}
+                : {
+                    onOpenWorkings: () =>
+                      workings.show({
+                        figure: "energy",
+                        register: kind,
+                        pointId,
+                        from: monday,
+                        to: addDays(monday, 7),
+                      }),
+                  })}
             />
           </View>
         );
@@ -122,8 +151,20 @@ function RegisterWord({ kind }: { kind: "heating" | "cooling" }) {
   );
 }
 
-function DeltaT({ shown, format }: RowProps) {
+/** The ± in the unit the figure is shown in; null where there is none. */
+function expandedIn(
+  plusMinus: PlusMinus | null | undefined,
+  format: Format,
+  quantity: Quantity,
+): number | null {
+  return plusMinus ? plusMinus.expanded * format.unit(quantity).factor : null;
+}
+
+function DeltaT({ shown, format, monday }: RowProps) {
   const t = useWords("places");
+  const workings = useWorkings();
+  const pointId = shown.mainPointId;
+  const register = shown.loop.service === "hot" ? "heating" : "cooling";
   if (shown.flowWeightedDeltaTK === null) return null;
   return (
     <View style={{ flexDirection: "row", alignItems: "baseline", gap: 5 }}>
@@ -133,8 +174,26 @@ function DeltaT({ shown, format }: RowProps) {
       <Figure
         value={format.toDisplay(shown.flowWeightedDeltaTK, "temperatureDifference")}
         unit={format.unit("temperatureDifference").unit}
+        uncertainty={expandedIn(
+          shown.plusMinus?.[register].deltaT,
+          format,
+          "temperatureDifference",
+        )}
         places={1}
+        said={`${shown.loop.tag}, ${t("overview.deltaT")}`}
         size="s"
+        {...(pointId === null
+          ? {}
+          : {
+              onOpenWorkings: () =>
+                workings.show({
+                  figure: "deltaT",
+                  register,
+                  pointId,
+                  from: monday,
+                  to: addDays(monday, 7),
+                }),
+            })}
       />
     </View>
   );

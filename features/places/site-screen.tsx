@@ -19,6 +19,7 @@ import {
   useBreakpoint,
 } from "@features/ui";
 import { groupByBuilding } from "./building-groups";
+import { WorkingsOverPage } from "@features/workings/workings-over-page";
 import { placesPaths } from "./places-paths";
 import { placesQueries } from "./places-queries";
 import { PipeKey } from "./site-risers";
@@ -106,6 +107,7 @@ function SitePage({ site, week }: { site: Site; week: string | undefined }) {
       <Answer of={overview} blocks={planBlocks}>
         {(data) => <SiteContent site={site} monday={monday} now={now} data={data} />}
       </Answer>
+      <WorkingsOverPage />
     </Screen>
   );
 }

@@ -98,6 +98,14 @@ describe("the page of a site", () => {
       energyKwh: 27170,
       heatingKwh: 0,
       coolingKwh: 27170,
+      plusMinus: {
+        heating: { energy: null, deltaT: null },
+        cooling: {
+          energy: { expanded: 750, percent: 3, basis: "evidence" },
+          deltaT: { expanded: 0.13, percent: 3, basis: "evidence" },
+        },
+        volume: null,
+      },
       flowWeightedDeltaTK: 4.5,
       coverage: 0.9996,
       quality: [],
@@ -109,6 +117,7 @@ describe("the page of a site", () => {
       energyKwh: null,
       heatingKwh: null,
       coolingKwh: null,
+      plusMinus: null,
       flowWeightedDeltaTK: null,
       coverage: null,
       quality: [],

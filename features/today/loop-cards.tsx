@@ -15,7 +15,10 @@ import {
   type MarkKind,
   type ShownValue,
 } from "@features/ui";
+import { addDays } from "@shared/domain/time/local-calendar";
+import type { PlusMinus } from "@shared/contracts/plus-minus";
 import type { Quantity } from "@shared/domain/units/display-units";
+import { useWorkings } from "@features/workings/use-workings";
 
 import { tagService } from "./tag-service";
 import { todayPaths } from "./today-paths";
@@ -65,6 +68,7 @@ function OneLoop({
 }) {
   const t = useWords("today");
   const { loop } = item;
+  const workings = useWorkings();
   const service = tagService(loop.service);
   const place = loop.isMain
     ? loop.buildingName
@@ -89,10 +93,26 @@ function OneLoop({
         </Pressable>
       </Link>
       <View style={{ marginTop: 8 }}>
-        <LoopCard {...drawn(item, day, format)} service={service} {...emptyOf(item)} />
+        <LoopCard
+          {...drawn(item, day, format)}
+          {...openers()}
+          service={service}
+          {...emptyOf(item)}
+        />
       </View>
     </Card>
   );
+
+  function openers(): Pick<LoopCardProps, "powerWorkings" | "energyWorkings"> {
+    const { pointId, card } = item;
+    if (pointId === null || card === null || day === null) return {};
+    const { register } = card;
+    const key = { register, pointId, from: day, to: addDays(day, 1) };
+    return {
+      powerWorkings: { onOpenWorkings: () => workings.show({ figure: "power", ...key }) },
+      energyWorkings: { onOpenWorkings: () => workings.show({ figure: "energy", ...key }) },
+    };
+  }
 
   function emptyOf({ card, emptyReason, lastReadingAt }: TodayLoop): Pick<LoopCardProps, "empty"> {
     if (card !== null) return {};
@@ -120,12 +140,18 @@ function drawn(
   day: string | null,
   format: Format,
 ): Omit<LoopCardProps, "service"> {
-  const { card, energyKwh, nominalSizeDn, meterSide } = item;
+  const { card, energyKwh, energyPlusMinus, nominalSizeDn, meterSide } = item;
   const base = { nominalMm: nominalSizeDn, meterSide: meterSide ?? "return" } as const;
   if (card === null) return base;
-  const shown = (stored: number | null, quantity: Quantity, places?: number): ShownValue => ({
+  const shown = (
+    stored: number | null,
+    quantity: Quantity,
+    places?: number,
+    plusMinus: PlusMinus | null = null,
+  ): ShownValue => ({
     value: stored === null ? null : format.toDisplay(stored, quantity),
     unit: format.unit(quantity).unit,
+    uncertainty: plusMinus && plusMinus.expanded * format.unit(quantity).factor,
     ...(places === undefined ? {} : { places }),
   });
   const heating = card.register === "heating";
@@ -135,9 +161,14 @@ function drawn(
     supply: shown(card.supplyC, "temperature", 2),
     return: shown(card.returnC, "temperature", 2),
     flow: shown(card.flowM3PerHour, "flow", 1),
-    power: shown(card.powerKw, heating ? "heatingPower" : "coolingPower", 1),
+    power: shown(card.powerKw, heating ? "heatingPower" : "coolingPower", 1, card.plusMinus),
     deltaT: shown(card.deltaTK, "temperatureDifference", 1),
-    energy: shown(energyKwh, heating ? "heatingEnergy" : "coolingEnergy"),
+    energy: shown(
+      energyKwh,
+      heating ? "heatingEnergy" : "coolingEnergy",
+      undefined,
+      energyPlusMinus,
+    ),
     ...(day === null ? {} : { energyLabel: format.day(day, "weekdayShort") }),
   };
 }

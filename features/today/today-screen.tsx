@@ -19,6 +19,8 @@ import {
 } from "@features/ui";
 
 import { FindingsList } from "./findings-list";
+import { WorkingsOverPage } from "@features/workings/workings-over-page";
+
 import { LoopCards } from "./loop-cards";
 import { todayPaths } from "./today-paths";
 import { todayQueries } from "./today-queries";
@@ -120,6 +122,7 @@ function SiteToday({ site, sites }: { site: Site; sites: readonly Site[] }) {
           </View>
           <View style={size === "wide" ? { flex: 1, minWidth: 0 } : null}>
             <LoopCards today={today.data} format={format} />
+            <WorkingsOverPage />
           </View>
         </View>
       )}

@@ -2,6 +2,7 @@ import { Pressable, Text as NativeText, View } from "react-native";
 
 import { formatFigure, NO_BREAK_SPACE, useFormat, useWords } from "@features/i18n";
 
+import { MarkLine } from "./mark-line";
 import { pressOpacity } from "./press-style";
 import { typeScale, useTheme, type TypeName } from "./theme";
 import { VisuallyHidden } from "./visually-hidden";
@@ -22,6 +23,8 @@ export interface FigureProps {
   said?: string;
   /** Opens the workings: shows the dotted line and makes the figure a button. */
   onOpenWorkings?: () => void;
+  /** Its workings are open beside the page: it is marked, and a line leads to them. */
+  workingsOpen?: boolean;
 }
 
 interface Faces {
@@ -90,12 +93,17 @@ export function Figure(props: FigureProps) {
     <Pressable
       role="button"
       aria-label={t("figure.withWorkings", { figure: said })}
+      aria-expanded={props.workingsOpen}
       onPress={onOpenWorkings}
       hitSlop={10}
-      style={({ pressed }) => [{ alignSelf: "flex-start", gap: 2 }, pressOpacity(pressed)]}
+      style={({ pressed }) => [
+        { alignSelf: "flex-start", gap: 2 },
+        props.workingsOpen ? { backgroundColor: colour.markTint } : null,
+        pressOpacity(pressed),
+      ]}
     >
       {picture}
-      <DottedRule />
+      {props.workingsOpen ? <MarkLine /> : <DottedRule />}
     </Pressable>
   );
 }

@@ -23,6 +23,7 @@ export { DropZone } from "./drop-zone";
 export type { DropZoneProps } from "./drop-zone-props";
 export { type FieldProps } from "./field-frame";
 export { Figure, useSaidFigure, type FigureProps } from "./figure";
+export { Formula, FormulaSymbol, type FormulaPiece } from "./formula";
 export { FieldGroup, FieldRow, Form, type FormProps } from "./form";
 export { Icon, type IconProps } from "./icon";
 export type { IconName } from "./icon-paths";
@@ -70,6 +71,7 @@ export { barRun, railRun, risingRun, type Span } from "./run-line";
 export { Segments, type SegmentsProps } from "./segments";
 export { SelectField, type SelectFieldProps } from "./select-field";
 export { Inspector, Sheet, type SheetProps } from "./sheet";
+export { squaredPaper } from "./squared-paper";
 export { Spark, sparkPath, type SparkProps } from "./spark";
 export { Row, Stack } from "./stack";
 export {

@@ -3,7 +3,7 @@ import Svg, { Path, Rect } from "react-native-svg";
 
 import { useWords } from "@features/i18n";
 
-import { Figure } from "./figure";
+import { Figure, type FigureProps } from "./figure";
 import { PipeLabel } from "./loop-card-labels";
 import type { Service } from "./loop-tag";
 import { Mark, type MarkKind } from "./mark";
@@ -18,6 +18,8 @@ export interface ShownValue {
   readonly uncertainty?: number | null;
   readonly places?: number;
 }
+
+type FigureWorkings = Pick<FigureProps, "onOpenWorkings" | "workingsOpen">;
 
 export interface LoopCardProps {
   service: Service;
@@ -34,7 +36,9 @@ export interface LoopCardProps {
   /** Short words before the energy: “Thu”, “Week 20”. */
   energyLabel?: string;
   deltaT?: ShownValue;
-  onOpenWorkings?: () => void;
+  /** Open the workings of the power and of the energy, and say whether they are open. */
+  powerWorkings?: FigureWorkings;
+  energyWorkings?: FigureWorkings;
   /** Where the card leads a page its power is set larger. */
   powerSize?: "m" | "l";
   /** No data: the loop becomes a dashed outline with the reason inside. */
@@ -197,7 +201,7 @@ function FullLoop(props: LoopCardProps & Drawn) {
               {...props.power}
               size={props.powerSize ?? "m"}
               said={t("loop.power")}
-              onOpenWorkings={props.onOpenWorkings}
+              {...props.powerWorkings}
             />
           ) : null}
           {props.energy ? (
@@ -207,7 +211,12 @@ function FullLoop(props: LoopCardProps & Drawn) {
                   {props.energyLabel}
                 </Text>
               ) : null}
-              <Figure {...props.energy} size="s" said={t("loop.energy")} />
+              <Figure
+                {...props.energy}
+                size="s"
+                said={t("loop.energy")}
+                {...props.energyWorkings}
+              />
             </View>
           ) : null}
         </View>

@@ -5,6 +5,7 @@ import { useWords } from "@features/i18n";
 
 import { Button } from "./button";
 import { Overlay } from "./overlay";
+import { squaredPaper } from "./squared-paper";
 import { Row } from "./stack";
 import { Text } from "./text";
 import { layout, radius, useBreakpoint, useTheme, webStyle } from "./theme";
@@ -18,8 +19,12 @@ export interface SheetProps {
   kind?: "bottom" | "side";
   /** Space left free at the foot of the screen, for the phone bar. */
   foot?: number;
-  /** What it is made of: paper, or the page ground where it grows out of the bar. */
-  ground?: "sheet" | "pad";
+  /** What it is made of: paper, squared for workings, or the page ground where it grows out of the bar. */
+  ground?: "sheet" | "pad" | "squared";
+  /** Buttons before the one that closes it. */
+  actions?: ReactNode;
+  /** What the closing button is called, where “Close” would not do. */
+  closeLabel?: string;
 }
 
 /** A panel over the page. Escape, the close button and a tap outside shut it. */
@@ -55,12 +60,13 @@ export function Sheet(props: SheetProps) {
       <View
         style={[
           {
-            backgroundColor: colour[props.ground ?? "sheet"],
+            backgroundColor: colour[props.ground === "pad" ? "pad" : "sheet"],
             paddingHorizontal: 16,
             paddingTop: 12,
             paddingBottom: 20,
           },
           place,
+          props.ground === "squared" ? squaredPaper(colour) : null,
           webStyle({
             boxShadow: props.foot ? "none" : float,
             maxHeight: bottom ? "88%" : "100dvh",
@@ -86,13 +92,16 @@ export function Sheet(props: SheetProps) {
           <Text variant="heading" id={id}>
             {props.title}
           </Text>
-          <Button
-            kind="quiet"
-            icon="close"
-            iconOnly
-            label={t("dialog.close")}
-            onPress={props.onClose}
-          />
+          <Row gap={1}>
+            {props.actions}
+            <Button
+              kind="quiet"
+              icon="close"
+              iconOnly
+              label={props.closeLabel ?? t("dialog.close")}
+              onPress={props.onClose}
+            />
+          </Row>
         </Row>
         {props.children}
       </View>

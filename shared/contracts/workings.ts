@@ -28,7 +28,17 @@ const source = z.object({
 });
 
 export const workingsInput = z.object({
-  symbol: z.enum(["flow", "supply", "return", "density", "enthalpy", "power", "pressure", "bore"]),
+  symbol: z.enum([
+    "flow",
+    "supply",
+    "return",
+    "deltaT",
+    "density",
+    "enthalpy",
+    "power",
+    "pressure",
+    "bore",
+  ]),
   code: z.string().describe("what it is, such as flowOnReturn or supplyMeanByFlow"),
   value: z.number().nullable(),
   /** For what varies: least and greatest reading. */
@@ -49,6 +59,7 @@ export const workings = z.object({
     siteId: id,
     siteName: z.string(),
     zone: z.string(),
+    unitSystem: z.enum(["si", "inchPound"]),
     isDemo: z.boolean(),
   }),
   from: instant,

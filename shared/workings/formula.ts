@@ -22,6 +22,7 @@ export const INPUT_SYMBOLS: Readonly<Record<Workings["inputs"][number]["symbol"]
   flow: symbol(FLOW),
   supply: symbol("θ", "s"),
   return: symbol("θ", "r"),
+  deltaT: symbol("Δθ"),
   density: symbol("ρ"),
   enthalpy: symbol("h"),
   power: symbol("P"),

@@ -16,6 +16,7 @@ export const SAMPLE_WORKINGS: Workings = {
     siteId: "1",
     siteName: "Harbour Court Works",
     zone: "Europe/London",
+    unitSystem: "si",
     isDemo: true,
   },
   from: "2026-05-10T23:00:00Z",

@@ -212,14 +212,17 @@ const inputQuantity: Partial<Record<Workings["inputs"][number]["symbol"], Quanti
   flow: "flow",
   supply: "temperature",
   return: "temperature",
+  deltaT: "temperatureDifference",
   pressure: "pressure",
   bore: "pipeSize",
 };
 
+const twoPlaces: readonly string[] = ["flow", "supply", "return", "deltaT"];
+
 function inputTexts(model: Workings, t: Words, format: Format): InputText[] {
   return model.inputs.map((input) => {
     const quantity = inputQuantity[input.symbol];
-    const places = input.symbol === "flow" || quantity === "temperature" ? 2 : undefined;
+    const places = twoPlaces.includes(input.symbol) ? 2 : undefined;
     const write = (value: number) =>
       quantity
         ? format.number(format.toDisplay(value, quantity), places)
@@ -227,7 +230,7 @@ function inputTexts(model: Workings, t: Words, format: Format): InputText[] {
     const detail = t(`inputs.detail.${input.code}`, { pressure: pressureText(model, format) });
     const serial = input.source.instrument;
     return {
-      key: input.symbol,
+      key: input.code,
       symbol: INPUT_SYMBOLS[input.symbol],
       label: t(`inputs.symbol.${input.symbol}`),
       detail: serial === null ? detail : t("inputs.withSerial", { serial, detail }),

@@ -2,7 +2,7 @@ import type { ViewStyle } from "react-native";
 
 /** Style only a browser knows (sticky, fixed, viewport heights), which React Native's types lack. */
 export interface WebOnlyStyle {
-  position?: "sticky" | "fixed";
+  position?: "sticky" | "fixed" | "relative";
   top?: number | string;
   bottom?: number | string;
   left?: number | string;
@@ -21,8 +21,13 @@ export interface WebOnlyStyle {
   transition?: string;
   textDecorationThickness?: string;
   textUnderlineOffset?: string;
+  outline?: "none";
   touchAction?: string;
   overflowWrap?: "anywhere";
+  backgroundImage?: string;
+  backgroundSize?: string;
+  backgroundPosition?: string;
+  pointerEvents?: "none";
   whiteSpace?: "nowrap" | "pre-wrap" | "pre";
 }
 

@@ -1,5 +1,5 @@
 import type { Workings, WorkingsFigure } from "@shared/contracts/workings";
-import type { EnergyTotals } from "@shared/domain/energy/totals";
+import { deltaTMeans, type EnergyTotals } from "@shared/domain/energy/totals";
 import type { EnergyPoint } from "@server/queries/energy/energy-point";
 import type { RegisterName } from "@server/queries/energy/loads";
 import type { FigurePart } from "./figure-uncertainty";
@@ -27,8 +27,9 @@ export function workingsInputs(energyPoint: EnergyPoint, given: Given): Input[] 
   const flow = flowInput(energyPoint, given);
   if (figure === "volume") return [flow, ...boreInput(given)];
   const temperatures = [temperature("supply", given), temperature("return", given)];
-  if (figure === "deltaT") return [flow, ...temperatures];
-  return [flow, ...temperatures, ...waterInputs(energyPoint, given), ...boreInput(given)];
+  const deltaTs = deltaTInputs(given);
+  if (figure === "deltaT") return [flow, ...temperatures, ...deltaTs];
+  return [flow, ...temperatures, ...deltaTs, ...waterInputs(energyPoint, given), ...boreInput(given)];
 }
 
 /** Rows come from the one file or the one instrument only where there is one. */
@@ -69,6 +70,22 @@ function temperature(side: "supply" | "return", given: Given): Input {
     unit: "°C",
     source: readBy(given, (part) => evidenceOf(part)?.probes?.[side].serial ?? null),
   };
+}
+
+/** The three means are never shown without one another: they answer different questions. */
+function deltaTInputs({ totals, register }: Given): Input[] {
+  const means = deltaTMeans(totals[register], totals.meterOnlyS);
+  return (
+    [
+      ["deltaTByFlow", means.flowWeightedK],
+      ["deltaTByEnergy", means.energyWeightedK],
+      ["deltaTOverTime", means.timeMeanK],
+    ] as const
+  ).flatMap(([code, value]): Input[] =>
+    value === null
+      ? []
+      : [{ symbol: "deltaT", code, value, range: null, unit: "K", source: worked }],
+  );
 }
 
 function meterPower(given: Given): Input {

@@ -111,6 +111,7 @@ export async function workingsOf(
       siteId: site.id,
       siteName: site.name,
       zone: site.zone,
+      unitSystem: site.unitSystem,
       isDemo: site.isDemo,
     },
     from: instantText(new Date(range.startMs)),
