@@ -1,5 +1,5 @@
 import { changeOf, draftOf, emptyDraft } from "./change-draft";
-import { instantOf, minuteOf, wallTimeOf } from "./local-time";
+import { instantOf, minuteOf, wallTimeOf } from "@shared/domain/time/wall-time";
 
 const asShown = (value: number) => value;
 

@@ -1,7 +1,7 @@
 import type { CorrectionChange } from "@shared/contracts/corrections";
 import type { Fluid } from "@shared/contracts/places";
 import type { Quantity } from "@shared/domain/units/display-units";
-import { instantOf, wallTimeOf, type WallTime } from "./local-time";
+import { instantOf, wallTimeOf, type WallTime } from "@shared/domain/time/wall-time";
 
 export type ChangeKind = CorrectionChange["kind"];
 export const changeKinds = [

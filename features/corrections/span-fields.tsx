@@ -1,7 +1,7 @@
+import { minuteOf, type WallTime } from "@shared/domain/time/wall-time";
 import { useWords } from "@features/i18n";
 import { DateField, FieldRow, SwitchField, TextField } from "@features/ui";
 import type { ChangeDraft } from "./change-draft";
-import { minuteOf, type WallTime } from "./local-time";
 
 export interface DraftProps {
   readonly draft: ChangeDraft;

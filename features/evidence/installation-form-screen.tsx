@@ -4,7 +4,7 @@ import { useRef, useState } from "react";
 import { View } from "react-native";
 import { createInstallation, type Installation, type Instrument } from "@shared/contracts/evidence";
 import type { Loop, Point, Site } from "@shared/contracts/places";
-import { Answer, call, useChange } from "@features/api";
+import { Answer, call, useChange, useSettled } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Banner,
@@ -47,7 +47,6 @@ import {
 } from "./installation-values";
 import { tagService } from "./tag-service";
 import { usePointCrumbs } from "./use-point-crumbs";
-import { useSettled } from "./use-settled";
 
 type Ids = { siteId: string; loopId: string; pointId: string };
 

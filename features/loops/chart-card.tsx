@@ -2,6 +2,7 @@ import { useQueryClient } from "@tanstack/react-query";
 import { useMemo } from "react";
 import { View } from "react-native";
 
+import { saveFile } from "@features/api";
 import { useWords } from "@features/i18n";
 import { ChartKey } from "@features/charts/chart-key";
 import { LoopChart } from "@features/charts/loop-chart";
@@ -22,7 +23,6 @@ import type { LoopFigures } from "./loop-context";
 import { seriesLoader } from "./loops-queries";
 import { ReadingsTable } from "./readings-table";
 import { energyQuantity, registersOf, tagService } from "./register-words";
-import { saveFile } from "./save-file";
 
 export type TableStep = "day" | "hour" | "row";
 

@@ -1,9 +1,8 @@
 import { downloadIntervals, downloadReadings } from "@shared/contracts/energy";
-import { addressOf } from "@features/api";
+import { addressOf, saveFile } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Menu, useToast } from "@features/ui";
 
-import { saveFile } from "./save-file";
 import type { ShownRange } from "./shown-range";
 
 export type DownloadStep = "quarterHour" | "hour" | "day" | "readings";

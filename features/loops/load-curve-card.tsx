@@ -2,7 +2,7 @@ import { useMemo, useState } from "react";
 import { View } from "react-native";
 
 import { downloadDurationCurve, type PointShape } from "@shared/contracts/shape";
-import { addressOf } from "@features/api";
+import { addressOf, saveFile } from "@features/api";
 import { useWords } from "@features/i18n";
 import {
   Button,
@@ -21,7 +21,6 @@ import { LoadCurve } from "./load-curve";
 import { useHours } from "./load-figure";
 import type { LoadFigures } from "./load-view";
 import { powerQuantity, tagService } from "./register-words";
-import { saveFile } from "./save-file";
 
 type CurvePoint = PointShape["curve"][number];
 

@@ -1,5 +1,5 @@
-import { isLocalDate } from "@shared/domain/time/local-calendar";
-import { zoneOffsets } from "@shared/domain/time/zone-offsets";
+import { isLocalDate } from "./local-calendar";
+import { zoneOffsets } from "./zone-offsets";
 
 /** A day and a time of day as they are on a wall at the site. */
 export interface WallTime {
