@@ -4,6 +4,7 @@ import enEvidence from "@shared/words/en/evidence.json";
 import enWorkings from "@shared/words/en/workings.json";
 
 import deCharts from "./locales/de/charts.json";
+import deCompare from "./locales/de/compare.json";
 import deCorrections from "./locales/de/corrections.json";
 import deEnergy from "./locales/de/energy.json";
 import deImports from "./locales/de/imports.json";
@@ -18,6 +19,7 @@ import deShell from "./locales/de/shell.json";
 import deToday from "./locales/de/today.json";
 import deUi from "./locales/de/ui.json";
 import enCharts from "./locales/en/charts.json";
+import enCompare from "./locales/en/compare.json";
 import enCorrections from "./locales/en/corrections.json";
 import enEnergy from "./locales/en/energy.json";
 import enImports from "./locales/en/imports.json";
@@ -38,6 +40,7 @@ import enUi from "./locales/en/ui.json";
  */
 export const words = {
   charts: { en: enCharts, de: deCharts },
+  compare: { en: enCompare, de: deCompare },
   corrections: { en: enCorrections, de: deCorrections },
   energy: { en: enEnergy, de: deEnergy },
   evidence: { en: enEvidence, de: deEvidence },

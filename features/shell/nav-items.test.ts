@@ -6,6 +6,7 @@ describe("navigation", () => {
     expect(destinationOf("/loops/12")).toBe("sites");
     expect(destinationOf("/sites/3/edit")).toBe("sites");
     expect(destinationOf("/logs/new")).toBe("logs");
+    expect(destinationOf("/compare/meters/7")).toBe("compare");
     expect(destinationOf("/settings/members")).toBe("settings");
     expect(destinationOf("/sitesmap")).toBeNull();
   });

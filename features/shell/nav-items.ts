@@ -1,7 +1,7 @@
 import type { Role } from "@shared/contracts/people";
 import type { IconName } from "@features/ui";
 
-export type Destination = "today" | "sites" | "logs" | "kit" | "settings";
+export type Destination = "today" | "sites" | "logs" | "compare" | "kit" | "settings";
 
 interface NavItem {
   readonly href: string;
@@ -14,6 +14,7 @@ export const navItems: Readonly<Record<Destination, NavItem>> = {
   today: { href: "/", icon: "today", also: [] },
   sites: { href: "/sites", icon: "sites", also: ["/loops"] },
   logs: { href: "/logs", icon: "logs", also: [] },
+  compare: { href: "/compare", icon: "compare", also: [] },
   kit: { href: "/kit", icon: "kit", also: [] },
   settings: { href: "/settings", icon: "settings", also: [] },
 };
@@ -34,9 +35,9 @@ const byRole: Readonly<Record<Role, RoleNav>> = {
     rail: ["today", "sites", "logs", "kit", "settings"],
   },
   engineer: {
-    bar: ["today", "sites", "logs"],
+    bar: ["today", "sites", "compare", "logs"],
     more: ["kit", "settings"],
-    rail: ["today", "sites", "logs", "kit", "settings"],
+    rail: ["today", "sites", "logs", "compare", "kit", "settings"],
   },
   billingClerk: {
     bar: ["today", "sites"],
@@ -45,8 +46,8 @@ const byRole: Readonly<Record<Role, RoleNav>> = {
   },
   administrator: {
     bar: ["today", "sites"],
-    more: ["logs", "kit", "settings"],
-    rail: ["today", "sites", "logs", "kit", "settings"],
+    more: ["logs", "compare", "kit", "settings"],
+    rail: ["today", "sites", "logs", "compare", "kit", "settings"],
   },
   tenantContact: { bar: ["settings"], more: [], rail: ["settings"] },
 };

@@ -1,0 +1,1 @@
+export { ComparisonScreen as default } from "@features/compare/comparison-screen";

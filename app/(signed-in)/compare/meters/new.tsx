@@ -1,0 +1,1 @@
+export { ComparisonFormScreen as default } from "@features/compare/comparison-form-screen";
