@@ -33,7 +33,7 @@ export function BudgetRows({ budget }: { budget: BudgetText }) {
                 }}
               />
             </View>
-            <View style={{ width: 54, alignItems: "flex-end" }}>
+            <View style={{ minWidth: 54, alignItems: "flex-end" }}>
               <Text variant="figureS">{row.percent}</Text>
             </View>
           </Ruled>

@@ -6,6 +6,7 @@ import { FailedAnswer } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Button,
+  layout,
   LoadingBlocks,
   Menu,
   Row,
@@ -81,8 +82,9 @@ function Drawer({ asked, onClose }: PanelProps) {
       }}
       style={[
         {
-          width: 420,
+          width: layout.wide.workings,
           flexShrink: 0,
+          alignSelf: "flex-start",
           backgroundColor: colour.sheet,
           borderLeftWidth: stroke.run,
           borderLeftColor: colour.mark,
@@ -90,7 +92,14 @@ function Drawer({ asked, onClose }: PanelProps) {
           paddingHorizontal: 24,
         },
         squaredPaper(colour),
-        webStyle({ outline: "none" }),
+        // As tall as the window, so that figure and workings stay in sight together.
+        webStyle({
+          outline: "none",
+          position: "sticky",
+          top: 0,
+          height: "100dvh",
+          overflowY: "auto",
+        }),
       ]}
     >
       <Row justify="space-between">

@@ -29,8 +29,10 @@ export function budgetText(model: Workings, t: Words, format: Format): BudgetTex
   const { budget } = model;
   if (budget === null) return null;
   const largest = budget.terms[0]?.percent ?? 0;
-  const percent = (value: number, places = 2) =>
-    t("budget.percent", { value: format.number(value, places) });
+  const percent = (value: number) =>
+    value > 0 && value < 0.005
+      ? t("budget.percentUnder", { value: format.number(0.01, 2) })
+      : t("budget.percent", { value: format.number(value, 2) });
   return {
     title: t("budget.title"),
     rows: budget.terms.map(({ term, percent: size }) => ({
