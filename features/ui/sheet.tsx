@@ -88,7 +88,8 @@ export function Sheet(props: SheetProps) {
             }}
           />
         ) : null}
-        <Row justify="space-between" style={{ marginBottom: 8 }}>
+        {/* Above what follows: a menu in it opens over the content. */}
+        <Row justify="space-between" style={{ marginBottom: 8, zIndex: 20 }}>
           <Text variant="heading" id={id}>
             {props.title}
           </Text>

@@ -102,7 +102,7 @@ function Drawer({ asked, onClose }: PanelProps) {
         }),
       ]}
     >
-      <Row justify="space-between">
+      <Row justify="space-between" style={{ zIndex: 20 }}>
         <Text variant="heading" level={2}>
           {t("title")}
         </Text>
