@@ -21,6 +21,7 @@ import {
   useBreakpoint,
   useDraft,
   useToast,
+  webStyle,
 } from "@features/ui";
 import { comparePaths } from "./compare-paths";
 import { compareQueries } from "./compare-queries";
@@ -30,7 +31,7 @@ import {
   valuesOf,
   type ComparisonValues,
 } from "./comparison-values";
-import { LiveResult } from "./live-result";
+import { LiveResult, LiveVerdict } from "./live-result";
 import { PeriodFields } from "./period-fields";
 import { SideFields } from "./side-fields";
 import { StandInFields } from "./stand-in-fields";
@@ -124,6 +125,9 @@ function Editor(props: EditorProps) {
       crumbs={props.crumbs}
       footer={
         <>
+          {wide || !read.ok || !trial.data || trial.error ? null : (
+            <LiveVerdict result={trial.data} />
+          )}
           <Button kind="second" label={t("form.cancel")} href={comparePaths.compare} />
           {mayKeep ? <Button label={t("form.save")} busy={saving.busy} onPress={submit} /> : null}
         </>
@@ -195,7 +199,7 @@ function Editor(props: EditorProps) {
             </View>
           </Form>
         </View>
-        <View style={wide ? { flex: 1, minWidth: 0 } : null}>
+        <View style={wide ? [{ flex: 1, minWidth: 0 }, inSight] : null}>
           <LiveResult
             missing={read.ok ? [] : read.missing}
             result={trial.data}
@@ -208,6 +212,9 @@ function Editor(props: EditorProps) {
     </Screen>
   );
 }
+
+/** Beside a form longer than the window, the verdict stays in sight; the page's end shows the rest. */
+const inSight = webStyle({ position: "sticky", top: 16 });
 
 /** The body once typing has paused; compared by what it says, because every render makes a new one. */
 function useSettledBody(body: MeterComparisonBody | null): MeterComparisonBody | null {

@@ -1,8 +1,9 @@
 import { View } from "react-native";
 import type { MeterComparisonResult } from "@shared/contracts/meter-comparisons";
 import { ApiError, FailedAnswer, useErrorWords } from "@features/api";
-import { useWords } from "@features/i18n";
-import { Banner, Card, Text } from "@features/ui";
+import { useFormat, useWords } from "@features/i18n";
+import { Banner, Card, MarkedText, Text } from "@features/ui";
+import { verdictMarks } from "./compare-words";
 import { ComparisonResult } from "./comparison-result";
 import type { MissingPart } from "./comparison-values";
 
@@ -19,6 +20,20 @@ export function LiveResult(props: {
     <Card label={t("result.title")}>
       <Content {...props} />
     </Card>
+  );
+}
+
+/** The verdict in a word, where the whole result is out of sight below the form. */
+export function LiveVerdict({ result }: { result: MeterComparisonResult }) {
+  const t = useWords("compare");
+  const format = useFormat();
+  const { verdict, energy } = result;
+  const words = t(`verdictShort.${verdict}`);
+  const en = energy.en === null ? "" : `, ${t("result.en")} ${format.number(energy.en, 2)}`;
+  return (
+    <View style={{ width: "100%" }}>
+      <MarkedText kind={verdictMarks[verdict]}>{`${words}${en}`}</MarkedText>
+    </View>
   );
 }
 

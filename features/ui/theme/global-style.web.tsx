@@ -14,6 +14,8 @@ function rules(theme: Theme): string {
   const { colour } = theme;
   return `
 :root{--lw-mark:${colour.mark};color-scheme:${theme.name === "plantRoom" ? "dark" : "light"}}
+/* What is tabbed to stays clear of the pinned buttons and the bar. */
+html{scroll-padding-block:16px 168px}
 html,body{height:auto;min-height:100%;margin:0;overflow:visible;background:${colour.pad};color:${colour.ink}}
 body{font-family:${font.ui.regular};font-variant-numeric:tabular-nums;-webkit-font-smoothing:antialiased;-webkit-text-size-adjust:100%;overflow-x:hidden}
 #root{display:flex;flex-direction:column;min-height:100vh;min-height:100dvh;height:auto}
