@@ -36,9 +36,10 @@ function ownPlaces(value: number): number {
 }
 
 function written(name: string, value: number, format: Format): string {
-  const writing = WRITINGS.find(({ ends }) => ends.test(name)) ?? {};
-  const { quantity, unit } = writing;
-  const places = CHOSEN.test(name) ? ownPlaces(value) : writing.places;
+  const writing = WRITINGS.find(({ ends }) => ends.test(name));
+  const quantity = writing?.quantity;
+  const unit = writing?.unit;
+  const places = CHOSEN.test(name) ? ownPlaces(value) : writing?.places;
   if (quantity !== undefined) return format.withUnit(value, quantity, places);
   const number = format.number(value, places);
   return unit === undefined ? number : `${number}${NO_BREAK_SPACE}${unit}`;

@@ -29,7 +29,13 @@ export function workingsInputs(energyPoint: EnergyPoint, given: Given): Input[] 
   const temperatures = [temperature("supply", given), temperature("return", given)];
   const deltaTs = deltaTInputs(given);
   if (figure === "deltaT") return [flow, ...temperatures, ...deltaTs];
-  return [flow, ...temperatures, ...deltaTs, ...waterInputs(energyPoint, given), ...boreInput(given)];
+  return [
+    flow,
+    ...temperatures,
+    ...deltaTs,
+    ...waterInputs(energyPoint, given),
+    ...boreInput(given),
+  ];
 }
 
 /** Rows come from the one file or the one instrument only where there is one. */
