@@ -19,7 +19,7 @@ const WRITINGS: readonly Writing[] = [
   { ends: /Percent$|^percent$/, unit: "%" },
   { ends: /^(boreMm|enteredBoreMm)$/, quantity: "pipeSize", places: 2 },
   { ends: /Mm$/, quantity: "pipeSize", places: 3 },
-  { ends: /PerK$/, unit: "/K" },
+  { ends: /PerK$/, places: 6, unit: "/K" },
   { ends: /K$/, quantity: "temperatureDifference", places: 3 },
   { ends: /C$/, quantity: "temperature", places: 1 },
   { ends: /LPerS$/, places: 3, unit: "L/s" },
