@@ -45,9 +45,11 @@ export function useWorkings(): OpenWorkings {
     [isAsked, router],
   );
   const close = useCallback(() => {
+    // Closed by Back already: the entry under the workings is where we are.
+    if (!isAsked) return;
     closing.current = true;
     router.setParams({ workings: undefined });
-  }, [router]);
+  }, [isAsked, router]);
   const isOpen = (key: WorkingsKey) => workings === writeWorkingsKey(key);
   return {
     open,
