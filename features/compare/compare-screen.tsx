@@ -65,9 +65,9 @@ function ComparisonsTable(props: { items: readonly MeterComparisonLine[]; withOl
   };
   const energy = ({ name, energyKwh }: MeterComparisonLine["first"]) =>
     `${name}: ${format.figure(energyKwh.value, energyKwh.expanded, "heatingEnergy")}`;
-  const verdict = ({ verdict: code }: MeterComparisonLine) => (
-    <MarkedText kind={verdictMarks[code]} variant="table">
-      {t(`verdictShort.${code}`)}
+  const verdict = ({ verdict: code, errorsCancel }: MeterComparisonLine) => (
+    <MarkedText kind={errorsCancel ? "look" : verdictMarks[code]} variant="table">
+      {t(errorsCancel ? "verdictShort.errorsCancel" : `verdictShort.${code}`)}
     </MarkedText>
   );
   const state = (row: MeterComparisonLine) =>
@@ -103,7 +103,7 @@ function ComparisonsTable(props: { items: readonly MeterComparisonLine[]; withOl
       href={({ id }) => comparePaths.meters(id)}
       card={{
         title: ({ title }) => title,
-        figure: en,
+        figure: (row) => (row.en === null ? null : `${t("result.en")} ${en(row)}`),
         lines: (row) => [
           `${row.siteName}, ${period(row)}`,
           energy(row.first),

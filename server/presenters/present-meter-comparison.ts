@@ -32,12 +32,13 @@ export function presentMeterComparisonLine(
   row: MeterComparison,
   site: NamedSite,
 ): MeterComparisonLine {
-  const { first, second, verdict, energy, standIn } = row.result;
+  const { first, second, verdict, errorsCancel, energy, standIn } = row.result;
   return {
     ...about(row, site),
     first: { name: first.name, energyKwh: first.energyKwh },
     second: { name: second.name, energyKwh: second.energyKwh },
     verdict,
+    errorsCancel,
     en: energy.en,
     hasStandIn: standIn !== null,
   };

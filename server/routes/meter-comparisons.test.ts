@@ -354,6 +354,11 @@ describe("saved comparisons", () => {
     const again = { ...s04, supersedes: first.id };
     const conflict = await engineer.post(`/sites/${site.id}/meter-comparisons`, again).expect(409);
     expect(conflict.body.code).toBe("superseded-already");
+    const { body: listed } = await engineer.get(`/meter-comparisons?siteId=${site.id}`).expect(200);
+    expect(listed).toMatchObject({
+      items: [{ id: second.id, verdict: "agree", errorsCancel: false, hasStandIn: true }],
+      can: { create: true },
+    });
     const reason = "Reads of another meter";
     const gone = await engineer
       .post(`/meter-comparisons/${second.id}/withdrawal`, { reason })

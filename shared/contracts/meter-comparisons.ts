@@ -268,6 +268,7 @@ export const meterComparisonLine = z.object({
   first: z.object({ name: z.string(), energyKwh: known }),
   second: z.object({ name: z.string(), energyKwh: known }),
   verdict: z.enum(AGREEMENT_CODES),
+  errorsCancel: z.boolean(),
   en: z.number().nullable(),
   hasStandIn: z.boolean(),
 });
