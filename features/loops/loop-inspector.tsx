@@ -9,6 +9,7 @@ import { correctionsPaths } from "@features/corrections/corrections-paths";
 import { FluidSection } from "./fluid-section";
 import type { LoopFigures, LoopView } from "./loop-context";
 import { loopsPaths } from "./loops-paths";
+import { MeasuredBySection } from "./measured-by-section";
 import { PipeSection, places } from "./pipe-section";
 import { tagService } from "./register-words";
 
@@ -30,6 +31,7 @@ export function LoopInspector(
           onChange={props.onPoint}
         />
       ) : null}
+      {summary ? <MeasuredBySection {...props} summary={summary} /> : null}
       {summary ? <LeftOut {...props} summary={summary} /> : null}
       <TextLink
         label={t("inspector.corrections")}

@@ -120,6 +120,7 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       },
     ],
     leftOutCount: 1,
+    evidence: { installations: [], can: { record: true } },
     firstReadingAt: "2025-05-01T00:00:00.000Z",
     lastReadingAt: "2026-05-17T22:59:00.000Z",
     ...more,
@@ -203,6 +204,62 @@ it("opens a figure's workings, says so in the address, and closes them on Escape
   );
   fireEvent.keyDown(panel, { key: "Escape" });
   expect(screen.queryByRole("complementary", { name: "Workings" })).toBeNull();
+});
+
+it("names the kit that measured, with its certificate in words, and what the ± stands on", async () => {
+  const kit = {
+    installationId: "5",
+    from: "2026-02-01T09:00:00.000Z",
+    to: null,
+    flowMeter: { serial: "F-1", certificate: { dueOn: "2026-05-31", state: "dueSoon" } },
+    probes: { supplySerial: "T-1", returnSerial: "T-2", checkedOn: "2026-02-01" },
+  } as const;
+  const lapsed = {
+    ...kit,
+    flowMeter: { serial: "F-1", certificate: { dueOn: "2026-03-31", state: "lapsed" } },
+    probes: { ...kit.probes, checkedOn: null },
+  } as const;
+  const can = { record: true };
+  serverAnswers(summaryCall, summaryOf({ evidence: { installations: [kit], can } }));
+  const { unmount } = show(<LoopScreen />);
+  const list = await screen.findByRole("list", { name: "How it was measured" });
+  expect(within(list).getByText("F-1")).toBeVisible();
+  expect(within(list).getByText("Certificate to 31 May 2026")).toBeVisible();
+  expect(within(list).getByText("T-1, T-2")).toBeVisible();
+  expect(within(list).getByText("Same bath 1 Feb 2026")).toBeVisible();
+  expect(screen.getByText("The ± stands on this evidence.")).toBeVisible();
+  expect(screen.getByRole("link", { name: "Open the evidence" })).toHaveAttribute(
+    "href",
+    "/sites/1/loops/7/points/9/evidence",
+  );
+  unmount();
+  serverAnswers(summaryCall, summaryOf({ evidence: { installations: [lapsed], can } }));
+  show(<LoopScreen />);
+  expect(await screen.findByText("Certificate ran out 31 Mar 2026")).toBeVisible();
+  expect(screen.getByText("Never in the same bath")).toBeVisible();
+});
+
+it("says that usual values stand without evidence, with a way to record some for who may", async () => {
+  serverAnswers(summaryCall, summaryOf());
+  const { unmount } = show(<LoopScreen />);
+  expect(await screen.findByText("No evidence yet, so usual values stand.")).toBeVisible();
+  expect(screen.getByRole("link", { name: "Record an installation" })).toHaveAttribute(
+    "href",
+    "/sites/1/loops/7/points/9/evidence/new",
+  );
+  unmount();
+  serverAnswers(
+    summaryCall,
+    summaryOf({ evidence: { installations: [], can: { record: false } } }),
+  );
+  const { unmount: close } = show(<LoopScreen />);
+  expect(await screen.findByText("No evidence yet, so usual values stand.")).toBeVisible();
+  expect(screen.queryByRole("link", { name: "Record an installation" })).toBeNull();
+  close();
+  serverAnswers(summaryCall, summaryOf({ evidence: null }));
+  show(<LoopScreen />);
+  expect(await screen.findByText("Rows left out")).toBeVisible();
+  expect(screen.queryByText("How it was measured")).toBeNull();
 });
 
 it("never nets a changeover loop's registers", async () => {

@@ -218,6 +218,31 @@ describe("the workings of the worked interval", () => {
   });
 });
 
+describe("the summary of a range", () => {
+  it("names the kit that speaks for it, its certificate as it stood then, and who may add", async () => {
+    const measured = await measuredDay();
+    const { evidence } = await summaryOf(measured);
+    expect(evidence).toMatchObject({
+      installations: [
+        {
+          from: "2026-02-01T09:00:00.000Z",
+          to: null,
+          flowMeter: { serial: "F-1", certificate: { dueOn: "2027-01-12", state: "inDate" } },
+          probes: { supplySerial: "T-1", returnSerial: "T-2", checkedOn: "2026-02-01" },
+        },
+      ],
+      can: { record: true },
+    });
+    const { point } = measured;
+    const later = `/points/${point.id}/summary?from=2027-01-12&to=2027-01-14`;
+    const ranOut: PointSummary = (await measured.agent.get(later).expect(200)).body;
+    expect(ranOut.evidence?.installations[0]?.flowMeter?.certificate?.state).toBe("lapsed");
+    const before = `/points/${point.id}/summary?from=2026-01-10&to=2026-01-11`;
+    const nobody: PointSummary = (await measured.agent.get(before).expect(200)).body;
+    expect(nobody.evidence).toEqual({ installations: [], can: { record: true } });
+  });
+});
+
 describe("a bath check that is replaced", () => {
   it("changes the ± and the workings of every figure it touches, and no other", async () => {
     const measured = await measuredDay();

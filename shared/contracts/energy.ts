@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { contract, id, instant, nothing } from "./contract";
+import { certificateState } from "./evidence";
 import { fluid, fluidBlock } from "./places";
 import { energyPlusMinus, plusMinus, rangePlusMinus } from "./plus-minus";
 
@@ -142,6 +143,30 @@ export const loadCard = z.object({
   register: z.enum(["heating", "cooling"]),
 });
 
+/** An installation that speaks for part of a range, as far as a loop's page names it. */
+const measuredBy = z.object({
+  installationId: id,
+  from: instant,
+  to: instant.nullable().describe("null while the kit is on the pipe"),
+  flowMeter: z
+    .object({
+      serial: z.string(),
+      certificate: z
+        .object({ dueOn: z.iso.date().nullable(), state: certificateState })
+        .nullable()
+        .describe("as it stood on the last day of the range that the installation speaks for"),
+    })
+    .nullable(),
+  probes: z
+    .object({
+      supplySerial: z.string(),
+      returnSerial: z.string(),
+      checkedOn: z.iso.date().nullable().describe("both in one bath; null: never"),
+    })
+    .nullable(),
+});
+export type MeasuredBy = z.infer<typeof measuredBy>;
+
 /** What the loop page shows of a range, in one answer. */
 export const getPointSummary = contract({
   operationId: "getPointSummary",
@@ -200,6 +225,13 @@ export const getPointSummary = contract({
       }),
     ),
     leftOutCount: z.number().int(),
+    evidence: z
+      .object({
+        installations: z.array(measuredBy).describe("that speak for the range, oldest first"),
+        can: z.object({ record: z.boolean() }),
+      })
+      .nullable()
+      .describe("null for those who may not see evidence"),
     firstReadingAt: instant.nullable(),
     lastReadingAt: instant.nullable(),
   }),

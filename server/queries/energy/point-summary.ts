@@ -5,12 +5,15 @@ import { localDateOf, localDaysBetween } from "@shared/domain/time/local-calenda
 import type { Database } from "@server/database/connect";
 import { instantText } from "@server/database/conversions";
 import type { Scope } from "@server/database/scoped";
+import type { Actor } from "@server/policies/actor";
+import { can } from "@server/policies/can";
 import {
   presentBasis,
   presentLoad,
   presentTotals,
   rounded,
 } from "@server/presenters/present-energy";
+import { presentMeasuredBy } from "@server/presenters/present-measured-by";
 import { loadFigureEvidence, type FigureEvidence } from "@server/queries/workings/figure-evidence";
 import { plusMinusOf } from "@server/queries/workings/figure-uncertainty";
 import { nightRows } from "@server/queries/workings/night-rows";
@@ -43,7 +46,11 @@ const mostLeftOut = 50;
 
 /** Everything the loop page says about a range of whole local days. */
 export async function pointSummary(
-  { database, scope }: { readonly database: Database; readonly scope: Scope },
+  {
+    database,
+    scope,
+    actor,
+  }: { readonly database: Database; readonly scope: Scope; readonly actor: Actor },
   energyPoint: EnergyPoint,
   range: EnergyRange,
   nowMs: number,
@@ -112,6 +119,12 @@ export async function pointSummary(
           : (run.reason ?? "noRows"),
     })),
     leftOutCount: leftOut.length,
+    evidence: can(actor).seeEvidence
+      ? {
+          installations: evidence.installations.map((one) => presentMeasuredBy(one, range, zone)),
+          can: { record: can(actor).editEvidence && point.archivedAt === null },
+        }
+      : null,
     firstReadingAt: at(readings.firstMs),
     lastReadingAt: at(readings.lastMs),
   };
