@@ -1,7 +1,7 @@
 import { View } from "react-native";
 import { useWords } from "@features/i18n";
 import { Button, FieldRow, NumberField, TextField } from "@features/ui";
-import type { SectionProps } from "./form-sections";
+import type { SectionProps } from "./section";
 import type { ClockValues } from "./installation-values";
 
 /** Each logger's clock against one reference, at start and end. */

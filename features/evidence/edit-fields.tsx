@@ -2,7 +2,7 @@ import { View } from "react-native";
 import { BUDGET_TERM_KINDS, type BudgetTermKind } from "@shared/domain/uncertainty/point-evidence";
 import { useWords } from "@features/i18n";
 import { Button, FieldRow, NumberField, SelectField, TextField } from "@features/ui";
-import type { SectionProps } from "./form-sections";
+import type { SectionProps } from "./section";
 import type { EditValues } from "./installation-values";
 
 /** Put on with the time asked about, not with the installation. */

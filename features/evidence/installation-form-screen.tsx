@@ -26,25 +26,22 @@ import { BudgetList } from "./budget-list";
 import { evidencePaths } from "./evidence-paths";
 import { evidenceQueries } from "./evidence-queries";
 import {
-  EditsSection,
-  FluidSection,
-  LoggerSection,
-  MeterSection,
-  NoiseSection,
-  PipeSection,
-  PositionSection,
-  ProbesSection,
-  SoundSection,
-  TimeSection,
-  ZeroSection,
-  type SectionProps,
-} from "./form-sections";
-import {
   bodyOf,
   installationValues,
   readWalls,
   type InstallationBody,
 } from "./installation-values";
+import { MeterSection, SoundSection, ZeroSection } from "./meter-sections";
+import { PipeSection, PositionSection } from "./pipe-sections";
+import { ProbesSection } from "./probes-section";
+import {
+  EditsSection,
+  FluidSection,
+  LoggerSection,
+  NoiseSection,
+  TimeSection,
+} from "./record-sections";
+import type { SectionProps } from "./section";
 import { tagService } from "./tag-service";
 import { usePointCrumbs } from "./use-point-crumbs";
 
