@@ -30,7 +30,13 @@ export function LoadBase(props: LoadFigures & { onHours: (hours: "all" | "unoccu
             {t("base.load")}
           </Text>
           <Figure
-            {...shownFigure(format, baseLoad?.powerKw ?? null, powerQuantity[register])}
+            {...shownFigure(
+              format,
+              baseLoad?.powerKw ?? null,
+              powerQuantity[register],
+              undefined,
+              baseLoad?.plusMinus ?? null,
+            )}
             said={t("base.load")}
             size="m"
           />

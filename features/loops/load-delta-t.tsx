@@ -1,5 +1,6 @@
 import { View } from "react-native";
 
+import type { PlusMinus } from "@shared/contracts/plus-minus";
 import { useWords } from "@features/i18n";
 import { Card, Figure, Text, useBreakpoint, useTheme } from "@features/ui";
 
@@ -8,21 +9,22 @@ import type { LoadFigures } from "./load-view";
 import { shownFigure } from "./shown-figure";
 
 /** The three means side by side, which of them gives the energy back, and water for the heat. */
-export function LoadDeltaT({ shape, format, loop }: LoadFigures) {
+export function LoadDeltaT({ shape, format, loop, workings }: LoadFigures) {
   const t = useWords("load");
   const phone = useBreakpoint() === "phone";
   const { colour } = useTheme();
   const hours = useHours(format);
   const { deltaT, specificFlow, lowDeltaT } = shape;
-  const kelvin = (value: number | null) => shownFigure(format, value, "temperatureDifference", 2);
+  const kelvin = (value: number | null, plusMinus: PlusMinus | null) =>
+    shownFigure(format, value, "temperatureDifference", 2, plusMinus);
   const inchPound = format.unitSystem === "inchPound";
   const perPower = inchPound
     ? { value: specificFlow?.gpmPerTon ?? null, unit: "US gpm/ton", places: 2 }
     : { value: specificFlow?.litresPerSecondPerKw ?? null, unit: "L/s per kW", places: 4 };
   const means = [
-    ["flow", deltaT.flowWeightedK],
-    ["energy", deltaT.energyWeightedK],
-    ["time", deltaT.timeMeanK],
+    ["flow", deltaT.flowWeightedK, deltaT.plusMinus.flowWeighted],
+    ["energy", deltaT.energyWeightedK, deltaT.plusMinus.energyWeighted],
+    ["time", deltaT.timeMeanK, deltaT.plusMinus.timeMean],
   ] as const;
   return (
     <Card label={t("deltaT.title")} pad={phone ? 3 : 4} style={phone ? null : { flexGrow: 1 }}>
@@ -34,7 +36,7 @@ export function LoadDeltaT({ shape, format, loop }: LoadFigures) {
         aria-label={t("deltaT.title")}
         style={{ flexDirection: "row", marginTop: 10 }}
       >
-        {means.map(([name, value], place) => (
+        {means.map(([name, value, plusMinus], place) => (
           <View
             key={name}
             role="listitem"
@@ -52,7 +54,14 @@ export function LoadDeltaT({ shape, format, loop }: LoadFigures) {
               {t(`deltaT.${name}`)}
             </Text>
             <View>
-              <Figure {...kelvin(value)} said={t(`deltaT.${name}`)} size="m" />
+              <Figure
+                {...kelvin(value, plusMinus)}
+                said={t(`deltaT.${name}`)}
+                size="m"
+                {...(name === "flow" && value !== null
+                  ? workings.figure({ figure: "deltaT" })
+                  : {})}
+              />
               <Text variant="small" tone={name === "flow" ? "ink" : "ink2"}>
                 {t(`deltaT.${name}Words`)}
               </Text>
@@ -80,7 +89,13 @@ export function LoadDeltaT({ shape, format, loop }: LoadFigures) {
       >
         <LoadFigure
           title={t("deltaT.specific")}
-          figure={shownFigure(format, specificFlow?.m3PerKwh ?? null, "volumePerEnergy", 1)}
+          figure={shownFigure(
+            format,
+            specificFlow?.m3PerKwh ?? null,
+            "volumePerEnergy",
+            1,
+            specificFlow?.plusMinus ?? null,
+          )}
         >
           {perPower.value === null
             ? null

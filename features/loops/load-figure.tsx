@@ -8,6 +8,8 @@ export function LoadFigure(props: {
   title: string;
   figure: ShownValue;
   size?: FigureProps["size"];
+  /** What opens the figure's workings, where it has any. */
+  workings?: Pick<FigureProps, "onOpenWorkings" | "workingsOpen">;
   children?: ReactNode;
 }) {
   return (
@@ -15,7 +17,12 @@ export function LoadFigure(props: {
       <Text variant="small" tone="ink3" hidden>
         {props.title}
       </Text>
-      <Figure {...props.figure} said={props.title} size={props.size ?? "m"} />
+      <Figure
+        {...props.figure}
+        said={props.title}
+        size={props.size ?? "m"}
+        {...(props.figure.value === null ? {} : props.workings)}
+      />
       {typeof props.children === "string" ? (
         <Text variant="small" tone="ink2">
           {props.children}

@@ -4,10 +4,12 @@ import type { ShapePeak } from "@shared/contracts/shape";
 import { useWords } from "@features/i18n";
 import { Card, Figure, Row, Segments, Text, useBreakpoint, useTheme } from "@features/ui";
 
+import type { WorkingsKey } from "@features/workings/workings-key";
+
 import { LoadFigure, useHours } from "./load-figure";
 import type { LoadFigures } from "./load-view";
 import type { PeakWindow } from "./loops-queries";
-import { powerQuantity } from "./register-words";
+import { powerQuantity, registersOf } from "./register-words";
 import { shownFigure } from "./shown-figure";
 
 const windows: readonly PeakWindow[] = ["15", "30", "60"];
@@ -75,7 +77,13 @@ export function LoadPeaks(
           borderTopColor: colour.rule,
         }}
       >
-        <LoadFigure title={t("peak.mean")} figure={shownFigure(format, shape.meanKw, power)}>
+        <LoadFigure
+          title={t("peak.mean")}
+          figure={shownFigure(format, shape.meanKw, power, undefined, shape.meanPlusMinus)}
+          workings={props.workings.figure(
+            powerKey(props, { from: props.range.from, to: props.range.until }),
+          )}
+        >
           {t("peak.meanWords")}
         </LoadFigure>
         {shape.design ? (
@@ -93,6 +101,15 @@ export function LoadPeaks(
   );
 }
 
+/** A mean power over a window, whose workings are of the register that the shape is of. */
+function powerKey(
+  { shape, loop }: LoadFigures,
+  { from, to }: { readonly from: string; readonly to: string },
+): WorkingsKey {
+  const alone = registersOf(loop.service).length === 1;
+  return { figure: "power", ...(alone ? {} : { register: shape.register }), from, to };
+}
+
 function Peak(props: LoadFigures & { title: string; words: string; peak: ShapePeak | null }) {
   const { peak, format, shape } = props;
   const t = useWords("load");
@@ -105,9 +122,16 @@ function Peak(props: LoadFigures & { title: string; words: string; peak: ShapePe
         {props.title}
       </Text>
       <Figure
-        {...shownFigure(format, peak?.powerKw ?? null, powerQuantity[shape.register])}
+        {...shownFigure(
+          format,
+          peak?.powerKw ?? null,
+          powerQuantity[shape.register],
+          undefined,
+          peak?.plusMinus ?? null,
+        )}
         size={phone ? "m" : "l"}
         said={props.title}
+        {...(peak === null ? {} : props.workings.figure(powerKey(props, peak)))}
       />
       {peak === null || from === null ? null : (
         <>

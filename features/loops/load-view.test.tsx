@@ -13,6 +13,9 @@ import {
   siteOf,
 } from "@features/places/test-kit";
 
+import type { OpenWorkings } from "@features/workings/use-workings";
+import type { WorkingsKey } from "@features/workings/workings-key";
+
 import { LoadView } from "./load-view";
 import { daysOf } from "./shown-range";
 
@@ -21,10 +24,13 @@ jest.mock("@features/ui/theme/use-measured-width", () => ({
   useMeasuredWidth: () => [806, () => undefined],
 }));
 
+const plusMinus = (expanded: number) => ({ expanded, percent: 3.3, basis: "evidence" }) as const;
+
 const peak = {
   from: "2025-06-09T13:00:00.000Z",
   to: "2025-06-09T14:00:00.000Z",
   powerKw: 490.9348,
+  plusMinus: plusMinus(15.2),
   loadFactor: 0.434973,
   fullLoadHours: 73.07546,
 };
@@ -53,6 +59,7 @@ function shapeOf(more: Partial<PointShape> = {}): PointShape {
     energyKwh: 35_875.29,
     volumeM3: 8198.31,
     meanKw: 213.5434,
+    meanPlusMinus: plusMinus(7.1),
     peaks: { fixed: peak, rolling: peak },
     design: null,
     curve: [
@@ -65,10 +72,26 @@ function shapeOf(more: Partial<PointShape> = {}): PointShape {
       energyWeightedK: 3.813261,
       timeMeanK: 3.499583,
       fromEnergyK: 3.7566,
+      plusMinus: {
+        flowWeighted: plusMinus(0.12),
+        energyWeighted: plusMinus(0.12),
+        timeMean: plusMinus(0.12),
+      },
     },
-    specificFlow: { m3PerKwh: 0.2285, litresPerSecondPerKw: 0.06347847, gpmPerTon: 3.538497 },
+    specificFlow: {
+      m3PerKwh: 0.2285,
+      litresPerSecondPerKw: 0.06347847,
+      gpmPerTon: 3.538497,
+      plusMinus: plusMinus(0.0075),
+    },
     occupiedHours: { weekdays: [1, 2, 3, 4, 5], start: "07:00", end: "19:00", assumed: true },
-    baseLoad: { powerKw: 71.87869, percentile: 5, hours: "all", steps: 168 },
+    baseLoad: {
+      powerKw: 71.87869,
+      plusMinus: plusMinus(2.9),
+      percentile: 5,
+      hours: "all",
+      steps: 168,
+    },
     offHours: { energyShare: 0.2923193, energyKwh: 10_487, dayOffRatio: 0.41 },
     pumpWithoutDeltaT: {
       limitK: 1,
@@ -86,6 +109,15 @@ function shapeOf(more: Partial<PointShape> = {}): PointShape {
 const call = (asked = "windowMinutes=60&hours=all") =>
   `GET /points/9/shape?from=2025-06-09&to=2025-06-16&${asked}`;
 
+const asked: WorkingsKey[] = [];
+const workings: OpenWorkings = {
+  open: null,
+  isOpen: () => false,
+  show: (key) => void asked.push(key),
+  close: () => undefined,
+  figure: (key) => ({ onOpenWorkings: () => void asked.push(key), workingsOpen: false }),
+};
+
 function view(loop = loopOf({ tag: "CHW-1B" }), params = {}, blocked: React.ReactNode = null) {
   return (
     <LoadView
@@ -98,20 +130,57 @@ function view(loop = loopOf({ tag: "CHW-1B" }), params = {}, blocked: React.Reac
       format={makeFormat("en", "si", "Europe/London")}
       params={params}
       blocked={blocked}
+      workings={workings}
     />
   );
 }
 
-beforeEach(() => openWith({ loopId: "7", view: "load" }));
+beforeEach(() => {
+  asked.length = 0;
+  openWith({ loopId: "7", view: "load" });
+});
 
 it("names each peak by its definition and its instant, with the load factor it stands beside", async () => {
   serverAnswers(call(), shapeOf());
   show(view());
-  expect(await screen.findByText(/^Blocks on the clock: 490\.9 kilowatts$/)).toBeInTheDocument();
-  expect(screen.getByText(/^Any 60 min: 490\.9 kilowatts$/)).toBeInTheDocument();
+  expect(
+    await screen.findByRole("button", {
+      name: /^Blocks on the clock: 491 plus or minus 15 kilowatts, show workings/,
+    }),
+  ).toBeVisible();
+  expect(
+    screen.getByRole("button", { name: /^Any 60 min: 491 plus or minus 15 kilowatts/ }),
+  ).toBeVisible();
   expect(screen.getAllByText("Mon 9 Jun, 14:00 to 15:00")).toHaveLength(2);
   expect(screen.getAllByText("Load factor 0.435")).toHaveLength(2);
   expect(screen.queryByText(/^Design/)).toBeNull();
+});
+
+it("opens a peak's workings over its own window, and the mean's over the range", async () => {
+  serverAnswers(call(), shapeOf());
+  show(view());
+  fireEvent.click(await screen.findByRole("button", { name: /^Any 60 min/ }));
+  fireEvent.click(screen.getByRole("button", { name: /^Mean: 213\.5 plus or minus 7\.1/ }));
+  expect(asked).toEqual([
+    { figure: "power", from: peak.from, to: peak.to },
+    { figure: "power", from: "2025-06-09", to: "2025-06-16" },
+  ]);
+});
+
+it("names the register of a peak where a loop has two", async () => {
+  serverAnswers(call(), shapeOf({ register: "heating" }));
+  show(view(loopOf({ service: "changeover" })));
+  fireEvent.click(await screen.findByRole("button", { name: /^Any 60 min/ }));
+  expect(asked).toEqual([{ figure: "power", register: "heating", from: peak.from, to: peak.to }]);
+});
+
+it("prints no ± where the server has none", async () => {
+  const bare = { ...peak, plusMinus: null };
+  serverAnswers(call(), shapeOf({ peaks: { fixed: bare, rolling: bare } }));
+  show(view());
+  expect(
+    await screen.findByRole("button", { name: /^Any 60 min: 490\.9 kilowatts, show workings/ }),
+  ).toBeVisible();
 });
 
 it("says which mean gives the energy back", async () => {
@@ -119,7 +188,14 @@ it("says which mean gives the energy back", async () => {
   show(view());
   const means = await screen.findByRole("list", { name: "ΔT, three means" });
   expect(within(means).getAllByRole("listitem")).toHaveLength(3);
-  expect(within(means).getByText(/^Weighted by flow: 3\.76 kelvin$/)).toBeInTheDocument();
+  expect(
+    within(means).getByRole("button", {
+      name: /^Weighted by flow: 3\.76 plus or minus 0\.12 kelvin, show workings/,
+    }),
+  ).toBeVisible();
+  expect(
+    within(means).getByText(/^Over time: 3\.50 plus or minus 0\.12 kelvin$/),
+  ).toBeInTheDocument();
   expect(screen.getByText(/^Energy over volume gives 3\.76\sK, which is the mean/)).toBeVisible();
 });
 

@@ -13,12 +13,17 @@ import { LoadCurveCard } from "./load-curve-card";
 import { LoadDeltaT } from "./load-delta-t";
 import { LoadExcess } from "./load-excess";
 import { LoadPeaks } from "./load-peaks";
+import type { OpenWorkings } from "@features/workings/use-workings";
 import type { LoopView } from "./loop-context";
 import { loopsQueries, type PeakWindow } from "./loops-queries";
 
 /** What every part of the load view is about. */
-export interface LoadFigures extends LoopView {
+export interface LoadFigures extends LoadContext {
   readonly shape: PointShape;
+}
+
+interface LoadContext extends LoopView {
+  readonly workings: OpenWorkings;
 }
 
 export type LoadParams = Partial<Record<"window" | "base" | "curve", string>>;
@@ -33,7 +38,7 @@ const blocks = [
  * The shape behind the energy: peak, duration, ΔT, base load and the flow nobody needed. `blocked`
  * stands in its place where readings give no energy.
  */
-export function LoadView(props: LoopView & { params: LoadParams; blocked: ReactNode }) {
+export function LoadView(props: LoadContext & { params: LoadParams; blocked: ReactNode }) {
   const { point, range, params, blocked } = props;
   const t = useWords("load");
   const windowMinutes = windowOf(params.window);

@@ -8,6 +8,7 @@ import { instantText } from "@server/database/conversions";
 import type { EnergyPoint } from "@server/queries/energy/energy-point";
 import { longestRuns } from "@server/queries/shape/longest-runs";
 import type { LoadShape, RangeLoad } from "@server/queries/shape/load-shape";
+import type { ShapePlusMinus } from "@server/queries/shape/shape-plus-minus";
 import { presentBasis, rounded, roundedOrNull } from "./present-energy";
 import { plainPrice } from "./present-pump";
 import { presentOccupied } from "./present-site";
@@ -22,6 +23,7 @@ export function presentShape(
   range: Interval,
   load: RangeLoad,
   shape: LoadShape,
+  plusMinus: ShapePlusMinus,
   asked: { readonly windowMinutes: number; readonly expectedS: number },
 ): ShapeAnswer {
   const { site } = energyPoint;
@@ -29,14 +31,19 @@ export function presentShape(
   const { coveredS } = totals;
   const covered = (value: number | null, decimals: number) =>
     coveredS > 0 && value !== null ? rounded(value, decimals) : null;
-  const peak = (found: PeakDemand | null) =>
-    found && {
-      from: at(found.startMs),
-      to: at(found.endMs),
-      powerKw: rounded(found.powerKw, 4),
-      loadFactor: roundedOrNull(loadFactor(shape.energyKwh, coveredS, found)?.value ?? null, 7),
-      fullLoadHours: roundedOrNull(fullLoadHours(shape.energyKwh, found.powerKw), 4),
-    };
+  const peak = (kind: "fixed" | "rolling") => {
+    const found: PeakDemand | null = shape.peaks[kind];
+    return (
+      found && {
+        from: at(found.startMs),
+        to: at(found.endMs),
+        powerKw: rounded(found.powerKw, 4),
+        plusMinus: plusMinus[kind],
+        loadFactor: roundedOrNull(loadFactor(shape.energyKwh, coveredS, found)?.value ?? null, 7),
+        fullLoadHours: roundedOrNull(fullLoadHours(shape.energyKwh, found.powerKw), 4),
+      }
+    );
+  };
   const { still, low, baseLoad, offHours, means, specificFlow } = shape;
   return {
     zone: site.zone,
@@ -51,7 +58,8 @@ export function presentShape(
     energyKwh: covered(shape.energyKwh, 4),
     volumeM3: covered(shape.volumeM3, 4),
     meanKw: coveredS > 0 ? rounded(shape.energyKwh / (coveredS / 3600), 4) : null,
-    peaks: { fixed: peak(shape.peaks.fixed), rolling: peak(shape.peaks.rolling) },
+    meanPlusMinus: plusMinus.mean,
+    peaks: { fixed: peak("fixed"), rolling: peak("rolling") },
     design:
       shape.designKw === null
         ? null
@@ -68,15 +76,22 @@ export function presentShape(
       energyWeightedK: roundedOrNull(means.energyWeightedK, 6),
       timeMeanK: roundedOrNull(means.timeMeanK, 6),
       fromEnergyK: roundedOrNull(shape.fromEnergyK, 6),
+      plusMinus: {
+        flowWeighted: plusMinus.flowWeightedK,
+        energyWeighted: plusMinus.energyWeightedK,
+        timeMean: plusMinus.timeMeanK,
+      },
     },
     specificFlow: specificFlow && {
       m3PerKwh: rounded(specificFlow.m3PerKwh, 8),
       litresPerSecondPerKw: rounded(specificFlow.litresPerSecondPerKw, 8),
       gpmPerTon: rounded(specificFlow.gpmPerTon, 6),
+      plusMinus: plusMinus.volumePerEnergy,
     },
     occupiedHours: presentOccupied(site),
     baseLoad: baseLoad && {
       powerKw: rounded(baseLoad.powerKw, 4),
+      plusMinus: plusMinus.baseLoad,
       percentile: BASE_LOAD_PERCENTILE * 100,
       hours: baseLoad.hours,
       steps: baseLoad.steps,

@@ -18,6 +18,7 @@ import { loadEnergyPoint } from "@server/queries/energy/energy-point";
 import { expectedSeconds, readRange } from "@server/queries/energy/energy-range";
 import { durationCsv } from "@server/queries/shape/duration-csv";
 import { loadShape, rangeLoad } from "@server/queries/shape/load-shape";
+import { shapePlusMinus } from "@server/queries/shape/shape-plus-minus";
 
 async function siteOfLoop({ scope }: Context, loopId: string): Promise<Site> {
   const { siteId } = await scope.get(Loop, loopId, "loop");
@@ -42,7 +43,11 @@ export const shapeRoutes: readonly Endpoint[] = [
         lowDeltaTK: query.lowDeltaTK ?? null,
       });
       const expectedS = expectedSeconds(range, clock.now());
-      return presentShape(energyPoint, range, load, shape, { windowMinutes, expectedS });
+      const plusMinus = await shapePlusMinus(context, energyPoint, range, load, shape);
+      return presentShape(energyPoint, range, load, shape, plusMinus, {
+        windowMinutes,
+        expectedS,
+      });
     },
   }),
   defineEndpoint(downloadDurationCurve, {

@@ -1,5 +1,6 @@
 import type { EnergyAnswer, PointSummary, TodayAnswer } from "@shared/contracts/energy";
 import type { BathCheck, Instrument } from "@shared/contracts/evidence";
+import type { PointShape } from "@shared/contracts/shape";
 import type { Workings } from "@shared/contracts/workings";
 import type { MeteringPoint } from "@server/models/metering-point";
 import type { Loop } from "@server/models/loop";
@@ -215,6 +216,47 @@ describe("the workings of the worked interval", () => {
     const expected = 2 * Math.hypot(1.141188, 0.0691946, 0.338983 / Math.sqrt(96));
     expect(deltaT.plusMinus?.percent).toBeCloseTo(expected, 3);
     expect(deltaT.value).toBeCloseTo(5.9, 4);
+  });
+});
+
+describe("the shape of a load", () => {
+  it("carries the ± of the workings it opens", async () => {
+    const { agent, point } = await measuredDay();
+    const shape: PointShape = (
+      await agent.get(`/points/${point.id}/shape?${day}&windowMinutes=15`).expect(200)
+    ).body;
+    const window = `from=${shape.peaks.fixed?.from}&to=${shape.peaks.fixed?.to}`;
+    const peak = await workingsOf(agent, point.id, `figure=power&${window}`);
+    expect(shape.peaks.fixed?.plusMinus).toEqual(peak.plusMinus);
+    expect(shape.peaks.fixed?.plusMinus?.percent).toBeCloseTo(4.26092, 4);
+    const mean = await workingsOf(agent, point.id, `figure=power&${day}`);
+    expect(shape.meanPlusMinus).toEqual(mean.plusMinus);
+    expect(shape.meanPlusMinus?.percent).toBeCloseTo(expandedOf(96), 3);
+    const deltaT = await workingsOf(agent, point.id, `figure=deltaT&${day}`);
+    expect(shape.deltaT.plusMinus.flowWeighted).toEqual(deltaT.plusMinus);
+    // The load is steady: all three means are one, and so is what an offset does to them.
+    expect(shape.deltaT.plusMinus.timeMean?.expanded).toBe(deltaT.plusMinus?.expanded);
+    expect(shape.deltaT.plusMinus.energyWeighted?.percent).toBeCloseTo(
+      deltaT.plusMinus?.percent ?? NaN,
+      3,
+    );
+  });
+
+  it("puts the ± of single steps to the base load, and takes flow's scale off water per heat", async () => {
+    const { agent, point } = await measuredDay();
+    const shape: PointShape = (await agent.get(`/points/${point.id}/shape?${day}`).expect(200))
+      .body;
+    // A steady load: two quarter-hours at the percentile, all systematic terms as they are.
+    const percent = shape.baseLoad?.plusMinus?.percent ?? NaN;
+    expect(percent).toBeCloseTo(expandedOf(2), 3);
+    expect(shape.baseLoad?.plusMinus?.expanded).toBeCloseTo(
+      ((shape.baseLoad?.powerKw ?? NaN) * percent) / 100,
+      3,
+    );
+    // ΔT 1.141188, density 0.0288956, enthalpy 0.05, steps 0.0691946 and 0.0360844,
+    // noise √(0.8² + 0.338983² + 0.3²)/√96; the zero is the same of both in a steady flow.
+    const expected = 2 * Math.hypot(1.141188, 0.0288956, 0.05, STEPS, NOISE / Math.sqrt(96));
+    expect(shape.specificFlow?.plusMinus?.percent).toBeCloseTo(expected, 3);
   });
 });
 

@@ -2,6 +2,7 @@ import { z } from "zod";
 import { contract, id, instant, nothing } from "./contract";
 import { energyBasis } from "./energy";
 import { occupiedHours } from "./places";
+import { plusMinus } from "./plus-minus";
 
 /*
  * The shape of a load: what a total hides. Of the register that the loop's service names; on a
@@ -12,10 +13,12 @@ const pointId = z.object({ pointId: id });
 const edge = z.union([z.iso.datetime({ offset: true }), z.iso.date()]);
 const range = z.object({ from: edge, to: edge.describe("exclusive") });
 
+const known = plusMinus.nullable().describe("null where none can be worked out");
 const peak = z.object({
   from: instant,
   to: instant,
   powerKw: z.number(),
+  plusMinus: known,
   loadFactor: z.number().nullable().describe("mean power over covered time / this peak"),
   fullLoadHours: z.number().nullable().describe("energy / this peak"),
 });
@@ -60,6 +63,7 @@ export const getPointShape = contract({
     energyKwh: z.number().nullable(),
     volumeM3: z.number().nullable(),
     meanKw: z.number().nullable(),
+    meanPlusMinus: known,
     peaks: z.object({
       fixed: peak.nullable().describe("blocks of the wall clock"),
       rolling: peak.nullable().describe("any window of that length, from any step"),
@@ -78,18 +82,21 @@ export const getPointShape = contract({
       energyWeightedK: z.number().nullable(),
       timeMeanK: z.number().nullable(),
       fromEnergyK: z.number().nullable().describe("E / (k V), k at the mean temperatures"),
+      plusMinus: z.object({ flowWeighted: known, energyWeighted: known, timeMean: known }),
     }),
     specificFlow: z
       .object({
         m3PerKwh: z.number(),
         litresPerSecondPerKw: z.number(),
         gpmPerTon: z.number(),
+        plusMinus: known.describe("of the volume per energy; the flow's own scale cancels"),
       })
       .nullable(),
     occupiedHours: z.object({ ...occupiedHours.shape, assumed: z.boolean() }),
     baseLoad: z
       .object({
         powerKw: z.number(),
+        plusMinus: known,
         percentile: z.number(),
         hours: z.enum(["all", "unoccupied"]),
         steps: z.number().int(),

@@ -148,6 +148,11 @@ describe("base load and off hours", () => {
       powerKw: 5,
       hours: "unoccupied",
       steps: 11,
+      // Rank 0.5 of eleven like steps: the first two.
+      between: [
+        { startMs: T0 + HOUR_MS, endMs: T0 + 2 * HOUR_MS },
+        { startMs: T0 + 2 * HOUR_MS, endMs: T0 + 3 * HOUR_MS },
+      ],
     });
     expect(baseLoad(day, "all", ASSUMED_OCCUPIED_HOURS, utc)?.steps).toBe(23);
     const off = offHours(day, ASSUMED_OCCUPIED_HOURS, utc);

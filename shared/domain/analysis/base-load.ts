@@ -18,6 +18,8 @@ export interface BaseLoad {
   readonly hours: "all" | "unoccupied";
   /** Steps it is taken over. */
   readonly steps: number;
+  /** The one or two steps whose powers it lies between, in order of time: its ± is theirs. */
+  readonly between: readonly Interval[];
 }
 
 export const BASE_LOAD_PERCENTILE = 0.05;
@@ -32,14 +34,22 @@ export function baseLoad(
   toLocal: (utcMs: number) => number,
 ): BaseLoad | null {
   const leastS = (steps.stepMs / 1000) * LEAST_COVERED;
-  const powers: number[] = [];
+  const counted: { readonly startMs: number; readonly powerKw: number }[] = [];
   for (let i = 0; i < steps.startMs.length; i++) {
     if (steps.coveredS[i]! < leastS) continue;
     if (hours === "unoccupied" && isOccupied(toLocal(steps.startMs[i]!), occupied)) continue;
-    powers.push(stepPowerKw(steps, i));
+    counted.push({ startMs: steps.startMs[i]!, powerKw: stepPowerKw(steps, i) });
   }
-  const powerKw = percentile(Float64Array.from(powers), BASE_LOAD_PERCENTILE);
-  return powerKw === null ? null : { powerKw, hours, steps: powers.length };
+  const powers = Float64Array.from(counted, (step) => step.powerKw);
+  const powerKw = percentile(powers, BASE_LOAD_PERCENTILE);
+  if (powerKw === null) return null;
+  const rank = (counted.length - 1) * BASE_LOAD_PERCENTILE;
+  const between = counted
+    .sort((a, b) => a.powerKw - b.powerKw)
+    .slice(Math.floor(rank), Math.ceil(rank) + 1)
+    .map(({ startMs }) => ({ startMs, endMs: startMs + steps.stepMs }))
+    .sort((a, b) => a.startMs - b.startMs);
+  return { powerKw, hours, steps: counted.length, between };
 }
 
 /** The `share` quantile, 0 to 1, by linear interpolation; null of nothing. */
