@@ -1,9 +1,8 @@
 import { useQueryClient } from "@tanstack/react-query";
-import { useState } from "react";
 import { withdrawCorrection, type Correction } from "@shared/contracts/corrections";
 import { call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
-import { Button, Form, Sheet, Text, TextField, useToast } from "@features/ui";
+import { ReasonSheet, useToast } from "@features/ui";
 
 /** Why a correction goes; it stays in the list with it. */
 export function WithdrawSheet(props: { correction: Correction; onClose: () => void }) {
@@ -11,8 +10,6 @@ export function WithdrawSheet(props: { correction: Correction; onClose: () => vo
   const t = useWords("corrections");
   const toast = useToast();
   const client = useQueryClient();
-  const [reason, setReason] = useState("");
-  const [tried, setTried] = useState(false);
   const withdrawing = useChange({
     send: (body: { reason: string }) =>
       call(withdrawCorrection, { params: { correctionId: correction.id }, body }),
@@ -23,27 +20,19 @@ export function WithdrawSheet(props: { correction: Correction; onClose: () => vo
     },
     fields: ["reason"],
   });
-  const submit = () => {
-    setTried(true);
-    if (reason.trim() !== "") withdrawing.send({ reason: reason.trim() });
-  };
   const title = t("withdraw.said", { title: t(`kind.${correction.change.kind}.label`) });
   return (
-    <Sheet open kind="side" title={title} onClose={onClose}>
-      <Form label={title} onSubmit={submit} errors={withdrawing.formErrors}>
-        <Text tone="ink2">{t("withdraw.lead")}</Text>
-        <TextField
-          label={t("field.reason")}
-          value={reason}
-          onChange={setReason}
-          error={
-            tried && reason.trim() === "" ? t("field.needed") : withdrawing.fieldError("reason")
-          }
-          autoComplete="off"
-          required
-        />
-        <Button submit full label={t("withdraw.send")} busy={withdrawing.busy} />
-      </Form>
-    </Sheet>
+    <ReasonSheet
+      title={title}
+      lead={t("withdraw.lead")}
+      label={t("field.reason")}
+      needed={t("field.needed")}
+      send={t("withdraw.send")}
+      busy={withdrawing.busy}
+      errors={withdrawing.formErrors}
+      error={withdrawing.fieldError("reason")}
+      onSend={(reason) => withdrawing.send({ reason })}
+      onClose={onClose}
+    />
   );
 }

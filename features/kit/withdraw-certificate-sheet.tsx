@@ -1,16 +1,13 @@
 import { useQueryClient } from "@tanstack/react-query";
-import { useState } from "react";
 import { withdrawCertificate, type Certificate } from "@shared/contracts/evidence";
 import { call, useChange } from "@features/api";
 import { useWords } from "@features/i18n";
-import { Button, Form, Sheet, Text, TextField } from "@features/ui";
+import { ReasonSheet } from "@features/ui";
 
 /** Takes a certificate entered by mistake out of use; it stays readable with the reason. */
 export function WithdrawCertificateSheet(props: { certificate: Certificate; onClose: () => void }) {
   const t = useWords("kit");
   const client = useQueryClient();
-  const [reason, setReason] = useState("");
-  const [tried, setTried] = useState(false);
   const withdrawing = useChange({
     send: (body: { reason: string }) =>
       call(withdrawCertificate, { params: { certificateId: props.certificate.id }, body }),
@@ -20,27 +17,19 @@ export function WithdrawCertificateSheet(props: { certificate: Certificate; onCl
     },
     fields: ["reason"],
   });
-  const submit = () => {
-    setTried(true);
-    if (reason.trim() !== "") withdrawing.send({ reason: reason.trim() });
-  };
   const title = t("certificate.withdrawSaid", { number: props.certificate.number });
   return (
-    <Sheet open kind="side" title={title} onClose={props.onClose}>
-      <Form label={title} onSubmit={submit} errors={withdrawing.formErrors}>
-        <Text tone="ink2">{t("certificate.withdrawLead")}</Text>
-        <TextField
-          label={t("reason")}
-          value={reason}
-          onChange={setReason}
-          error={
-            tried && reason.trim() === "" ? t("reasonNeeded") : withdrawing.fieldError("reason")
-          }
-          required
-          autoComplete="off"
-        />
-        <Button submit full label={t("certificate.withdraw")} busy={withdrawing.busy} />
-      </Form>
-    </Sheet>
+    <ReasonSheet
+      title={title}
+      lead={t("certificate.withdrawLead")}
+      label={t("reason")}
+      needed={t("reasonNeeded")}
+      send={t("certificate.withdraw")}
+      busy={withdrawing.busy}
+      errors={withdrawing.formErrors}
+      error={withdrawing.fieldError("reason")}
+      onSend={(reason) => withdrawing.send({ reason })}
+      onClose={props.onClose}
+    />
   );
 }

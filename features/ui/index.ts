@@ -70,6 +70,7 @@ export { readTypedNumber, type TypedNumber } from "./read-number";
 export { barRun, railRun, risingRun, type Span } from "./run-line";
 export { Segments, type SegmentsProps } from "./segments";
 export { SelectField, type SelectFieldProps } from "./select-field";
+export { ReasonSheet } from "./reason-sheet";
 export { Inspector, Sheet, type SheetProps } from "./sheet";
 export { squaredPaper } from "./squared-paper";
 export { Spark, sparkPath, type SparkProps } from "./spark";
