@@ -4,6 +4,7 @@ import { View } from "react-native";
 import type { Installation } from "@shared/contracts/evidence";
 import type { Loop, Site } from "@shared/contracts/places";
 import { Answer } from "@features/api";
+import { comparePaths } from "@features/compare/compare-paths";
 import { useFormat, useWords, type Format } from "@features/i18n";
 import {
   Banner,
@@ -13,6 +14,7 @@ import {
   LoopTag,
   Screen,
   Text,
+  TextLink,
   useBreakpoint,
 } from "@features/ui";
 import { BoreCorrection } from "./bore-correction";
@@ -72,14 +74,18 @@ export function EvidenceScreen() {
       >
         {(answer) =>
           site.data && loop.data ? (
-            <EvidenceBody
-              site={site.data}
-              loop={loop.data}
-              params={params}
-              items={answer.items}
-              defaultBudget={answer.defaultBudget}
-              add={answer.can.create ? add : undefined}
-            />
+            <View style={{ gap: 20 }}>
+              <EvidenceBody
+                site={site.data}
+                loop={loop.data}
+                params={params}
+                items={answer.items}
+                defaultBudget={answer.defaultBudget}
+                add={answer.can.create ? add : undefined}
+              />
+              {/* Whoever reads evidence may compare; not everybody's navigation lists it. */}
+              <TextLink label={t("compare")} href={comparePaths.newMeters(siteId)} />
+            </View>
           ) : null
         }
       </Answer>

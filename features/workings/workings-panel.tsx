@@ -2,7 +2,7 @@ import { useQuery } from "@tanstack/react-query";
 import { useEffect, useRef } from "react";
 import { View } from "react-native";
 
-import { FailedAnswer } from "@features/api";
+import { FailedAnswer, saveFile } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Button,
@@ -20,7 +20,6 @@ import {
 } from "@features/ui";
 
 import { focusInside, focusedNow, type Focused } from "./panel-focus";
-import { saveAddress } from "./save-address";
 import { WorkingsBody } from "./workings-body";
 import { workingsAddresses, workingsQueries, type AskedFigure } from "./workings-queries";
 
@@ -123,7 +122,7 @@ function SendMenu({ asked }: { asked: AskedFigure }) {
     key,
     label: t(`send.${key}`),
     icon: "download" as const,
-    onPress: () => saveAddress(address),
+    onPress: () => saveFile(address),
   });
   return (
     <Menu

@@ -68,18 +68,18 @@ async function offers(page: Page, name: string | RegExp): Promise<boolean> {
 const roles: { role: Role; navigation: string[]; may: string[] }[] = [
   {
     role: "administrator",
-    navigation: ["Today", "Sites", "Logs", "Settings"],
-    may: ["add sites", "add points", "import", "manage members", "make tokens"],
+    navigation: ["Today", "Sites", "Logs", "Compare", "Kit", "Settings"],
+    may: ["add sites", "add points", "import", "add instruments", "manage members", "make tokens"],
   },
   {
     role: "engineer",
-    navigation: ["Today", "Sites", "Logs", "Settings"],
-    may: ["add sites", "add points", "import"],
+    navigation: ["Today", "Sites", "Logs", "Compare", "Kit", "Settings"],
+    may: ["add sites", "add points", "import", "add instruments"],
   },
   {
     role: "surveyor",
-    navigation: ["Today", "Sites", "Logs", "Settings"],
-    may: ["add points", "import"],
+    navigation: ["Today", "Sites", "Logs", "Kit", "Settings"],
+    may: ["add points", "import", "add instruments"],
   },
   { role: "billingClerk", navigation: ["Today", "Sites", "Settings"], may: [] },
 ];
@@ -89,6 +89,7 @@ const actions: { may: string; path: () => string; control: string | RegExp }[] =
   { may: "add points", path: () => at.points, control: "Add a metering point" },
   { may: "import", path: () => "/logs", control: "Import a log" },
   { may: "import", path: () => at.points, control: /^Import/ },
+  { may: "add instruments", path: () => "/kit", control: "Add an instrument" },
   { may: "manage members", path: () => "/settings", control: /^Members/ },
   { may: "make tokens", path: () => "/settings", control: /^Access tokens/ },
 ];
