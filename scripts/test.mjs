@@ -36,7 +36,9 @@ try {
   const database = await startThrowAwayDatabase();
   session.atEnd(database.stop);
   const env = { ...bare, LOOPWRIGHT_TEST_DB_PORT: String(database.port) };
-  count(await jestCheck(session, ["--selectProjects", "client", "domain", "server"], env));
+  // On two cores Jest alone would use one; the kill test mostly waits for servers to boot.
+  const projects = ["--selectProjects", "client", "domain", "server"];
+  count(await jestCheck(session, [...projects, "--maxWorkers=2"], env));
   await ensureWebBuild(session);
   // One browser at a time: two on two cores make each other's waits run out.
   count(await jestCheck(session, ["--selectProjects", "browser", "--runInBand"], env));
