@@ -43,6 +43,8 @@ export interface LoopChartProps {
   /** Energy to write under the days; null where none is worked out. */
   days: readonly ChartDay[] | null;
   load: LoadSeries;
+  /** What may be done with the part in view, once it is not all. */
+  viewAction?: { readonly label: string; readonly onPress: (view: Interval) => void } | undefined;
   /** The key, left of the note on averaging. */
   foot?: ReactNode;
 }
@@ -197,6 +199,12 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
         format={format}
         whole={chart.whole}
         onShowAll={chart.showAll}
+        viewAction={
+          props.viewAction && {
+            label: props.viewAction.label,
+            onPress: () => props.viewAction?.onPress(view),
+          }
+        }
         left={layout.named ? layout.left : 0}
         foot={props.foot}
       />
@@ -275,6 +283,7 @@ function ChartNote(props: {
   format: Format;
   whole: boolean;
   onShowAll: () => void;
+  viewAction: { readonly label: string; readonly onPress: () => void } | undefined;
   left: number;
   foot: ReactNode;
 }) {
@@ -292,7 +301,10 @@ function ChartNote(props: {
     <Row gap={4} justify="space-between" wrap style={{ paddingLeft: props.left, marginTop: 8 }}>
       <View style={{ flexShrink: 1, minWidth: 0 }}>{props.foot}</View>
       {props.whole ? null : (
-        <TextLink variant="small" label={t("showAll")} onPress={props.onShowAll} />
+        <>
+          <TextLink variant="small" label={t("showAll")} onPress={props.onShowAll} />
+          {props.viewAction ? <TextLink variant="small" {...props.viewAction} /> : null}
+        </>
       )}
       <Text variant="chip" tone="ink3">
         {note}

@@ -1,4 +1,5 @@
 import { useQueryClient } from "@tanstack/react-query";
+import { useRouter } from "expo-router";
 import { useMemo } from "react";
 import { View } from "react-native";
 
@@ -17,6 +18,7 @@ import {
   useBreakpoint,
 } from "@features/ui";
 
+import { correctionsPaths } from "@features/corrections/corrections-paths";
 import { downloadAddress } from "./downloads-menu";
 import { EnergyTable } from "./energy-table";
 import type { LoopFigures } from "./loop-context";
@@ -102,6 +104,8 @@ function Picture(props: ChartCardProps) {
   const t = useWords("loops");
   const client = useQueryClient();
   const phone = useBreakpoint() === "phone";
+  const router = useRouter();
+  const place = { siteId: site.id, loopId: loop.id, pointId: point.id };
   const load = useMemo(() => seriesLoader(client, point.id), [client, point.id]);
   const range = useMemo(
     () => ({ startMs: Date.parse(summary.from), endMs: Date.parse(summary.to) }),
@@ -124,6 +128,14 @@ function Picture(props: ChartCardProps) {
       format={format}
       days={summary.basis.blockedBy ? null : summary.days}
       load={load}
+      viewAction={
+        summary.can.correct
+          ? {
+              label: t("chart.excludeSpan"),
+              onPress: (view) => router.push(correctionsPaths.exclude(place, view)),
+            }
+          : undefined
+      }
     />
   );
 }

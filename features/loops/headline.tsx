@@ -5,9 +5,11 @@ import { Banner, Figure, Row, Text, TextLink, useBreakpoint } from "@features/ui
 
 import type { WorkingsKey } from "@features/workings/workings-key";
 
+import { correctionsPaths } from "@features/corrections/corrections-paths";
 import type { FiguresWithWorkings, LoopFigures } from "./loop-context";
 import { energyQuantity, registersOf, type RegisterName } from "./register-words";
 import { shownFigure } from "./shown-figure";
+import { lastDayOf } from "./shown-range";
 
 /** A register beside the loop's own is named once it holds this share of it. */
 const remarkableShare = 0.001;
@@ -37,6 +39,7 @@ export function Headline(props: FiguresWithWorkings) {
         </Text>
         <OtherRegister {...props} shown={registers} />
         <Suppressed {...props} />
+        <Filled {...props} />
         {summary.basis.rowsAgainstRegister > 0 ? (
           <Text variant="small" tone="ink2">
             {t("headline.against", { count: summary.basis.rowsAgainstRegister })}
@@ -102,6 +105,38 @@ function OtherRegister(props: LoopFigures & { shown: readonly RegisterName[] }) 
     <Text variant="small" tone="ink2">
       {t(`headline.other.${other}`, { energy: format.withUnit(energy, energyQuantity[other]) })}
     </Text>
+  );
+}
+
+/** What stands filled in the range: beside the figure, never in it. */
+function Filled({ summary, format, site, loop, point, range }: LoopFigures) {
+  const t = useWords("loops");
+  const { filled } = summary.totals;
+  if (filled === null) return null;
+  const own = registersOf(loop.service);
+  const registers = (["heating", "cooling"] as const).filter(
+    (register) => own.includes(register) || filled[`${register}Kwh`] > 0,
+  );
+  const energies = registers.map((register) => {
+    const energy = format.figure(
+      filled[`${register}Kwh`],
+      filled[`${register}ExpandedKwh`],
+      energyQuantity[register],
+    );
+    return registers.length === 1 ? energy : t(`headline.filledOf.${register}`, { energy });
+  });
+  return (
+    <TextLink
+      variant="small"
+      label={t(filled.approvedOnly ? "headline.filledApproved" : "headline.filledProposed", {
+        energy: energies.join(", "),
+        time: format.duration(filled.filledS),
+      })}
+      href={correctionsPaths.fills(
+        { siteId: site.id, loopId: loop.id, pointId: point.id },
+        { since: range.from, until: lastDayOf(range) },
+      )}
+    />
   );
 }
 

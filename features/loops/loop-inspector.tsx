@@ -11,6 +11,7 @@ import type { LoopFigures, LoopView } from "./loop-context";
 import { loopsPaths } from "./loops-paths";
 import { MeasuredBySection } from "./measured-by-section";
 import { PipeSection, places } from "./pipe-section";
+import { lastDayOf } from "./shown-range";
 import { tagService } from "./register-words";
 
 /** What the figures stand on: the pipe, the points of the loop, the rows left out. */
@@ -104,7 +105,8 @@ function Pipe({ point, loop, format }: LoopView) {
 const fewRuns = 8;
 
 /** The longest stretches that do not count, in order of time. */
-function LeftOut({ summary, format }: LoopFigures) {
+function LeftOut(props: LoopFigures) {
+  const { summary, format } = props;
   const t = useWords("loops");
   const [all, setAll] = useState(false);
   const shown = all ? summary.leftOut : summary.leftOut.slice(0, fewRuns);
@@ -141,6 +143,7 @@ function LeftOut({ summary, format }: LoopFigures) {
                     <Text variant="small" tone="ink3">
                       {t(`leftOut.reason.${run.reason}`)}
                     </Text>
+                    <WayOn {...props} run={run} />
                   </View>
                 </Line>
               </View>
@@ -164,6 +167,44 @@ function LeftOut({ summary, format }: LoopFigures) {
         </Line>
       ) : null}
     </View>
+  );
+}
+
+/** What may be done about a stretch: see what fills it, fill it, or leave all of it out. */
+function WayOn(props: LoopFigures & { run: LoopFigures["summary"]["leftOut"][number] }) {
+  const { run, summary, site, loop, point, range, format } = props;
+  const t = useWords("loops");
+  const place = { siteId: site.id, loopId: loop.id, pointId: point.id };
+  const days = { since: range.from, until: lastDayOf(range) };
+  const when = format.dateTime(Date.parse(run.from));
+  if (run.kind === "filled")
+    return (
+      <TextLink
+        variant="small"
+        label={t("leftOut.seeFill")}
+        said={t("leftOut.seeFillOf", { when })}
+        href={correctionsPaths.fills(place, days)}
+      />
+    );
+  if (!summary.can.correct) return null;
+  const span = { startMs: Date.parse(run.from), endMs: Date.parse(run.to) };
+  return (
+    <Row gap={3} wrap>
+      {run.reason === "weakSignal" ? (
+        <TextLink
+          variant="small"
+          label={t("leftOut.exclude")}
+          said={t("leftOut.excludeOf", { when })}
+          href={correctionsPaths.exclude(place, span)}
+        />
+      ) : null}
+      <TextLink
+        variant="small"
+        label={t("leftOut.fill")}
+        said={t("leftOut.fillOf", { when })}
+        href={correctionsPaths.fill(place, run, days)}
+      />
+    </Row>
   );
 }
 

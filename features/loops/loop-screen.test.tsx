@@ -14,6 +14,7 @@ import {
   serverRefuses,
   show,
   siteOf,
+  visited,
 } from "@features/places/test-kit";
 
 import { LoopScreen } from "./loop-screen";
@@ -120,6 +121,7 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       },
     ],
     leftOutCount: 1,
+    can: { correct: true },
     evidence: { installations: [], can: { record: true } },
     firstReadingAt: "2025-05-01T00:00:00.000Z",
     lastReadingAt: "2026-05-17T22:59:00.000Z",
@@ -262,6 +264,41 @@ it("says that usual values stand without evidence, with a way to record some for
   expect(screen.queryByText("How it was measured")).toBeNull();
 });
 
+it("leads from what was left out to the form that excludes or fills it, for who may", async () => {
+  const [weak] = summaryOf().leftOut;
+  const gap = {
+    kind: "missing",
+    from: "2026-05-16T01:20:00.000Z",
+    to: "2026-05-16T02:11:00.000Z",
+    rows: 51,
+    reason: "noRows",
+  } as const;
+  const filled = { ...gap, kind: "filled", from: "2026-05-13T10:15:00.000Z" } as const;
+  const leftOut = [filled, ...(weak ? [weak] : []), gap];
+  serverAnswers(summaryCall, summaryOf({ leftOut, leftOutCount: 3 }));
+  const { unmount } = show(<LoopScreen />);
+  const screenOf = "/sites/1/loops/7/points/9/corrections";
+  const days = "since=2026-05-11&until=2026-05-17";
+  expect(
+    await screen.findByRole("link", { name: "Exclude, from Thu 14 May, 22:03" }),
+  ).toHaveAttribute(
+    "href",
+    `${screenOf}?propose=exclude&from=2026-05-14T21%3A03%3A00.000Z&to=2026-05-14T21%3A41%3A00.000Z`,
+  );
+  const fill = new URLSearchParams({ fill: `${gap.from}_${gap.to}` }).toString();
+  expect(
+    screen.getByRole("link", { name: "Fill this gap, from Sat 16 May, 02:20" }),
+  ).toHaveAttribute("href", `${screenOf}?tab=fills&${days}&${fill}`);
+  expect(
+    screen.getByRole("link", { name: "See the fill, from Wed 13 May, 11:15" }),
+  ).toHaveAttribute("href", `${screenOf}?tab=fills&${days}`);
+  unmount();
+  serverAnswers(summaryCall, summaryOf({ leftOut, can: { correct: false } }));
+  show(<LoopScreen />);
+  expect(await screen.findByRole("link", { name: /^See the fill/ })).toBeVisible();
+  expect(screen.queryByRole("link", { name: /^Exclude|^Fill this gap/ })).toBeNull();
+});
+
 it("never nets a changeover loop's registers", async () => {
   serverAnswers("GET /loops/7", loopOf({ service: "changeover" }));
   const totals = {
@@ -289,6 +326,35 @@ it("shows energy a cut-off held back, with its time", async () => {
   serverAnswers(summaryCall, summaryOf({ totals }));
   show(<LoopScreen />);
   expect(await screen.findByText(/^8.37 kWh over 4 h 15 min held back/)).toBeVisible();
+});
+
+it("stands what is filled beside the energy, never in it, and leads to the fills", async () => {
+  const filled = {
+    heatingKwh: 0,
+    coolingKwh: 123.4,
+    heatingExpandedKwh: 0,
+    coolingExpandedKwh: 40,
+    volumeM3: null,
+    filledS: 3300,
+    approvedOnly: false,
+  };
+  const { totals } = summaryOf();
+  serverAnswers(summaryCall, summaryOf({ totals: { ...totals, filled } }));
+  const { unmount } = show(<LoopScreen />);
+  expect(
+    await screen.findByRole("link", {
+      name: /^Filled beside it: 123\s±\s40\skWh over 55\smin, proposed$/,
+    }),
+  ).toHaveAttribute(
+    "href",
+    "/sites/1/loops/7/points/9/corrections?tab=fills&since=2026-05-11&until=2026-05-17",
+  );
+  expect(screen.getByRole("button", { name: /^Cooling energy.*: 14,940 / })).toBeVisible();
+  unmount();
+  const approved = { ...filled, approvedOnly: true };
+  serverAnswers(summaryCall, summaryOf({ totals: { ...totals, filled: approved } }));
+  show(<LoopScreen />);
+  expect(await screen.findByRole("link", { name: /55\smin, approved$/ })).toBeVisible();
 });
 
 it("shows a meter's energy with a dash and its reason where no water was measured", async () => {
@@ -384,6 +450,13 @@ it("moves the chart's cursor by keys and says what stands there", async () => {
   fireEvent.keyDown(chart, { key: "PageDown" });
   expect(await screen.findByText(/^Tue 12 May, 00:30:/)).toBeInTheDocument();
   fireEvent.keyDown(chart, { key: "+" });
+  fireEvent.click(await screen.findByRole("button", { name: "Exclude this span" }));
+  const form = visited.push.mock.calls.at(-1)?.[0];
+  const span = new URLSearchParams(form?.split("?")[1]);
+  expect(span.get("propose")).toBe("exclude");
+  const hours = (Date.parse(span.get("to") ?? "") - Date.parse(span.get("from") ?? "")) / 3.6e6;
+  // One zoom by the key leaves 0.6 of the week's 168 h, to the minute.
+  expect(hours).toBeCloseTo(100.8, 1);
   fireEvent.click(await screen.findByRole("button", { name: "Show all" }));
   await waitFor(() => expect(screen.queryByRole("button", { name: "Show all" })).toBeNull());
 });

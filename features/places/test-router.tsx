@@ -33,8 +33,17 @@ export function useLocalSearchParams(): Params {
   );
 }
 
-export function Link(props: { href: string; asChild?: boolean; children: ReactNode }) {
+export function Link(props: {
+  href: string;
+  asChild?: boolean;
+  "aria-label"?: string;
+  children: ReactNode;
+}) {
   const { href, asChild, children } = props;
   if (asChild) return cloneElement(children as ReactElement<{ href: string }>, { href });
-  return <a href={href}>{children}</a>;
+  return (
+    <a href={href} aria-label={props["aria-label"]}>
+      {children}
+    </a>
+  );
 }

@@ -90,6 +90,8 @@ export function presentTotals(
     filled: filled && {
       heatingKwh: rounded(filled.heatingKwh, 6),
       coolingKwh: rounded(filled.coolingKwh, 6),
+      heatingExpandedKwh: rounded(filled.heatingExpandedKwh, 6),
+      coolingExpandedKwh: rounded(filled.coolingExpandedKwh, 6),
       volumeM3: roundedOrNull(filled.volumeM3, 6),
       filledS: rounded(filled.filledS, 3),
       approvedOnly: filled.approvedOnly,

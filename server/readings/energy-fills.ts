@@ -14,6 +14,12 @@ import type { Database } from "@server/database/connect";
 export interface FilledTotals {
   readonly heatingKwh: number;
   readonly coolingKwh: number;
+  /**
+   * Their ±, k = 2. Fills of one point are made from the same readings, so theirs are added up
+   * straight, which is the cautious side.
+   */
+  readonly heatingExpandedKwh: number;
+  readonly coolingExpandedKwh: number;
   /** Null where a fill knows none. */
   readonly volumeM3: number | null;
   readonly filledS: number;
@@ -62,14 +68,19 @@ export async function filledTotals(
     database,
     `SELECT SUM(q.heating_kwh * ${share}), SUM(q.cooling_kwh * ${share}),
             SUM(q.volume_m3 * ${share}), SUM(q.filled_s * ${share}),
-            SUM(q.volume_m3 IS NULL), SUM(f.state = 'proposed') ${standing}`,
+            SUM(q.volume_m3 IS NULL), SUM(f.state = 'proposed'),
+            SUM(2 * f.uncertainty_percent / 100 * q.heating_kwh * ${share}),
+            SUM(2 * f.uncertainty_percent / 100 * q.cooling_kwh * ${share}) ${standing}`,
     [pointId, startMs / 1000, endMs / 1000],
   );
-  const [heatingKwh, coolingKwh, volumeM3, filledS, withoutVolume, proposed] = row ?? [];
+  const [heatingKwh, coolingKwh, volumeM3, filledS, withoutVolume, proposed, heating, cooling] =
+    row ?? [];
   if (filledS === null || filledS === undefined || Number(filledS) === 0) return null;
   return {
     heatingKwh: Number(heatingKwh),
     coolingKwh: Number(coolingKwh),
+    heatingExpandedKwh: Number(heating),
+    coolingExpandedKwh: Number(cooling),
     volumeM3: Number(withoutVolume) > 0 ? null : Number(volumeM3),
     filledS: Number(filledS),
     approvedOnly: Number(proposed) === 0,

@@ -66,6 +66,12 @@ test("four hours of Friday as the mean of the three working days before, beside 
   expect({ ...during, filled: null }).toEqual(before);
   expect(during.filled).toMatchObject({ filledS: 4 * 3600, approvedOnly: false });
   expect(during.filled.coolingKwh).toBeCloseTo(fill.coolingKwh, 5);
+  // The fill's standard uncertainty, expanded.
+  expect(fill.uncertaintyPercent).toBeGreaterThan(0);
+  expect(during.filled.coolingExpandedKwh).toBeCloseTo(
+    (2 * fill.uncertaintyPercent * fill.coolingKwh) / 100,
+    4,
+  );
 
   await agent.post(`/fills/${fill.id}/approval`, {}).expect(200);
   expect((await totalsOf(agent, point.id)).filled.approvedOnly).toBe(true);

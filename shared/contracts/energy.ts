@@ -48,6 +48,8 @@ export const energyTotals = z.object({
     .object({
       heatingKwh: z.number(),
       coolingKwh: z.number(),
+      heatingExpandedKwh: z.number().describe("the ± of it, k = 2"),
+      coolingExpandedKwh: z.number().describe("the ± of it, k = 2"),
       volumeM3: z.number().nullable(),
       filledS: z.number().describe("time without readings that a fill stands for"),
       approvedOnly: z.boolean().describe("false while a proposal is among them"),
@@ -225,6 +227,7 @@ export const getPointSummary = contract({
       }),
     ),
     leftOutCount: z.number().int(),
+    can: z.object({ correct: z.boolean().describe("propose corrections and fills") }),
     evidence: z
       .object({
         installations: z.array(measuredBy).describe("that speak for the range, oldest first"),

@@ -119,6 +119,7 @@ export async function pointSummary(
           : (run.reason ?? "noRows"),
     })),
     leftOutCount: leftOut.length,
+    can: { correct: can(actor).correctReadings && point.archivedAt === null },
     evidence: can(actor).seeEvidence
       ? {
           installations: evidence.installations.map((one) => presentMeasuredBy(one, range, zone)),
