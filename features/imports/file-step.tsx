@@ -39,6 +39,7 @@ export function FileStep({ detail, actions }: { detail: ImportDetail; actions: I
   };
 
   const several = detail.files.length > 1;
+  const abreast = several && !phone;
   return (
     <SideColumn
       main={
@@ -64,15 +65,16 @@ export function FileStep({ detail, actions }: { detail: ImportDetail; actions: I
           {refused ? <Refused error={refused} /> : null}
           <View
             style={{
-              flexDirection: several && !phone ? "row" : "column",
-              flexWrap: "wrap",
+              flexDirection: abreast ? "row" : "column",
+              // A column that wraps is as wide as the longest line of the file.
+              flexWrap: abreast ? "wrap" : "nowrap",
               gap: 16,
             }}
           >
             {detail.files.map((file) => (
               <View
                 key={file.id}
-                style={{ flexGrow: 1, flexBasis: several ? 320 : "100%", minWidth: 0 }}
+                style={{ flexGrow: 1, flexBasis: abreast ? 320 : "auto", minWidth: 0 }}
               >
                 <FileCard file={file} detail={detail} actions={actions} />
               </View>
