@@ -60,6 +60,7 @@ it("picks no meter side by itself, and does not save without one", async () => {
     code: "MP-1",
     name: "Main meter",
     role: "main",
+    gapRule: "survey",
     meterSide: "return",
     parentPointId: null,
     pipe: null,
