@@ -116,7 +116,13 @@ function Picture(props: ChartCardProps) {
       foot={
         <View style={{ gap: 6 }}>
           {phone ? <ChartKey service={tagService(loop.service)} /> : null}
-          <QualityKey only={["measured", "excluded", "missing"]} />
+          <QualityKey
+            only={
+              summary.totals.filled === null
+                ? ["measured", "excluded", "missing"]
+                : ["measured", "estimated", "excluded", "missing"]
+            }
+          />
         </View>
       }
       key={`${point.id} ${summary.from} ${summary.to}`}

@@ -350,6 +350,8 @@ it("stands what is filled beside the energy, never in it, and leads to the fills
     "/sites/1/loops/7/points/9/corrections?tab=fills&since=2026-05-11&until=2026-05-17",
   );
   expect(screen.getByRole("button", { name: /^Cooling energy.*: 14,940 / })).toBeVisible();
+  // The strip shows it too, so its key names it.
+  expect(screen.getByText("Estimated")).toBeVisible();
   unmount();
   const approved = { ...filled, approvedOnly: true };
   serverAnswers(summaryCall, summaryOf({ totals: { ...totals, filled: approved } }));
