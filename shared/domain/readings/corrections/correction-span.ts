@@ -37,7 +37,8 @@ export function sharedSpan(a: CorrectionSpan, b: CorrectionSpan): CorrectionSpan
   return startMs < endMs ? { startMs, endMs } : null;
 }
 
-function firstFrom(instantMs: Float64Array, ms: number): number {
+/** The first row at or after an instant; as many as there are rows where none is. */
+export function firstFrom(instantMs: Float64Array, ms: number): number {
   let low = 0;
   let high = instantMs.length;
   while (low < high) {
