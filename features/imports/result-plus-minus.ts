@@ -13,9 +13,19 @@ import { energyOfQuery } from "./imports-queries";
 export function resultRange(detail: ImportDetail): { from: string; to: string } | null {
   const { firstInstant, lastInstant, importedAt } = detail;
   if (importedAt === null || firstInstant === null || lastInstant === null) return null;
-  const startMs = Math.floor(Date.parse(firstInstant) / INTERVAL_MS) * INTERVAL_MS;
-  const endMs = (Math.floor(Date.parse(lastInstant) / INTERVAL_MS) + 1) * INTERVAL_MS;
+  const firstMs = Date.parse(firstInstant) - meanStepMs(detail, "meanToLabel");
+  const lastMs = Date.parse(lastInstant) + meanStepMs(detail, "meanFromLabel");
+  const startMs = Math.floor(firstMs / INTERVAL_MS) * INTERVAL_MS;
+  const endMs = Math.max(Math.ceil(lastMs / INTERVAL_MS) * INTERVAL_MS, startMs + INTERVAL_MS);
   return { from: new Date(startMs).toISOString(), to: new Date(endMs).toISOString() };
+}
+
+/** How far a mean of this kind reaches past its time; 0 where no file holds such means. */
+function meanStepMs(detail: ImportDetail, kind: "meanFromLabel" | "meanToLabel"): number {
+  const stepsS = detail.files
+    .filter(({ recipe }) => recipe?.seriesKind === kind)
+    .map(({ id }) => detail.checks?.files.find(({ fileId }) => fileId === id)?.nominalStepS ?? 0);
+  return Math.max(0, ...stepsS) * 1000;
 }
 
 /** The ± of what the file brought, by the evidence of its point; null until it is known. */
