@@ -138,11 +138,12 @@ function Effect(props: { effect: NonNullable<Correction["effect"]>; format: Form
     const key = `${name}Kwh` as const;
     const change = after[key] - before[key];
     const energy = (kwh: number) => format.withUnit(kwh, `${name}Energy`);
-    const sign = change > 0 ? "+" : change < 0 ? "−" : "±";
+    const sign = change > 0 ? "+" : "−";
     return {
       label: t(`register.${name}`),
       value: t("effect.change", {
-        change: `${sign}${energy(Math.abs(change))}`,
+        // “±0” would read as an uncertainty.
+        change: change === 0 ? t("results.unchanged") : `${sign}${energy(Math.abs(change))}`,
         before: energy(before[key]),
         after: energy(after[key]),
       }),

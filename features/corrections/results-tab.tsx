@@ -90,7 +90,9 @@ function ResultsTable(props: {
   const changeOf = ({ change }: Listed, name: (typeof runs)[number]) => {
     if (change === null) return "";
     const kwh = change[`${name}Kwh`];
-    const sign = kwh > 0 ? "+" : kwh < 0 ? "−" : "±";
+    // “±0” would read as an uncertainty.
+    if (kwh === 0) return t("results.unchanged");
+    const sign = kwh > 0 ? "+" : "−";
     return `${sign}${format.withUnit(Math.abs(kwh), `${name}Energy`)}`;
   };
   const energyOf = ({ result }: Listed, name: (typeof runs)[number]) =>

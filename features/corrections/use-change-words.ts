@@ -7,7 +7,11 @@ import { quantityOf } from "./change-draft";
 export function useChangeWords(format: Format) {
   const t = useWords("corrections");
   const fluid = useFluidWords();
-  const at = (instant: string) => format.dateTime(Date.parse(instant));
+  // With the year: a correction is read long after the time it speaks of.
+  const at = (instant: string) => {
+    const ms = Date.parse(instant);
+    return `${format.date(ms, "dayMonthYear")}, ${format.time(ms)}`;
+  };
   const says = (change: CorrectionChange): string => {
     switch (change.kind) {
       case "exclude": {
