@@ -22,15 +22,25 @@ export function dropHistoryEntry(): void {
   window.history.back();
 }
 
-/** Calls `answer` in place of the router when Back leaves our entry; returns how to stop. */
-export function onHistoryBack(answer: () => void): () => void {
-  const listen = (event: PopStateEvent) => {
+let answerBack: (() => void) | null = null;
+
+/*
+ * Browsers call the listeners of the window itself in the order they were added, capturing or not.
+ * To come before the router's, ours is added when this file is first read: index.ts reads it first.
+ */
+if (typeof window !== "undefined")
+  window.addEventListener("popstate", (event) => {
     if (!isOurs) return;
     isOurs = false;
+    if (answerBack === null) return;
     event.stopImmediatePropagation();
-    answer();
+    answerBack();
+  });
+
+/** Calls `answer` in place of the router when Back leaves our entry; returns how to stop. */
+export function onHistoryBack(answer: () => void): () => void {
+  answerBack = answer;
+  return () => {
+    if (answerBack === answer) answerBack = null;
   };
-  // Capturing listeners of the window come before the router's.
-  window.addEventListener("popstate", listen, true);
-  return () => window.removeEventListener("popstate", listen, true);
 }

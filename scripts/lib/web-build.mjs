@@ -10,6 +10,7 @@ import { projectRoot } from "./settings.mjs";
 
 const sourceFolders = ["app", "features", "shared", "assets", "public"];
 const sourceFiles = [
+  "index.ts",
   "app.json",
   "babel.config.js",
   "metro.config.js",
