@@ -3,7 +3,7 @@ import type { Loop, Site } from "@shared/contracts/places";
 import { readDemoAccounts, type DemoAccount } from "@server/start-up/demo-people";
 import { expectNoSeriousAxe } from "./harness/accessibility";
 import { bootApplication, type Application } from "./harness/application";
-import { launch, openPage, problemsOf, type OpenOptions } from "./harness/browser";
+import { launch, openPage, problemsOf, type OpenOptions, type Viewport } from "./harness/browser";
 import { settle } from "./harness/screenshots";
 
 let application: Application;
@@ -79,3 +79,24 @@ it("fills a phone's screen, and hands out a page as PDF", async () => {
   expect((await answer.body()).subarray(0, 5).toString("latin1")).toBe("%PDF-");
   await page.context().close();
 }, 120_000);
+
+it.each(["wide", "phone"] satisfies Viewport[])(
+  "Back closes them on a %s screen and keeps page and focus, and Escape after it stays on the page",
+  async (viewport) => {
+    const page = await loopPage({ viewport });
+    const figure = energyOf(page);
+    const address = page.url();
+    for (const leave of [() => page.goBack(), () => page.keyboard.press("Escape")]) {
+      await figure.focus();
+      await page.keyboard.press("Enter");
+      await heading(page).waitFor();
+      await leave();
+      await heading(page).waitFor({ state: "hidden" });
+      await settle(page);
+      expect(await figure.evaluate((box) => box === document.activeElement)).toBe(true);
+      expect(page.url()).toBe(address);
+    }
+    await page.context().close();
+  },
+  120_000,
+);
