@@ -17,7 +17,9 @@ export function BoreCorrection(props: {
   return (
     <Banner
       kind="look"
-      lead={t("pipe.differsLead", { percent: format.number(percent, 4) })}
+      lead={t(percent > 0 ? "pipe.readsLow" : "pipe.readsHigh", {
+        percent: format.number(Math.abs(percent), 4),
+      })}
       action={
         <TextLink
           label={t("pipe.scale")}

@@ -45,6 +45,11 @@ export function Headline(props: FiguresWithWorkings) {
             {t("headline.against", { count: summary.basis.rowsAgainstRegister })}
           </Text>
         ) : null}
+        {registers.some((register) => lacksPlusMinus(props, register)) ? (
+          <Text variant="small" tone="ink3">
+            {t("headline.noPlusMinus")}
+          </Text>
+        ) : null}
         {summary.basis.meansOnly ? (
           <Text variant="small" tone="ink3">
             {t("headline.meansOnly")}
@@ -81,6 +86,12 @@ function RegisterFigure(props: FiguresWithWorkings & { register: RegisterName; a
       />
     </View>
   );
+}
+
+/** Energy without a ±, as of a permanent meter nobody recorded a class of: said, never left blank. */
+function lacksPlusMinus({ summary }: LoopFigures, register: RegisterName): boolean {
+  const energy = summary.totals[register].energyKwh;
+  return energy !== null && energy > 0 && summary.plusMinus[register].energy === null;
 }
 
 function CoveredWords({ summary, format }: LoopFigures) {

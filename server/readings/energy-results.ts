@@ -32,7 +32,7 @@ const plainBytes = 64 * 1024;
 
 /** Changes with whatever of point, loop and site the energy depends on; equal settings, equal text. */
 export function pointVersionOf(settings: EnergySettings): string {
-  const { meterSide, service, cutOffs, pressure, loopFluid, zone } = settings;
+  const { meterSide, service, cutOffs, pressure, loopFluid, zone, meterPlace } = settings;
   const depends = [
     meterSide,
     service,
@@ -42,6 +42,11 @@ export function pointVersionOf(settings: EnergySettings): string {
     loopFluid.kind,
     ...(loopFluid.kind === "water" ? [] : [loopFluid.percent, loopFluid.basis]),
     zone,
+    // The gap rule, and what a counter there can pass at most.
+    meterPlace.gapRule,
+    meterPlace.designFlowM3PerHour,
+    meterPlace.designDeltaTK,
+    meterPlace.insideDiameterMm,
   ];
   return createHash("sha256").update(JSON.stringify(depends)).digest("hex").slice(0, 10);
 }
@@ -63,8 +68,10 @@ export async function keepEnergyResult(
   const days = (await loadDays(database, pointId, "0001-01-01", "9999-12-31", transaction)).map(
     resultDay,
   );
+  // Rows that are all left out cover no time: what was used in it is unknown, not 0.
+  const covered = days.some((day) => day.coveredS > 0);
   const sum = (of: (day: ResultDay) => number) =>
-    days.length === 0 ? null : days.reduce((total, day) => total + of(day), 0);
+    covered ? days.reduce((total, day) => total + of(day), 0) : null;
   const json = Buffer.from(JSON.stringify(days));
   const packs = json.length > plainBytes;
   await database.query(
@@ -144,6 +151,7 @@ export function causeOf(
   if (lacks(standingBefore, standing)) return "withdrawal";
   if (before.point.meterSide !== now.point.meterSide) return "pointChanged";
   if (JSON.stringify(before.loop) !== JSON.stringify(now.loop)) return "loopChanged";
+  if (before.point.version !== now.point.version) return "pointChanged";
   return before.engineVersion === ENGINE_VERSION ? "other" : "engineChanged";
 }
 
