@@ -44,6 +44,7 @@ const LEAST_LAG_MS = 10 * MINUTE_MS;
 const LEAST_LAG_STEPS = 3;
 const LEAST_EDGES = 5;
 const MOST_EDGES = 400;
+const MOST_SAMPLES = 4001;
 const EDGE_SHARE = 0.25;
 const CLEAR_OF_MEDIAN = 3;
 const CLEAR_OF_USUAL = 6;
@@ -130,9 +131,12 @@ export function clockHint(segment: ReadingSegment): ClockHintFinding | null {
 
 /** Instants at which flow jumps. */
 function flowEdges({ instantMs, values }: EdgeSeries): number[] {
-  const known = Uint32Array.from(values.keys()).filter((row) => !Number.isNaN(values[row]!));
-  if (known.length < 2) return [];
-  const sorted = Float64Array.from(sampleOf(known, 4001), (row) => values[row]!).sort();
+  const stride = Math.ceil(values.length / MOST_SAMPLES);
+  const sample: number[] = [];
+  for (let row = 0; row < values.length; row += stride)
+    if (!Number.isNaN(values[row]!)) sample.push(values[row]!);
+  if (sample.length < 2) return [];
+  const sorted = Float64Array.from(sample).sort();
   const at = (share: number) => sorted[Math.round(share * (sorted.length - 1))]!;
   const least = EDGE_SHARE * (at(0.95) - at(0.05));
   if (!(least > 0)) return [];

@@ -14,7 +14,8 @@ import { placeOf } from "./row-spans";
  * where the series is shorter than that, the longest shift that fits. Flow, which jumps
  * with the load too, needs a day after the change. A change point needs all of:
  * 1. a jump at once: the median of 5 readings from there on against the 5 before it, less the drift on
- *    both sides, at least 0.3 K for a temperature and 5 % for a flow, and more than that drift bends;
+ *    both sides, at least 0.3 K for a temperature and 5 % for a flow, more than that drift bends, and
+ *    twice the scatter there;
  * 2. no answer: the other temperature moves by less than 0.3 of the jump, flow by less than 5 %; when
  *    flow jumps, neither temperature moves by 0.3 of what that flow would do to ΔT (at least 0.15 K);
  * 3. a lasting one: the residuals that reach across it, at least 30, less the median of those wholly
@@ -51,7 +52,8 @@ const ANSWER_SHARE = 0.3;
 const FLOW_ANSWER = 0.05;
 const LEAST_ANSWER_K = 0.15;
 /** Enough to see that most residuals say something else. */
-const QUICK_PAIRS = 16;
+const QUICK_PAIRS = 32;
+const QUICK_SHARE = 0.65;
 
 type Channel = "flowM3PerHour" | "supplyC" | "returnC";
 
@@ -157,12 +159,18 @@ function findSteps(
   const jumps = new Jumps(instantMs, values);
   const steps: Step[] = [];
   for (let at = SIDE; at <= count - SIDE; at++) {
+    if (jumps.isCalm(at, least / 2)) continue;
     const first = jumps.at(at);
     if (Math.abs(first) < least) continue;
     // The same change shows from a few rows before it to a few after: look at it once.
     let end = at;
     while (end < count - SIDE && end - at < SIDE && jumps.at(end + 1) * Math.sign(first) >= least)
       end++;
+    const middle = (at + end) >> 1;
+    if (jumps.scatterAt(middle) > Math.abs(jumps.at(middle)) / 2) {
+      at = end;
+      continue;
+    }
     const change = jumps.sharpest(at, end);
     at = end;
     if (instantMs[change + SIDE - 1]! - instantMs[change - SIDE]! > widestMs) continue;
@@ -189,6 +197,19 @@ class Jumps {
   at(row: number): number {
     const [before, after] = this.drifts(row, row);
     return this.plain(row) - ((before + after) / 2) * this.betweenMs(row);
+  }
+
+  /** Nearly every row leaves here, without a look at the drift. */
+  isCalm(row: number, least: number): boolean {
+    return Math.abs(this.medians[row]! - this.medians[row - SIDE]!) < least;
+  }
+
+  /** Mean distance of the 5 before a row and the 5 from it on from their medians. */
+  scatterAt(row: number): number {
+    let distance = 0;
+    for (let i = row - SIDE; i < row + SIDE; i++)
+      distance += Math.abs(this.values[i]! - this.medians[i < row ? row - SIDE : row]!);
+    return distance / (2 * SIDE);
   }
 
   /** How much the drift changes at a row: a bend as large as the jump is no step. */
@@ -296,6 +317,7 @@ function lasting(
 ): Step | null {
   const { instantMs } = series;
   const atMs = instantMs[change]!;
+  if (!mayLast(series, change, jump)) return null;
   const day = residuals(series, atMs, DAY_MS);
   const isDay = day.length >= LEAST_PAIRS;
   if (!mayBeShort && (!isDay || instantMs.at(-1)! - atMs < WHOLE_DAY_MS)) return null;
@@ -303,15 +325,6 @@ function lasting(
   const across = isDay ? day : residuals(series, atMs, lagMs);
   if (across.length < LEAST_PAIRS) return null;
   const { usual, edge } = isDay ? neighbourDays(series, atMs, across) : NO_NEIGHBOURS;
-  const stride = Math.max(1, Math.floor(across.length / QUICK_PAIRS));
-  let near = 0;
-  let looked = 0;
-  for (let i = 0; i < across.length; i += stride) {
-    looked++;
-    const ratio = (across[i]! - usual) / jump;
-    if (ratio > 0.25 && ratio < 3) near++;
-  }
-  if (near < looked / 2) return null;
   const size = medianOf(across.slice())! - usual;
   const ratio = size / jump;
   if (!(ratio >= 0.5 && ratio <= 2) || Math.abs(size) < least) return null;
@@ -325,6 +338,21 @@ function lasting(
   return share >= AGREEING_SHARE
     ? { at: change, size: edge ?? size, agreeing: share, lagMs }
     : null;
+}
+
+/** A quick look at some residuals across a change: whether most of them go its way. */
+function mayLast({ instantMs, values }: Series, change: number, jump: number): boolean {
+  const end = firstFrom(instantMs, instantMs[change]! + DAY_MS);
+  const stride = Math.max(1, Math.floor((end - change) / QUICK_PAIRS));
+  let along = 0;
+  let looked = 0;
+  for (let late = change; late < end; late += stride) {
+    const early = firstFrom(instantMs, instantMs[late]! - DAY_MS);
+    if (early >= change || instantMs[early]! > instantMs[late]! - DAY_MS + HOUR_MS) continue;
+    looked++;
+    if ((values[late]! - values[early]!) / jump > 0.25) along++;
+  }
+  return along >= QUICK_SHARE * looked;
 }
 
 const NO_NEIGHBOURS = { usual: 0, edge: null };

@@ -3,7 +3,7 @@ import { HOUR_MS, MINUTE_MS } from "../../time/interval";
 import type { ReadingSegment } from "../reading-columns";
 import { KEEP, type Finding } from "./finding";
 import { noFlowBelowM3PerHour, type NoFlowLimits } from "./no-flow";
-import { medianOf, readRows, rowWeightMs } from "./read-rows";
+import { medianOf, readRows, rowWeightMs, sampleOf } from "./read-rows";
 import { wholePlace } from "./row-spans";
 
 /**
@@ -29,6 +29,7 @@ export interface SwappedLimits extends NoFlowLimits {
 
 export const WRONG_SIGN_SHARE = 0.9;
 const DEAD_BAND_K = 0.2;
+const MOST_SAMPLES = 4001;
 const LEAST_STOP_MS = 30 * MINUTE_MS;
 
 export type SwappedSidesFinding = Finding<
@@ -36,7 +37,7 @@ export type SwappedSidesFinding = Finding<
   {
     readonly wrongSharePercent: number;
     readonly flowingHours: number;
-    /** Median with flow, supply minus return. */
+    /** Median with flow, supply minus return, of at most 4 001 readings. */
     readonly deltaTK: number;
     /** Median size at the end of stops; null where the pump never stood long enough. */
     readonly standingDeltaTK: number | null;
@@ -54,7 +55,7 @@ export function swappedSides(
   const wrongSign = limits.service === "heating" ? -1 : 1;
   const deadBandK = limits.deadBandK ?? DEAD_BAND_K;
   const noFlow = noFlowBelowM3PerHour(limits);
-  const deltas = new Float64Array(rows.length);
+  const flowing = new Uint32Array(rows.length);
   let count = 0;
   let flowingMs = 0;
   let wrongMs = 0;
@@ -64,10 +65,11 @@ export function swappedSides(
     const weight = rowWeightMs(segment, row);
     flowingMs += weight;
     if (deltaTK * wrongSign > deadBandK) wrongMs += weight;
-    deltas[count++] = deltaTK;
+    flowing[count++] = row;
   }
   if (flowingMs === 0 || wrongMs <= WRONG_SIGN_SHARE * flowingMs) return null;
-  const deltaTK = medianOf(deltas.subarray(0, count))!;
+  const sample = sampleOf(flowing.subarray(0, count), MOST_SAMPLES);
+  const deltaTK = medianOf(Float64Array.from(sample, (row) => supplyC[row]! - returnC[row]!))!;
   const standingDeltaTK = standingDelta(segment, rows, noFlow);
   const standing =
     standingDeltaTK === null
