@@ -1,12 +1,12 @@
 import { mkdirSync, readFileSync } from "node:fs";
 import path from "node:path";
 import type { Browser, Page } from "playwright-core";
-import type { ImportDetail } from "@shared/contracts/imports";
 import type { Loop, Point, Site } from "@shared/contracts/places";
 import { expectNoSeriousAxe } from "./harness/accessibility";
 import { apiAs, type Api } from "./harness/api";
 import { bootApplication, type Application } from "./harness/application";
 import { launch, openPage, problemsOf, viewports, type OpenOptions } from "./harness/browser";
+import { importMeans } from "./harness/imports";
 import { foundOrganisation, signIn } from "./harness/people";
 import { settle } from "./harness/screenshots";
 
@@ -20,26 +20,10 @@ let place: string;
 
 /** A week of hourly means without Friday from 8 to 12 o'clock, brought in as a person would. */
 async function importWeek(pointId: string): Promise<void> {
-  const { id } = await api.post<ImportDetail>(`/points/${pointId}/imports`);
   const lines = readFileSync(week, "utf8").split(/\r?\n/);
   const kept = lines.filter((line) => !/^2025-06-13T(08|09|10|11)/.test(line));
   expect(lines.length - kept.length).toBe(4);
-  const bytes = Buffer.from(kept.join("\n"));
-  await api.upload(`/imports/${id}/files`, [{ name: "week B.csv", bytes }]);
-  const read = () => api.get<ImportDetail>(`/imports/${id}`);
-  const until = async (states: readonly string[]): Promise<ImportDetail> => {
-    for (;;) {
-      const now = await read();
-      if (states.includes(now.state)) return now;
-      await new Promise((resolve) => setTimeout(resolve, 100));
-    }
-  };
-  const [file] = (await until(["asking", "ready"])).files;
-  const recipe = { ...file?.recipe, seriesKind: "meanFromLabel" };
-  await api.put(`/imports/${id}/files/${file?.id}/recipe`, recipe);
-  await until(["ready"]);
-  await api.post(`/imports/${id}/confirm`);
-  await until(["imported"]);
+  await importMeans(api, pointId, Buffer.from(kept.join("\n")));
 }
 
 beforeAll(async () => {

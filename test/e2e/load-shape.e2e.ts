@@ -1,12 +1,12 @@
 import { mkdirSync, readFileSync } from "node:fs";
 import path from "node:path";
 import type { Browser, Page } from "playwright-core";
-import type { ImportDetail } from "@shared/contracts/imports";
 import type { Loop, Point, Site } from "@shared/contracts/places";
 import { expectNoSeriousAxe } from "./harness/accessibility";
 import { apiAs, type Api } from "./harness/api";
 import { bootApplication, type Application } from "./harness/application";
 import { launch, openPage, problemsOf, viewports, type OpenOptions } from "./harness/browser";
+import { importMeans } from "./harness/imports";
 import { foundOrganisation, signIn } from "./harness/people";
 import { settle } from "./harness/screenshots";
 
@@ -18,27 +18,6 @@ let browser: Browser;
 let api: Api;
 let site: Site;
 let loop: Loop;
-
-/** A week of hourly means, brought in as a person would. */
-async function importWeek(pointId: string): Promise<void> {
-  const { id } = await api.post<ImportDetail>(`/points/${pointId}/imports`);
-  const bytes = readFileSync(path.join(scenario, "week_B.csv"));
-  await api.upload(`/imports/${id}/files`, [{ name: "week B.csv", bytes }]);
-  const read = () => api.get<ImportDetail>(`/imports/${id}`);
-  const until = async (states: readonly string[]): Promise<ImportDetail> => {
-    for (;;) {
-      const now = await read();
-      if (states.includes(now.state)) return now;
-      await new Promise((resolve) => setTimeout(resolve, 100));
-    }
-  };
-  const [file] = (await until(["asking", "ready"])).files;
-  const recipe = { ...file?.recipe, seriesKind: "meanFromLabel" };
-  await api.put(`/imports/${id}/files/${file?.id}/recipe`, recipe);
-  await until(["ready"]);
-  await api.post(`/imports/${id}/confirm`);
-  await until(["imported"]);
-}
 
 beforeAll(async () => {
   application = await bootApplication();
@@ -58,7 +37,7 @@ beforeAll(async () => {
     role: "main",
     meterSide: "return",
   });
-  await importWeek(point.id);
+  await importMeans(api, point.id, readFileSync(path.join(scenario, "week_B.csv")));
 }, 300_000);
 
 afterAll(async () => {
