@@ -13,7 +13,7 @@ import {
   useMeasuredWidth,
   useTheme,
 } from "@features/ui";
-import type { ImportChecks } from "@shared/contracts/imports";
+import type { ImportChecks } from "@shared/contracts/import-checks";
 
 type Day = ImportChecks["daily"][number];
 const HEIGHT = 300;

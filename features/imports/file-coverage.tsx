@@ -9,7 +9,7 @@ import {
   useBreakpoint,
   type QualityStretch,
 } from "@features/ui";
-import type { ImportChecks } from "@shared/contracts/imports";
+import type { ImportChecks } from "@shared/contracts/import-checks";
 
 type FileChecks = ImportChecks["files"][number];
 const GAPS_LISTED = 12;

@@ -1,7 +1,8 @@
 import { View } from "react-native";
 import { useFormat, useWords } from "@features/i18n";
 import { Mark, Segments, Spark, Text, useBreakpoint } from "@features/ui";
-import type { ImportChecks, ImportDetail, RepairStepView } from "@shared/contracts/imports";
+import type { ImportChecks, RepairStepView } from "@shared/contracts/import-checks";
+import type { ImportDetail } from "@shared/contracts/imports";
 import { isUnclear, type ChoiceName, type Finding } from "./findings";
 import type { ImportActions } from "./imports-queries";
 

@@ -1,4 +1,5 @@
-import type { ImportChecks, ImportDetail, RepairStepView } from "@shared/contracts/imports";
+import type { ImportChecks, RepairStepView } from "@shared/contracts/import-checks";
+import type { ImportDetail } from "@shared/contracts/imports";
 
 type Repair = ImportDetail["repair"];
 /** Names of the choices a person has about defects. */

@@ -19,10 +19,9 @@ import {
   removeImportFile,
   reopenImport,
   undoImport,
-  type fileRecipe,
   type ImportDetail,
-  type repairChoices,
 } from "@shared/contracts/imports";
+import type { fileRecipe, repairChoices } from "@shared/contracts/log-recipe";
 import { getEnergy } from "@shared/contracts/energy";
 import { listLoops, listPoints, listSites } from "@shared/contracts/places";
 import type { z } from "zod";

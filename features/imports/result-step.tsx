@@ -12,7 +12,8 @@ import {
   TextLink,
   useBreakpoint,
 } from "@features/ui";
-import type { ImportChecks, ImportDetail } from "@shared/contracts/imports";
+import type { ImportChecks } from "@shared/contracts/import-checks";
+import type { ImportDetail } from "@shared/contracts/imports";
 import type { PlusMinus } from "@shared/contracts/plus-minus";
 import type { Quantity } from "@shared/domain/units/display-units";
 import { useWorkings } from "@features/workings/use-workings";

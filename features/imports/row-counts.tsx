@@ -3,7 +3,7 @@ import Svg from "react-native-svg";
 import { useId } from "react";
 import { useFormat, useWords } from "@features/i18n";
 import { QualityPatterns, QualityRect, Text, useTheme, type Quality } from "@features/ui";
-import type { ImportChecks } from "@shared/contracts/imports";
+import type { ImportChecks } from "@shared/contracts/import-checks";
 
 /** Rows by what became of them; the sum is what the logger's step would have given. */
 export function RowCounts(props: { rows: ImportChecks["rows"]; withoutTemperature: number }) {

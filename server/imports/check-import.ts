@@ -1,4 +1,4 @@
-import type { ImportChecks } from "@shared/contracts/imports";
+import type { ImportChecks } from "@shared/contracts/import-checks";
 import { totalEnergy, waterSeconds } from "@shared/domain/energy/totals";
 import type { RepairStepCode } from "@shared/domain/log-files/repair-step";
 import type { RepairChoices } from "@shared/domain/log-files/recipe";

@@ -1,4 +1,4 @@
-import type { ImportChecks } from "@shared/contracts/imports";
+import type { ImportChecks } from "@shared/contracts/import-checks";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import type { RepairStep } from "@shared/domain/log-files/repair-step";
 import { zoneOffsets } from "@shared/domain/time/zone-offsets";

@@ -1,4 +1,4 @@
-import type { ImportChecks } from "@shared/contracts/imports";
+import type { ImportChecks } from "@shared/contracts/import-checks";
 import { qualityRuns } from "@shared/domain/readings/quality-runs";
 import { RowQuality, type ReadingSegment } from "@shared/domain/readings/reading-columns";
 import type { Interval } from "@shared/domain/time/interval";

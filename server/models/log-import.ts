@@ -7,7 +7,8 @@ import {
   type NonAttribute,
   type Sequelize,
 } from "sequelize";
-import { importState, type ImportChecks, type ImportState } from "@shared/contracts/imports";
+import type { ImportChecks } from "@shared/contracts/import-checks";
+import { importState, type ImportState } from "@shared/contracts/imports";
 import type { RepairChoices } from "@shared/domain/log-files/recipe";
 import { idColumn, instantColumn, optionalInstant, optionalReference, reference } from "./columns";
 import { jsonColumn, optionalJson } from "./json-column";

@@ -1,7 +1,14 @@
 import { z } from "zod";
 import { contract, id, instant, nothing, page, pageQuery } from "./contract";
-import { energyBlock } from "./energy";
-import { ianaZone } from "./places";
+import { importChecks } from "./import-checks";
+import {
+  columnMeaning,
+  columnUnit,
+  dateOrder,
+  fileRecipe,
+  flowUnit,
+  repairChoices,
+} from "./log-recipe";
 
 /*
  * An import takes one or several files of one metering point from bytes to stored readings:
@@ -27,133 +34,7 @@ export const importState = z.enum([
 ]);
 export type ImportState = z.infer<typeof importState>;
 
-// The recipe: the same shape as shared/domain/log-files/recipe.ts ------------------------------
-export const seriesKind = z.enum(["instantaneous", "meanFromLabel", "meanToLabel"]);
-export const dialect = z.object({
-  encoding: z.enum(["utf-8", "utf-16le", "utf-16be", "windows-1252"]),
-  separator: z.enum([",", ";", "\t", "|", " "]),
-  quote: z.enum(['"', "'"]).nullable(),
-  headerLine: z.number().int().min(1).nullable(),
-  unitsLine: z.number().int().min(1).nullable(),
-  firstDataLine: z.number().int().min(1),
-});
-export const columnMeaning = z.enum([
-  "time",
-  "date",
-  "timeOfDay",
-  "flow",
-  "supply",
-  "return",
-  "signal",
-  "power",
-  "volumeCounter",
-  "heatingCounter",
-  "coolingCounter",
-  "skip",
-]);
-export const flowUnit = z.enum(["m3/h", "L/s", "L/min", "US gpm"]);
-export const temperatureUnit = z.enum(["degC", "degF", "K"]);
-export const meterPowerUnit = z.enum(["kW", "MW", "W", "MBH", "ton"]);
-export const countedVolumeUnit = z.enum(["m3", "L", "US gal", "ft3"]);
-export const countedEnergyUnit = z.enum(["kWh", "MWh", "MJ", "GJ", "kBtu", "MMBtu"]);
-export const columnUnit = z.union([
-  flowUnit,
-  temperatureUnit,
-  z.literal("%"),
-  meterPowerUnit,
-  countedVolumeUnit,
-  countedEnergyUnit,
-]);
-export const columnRecipe = z.object({
-  index: z.number().int().min(0),
-  header: z.string(),
-  meaning: columnMeaning,
-  unit: columnUnit.nullable(),
-  decimalMark: z.enum([".", ","]),
-  capacity: z
-    .number()
-    .gt(0)
-    .max(1e15)
-    .nullable()
-    .optional()
-    .describe("where a counter starts from zero again, in the column's unit; 9999.9 means 10000"),
-});
-export const meterRecipe = z.object({
-  positivePower: z
-    .enum(["heating", "cooling", "byTemperature"])
-    .nullable()
-    .describe("what a positive power is; only asked where the loop changes over"),
-  exchangedAt: z.array(instant).max(50).describe("when the meter was exchanged"),
-});
-export const dateOrder = z.enum(["dayMonthYear", "monthDayYear", "yearMonthDay"]);
-export const timeFormat = z.discriminatedUnion("kind", [
-  z.object({ kind: z.literal("calendar"), order: dateOrder.nullable() }),
-  z.object({ kind: z.literal("epochSeconds") }),
-  z.object({ kind: z.literal("epochMilliseconds") }),
-  z.object({ kind: z.literal("spreadsheetDays") }),
-]);
-export const loggerClock = z.discriminatedUnion("kind", [
-  z.object({ kind: z.literal("site") }),
-  z.object({ kind: z.literal("utc") }),
-  z.object({ kind: z.literal("fixedOffset"), offsetMinutes: z.number().int().min(-840).max(840) }),
-  z.object({ kind: z.literal("zone"), zone: ianaZone }),
-]);
-export const fileRecipe = z.object({
-  dialect,
-  columns: z.array(columnRecipe).max(200),
-  time: z.object({ format: timeFormat, clock: loggerClock.nullable() }),
-  seriesKind,
-  kindChosen: z
-    .boolean()
-    .optional()
-    .describe("true: moments, though the header says the rows are means"),
-  meter: meterRecipe.optional().describe("of a permanent meter's file"),
-});
-export const repairChoices = z.object({
-  identicalRepeats: z.enum(["dropRepeats", "leaveOutAll"]),
-  conflictingRepeats: z.enum(["keepFirst", "keepLast", "leaveOutAll"]).nullable(),
-  outOfOrder: z.enum(["sort", "leaveOut"]),
-  sentinels: z.enum(["noReading", "asWritten"]),
-  missingHour: z.enum(["leaveOut", "readAsBeforeChange"]),
-  weakSignal: z.enum(["exclude", "keep"]).nullable(),
-  weakSignalBelowPercent: z.number().min(0).max(100),
-  overlap: z.enum(["keepEarlier", "useThis"]).nullable(),
-});
-
 // What recognition and the checks found -------------------------------------------------------
-const rowExample = z.object({
-  line: z.number().int(),
-  column: z.string().nullable(),
-  cell: z.string().nullable(),
-  instantMs: z.number().nullable(),
-});
-export const repairStep = z.object({
-  code: z.enum([
-    "unreadableCells",
-    "shortRows",
-    "unreadableTimes",
-    "sentinels",
-    "identicalRepeats",
-    "conflictingRepeats",
-    "outOfOrder",
-    "repeatedHour",
-    "missingHour",
-    "weakSignal",
-    "overlapEqual",
-    "overlapDifferent",
-    "unitConversion",
-    "counterRollover",
-    "counterReset",
-    "counterJump",
-    "counterExchange",
-    "footer",
-  ]),
-  count: z.number().int(),
-  examples: z.array(rowExample),
-  countByKind: z.record(z.string(), z.number()),
-});
-export type RepairStepView = z.infer<typeof repairStep>;
-
 const proof = z.object({
   about: z.enum([
     "encoding",
@@ -250,104 +131,6 @@ export const importFile = z.object({
   questions: z.array(question).describe("what is still to be answered for this file"),
 });
 export type ImportFile = z.infer<typeof importFile>;
-
-/** What the checking job found over all files, with the choices so far. */
-export const importChecks = z.object({
-  /** Choices that must be made because the defect occurs: names of repairChoices that are null. */
-  undecided: z.array(z.enum(["conflictingRepeats", "weakSignal", "overlap"])),
-  files: z.array(
-    z.object({
-      fileId: id,
-      steps: z.array(repairStep),
-      rowsRead: z.number().int(),
-      rowsKept: z.number().int(),
-      firstInstant: instant.nullable(),
-      lastInstant: instant.nullable(),
-      nominalStepS: z.number().nullable(),
-      expectedRows: z.number().int().nullable(),
-      gaps: z.array(
-        z.object({
-          from: instant,
-          to: instant,
-          missingRows: z.number().int(),
-          flowBeforeM3PerHour: z.number().nullable(),
-          flowAfterM3PerHour: z.number().nullable(),
-        }),
-      ),
-      gapCount: z.number().int(),
-      /** How the first row moved from the logger's clock to UTC. */
-      firstRow: z.object({ line: z.number(), cell: z.string(), instant }).nullable(),
-      clockChangeInside: z.boolean(),
-    }),
-  ),
-  rows: z.object({
-    measured: z.number().int(),
-    excluded: z.number().int(),
-    noReading: z.number().int(),
-    missing: z.number().int(),
-    expected: z.number().int(),
-  }),
-  /** Rows whose flow instant found no temperature within two steps. */
-  rowsWithoutTemperature: z.number().int(),
-  /** Measured rows at temperatures at which the fluid is not liquid: stored, but without energy. */
-  rowsOutsideFluid: z.number().int().optional(),
-  liquidC: z
-    .object({ lowest: z.number(), highest: z.number() })
-    .nullable()
-    .optional()
-    .describe("the loop's fluid is liquid and known between these, °C"),
-  outsideFluidExamples: z
-    .array(
-      z.object({
-        instant,
-        channel: z.enum(["supply", "return"]),
-        valueC: z.number().nullable(),
-        reason: z.string(),
-      }),
-    )
-    .optional(),
-  energy: z
-    .object({
-      heatingKwh: z.number(),
-      coolingKwh: z.number(),
-      suppressedKwh: z.number(),
-      volumeM3: z
-        .number()
-        .nullable()
-        .describe("null where a permanent meter gives the energy and no water was measured"),
-      coveredS: z.number(),
-    })
-    .nullable()
-    .describe("null where the loop's energy cannot be worked out, see energyBlockedBy"),
-  energyBlockedBy: energyBlock.nullable(),
-  /** Rows of a meter's power of the other sign than the loop's service: they give no energy. */
-  rowsAgainstRegister: z.number().int().optional(),
-  /** A small picture of the whole file: 240 columns of flow and ΔT, null in holes. */
-  picture: z
-    .object({
-      from: instant,
-      to: instant,
-      flowM3PerHour: z.array(z.number().nullable()),
-      supplyC: z.array(z.number().nullable()),
-      returnC: z.array(z.number().nullable()),
-      quality: z.array(
-        z.object({ from: instant, to: instant, kind: z.enum(["measured", "excluded", "missing"]) }),
-      ),
-    })
-    .nullable(),
-  /** Names of the checks that found nothing. */
-  clean: z.array(z.string()),
-  daily: z.array(
-    z.object({
-      date: z.iso.date(),
-      heatingKwh: z.number().nullable(),
-      coolingKwh: z.number().nullable(),
-      coveredS: z.number(),
-      lengthS: z.number(),
-    }),
-  ),
-});
-export type ImportChecks = z.infer<typeof importChecks>;
 
 export const importProgress = z.object({
   stage: z.enum(["waiting", "recognising", "reading", "checking", "storing", "energy", "done"]),
