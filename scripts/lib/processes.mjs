@@ -34,8 +34,42 @@ export function findProcesses(test) {
     .filter((pid) => pid !== process.pid && startTicks(pid) !== null && test(commandLine(pid)));
 }
 
-/** Asks a process to end and waits; kills it when it has not ended after `patienceMs`. */
+/** Ids and start ticks of all that a process started, directly or not, its children first. */
+function descendantsOf(pid) {
+  const childrenOf = new Map();
+  for (const other of findProcesses(() => true)) {
+    const parent = parentOf(other);
+    if (parent !== null) childrenOf.set(parent, [...(childrenOf.get(parent) ?? []), other]);
+  }
+  const found = [];
+  for (let level = [pid]; level.length > 0;) {
+    level = level.flatMap((id) => childrenOf.get(id) ?? []);
+    found.push(...level.map((id) => ({ pid: id, ticks: startTicks(id) })));
+  }
+  return found;
+}
+
+function parentOf(pid) {
+  try {
+    const stat = readFileSync(`/proc/${pid}/stat`, "utf8");
+    return Number(stat.slice(stat.lastIndexOf(")") + 2).split(" ")[1]);
+  } catch {
+    return null; // it ended since it was listed
+  }
+}
+
+/**
+ * Asks a process to end and waits; kills it when it has not ended after `patienceMs`. What it
+ * started and left behind is then stopped the same way: a test runner's workers outlive it.
+ */
 export async function stopProcess(pid, { ticks = startTicks(pid), patienceMs = 20_000 } = {}) {
+  if (ticks === null || startTicks(pid) !== ticks) return;
+  const started = descendantsOf(pid);
+  await stopOne(pid, ticks, patienceMs);
+  for (const child of started) await stopOne(child.pid, child.ticks, patienceMs);
+}
+
+async function stopOne(pid, ticks, patienceMs) {
   const isSame = () => ticks !== null && startTicks(pid) === ticks;
   const send = (signal) => {
     try {
