@@ -8,6 +8,8 @@ import { Building } from "./building";
 import { Certificate } from "./certificate";
 import { Correction } from "./correction";
 import { EnergyFill } from "./energy-fill";
+import { ImportBatch } from "./import-batch";
+import { ImportBatchFile } from "./import-batch-file";
 import { Installation } from "./installation";
 import { Instrument } from "./instrument";
 import { Invitation } from "./invitation";
@@ -22,6 +24,7 @@ import { MeteringPoint } from "./metering-point";
 import { Organisation } from "./organisation";
 import { OutboxMail } from "./outbox-mail";
 import { PasswordReset } from "./password-reset";
+import { Recipe } from "./recipe";
 import { Session } from "./session";
 import { SignInFailure } from "./sign-in-failure";
 import { Site } from "./site";
@@ -56,6 +59,9 @@ const models: readonly ModelDefinition[] = [
   Installation,
   LogImport,
   LogFile,
+  Recipe,
+  ImportBatch,
+  ImportBatchFile,
   Correction,
   EnergyFill,
   MeterComparison,

@@ -6,6 +6,7 @@ import {
   type InferCreationAttributes,
   type Sequelize,
 } from "sequelize";
+import type { AppliedRecipe } from "@shared/contracts/recipes";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import type { Question, Recognition, Unreadable } from "@shared/domain/log-files/recognition";
 import type { SeriesKind } from "@shared/domain/readings/reading-columns";
@@ -32,6 +33,8 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
   declare unreadable: CreationOptional<Unreadable | null>;
   declare recipe: CreationOptional<FileRecipe | null>;
   declare questions: CreationOptional<readonly Question[] | null>;
+  /** The saved recipe it is read by, with what was different; null where none was applied. */
+  declare appliedRecipe: CreationOptional<AppliedRecipe | null>;
   /** Set while its readings are stored: where files hold the same instant the greater one wins. */
   declare precedence: CreationOptional<number | null>;
   declare seriesKind: CreationOptional<SeriesKind | null>;
@@ -59,6 +62,7 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
         unreadable: optionalJson("unreadable"),
         recipe: optionalJson("recipe"),
         questions: optionalJson("questions"),
+        appliedRecipe: optionalJson("appliedRecipe"),
         precedence: { type: DataTypes.INTEGER, allowNull: true },
         seriesKind: {
           type: DataTypes.ENUM("instantaneous", "meanFromLabel", "meanToLabel"),

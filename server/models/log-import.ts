@@ -44,6 +44,10 @@ export class LogImport extends Model<
   declare createdByName: string;
   declare createdAt: Date;
   declare importedAt: CreationOptional<Date | null>;
+  /** The batch it came in with; its files are read by the batch's recipe. */
+  declare batchId: CreationOptional<string | null>;
+  /** Its readings are being taken out so that its choices can change. */
+  declare reopenWhenUndone: CreationOptional<boolean>;
   declare files?: NonAttribute<LogFile[]>;
   declare point?: NonAttribute<MeteringPoint>;
 
@@ -65,6 +69,8 @@ export class LogImport extends Model<
         createdByName: { type: DataTypes.STRING(120), allowNull: false },
         createdAt: instantColumn,
         importedAt: optionalInstant,
+        batchId: optionalReference,
+        reopenWhenUndone: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: false },
       },
       { sequelize, tableName: "log_import", timestamps: false },
     );

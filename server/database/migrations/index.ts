@@ -9,6 +9,7 @@ import { evidence } from "./007-evidence";
 import { corrections } from "./008-corrections";
 import { energyBlocks } from "./008-energy-blocks";
 import { meterComparisons } from "./009-meter-comparisons";
+import { recipes } from "./013-recipes";
 
 /**
  * One step of the schema. To add one: write `NNN-subject.ts` beside this file, export a Migration
@@ -32,4 +33,5 @@ export const migrations: readonly Migration[] = [
   energyBlocks,
   corrections,
   meterComparisons,
+  recipes,
 ];
