@@ -13,6 +13,7 @@ export const changeKinds = [
   "clock",
   "unit",
   "fluid",
+  "split",
 ] as const satisfies readonly ChangeKind[];
 
 type Exclusion = Extract<CorrectionChange, { kind: "exclude" }>;
@@ -182,6 +183,8 @@ export function changeOf(
         };
       case "fluid":
         return { kind, ...span(), fluid: fluidOf(draft, needed) };
+      case "split":
+        return { kind, at: needed("from", instantOf(draft.from, zone)) };
     }
   };
   const change = draft.kind === null ? null : build(draft.kind);

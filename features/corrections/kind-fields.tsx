@@ -40,6 +40,8 @@ export function KindFields(props: KindProps) {
       return <UnitFields {...props} />;
     case "fluid":
       return <FluidFields {...props} />;
+    case "split":
+      return <SplitFields {...props} />;
     case null:
       return null;
   }
@@ -229,6 +231,19 @@ function ClockFields(props: KindProps) {
         onChange={(from) => onChange({ from })}
       />
     </>
+  );
+}
+
+function SplitFields({ draft, onChange, errorOf }: KindProps) {
+  const t = useWords("corrections");
+  return (
+    <WallTimeFields
+      day={t("field.splitDay")}
+      time={t("field.splitTime")}
+      value={draft.from}
+      error={errorOf("from")}
+      onChange={(from) => onChange({ from })}
+    />
   );
 }
 

@@ -15,6 +15,7 @@ export function useChangeWords(format: Format) {
   const says = (change: CorrectionChange): string => {
     switch (change.kind) {
       case "exclude": {
+        if (change.parts) return t("says.excludeParts", { count: change.parts.length });
         if (change.rule === null) return t("says.excludeAll");
         const { channel, is, value } = change.rule;
         const quantity = quantityOf[channel];
@@ -47,9 +48,12 @@ export function useChangeWords(format: Format) {
         return t("says.unit", { channel: t(`channel.${change.channel}`), unit: change.unit });
       case "fluid":
         return t("says.fluid", { fluid: fluid(change.fluid) });
+      case "split":
+        return t("says.split");
     }
   };
   const when = (change: CorrectionChange): string => {
+    if (change.kind === "split") return t("when.at", { at: at(change.at) });
     if (!("from" in change)) return t("when.file");
     return change.to === null
       ? t("when.since", { from: at(change.from) })

@@ -8,7 +8,7 @@ import { enqueueJob, enqueueRecalculation } from "@server/jobs/job-queue";
 import { Correction } from "@server/models/correction";
 import { MeteringPoint } from "@server/models/metering-point";
 import { touchedPoints } from "@server/queries/corrections/touched-points";
-import { spanOf } from "@server/readings/point-corrections";
+import { spanOfChange } from "@server/readings/point-corrections";
 import type { Acting } from "./acting";
 import { requireSound } from "./correction-rules";
 import { recordAudit } from "./record-audit";
@@ -153,8 +153,8 @@ async function requireFree(
 
 function meets(a: CorrectionChange, b: CorrectionChange): boolean {
   if (a.kind === "unit" && b.kind === "unit") return a.channel === b.channel;
-  if ("from" in a && "from" in b) return spansOverlap(spanOf(a), spanOf(b));
-  return true;
+  const [one, other] = [spanOfChange(a), spanOfChange(b)];
+  return one === null || other === null || spansOverlap(one, other);
 }
 
 function notApplicable({ state }: Correction): Conflict {

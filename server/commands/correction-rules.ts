@@ -48,6 +48,7 @@ export async function requireSound(
     case "exclude":
     case "swapSides":
     case "flipFlow":
+    case "split":
   }
 }
 

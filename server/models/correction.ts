@@ -33,6 +33,8 @@ export class Correction extends Model<
   declare pointId: CreationOptional<string | null>;
   declare probeId: CreationOptional<string | null>;
   declare logFileId: CreationOptional<string | null>;
+  /** The import whose checks it was chosen in; null for one that somebody proposed. */
+  declare importId: CreationOptional<string | null>;
   declare kind: CorrectionChange["kind"];
   /** Read it through `change`, which checks it. */
   declare document: CorrectionChange;
@@ -58,6 +60,7 @@ export class Correction extends Model<
         pointId: optionalReference,
         probeId: optionalReference,
         logFileId: optionalReference,
+        importId: optionalReference,
         kind: {
           type: DataTypes.ENUM(...correctionChange.options.map(({ shape }) => shape.kind.value)),
           allowNull: false,

@@ -43,6 +43,10 @@ export class LogImport extends Model<
   /** Kept as text: the import outlives the account. */
   declare createdByName: string;
   declare createdAt: Date;
+  /** Whose the corrections are that were chosen in its checks. */
+  declare confirmedByAccountId: CreationOptional<string | null>;
+  declare confirmedByName: CreationOptional<string | null>;
+  declare undoneByName: CreationOptional<string | null>;
   declare importedAt: CreationOptional<Date | null>;
   /** The batch it came in with; its files are read by the batch's recipe. */
   declare batchId: CreationOptional<string | null>;
@@ -68,6 +72,9 @@ export class LogImport extends Model<
         createdByAccountId: optionalReference,
         createdByName: { type: DataTypes.STRING(120), allowNull: false },
         createdAt: instantColumn,
+        confirmedByAccountId: optionalReference,
+        confirmedByName: { type: DataTypes.STRING(120), allowNull: true },
+        undoneByName: { type: DataTypes.STRING(120), allowNull: true },
         importedAt: optionalInstant,
         batchId: optionalReference,
         reopenWhenUndone: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: false },

@@ -21,6 +21,7 @@ export function presentCorrection(
   return {
     id: row.id,
     pointId: row.pointId,
+    importId: row.importId,
     points: [...points],
     change: row.change satisfies z.output<typeof correctionChange>,
     reason: row.reason,

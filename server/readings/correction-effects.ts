@@ -11,7 +11,7 @@ import { enqueueJob } from "@server/jobs/job-queue";
 import { calculateEnergy } from "./calculate-energy";
 import { loadEnergySettings, powerOptionsOf, type EnergySettings } from "./energy-settings";
 import { indexFrom, loadSegments, reachOfPoint, sliceColumns } from "./load-segments";
-import { loadPointCorrections, spanOf, type PointCorrections } from "./point-corrections";
+import { loadPointCorrections, spanOfChange, type PointCorrections } from "./point-corrections";
 import { fileSpans } from "./reading-span";
 import { ChannelBit } from "./stored-rows";
 
@@ -71,8 +71,9 @@ function rangeOf(found: readonly PointEffect[], change: CorrectionChange): Inter
       startMs: Math.min(...found.map(({ range }) => range.startMs)),
       endMs: Math.max(...found.map(({ range }) => range.endMs)),
     };
-  if (!("from" in change)) return { startMs: 0, endMs: 0 };
-  const { startMs, endMs } = spanOf(change);
+  const span = spanOfChange(change);
+  if (span === null) return { startMs: 0, endMs: 0 };
+  const { startMs, endMs } = span;
   return { startMs, endMs: Number.isFinite(endMs) ? endMs : startMs };
 }
 
@@ -103,7 +104,8 @@ async function effectOnPoint(
     const becomes = await loadSegments(database, pointId, fromMs, toMs, undefined, withIt);
     add(before, was, settings, stretch);
     add(after, becomes, settings, stretch);
-    if (!isOfFile(change))
+    // A split changes no row, and the lists before and after it do not match.
+    if (!isOfFile(change) && change.kind !== "split")
       rowsChanged += changedRows(
         inside(was, fromMs, toMs),
         inside(becomes, fromMs, toMs),
@@ -157,7 +159,8 @@ async function affectedRange(
     startMs: Math.min(...spans.map(({ firstMs }) => firstMs)),
     endMs: Math.max(...spans.map(({ lastMs }) => lastMs)) + 1,
   };
-  return "from" in change ? sharedSpan(held, spanOf(change)) : held;
+  const span = spanOfChange(change);
+  return span === null ? held : sharedSpan(held, span);
 }
 
 /** Rows of the file a clock or unit is put right for; 0 for what corrects a stretch. */

@@ -90,6 +90,14 @@ export function spanOf(change: {
   };
 }
 
+/** When a change speaks; null for that of a file. */
+export function spanOfChange(change: CorrectionChange): CorrectionSpan | null {
+  if ("from" in change) return spanOf(change);
+  if (change.kind !== "split") return null;
+  const atMs = Date.parse(change.at);
+  return { startMs: atMs, endMs: atMs + 1 };
+}
+
 export function clockErrorOf(change: Extract<CorrectionChange, { kind: "clock" }>): ClockError {
   return {
     offsetMs: change.offsetS * 1000,
@@ -114,7 +122,8 @@ function fileCorrections(changes: readonly CorrectionChange[]): Map<string, File
   return files;
 }
 
-function segmentCorrections(
+/** A change as it is put on resolved segments; none of a file's clock or unit, which come before. */
+export function segmentCorrections(
   change: CorrectionChange,
   places: readonly ProbePlace[],
   gaugeMPa: number | null,
@@ -124,7 +133,13 @@ function segmentCorrections(
     case "unit":
       return [];
     case "exclude":
-      return [{ kind: change.kind, span: spanOf(change), rule: change.rule }];
+      return (change.parts ?? [change]).map((part) => ({
+        kind: change.kind,
+        span: spanOf(part),
+        rule: change.rule,
+      }));
+    case "split":
+      return [{ kind: change.kind, atMs: Date.parse(change.at) }];
     case "swapSides":
       return [{ kind: change.kind, span: spanOf(change), swapped: change.swapped }];
     case "flipFlow":

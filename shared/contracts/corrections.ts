@@ -24,6 +24,12 @@ export const correctionChange = z.discriminatedUnion("kind", [
           .describe("m³/h, °C, kW, K or %; ΔT and power by size, power a meter's own"),
       })
       .nullable(),
+    parts: z
+      .array(z.object({ from: instant, to: instant }))
+      .min(1)
+      .max(5000)
+      .optional()
+      .describe("only these stretches of the span, ascending; the whole span where left out"),
   }),
   z.object({
     kind: z.literal("clock"),
@@ -67,6 +73,12 @@ export const correctionChange = z.discriminatedUnion("kind", [
     unit: z.string().max(20).describe("the unit the numbers are really in"),
   }),
   z.object({ kind: z.literal("fluid"), ...span, fluid }),
+  z.object({
+    kind: z.literal("split"),
+    at: instant.describe(
+      "the first instant of the later part; nothing is joined or averaged across",
+    ),
+  }),
 ]);
 export type CorrectionChange = z.infer<typeof correctionChange>;
 
@@ -83,6 +95,9 @@ export type CorrectionEffect = z.infer<typeof correctionEffect>;
 export const correction = z.object({
   id,
   pointId: id.nullable().describe("null for a probe's offset, which may touch several points"),
+  importId: id
+    .nullable()
+    .describe("the import whose checks it was chosen in; undoing that import withdraws it"),
   points: z.array(z.object({ id, code: z.string(), loopTag: z.string() })),
   change: correctionChange,
   reason: z.string(),

@@ -9,6 +9,7 @@ import { evidence } from "./007-evidence";
 import { corrections } from "./008-corrections";
 import { energyBlocks } from "./008-energy-blocks";
 import { meterComparisons } from "./009-meter-comparisons";
+import { importFindings } from "./012-import-findings";
 import { recipes } from "./013-recipes";
 
 /**
@@ -33,5 +34,6 @@ export const migrations: readonly Migration[] = [
   energyBlocks,
   corrections,
   meterComparisons,
+  importFindings,
   recipes,
 ];

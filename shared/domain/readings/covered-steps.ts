@@ -7,7 +7,7 @@ import { RowQuality, type ReadingColumns, type ReadingSegment } from "./reading-
  * label to the next (`meanFromLabel`) or from the label before to its own (`meanToLabel`); where
  * that is over `gapFactor` nominal steps, and at the file's ends, for one nominal step. A step of
  * instantaneous rows over `gapFactor` nominal steps is a hole. Rows that are not usable speak for
- * nothing, and nothing speaks across them. Stretches never overlap; between two instantaneous
+ * nothing, and nothing speaks across them, nor between two segments of which the later starts anew. Stretches never overlap; between two instantaneous
  * segments the coarser nominal step decides what a gap is.
  */
 
@@ -68,7 +68,7 @@ export function forEachCoveredStep(
       following === undefined ? Infinity : segments[following]!.columns.instantMs[0]!;
     if (!(instantMs[count - 1]! < nextStart)) throw notAscending(nextStart);
 
-    if (lastSegment >= 0 && kind === "instantaneous") {
+    if (lastSegment >= 0 && kind === "instantaneous" && !segments[s]!.startsAnew) {
       const before = segments[lastSegment]!;
       const lastRow = before.columns.instantMs.length - 1;
       const step = instantMs[0]! - before.columns.instantMs[lastRow]!;

@@ -86,4 +86,6 @@ export interface ReadingSegment {
   readonly columns: ReadingColumns;
   /** Stretches in which another fluid than the loop's filled it; left out where there are none. */
   readonly fluids?: readonly FluidSpan[];
+  /** Somebody parted it from the segment before: nothing is joined or averaged across. */
+  readonly startsAnew?: boolean;
 }

@@ -5,6 +5,7 @@ import { flipFlow } from "./flip-flow";
 import { withFluid, type FluidSpan } from "./fluid-span";
 import { otherSide, probeOffset, type Side } from "./probe-offset";
 import { scaleFlow } from "./scale-by-bore";
+import { splitSegments } from "./split-segments";
 import { swapSides, type SwappedThing } from "./swap-sides";
 
 /** A correction of a stretch of a point's readings. */
@@ -24,7 +25,8 @@ export type SegmentCorrection =
       readonly span: CorrectionSpan;
       readonly rule: ExclusionRule | null;
     }
-  | { readonly kind: "fluid"; readonly span: FluidSpan };
+  | { readonly kind: "fluid"; readonly span: FluidSpan }
+  | { readonly kind: "split"; readonly atMs: number };
 
 /**
  * Readings with a point's corrections on them. Stored readings never change: this is put on whenever
@@ -33,7 +35,7 @@ export type SegmentCorrection =
  * The order is fixed by kind, whenever each was applied, so that the same corrections always give the
  * same figures: a file's units, then its clock (both before files are merged), then here sides, probe
  * offsets, flow's direction, flow's size, exclusions (whose rules therefore see corrected values), and
- * the fluid. A probe's offset goes with its readings: where probes turn out to have sat on the other
+ * the fluid, and last where segments are parted. A probe's offset goes with its readings: where probes turn out to have sat on the other
  * pipes than recorded, it lands on the other side too. Rows are never lost, added or moved.
  */
 export function correctSegments(
@@ -76,7 +78,11 @@ export function correctSegments(
           withFluid(segment, span),
     ),
   ];
-  return segments.map((segment) => steps.reduce((changed, step) => step(changed), segment));
+  const changed = segments.map((segment) => steps.reduce((done, step) => step(done), segment));
+  return of(corrections, "split").reduce<readonly ReadingSegment[]>(
+    (parts, { atMs }) => splitSegments(parts, atMs),
+    changed,
+  );
 }
 
 type Of<Kind extends SegmentCorrection["kind"]> = Extract<SegmentCorrection, { kind: Kind }>;
