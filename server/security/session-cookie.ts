@@ -1,3 +1,4 @@
+import { createSecretKey, type KeyObject } from "node:crypto";
 import type { CookieOptions, Response } from "express";
 import jwt from "jsonwebtoken";
 import { z } from "zod";
@@ -6,6 +7,14 @@ import type { Config } from "@server/config";
 export const cookieName = "loopwright_session";
 
 const claims = z.object({ sid: z.string().regex(/^[0-9a-f]{32}$/) });
+
+let opened: { readonly secret: string; readonly key: KeyObject } | undefined;
+
+/** Given as text, the secret is first tried as a public key, for every cookie that is read. */
+function keyOf({ sessionSecret: secret }: Config): KeyObject {
+  if (opened?.secret !== secret) opened = { secret, key: createSecretKey(Buffer.from(secret)) };
+  return opened.key;
+}
 
 function options(config: Config): CookieOptions {
   return {
@@ -34,7 +43,7 @@ export function giveSessionCookie(
 export function signSession(config: Config, session: { id: string; expiresAt: Date }): string {
   return jwt.sign(
     { sid: session.id, exp: Math.floor(session.expiresAt.getTime() / 1000) },
-    config.sessionSecret,
+    keyOf(config),
     { algorithm: "HS256" },
   );
 }
@@ -46,7 +55,7 @@ export function takeSessionCookie(response: Response, config: Config): void {
 /** The session's id in a cookie of ours; null when it is forged, damaged or out of date. */
 export function readSessionCookie(cookie: string, config: Config, now: number): string | null {
   try {
-    const payload = jwt.verify(cookie, config.sessionSecret, {
+    const payload = jwt.verify(cookie, keyOf(config), {
       algorithms: ["HS256"],
       clockTimestamp: Math.floor(now / 1000),
     });
