@@ -3,6 +3,9 @@ import type { FluidProblem } from "../fluids/fluid-problem";
 import { temperatureProblem } from "../fluids/temperature-problem";
 import { RowQuality, type ReadingColumns } from "../readings/reading-columns";
 
+// Taken out of its module once: it is compared with in every row.
+const MEASURED = RowQuality.measured;
+
 /** A measured row at which the loop's fluid is not liquid, or not known: it carries no energy. */
 export interface OutsideFluid {
   readonly instantMs: number;
@@ -23,11 +26,16 @@ export function rowsOutsideFluid(
   const examples: OutsideFluid[] = [];
   let count = 0;
   if (!supplyC || !returnC) return { count, examples };
+  const { lowestC, highestC } = fluid;
   for (let i = 0; i < quality.length; i++) {
-    if (quality[i] !== RowQuality.measured) continue;
+    if (quality[i] !== MEASURED) continue;
+    const supply = supplyC[i]!;
+    const back = returnC[i]!;
+    // Nearly every row leaves here.
+    if (supply >= lowestC && supply <= highestC && back >= lowestC && back <= highestC) continue;
     for (const channel of ["supply", "return"] as const) {
-      const temperatureC = (channel === "supply" ? supplyC : returnC)[i]!;
-      const liquid = temperatureC >= fluid.lowestC && temperatureC <= fluid.highestC;
+      const temperatureC = channel === "supply" ? supply : back;
+      const liquid = temperatureC >= lowestC && temperatureC <= highestC;
       if (liquid || Number.isNaN(temperatureC)) continue;
       const problem = temperatureProblem(fluid, temperatureC);
       if (!problem) continue;

@@ -208,6 +208,9 @@ function gather(sources: readonly Prepared[], runs: readonly Run[]): ReadingColu
   };
 }
 
+// Taken out of its module once: it is compared with in every row.
+const MEASURED = RowQuality.measured;
+
 /** Rows that lack a channel energy needs are "no reading", whoever left it out. */
 function marked(columns: ReadingColumns): ReadingColumns {
   const { flowM3PerHour, supplyC, returnC, powerKw, quality } = columns;
@@ -215,7 +218,7 @@ function marked(columns: ReadingColumns): ReadingColumns {
   if (!flowM3PerHour || !supplyC || !returnC) return columns;
   let copy: Uint8Array | null = null;
   for (let i = 0; i < quality.length; i++) {
-    if (quality[i] !== RowQuality.measured) continue;
+    if (quality[i] !== MEASURED) continue;
     // The sum is NaN exactly when one of them is.
     const sum = flowM3PerHour[i]! + supplyC[i]! + returnC[i]!;
     if (sum === sum) continue;
@@ -229,7 +232,7 @@ function markedByMeter(columns: ReadingColumns, powerKw: Float64Array): ReadingC
   const { flowM3PerHour, supplyC, returnC } = columns;
   const known = (channel: Float64Array | null, row: number) => !Number.isNaN(channel?.[row] ?? NaN);
   const quality = columns.quality.map((code, row) =>
-    code === RowQuality.measured &&
+    code === MEASURED &&
     !known(powerKw, row) &&
     !(known(flowM3PerHour, row) && known(supplyC, row) && known(returnC, row))
       ? RowQuality.noReading
