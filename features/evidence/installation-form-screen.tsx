@@ -31,7 +31,7 @@ import {
   readWalls,
   type InstallationBody,
 } from "./installation-values";
-import { MeterSection, SoundSection, ZeroSection } from "./meter-sections";
+import { MeterSection, PlateSection, SoundSection, ZeroSection } from "./meter-sections";
 import { PipeSection, PositionSection } from "./pipe-sections";
 import { ProbesSection } from "./probes-section";
 import {
@@ -95,6 +95,11 @@ const serverFields = [
   "fluidTestedOn",
   "shownFlowLPerS",
   "enteredBoreMm",
+  "meterPlate/permanentFlowM3PerHour",
+  "meterPlate/minimumDeltaTK",
+  "meterPlate/certificate/number",
+  "meterPlate/certificate/expandedPercent",
+  "meterPlate/certificate/k",
   "pipe/circumferenceMm",
   "pipe/outsideDiameterMm",
   "pipe/wallReadingsMm",
@@ -225,6 +230,7 @@ function InstallationEditor(props: {
             />
             <PositionSection {...section} />
             <MeterSection {...section} />
+            <PlateSection {...section} />
             <ZeroSection {...section} />
             <SoundSection {...section} />
             <ProbesSection {...section} />

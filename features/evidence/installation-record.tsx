@@ -14,6 +14,7 @@ export function InstallationRecord(props: { installation: Installation; format: 
     [t("pipe.title"), usePipeRows(props)],
     [t("position.title"), usePositionRows(props)],
     [t("meter.title"), useMeterRows(props)],
+    [t("plate.title"), usePlateRows(props)],
     [t("probes.title"), useProbeRows(props)],
     [t("logger.title"), useLoggerRows(props)],
   ];
@@ -116,6 +117,32 @@ function useMeterRows({ installation, format }: RowProps): Rows {
       t("sound.fluidC"),
       soundSpeed ? format.withUnit(soundSpeed.fluidC, "temperature", 1) : null,
     ),
+  ];
+}
+
+function usePlateRows({ installation, format }: RowProps): Rows {
+  const t = useWords("installation");
+  const { meterPlate, plateTerm } = installation;
+  if (meterPlate === null) return [];
+  const { accuracyClass, permanentFlowM3PerHour, minimumDeltaTK, certificate } = meterPlate;
+  const places = (value: number) => (Number.isInteger(value) ? 0 : 1);
+  return [
+    read(t("plate.class"), `${accuracyClass}`),
+    read(
+      t("plate.flow"),
+      permanentFlowM3PerHour === null
+        ? null
+        : `${format.number(permanentFlowM3PerHour, places(permanentFlowM3PerHour))} m³/h`,
+    ),
+    read(
+      t("plate.deltaT"),
+      minimumDeltaTK === null ? null : `${format.number(minimumDeltaTK, places(minimumDeltaTK))} K`,
+    ),
+    read(t("plate.certificate"), certificate?.number ?? null),
+    plateTerm && {
+      label: t("plate.result"),
+      value: `± ${format.number(plateTerm.expandedPercent, 2)} %`,
+    },
   ];
 }
 

@@ -18,6 +18,7 @@ type ZeroAction = NonNullable<InstallationFields["zero"]>["action"];
 export type Mounting = NonNullable<InstallationFields["probes"]>["supply"]["mounting"];
 
 export const NONE = "none";
+export type MeterClassChoice = typeof NONE | "1" | "2" | "3";
 /** No check chosen: the newest of the pair by the start speaks. */
 export const NEWEST = "newest";
 
@@ -59,6 +60,12 @@ export interface InstallationValues {
   readonly flowStepLPerS: number | null;
   readonly shownFlowLPerS: number | null;
   readonly remountPercent: number | null;
+  readonly meterClass: MeterClassChoice;
+  readonly permanentFlowM3PerHour: number | null;
+  readonly minimumDeltaTK: number | null;
+  readonly meterCertificate: string;
+  readonly meterCertificatePercent: number | null;
+  readonly meterCertificateK: number | null;
   readonly flowStopped: "yes" | "no" | null;
   readonly zeroReadingMPerS: number | null;
   readonly zeroRemainingMPerS: number | null;
@@ -98,7 +105,7 @@ function localTime(instant: string, zone: string): string {
 export function installationValues(from: Installation | null, zone: string): InstallationValues {
   const day = (instant: string | null | undefined) =>
     instant ? localDateOf(Date.parse(instant), zone) : null;
-  const { pipe, straightRun, zero, noise } = from ?? {};
+  const { pipe, straightRun, zero, noise, meterPlate } = from ?? {};
   return {
     startDate: day(from?.startsAt),
     startTime: from ? localTime(from.startsAt, zone) : "",
@@ -119,6 +126,12 @@ export function installationValues(from: Installation | null, zone: string): Ins
     flowStepLPerS: from?.flowStepLPerS ?? null,
     shownFlowLPerS: from?.shownFlowLPerS ?? null,
     remountPercent: from?.remountPercent ?? null,
+    meterClass: meterPlate ? `${meterPlate.accuracyClass}` : NONE,
+    permanentFlowM3PerHour: meterPlate?.permanentFlowM3PerHour ?? null,
+    minimumDeltaTK: meterPlate?.minimumDeltaTK ?? null,
+    meterCertificate: meterPlate?.certificate?.number ?? "",
+    meterCertificatePercent: meterPlate?.certificate?.expandedPercent ?? null,
+    meterCertificateK: meterPlate?.certificate?.k ?? null,
     flowStopped: zero ? (zero.flowStopped ? "yes" : "no") : null,
     zeroReadingMPerS: zero?.readingMPerS ?? null,
     zeroRemainingMPerS: zero?.remainingMPerS ?? null,
@@ -198,6 +211,7 @@ export function bodyOf(
     loggerId: idOf(values.loggerId),
     flowDriftPercent: values.flowDriftPercent,
     flowStepLPerS: values.flowStepLPerS,
+    meterPlate: plateOf(values),
     pipe: pipeOf(values),
     enteredBoreMm: values.enteredBoreMm,
     straightRun:
@@ -238,6 +252,23 @@ export function bodyOf(
       value === null || reason.trim() === "" ? [] : [{ kind, value, reason: reason.trim() }],
     ),
     notes: values.notes.trim() || null,
+  };
+}
+
+const CLASSES = { "1": 1, "2": 2, "3": 3 } as const;
+
+function plateOf(values: InstallationValues): InstallationBody["meterPlate"] {
+  if (values.meterClass === NONE) return null;
+  const number = values.meterCertificate.trim();
+  const { meterCertificatePercent: expandedPercent, meterCertificateK: k } = values;
+  return {
+    accuracyClass: CLASSES[values.meterClass],
+    permanentFlowM3PerHour: values.permanentFlowM3PerHour,
+    minimumDeltaTK: values.minimumDeltaTK,
+    certificate:
+      number === "" || expandedPercent === null
+        ? null
+        : { number, expandedPercent, ...(k === null ? {} : { k }) },
   };
 }
 

@@ -1,15 +1,17 @@
 import { kitPaths } from "@features/kit/kit-paths";
-import { useWords } from "@features/i18n";
+import { useEvidenceWords, useWords } from "@features/i18n";
 import {
   ChoiceTiles,
   FieldRow,
   NumberField,
   SelectField,
+  Text,
+  TextField,
   TextLink,
   WorkedOutField,
 } from "@features/ui";
 import { Caution } from "./caution";
-import { NONE } from "./installation-values";
+import { NONE, type MeterClassChoice } from "./installation-values";
 import { MeasureField } from "./measure-field";
 import { Section, type SectionProps, numberOf, choices } from "./section";
 
@@ -77,6 +79,92 @@ export function MeterSection(props: SectionProps) {
           {...numberOf(props, "remountPercent", "remountPercent")}
         />
       </FieldRow>
+    </Section>
+  );
+}
+
+/** A permanent heat meter that gives power or energy by itself: what its plate says. */
+export function PlateSection(props: SectionProps) {
+  const t = useWords("installation");
+  const { values, onChange, error, format, found } = props;
+  const words = useEvidenceWords(format);
+  const plate = found?.plateTerm ?? null;
+  const classes: readonly MeterClassChoice[] = [NONE, "1", "2", "3"];
+  return (
+    <Section title={t("plate.title")} section={props}>
+      <Text tone="ink2">{t("plate.lead")}</Text>
+      <FieldRow>
+        <SelectField
+          label={t("plate.class")}
+          hint={t("plate.classHint")}
+          value={values.meterClass}
+          options={classes.map((value) => ({
+            value,
+            label: value === NONE ? t("notSaid") : value,
+          }))}
+          onChange={(meterClass) => onChange({ meterClass })}
+          error={error("meterPlate/accuracyClass")}
+        />
+        {values.meterClass === NONE ? null : (
+          <>
+            <NumberField
+              label={t("plate.flow")}
+              unit="m³/h"
+              min={0}
+              max={10000}
+              {...numberOf(props, "permanentFlowM3PerHour", "meterPlate/permanentFlowM3PerHour")}
+            />
+            <NumberField
+              label={t("plate.deltaT")}
+              unit="K"
+              min={0}
+              max={20}
+              {...numberOf(props, "minimumDeltaTK", "meterPlate/minimumDeltaTK")}
+            />
+          </>
+        )}
+      </FieldRow>
+      {values.meterClass === NONE ? null : (
+        <>
+          <FieldRow>
+            <TextField
+              label={t("plate.certificate")}
+              hint={t("plate.certificateHint")}
+              value={values.meterCertificate}
+              onChange={(meterCertificate) => onChange({ meterCertificate })}
+              error={error("meterPlate/certificate/number")}
+              asRead
+              autoComplete="off"
+            />
+            <NumberField
+              label={t("plate.expanded")}
+              unit="%"
+              min={0}
+              max={100}
+              {...numberOf(
+                props,
+                "meterCertificatePercent",
+                "meterPlate/certificate/expandedPercent",
+              )}
+            />
+            <NumberField
+              label={t("plate.k")}
+              hint={t("plate.kHint")}
+              min={1}
+              max={4}
+              {...numberOf(props, "meterCertificateK", "meterPlate/certificate/k")}
+            />
+          </FieldRow>
+          {plate === null ? null : (
+            <WorkedOutField
+              label={t("plate.result")}
+              value={`± ${format.number(plate.expandedPercent, 2)}`}
+              unit="%"
+              hint={words.origin(plate.term.origin)}
+            />
+          )}
+        </>
+      )}
     </Section>
   );
 }

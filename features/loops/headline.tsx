@@ -5,6 +5,7 @@ import { Banner, Figure, Row, Text, TextLink, useBreakpoint } from "@features/ui
 
 import type { WorkingsKey } from "@features/workings/workings-key";
 
+import { evidencePaths } from "@features/evidence/evidence-paths";
 import { correctionsPaths } from "@features/corrections/corrections-paths";
 import type { FiguresWithWorkings, LoopFigures } from "./loop-context";
 import { energyQuantity, registersOf, type RegisterName } from "./register-words";
@@ -46,9 +47,7 @@ export function Headline(props: FiguresWithWorkings) {
           </Text>
         ) : null}
         {registers.some((register) => lacksPlusMinus(props, register)) ? (
-          <Text variant="small" tone="ink3">
-            {t("headline.noPlusMinus")}
-          </Text>
+          <WithoutPlusMinus {...props} />
         ) : null}
         {summary.basis.meansOnly ? (
           <Text variant="small" tone="ink3">
@@ -92,6 +91,35 @@ function RegisterFigure(props: FiguresWithWorkings & { register: RegisterName; a
 function lacksPlusMinus({ summary }: LoopFigures, register: RegisterName): boolean {
   const energy = summary.totals[register].energyKwh;
   return energy !== null && energy > 0 && summary.plusMinus[register].energy === null;
+}
+
+/** Why there is no ±, and the way to where it can be recorded. */
+function WithoutPlusMinus({ summary, site, loop, point }: LoopFigures) {
+  const t = useWords("loops");
+  if (summary.plusMinus.lacks !== "meterClass")
+    return (
+      <Text variant="small" tone="ink3">
+        {t("headline.noPlusMinus")}
+      </Text>
+    );
+  return (
+    <Row gap={8} wrap>
+      <Text variant="small" tone="ink2">
+        {t("headline.noMeterClass")}
+      </Text>
+      {summary.evidence === null ? null : (
+        <TextLink
+          variant="small"
+          label={t("headline.recordClass")}
+          href={
+            summary.evidence.can.record && summary.evidence.installations.length === 0
+              ? evidencePaths.newInstallation(site.id, loop.id, point.id)
+              : evidencePaths.evidence(site.id, loop.id, point.id)
+          }
+        />
+      )}
+    </Row>
+  );
 }
 
 function CoveredWords({ summary, format }: LoopFigures) {

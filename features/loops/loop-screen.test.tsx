@@ -68,6 +68,7 @@ function summaryOf(more: Partial<PointSummary> = {}): PointSummary {
       heating: { energy: null, deltaT: null },
       cooling: { energy: plusMinus(498.7), deltaT: plusMinus(0.13) },
       volume: plusMinus(51),
+      lacks: null,
     },
     totals: {
       heating: register(0, null),
@@ -310,7 +311,10 @@ it("never nets a changeover loop's registers", async () => {
     heating: { energy: plusMinus(55), deltaT: null },
     cooling: { energy: plusMinus(52), deltaT: null },
   };
-  serverAnswers(summaryCall, summaryOf({ totals, plusMinus: { ...registers, volume: null } }));
+  serverAnswers(
+    summaryCall,
+    summaryOf({ totals, plusMinus: { ...registers, volume: null, lacks: null } }),
+  );
   show(<LoopScreen />);
   expect(
     await screen.findByRole("button", { name: /^Heating energy.*1,646 plus or minus 55/ }),
@@ -319,6 +323,18 @@ it("never nets a changeover loop's registers", async () => {
     screen.getByRole("button", { name: /^Cooling energy.*1,569 plus or minus 52/ }),
   ).toBeVisible();
   expect(screen.queryByText(/77/)).toBeNull();
+});
+
+it("says that a permanent meter's class is not recorded, and leads to where it can be", async () => {
+  const none = { energy: null, deltaT: null };
+  const plusMinus = { heating: none, cooling: none, volume: null, lacks: "meterClass" } as const;
+  serverAnswers(summaryCall, summaryOf({ plusMinus }));
+  show(<LoopScreen />);
+  expect(await screen.findByText(/^± unknown: the meter’s class is not recorded/)).toBeVisible();
+  expect(screen.getByRole("link", { name: "Record it in the evidence" })).toHaveAttribute(
+    "href",
+    expect.stringMatching(/\/points\/\d+\/evidence/),
+  );
 });
 
 it("shows energy a cut-off held back, with its time", async () => {

@@ -138,6 +138,11 @@ function Energies({ shown, format, monday, size }: RowProps & { size: "m" | "s" 
           </View>
         );
       })}
+      {shown.plusMinus?.lacks === "meterClass" && energies.some(({ kwh }) => (kwh ?? 0) > 0) ? (
+        <Text variant="small" tone="ink3">
+          {t("overview.noMeterClass")}
+        </Text>
+      ) : null}
     </View>
   );
 }

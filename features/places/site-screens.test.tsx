@@ -105,6 +105,7 @@ describe("the page of a site", () => {
           deltaT: { expanded: 0.13, percent: 3, basis: "evidence" },
         },
         volume: null,
+        lacks: null,
       },
       flowWeightedDeltaTK: 4.5,
       coverage: 0.9996,

@@ -238,6 +238,27 @@ const probeOnPipe = z.object({
   depthMm: z.number().min(20).max(300).nullable(),
   insulated: z.boolean(),
 });
+/** What a permanent heat meter's plate says; EN 1434 classes. */
+const meterPlate = z.object({
+  accuracyClass: z.union([z.literal(1), z.literal(2), z.literal(3)]),
+  permanentFlowM3PerHour: z.number().gt(0).max(10_000).nullable().default(null).describe("q_p"),
+  minimumDeltaTK: z
+    .number()
+    .gt(0)
+    .max(20)
+    .nullable()
+    .default(null)
+    .describe("least ΔT it is made for, K"),
+  certificate: z
+    .object({
+      number: oneLine(60),
+      expandedPercent: z.number().gt(0).max(100).describe("of energy"),
+      k: z.number().min(1).max(4).default(2),
+    })
+    .nullable()
+    .default(null)
+    .describe("of this very meter; counts before the class"),
+});
 const probeInDocument = probeOnPipe.omit({ probeId: true });
 export const installationFields = z.object({
   /** From when this evidence speaks for the point's readings; the end is open or the next one's start. */
@@ -257,6 +278,8 @@ export const installationFields = z.object({
       gaugeUncertaintyMm: z.number().gt(0).max(2).default(0.05),
     })
     .nullable(),
+  /** Where a permanent meter gives power or energy by itself; records from before have none. */
+  meterPlate: meterPlate.nullable().default(null),
   /** The bore typed into the flow meter; null where the meter shows water speed only or nobody looked. */
   enteredBoreMm: z.number().min(10).max(1300).nullable(),
   straightRun: z
@@ -406,6 +429,10 @@ const workedOut = z.object({
   correctedFlowLPerS: z.number().nullable(),
   /** The zero's reading or half-width as flow in this pipe, L/s. */
   zeroLPerS: z.number().nullable(),
+  /** A permanent meter's power and energy by its plate alone; null without one. */
+  plateTerm: z
+    .object({ term: budgetTerm, expandedPercent: z.number().describe("of energy, k = 2") })
+    .nullable(),
   /** Measured bore, else the bore of the point's own pipe, mm. */
   boreUsedMm: z.number().nullable(),
   bathCheckUsed: bathCheck

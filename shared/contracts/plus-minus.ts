@@ -13,7 +13,13 @@ const known = plusMinus.nullable().describe("null where the workings say why the
 const register = z.object({ energy: known, deltaT: known });
 
 /** The ± of what a range adds up to, each register by itself. */
-export const rangePlusMinus = z.object({ heating: register, cooling: register, volume: known });
+export const rangePlusMinus = z.object({
+  heating: register,
+  cooling: register,
+  volume: known,
+  /** What nobody recorded, so that an energy has no ±: named beside the figure, never left blank. */
+  lacks: z.enum(["meterClass"]).nullable(),
+});
 export type RangePlusMinus = z.infer<typeof rangePlusMinus>;
 
 /** The ± of a day's energy, or of any other stretch's. */

@@ -35,6 +35,7 @@ describe("a clamp-on meter 0.92 m behind an elbow", () => {
   };
   const expected = readJson("test/fixtures/scenarios/S01/expected.json") as Record<string, number>;
   const evidence: PointEvidence = {
+    meterPlate: null,
     flowMeter: null,
     pipe: {
       circumferenceMm: input.circumference_mm,

@@ -7,6 +7,7 @@ import type { PointEvidence } from "@shared/domain/uncertainty/point-evidence";
  * 12.80 °C, water at 1.6 MPa, everything about the installation on record.
  */
 export const WORKED_EVIDENCE: PointEvidence = {
+  meterPlate: null,
   flowMeter: {
     serial: "F-1",
     certificate: {

@@ -42,6 +42,7 @@ export function evidenceOf(
     return { ...onPipe, serial: row?.serial ?? "", probeClass: row?.probeClass ?? null };
   };
   return {
+    meterPlate: fields.meterPlate,
     flowMeter: meter
       ? {
           serial: meter.serial,

@@ -17,6 +17,7 @@ const unknown: Omit<InstallationFields, "startsAt"> = {
   flowDriftPercent: null,
   flowStepLPerS: null,
   pipe: null,
+  meterPlate: null,
   enteredBoreMm: null,
   straightRun: null,
   zero: null,

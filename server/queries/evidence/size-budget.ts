@@ -22,6 +22,6 @@ export function sizeBudget(budget: Budget, { at, flowM3PerHour }: BudgetState): 
   };
 }
 
-function presentTerm({ origin, ...term }: Budget["terms"][number]) {
+export function presentTerm({ origin, ...term }: Budget["terms"][number]) {
   return { ...term, origin: { ...origin, values: { ...origin.values } } };
 }

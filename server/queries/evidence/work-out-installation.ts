@@ -3,7 +3,10 @@ import { flowAreaM2 } from "@shared/domain/pipes/bore";
 import { reynoldsNumber } from "@shared/domain/pipes/reynolds-number";
 import { localDateOf } from "@shared/domain/time/local-calendar";
 import { boreFromEvidence } from "@shared/domain/uncertainty/bore-from-evidence";
+import { COVERAGE_FACTOR } from "@shared/domain/uncertainty/combine-terms";
 import { conditionVerdicts } from "@shared/domain/uncertainty/conditions";
+import { budgetFromPlate } from "@shared/domain/uncertainty/meter-plate";
+import type { PointEvidence } from "@shared/domain/uncertainty/point-evidence";
 import type { Instrument } from "@server/models/instrument";
 import type { StandingCorrection } from "@server/readings/point-corrections";
 import { bathCheckOf, evidenceOf } from "./evidence-of";
@@ -11,7 +14,7 @@ import { putRightBy } from "./corrected-already";
 import type { EvidenceRecords } from "./evidence-records";
 import { budgetOf, isIndicativeOnly, testedOnOf } from "./point-evidence";
 import type { PointBackground } from "./point-background";
-import { sizeBudget } from "./size-budget";
+import { presentTerm, sizeBudget } from "./size-budget";
 import { budgetStateOf, type BudgetState } from "./usual-state";
 
 /**
@@ -50,6 +53,7 @@ export function workOutInstallation(
     },
     correctedFlowLPerS: factor === null || shownFlowLPerS === null ? null : factor * shownFlowLPerS,
     zeroLPerS: zeroFlow(fields.zero, boreMm),
+    plateTerm: plateTermOf(evidence),
     boreUsedMm: boreMm,
     bathCheckUsed: evidence.bathCheck && {
       id: bathCheckOf(fields, records, startDay)?.id ?? "",
@@ -76,6 +80,14 @@ export function workOutInstallation(
     }),
     budget: sizeBudget(budget, state),
   };
+}
+
+/** Before there are readings no power bounds ΔT: the limits at the least state of all. */
+function plateTermOf({ meterPlate, edits }: PointEvidence): WorkedOutInstallation["plateTerm"] {
+  const [term] = meterPlate ? budgetFromPlate(meterPlate, null, edits).terms : [];
+  return term
+    ? { term: presentTerm(term), expandedPercent: COVERAGE_FACTOR * term.standard }
+    : null;
 }
 
 /** The budget of times no installation speaks for. */

@@ -9,6 +9,7 @@ import {
 } from "@shared/domain/uncertainty/combine-installations";
 import { combinePeriod } from "@shared/domain/uncertainty/combine-period";
 import type { UncertainFigure } from "@shared/domain/uncertainty/figures";
+import { budgetFromPlate } from "@shared/domain/uncertainty/meter-plate";
 import type { PlusMinus } from "@shared/contracts/plus-minus";
 import { budgetOf, type StandingInstallation } from "@server/queries/evidence/point-evidence";
 import type { EnergyRow } from "@server/queries/energy/energy-rows";
@@ -33,6 +34,8 @@ export type WithoutUncertainty =
 /** One stretch with its budget, put to what the stretch measured. */
 export interface FigurePart {
   readonly part: EvidencePart;
+  /** By flow and temperatures, or by the power or energy of a permanent meter. */
+  readonly measuredBy: "water" | "meter";
   readonly sums: PartSums;
   readonly budget: Budget;
   readonly velocityMPerS: number | null;
@@ -60,12 +63,13 @@ export function figureUncertainty(
 ): FigureUncertainty | WithoutUncertainty {
   const range = spanOf(rows);
   if (range === null) return "nothingCovered";
-  const parts = evidenceParts(evidence.installations, range).flatMap((part) => {
-    const sums = sumsWithin(rows, part, asked.register);
-    return sums.coveredS > 0 ? [partOf(evidence, part, sums)] : [];
-  });
+  const stretches = evidenceParts(evidence.installations, range);
+  const found = ofHeat(asked)
+    ? stretches.flatMap((part) => heatParts(evidence, rows, part, asked.register))
+    : stretches.flatMap((part) => waterOnly(evidence, rows, part, asked.register));
+  const parts = found.flatMap((part) => part ?? []);
+  if (parts.length < found.length) return "noUncertaintyForMeter";
   if (parts.length === 0) return "nothingCovered";
-  if (parts.some(({ sums }) => sums.meterOnlyS > ROUNDING_S)) return "noUncertaintyForMeter";
   const moved = parts.filter(({ sums }) => contribution(asked, sums) > 0);
   const combined = combine(asked, moved);
   if (combined === null) return "noUncertaintyWithoutFlow";
@@ -78,7 +82,10 @@ export function plusMinusOf(
   rows: readonly EnergyRow[],
   asked: AskedFigure,
 ): PlusMinus | null {
-  const found = figureUncertainty(evidence, rows, asked);
+  return shownPlusMinus(figureUncertainty(evidence, rows, asked));
+}
+
+export function shownPlusMinus(found: FigureUncertainty | WithoutUncertainty): PlusMinus | null {
   return typeof found === "string" ? null : presentPlusMinus(found);
 }
 
@@ -93,7 +100,70 @@ function spanOf(rows: readonly EnergyRow[]): Interval | null {
   return first && last ? { startMs: first.startMs, endMs: last.endMs } : null;
 }
 
-function partOf(evidence: FigureEvidence, part: EvidencePart, sums: PartSums): FigurePart {
+const ofHeat = ({ figure }: AskedFigure) => figure === "energy" || figure === "power";
+
+/** Volume and ΔT are of the time in which flow and temperatures were measured, and of no other. */
+function waterOnly(
+  evidence: FigureEvidence,
+  rows: readonly EnergyRow[],
+  part: EvidencePart,
+  register: RegisterName,
+): FigurePart[] {
+  const sums = sumsWithin(rows, part, register);
+  return hasWater(sums) ? [waterPart(evidence, part, sums)] : [];
+}
+
+const hasWater = ({ coveredS, meterOnlyS }: PartSums) => coveredS - meterOnlyS > ROUNDING_S;
+
+/**
+ * A stretch by what gave its energy; a row that a meter gave some of counts as the meter's. Null
+ * stands for a meter's time whose class nobody recorded.
+ */
+function heatParts(
+  evidence: FigureEvidence,
+  rows: readonly EnergyRow[],
+  part: EvidencePart,
+  register: RegisterName,
+): (FigurePart | null)[] {
+  const isMeters = ({ totals }: EnergyRow) => totals.meterOnlyS > ROUNDING_S;
+  const water = sumsWithin(
+    rows.filter((row) => !isMeters(row)),
+    part,
+    register,
+  );
+  const meter = sumsWithin(rows.filter(isMeters), part, register);
+  return [
+    ...(water.coveredS > 0 ? [waterPart(evidence, part, water)] : []),
+    ...(meter.coveredS > 0 ? [meterPart(evidence, part, meter)] : []),
+  ];
+}
+
+/**
+ * A stretch whose energy a permanent meter gave: by its plate. Where part of a row was worked out from
+ * flow and temperatures instead, the wider of the two budgets speaks for all of it. Null where nobody
+ * recorded the meter's class.
+ */
+function meterPart(
+  evidence: FigureEvidence,
+  part: EvidencePart,
+  sums: PartSums,
+): FigurePart | null {
+  const { meterPlate: plate, edits } = part.installation?.evidence ?? {
+    meterPlate: null,
+    edits: [],
+  };
+  if (plate === null) return null;
+  const meanPowerKw = quotient(sums.energyKwh, sums.runningS / 3600);
+  const budget = budgetFromPlate(plate, meanPowerKw, edits);
+  const metered = { part, sums, budget, velocityMPerS: null, measuredBy: "meter" } as const;
+  if (!hasWater(sums)) return metered;
+  const asWater = waterPart(evidence, part, sums);
+  const percentOf = (one: FigurePart) =>
+    combinePart({ figure: "energy" }, one, 1)?.expandedPercent ?? 0;
+  return percentOf(asWater) > percentOf(metered) ? asWater : metered;
+}
+
+function waterPart(evidence: FigureEvidence, part: EvidencePart, sums: PartSums): FigurePart {
   const { background, zone, intervalS } = evidence;
   const recorded = part.installation?.evidence ?? null;
   const onDate = localDateOf(sums.lastCoveredMs ?? part.startMs, zone);
@@ -110,7 +180,7 @@ function partOf(evidence: FigureEvidence, part: EvidencePart, sums: PartSums): F
   const { boreMm } = budgetAt(null);
   const meanFlow = quotient(sums.allVolumeM3, sums.movingS / 3600);
   const speed = meanFlow === null || boreMm === null ? null : velocityMPerS(meanFlow, boreMm);
-  return { part, sums, budget: budgetAt(speed), velocityMPerS: speed };
+  return { part, sums, budget: budgetAt(speed), velocityMPerS: speed, measuredBy: "water" };
 }
 
 function combine(asked: AskedFigure, parts: readonly FigurePart[]): CombinedUncertainty | null {
@@ -127,7 +197,7 @@ function combine(asked: AskedFigure, parts: readonly FigurePart[]): CombinedUnce
 }
 
 function combinePart(
-  { figure }: AskedFigure,
+  { figure }: Pick<AskedFigure, "figure">,
   { sums, budget, velocityMPerS: meanVelocity }: FigurePart,
   value: number,
 ): CombinedUncertainty | null {
@@ -182,6 +252,7 @@ function sourcesOf(
   const pair = probes && [probes.supply.serial, probes.return.serial].sort().join(" ");
   return {
     ...(flowMeter ? { certificate: flowMeter.serial, drift: flowMeter.serial } : {}),
+    ...(flowMeter ? { meterLimits: flowMeter.serial } : {}),
     ...(pair ? { probePair: pair, pairDrift: pair } : {}),
   };
 }

@@ -7,22 +7,27 @@ import type { EnergyRange } from "@server/queries/energy/energy-range";
 import { energyRows, type EnergyRow } from "@server/queries/energy/energy-rows";
 import type { RegisterName } from "@server/queries/energy/loads";
 import { loadFigureEvidence, type FigureEvidence } from "./figure-evidence";
-import { plusMinusOf } from "./figure-uncertainty";
+import { figureUncertainty, plusMinusOf, shownPlusMinus } from "./figure-uncertainty";
 
 /** The ± of everything a range adds up to, from the rows its totals are summed from. */
 export function rangePlusMinus(
   evidence: FigureEvidence,
   rows: readonly EnergyRow[],
 ): RangePlusMinus {
+  const energies = {
+    heating: figureUncertainty(evidence, rows, { figure: "energy", register: "heating" }),
+    cooling: figureUncertainty(evidence, rows, { figure: "energy", register: "cooling" }),
+  };
   const register = (name: RegisterName) => ({
-    energy: plusMinusOf(evidence, rows, { figure: "energy", register: name }),
+    energy: shownPlusMinus(energies[name]),
     deltaT: plusMinusOf(evidence, rows, { figure: "deltaT", register: name }),
   });
   const heating = register("heating");
   const cooling = register("cooling");
   const leading: RegisterName = heating.energy === null ? "cooling" : "heating";
   const volume = plusMinusOf(evidence, rows, { figure: "volume", register: leading });
-  return { heating, cooling, volume };
+  const lacks = Object.values(energies).includes("noUncertaintyForMeter") ? "meterClass" : null;
+  return { heating, cooling, volume, lacks };
 }
 
 /** The same, loaded: of any range that starts and ends on quarter-hours. */

@@ -23,36 +23,46 @@ export function presentInstallations(
   about: { readonly coverage: number | null; readonly boreCorrected: boolean },
 ): Shown[] {
   const coveredS = parts.reduce((total, { sums }) => total + sums.coveredS, 0);
-  return parts.flatMap((figurePart): Shown[] => {
+  // Water and a meter may both have spoken in one installation's time: it is shown once.
+  const shown = new Map<string, Shown>();
+  for (const figurePart of parts) {
     const { installation } = figurePart.part;
-    if (installation === null) return [];
+    if (installation === null) continue;
     const { flowMeter, probes } = installation.evidence;
-    return [
-      {
-        id: installation.id,
-        version: installation.version,
-        startsAt: instantText(new Date(installation.startMs)),
-        endsAt: installation.endMs === null ? null : instantText(new Date(installation.endMs)),
-        recordedBy: installation.recordedBy,
-        flowMeterSerial: flowMeter?.serial ?? null,
-        supplyProbeSerial: probes?.supply.serial ?? null,
-        returnProbeSerial: probes?.return.serial ?? null,
-        bathCheckId: installation.bathCheckId,
-        share: quotient(figurePart.sums.coveredS, coveredS) ?? 0,
-        verdicts: verdictsOf(energyPoint, evidence, figurePart, about),
-      },
-    ];
-  });
+    const before = shown.get(installation.id);
+    const verdicts = verdictsOf(energyPoint, evidence, figurePart, about);
+    shown.set(installation.id, {
+      id: installation.id,
+      version: installation.version,
+      startsAt: instantText(new Date(installation.startMs)),
+      endsAt: installation.endMs === null ? null : instantText(new Date(installation.endMs)),
+      recordedBy: installation.recordedBy,
+      flowMeterSerial: flowMeter?.serial ?? null,
+      supplyProbeSerial: probes?.supply.serial ?? null,
+      returnProbeSerial: probes?.return.serial ?? null,
+      bathCheckId: installation.bathCheckId,
+      share: (before?.share ?? 0) + (quotient(figurePart.sums.coveredS, coveredS) ?? 0),
+      verdicts: [
+        ...(before?.verdicts ?? []),
+        ...verdicts.filter(({ code }) => !before?.verdicts.some((one) => one.code === code)),
+      ],
+    });
+  }
+  return [...shown.values()];
 }
+
+/** What a permanent meter's own power depends on: its limits hold flow, temperatures and mounting. */
+const OF_A_METER: ReadonlySet<string> = new Set(["certificate", "clock", "fluid", "completeness"]);
 
 function verdictsOf(
   energyPoint: EnergyPoint,
   { zone, intervalS, offsets, background }: FigureEvidence,
-  { part, sums, budget, velocityMPerS }: FigurePart,
+  { part, sums, budget, velocityMPerS, measuredBy }: FigurePart,
   about: { readonly coverage: number | null; readonly boreCorrected: boolean },
 ): Shown["verdicts"] {
   const { installation } = part;
-  return conditionVerdicts({
+  const certified = installation?.evidence.meterPlate?.certificate != null;
+  const verdicts = conditionVerdicts({
     evidence: installation?.evidence ?? null,
     budget,
     fluid: background.loop.fluid,
@@ -67,7 +77,11 @@ function verdictsOf(
     intervalS,
     pairDifferenceCorrected: isPairCorrected(part, offsets),
     completeness: about.coverage,
-  }).map((verdict) => ({ ...verdict, values: { ...verdict.values } }));
+  });
+  return verdicts
+    .filter(({ check }) => measuredBy === "water" || OF_A_METER.has(check))
+    .filter(({ code }) => !(certified && code === "certificateMissing"))
+    .map((verdict) => ({ ...verdict, values: { ...verdict.values } }));
 }
 
 function reynoldsOf(

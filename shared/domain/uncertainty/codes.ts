@@ -55,7 +55,22 @@ export const ORIGIN_CODES = {
   deltaTStepAssumed: ["stepK"],
   alignmentAssumed: ["percent"],
   alignmentClockError: ["offsetS", "intervalS", "percent"],
-  meterClassLimits: ["meterClass", "totalPercent"],
+  meterClassLeastState: [
+    "meterClass",
+    "flowPercent",
+    "pairPercent",
+    "calculatorPercent",
+    "totalPercent",
+  ],
+  meterClassByPower: [
+    "meterClass",
+    "flowPercent",
+    "pairPercent",
+    "calculatorPercent",
+    "totalPercent",
+    "leastDeltaTK",
+  ],
+  meterOwnCertificate: ["number", "expandedPercent", "k"],
   filledShare: ["sharePercent", "filledPercent"],
 } as const;
 export type OriginCode = keyof typeof ORIGIN_CODES;

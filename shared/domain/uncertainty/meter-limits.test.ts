@@ -1,10 +1,4 @@
-import { combineInterval } from "./combine-interval";
-import {
-  budgetFromMeterLimits,
-  expandedFromLimitsPercent,
-  meterLimits,
-  type MeterLimitState,
-} from "./meter-limits";
+import { expandedFromLimitsPercent, meterLimits, type MeterLimitState } from "./meter-limits";
 
 const total = (state: Omit<MeterLimitState, "deltaTMinK">) =>
   meterLimits({ ...state, deltaTMinK: 3 })?.totalPercent;
@@ -38,15 +32,8 @@ test("without flow or ΔT there is no limit to give; cooling counts like heating
   );
 });
 
-test("a budget of limits alone combines to the same expanded uncertainty", () => {
+test("the limits of a class as half-width of a rectangle, expanded", () => {
   const limits = meterLimits({ meterClass: 2, flowRatio: 0.42, deltaTK: 18.4, deltaTMinK: 3 })!;
   expect(limits.totalPercent).toBeCloseTo(3.699793, 6);
-  const combined = combineInterval(budgetFromMeterLimits(2, limits), {
-    figure: "energy",
-    value: 2427,
-    flowM3PerHour: null,
-    deltaTK: null,
-  });
-  expect(combined?.expandedPercent).toBeCloseTo(expandedFromLimitsPercent(limits), 12);
-  expect(combined?.expandedPercent).toBeCloseTo(4.272153, 6);
+  expect(expandedFromLimitsPercent(limits)).toBeCloseTo(4.272153, 6);
 });

@@ -1,5 +1,3 @@
-import type { Budget } from "./budget";
-import { budgetTerm, halfWidth, originOf } from "./budget-term";
 import { COVERAGE_FACTOR } from "./combine-terms";
 import { standardFromHalfWidth } from "./distributions";
 
@@ -69,15 +67,4 @@ export function meterLimits(state: MeterLimitState): MeterLimits | null {
  */
 export function expandedFromLimitsPercent(limits: MeterLimits): number {
   return COVERAGE_FACTOR * standardFromHalfWidth(limits.totalPercent);
-}
-
-/** The same as a budget of one term, so that a permanent meter's figures combine like any other's. */
-export function budgetFromMeterLimits(meterClass: MeterClass, limits: MeterLimits): Budget {
-  const { totalPercent } = limits;
-  const term = budgetTerm(
-    "meterLimits",
-    halfWidth(totalPercent, "%"),
-    originOf("default", "meterClassLimits", { meterClass, totalPercent }),
-  );
-  return { terms: [term], boreMm: null, autocorrelation: 0 };
 }

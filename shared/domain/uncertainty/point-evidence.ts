@@ -1,3 +1,5 @@
+import type { MeterPlate } from "./meter-plate";
+
 /**
  * What is known about how a point was measured: one installation, as it stands in the record.
  *
@@ -5,6 +7,8 @@
  * is worked out in `budget-from-evidence`. Dates are calendar days, YYYY-MM-DD.
  */
 export interface PointEvidence {
+  /** Of a permanent heat meter that gives power or energy by itself. */
+  readonly meterPlate: MeterPlate | null;
   readonly flowMeter: FlowMeterEvidence | null;
   readonly pipe: PipeEvidence | null;
   readonly straightRun: StraightRunEvidence | null;
