@@ -1,5 +1,5 @@
 import type { ImportChecks } from "@shared/contracts/import-checks";
-import { totalEnergy, waterSeconds } from "@shared/domain/energy/totals";
+import { waterSeconds } from "@shared/domain/energy/totals";
 import type { RepairStepCode } from "@shared/domain/log-files/repair-step";
 import type { RepairChoices } from "@shared/domain/log-files/recipe";
 import {
@@ -15,7 +15,7 @@ import {
 import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
 import type { Interval } from "@shared/domain/time/interval";
 import { localDaysBetween } from "@shared/domain/time/local-calendar";
-import { calculateEnergy } from "@server/readings/calculate-energy";
+import { calculateSpan } from "@server/readings/calculate-energy";
 import type { EnergySettings } from "@server/readings/energy-settings";
 import { liquidC } from "@server/readings/fluid-block";
 import { meterFacts, type MeterPlace } from "@server/readings/meter-facts";
@@ -214,8 +214,8 @@ function energyOf(
     : [];
   // A stretch leaves out its end, but the last row counts as a row.
   const window = span && { ...span, endMs: span.endMs + 1 };
-  const result = window && calculateEnergy(segments, settings, days, window);
-  const totals = result && totalEnergy(result.intervals);
+  const result = window && calculateSpan(segments, settings, days, window);
+  const totals = result && result.totals;
   const blockedBy = energyBlock(settings, {
     channels: span ? channelsOf(segments) : null,
     measuredRows: totals?.measuredRows ?? 0,

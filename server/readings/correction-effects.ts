@@ -10,7 +10,7 @@ import { instantText } from "@server/database/conversions";
 import { enqueueJob } from "@server/jobs/job-queue";
 import { calculateEnergy } from "./calculate-energy";
 import { loadEnergySettings, powerOptionsOf, type EnergySettings } from "./energy-settings";
-import { indexFrom, loadSegments, reachOfPoint, sliceColumns } from "./load-segments";
+import { indexFrom, loadSegments, sliceColumns, stepsOfPoint } from "./load-segments";
 import { loadPointCorrections, spanOfChange, type PointCorrections } from "./point-corrections";
 import { fileSpans } from "./reading-span";
 import { ChannelBit } from "./stored-rows";
@@ -88,7 +88,7 @@ async function effectOnPoint(
   const withIt = await loadPointCorrections(database, pointId, undefined, id);
   const range = await affectedRange(database, pointId, change, without, withIt);
   if (range === null) return null;
-  const reach = await reachOfPoint(database, pointId);
+  const { reach } = await stepsOfPoint(database, pointId);
   const days = localDaysBetween(
     { startMs: range.startMs - reach, endMs: range.endMs + reach },
     settings.zone,

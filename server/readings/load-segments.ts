@@ -70,12 +70,20 @@ function reachOf(files: readonly FileOfPoint[]): number {
   return farthestSteps * longest;
 }
 
-export async function reachOfPoint(
+export interface PointSteps {
+  readonly reach: number;
+  /** Shortest step of the point's files, ms; 0 where none knows its own. */
+  readonly shortestMs: number;
+}
+
+export async function stepsOfPoint(
   database: Database,
   pointId: string,
   transaction?: Transaction,
-): Promise<number> {
-  return reachOf(await filesOf(database, pointId, transaction));
+): Promise<PointSteps> {
+  const files = await filesOf(database, pointId, transaction);
+  const steps = files.flatMap(({ nominalStepMs }) => nominalStepMs ?? []);
+  return { reach: reachOf(files), shortestMs: steps.length === 0 ? 0 : Math.min(...steps) };
 }
 
 const utcDate = (ms: number) => new Date(ms).toISOString().slice(0, 10);

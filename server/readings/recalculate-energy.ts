@@ -11,13 +11,11 @@ import { replaceDays } from "./day-rows";
 import { keepEnergyResult } from "./energy-results";
 import { loadEnergySettings } from "./energy-settings";
 import { replaceIntervals } from "./interval-rows";
-import { loadSegments, reachOfPoint } from "./load-segments";
+import { stretchesOf } from "./energy-stretches";
+import { loadSegments, stepsOfPoint } from "./load-segments";
 import { loadPointCorrections, type PointCorrections } from "./point-corrections";
 import { refreshPointReadings } from "./point-readings";
 import { fileSpans } from "./reading-span";
-
-/** Days worked out at a time, so that memory stays flat however long a point has been measured. */
-const daysAtOnce = 92;
 
 export interface RecalculationOptions {
   /**
@@ -43,7 +41,7 @@ export async function recalculateEnergy(
   options: RecalculationOptions = {},
 ): Promise<void> {
   const settings = await loadEnergySettings(database, pointId, transaction);
-  const reach = await reachOfPoint(database, pointId, transaction);
+  const { reach, shortestMs } = await stepsOfPoint(database, pointId, transaction);
   const corrections = await loadPointCorrections(database, pointId, transaction);
   // A clock that was corrected moves a file's rows out of the range its own labels name.
   const moved = [...corrections.files.values()].some(({ clock }) => clock !== null);
@@ -62,10 +60,11 @@ export async function recalculateEnergy(
       : (fromMs: number, toMs: number) =>
           loadSegments(database, pointId, fromMs, toMs, transaction, corrections);
     if (isEverything) await deleteDays(database, transaction, pointId);
-    for (let from = 0; from < days.length; from += daysAtOnce) {
-      const stretch = days.slice(from, from + daysAtOnce);
+    let done = 0;
+    for (const stretch of stretchesOf(days, shortestMs)) {
       await recalculateStretch(database, transaction, settings, stretch, segmentsOf);
-      options.onProgress?.(Math.min(1, (from + daysAtOnce) / days.length));
+      done += stretch.length;
+      options.onProgress?.(done / days.length);
     }
   }
   await refreshPointReadings(database, transaction, settings, corrections);
