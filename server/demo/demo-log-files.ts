@@ -99,6 +99,7 @@ const FLOW_TEXT: Readonly<Record<FlowUnit, string>> = {
   "L/s": "L/s",
   "L/min": "L/min",
   "US gpm": "gpm",
+  "L/h": "l/h",
 };
 const TEMPERATURE_TEXT: Readonly<Record<TemperatureUnit, string>> = {
   degC: "°C",

@@ -2,6 +2,7 @@ import * as fc from "fast-check";
 import { BLOCK_FORMAT, decodeBlock, encodeBlock } from "./block-codec";
 import { inSiUnits, type StoredRows } from "./stored-rows";
 
+const FORMAT_1_BLOCK = "a2RquHDzcUPagZXsDEwMjPLcggz8rAA=";
 const midnight = Date.UTC(2025, 6, 14);
 
 function rowsOf(count: number, value: (row: number) => number): StoredRows {
@@ -55,6 +56,49 @@ test("a large number that needs fewer decimals than a later one is kept exactly"
   expect(decodeBlock(encodeBlock(rows), BLOCK_FORMAT).flow?.values).toEqual(
     Float64Array.of(500_000_000, 0.125),
   );
+});
+
+test("companion series stand behind the readings, and in a block of their own", () => {
+  const beside: StoredRows = {
+    ...rowsOf(3, (row) => row),
+    power: null,
+    volumeCounter: null,
+    heatingCounter: null,
+    coolingCounter: null,
+    outdoor: { unit: "degF", values: Float64Array.of(59, NaN, 14.5) },
+    electricPower: { unit: "W", values: Float64Array.of(730, 731, 0) },
+    pressure: { unit: "psi", values: Float64Array.of(29.4, 29.5, 29.4) },
+  };
+  expect(decodeBlock(encodeBlock(beside), BLOCK_FORMAT)).toEqual(beside);
+  const alone: StoredRows = { ...beside, flow: null, supply: null, electricPower: null };
+  const read = decodeBlock(encodeBlock(alone), BLOCK_FORMAT);
+  expect(read).toEqual(alone);
+  const si = inSiUnits(read);
+  expect([...si.outdoorC!].map((value) => Math.round(value * 1e6) / 1e6)).toEqual([
+    15,
+    NaN,
+    -9.722222,
+  ]);
+  // NIST SP 811: 1 psi = 6.894757 kPa.
+  expect(si.pressureKpa?.[0]).toBeCloseTo(29.4 * 6.894757, 4);
+  expect(si.electricKw).toBeUndefined();
+});
+
+test("a block of format 1, whose channel set is a byte, is read as ever", () => {
+  // Flow and cooling counter of two rows, written before the set became an integer.
+  const written = Buffer.from(FORMAT_1_BLOCK, "base64");
+  expect(decodeBlock(written, 1)).toEqual({
+    instantMs: Float64Array.of(midnight, midnight + 60_000),
+    flow: { unit: "m3/h", values: Float64Array.of(1.5, 2) },
+    supply: null,
+    return: null,
+    signal: null,
+    power: null,
+    volumeCounter: null,
+    heatingCounter: null,
+    coolingCounter: { unit: "kWh", values: Float64Array.of(7, 9) },
+    quality: new Uint8Array(2),
+  });
 });
 
 test("a day of minutes with noisy readings takes less than five bytes a row", () => {

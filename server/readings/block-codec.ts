@@ -3,8 +3,11 @@ import type {
   ColumnUnit,
   CountedEnergyUnit,
   CountedVolumeUnit,
+  ElectricPowerUnit,
   FlowUnit,
+  LoopPressureUnit,
   MeterPowerUnit,
+  OutdoorUnit,
   TemperatureUnit,
 } from "@shared/domain/log-files/recipe";
 import { ByteReader, ByteWriter } from "./byte-columns";
@@ -26,9 +29,11 @@ import {
  * minutes of flow and two temperatures take about four kilobytes.
  *
  * Layout after inflating: channel set, row count, instants, quality runs, then per channel its unit
- * code, its decimals (255: doubles) and its numbers. Readers of an older `BLOCK_FORMAT` must stay.
+ * code, its decimals (255: doubles) and its numbers. Readers of an older `BLOCK_FORMAT` must stay:
+ * in format 1 the channel set is one byte, since then an integer of any length.
  */
-export const BLOCK_FORMAT = 1;
+export const BLOCK_FORMAT = 2;
+const BYTE_SET_FORMAT = 1;
 
 /** Stored; never renumber. */
 const unitCodes: readonly ColumnUnit[] = [
@@ -55,6 +60,10 @@ const unitCodes: readonly ColumnUnit[] = [
   "GJ",
   "kBtu",
   "MMBtu",
+  "L/h",
+  "kPa",
+  "bar",
+  "psi",
 ];
 const AS_DOUBLES = 255;
 const MOST_DECIMALS = 9;
@@ -71,7 +80,7 @@ export function encodeBlock(rows: StoredRows): Buffer {
   const count = rows.instantMs.length;
   if (count === 0) throw new RangeError("a reading block holds at least one row");
   const out = new ByteWriter(64 + count * 14);
-  out.byte(channelSetOf(rows));
+  out.integer(channelSetOf(rows));
   out.integer(count);
   writeInstants(out, rows.instantMs);
   writeQuality(out, rows.quality);
@@ -101,10 +110,12 @@ const newRoom: BlockRoom = {
  * @throws RangeError for another format or damaged bytes.
  */
 export function decodeBlock(packed: Uint8Array, format: number, room = newRoom): StoredRows {
-  if (format !== BLOCK_FORMAT)
-    throw new RangeError(`reading block of format ${format}; this server reads ${BLOCK_FORMAT}`);
+  if (format !== BLOCK_FORMAT && format !== BYTE_SET_FORMAT)
+    throw new RangeError(
+      `reading block of format ${format}; this server reads ${BYTE_SET_FORMAT} and ${BLOCK_FORMAT}`,
+    );
   const input = new ByteReader(inflateRawSync(packed));
-  const channels = input.byte();
+  const channels = format === BYTE_SET_FORMAT ? input.byte() : input.integer();
   const count = input.integer();
   const instantMs = readInstants(input, room.instants(count));
   const quality = readQuality(input, room.quality(count));
@@ -119,13 +130,20 @@ export function decodeBlock(packed: Uint8Array, format: number, room = newRoom):
     signal: read<"%">(ChannelBit.signal),
   };
   if (channels < ChannelBit.power) return { instantMs, ...water, quality };
-  return {
-    instantMs,
-    ...water,
+  const metered = {
     power: read<MeterPowerUnit>(ChannelBit.power),
     volumeCounter: read<CountedVolumeUnit>(ChannelBit.volumeCounter),
     heatingCounter: read<CountedEnergyUnit>(ChannelBit.heatingCounter),
     coolingCounter: read<CountedEnergyUnit>(ChannelBit.coolingCounter),
+  };
+  if (channels < ChannelBit.outdoor) return { instantMs, ...water, ...metered, quality };
+  return {
+    instantMs,
+    ...water,
+    ...metered,
+    outdoor: read<OutdoorUnit>(ChannelBit.outdoor),
+    electricPower: read<ElectricPowerUnit>(ChannelBit.electricPower),
+    pressure: read<LoopPressureUnit>(ChannelBit.pressure),
     quality,
   };
 }

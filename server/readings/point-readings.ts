@@ -6,7 +6,7 @@ import { fluidBlock } from "./fluid-block";
 import { ENGINE_VERSION } from "@shared/domain/energy/interval-energy";
 import type { PointCorrections } from "./point-corrections";
 import { fileSpans } from "./reading-span";
-import { ChannelBit } from "./stored-rows";
+import { ChannelBit, READING_BITS } from "./stored-rows";
 
 /** Channels of a permanent meter that say how much heat moved. */
 const meteredChannels = ChannelBit.power | ChannelBit.heatingCounter | ChannelBit.coolingCounter;
@@ -121,7 +121,7 @@ export async function refreshPointReadings(
     channels: string;
   }>(
     `SELECT COUNT(*) AS count, SUM(row_count) AS rowCount, BIT_OR(channel_set) AS channels
-       FROM reading_block WHERE point_id = :pointId`,
+       FROM reading_block WHERE point_id = :pointId AND (channel_set & ${READING_BITS}) <> 0`,
     { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
   );
   const [days] = await database.query<{

@@ -1,6 +1,7 @@
 import { QueryTypes, type Transaction } from "sequelize";
 import { trueInstantMs } from "@shared/domain/readings/corrections/clock";
 import type { Database } from "@server/database/connect";
+import { READING_BITS } from "./stored-rows";
 import type { FileCorrections } from "./point-corrections";
 
 /** First and last instant of a file's rows. */
@@ -10,7 +11,7 @@ export interface FileSpan {
   readonly lastMs: number;
 }
 
-/** When the readings of each file of a point are, by the clocks as they are corrected. */
+/** When the readings of each file of a point are, companion series aside,, by the clocks as they are corrected. */
 export async function fileSpans(
   database: Database,
   pointId: string,
@@ -19,7 +20,8 @@ export async function fileSpans(
 ): Promise<FileSpan[]> {
   const rows = await database.query<{ id: string; firstMs: string; lastMs: string }>(
     `SELECT log_file_id AS id, MIN(first_ms) AS firstMs, MAX(last_ms) AS lastMs
-       FROM reading_block WHERE point_id = :pointId GROUP BY log_file_id`,
+       FROM reading_block
+      WHERE point_id = :pointId AND (channel_set & ${READING_BITS}) <> 0 GROUP BY log_file_id`,
     { replacements: { pointId }, type: QueryTypes.SELECT, transaction },
   );
   return rows.map(({ id, firstMs, lastMs }) => {

@@ -3,8 +3,11 @@ import type {
   ColumnUnit,
   CountedEnergyUnit,
   CountedVolumeUnit,
+  ElectricPowerUnit,
   FlowUnit,
+  LoopPressureUnit,
   MeterPowerUnit,
+  OutdoorUnit,
   TemperatureUnit,
 } from "@shared/domain/log-files/recipe";
 import {
@@ -37,6 +40,10 @@ export interface StoredRows {
   readonly volumeCounter?: StoredChannel<CountedVolumeUnit> | null;
   readonly heatingCounter?: StoredChannel<CountedEnergyUnit> | null;
   readonly coolingCounter?: StoredChannel<CountedEnergyUnit> | null;
+  /** Companion series, kept beside the readings. */
+  readonly outdoor?: StoredChannel<OutdoorUnit> | null;
+  readonly electricPower?: StoredChannel<ElectricPowerUnit> | null;
+  readonly pressure?: StoredChannel<LoopPressureUnit> | null;
   readonly quality: Uint8Array;
 }
 
@@ -50,8 +57,16 @@ export const ChannelBit = {
   volumeCounter: 32,
   heatingCounter: 64,
   coolingCounter: 128,
+  outdoor: 256,
+  electricPower: 512,
+  pressure: 1024,
 } as const;
 export type ChannelName = keyof typeof ChannelBit;
+
+/** Companion series, which say nothing of flow, heat or their coverage. */
+export const COMPANION_BITS = ChannelBit.outdoor | ChannelBit.electricPower | ChannelBit.pressure;
+/** Everything else: blocks with none of these hold companions alone. */
+export const READING_BITS = ChannelBit.outdoor - 1;
 
 /** In the order in which a block holds them. */
 export const CHANNEL_NAMES = Object.keys(ChannelBit) as readonly ChannelName[];
@@ -60,7 +75,7 @@ export function channelSetOf(rows: StoredRows): number {
   return CHANNEL_NAMES.reduce((set, name) => set + (rows[name] ? ChannelBit[name] : 0), 0);
 }
 
-/** The rows in m³/h, °C, percent, kW, m³ and kWh. Their numbers are converted where they lie. */
+/** The rows in m³/h, °C, percent, kW, m³, kWh and kPa. Their numbers are converted where they lie. */
 export function inSiUnits(rows: StoredRows): ReadingColumns {
   const converted = (channel: StoredChannel<ColumnUnit> | null | undefined) =>
     channel ? convertInPlace(channel.values, channel.unit) : null;
@@ -74,6 +89,9 @@ export function inSiUnits(rows: StoredRows): ReadingColumns {
     ...(rows.volumeCounter && { volumeCounterM3: converted(rows.volumeCounter) }),
     ...(rows.heatingCounter && { heatingCounterKwh: converted(rows.heatingCounter) }),
     ...(rows.coolingCounter && { coolingCounterKwh: converted(rows.coolingCounter) }),
+    ...(rows.outdoor && { outdoorC: converted(rows.outdoor) }),
+    ...(rows.electricPower && { electricKw: converted(rows.electricPower) }),
+    ...(rows.pressure && { pressureKpa: converted(rows.pressure) }),
     quality: rows.quality,
   };
 }
@@ -114,6 +132,9 @@ export function sliceRows(rows: StoredRows, from: number, to: number): StoredRow
     ...(rows.volumeCounter && { volumeCounter: cut(rows.volumeCounter) }),
     ...(rows.heatingCounter && { heatingCounter: cut(rows.heatingCounter) }),
     ...(rows.coolingCounter && { coolingCounter: cut(rows.coolingCounter) }),
+    ...(rows.outdoor && { outdoor: cut(rows.outdoor) }),
+    ...(rows.electricPower && { electricPower: cut(rows.electricPower) }),
+    ...(rows.pressure && { pressure: cut(rows.pressure) }),
     quality: rows.quality.subarray(from, to),
   };
 }

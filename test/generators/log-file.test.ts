@@ -35,7 +35,7 @@ function answer(
       Object.assign(columns[question.columnIndex] ?? {}, {
         decimalMark: answers.marks[question.columnIndex],
       });
-    else
+    else if ("columnIndex" in question)
       Object.assign(columns[question.columnIndex] ?? {}, {
         unit: answers.units[question.columnIndex],
       });

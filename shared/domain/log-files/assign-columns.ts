@@ -1,8 +1,15 @@
 import type { ColumnEvidence } from "./column-evidence";
 import { assignMeter } from "./assign-meter";
-import { headerMeaning, isNotHeat, splitName, type HeaderMeaning } from "./header-words";
+import {
+  headerMeaning,
+  isNotHeat,
+  saysQuality,
+  splitName,
+  type HeaderMeaning,
+} from "./header-words";
+import { findPointSets } from "./point-sets";
 import type { ColumnMeaning, ColumnUnit } from "./recipe";
-import type { SampleRow } from "./recognition";
+import type { PointSet, SampleRow } from "./recognition";
 import type { HeadRecognition } from "./recognise-head";
 import { splitHeader, type UnitWord } from "./unit-words";
 import type { LoopService } from "../energy/power";
@@ -18,6 +25,10 @@ export interface Assignment {
   readonly columns: readonly ColumnAssignment[];
   /** Meanings that several columns claim, or that none does though some column could. */
   readonly asked: readonly ColumnMeaning[];
+  /** Columns of the same name that could be either of these, and nothing tells which. */
+  readonly alike: readonly number[];
+  /** Two sets of columns or more, each of another metering point; which is whose is asked. */
+  readonly pointSets: readonly PointSet[];
 }
 
 type Role =
@@ -32,6 +43,12 @@ type Role =
   | "volumeCounter"
   | "heatingCounter"
   | "coolingCounter"
+  | "velocity"
+  | "pulses"
+  | "status"
+  | "outdoor"
+  | "electricPower"
+  | "pressure"
   | "unknown"
   | "skip";
 
@@ -63,17 +80,30 @@ export function assignColumns(
     candidates.filter((candidate) => candidate.role === role);
 
   settleBareFlow(candidates);
-  nameNeutralProbes(candidates);
+  const alike = findAlikeProbes(candidates);
+  if (alike.length === 0) nameNeutralProbes(candidates);
+  const pointSets = findPointSets(candidates);
+  const inSets = new Set(pointSets.flatMap(({ columns }) => columns.map(({ index }) => index)));
+  // Which set is this point's, somebody must say; until then none is read.
+  for (const candidate of candidates) if (inSets.has(candidate.index)) candidate.role = "skip";
+  leaveSeveralOut(candidates);
 
   const flows = preferFlowUnit(withRole("flow"));
   const meter = assignMeter(candidates, flows.length > 0, context);
   asked.push(...meter.asked);
+  const speaks = flows.length > 0 || meter.saysHowMuch || pointSets.length > 0;
+  const speeds = chooseOne(withRole("velocity"), speaks);
+  const counted = chooseOne(withRole("pulses"), speaks || speeds.found);
+  if (speeds.asked) asked.push("velocity");
+  if (counted.asked) asked.push("pulses");
+  const saysHowMuch = speaks || speeds.found || counted.found;
   const open = withRole("unknown").length > 0 || withRole("someTemperature").length > 0;
   const temperaturesFound = withRole("supply").length + withRole("return").length;
-  const flowLacks = flows.length === 0 && !meter.saysHowMuch;
+  const flowLacks = !saysHowMuch;
   if (flows.length > 1 || (flowLacks && (open || temperaturesFound === 0))) asked.push("flow");
   for (const role of ["supply", "return"] as const) {
     const found = withRole(role).length;
+    if (alike.length > 0 || pointSets.length > 0) continue;
     // Temperatures may stand in a file of their own; only columns nobody has named could be them.
     if (
       found > 1 ||
@@ -97,15 +127,48 @@ export function assignColumns(
       role === "flow"
         ? kept.has(candidate)
         : role === "signal" ||
-          METER_ROLES.has(role) ||
+          OWN_ROLES.has(role) ||
           ((role === "supply" || role === "return") && !asked.includes(role));
     if (!isSettled) return { meaning: "skip", unit: null, certainty: "likely" };
     return { meaning: role as ColumnMeaning, unit: role === "signal" ? "%" : unit, certainty };
   });
-  return { columns, asked };
+  return { columns, asked, alike, pointSets };
 }
 
-const METER_ROLES: ReadonlySet<Role> = new Set<Role>([
+/** Of several columns that say how much moved, none is read before somebody chooses. */
+function chooseOne(
+  found: readonly Candidate[],
+  isNeedless: boolean,
+): { readonly found: boolean; readonly asked: boolean } {
+  const several = found.length > 1;
+  if (isNeedless || several) for (const candidate of found) candidate.role = "skip";
+  return { found: found.length > 0, asked: several && !isNeedless };
+}
+
+/** Companions and status words stand beside the readings: of several, none is proposed. */
+function leaveSeveralOut(candidates: readonly Candidate[]): void {
+  for (const role of ["status", "outdoor", "electricPower", "pressure"] as const) {
+    const found = candidates.filter((candidate) => candidate.role === role);
+    if (found.length > 1) for (const candidate of found) candidate.role = "skip";
+  }
+}
+
+/** Probes of one name: "T" twice is supply and return, and nothing says in which order. */
+function findAlikeProbes(candidates: readonly Candidate[]): readonly number[] {
+  const probes = candidates.filter(({ role }) => role === "someTemperature");
+  const named = candidates.some(({ role }) => role === "supply" || role === "return");
+  const [first] = probes;
+  const isAlike = probes.length > 1 && probes.every(({ name }) => name === first?.name);
+  return isAlike && !named ? probes.map(({ index }) => index) : [];
+}
+
+const OWN_ROLES: ReadonlySet<Role> = new Set<Role>([
+  "velocity",
+  "pulses",
+  "status",
+  "outdoor",
+  "electricPower",
+  "pressure",
   "power",
   "volumeCounter",
   "heatingCounter",
@@ -126,10 +189,13 @@ function candidateOf(head: HeadRecognition, column: ColumnEvidence, index: numbe
   const words = splitName(name);
   const said = headerMeaning(name);
   const hasNumbers = column.numbers > 0 && column.numbers >= column.texts;
-  const role =
-    timeMeaning(head, index) === null && hasNumbers
-      ? roleOf(said, unitFound, column, name)
-      : "skip";
+  const role = timeMeaning(head, index) !== null ? "skip" : roleByCells();
+  function roleByCells(): Role {
+    if (said?.meaning === "status" || (!hasNumbers && saysQuality(name)))
+      // One and the same word in all rows tells none of them apart.
+      return column.words.counts.length > 1 && !column.words.isFull ? "status" : "skip";
+    return hasNumbers ? roleOf(said, unitFound, column, name) : "skip";
+  }
   return {
     index,
     role,
@@ -147,6 +213,8 @@ function roleOf(
   name: string,
 ): Role {
   const meaning = said?.meaning;
+  const beside = besideRole(meaning, unit);
+  if (beside !== null) return beside;
   const meterRole = unit === null || isNotHeat(name) ? null : meterRoleOf(unit);
   if (meterRole !== null) return meterRole;
   if (meaning === "known") return "skip";
@@ -157,7 +225,11 @@ function roleOf(
     case "L/s":
     case "L/min":
     case "US gpm":
+    case "L/h":
       return "flow";
+    case "m/s":
+    case "ft/s":
+      return meaning === undefined || meaning === "flow" ? "velocity" : "skip";
     case "degC":
     case "degF":
     case "K":
@@ -170,13 +242,43 @@ function roleOf(
       return meaning === "signal" ? "signal" : "skip";
     case undefined:
       break;
+    case "kW":
+    case "W":
+      // Power of something that is no heat of the loop.
+      return "electricPower";
     default:
-      // Power or energy of something that is no heat of the loop.
       return "skip";
   }
+  if (meaning === "velocity" || meaning === "outdoor") return meaning;
+  if (meaning === "pulses") return column.pointProof || column.commaProof ? "skip" : "pulses";
+  // A companion is only read where its unit is known.
+  if (meaning === "status" || meaning === "electricPower" || meaning === "pressure") return "skip";
   if (meaning === "signal") return isPercent(column) ? "signal" : "skip";
   if (meaning === "time" || meaning === "date" || meaning === "timeOfDay") return "skip";
   return meaning ?? "unknown";
+}
+
+/** The role of a column that is neither flow, temperature nor a meter's; null for all others. */
+function besideRole(
+  meaning: NonNullable<HeaderMeaning>["meaning"] | undefined,
+  unit: UnitWord | null,
+): Role | null {
+  if (unit === null) return null;
+  const ours = unit.unit;
+  switch (meaning) {
+    case "velocity":
+      return ours === "m/s" || ours === "ft/s" ? "velocity" : "skip";
+    case "pulses":
+      return ours === null && unit.other === "other" ? "pulses" : null;
+    case "outdoor":
+      return ours === "degC" || ours === "degF" ? "outdoor" : "skip";
+    case "electricPower":
+      return ours === "kW" || ours === "W" ? "electricPower" : "skip";
+    case "pressure":
+      return ours === "kPa" || ours === "bar" || ours === "psi" ? "pressure" : "skip";
+    default:
+      return null;
+  }
 }
 
 function meterRoleOf(unit: UnitWord): "power" | "volume" | "energy" | null {

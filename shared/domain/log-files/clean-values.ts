@@ -57,6 +57,8 @@ function blankChannel(
   choice: RepairChoices["sentinels"],
   sentinels: Tally,
 ): Float64Array {
+  // Places of words are no readings.
+  if (channel.meaning === "status") return channel.values;
   // A counter rests at any number, and at its last one for as long as nothing moves.
   const extremes = isCounter(channel.meaning)
     ? []

@@ -2,6 +2,7 @@ import { CellStatus, NumberCell } from "./number-cell";
 import type { DecimalMark } from "./recipe";
 import type { RowTokeniser } from "./row-tokeniser";
 import { isNumericSentinel, looksLikeEndStop, LOWEST_USUAL } from "./sentinels";
+import { WordList } from "./status-words";
 
 /** A cell that shows something, and where it stands. */
 export interface Place {
@@ -43,6 +44,10 @@ export class ColumnEvidence {
   texts = 0;
   /** Tokens and numbers that mean "no reading", by how they are named. */
   readonly tokens = new Map<string, number>();
+  /** Words that are no numbers, in the order they come. */
+  readonly words = new WordList();
+  /** The column's header says that it holds words, even where they are figures. */
+  holdsWords = false;
 
   private readonly sure = new Extremes();
   private readonly ifDecimal = new Extremes();
@@ -53,6 +58,10 @@ export class ColumnEvidence {
   add(row: RowTokeniser, index: number): void {
     const from = row.starts[index] as number;
     const to = row.ends[index] as number;
+    if (this.holdsWords) {
+      this.addWord(row, from, to);
+      return;
+    }
     if (this.addUsual(row.buffer, from, to)) return;
     const kind = markKind(row.buffer, from, to);
     if (kind === MarkKind.noNumber) {
@@ -102,6 +111,7 @@ export class ColumnEvidence {
    * {@link takeUsual}. Returns where the number ends, or -1 where there is no usual one.
    */
   readUsual(bytes: Uint8Array, from: number): number {
+    if (this.holdsWords) return -1;
     const mark = this.provedMark;
     let at = from;
     const negative = bytes[at] === MINUS;
@@ -133,7 +143,21 @@ export class ColumnEvidence {
   private addOther(row: RowTokeniser, index: number, from: number, to: number): void {
     const status = this.number.parse(row.buffer, from, to, ".");
     if (status === CellStatus.empty) this.empties++;
+    else if (status === CellStatus.token) {
+      this.countToken(this.number.text);
+      this.words.add(row.buffer, from, to);
+    } else {
+      this.texts++;
+      this.words.add(row.buffer, from, to);
+    }
+  }
+
+  private addWord(row: RowTokeniser, from: number, to: number): void {
+    this.words.add(row.buffer, from, to);
+    const status = this.number.parse(row.buffer, from, to, ".");
+    if (status === CellStatus.empty) this.empties++;
     else if (status === CellStatus.token) this.countToken(this.number.text);
+    else if (status === CellStatus.number) this.numbers++;
     else this.texts++;
   }
 

@@ -1,6 +1,6 @@
 import { KW_PER, KWH_PER } from "../units/energy-and-power";
 import { M3_PER_HOUR_PER } from "../units/flow";
-import { M3_PER } from "../units/size-and-pressure";
+import { M3_PER, M_PER_S_PER, MPA_PER } from "../units/size-and-pressure";
 import { columnToCelsius } from "../units/temperature";
 import type { ChannelMeaning } from "./raw-rows";
 import type {
@@ -8,12 +8,17 @@ import type {
   ColumnUnit,
   CountedEnergyUnit,
   CountedVolumeUnit,
+  ElectricPowerUnit,
   FlowUnit,
+  LoopPressureUnit,
   MeterPowerUnit,
+  OutdoorUnit,
   TemperatureUnit,
+  VelocityUnit,
 } from "./recipe";
 
-export const FLOW_UNITS: readonly FlowUnit[] = ["m3/h", "L/s", "L/min", "US gpm"];
+export const FLOW_UNITS: readonly FlowUnit[] = ["m3/h", "L/s", "L/min", "US gpm", "L/h"];
+export const VELOCITY_UNITS: readonly VelocityUnit[] = ["m/s", "ft/s"];
 export const TEMPERATURE_UNITS: readonly TemperatureUnit[] = ["degC", "degF", "K"];
 export const METER_POWER_UNITS: readonly MeterPowerUnit[] = ["kW", "MW", "W", "MBH", "ton"];
 export const COUNTED_VOLUME_UNITS: readonly CountedVolumeUnit[] = ["m3", "L", "US gal", "ft3"];
@@ -26,6 +31,10 @@ export const COUNTED_ENERGY_UNITS: readonly CountedEnergyUnit[] = [
   "MMBtu",
 ];
 
+export const OUTDOOR_UNITS: readonly OutdoorUnit[] = ["degC", "degF"];
+export const ELECTRIC_POWER_UNITS: readonly ElectricPowerUnit[] = ["kW", "W"];
+export const PRESSURE_UNITS: readonly LoopPressureUnit[] = ["kPa", "bar", "psi"];
+
 const UNITS_OF: Readonly<Record<ChannelMeaning, readonly ColumnUnit[]>> = {
   flow: FLOW_UNITS,
   supply: TEMPERATURE_UNITS,
@@ -35,6 +44,13 @@ const UNITS_OF: Readonly<Record<ChannelMeaning, readonly ColumnUnit[]>> = {
   volumeCounter: COUNTED_VOLUME_UNITS,
   heatingCounter: COUNTED_ENERGY_UNITS,
   coolingCounter: COUNTED_ENERGY_UNITS,
+  velocity: VELOCITY_UNITS,
+  // Of volume, for one pulse.
+  pulses: COUNTED_VOLUME_UNITS,
+  status: [],
+  outdoor: OUTDOOR_UNITS,
+  electricPower: ELECTRIC_POWER_UNITS,
+  pressure: PRESSURE_UNITS,
 };
 
 export function isChannelMeaning(meaning: ColumnMeaning): meaning is ChannelMeaning {
@@ -46,9 +62,21 @@ export function unitsOfMeaning(meaning: ColumnMeaning): readonly ColumnUnit[] {
   return isChannelMeaning(meaning) ? UNITS_OF[meaning] : [];
 }
 
-/** The unit in which readings of this meaning are worked with. */
+/** The unit in which readings of this meaning are worked with; "%" for those that have none. */
 export function storedUnitOf(meaning: ChannelMeaning): ColumnUnit {
-  return UNITS_OF[meaning][0] as ColumnUnit;
+  return UNITS_OF[meaning][0] ?? "%";
+}
+
+/** Meanings whose columns are kept beside the readings and never enter energy. */
+export type CompanionMeaning = "outdoor" | "electricPower" | "pressure";
+
+export function isCompanion(meaning: ColumnMeaning): meaning is CompanionMeaning {
+  return meaning === "outdoor" || meaning === "electricPower" || meaning === "pressure";
+}
+
+/** Whether a column of this meaning must have a unit; signals are percent, words have none. */
+export function needsUnit(meaning: ColumnMeaning): meaning is ChannelMeaning {
+  return isChannelMeaning(meaning) && meaning !== "signal" && meaning !== "status";
 }
 
 export function isCounter(
@@ -81,6 +109,9 @@ const FACTOR: Readonly<Partial<Record<ColumnUnit, number>>> = {
   GJ: KWH_PER.GJ,
   kBtu: KWH_PER.kBtu,
   MMBtu: KWH_PER.MMBtu,
+  "ft/s": M_PER_S_PER["ft/s"],
+  bar: MPA_PER.bar / MPA_PER.kPa,
+  psi: MPA_PER.psi / MPA_PER.kPa,
 };
 
 /** A value of a scale with a true zero (power, volume, energy, flow) in the unit it is worked with. */
@@ -94,7 +125,7 @@ export function columnToStoredUnit(values: Float64Array, unit: ColumnUnit): Floa
 }
 
 const STORED: ReadonlySet<ColumnUnit> = new Set(
-  Object.values(UNITS_OF).map(([unit]) => unit as ColumnUnit),
+  Object.values(UNITS_OF).flatMap(([unit]) => unit ?? []),
 );
 
 /** Converts a whole column as {@link columnToStoredUnit} does, where it lies. NaN stays NaN. */

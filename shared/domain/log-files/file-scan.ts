@@ -1,5 +1,6 @@
 import { CalendarCell } from "./calendar-cell";
 import { ColumnEvidence } from "./column-evidence";
+import { headerMeaning } from "./header-words";
 import { CellStatus, NumberCell } from "./number-cell";
 import { PlainScan, type PlainScanRows } from "./plain-scan";
 import type { HeadRecognition } from "./recognise-head";
@@ -7,6 +8,7 @@ import type { SampleRow } from "./recognition";
 import { MAX_CELLS, RowTokeniser } from "./row-tokeniser";
 import { createUtf8Stream, utf8Validity } from "./text-encoding";
 import { TimeEvidence } from "./time-evidence";
+import { splitHeader } from "./unit-words";
 
 /** What one pass over all bytes of a file found; see {@link createFileScan}. */
 export interface ScanResult {
@@ -74,7 +76,12 @@ class Scan implements FileScan, PlainScanRows {
   private lastBuffer: Uint8Array = EMPTY;
 
   constructor(private readonly head: HeadRecognition) {
-    this.columns = Array.from({ length: head.columnCount }, () => new ColumnEvidence());
+    this.columns = Array.from({ length: head.columnCount }, (_, i) => {
+      const column = new ColumnEvidence();
+      const { name } = splitHeader(head.header.headers[i] ?? "");
+      column.holdsWords = headerMeaning(name)?.meaning === "status";
+      return column;
+    });
     // Quotes may first appear far below the head, so they are always looked for.
     const quote = head.dialect.quote ?? '"';
     this.quote = quote.charCodeAt(0);

@@ -1,9 +1,11 @@
 import type { LoopService } from "../energy/power";
 import { assignColumns, type ColumnAssignment } from "./assign-columns";
-import { FLOW_UNITS, isChannelMeaning, unitsOfMeaning } from "./column-units";
+import { FLOW_UNITS, needsUnit, unitsOfMeaning } from "./column-units";
 import { findDecimalMarks, type MarkFinding } from "./decimal-marks";
+import type { ColumnEvidence } from "./column-evidence";
 import type { ScanResult } from "./file-scan";
 import { saysMean, seriesKindOf, splitName } from "./header-words";
+import { statusWordsOf } from "./status-words";
 import { preambleClock } from "./preamble-clock";
 import { guessTemperatureUnit } from "./temperature-guess";
 import type { ColumnRecipe, LoggerClock, MeterRecipe, TimeRecipe } from "./recipe";
@@ -26,12 +28,17 @@ export function finishRecognition(
   const halfDay = scan.time.halfDayUnknown();
   if (halfDay !== null) return { code: "halfDayUnknown", line: halfDay.line, cell: halfDay.cell };
 
-  const { columns: assigned, asked } = assignColumns(head, scan.columns, {
+  const {
+    columns: assigned,
+    asked,
+    alike,
+    pointSets,
+  } = assignColumns(head, scan.columns, {
     sampleRows: scan.sampleRows,
     service,
   });
   const temperatures = assigned.flatMap((column, i) =>
-    column.meaning === "supply" || column.meaning === "return" ? [i] : [],
+    isTemperature(column.meaning) || alike.includes(i) ? [i] : [],
   );
   const marks = findDecimalMarks(
     scan.columns,
@@ -49,6 +56,13 @@ export function finishRecognition(
   const questions: Question[] = [];
   const proofs: Proof[] = headProofs(head);
   const time = settleTime(head, scan, proofs, questions);
+  if (pointSets.length > 0) questions.push({ code: "whichSet", sets: pointSets });
+  if (alike.length > 0)
+    questions.push({
+      code: "alikeColumns",
+      columnIndexes: alike,
+      meanings: ["supply", "return"],
+    });
   for (const meaning of asked) questions.push({ code: "columnMeaning", meaning });
   const withUnits = columns.map((column) =>
     settleColumn(
@@ -60,7 +74,10 @@ export function finishRecognition(
       questions,
     ),
   );
-  const seriesKind = seriesKindOf(head.header.headers);
+  const counts = withUnits.some(({ meaning }) => meaning === "pulses");
+  // Pulses are counted over a step, which ends with the row unless a header says otherwise.
+  const seriesKind =
+    seriesKindOf(head.header.headers) ?? (counts ? ("meanToLabel" as const) : null);
   if (seriesKind === null) questions.push(...kindQuestion(withUnits));
   const meter = meterOf(withUnits, service);
   if (meter?.positivePower === null) questions.push(...powerQuestion(withUnits, scan, service));
@@ -98,7 +115,22 @@ export function finishRecognition(
     dataRowCount: scan.dataRowCount,
     columnCount: head.columnCount,
     preamble: head.header.preamble,
+    words: wordsOf(scan),
+    pointSets,
   };
+}
+
+function isTemperature(meaning: ColumnRecipe["meaning"]): boolean {
+  return meaning === "supply" || meaning === "return" || meaning === "outdoor";
+}
+
+/** Words of each column that holds a few different ones. */
+function wordsOf({ columns }: ScanResult): NonNullable<Recognition["words"]> {
+  return columns.flatMap(({ words }, columnIndex) => {
+    if (words.counts.length === 0 || words.isFull) return [];
+    const counts = Object.fromEntries(words.words.map((word, i) => [word, words.counts[i] ?? 0]));
+    return [{ columnIndex, counts }];
+  });
 }
 
 /** Rows that a header calls means, and no header says of which step: never taken for moments. */
@@ -108,7 +140,13 @@ function kindQuestion(columns: readonly ColumnRecipe[]): Question[] {
 }
 
 function isRate(meaning: ColumnRecipe["meaning"]): boolean {
-  return meaning === "flow" || meaning === "supply" || meaning === "return" || meaning === "power";
+  return (
+    meaning === "flow" ||
+    meaning === "velocity" ||
+    meaning === "supply" ||
+    meaning === "return" ||
+    meaning === "power"
+  );
 }
 
 /** In a changeover loop both temperatures tell heating from cooling; without them somebody must. */
@@ -161,6 +199,10 @@ function settleTime(
     return { format: { kind: head.times.kind }, clock };
   const columnIndex = head.times.kind === "split" ? head.times.dateIndex : head.times.index;
   const { candidates, proof, stepSeconds } = scan.time.order();
+  const { shortYear } = scan.time;
+  // A year of two digits is one from 1970 to 2069: likely, and for somebody to see.
+  if (shortYear !== null)
+    proofs.push({ about: "century", columnIndex, ...shortYear, certainty: "likely" });
   const [only] = candidates;
   if (candidates.length === 1 && only !== undefined) {
     proofs.push({
@@ -201,6 +243,17 @@ function settleColumn(
 ): ColumnRecipe {
   const { index, meaning } = column;
   if (meaning === "skip") return column;
+  if (meaning === "status") {
+    const { words, counts } = (scan.columns[index] as ColumnEvidence).words;
+    const found = Object.fromEntries(words.map((word, i) => [word, counts[i] ?? 0]));
+    questions.push({
+      code: "statusWords",
+      columnIndex: index,
+      words: statusWordsOf(found),
+    });
+    return column;
+  }
+  if (meaning === "velocity") questions.push({ code: "pointBore", columnIndex: index });
   const place = {
     columnIndex: index,
     line: null,
@@ -227,6 +280,11 @@ function settleColumn(
     });
 
   const range = scan.columns[index]?.range(column.decimalMark) ?? null;
+  if (meaning === "pulses") {
+    const [minValue, maxValue] = [range?.min ?? 0, range?.max ?? 0];
+    questions.push({ code: "pulseValue", columnIndex: index, minValue, maxValue });
+    return column;
+  }
   if (meaning === "flow" && column.unit === null) {
     questions.push({
       code: "flowUnit",
@@ -249,7 +307,12 @@ function settleColumn(
     else proofs.push({ about: "columnUnit", ...place, certainty: "likely" });
     return { ...column, unit };
   }
-  if (column.unit === null && isChannelMeaning(meaning) && meaning !== "signal") {
+  if (column.unit === null && meaning === "outdoor") {
+    const [minValue, maxValue] = [range?.min ?? 0, range?.max ?? 0];
+    questions.push({ code: "temperatureUnit", columnIndex: index, minValue, maxValue });
+    return column;
+  }
+  if (column.unit === null && needsUnit(meaning)) {
     questions.push({
       code: "columnUnit",
       columnIndex: index,

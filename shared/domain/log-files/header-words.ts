@@ -7,10 +7,14 @@ export type HeaderMeaning =
       readonly meaning: "flow" | "supply" | "return" | "signal";
       readonly certainty: "proved" | "likely";
     }
+  | {
+      readonly meaning: "velocity" | "pulses" | "status" | "outdoor" | "electricPower" | "pressure";
+      readonly certainty: "likely";
+    }
   /** A temperature probe without a role: T1, Temp 2, Probe A. */
   | { readonly meaning: "someTemperature"; readonly certainty: "likely" }
   | { readonly meaning: "time" | "date" | "timeOfDay"; readonly certainty: "likely" }
-  /** Something we know and do not read: power, totals, outdoor temperature. */
+  /** Something we know and do not read: totals, differences, speed of sound. */
   | { readonly meaning: "known"; readonly certainty: "likely" }
   | null;
 
@@ -32,10 +36,23 @@ const TEMPERATURE = words(
 const OTHER = words(
   "total totalizer totaliser totaliser summe sum sumflow zähler zaehler counter cumul cumulative kumuliert volume volumen power leistung puissance " +
     "heat heatflow wärme waerme wärmemenge energy energie énergie delta dt deltat diff difference differenz spreizung écart " +
-    "outdoor outside ambient außen aussen außentemperatur aussentemperatur extérieure room raum velocity speed geschwindigkeit vitesse " +
-    "density dichte pressure druck pression err error status fehler state alarm flag battery batterie batt voltage record index nr no id row " +
-    "gain sos pump pumpe valve ventil setpoint sollwert humidity comment bemerkung note remark kanal position",
+    "room raum density dichte battery batterie batt voltage record index nr no id row " +
+    "gain sos sound schall schallgeschwindigkeit wind humidity feuchte pump pumpe valve ventil setpoint sollwert comment bemerkung note remark kanal position",
 );
+const OUTDOOR = words(
+  "outdoor outside ambient außen aussen außentemperatur aussentemperatur außenluft aussenluft extérieure extérieur oat",
+);
+const PRESSURE = words("pressure druck betriebsdruck anlagendruck netzdruck pression");
+const VELOCITY = words(
+  "velocity speed geschwindigkeit strömungsgeschwindigkeit stroemungsgeschwindigkeit fließgeschwindigkeit fliessgeschwindigkeit vitesse",
+);
+const PULSES = words(
+  "pulse pulses pulsecount impuls impulse impulsanzahl imp impulsion impulsions",
+);
+const QUALITY = words("quality qualität qualitaet qualité signalqualität signalqualitaet");
+const STATUS = words("status state zustand flag flags statuscode état etat");
+/** Words of a column that may hold readings of an error as well as words for it. */
+const ERROR = words("err error fehler alarm");
 /** Power and energy of these are no heat of the loop. */
 const NOT_HEAT = words(
   "pump pumpe pompe electric electrical electricity elektrisch strom stromverbrauch electrique électrique " +
@@ -47,6 +64,12 @@ const HEATING = words(
 const COOLING = words(
   "cooling cool cold kälte kaelte kühlen kühlung kälteenergie kältemenge chilled froid refroidissement",
 );
+const POWER = words("power leistung puissance wirkleistung stromaufnahme");
+/** Words beside outdoor, pressure or speed that make something else of them. */
+const NOT_COMPANION = words(
+  "humidity feuchte delta diff difference differenz differential differenzdruck dp sound schall sos wind co2 setpoint sollwert lux radiation",
+);
+const QUANTITY_BESIDE = words("rate strength stärke water wasser q c f k value wert");
 const MEAN = words("mean avg average mittel mittelwert moyenne moy");
 const TIME = words(
   "timestamp datetime zeitstempel horodatage zeitpunkt time zeit uhrzeit heure datetimestamp datumzeit epoch unixtime unix local utc",
@@ -56,8 +79,11 @@ const DATE = words("date datum tag jour day");
 /** @param name the header without its unit */
 export function headerMeaning(name: string): HeaderMeaning {
   const parts = splitName(name);
-  const has = (set: ReadonlySet<string>): boolean => parts.some((part) => set.has(part));
+  const has = (set: ReadonlySet<string>): boolean =>
+    parts.some((part) => set.has(part) || set.has(stemOf(part)));
   if (parts.length === 0) return null;
+  const besideWater = companionMeaning(parts, has);
+  if (besideWater !== null) return { meaning: besideWater, certainty: "likely" };
   if (has(OTHER) && !has(SIGNAL)) return { meaning: "known", certainty: "likely" };
   if (has(SIGNAL)) return { meaning: "signal", certainty: "proved" };
   const temperature = has(TEMPERATURE);
@@ -75,6 +101,48 @@ export function headerMeaning(name: string): HeaderMeaning {
   if (has(DATE)) return { meaning: "date", certainty: "likely" };
   if (has(TIME)) return { meaning: "time", certainty: "likely" };
   return null;
+}
+
+/** What a column holds that is no temperature or flow of the loop; null for those and all others. */
+function companionMeaning(
+  parts: readonly string[],
+  has: (set: ReadonlySet<string>) => boolean,
+): "velocity" | "pulses" | "status" | "outdoor" | "electricPower" | "pressure" | null {
+  if (has(STATUS) || (has(ERROR) && parts.length === 1)) return "status";
+  if (has(PULSES)) return "pulses";
+  const isOther = has(NOT_COMPANION);
+  if (has(OUTDOOR)) return isOther || has(PRESSURE) ? null : "outdoor";
+  if (isOther || has(SUPPLY) || has(RETURN)) return null;
+  if (has(PRESSURE)) return "pressure";
+  if (has(VELOCITY)) return has(NOT_HEAT) ? null : "velocity";
+  return has(NOT_HEAT) && has(POWER) ? "electricPower" : null;
+}
+
+/** flow2 is a flow. A single letter with a number is left whole: T1, Q2. */
+export function stemOf(part: string): string {
+  const stem = part.replace(/\d+$/, "");
+  return stem.length > 1 ? stem : part;
+}
+
+/** Whether a word only says which quantity a column holds, and not whose. */
+export function saysQuantity(part: string): boolean {
+  return [
+    SUPPLY,
+    RETURN,
+    FLOW,
+    SIGNAL,
+    TEMPERATURE,
+    VELOCITY,
+    PULSES,
+    POWER,
+    MEAN,
+    QUANTITY_BESIDE,
+  ].some((set) => set.has(part));
+}
+
+/** Whether a header names a quality, which is a number to some loggers and a word to others. */
+export function saysQuality(name: string): boolean {
+  return splitName(name).some((part) => QUALITY.has(part) || ERROR.has(part));
 }
 
 /** Whether a column of power or energy is something else's than the loop's heat. */

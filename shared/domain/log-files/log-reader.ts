@@ -99,13 +99,14 @@ class Reader implements LogReader {
       line: lines.subarray(0, rowCount),
       timeMs: timeMs.subarray(0, rowCount),
       isUtc: isUtc.subarray(0, rowCount),
-      channels: channels.map(({ column, decimals, values }) => ({
+      channels: channels.map(({ column, decimals, values, words }) => ({
         meaning: column.meaning as ChannelMeaning,
         columnIndex: column.index,
         header: column.header,
         unit: column.unit,
         decimals,
         values: values.subarray(0, rowCount),
+        ...(words && { words: words.words }),
       })),
       problems: this.problems,
       problemCount: this.problemCount,
@@ -146,6 +147,14 @@ class Reader implements LogReader {
       channel.values[at] = NaN;
       if (index >= cellCount) {
         isShort = true;
+        continue;
+      }
+      if (channel.words !== null) {
+        channel.values[at] = channel.words.add(
+          buffer,
+          starts[index] as number,
+          ends[index] as number,
+        );
         continue;
       }
       const status = number.parse(

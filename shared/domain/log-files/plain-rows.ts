@@ -82,6 +82,8 @@ export class PlainRows implements RowsAhead {
       time.format.kind === "calendar" &&
       times + Math.sign(splits) === 1 &&
       splits <= 2 &&
+      // Words are read with care, even where they are figures.
+      !columns.some(({ meaning }) => meaning === "status") &&
       channels < 100
     );
   }

@@ -10,7 +10,13 @@ export type ChannelMeaning =
   | "power"
   | "volumeCounter"
   | "heatingCounter"
-  | "coolingCounter";
+  | "coolingCounter"
+  | "velocity"
+  | "pulses"
+  | "status"
+  | "outdoor"
+  | "electricPower"
+  | "pressure";
 
 /** One channel as the file has it: original unit, original decimals, file order; NaN where no number stands. */
 export interface RawChannel {
@@ -22,6 +28,8 @@ export interface RawChannel {
   /** Most digits after the decimal mark in any cell: values × 10^decimals are whole. */
   readonly decimals: number;
   readonly values: Float64Array;
+  /** Only of a status column: its words, whose places in this list are the values. */
+  readonly words?: readonly string[];
 }
 
 /** Cells or rows of one kind: all counted, a few shown. */

@@ -12,6 +12,8 @@ export interface FileRecipe {
   readonly seriesKind: SeriesKind;
   /** Somebody chose the kind, though the header says otherwise. */
   readonly kindChosen?: boolean;
+  /** Somebody left out all columns that nothing tells apart. */
+  readonly alikeChosen?: boolean;
   /** Only for files of a permanent meter. */
   readonly meter?: MeterRecipe;
 }
@@ -49,16 +51,37 @@ export type ColumnMeaning =
   | "volumeCounter"
   | "heatingCounter"
   | "coolingCounter"
+  /** Water speed; flow once it is multiplied with the point's bore. */
+  | "velocity"
+  /** Pulses counted since the row before; flow once their worth is known. */
+  | "pulses"
+  /** Words of the logger about the row, some of which mean a bad reading. */
+  | "status"
+  /** Companion series: kept beside the readings, never part of energy. */
+  | "outdoor"
+  | "electricPower"
+  | "pressure"
   | "skip";
 
-export type FlowUnit = "m3/h" | "L/s" | "L/min" | "US gpm";
+export type FlowUnit = "m3/h" | "L/s" | "L/min" | "US gpm" | "L/h";
+export type VelocityUnit = "m/s" | "ft/s";
+export type OutdoorUnit = "degC" | "degF";
+export type ElectricPowerUnit = "kW" | "W";
+export type LoopPressureUnit = "kPa" | "bar" | "psi";
 export type TemperatureUnit = "degC" | "degF" | "K";
 /** MBH is a thousand Btu an hour, ton a ton of refrigeration. */
 export type MeterPowerUnit = "kW" | "MW" | "W" | "MBH" | "ton";
 export type CountedVolumeUnit = "m3" | "L" | "US gal" | "ft3";
 export type CountedEnergyUnit = "kWh" | "MWh" | "MJ" | "GJ" | "kBtu" | "MMBtu";
 export type ColumnUnit =
-  FlowUnit | TemperatureUnit | "%" | MeterPowerUnit | CountedVolumeUnit | CountedEnergyUnit;
+  | FlowUnit
+  | VelocityUnit
+  | TemperatureUnit
+  | "%"
+  | MeterPowerUnit
+  | CountedVolumeUnit
+  | CountedEnergyUnit
+  | LoopPressureUnit;
 
 export type DecimalMark = "." | ",";
 
@@ -73,6 +96,10 @@ export interface ColumnRecipe {
   readonly decimalMark: DecimalMark;
   /** Where a counter starts from zero again, in the column's unit; null or left out where unknown. */
   readonly capacity?: number | null;
+  /** What one pulse stands for, in the column's unit of volume; null or left out while it is asked. */
+  readonly pulseValue?: number | null;
+  /** Words of a status column that mean a bad reading; left out while it is asked. */
+  readonly badWords?: readonly string[];
 }
 
 export type DateOrder = "dayMonthYear" | "monthDayYear" | "yearMonthDay";
@@ -87,6 +114,8 @@ export type TimeFormat =
 /** Which clock the logger was set to. Ignored for cells that carry their own offset, and for epochs. */
 export type LoggerClock =
   | { readonly kind: "site" }
+  /** The site's winter time all year: no summer time, no repeated and no missing hour. */
+  | { readonly kind: "siteStandard" }
   | { readonly kind: "utc" }
   | { readonly kind: "fixedOffset"; readonly offsetMinutes: number }
   | { readonly kind: "zone"; readonly zone: string };
@@ -95,6 +124,14 @@ export interface TimeRecipe {
   readonly format: TimeFormat;
   /** Null until somebody says; never needed when every cell carries its own offset or the format is an epoch. */
   readonly clock: LoggerClock | null;
+  /** What the logger's clock and a right one showed at start and end, UTC (ISO 8601). Of one file only. */
+  readonly notes?: readonly ClockReading[];
+}
+
+export interface ClockReading {
+  /** What the logger showed, read as its rows are. */
+  readonly loggerAt: string;
+  readonly rightAt: string;
 }
 
 /** What to do with each kind of defect. A null is a question that stops the import when the defect occurs. */
@@ -114,6 +151,10 @@ export interface RepairChoices {
   readonly weakSignalBelowPercent: number;
   /** Instants that an earlier import of this point already holds with other values. */
   readonly overlap: "keepEarlier" | "useThis" | null;
+  /** What is done about what the readings show: a finding's key to the key of one of its choices. */
+  readonly findings?: Readonly<Record<string, string>>;
+  /** Spans of a chosen exclusion that stay in, by finding; named by their first instant, ISO 8601. */
+  readonly keptSpans?: Readonly<Record<string, readonly string[]>>;
 }
 
 export const DEFAULT_REPAIR_CHOICES: RepairChoices = {

@@ -157,7 +157,7 @@ describe("what nothing in the file proves", () => {
       columnIndex: 1,
       minValue: 6.7,
       maxValue: 6.72,
-      choices: ["m3/h", "L/s", "L/min", "US gpm"],
+      choices: ["m3/h", "L/s", "L/min", "US gpm", "L/h"],
     });
     // T1 and T2 are taken in order, as a guess; 6 to 9 can only be °C.
     expect(recipe.columns.map(({ meaning }) => meaning)).toEqual([
@@ -194,8 +194,11 @@ describe("what nothing in the file proves", () => {
 
   it("asks which of two flows is meant, and never takes imperial gallons for US gallons", () => {
     expect(recognised("not-ok/two-flows.csv").questions[0]).toEqual({
-      code: "columnMeaning",
-      meaning: "flow",
+      code: "whichSet",
+      sets: [
+        { name: "1", columns: [{ index: 1, meaning: "flow", unit: "m3/h" }] },
+        { name: "2", columns: [{ index: 2, meaning: "flow", unit: "m3/h" }] },
+      ],
     });
     expect(recognised("not-ok/imperial-gallons.csv").questions[0]).toMatchObject({
       code: "flowUnit",

@@ -30,6 +30,10 @@ export type RepairStepCode =
   | "counterReset"
   | "counterJump"
   | "counterExchange"
+  | "velocityTimesBore"
+  | "pulsesToFlow"
+  | "pulseOpening"
+  | "badStatus"
   | "footer";
 
 export interface RowExample {

@@ -11,15 +11,26 @@ import {
   type RawRows,
   type Tally,
 } from "./raw-rows";
-import type { ColumnUnit, FileRecipe, RepairChoices } from "./recipe";
+import type {
+  ColumnUnit,
+  CountedVolumeUnit,
+  FileRecipe,
+  RepairChoices,
+  VelocityUnit,
+} from "./recipe";
 import type { Gap, RepairStep, RepairStepCode, RowExample } from "./repair-step";
 import { unitQuestionOf } from "./open-questions";
 import { resolveTimes } from "./resolve-times";
+import { flowFromPulses, flowFromVelocity, type BoreSpan, type DerivedFlow } from "./water-flow";
 
 /** A choice that must be made before the rows can be stored. */
 export type RepairQuestion =
   | { readonly code: "loggerClock" }
   | { readonly code: "flowUnit" | "temperatureUnit" | "columnUnit"; readonly columnIndex: number }
+  | {
+      readonly code: "pulseValue" | "statusWords" | "pointBore";
+      readonly columnIndex: number;
+    }
   | {
       readonly code: "conflictingRepeats" | "weakSignal";
       readonly count: number;
@@ -65,11 +76,19 @@ export interface ResolvedRows {
   readonly counts: RowCounts;
 }
 
+/** What is known of the metering point a file is read for. */
+export interface PointFacts {
+  /** By ascending time; empty where the pipe is not known. */
+  readonly bores: readonly BoreSpan[];
+}
+export const NO_POINT_FACTS: PointFacts = { bores: [] };
+
 /**
  * Turns the raw rows of one file into readings: UTC, ascending, m³/h and °C, every step listed and counted.
  * Pure: preview and import call it alike, and other choices on the same rows undo any step.
  *
- * Order: times by file order → out-of-order rows → repeats → sentinels → weak signal → units.
+ * Order: times by file order → out-of-order rows → repeats → sentinels → flow from speed or pulses →
+ * weak signal and bad status → units.
  * With an open question `columns` is null; steps, gaps and counts are then provisional.
  * Columns may share memory with `raw` and each other: do not write to them.
  */
@@ -78,8 +97,9 @@ export function resolveRows(
   recipe: FileRecipe,
   choices: RepairChoices,
   siteZone: string,
+  facts: PointFacts = NO_POINT_FACTS,
 ): ResolvedRows {
-  const questions: RepairQuestion[] = unitQuestions(raw);
+  const questions: RepairQuestion[] = columnQuestions(raw, recipe, facts);
   const times = resolveTimes(raw, recipe.time.clock, choices.missingHour, siteZone);
   if (times === null) {
     return {
@@ -93,12 +113,19 @@ export function resolveRows(
   const instantMs = gather(times.instantMs, ordered.order);
   const line =
     ordered.order === null ? raw.line : ordered.order.map((row) => raw.line[row] as number);
-  const original = raw.channels.map((channel, i): OriginalChannel => ({
+  const stepMs = nominalStepMs(instantMs);
+  const written = raw.channels.map((channel, i): OriginalChannel => ({
     meaning: channel.meaning,
     unit: channel.unit ?? storedUnitOf(channel.meaning),
     decimals: channel.decimals,
     values: gather(cleaned.values[i] as Float64Array, ordered.order),
   }));
+  const rows = { instantMs, line };
+  const derived = deriveFlow(written, recipe, rows, stepMs, facts);
+  const original = written.flatMap((channel) => {
+    if (channel.meaning === "status") return [];
+    return isDerived(channel.meaning) ? flowChannel(derived) : [channel];
+  });
   const conversion = newTally();
   const stored = (meaning: ChannelMeaning): Float64Array | null => {
     const channel = original.find((other) => other.meaning === meaning);
@@ -117,6 +144,11 @@ export function resolveRows(
   const metered = [powerKw, heatingCounterKwh, coolingCounterKwh].filter(
     (channel) => channel !== null,
   );
+  const companions = {
+    outdoorC: stored("outdoor"),
+    electricKw: stored("electricPower"),
+    pressureKpa: stored("pressure"),
+  };
   const { quality, weakSignal } = judgeRows(
     instantMs,
     line,
@@ -124,6 +156,7 @@ export function resolveRows(
     signalPercent,
     choices,
   );
+  const badStatus = excludeBadStatus(raw, recipe, ordered.order, rows, quality);
 
   if (choices.conflictingRepeats === null && ordered.conflictingRepeats.count > 0) {
     questions.push(asQuestion("conflictingRepeats", ordered.conflictingRepeats));
@@ -131,7 +164,6 @@ export function resolveRows(
   if (choices.weakSignal === null && weakSignal.count > 0)
     questions.push(asQuestion("weakSignal", weakSignal));
 
-  const stepMs = nominalStepMs(instantMs);
   const gaps = stepMs === null ? [] : findGaps(instantMs, flowM3PerHour, stepMs);
   return {
     columns:
@@ -147,6 +179,9 @@ export function resolveRows(
             ...(volumeCounterM3 && { volumeCounterM3 }),
             ...(heatingCounterKwh && { heatingCounterKwh }),
             ...(coolingCounterKwh && { coolingCounterKwh }),
+            ...(companions.outdoorC && { outdoorC: companions.outdoorC }),
+            ...(companions.electricKw && { electricKw: companions.electricKw }),
+            ...(companions.pressureKpa && { pressureKpa: companions.pressureKpa }),
             quality,
           },
     original,
@@ -159,7 +194,9 @@ export function resolveRows(
       ...listed("identicalRepeats", ordered.identicalRepeats),
       ...listed("conflictingRepeats", ordered.conflictingRepeats),
       ...listed("sentinels", cleaned.sentinels),
+      ...(derived === null ? [] : derivedSteps(written, derived)),
       ...listed("weakSignal", weakSignal),
+      ...listed("badStatus", badStatus),
       ...listed("unitConversion", conversion),
     ],
     questions,
@@ -171,11 +208,85 @@ export function resolveRows(
   };
 }
 
-function unitQuestions(raw: RawRows): RepairQuestion[] {
+function columnQuestions(raw: RawRows, recipe: FileRecipe, facts: PointFacts): RepairQuestion[] {
   return raw.channels.flatMap(({ unit, meaning, columnIndex }: RawChannel): RepairQuestion[] => {
-    if (unit !== null || meaning === "signal") return [];
-    return [{ code: unitQuestionOf(meaning), columnIndex }];
+    const column = recipe.columns.find(({ index }) => index === columnIndex);
+    if (meaning === "status")
+      return column?.badWords === undefined ? [{ code: "statusWords", columnIndex }] : [];
+    if (meaning === "pulses")
+      return unit === null || (column?.pulseValue ?? null) === null
+        ? [{ code: "pulseValue", columnIndex }]
+        : [];
+    const open: RepairQuestion[] = [];
+    if (meaning === "velocity" && facts.bores.length === 0)
+      open.push({ code: "pointBore", columnIndex });
+    if (unit === null && meaning !== "signal")
+      open.push({ code: unitQuestionOf(meaning), columnIndex });
+    return open;
   });
+}
+
+function isDerived(meaning: ChannelMeaning): boolean {
+  return meaning === "velocity" || meaning === "pulses";
+}
+
+/** Flow of a file that has water speed or pulses in its place; null where it has neither or lacks an answer. */
+function deriveFlow(
+  channels: readonly OriginalChannel[],
+  recipe: FileRecipe,
+  rows: { readonly instantMs: Float64Array; readonly line: Uint32Array },
+  stepMs: number | null,
+  facts: PointFacts,
+): DerivedFlow | null {
+  const channel = channels.find(({ meaning }) => isDerived(meaning));
+  if (channel === undefined) return null;
+  const { values, unit } = channel;
+  if (channel.meaning === "velocity")
+    return flowFromVelocity(rows, values, unit as VelocityUnit, facts.bores);
+  const value = recipe.columns.find(({ meaning }) => meaning === "pulses")?.pulseValue ?? null;
+  if (value === null) return null;
+  const worth = { value, unit: unit as CountedVolumeUnit };
+  return flowFromPulses(rows, values, worth, stepMs, recipe.seriesKind);
+}
+
+function flowChannel(derived: DerivedFlow | null): OriginalChannel[] {
+  if (derived === null) return [];
+  return [{ meaning: "flow", unit: "m3/h", decimals: 0, values: derived.flowM3PerHour }];
+}
+
+function derivedSteps(channels: readonly OriginalChannel[], derived: DerivedFlow): RepairStep[] {
+  const isSpeed = channels.some(({ meaning }) => meaning === "velocity");
+  return [
+    ...listed(isSpeed ? "velocityTimesBore" : "pulsesToFlow", derived.made),
+    ...listed("pulseOpening", derived.opening),
+  ];
+}
+
+/** Leaves out the measured rows whose status somebody has called bad, and counts them by their word. */
+function excludeBadStatus(
+  raw: RawRows,
+  recipe: FileRecipe,
+  order: Uint32Array | null,
+  { instantMs, line }: { readonly instantMs: Float64Array; readonly line: Uint32Array },
+  quality: Uint8Array,
+): Tally {
+  const excluded = newTally();
+  for (const { meaning, values, words, columnIndex, header } of raw.channels) {
+    const bad = recipe.columns.find(({ index }) => index === columnIndex)?.badWords ?? [];
+    if (meaning !== "status" || words === undefined || bad.length === 0) continue;
+    for (let i = 0; i < quality.length; i++) {
+      const word = words[values[order === null ? i : (order[i] as number)] as number] ?? "";
+      if (!bad.includes(word)) continue;
+      tally(excluded, word, () => ({
+        line: line[i] as number,
+        column: header,
+        cell: word,
+        instantMs: instantMs[i] as number,
+      }));
+      if (quality[i] === RowQuality.measured) quality[i] = RowQuality.excluded;
+    }
+  }
+  return excluded;
 }
 
 function nothing(raw: RawRows): Omit<ResolvedRows, "steps" | "questions"> {

@@ -1,3 +1,4 @@
+import { standardOffsetMs } from "../time/standard-offset";
 import { createLocalClock, type LocalClock } from "../time/local-clock";
 import { zoneOffsets } from "../time/zone-offsets";
 import { nominalStepMs } from "./find-gaps";
@@ -37,11 +38,14 @@ export function resolveTimes(
   const needsClock = raw.isUtc.includes(0);
   if (!needsClock || clock?.kind === "utc") return withoutChanges(raw.timeMs);
   if (clock === null) return null;
-  if (clock.kind !== "fixedOffset")
+  if (clock.kind === "site" || clock.kind === "zone")
     return new WallClockReading(raw, clock.kind === "site" ? siteZone : clock.zone, choice).read();
   const { rowCount, timeMs, isUtc } = raw;
   const instantMs = new Float64Array(rowCount);
-  const offsetMs = clock.offsetMinutes * MS_PER_MINUTE;
+  const offsetMs =
+    clock.kind === "siteStandard"
+      ? standardOffsetMs(siteZone, timeMs[0] ?? 0)
+      : clock.offsetMinutes * MS_PER_MINUTE;
   for (let i = 0; i < rowCount; i++)
     instantMs[i] = (timeMs[i] as number) - (isUtc[i] === 1 ? 0 : offsetMs);
   return withoutChanges(instantMs);

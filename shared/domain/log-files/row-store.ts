@@ -1,4 +1,5 @@
 import type { ColumnRecipe, DecimalMark } from "./recipe";
+import { WordList } from "./status-words";
 
 /** One channel being read: its column of numbers grows with the store's rows. */
 export class StoredChannel {
@@ -7,6 +8,8 @@ export class StoredChannel {
   values: Float64Array;
   readonly index: number;
   readonly mark: DecimalMark;
+  /** Of a status column: its values are places in this list. */
+  readonly words: WordList | null;
 
   constructor(
     readonly column: ColumnRecipe,
@@ -14,10 +17,13 @@ export class StoredChannel {
   ) {
     this.index = column.index;
     this.mark = column.decimalMark;
+    this.words = column.meaning === "status" ? new WordList(MOST_WORDS) : null;
     this.values = new Float64Array(capacity);
   }
 }
 
+/** Remarks that somebody takes for a status do not fill the memory. */
+const MOST_WORDS = 1000;
 const MIN_CAPACITY = 16;
 const GROWTH = 1.6;
 

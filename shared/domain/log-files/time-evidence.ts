@@ -29,6 +29,8 @@ export class TimeEvidence {
   rows = 0;
   withOffset = 0;
   firstCell = "";
+  /** The first row whose year has two digits whatever the order; null where all have four. */
+  shortYear: Place | null = null;
   private readonly ruledOut = new Map<DateOrder, Place>();
   private seen = 0;
   private readonly changeSteps: Record<DateOrder, number[]> = {
@@ -84,6 +86,8 @@ export class TimeEvidence {
       this.addPlainStep(before, time.timeOfDayMs);
       return true;
     }
+    if (this.shortYear === null && date.firstDigits !== 4 && date.thirdDigits !== 4)
+      this.shortYear = placeOf(row, column);
     const day = {
       dayMonthYear: date.dayMs("dayMonthYear"),
       monthDayYear: date.dayMs("monthDayYear"),

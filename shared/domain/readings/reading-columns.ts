@@ -23,6 +23,10 @@ export interface ReadingColumns {
   readonly volumeCounterM3?: Float64Array | null;
   readonly heatingCounterKwh?: Float64Array | null;
   readonly coolingCounterKwh?: Float64Array | null;
+  /** Companion series of one file: kept beside the readings. Resolving drops them, so none enters energy. */
+  readonly outdoorC?: Float64Array | null;
+  readonly electricKw?: Float64Array | null;
+  readonly pressureKpa?: Float64Array | null;
   /** One {@link RowQuality} code a row. */
   readonly quality: Uint8Array;
 }
@@ -46,13 +50,16 @@ export const COUNTER_CHANNELS = [
   "coolingCounterKwh",
 ] as const satisfies readonly ReadingChannel[];
 
+export const COMPANION_CHANNELS = ["outdoorC", "electricKw", "pressureKpa"] as const;
+export type CompanionChannel = (typeof COMPANION_CHANNELS)[number];
+
 /** Each channel that is there through `change`; the others stay as they are. */
 export function mapChannels(
   columns: ReadingColumns,
-  change: (values: Float64Array, channel: ReadingChannel) => Float64Array,
-): Pick<ReadingColumns, ReadingChannel> {
-  const changed: Partial<Record<ReadingChannel, Float64Array>> = {};
-  for (const channel of READING_CHANNELS) {
+  change: (values: Float64Array, channel: ReadingChannel | CompanionChannel) => Float64Array,
+): Pick<ReadingColumns, ReadingChannel | CompanionChannel> {
+  const changed: Partial<Record<ReadingChannel | CompanionChannel, Float64Array>> = {};
+  for (const channel of [...READING_CHANNELS, ...COMPANION_CHANNELS]) {
     const values = columns[channel];
     if (values) changed[channel] = change(values, channel);
   }

@@ -5,6 +5,7 @@ import { mergeSeries, sameSeries, type MergeSource, type Run } from "./merge-ser
 import { nominalStepMs as medianStepMs } from "./nominal-step";
 import { orientPower, type PositivePower } from "./orient-power";
 import {
+  COMPANION_CHANNELS,
   mapChannels,
   READING_CHANNELS,
   RowQuality,
@@ -50,11 +51,18 @@ interface Prepared extends MergeSource {
  * wins over flow and temperatures of the same time, or loses to them, like any other file.
  */
 export function resolveSegments(sources: readonly ReadingSource[]): ReadingSegment[] {
-  const prepared = sources.filter((s) => s.columns.instantMs.length > 0).map(prepare);
+  const prepared = sources.filter(({ columns }) => holdsReadings(columns)).map(prepare);
   const leading = prepared.filter(({ columns }) => leads(columns));
   const temperatures = prepared.filter(({ columns }) => !leads(columns));
   if (leading.length === 0) return toSegments(temperatures);
   return toSegments(completeTemperatures(leading, temperatures).map(oriented));
+}
+
+/** Companion series alone are no readings: outdoor temperature must give no row and no coverage. */
+function holdsReadings(columns: ReadingColumns): boolean {
+  if (columns.instantMs.length === 0) return false;
+  if (COMPANION_CHANNELS.every((channel) => !columns[channel])) return true;
+  return READING_CHANNELS.some((channel) => !!columns[channel]);
 }
 
 /** Whether a file says how much moved, and so gives the instants. */

@@ -14,6 +14,7 @@ export const M3_PER_HOUR_PER: Readonly<Record<FlowUnit, number>> = {
   "L/s": 3.6,
   "L/min": 0.06,
   "US gpm": M3_PER_HOUR_PER_US_GPM,
+  "L/h": 0.001,
 };
 
 /** `value` in `unit` as m³/h. NaN stays NaN. */

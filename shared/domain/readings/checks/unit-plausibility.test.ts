@@ -18,10 +18,11 @@ it("gives the water's speed in this bore under each unit", () => {
     ["L/s", "no"],
     ["L/min", "possible"],
     ["US gpm", "usual"],
+    ["L/h", "no"],
   ]);
   // 1 m/s in this bore is 29.5668 m³/h.
   expect(candidates.map(({ medianMPerS }) => medianMPerS * 29.5668)).toEqual(
-    [130, 130 * 3.6, 130 * 0.06, 130 * 0.22712470704].map((m3PerHour) =>
+    [130, 130 * 3.6, 130 * 0.06, 130 * 0.22712470704, 130 / 1000].map((m3PerHour) =>
       expect.closeTo(m3PerHour, 2),
     ),
   );
@@ -46,9 +47,9 @@ it("lets the design flow decide between units that are all possible", () => {
   const readings = Float64Array.from(times(50, 8));
   const verdicts = (design: number | null) =>
     flowUnitCandidates(readings, 102.26, design).map(({ verdict }) => verdict);
-  expect(verdicts(null)).toEqual(["possible", "usual", "no", "possible"]);
-  expect(verdicts(32)).toEqual(["possible", "usual", "no", "possible"]);
-  expect(verdicts(8)).toEqual(["possible", "no", "no", "possible"]);
+  expect(verdicts(null)).toEqual(["possible", "usual", "no", "possible", "no"]);
+  expect(verdicts(32)).toEqual(["possible", "usual", "no", "possible", "no"]);
+  expect(verdicts(8)).toEqual(["possible", "no", "no", "possible", "no"]);
 });
 
 it("tells 44 and 54 in a chilled loop for °F, and asks nothing of a hot one", () => {
