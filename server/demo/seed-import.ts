@@ -47,7 +47,7 @@ async function openWith(
   if (known) return known.importId;
   const empty = await scope.find(LogImport, { where: { pointId, state: "open" } });
   const { id } = empty ?? (await commands.openImport(importing, pointId));
-  await commands.addFile(importing, id, { name, ...stored });
+  await commands.addFile(importing, id, { name, container: null, ...stored });
   return id;
 }
 

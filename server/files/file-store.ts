@@ -7,6 +7,14 @@ export interface StoredFile {
   readonly byteLength: number;
 }
 
+/** Bytes that have arrived whole and are measured, but are not among the files yet. */
+export interface StagedFile extends StoredFile {
+  /** Makes it one of the files. */
+  keep(): Promise<void>;
+  /** Leaves nothing behind. */
+  discard(): Promise<void>;
+}
+
 /**
  * Keeps files byte for byte. A file's address is the hash of its bytes, so one that is stored
  * twice takes its space once, and a damaged one can be told.
@@ -17,6 +25,8 @@ export interface FileStore {
    * loss of power. A stream that fails leaves nothing behind.
    */
   put(content: Readable): Promise<StoredFile>;
+  /** The same, with the last step left to the caller, who may still find that it is not wanted. */
+  stage(content: Readable): Promise<StagedFile>;
   /** The bytes from `start` on. Errors with {@link FileMissing} through the stream. */
   read(sha256: string, options?: { start?: number }): Readable;
   has(sha256: string): Promise<boolean>;

@@ -4,7 +4,7 @@ import { access, mkdir, open, readdir, rename, rm, stat } from "node:fs/promises
 import path from "node:path";
 import { Readable, Transform } from "node:stream";
 import { pipeline } from "node:stream/promises";
-import { FileMissing, type FileStore, type StoredFile } from "./file-store";
+import { FileMissing, type FileStore, type StagedFile, type StoredFile } from "./file-store";
 
 const hash = /^[0-9a-f]{64}$/;
 const abandonedAfterMs = 24 * 3_600_000;
@@ -23,6 +23,17 @@ export class FolderFileStore implements FileStore {
   }
 
   async put(content: Readable): Promise<StoredFile> {
+    const { sha256, byteLength, keep, discard } = await this.stage(content);
+    try {
+      await keep();
+    } catch (error) {
+      await discard();
+      throw error;
+    }
+    return { sha256, byteLength };
+  }
+
+  async stage(content: Readable): Promise<StagedFile> {
     await mkdir(this.incoming, { recursive: true, mode: 0o700 });
     const arriving = path.join(this.incoming, randomUUID());
     const digest = createHash("sha256");
@@ -36,13 +47,17 @@ export class FolderFileStore implements FileStore {
     });
     try {
       await pipeline(content, measure, createWriteStream(arriving, { mode: 0o600, flush: true }));
-      const sha256 = digest.digest("hex");
-      await this.moveIntoPlace(arriving, sha256, byteLength);
-      return { sha256, byteLength };
     } catch (error) {
       await rm(arriving, { force: true });
       throw error;
     }
+    const sha256 = digest.digest("hex");
+    return {
+      sha256,
+      byteLength,
+      keep: () => this.moveIntoPlace(arriving, sha256, byteLength),
+      discard: () => rm(arriving, { force: true }),
+    };
   }
 
   read(sha256: string, options: { start?: number } = {}): Readable {

@@ -22,7 +22,7 @@ import { isCancellable, isEditable, isReopenable } from "./import-states";
 import { questionsLeftBy } from "./open-questions";
 import type { ReceivedFile } from "./receive-log-file";
 import { recipeProblems } from "./recipe-problems";
-import { filesOf, move, settleImport, stopChecks } from "./settle-import";
+import { enqueueReading, filesOf, move, settleImport, stopChecks } from "./settle-import";
 
 /** What a change of an import needs; an HTTP request has it, and so has the seeding of the demo. */
 export type Importing = Acting & Pick<Context, "services">;
@@ -97,27 +97,37 @@ export async function addFile(
         `An import takes up to ${MAX_FILES_PER_IMPORT} files.`,
         "Finish this import and open another one for the rest.",
       );
-    const twin = present.find(({ sha256 }) => sha256 === received.sha256);
+    const twin = present.find(({ sha256, sourceSha256 }) =>
+      [sha256, sourceSha256].includes(received.sha256),
+    );
     if (twin)
       throw new Conflict(
         "file-already-there",
-        `This import already holds the same file, as ${twin.name}.`,
+        `This import already holds the same file, as ${twin.sourceName ?? twin.name}.`,
         "Choose another file, or go on with this one.",
       );
     await stopChecks(context.database, transaction, row);
-    const { organisationId, pointId } = row;
+    const { container, ...stored } = received;
+    // A workbook is a zip archive as well: unpacking tells them apart.
+    const source = container && {
+      sourceKind: container,
+      sourceSha256: stored.sha256,
+      sourceName: stored.name,
+      sourceByteLength: stored.byteLength,
+      member: null,
+    };
     const file = await context.scope.create(
       LogFile,
-      { importId: row.id, pointId, uploadedAt: context.clock.date(), ...received },
+      {
+        importId: row.id,
+        pointId: row.pointId,
+        uploadedAt: context.clock.date(),
+        ...stored,
+        ...(source ?? {}),
+      },
       { transaction },
     );
-    await enqueueJob(context.database, transaction, {
-      organisationId,
-      kind: "recognise",
-      pointId,
-      importId: row.id,
-      logFileId: file.id,
-    });
+    await enqueueReading(context.database, transaction, file);
     await settleImport(context.database, transaction, row);
     const details = { name: file.name, sha256: file.sha256, bytes: file.byteLength };
     await audit(context, "log-file-added", row, details, transaction);
@@ -210,14 +220,12 @@ async function recogniseAnew(
   recipe: FileRecipe,
   transaction: Transaction,
 ): Promise<void> {
-  const { organisationId, pointId, id: importId } = row;
-  await cancelJobs(database, transaction, { importId, logFileId: file.id });
+  await cancelJobs(database, transaction, { importId: row.id, logFileId: file.id });
   await file.update(
     { recipe, recognition: null, questions: null, unreadable: null },
     { transaction },
   );
-  const job = { organisationId, pointId, importId, logFileId: file.id };
-  await enqueueJob(database, transaction, { ...job, kind: "recognise" });
+  await enqueueReading(database, transaction, file);
 }
 
 export async function giveRepairs(
@@ -298,14 +306,19 @@ export async function sameFiles(
     where: {
       organisationId: row.organisationId,
       pointId: row.pointId,
-      sha256: files.map(({ sha256 }) => sha256),
+      [Op.or]: [{ sha256: files.map(({ sha256 }) => sha256) }, { sourceSha256: sources }],
+  const sources = files.flatMap(({ sourceSha256 }) => sourceSha256 ?? []);
       importId: { [Op.ne]: row.id },
       precedence: { [Op.ne]: null },
     },
     transaction,
   });
   return files.flatMap((file) => {
-    const twin = earlier.find(({ sha256 }) => sha256 === file.sha256);
+    const twin = earlier.find(
+      ({ sha256, sourceSha256, member }) =>
+        sha256 === file.sha256 ||
+        (file.member !== null && sourceSha256 === file.sourceSha256 && member === file.member),
+    );
     return twin ? [{ file, earlier: twin }] : [];
   });
 }
@@ -356,16 +369,9 @@ export async function reopen(context: Importing, importId: string): Promise<LogI
         `This import is ${row.state} and cannot be taken up again.`,
         row.state === "imported" ? "Undo it first." : "Go on with it as it is.",
       );
-    const { organisationId, pointId } = row;
     for (const file of await filesOf(row, transaction)) {
       if (file.recognition !== null || file.unreadable !== null) continue;
-      await enqueueJob(context.database, transaction, {
-        organisationId,
-        pointId,
-        kind: "recognise",
-        importId: row.id,
-        logFileId: file.id,
-      });
+      await enqueueReading(context.database, transaction, file);
     }
     await settleImport(context.database, transaction, row);
     await audit(context, "import-reopened", row, {}, transaction);

@@ -75,6 +75,22 @@ function presentFile(file: LogFile, twins: readonly Twin[]): ImportFile {
   const twin = twins.find((other) => other.file.id === file.id);
   const { recognition } = file;
   return {
+function presentSource(file: LogFile): ImportFile["source"] {
+  const { sourceKind, sourceName, sourceSha256, sourceByteLength, unpackNotes: notes } = file;
+  if (sourceKind === null || sourceName === null || sourceSha256 === null) return null;
+  return {
+    kind: sourceKind,
+    name: sourceName,
+    bytes: sourceByteLength ?? 0,
+    sha256: sourceSha256,
+    member: file.member,
+    leftOut: (notes?.leftOut ?? []).map((part) => ({ ...part })),
+    formulasWithoutValue: notes?.formulasWithoutValue ?? 0,
+    nameMisleads: notes?.nameMisleads ?? false,
+    countsFrom1904: notes?.countsFrom1904 ?? false,
+  };
+}
+
     id: file.id,
     name: file.name,
     bytes: file.byteLength,
@@ -83,6 +99,7 @@ function presentFile(file: LogFile, twins: readonly Twin[]): ImportFile {
     sameAs: twin
       ? {
           importId: twin.earlier.importId,
+    source: presentSource(file),
           name: twin.earlier.name,
           importedAt: instantText(twin.importedAt),
         }

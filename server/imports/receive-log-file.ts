@@ -1,14 +1,18 @@
+import { Transform, type TransformCallback } from "node:stream";
 import multer, { MulterError, type StorageEngine } from "multer";
 import { MAX_FILE_BYTES } from "@shared/contracts/imports";
+import { containerOf, endingOf, UPLOAD_ENDINGS } from "@shared/domain/log-files/containers";
 import type { FileStore, StoredFile } from "@server/files/file-store";
 import type { Context } from "@server/http/context";
 import { HttpProblem, Invalid, TooLarge } from "@server/http/errors";
 
 export interface ReceivedFile extends StoredFile {
   readonly name: string;
+  /** What has to be unpacked before there is text; told by the bytes, whatever the name says. */
+  readonly container: "zip" | "gzip" | null;
 }
 
-const endings = [".csv", ".tsv", ".txt"];
+const HEAD_BYTES = 16;
 const mebibyte = 1024 * 1024;
 
 /**
@@ -25,16 +29,30 @@ export function fileNameOf(header: string): string {
     .slice(0, 255);
 }
 
+/** Passes bytes on and keeps the first few. */
+class HeadKeeper extends Transform {
+  head = Buffer.alloc(0);
+
+  override _transform(chunk: Buffer, _encoding: BufferEncoding, done: TransformCallback): void {
+    if (this.head.length < HEAD_BYTES)
+      this.head = Buffer.concat([this.head, chunk.subarray(0, HEAD_BYTES - this.head.length)]);
+    done(null, chunk);
+  }
+}
+
 /** Streams the part into the file store; nothing of it passes through memory as a whole. */
 function storageIn(files: FileStore, take: (file: ReceivedFile) => void): StorageEngine {
   return {
     _handleFile(_request, file, done) {
       // Cut short at the limit it must not be stored as if it were whole.
       file.stream.once("limit", () => file.stream.destroy(new Error("over the size limit")));
+      const keeper = new HeadKeeper();
+      file.stream.once("error", (error) => keeper.destroy(error));
       files
-        .put(file.stream)
+        .put(file.stream.pipe(keeper))
         .then((stored) => {
-          take({ ...stored, name: fileNameOf(file.originalname) });
+          const name = fileNameOf(file.originalname);
+          take({ ...stored, name, container: containerOf(keeper.head) });
           done(null, { size: stored.byteLength });
         })
         .catch((error: unknown) => done(error));
@@ -47,8 +65,8 @@ function storageIn(files: FileStore, take: (file: ReceivedFile) => void): Storag
 }
 
 /**
- * Takes the file of a multipart request in: one part named `file`, at most 200 MB, a text file by
- * its ending.
+ * Takes the file of a multipart request in: one part named `file`, at most 200 MB, by its ending a
+ * text file or something that holds one.
  * @throws Invalid, TooLarge or a 507 problem, each with what to do.
  */
 export async function receiveLogFile(context: Context): Promise<ReceivedFile> {
@@ -58,9 +76,9 @@ export async function receiveLogFile(context: Context): Promise<ReceivedFile> {
     storage: storageIn(services.files, (file) => (received = file)),
     limits: { fileSize: MAX_FILE_BYTES, files: 1, fields: 5, parts: 6, headerPairs: 50 },
     fileFilter(_request, file, accept) {
-      const name = fileNameOf(file.originalname).toLowerCase();
-      if (endings.some((ending) => name.endsWith(ending))) accept(null, true);
-      else accept(notText(name));
+      const name = fileNameOf(file.originalname);
+      if (UPLOAD_ENDINGS.includes(endingOf(name))) accept(null, true);
+      else accept(notALog(name));
     },
   }).single("file");
   await new Promise<void>((resolve, reject) => {
@@ -71,11 +89,27 @@ export async function receiveLogFile(context: Context): Promise<ReceivedFile> {
   return received;
 }
 
-function notText(name: string): Invalid {
+const spreadsheets = [".xls", ".xlsb", ".xlsm", ".ods", ".numbers"];
+const archives = [".7z", ".rar", ".tar", ".tgz", ".bz2", ".xz", ".zst"];
+
+function notALog(name: string): Invalid {
+  const ending = endingOf(name);
+  if (spreadsheets.includes(ending))
+    return Invalid.field(
+      "file",
+      "not-a-log",
+      `${name} is a spreadsheet of a kind that is not read here. Save it as .xlsx or as CSV and send that.`,
+    );
+  if (archives.includes(ending))
+    return Invalid.field(
+      "file",
+      "not-a-log",
+      `${name} is an archive of a kind that is not opened here. Pack the logs as .zip, or send them one by one.`,
+    );
   return Invalid.field(
     "file",
     "not-a-log",
-    `${name || "This file"} is not a .csv, .tsv or .txt file. Export the log as text and send that.`,
+    `${name || "This file"} is no log by its ending. Send text (.csv, .tsv, .txt and the like), .xlsx, .zip or .gz.`,
   );
 }
 

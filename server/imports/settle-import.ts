@@ -31,6 +31,22 @@ export function filesOf(row: LogImport, transaction?: Transaction): Promise<LogF
   });
 }
 
+/** Queues what finds out how a file is written: unpacking first, where it came inside something else. */
+export async function enqueueReading(
+  database: Database,
+  transaction: Transaction,
+  file: LogFile,
+): Promise<void> {
+  const { organisationId, pointId, importId, id: logFileId } = file;
+  await enqueueJob(database, transaction, {
+    organisationId,
+    kind: file.isPacked ? "unpack" : "recognise",
+    pointId,
+    importId,
+    logFileId,
+  });
+}
+
 const isRecognised = (file: LogFile) => file.recognition !== null || file.unreadable !== null;
 const isAnswered = (file: LogFile) =>
   file.unreadable === null && (file.questions ?? []).length === 0;

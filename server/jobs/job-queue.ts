@@ -98,11 +98,11 @@ const candidates = `
                 GROUP BY organisation_id) s ON s.organisation_id = j.organisation_id
    WHERE ((j.state = 'queued' AND j.run_after <= GREATEST(UTC_TIMESTAMP(3), :now))
        OR (j.state = 'running' AND j.lease_until <= UTC_TIMESTAMP(3)))
-     AND (j.kind IN ('recognise', 'check', 'correction') OR NOT EXISTS (
+     AND (j.kind IN ('unpack', 'recognise', 'check', 'correction') OR NOT EXISTS (
            SELECT 1 FROM job o WHERE o.point_id = j.point_id AND o.state = 'running'
               AND o.id <> j.id AND o.lease_until > UTC_TIMESTAMP(3)
               AND o.kind IN ('import', 'undo', 'recalculate')))
-   ORDER BY COALESCE(r.jobs, 0), j.kind NOT IN ('recognise', 'check', 'correction'), s.at, j.id
+   ORDER BY COALESCE(r.jobs, 0), j.kind NOT IN ('unpack', 'recognise', 'check', 'correction'), s.at, j.id
    LIMIT 8`;
 
 /** Takes the next job for `owner`, or null where there is none. */

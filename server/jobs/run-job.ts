@@ -6,6 +6,7 @@ import { checkImportJob } from "@server/imports/check-import-job";
 import { recogniseFileJob } from "@server/imports/recognise-file-job";
 import { storeImportJob } from "@server/imports/store-import-job";
 import { undoImportJob } from "@server/imports/undo-import-job";
+import { unpackJob } from "@server/imports/unpack/unpack-job";
 import type { JobKind, JobProgress } from "@server/models/job";
 import type { Failure } from "@server/models/log-import";
 import { correctionEffectJob } from "./correction-effect-job";
@@ -21,6 +22,7 @@ import type { ClaimedJob } from "./job-queue";
 import { recalculateJob } from "./recalculate-job";
 
 const works: Record<JobKind, (context: JobContext) => Promise<void>> = {
+  unpack: unpackJob,
   recognise: recogniseFileJob,
   check: checkImportJob,
   import: storeImportJob,

@@ -11,6 +11,7 @@ import { optionalJson } from "./json-column";
 import type { Failure } from "./log-import";
 
 export const jobKinds = [
+  "unpack",
   "recognise",
   "check",
   "import",

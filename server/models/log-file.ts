@@ -4,9 +4,11 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
   type Sequelize,
 } from "sequelize";
 import type { AppliedRecipe } from "@shared/contracts/recipes";
+import type { ContainerKind, UnpackNotes } from "@shared/domain/log-files/containers";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import type { Question, Recognition, Unreadable } from "@shared/domain/log-files/recognition";
 import type { SeriesKind } from "@shared/domain/readings/reading-columns";
@@ -19,7 +21,10 @@ export interface RecognitionFindings extends Omit<Recognition, "recipe" | "quest
   readonly asked: readonly Question[];
 }
 
-/** A logger's file as it came: its bytes are in the file store under their hash. */
+/**
+ * The text of one log; its bytes are in the file store under their hash. Where it came inside a
+ * workbook or an archive, the source is the upload, whose bytes are kept as well.
+ */
 export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttributes<LogFile>> {
   declare id: CreationOptional<string>;
   declare organisationId: string;
@@ -31,6 +36,14 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
   declare uploadedAt: Date;
   declare recognition: CreationOptional<RecognitionFindings | null>;
   declare unreadable: CreationOptional<Unreadable | null>;
+  /** Null where the upload was the text itself. */
+  declare sourceKind: CreationOptional<ContainerKind | null>;
+  declare sourceSha256: CreationOptional<string | null>;
+  declare sourceName: CreationOptional<string | null>;
+  declare sourceByteLength: CreationOptional<number | null>;
+  /** The sheet or the path in the archive; null until it is unpacked. */
+  declare member: CreationOptional<string | null>;
+  declare unpackNotes: CreationOptional<UnpackNotes | null>;
   declare recipe: CreationOptional<FileRecipe | null>;
   declare questions: CreationOptional<readonly Question[] | null>;
   /** The saved recipe it is read by, with what was different; null where none was applied. */
@@ -60,6 +73,19 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
         uploadedAt: instantColumn,
         recognition: optionalJson("recognition"),
         unreadable: optionalJson("unreadable"),
+        sourceKind: { type: DataTypes.ENUM("xlsx", "zip", "gzip"), allowNull: true },
+        sourceSha256: { type: DataTypes.CHAR(64), allowNull: true },
+        sourceName: { type: DataTypes.STRING(255), allowNull: true },
+        sourceByteLength: {
+          type: DataTypes.BIGINT.UNSIGNED,
+          allowNull: true,
+          get(this: LogFile) {
+            const length = this.getDataValue("sourceByteLength");
+            return length == null ? null : Number(length);
+          },
+        },
+        member: { type: DataTypes.STRING(255), allowNull: true },
+        unpackNotes: optionalJson("unpackNotes"),
         recipe: optionalJson("recipe"),
         questions: optionalJson("questions"),
         appliedRecipe: optionalJson("appliedRecipe"),
@@ -74,3 +100,8 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
     );
   }
 }
+
+  /** It came inside something that is still to be unpacked. */
+  get isPacked(): NonAttribute<boolean> {
+    return this.sourceKind !== null && this.sourceKind !== undefined && this.member === null;
+  }

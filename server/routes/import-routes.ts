@@ -163,7 +163,25 @@ export const importRoutes = [
     async handle(context, { params }) {
       const file = await fileOf(context, params.importId, params.fileId);
       return new FileAnswer({
-        name: file.name,
+        name: file.sourceName ?? file.name,
+        contentType: "application/octet-stream",
+        body: context.services.files.read(file.sourceSha256 ?? file.sha256),
+        byteLength: file.sourceByteLength ?? file.byteLength,
+      });
+    },
+  }),
+  defineEndpoint(contracts.downloadLogText, {
+    policy: may("seeLogs"),
+    async handle(context, { params }) {
+      const file = await fileOf(context, params.importId, params.fileId);
+      if (file.isPacked)
+        throw new Conflict(
+          "file-not-unpacked",
+          "There is no text of this file yet.",
+          file.unreadable ? "Take it out of the import." : "Wait until it is unpacked.",
+        );
+      return new FileAnswer({
+        name: file.sourceKind === "xlsx" ? `${file.name}.txt` : file.name,
         contentType: "application/octet-stream",
         body: context.services.files.read(file.sha256),
         byteLength: file.byteLength,

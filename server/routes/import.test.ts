@@ -302,13 +302,13 @@ test("what is no text log is refused with the reason, and one that cannot be rea
   const agent = await signedIn(app, { role: "surveyor" });
   const { point } = await pointToMeter(app, agent.organisationId);
   const { id } = await open(agent, point.id);
-  const wrong = await agent.post(`/imports/${id}/files`).attach("file", Buffer.from("x"), "a.xlsx");
+  const wrong = await agent.post(`/imports/${id}/files`).attach("file", Buffer.from("x"), "a.xls");
   expect(wrong.status).toBe(422);
   expect(wrong.body.errors[0]).toMatchObject({ pointer: "/body/file", code: "not-a-log" });
-  await upload(agent, id, Buffer.from([0x50, 0x4b, 3, 4, 0, 0, 0, 0]), "renamed.csv");
+  await upload(agent, id, Buffer.from([0xd0, 0xcf, 0x11, 0xe0, 0, 0, 0, 0]), "renamed.csv");
   expect(await read(agent, id)).toMatchObject({
     state: "asking",
-    files: [{ unreadable: { code: "notText" } }],
+    files: [{ unreadable: { code: "oldSpreadsheet" } }],
   });
 });
 

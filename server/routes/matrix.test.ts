@@ -58,6 +58,7 @@ const matrix = `
   listImports              ✓   ✓   ✓   ✓   –   –
   getImport                ✓   ✓   ✓   ✓   –   –
   downloadLogFile          ✓   ✓   ✓   ✓   –   –
+  downloadLogText          ✓   ✓   ✓   ✓   –   –
   previewLogRows           ✓   ✓   ✓   ✓   –   –
   createImport             ✓   ✓   ✓   –   –   –
   addImportFile            ✓   ✓   ✓   –   –   –

@@ -106,8 +106,13 @@ const mib = 1024 * 1024;
 export const MAX_FILE_BYTES = 200 * mib;
 export const MAX_FILES_PER_IMPORT = 12;
 
-export const importFile = z.object({
-  id,
+const leftOut = z.object({
+  name: z.string(),
+  because: z.enum(["noLog", "notText", "hiddenSheet", "sameFile", "emptySheet"]),
+});
+/** The workbook or archive a log came in, and what of it was not taken. */
+export const fileSource = z.object({
+  kind: z.enum(["xlsx", "zip", "gzip"]),
   name: z.string(),
   bytes: z.number(),
   sha256: z.string(),
@@ -142,6 +147,19 @@ export const importProgress = z.object({
 export const importSummary = z.object({
   id,
   state: importState,
+  member: z.string().nullable().describe("the sheet or the path in the archive"),
+  leftOut: z.array(leftOut),
+  formulasWithoutValue: z.number().int(),
+  nameMisleads: z.boolean().describe("the ending promises another kind of file"),
+  countsFrom1904: z.boolean(),
+});
+
+export const importFile = z.object({
+  id,
+  name: z.string(),
+  bytes: z.number().describe("of the text that is read"),
+  sha256: z.string().describe("of the text that is read"),
+  source: fileSource.nullable().describe("null where the upload was the text itself"),
   point: z.object({ id, code: z.string(), name: z.string() }),
   loop: z.object({
     id,
@@ -216,7 +234,7 @@ export const getImport = contract({
 });
 export const addImportFile = contract({
   operationId: "addImportFile",
-  summary: "Upload one logger file (multipart, field `file`); recognition starts at once",
+  summary: "Upload one logger file as text, .xlsx, .zip or .gz (multipart, field `file`); it is read at once",
   tag: "Import",
   method: "post",
   path: "/imports/:importId/files",
@@ -322,4 +340,14 @@ export const previewLogRows = contract({
     limit: z.coerce.number().int().min(1).max(100).default(20),
   }),
   answer: z.object({ rows: z.array(z.object({ line: z.number(), cells: z.array(z.string()) })) }),
+});
+export const downloadLogText = contract({
+  operationId: "downloadLogText",
+  summary: "The text that is read: of an uploaded workbook or archive, the member's",
+  tag: "Import",
+  method: "get",
+  path: "/imports/:importId/files/:fileId/text",
+  params: fileId,
+  answer: nothing,
+  answerKind: "file",
 });

@@ -1,4 +1,5 @@
-import { QueryTypes, type QueryInterface } from "sequelize";
+import type { QueryInterface } from "sequelize";
+import { addJobKind } from "./add-job-kind";
 
 /*
  * A correction is kept as the document the contract's schema reads; what queries ask of it has columns
@@ -93,18 +94,6 @@ const tables = [
   )`,
   "ALTER TABLE job ADD COLUMN IF NOT EXISTS correction_id BIGINT UNSIGNED NULL",
 ];
-
-/** Adds a kind of job to whichever there are: another step may have added its own. */
-async function addJobKind({ sequelize }: QueryInterface, kind: string): Promise<void> {
-  const [column] = await sequelize.query<{ type: string }>(
-    `SELECT COLUMN_TYPE AS type FROM information_schema.COLUMNS
-      WHERE TABLE_SCHEMA = DATABASE() AND TABLE_NAME = 'job' AND COLUMN_NAME = 'kind'`,
-    { type: QueryTypes.SELECT },
-  );
-  if (!column || column.type.includes(`'${kind}'`)) return;
-  const type = column.type.replace(/\)$/, `,'${kind}')`);
-  await sequelize.query(`ALTER TABLE job MODIFY COLUMN kind ${type} NOT NULL`);
-}
 
 /** Corrections of readings, fills of their gaps, and every result a point's energy has had. */
 export const corrections = {

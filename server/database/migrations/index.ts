@@ -9,6 +9,8 @@ import { evidence } from "./007-evidence";
 import { corrections } from "./008-corrections";
 import { energyBlocks } from "./008-energy-blocks";
 import { meterComparisons } from "./009-meter-comparisons";
+import { logFileSources } from "./010-log-file-sources";
+import { companionSeries } from "./011-companion-series";
 import { importFindings } from "./012-import-findings";
 import { recipes } from "./013-recipes";
 
@@ -34,6 +36,8 @@ export const migrations: readonly Migration[] = [
   energyBlocks,
   corrections,
   meterComparisons,
+  logFileSources,
+  companionSeries,
   importFindings,
   recipes,
 ];

@@ -1,3 +1,4 @@
+import { isArchive, isOldOffice } from "./containers";
 import { findDialect, type KindRow } from "./find-dialect";
 import { findHeader, type HeaderFinding } from "./find-header";
 import { findTimeColumns, hasTime, type TimeColumns } from "./find-times";
@@ -46,7 +47,8 @@ export function recogniseHead(
   given: GivenDialect = {},
 ): HeadRecognition | Unreadable {
   if (head.length === 0) return unreadable("empty");
-  if (hasForeignSignature(head)) return unreadable("notText");
+  if (isOldOffice(head)) return unreadable("oldSpreadsheet");
+  if (isArchive(head) || isPdf(head)) return unreadable("notText");
   const encoding: EncodingFinding | null = given.encoding
     ? { encoding: given.encoding, markBytes: 0, certainty: "proved" }
     : detectEncoding(head);
@@ -127,16 +129,10 @@ function filledColumns(rows: readonly KindRow[]): number {
   return last;
 }
 
-/** Spreadsheets (zip), gzip, PDF and old Office files renamed to .csv. */
-const SIGNATURES: readonly (readonly number[])[] = [
-  [0x50, 0x4b, 0x03, 0x04],
-  [0x1f, 0x8b],
-  [0x25, 0x50, 0x44, 0x46],
-  [0xd0, 0xcf, 0x11, 0xe0],
-];
+const PDF = [0x25, 0x50, 0x44, 0x46];
 
-function hasForeignSignature(head: Uint8Array): boolean {
-  return SIGNATURES.some((signature) => signature.every((byte, i) => head[i] === byte));
+function isPdf(head: Uint8Array): boolean {
+  return PDF.every((byte, i) => head[i] === byte);
 }
 
 /** More than one line of something: then times are what is missing, else rows are. */
