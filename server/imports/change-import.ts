@@ -57,7 +57,7 @@ export async function openImport(context: Importing, pointId: string): Promise<L
 }
 
 /** Loads the import under its lock, lets `work` change it and tells the job runner. */
-async function change(
+export async function change(
   context: Importing,
   importId: string,
   work: (row: LogImport, transaction: Transaction) => Promise<void>,
@@ -74,7 +74,7 @@ async function change(
   return row;
 }
 
-function requireEditable(row: LogImport): void {
+export function requireEditable(row: LogImport): void {
   if (isEditable(row.state)) return;
   throw new Conflict(
     "import-not-editable",
@@ -134,7 +134,7 @@ export async function addFile(
   });
 }
 
-async function fileOf(
+export async function fileOf(
   context: Importing,
   row: LogImport,
   fileId: string,
@@ -222,7 +222,7 @@ async function recogniseAnew(
 ): Promise<void> {
   await cancelJobs(database, transaction, { importId: row.id, logFileId: file.id });
   await file.update(
-    { recipe, recognition: null, questions: null, unreadable: null },
+    { recipe, recognition: null, questions: null, unreadable: null, appliedRecipe: null },
     { transaction },
   );
   await enqueueReading(database, transaction, file);

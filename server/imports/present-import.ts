@@ -63,7 +63,7 @@ export interface Twin {
   readonly importedAt: Date;
 }
 
-function presentRecipe({ meter, ...recipe }: FileRecipe): NonNullable<ImportFile["recipe"]> {
+export function presentRecipe({ meter, ...recipe }: FileRecipe): NonNullable<ImportFile["recipe"]> {
   return {
     ...recipe,
     columns: [...recipe.columns],

@@ -10,10 +10,12 @@ import {
 import type { Recognition, Unreadable } from "@shared/domain/log-files/recognition";
 import { inTransaction } from "@server/database/transaction";
 import type { JobContext } from "@server/jobs/job-context";
+import { databaseNow } from "@server/database/database-now";
 import { JobDropped } from "@server/jobs/job-outcome";
 import { LogFile } from "@server/models/log-file";
 import { loadEnergySettings } from "@server/readings/energy-settings";
 import { SERVICE_OF_ENERGY } from "@server/readings/meter-facts";
+import { applyBatchRecipe } from "./batch-recipe";
 import { importOfJob } from "./load-files";
 import { readChunks } from "./read-log-file";
 import { settleImport } from "./settle-import";
@@ -34,9 +36,16 @@ export async function recogniseFileJob(context: JobContext): Promise<void> {
     } else {
       const { recipe, questions, ...findings } = found;
       await fresh.update(
-        { recognition: { ...findings, asked: questions }, recipe, questions, unreadable: null },
+        {
+          recognition: { ...findings, asked: questions, proposed: recipe },
+          recipe,
+          questions,
+          unreadable: null,
+        },
         { transaction },
       );
+      const now = await databaseNow(database, transaction);
+      await applyBatchRecipe(database, row, fresh, now, transaction);
     }
     await settleImport(database, transaction, row);
     await context.finish(transaction);

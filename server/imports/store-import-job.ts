@@ -2,6 +2,7 @@ import { QueryTypes, type Transaction } from "sequelize";
 import { resolveSegments, type ReadingSource } from "@shared/domain/readings/resolve-segments";
 import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import { enqueueJob } from "@server/jobs/job-queue";
+import { databaseNow } from "@server/database/database-now";
 import { inTransaction } from "@server/database/transaction";
 import type { JobContext } from "@server/jobs/job-context";
 import { JobDropped, JobRefused } from "@server/jobs/job-outcome";
@@ -103,7 +104,7 @@ async function record(
   const [firstInstant, lastInstant] = instantsOf(files);
   move(row, "stored");
   row.set({ rowsStored, firstInstant, lastInstant, failure: null });
-  row.importedAt = await databaseNow(context, transaction);
+  row.importedAt = await databaseNow(context.database, transaction);
   await row.save({ transaction });
 }
 
@@ -163,13 +164,4 @@ function instantsOf(files: readonly CheckedFile[]): [Date | null, Date | null] {
   return firsts.length === 0
     ? [null, null]
     : [new Date(Math.min(...firsts)), new Date(Math.max(...lasts))];
-}
-
-/** Workers keep no clock of their own: the database's is everybody's. */
-async function databaseNow({ database }: JobContext, transaction: Transaction): Promise<Date> {
-  const [row] = await database.query<{ ms: string | number }>(
-    "SELECT ROUND(UNIX_TIMESTAMP(NOW(3)) * 1000) AS ms",
-    { type: QueryTypes.SELECT, transaction },
-  );
-  return new Date(Number(row?.ms));
 }

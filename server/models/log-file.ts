@@ -19,6 +19,8 @@ import { optionalJson } from "./json-column";
 export interface RecognitionFindings extends Omit<Recognition, "recipe" | "questions"> {
   /** Everything it asked; `questions` of the file are those that are still open. */
   readonly asked: readonly Question[];
+  /** The recipe as it was proposed, before any answer; missing from files recognised long ago. */
+  readonly proposed?: FileRecipe;
 }
 
 /**

@@ -4,6 +4,7 @@ import { evidenceAbilities } from "./evidence-policy";
 import { logsAbilities } from "./logs-policy";
 import { peopleAbilities } from "./people-policy";
 import { placesAbilities } from "./places-policy";
+import { recipesAbilities } from "./recipes-policy";
 
 /**
  * Everything somebody may or may not do, as named sentences: `can(actor).importLogs`. Abilities that
@@ -14,6 +15,7 @@ export function can(actor: Actor) {
   return {
     ...placesAbilities(actor),
     ...logsAbilities(actor),
+    ...recipesAbilities(actor),
     ...evidenceAbilities(actor),
     ...comparisonsAbilities(actor),
     ...peopleAbilities(actor),

@@ -3,48 +3,24 @@ import * as contracts from "@shared/contracts/imports";
 import type { Context } from "@server/http/context";
 import { pageOf, readCursor } from "@server/http/cursor";
 import { defineEndpoint } from "@server/http/define-endpoint";
-import { Conflict, NotFound } from "@server/http/errors";
+import { Conflict } from "@server/http/errors";
 import { FileAnswer } from "@server/http/file-answer";
 import * as commands from "@server/imports/change-import";
 import { importFacts } from "@server/imports/import-facts";
-import { presentImport, presentImportDetail } from "@server/imports/present-import";
+import { presentImport } from "@server/imports/present-import";
 import { previewRows } from "@server/imports/preview-rows";
 import { receiveLogFile } from "@server/imports/receive-log-file";
-import { filesOf } from "@server/imports/settle-import";
-import { LogFile } from "@server/models/log-file";
+import type { LogFile } from "@server/models/log-file";
 import { LogImport } from "@server/models/log-import";
 import { MeteringPoint } from "@server/models/metering-point";
 import { may } from "@server/policies/policy";
-import { currentBores } from "@server/queries/current-bores";
 import { pointsOfSite } from "@server/queries/points-of-site";
+import { fileOfImport, presentWholeImport } from "./present-whole-import";
 
-async function present(context: Context, row: LogImport) {
-  const { scope, actor } = context;
-  const [facts, files, bores] = await Promise.all([
-    importFacts(context, [row]),
-    filesOf(row),
-    currentBores(scope, [row.pointId]),
-  ]);
-  const same = await commands.sameFiles(row, files);
-  const earlier = await scope.list(LogImport, {
-    where: { id: same.map((twin) => twin.earlier.importId) },
-  });
-  const twins = same.flatMap((twin) => {
-    const importedAt = earlier.find(({ id }) => id === twin.earlier.importId)?.importedAt;
-    return importedAt ? [{ ...twin, importedAt }] : [];
-  });
-  return presentImportDetail(
-    row,
-    facts,
-    { files, twins, bore: bores.get(row.pointId) ?? null },
-    actor,
-  );
-}
+const present = presentWholeImport;
 
-async function fileOf({ scope }: Context, importId: string, fileId: string): Promise<LogFile> {
-  const file = await scope.get(LogFile, fileId, "file");
-  if (file.importId !== importId) throw new NotFound("file");
-  return file;
+function fileOf(context: Context, importId: string, fileId: string): Promise<LogFile> {
+  return fileOfImport(context, { importId, fileId });
 }
 
 /** The points a list is narrowed to, or null for all of the organisation. */

@@ -10,6 +10,7 @@ import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
 import { meterComparisonRoutes } from "./meter-comparison-routes";
 import { placesRoutes } from "./places-routes";
+import { recipeRoutes } from "./recipe-routes";
 import { sessionRoutes } from "./session-routes";
 import { shapeRoutes } from "./shape-routes";
 import { systemRoutes } from "./system-routes";
@@ -25,6 +26,7 @@ const productEndpoints: readonly Endpoint[] = [
   ...developmentRoutes,
   ...placesRoutes,
   ...importRoutes,
+  ...recipeRoutes,
   ...evidenceRoutes,
   ...energyRoutes,
   ...correctionRoutes,

@@ -70,6 +70,13 @@ const matrix = `
   cancelImport             ✓   ✓   ✓   –   –   –
   undoImport               ✓   ✓   ✓   –   –   –
   reopenImport             ✓   ✓   ✓   –   –   –
+  listRecipes              ✓   ✓   ✓   ✓   –   –
+  getRecipe                ✓   ✓   ✓   ✓   –   –
+  getRecipeOffer           ✓   ✓   ✓   ✓   –   –
+  saveRecipe               ✓   ✓   ✓   –   –   –
+  updateRecipe             ✓   ✓   ✓   –   –   –
+  deleteRecipe             ✓   ✓   ✓   –   –   –
+  applyRecipe              ✓   ✓   ✓   –   –   –
   getEnergy                ✓   ✓   ✓   ✓   –   –
   getPointSummary          ✓   ✓   ✓   ✓   –   –
   getSeries                ✓   ✓   ✓   ✓   –   –

@@ -1,7 +1,10 @@
 import { Readable } from "node:stream";
+import { recipeRepair } from "@shared/contracts/recipes";
 import { DEFAULT_REPAIR_CHOICES, type FileRecipe } from "@shared/domain/log-files/recipe";
 import { LogFile } from "@server/models/log-file";
 import { LogImport } from "@server/models/log-import";
+import { Recipe } from "@server/models/recipe";
+import type { Person } from "./factories";
 import type { TestApp } from "./test-app";
 
 /** How a file with the columns time, flow, supply and return is read. */
@@ -59,4 +62,19 @@ export async function recognisedImport(
     },
   });
   return { row, file };
+}
+
+/** A saved recipe of a person's own, made from a file as {@link plainRecipe} reads it. */
+export function savedRecipe(app: TestApp, { organisationId, account }: Person): Promise<Recipe> {
+  return Recipe.create({
+    organisationId,
+    name: "Plain logger",
+    fingerprint: "0".repeat(64),
+    recipe: plainRecipe,
+    repair: recipeRepair.parse(DEFAULT_REPAIR_CHOICES),
+    shared: false,
+    createdByAccountId: account.id,
+    createdByName: account.name,
+    createdAt: app.clock.date(),
+  });
 }

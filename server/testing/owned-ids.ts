@@ -5,7 +5,7 @@ import { savedComparison } from "./comparison-factories";
 import { evidenceOfPoint } from "./evidence-factories";
 import { correctedPoint } from "./correction-factories";
 import { person, type Person } from "./factories";
-import { recognisedImport } from "./import-factories";
+import { recognisedImport, savedRecipe } from "./import-factories";
 import { pointToMeter } from "./place-factories";
 import type { TestApp } from "./test-app";
 
@@ -37,10 +37,12 @@ const places: MakeIds = async (app, { organisationId }) => {
   return { siteId: site.id, loopId: loop.id, pointId: point.id, buildingId: building.id };
 };
 
-const logs: MakeIds = async (app, { organisationId }) => {
+const logs: MakeIds = async (app, owner) => {
+  const { organisationId } = owner;
   const { point } = await pointToMeter(app, organisationId);
   const { row, file } = await recognisedImport(app, { organisationId, pointId: point.id });
-  return { importId: row.id, fileId: file.id };
+  const recipe = await savedRecipe(app, owner);
+  return { importId: row.id, fileId: file.id, recipeId: recipe.id };
 };
 
 const evidence: MakeIds = async (app, { organisationId }) => {

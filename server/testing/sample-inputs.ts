@@ -51,6 +51,8 @@ export const sampleInputs: Readonly<Record<string, SampleInput>> = {
   proposeFill: { body: { ...instants, method: "likeDays", reason: "Flat battery" } },
   addImportFile: { file: "time,flow\n2026-02-02 00:00,1.0\n" },
   chooseRecipe: { body: plainRecipe },
+  saveRecipe: { body: { name: "Plant room logger", shared: true } },
+  updateRecipe: { body: { version: 1, shared: true } },
   addCertificate: { body: { number: "C-9", issuedOn: "2026-02-01", expanded: 1 } },
   withdrawCertificate: { body: { reason: "Of another instrument" } },
   createInstallation: { body: { startsAt: "2026-02-02T08:00:00Z" } },

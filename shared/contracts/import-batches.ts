@@ -125,9 +125,8 @@ export const chooseBatchPoint = contract({
   summary: "Say which point a file of a batch belongs to",
   tag: "Import batches",
   method: "put",
-  path: "/import-batches/:batchId/files/:batchFileId/point",
-  params: ofFile,
-  body: z.object({ pointId: id }),
+  path: "/import-batches/:batchId/files/:batchFileId/points/:pointId",
+  params: ofFile.extend({ pointId: id }),
   answer: batchDetail,
 });
 export const removeBatchFile = contract({

@@ -166,8 +166,7 @@ export const applyRecipe = contract({
     "Read a file like a recipe says; what the file contradicts is listed and stays a question",
   tag: "Recipes",
   method: "post",
-  path: "/imports/:importId/files/:fileId/apply-recipe",
-  params: ofFile,
-  body: z.object({ recipeId: id }),
+  path: "/imports/:importId/files/:fileId/recipes/:recipeId/apply",
+  params: ofFile.extend({ recipeId: id }),
   answer: importDetail,
 });
