@@ -21,8 +21,10 @@ import { pixelOf, type ValueAxis } from "./value-axis";
 export interface ChartFrameProps {
   layout: ChartLayout;
   view: Interval;
-  temperature: ValueAxis;
-  flow: ValueAxis;
+  /** Of the upper panel: temperature, or power where there is no water to draw. */
+  upper: ValueAxis;
+  /** Null where there is no lower panel. */
+  flow: ValueAxis | null;
   labels: readonly ColumnLabel[];
   quality: SeriesAnswer["quality"];
   names: {
@@ -30,7 +32,7 @@ export interface ChartFrameProps {
     readonly return: string;
     readonly flow: string;
     readonly quality: string;
-    readonly temperatureUnit: string;
+    readonly upperUnit: string;
     readonly flowUnit: string;
     readonly energyUnits: readonly string[];
   };
@@ -56,8 +58,16 @@ export const ChartFrame = memo(function ChartFrame(props: ChartFrameProps) {
   const xOf = (ms: number) => Math.min(right, Math.max(left, left + (ms - view.startMs) * pxPerMs));
   return (
     <Svg width={layout.width} height={layout.height}>
-      <Axis axis={props.temperature} panel={layout.temperature} layout={layout} hideLowest />
-      <Axis axis={props.flow} panel={layout.flow} layout={layout} strongZero />
+      <Axis
+        axis={props.upper}
+        panel={layout.temperature}
+        layout={layout}
+        hideLowest={props.flow !== null}
+        strongZero={props.flow === null}
+      />
+      {props.flow ? (
+        <Axis axis={props.flow} panel={layout.flow} layout={layout} strongZero />
+      ) : null}
       {props.labels.map((label) => (
         <Line
           key={`${label.kind} ${label.lineMs}`}
@@ -295,7 +305,7 @@ function ColumnNames({ labels, layout, names, format, xOf }: Placed) {
 }
 
 /** Names at the right ends of the curves, pushed apart where the curves meet. */
-function CurveNames({ layout, names, ends, service }: ChartFrameProps) {
+function CurveNames({ layout, names, ends, service, flow }: ChartFrameProps) {
   const { colour } = useTheme();
   const hue = serviceColours(service, colour).main;
   const x = layout.right + 8;
@@ -305,7 +315,7 @@ function CurveNames({ layout, names, ends, service }: ChartFrameProps) {
   return (
     <G>
       <SmallText x={x} y={layout.temperature.top + 5}>
-        {names.temperatureUnit}
+        {names.upperUnit}
       </SmallText>
       {back === null ? null : (
         <SvgText x={x} y={back + 4.5} fill={hue} {...strong}>
@@ -317,12 +327,16 @@ function CurveNames({ layout, names, ends, service }: ChartFrameProps) {
           {names.supply}
         </SvgText>
       )}
-      <SmallText x={x} y={layout.flow.top + 8}>
-        {names.flowUnit}
-      </SmallText>
-      <SvgText x={x} y={layout.flow.bottom - 18} fill={colour.ink2} {...face}>
-        {names.flow}
-      </SvgText>
+      {flow === null ? null : (
+        <>
+          <SmallText x={x} y={layout.flow.top + 8}>
+            {names.flowUnit}
+          </SmallText>
+          <SvgText x={x} y={layout.flow.bottom - 18} fill={colour.ink2} {...face}>
+            {names.flow}
+          </SvgText>
+        </>
+      )}
       <SvgText x={x} y={layout.quality.bottom + 2} fill={colour.ink2} {...face}>
         {names.quality}
       </SvgText>

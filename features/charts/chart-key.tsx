@@ -3,10 +3,12 @@ import { View } from "react-native";
 import Svg, { Defs, Path, Pattern, Rect } from "react-native-svg";
 
 import { useWords } from "@features/i18n";
+import type { LoopChartProps } from "./loop-chart";
 import { Row, serviceColours, Text, useTheme, type Service } from "@features/ui";
 
 /** What the lines, the fill and the bars are. On a changeover loop both fills are shown. */
-export function ChartKey({ service }: { service: Service }) {
+export function ChartKey(props: { service: Service; draws: LoopChartProps["draws"] }) {
+  const { service, draws } = props;
   const t = useWords("charts");
   const { colour } = useTheme();
   const hues = serviceColours(service, colour);
@@ -19,6 +21,17 @@ export function ChartKey({ service }: { service: Service }) {
       </Text>
     </Row>
   );
+  if (draws === "power")
+    return (
+      <Row gap={3} wrap>
+        {fills.map((direction) =>
+          item(
+            service === "changeover" ? t(`register.${direction}`) : t("power"),
+            <BandSwatch direction={direction} lined />,
+          ),
+        )}
+      </Row>
+    );
   return (
     <Row gap={3} wrap>
       {item(
@@ -49,7 +62,9 @@ export function ChartKey({ service }: { service: Service }) {
   );
 }
 
-function BandSwatch({ direction }: { direction: "cooling" | "heating" }) {
+/** @param props.lined the fill has its curve along the top */
+function BandSwatch(props: { direction: "cooling" | "heating"; lined?: boolean }) {
+  const { direction } = props;
   const id = useId().replace(/:/g, "");
   const { colour } = useTheme();
   const hues = serviceColours(direction, colour);
@@ -68,6 +83,7 @@ function BandSwatch({ direction }: { direction: "cooling" | "heating" }) {
         </Pattern>
       </Defs>
       <Rect width={22} height={12} fill={`url(#${id})`} />
+      {props.lined ? <Path d="M0 1H22" stroke={hues.main} strokeWidth={2.4} /> : null}
     </Svg>
   );
 }

@@ -61,6 +61,16 @@ export function chartLayout(width: number, registers: 0 | 1 | 2): ChartLayout {
   };
 }
 
+/** The same with one panel from top to bottom, where there is power and nothing else to draw. */
+export function powerLayout(layout: ChartLayout): ChartLayout {
+  const { bottom } = layout.flow;
+  return {
+    ...layout,
+    temperature: { top: layout.temperature.top, bottom },
+    flow: { top: bottom, bottom },
+  };
+}
+
 export function plotWidth({ left, right }: ChartLayout): number {
   return right - left;
 }

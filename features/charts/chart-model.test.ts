@@ -4,11 +4,13 @@ import { packNumbers } from "@shared/domain/readings/packed-numbers";
 import { DAY_MS, HOUR_MS } from "@shared/domain/time/interval";
 import { rangeOfDates } from "@shared/domain/time/local-calendar";
 
-import { chartLayout, plotWidth } from "./chart-layout";
+import { chartLayout, plotWidth, powerLayout } from "./chart-layout";
 import { chartSeries, nearestColumn, stepColumn } from "./chart-series";
 import { columnLabels } from "./column-labels";
 import { chartUnits } from "./chart-units";
+import { cursorReading } from "./cursor-reading";
 import { plotPicture } from "./plot-picture";
+import { powerPicture, shownPower } from "./power-picture";
 import { timeAxis } from "./time-columns";
 import { lacks } from "./use-chart-series";
 import { flowAxis, temperatureAxis } from "./value-axis";
@@ -162,11 +164,59 @@ describe("the picture", () => {
   });
 });
 
+describe("the picture of power alone", () => {
+  const layout = powerLayout(chartLayout(806, 1));
+  const nothing = columnOf(() => null);
+  const of = (service: "chilled" | "hot" | "changeover", kw: (column: number) => number | null) => {
+    const series = chartSeries(
+      answer({
+        supplyC: nothing,
+        returnC: nothing,
+        flowM3PerHour: nothing,
+        powerKw: columnOf(kw),
+        yExtent: { temperatureC: null, flowM3PerHour: null },
+      }),
+      units,
+    );
+    const power = shownPower(series, service, units);
+    const axis = flowAxis([0, 200]);
+    const picture = powerPicture({ series, power, view: week, layout, axis, service });
+    return { series, power, picture };
+  };
+
+  it("fills from zero up to the loop's own register and lifts the pen over a hole", () => {
+    const { power, picture } = of("chilled", (i) => (i === 100 ? null : -150));
+    expect(power[0]).toBe(150);
+    const { top, bottom } = layout.temperature;
+    expect(picture.supply.cooling[0]?.y).toBeCloseTo((bottom - top) / 4, 6);
+    expect(picture.band.cooling[0]?.y0).toBeCloseTo(bottom - top, 6);
+    expect(picture.supply.cooling[100]?.y).toBeNull();
+    expect(picture.band.cooling[100]?.y).toBeNull();
+    expect([picture.supply.heating, picture.return.cooling, picture.bars]).toEqual([[], [], []]);
+  });
+
+  it("has power of the other register under zero, and none on a changeover loop", () => {
+    expect(of("hot", () => -20).power[0]).toBe(-20);
+    const { power, picture } = of("changeover", (i) => (i < 168 ? 90 : -60));
+    expect([power[0], power[300]]).toEqual([90, 60]);
+    expect(picture.supply.heating[0]?.y).not.toBeNull();
+    expect(picture.supply.cooling[0]?.y).toBeNull();
+    expect(picture.supply.cooling[300]?.y).not.toBeNull();
+  });
+
+  it("is stepped through by its power and says it", () => {
+    const { series } = of("hot", (i) => (i === 1 ? null : 90));
+    expect(stepColumn(series, 0, 1)).toBe(2);
+    expect(cursorReading(series, 2)).toMatchObject({ supply: null, flow: null, powerKw: 90 });
+  });
+});
+
 describe("the columns", () => {
   const series = chartSeries(
     answer({
       supplyC: packNumbers([6, null, 6], 2),
       flowM3PerHour: packNumbers([1, null, 1], 2),
+      powerKw: packNumbers([-7, null, -7], 2),
     }),
     units,
   );

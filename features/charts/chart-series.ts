@@ -82,6 +82,22 @@ export function chartSeries(answer: SeriesAnswer, units: ChartUnits): ChartSerie
   };
 }
 
+/** The columns that touch the view, and one on each side so that curves run off its edges. */
+export function visibleColumns(
+  { startMs, endMs }: ChartSeries,
+  view: Interval,
+): readonly [number, number] {
+  let from = 0;
+  while (from < startMs.length && (endMs[from] as number) < view.startMs) from++;
+  let to = from;
+  while (to < startMs.length && (startMs[to] as number) <= view.endMs) to++;
+  return [Math.max(0, from - 1), Math.min(startMs.length, to + 1)];
+}
+
+/** Whether a column holds anything to read: water, or a permanent meter's power. */
+const holdsReading = ({ supply, flow, powerKw }: ChartSeries, i: number) =>
+  !Number.isNaN(supply[i]) || !Number.isNaN(flow[i]) || !Number.isNaN(powerKw[i]);
+
 /** Where a column's value is drawn: a row at its instant, a mean in the middle of its stretch. */
 export function columnAt(series: ChartSeries, column: number): number {
   const start = series.startMs[column] ?? NaN;
@@ -107,7 +123,7 @@ export function nearestColumn(series: ChartSeries, instantMs: number): number | 
 /** The next column with a value after (`1`) or before (`-1`) the given one; itself at the ends. */
 export function stepColumn(series: ChartSeries, from: number, direction: 1 | -1): number {
   for (let i = from + direction; i >= 0 && i < series.startMs.length; i += direction) {
-    if (!Number.isNaN(series.supply[i]) || !Number.isNaN(series.flow[i])) return i;
+    if (holdsReading(series, i)) return i;
   }
   return from;
 }

@@ -35,16 +35,22 @@ export function cursorReading(series: ChartSeries, column: number): CursorReadin
 
 export function cursorPlace(
   reading: CursorReading,
-  frame: { view: Interval; layout: ChartLayout; temperature: ValueAxis },
+  frame: {
+    view: Interval;
+    layout: ChartLayout;
+    /** Of the upper panel. */
+    axis: ValueAxis;
+    /** Values of the curves in the upper panel, in the units of its axis. */
+    values: readonly (number | null)[];
+  },
 ): { x: number; marks: readonly (number | null)[] } {
-  const { view, layout, temperature } = frame;
+  const { view, layout, axis, values } = frame;
   const share = (reading.atMs - view.startMs) / (view.endMs - view.startMs);
   const { top, bottom } = layout.temperature;
-  const y = (value: number | null) =>
-    value === null ? null : pixelOf(value, temperature, top, bottom);
+  const y = (value: number | null) => (value === null ? null : pixelOf(value, axis, top, bottom));
   return {
     x: Math.min(layout.right, Math.max(layout.left, layout.left + share * plotWidth(layout))),
-    marks: [y(reading.supply), y(reading.return)],
+    marks: values.map(y),
   };
 }
 
@@ -61,17 +67,19 @@ export function useCursorText(
     const date = format.date(reading.startMs);
     const when = `${roomy ? date : date.split(" ").slice(0, 2).join(" ")}, ${format.time(reading.startMs)}`;
     const { supply, return: back, flow, powerKw } = reading;
-    if (supply === null && back === null && flow === null)
-      return { short: `${when}${gap}${t("nothing")}`, long: `${when}: ${t("nothing")}` };
+    const power =
+      powerKw === null
+        ? ""
+        : format.withUnit(Math.abs(powerKw), powerKw < 0 ? "coolingPower" : "heatingPower");
+    const dry = supply === null && back === null && flow === null;
+    if (dry && power !== "")
+      return { short: `${when}${gap}${power}`, long: t("powerReading", { when, power }) };
+    if (dry) return { short: `${when}${gap}${t("nothing")}`, long: `${when}: ${t("nothing")}` };
     const unit = format.unit("temperatureDifference").unit;
     const number = (value: number | null, places: number) => format.number(value, places);
     const difference = supply === null || back === null ? null : Math.abs(supply - back);
     const deltaT = `ΔT${NO_BREAK_SPACE}${number(difference, 2)}${NO_BREAK_SPACE}${unit}`;
     const flowText = `${number(flow, 1)}${NO_BREAK_SPACE}${format.unit("flow").unit}`;
-    const power =
-      powerKw === null
-        ? ""
-        : format.withUnit(Math.abs(powerKw), powerKw < 0 ? "coolingPower" : "heatingPower");
     const parts = [when, deltaT, flowText, power].filter((part) => part !== "");
     const temperature = format.unit("temperature").unit;
     return {

@@ -18,7 +18,7 @@ import {
 import { ChartCursor } from "./chart-cursor";
 import type { ChartDay } from "./chart-days";
 import { ChartFrame } from "./chart-frame";
-import { chartLayout, plotWidth } from "./chart-layout";
+import { chartLayout, plotWidth, powerLayout } from "./chart-layout";
 import { columnAt, nearestColumn, type ChartSeries } from "./chart-series";
 import { ChartSurface } from "./chart-surface";
 import { chartUnits } from "./chart-units";
@@ -26,9 +26,10 @@ import { columnLabels } from "./column-labels";
 import { cursorPlace, cursorReading, useCursorText } from "./cursor-reading";
 import { plotPicture, type PictureOptions } from "./plot-picture";
 import { usePlotDoor } from "./plot-door";
+import { powerPicture, shownPower } from "./power-picture";
 import { useChartSeries, type LoadSeries } from "./use-chart-series";
 import { useChartView } from "./use-chart-view";
-import { flowAxis, temperatureAxis } from "./value-axis";
+import { flowAxis, fromZeroAxis, temperatureAxis } from "./value-axis";
 import { leastView } from "./view-window";
 
 export interface LoopChartProps {
@@ -37,6 +38,8 @@ export interface LoopChartProps {
   /** One sentence that says what the picture shows. */
   summary: string;
   service: PictureOptions["service"];
+  /** What there is to draw: water, or only the power of a permanent meter. */
+  draws: "water" | "power";
   range: Interval;
   zone: string;
   format: Format;
@@ -52,7 +55,7 @@ export interface LoopChartProps {
 const tagServices = { chilled: "cooling", hot: "heating", changeover: "changeover" } as const;
 
 /**
- * Supply, return and flow over time. Give it a `key` of the point and the range: another range is
+ * Supply, return and flow over time, or power alone. Give it a `key` of the point and the range: another range is
  * another chart. The frame stands at once; the curves come when Skia is there.
  */
 export function LoopChart(props: LoopChartProps) {
@@ -73,13 +76,13 @@ function energyRows({ days, service }: Pick<LoopChartProps, "days" | "service">)
 const noDays: readonly ChartDay[] = [];
 
 function MeasuredChart(props: LoopChartProps & { width: number }) {
-  const { service, range, zone, format, days, load, width } = props;
+  const { service, draws, range, zone, format, days, load, width } = props;
   const t = useWords("charts");
   const hintId = useId();
-  const layout = useMemo(
-    () => chartLayout(width, energyRows({ days, service })),
-    [width, days, service],
-  );
+  const layout = useMemo(() => {
+    const whole = chartLayout(width, energyRows({ days, service }));
+    return draws === "power" ? powerLayout(whole) : whole;
+  }, [width, days, service, draws]);
   const units = useMemo(() => chartUnits(format), [format]);
   const [nominalStepS, setStep] = useState<number | null>(null);
   const chart = useChartView(range, leastView(nominalStepS));
@@ -99,10 +102,18 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
     () => flowAxis(leastFlow === null || mostFlow === null ? null : [leastFlow, mostFlow]),
     [leastFlow, mostFlow],
   );
-  const picture = useMemo(
-    () => shown && plotPicture({ series: shown, view, layout, temperature, flow, service }),
-    [shown, view, layout, temperature, flow, service],
+  const power = useMemo(() => shown && shownPower(shown, service, units), [shown, service, units]);
+  const upper = useMemo(
+    () => (draws === "power" ? powerAxis(overview, power, service, units) : temperature),
+    [draws, overview, power, service, units, temperature],
   );
+  const picture = useMemo(() => {
+    if (shown === null || power === null) return null;
+    const common = { series: shown, view, layout, service };
+    return draws === "power"
+      ? powerPicture({ ...common, power, axis: upper })
+      : plotPicture({ ...common, temperature, flow });
+  }, [draws, shown, power, view, layout, upper, temperature, flow, service]);
   const registers = useMemo(
     () =>
       service === "changeover"
@@ -126,20 +137,38 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
   const column = shown && chart.cursorMs !== null ? nearestColumn(shown, chart.cursorMs) : null;
   const reading = shown && column !== null ? cursorReading(shown, column) : null;
   const text = useCursorText(reading, format, layout.named);
+  /** Values of the curves in the upper panel at a column, in the order of their names. */
+  const curvesAt = (column: number): readonly (number | null)[] => {
+    if (shown === null || power === null) return [];
+    const curves = draws === "power" ? [power] : [shown.supply, shown.return];
+    return curves.map((values) => known(values[column]));
+  };
+  const placeOf = (column: number) =>
+    shown &&
+    cursorPlace(cursorReading(shown, column), {
+      view,
+      layout,
+      axis: upper,
+      values: curvesAt(column),
+    });
+  const ends = shown && placeOf(lastDrawn(shown, view, (i) => !curvesAt(i).includes(null)));
   const names = useMemo(
     () => ({
-      supply: t("supply"),
+      supply: draws === "power" ? t("power") : t("supply"),
       return: t("return"),
       flow: t("flow"),
       quality: t("quality"),
-      temperatureUnit: units.temperature.unit,
+      upperUnit:
+        draws === "power"
+          ? (service === "chilled" ? units.coolingPower : units.heatingPower).unit
+          : units.temperature.unit,
       flowUnit: units.flow.unit,
       energyUnits: registers.map((register) => {
         const { unit } = register === "heating" ? units.heatingEnergy : units.coolingEnergy;
         return registers.length === 1 ? unit : `${t(`register.${register}`)} ${unit}`;
       }),
     }),
-    [t, units, registers],
+    [t, units, registers, draws, service],
   );
   return (
     <View style={{ gap: 6 }}>
@@ -164,12 +193,12 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
           <ChartFrame
             layout={layout}
             view={view}
-            temperature={temperature}
-            flow={flow}
+            upper={upper}
+            flow={draws === "power" ? null : flow}
             labels={labels}
             quality={shown?.quality ?? []}
             names={names}
-            ends={curveEnds(shown, view, temperature, layout)}
+            ends={{ supply: ends?.marks[0] ?? null, return: ends?.marks[1] ?? null }}
             service={tagServices[service]}
             format={format}
           />
@@ -179,13 +208,9 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
             top={layout.temperature.top}
             large={layout.named}
           />
-          {reading && text ? (
+          {reading && text && column !== null ? (
             <View style={{ position: "absolute", left: 0, top: 0, pointerEvents: "none" }}>
-              <ChartCursor
-                layout={layout}
-                text={text.short}
-                {...cursorPlace(reading, { view, layout, temperature })}
-              />
+              <ChartCursor layout={layout} text={text.short} {...(placeOf(column) ?? noPlace)} />
             </View>
           ) : null}
         </View>
@@ -220,23 +245,38 @@ function MeasuredChart(props: LoopChartProps & { width: number }) {
   );
 }
 
-/** The last value of each curve in the view, as a height for its name. */
-function curveEnds(
-  series: ChartSeries | null,
-  view: Interval,
-  axis: ReturnType<typeof temperatureAxis>,
-  layout: ReturnType<typeof chartLayout>,
+const noPlace = { x: 0, marks: [] };
+
+const known = (value: number | undefined) =>
+  value === undefined || Number.isNaN(value) ? null : value;
+
+/** From zero to the greatest power seen, or below where a meter gave the other register's. */
+function powerAxis(
+  overview: ChartSeries | null,
+  shown: Float64Array | null,
+  service: PictureOptions["service"],
+  units: ReturnType<typeof chartUnits>,
 ) {
-  if (!series) return { supply: null, return: null };
+  const all = [overview && shownPower(overview, service, units), shown].flatMap((values) =>
+    values === null ? [] : [...values].filter((value) => !Number.isNaN(value)),
+  );
+  const least = all.reduce((low, value) => Math.min(low, value), 0);
+  const greatest = all.reduce((high, value) => Math.max(high, value), 0);
+  return fromZeroAxis(least, greatest);
+}
+
+/** The last column in the view whose curves all have a value; −1 where none has. */
+function lastDrawn(
+  series: ChartSeries,
+  view: Interval,
+  isDrawn: (column: number) => boolean,
+): number {
   for (let i = series.startMs.length - 1; i >= 0; i--) {
     const at = columnAt(series, i);
-    if (at > view.endMs || Number.isNaN(series.supply[i]) || Number.isNaN(series.return[i]))
-      continue;
-    if (at < view.startMs) break;
-    const { marks } = cursorPlace(cursorReading(series, i), { view, layout, temperature: axis });
-    return { supply: marks[0] ?? null, return: marks[1] ?? null };
+    if (at > view.endMs || !isDrawn(i)) continue;
+    return at < view.startMs ? -1 : i;
   }
-  return { supply: null, return: null };
+  return -1;
 }
 
 /** The drawn part: empty, of the drawn size, until Skia is there; a word where it cannot come. */

@@ -1,7 +1,7 @@
 import type { Interval } from "@shared/domain/time/interval";
 
 import { plotWidth, type ChartLayout } from "./chart-layout";
-import { columnAt, type ChartSeries } from "./chart-series";
+import { columnAt, visibleColumns, type ChartSeries } from "./chart-series";
 import { pixelOf, type ValueAxis } from "./value-axis";
 
 /** One place on a curve, px from the plot's top left; null lifts the pen. */
@@ -43,15 +43,6 @@ export interface PictureOptions {
 /** Share of a column that its bar takes. */
 const BAR_SHARE = 0.72;
 
-/** The columns that touch the view, and one on each side so that curves run off its edges. */
-function visible({ startMs, endMs }: ChartSeries, view: Interval): readonly [number, number] {
-  let from = 0;
-  while (from < startMs.length && (endMs[from] as number) < view.startMs) from++;
-  let to = from;
-  while (to < startMs.length && (startMs[to] as number) <= view.endMs) to++;
-  return [Math.max(0, from - 1), Math.min(startMs.length, to + 1)];
-}
-
 export function plotPicture(options: PictureOptions): PlotPicture {
   const { series, view, layout, temperature, flow, service } = options;
   const width = plotWidth(layout);
@@ -63,7 +54,7 @@ export function plotPicture(options: PictureOptions): PlotPicture {
     value === undefined || Number.isNaN(value)
       ? null
       : pixelOf(value, temperature, top, bottom) - originY;
-  const [from, to] = visible(series, view);
+  const [from, to] = visibleColumns(series, view);
 
   function directionOf(column: number): Direction {
     if (service !== "changeover") return service === "hot" ? "heating" : "cooling";

@@ -32,6 +32,14 @@ export function flowAxis(extent: readonly [number, number] | null): ValueAxis {
   return axis(Math.floor(least / step) * step, Math.ceil(greatest / step) * step, step);
 }
 
+/** Round ticks over zero and both ends, in about four steps: for a panel that stands alone. */
+export function fromZeroAxis(least: number, greatest: number): ValueAxis {
+  const high = greatest > 0 || least < 0 ? Math.max(0, greatest) : 1;
+  const low = Math.min(0, least);
+  const step = tickStep(0, high - low, 4);
+  return axis(Math.floor(low / step) * step, Math.ceil(high / step) * step, step);
+}
+
 /** Round ticks from zero to `greatest`, in about `count` steps. */
 export function zeroAxis(greatest: number, count = 4): ValueAxis {
   const most = greatest > 0 ? greatest : 1;

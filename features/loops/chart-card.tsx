@@ -41,7 +41,8 @@ export function ChartCard(props: ChartCardProps) {
   const t = useWords("loops");
   const phone = useBreakpoint() === "phone";
   const service = tagService(loop.service);
-  if (isMeterOnly(props.summary)) return <MeterTable {...props} />;
+  const draws = isMeterOnly(props.summary) ? "power" : "water";
+  const title = t(draws === "power" ? "chart.meterTitle" : "chart.title");
   const segments = (
     <Segments
       label={t("chart.as")}
@@ -55,51 +56,38 @@ export function ChartCard(props: ChartCardProps) {
     />
   );
   return (
-    <Card label={t("chart.title")} pad={phone ? 3 : 4}>
+    <Card label={title} pad={phone ? 3 : 4}>
       <Row justify="space-between" wrap gap={3} style={{ marginBottom: 8 }}>
         <Text variant={phone ? "subhead" : "heading"} level={2}>
-          {t("chart.title")}
+          {title}
         </Text>
         {phone ? (
           segments
         ) : (
           <Row gap={4} wrap>
-            <ChartKey service={service} />
+            <ChartKey service={service} draws={draws} />
             {segments}
           </Row>
         )}
       </Row>
-      {shows === "chart" ? <Picture {...props} /> : <Rows {...props} />}
+      {draws === "power" ? (
+        <Text variant="small" tone="ink2" style={{ marginBottom: 8 }}>
+          {t("chart.meterOnly")}
+        </Text>
+      ) : null}
+      {shows === "chart" ? <Picture {...props} draws={draws} /> : <Rows {...props} />}
     </Card>
   );
 }
 
-/** Energy without any water measured: a permanent meter gave its power alone. */
+/** Energy without any water measured: a permanent meter gave its power alone, and that is drawn. */
 function isMeterOnly({ totals, basis }: LoopFigures["summary"]): boolean {
   const hasEnergy = totals.heating.energyKwh !== null || totals.cooling.energyKwh !== null;
   return basis.blockedBy === null && hasEnergy && totals.volumeM3 === null;
 }
 
-/** There is no supply, return or flow to draw; the table holds all there is. */
-function MeterTable(props: ChartCardProps) {
-  const t = useWords("loops");
-  const phone = useBreakpoint() === "phone";
-  return (
-    <Card label={t("chart.meterTitle")} pad={phone ? 3 : 4}>
-      <View style={{ gap: 4, marginBottom: 12 }}>
-        <Text variant={phone ? "subhead" : "heading"} level={2}>
-          {t("chart.meterTitle")}
-        </Text>
-        <Text variant="small" tone="ink2">
-          {t("chart.meterOnly")}
-        </Text>
-      </View>
-      <Rows {...props} />
-    </Card>
-  );
-}
-
-function Picture(props: ChartCardProps) {
+function Picture(props: ChartCardProps & { draws: "water" | "power" }) {
+  const { draws } = props;
   const { loop, point, summary, format, site } = props;
   const t = useWords("loops");
   const client = useQueryClient();
@@ -115,7 +103,7 @@ function Picture(props: ChartCardProps) {
     <LoopChart
       foot={
         <View style={{ gap: 6 }}>
-          {phone ? <ChartKey service={tagService(loop.service)} /> : null}
+          {phone ? <ChartKey service={tagService(loop.service)} draws={draws} /> : null}
           <QualityKey
             only={
               summary.totals.filled === null
@@ -126,7 +114,8 @@ function Picture(props: ChartCardProps) {
         </View>
       }
       key={`${point.id} ${summary.from} ${summary.to}`}
-      label={`${t("chart.title")}, ${loop.tag}`}
+      label={`${t(draws === "power" ? "chart.meterTitle" : "chart.title")}, ${loop.tag}`}
+      draws={draws}
       summary={useChartSummary(props)}
       service={loop.service}
       range={range}
@@ -151,7 +140,9 @@ function useChartSummary({ summary, loop, format, rangeName }: LoopFigures): str
   const t = useWords("loops");
   const { busiest, totals } = summary;
   if (totals.coveredS === 0) return t("chart.saidEmpty", { tag: loop.tag, range: rangeName });
-  if (busiest === null) return t("chart.saidReadings", { tag: loop.tag, range: rangeName });
+  const ofMeter = isMeterOnly(summary);
+  if (busiest === null && !ofMeter)
+    return t("chart.saidReadings", { tag: loop.tag, range: rangeName });
   const energies = registersOf(loop.service)
     .map((register) =>
       t(`chart.saidEnergy.${register}`, {
@@ -159,11 +150,20 @@ function useChartSummary({ summary, loop, format, rangeName }: LoopFigures): str
       }),
     )
     .join(", ");
+  const of = { tag: loop.tag, range: rangeName, energies };
+  if (busiest === null) return t("chart.saidMeter", of);
+  const when = format.dateTime(Date.parse(busiest.from));
+  if (ofMeter) {
+    const quantity = busiest.register === "heating" ? "heatingPower" : "coolingPower";
+    return t("chart.saidPower", {
+      ...of,
+      when,
+      power: format.withUnit(busiest.powerKw, quantity),
+    });
+  }
   return t("chart.said", {
-    tag: loop.tag,
-    range: rangeName,
-    energies,
-    when: format.dateTime(Date.parse(busiest.from)),
+    ...of,
+    when,
     supply: format.withUnit(busiest.supplyC, "temperature", 1),
     return: format.withUnit(busiest.returnC, "temperature", 1),
     flow: format.withUnit(busiest.flowM3PerHour, "flow", 1),

@@ -386,7 +386,7 @@ it("shows a meter's energy with a dash and its reason where no water was measure
     }),
   );
   show(<LoopScreen />);
-  expect(await screen.findByRole("heading", { name: "Energy by the meter" })).toBeVisible();
+  expect(await screen.findByRole("heading", { name: "Power of the meter" })).toBeVisible();
   expect(screen.getAllByText("Not part of a meter’s power")).toHaveLength(2);
   expect(screen.getByText(/^3 rows of the meter’s power have the other sign/)).toBeVisible();
   expect(screen.queryByText("Supply, return and flow")).toBeNull();

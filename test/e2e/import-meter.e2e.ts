@@ -103,7 +103,7 @@ it.each(sizes)(
     await page.getByText("Not part of a meter’s power").first().waitFor(patience);
     await expectNoSeriousAxe(page);
     await keepScreenshots(page, `meter-loop-${viewport}`);
-    await page.getByRole("heading", { name: "Energy by the meter" }).waitFor();
+    await page.getByRole("heading", { name: "Power of the meter" }).waitFor();
     expect(problemsOf(page)).toEqual([]);
     await page.context().close();
   },
