@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { id, instant } from "./contract";
 import { energyBlock } from "./energy";
+import { importFinding, notChecked } from "./import-findings";
 
 const rowExample = z.object({
   line: z.number().int(),
@@ -27,6 +28,10 @@ export const repairStep = z.object({
     "counterReset",
     "counterJump",
     "counterExchange",
+    "velocityTimesBore",
+    "pulsesToFlow",
+    "pulseOpening",
+    "badStatus",
     "footer",
   ]),
   count: z.number().int(),
@@ -37,8 +42,11 @@ export type RepairStepView = z.infer<typeof repairStep>;
 
 /** What the checking job found over all files, with the choices so far. */
 export const importChecks = z.object({
-  /** Choices that must be made because the defect occurs: names of repairChoices that are null. */
-  undecided: z.array(z.enum(["conflictingRepeats", "weakSignal", "overlap"])),
+  /**
+   * Choices that must be made because the defect occurs: names of repairChoices that are null, and
+   * "findings" where one that stops has no choice.
+   */
+  undecided: z.array(z.enum(["conflictingRepeats", "weakSignal", "overlap", "findings"])),
   files: z.array(
     z.object({
       fileId: id,
@@ -119,6 +127,11 @@ export const importChecks = z.object({
       ),
     })
     .nullable(),
+  /** What the readings themselves show, in the order in which to settle it. */
+  findings: z.array(importFinding).optional(),
+  /** Findings beyond those listed. */
+  moreFindings: z.number().int().optional(),
+  notChecked: z.array(notChecked).optional(),
   /** Names of the checks that found nothing. */
   clean: z.array(z.string()),
   daily: z.array(

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { instant } from "./contract";
+import { findingChoices, keptSpans } from "./import-findings";
 import { ianaZone } from "./places";
 
 /* How one file is read and mended: the same shape as shared/domain/log-files/recipe.ts. */
@@ -24,15 +25,25 @@ export const columnMeaning = z.enum([
   "volumeCounter",
   "heatingCounter",
   "coolingCounter",
+  "velocity",
+  "pulses",
+  "status",
+  "outdoor",
+  "electricPower",
+  "pressure",
   "skip",
 ]);
-export const flowUnit = z.enum(["m3/h", "L/s", "L/min", "US gpm"]);
+export const flowUnit = z.enum(["m3/h", "L/s", "L/min", "US gpm", "L/h"]);
+export const velocityUnit = z.enum(["m/s", "ft/s"]);
 export const temperatureUnit = z.enum(["degC", "degF", "K"]);
 export const meterPowerUnit = z.enum(["kW", "MW", "W", "MBH", "ton"]);
 export const countedVolumeUnit = z.enum(["m3", "L", "US gal", "ft3"]);
 export const countedEnergyUnit = z.enum(["kWh", "MWh", "MJ", "GJ", "kBtu", "MMBtu"]);
+export const loopPressureUnit = z.enum(["kPa", "bar", "psi"]);
 export const columnUnit = z.union([
   flowUnit,
+  velocityUnit,
+  loopPressureUnit,
   temperatureUnit,
   z.literal("%"),
   meterPowerUnit,
@@ -52,6 +63,18 @@ export const columnRecipe = z.object({
     .nullable()
     .optional()
     .describe("where a counter starts from zero again, in the column's unit; 9999.9 means 10000"),
+  pulseValue: z
+    .number()
+    .gt(0)
+    .max(1e6)
+    .nullable()
+    .optional()
+    .describe("what one pulse stands for, in the column's unit of volume; never assumed"),
+  badWords: z
+    .array(z.string().max(60))
+    .max(60)
+    .optional()
+    .describe("words of a status column that mean a bad reading; none is an answer too"),
 });
 export const meterRecipe = z.object({
   positivePower: z
@@ -69,19 +92,40 @@ export const timeFormat = z.discriminatedUnion("kind", [
 ]);
 export const loggerClock = z.discriminatedUnion("kind", [
   z.object({ kind: z.literal("site") }),
+  z
+    .object({ kind: z.literal("siteStandard") })
+    .describe("the site's winter time all year, without summer time"),
   z.object({ kind: z.literal("utc") }),
   z.object({ kind: z.literal("fixedOffset"), offsetMinutes: z.number().int().min(-840).max(840) }),
   z.object({ kind: z.literal("zone"), zone: ianaZone }),
 ]);
+export const clockNote = z.object({
+  loggerAt: instant.describe("what the logger showed, read as its rows are"),
+  rightAt: instant.describe("what a right clock showed at that moment"),
+});
 export const fileRecipe = z.object({
   dialect,
   columns: z.array(columnRecipe).max(200),
-  time: z.object({ format: timeFormat, clock: loggerClock.nullable() }),
+  time: z.object({
+    format: timeFormat,
+    clock: loggerClock.nullable(),
+    notes: z
+      .array(clockNote)
+      .max(2)
+      .optional()
+      .describe(
+        "what the logger's clock and a right one showed at start and end; of this file only",
+      ),
+  }),
   seriesKind,
   kindChosen: z
     .boolean()
     .optional()
     .describe("true: moments, though the header says the rows are means"),
+  alikeChosen: z
+    .boolean()
+    .optional()
+    .describe("true: none of the columns that nothing tells apart is read"),
   meter: meterRecipe.optional().describe("of a permanent meter's file"),
 });
 export const repairChoices = z.object({
@@ -93,4 +137,6 @@ export const repairChoices = z.object({
   weakSignal: z.enum(["exclude", "keep"]).nullable(),
   weakSignalBelowPercent: z.number().min(0).max(100),
   overlap: z.enum(["keepEarlier", "useThis"]).nullable(),
+  findings: findingChoices.optional().describe("what is done about what the readings show"),
+  keptSpans: keptSpans.optional(),
 });

@@ -1,11 +1,9 @@
 import type { LoopService } from "../../energy/power";
 import type { FlowUnit, TemperatureUnit } from "../../log-files/recipe";
-import type { GapRule } from "../covered-steps";
 import type { ReadingSegment } from "../reading-columns";
 import { clockHint, type ClockHintFinding } from "./clock-hints";
 import { clockOff, type ClockFinding, type ClockNote } from "./clock-notes";
 import { farDates, type FarDatesFinding } from "./far-dates";
-import { gapsFinding, type GapsFinding } from "./gaps";
 import { hampelSpikes, type SpikeFinding } from "./hampel-spikes";
 import { noFlowNoise, type NoFlowNoiseFinding } from "./no-flow-noise";
 import { reversedFlow, type NegativeFlowFinding } from "./reversed-flow";
@@ -23,13 +21,12 @@ export type ReadingFinding =
   | NegativeFlowFinding
   | UnitFinding
   | NoFlowNoiseFinding
-  | GapsFinding
   | FarDatesFinding
   | ClockFinding
   | ClockHintFinding;
 
-/** What the checks need to know of where the readings come from. Null is unknown. */
-export interface CheckContext {
+/** What the checks need to know of the point and its loop. Null is unknown. */
+export interface PlaceContext {
   readonly service: LoopService;
   readonly boreMm: number | null;
   readonly designFlowM3PerHour: number | null;
@@ -37,12 +34,19 @@ export interface CheckContext {
   readonly flowCutOffM3PerHour: number | null;
   /** Half-width, m/s; the wide default where nobody proved a zero. */
   readonly zeroUncertaintyMPerS: number | null;
-  /** Units the columns were converted from. */
-  readonly flowUnit: FlowUnit;
-  readonly temperatureUnit: TemperatureUnit;
-  readonly gapRule: GapRule;
+}
+
+/** What the checks of one logger's rows need to know besides. */
+export interface FileContext extends PlaceContext {
+  /** Units the columns were converted from; null where they come from no such column. */
+  readonly flowUnit: FlowUnit | null;
+  readonly temperatureUnit: TemperatureUnit | null;
   readonly latestMs: number | null;
   readonly clockNotes: readonly ClockNote[];
+}
+
+/** What the checks of a point's readings, put together, need to know besides. */
+export interface SeriesContext extends PlaceContext {
   /** Flow and temperatures come from loggers with a clock each. */
   readonly hasTwoClocks: boolean;
 }
@@ -50,20 +54,51 @@ export interface CheckContext {
 /** A check that could not be made, and what it lacks. */
 export interface NotChecked {
   readonly check:
-    "spikes" | "flowUnit" | "noFlowNoise" | "swappedSides" | "negativeFlow" | "clockOff";
-  readonly lacks: "boreMm" | "flow" | "temperatures" | "clockNotes" | "oneService";
+    | "spikes"
+    | "flowUnit"
+    | "noFlowNoise"
+    | "swappedSides"
+    | "negativeFlow"
+    | "stuckChannel"
+    | "stepChange"
+    | "clockOff";
+  readonly lacks: "boreMm" | "flow" | "temperatures" | "clockNotes" | "oneService" | "companion";
+}
+
+export interface CheckResult {
+  readonly findings: readonly ReadingFinding[];
+  /** Silence is never taken for soundness. */
+  readonly notChecked: readonly NotChecked[];
 }
 
 /**
- * Every check of one series, changing nothing. Findings come in the order of the checks; see
- * `rankFindings` for the order in which to settle them. What could not be checked is said, so that
- * silence is never taken for soundness. Time grows with the rows, and not with their square.
+ * The checks of what one logger wrote, by itself: dates, units, spikes, its clock. Changes nothing.
+ * Findings come in the order of the checks; see `rankFindings`. Time grows with the rows, and not with
+ * their square.
  */
-export function checkReadings(
-  segment: ReadingSegment,
-  context: CheckContext,
-): { readonly findings: readonly ReadingFinding[]; readonly notChecked: readonly NotChecked[] } {
-  const { flowM3PerHour, supplyC, returnC } = segment.columns;
+export function checkFile(segment: ReadingSegment, context: FileContext): CheckResult {
+  const { flowUnit, temperatureUnit } = context;
+  const hasFlow = segment.columns.flowM3PerHour !== null;
+  const findings = [
+    farDates(segment, context),
+    ...unitPlausibility(segment, { ...context, flowUnit, temperatureUnit }),
+    ...hampelSpikes(segment, context),
+    clockOff(segment, context.clockNotes),
+  ].filter((finding) => finding !== null);
+  const lacksBore = hasFlow && context.boreMm === null;
+  return {
+    findings,
+    notChecked: listed([
+      [lacksBore, { check: "spikes", lacks: "boreMm" }],
+      [lacksBore && flowUnit !== null, { check: "flowUnit", lacks: "boreMm" }],
+      [context.clockNotes.length === 0, { check: "clockOff", lacks: "clockNotes" }],
+    ]),
+  };
+}
+
+/** The checks of what a point's channels say together. As {@link checkFile} otherwise. */
+export function checkSeries(segment: ReadingSegment, context: SeriesContext): CheckResult {
+  const { flowM3PerHour, supplyC, returnC, powerKw } = segment.columns;
   const noFlow = {
     boreMm: context.boreMm,
     ...(context.zeroUncertaintyMPerS === null
@@ -71,31 +106,31 @@ export function checkReadings(
       : { zeroUncertaintyMPerS: context.zeroUncertaintyMPerS }),
   };
   const findings = [
-    farDates(segment, context),
-    ...unitPlausibility(segment, context),
     swappedSides(segment, { ...noFlow, service: context.service }),
     ...reversedFlow(segment, noFlow),
     ...stepChanges(segment, noFlow),
     ...stuckChannels(segment, context),
-    ...hampelSpikes(segment, context),
-    clockOff(segment, context.clockNotes),
     context.hasTwoClocks ? clockHint(segment) : null,
-    gapsFinding(segment, context.gapRule),
     noFlowNoise(segment, { ...noFlow, flowCutOffM3PerHour: context.flowCutOffM3PerHour }),
   ].filter((finding) => finding !== null);
-  const hasTemperatures = supplyC !== null && returnC !== null;
-  const notChecked: NotChecked[] = [];
-  const lacking = (isLacking: boolean, missing: NotChecked) => {
-    if (isLacking) notChecked.push(missing);
-  };
   const hasFlow = flowM3PerHour !== null;
-  lacking(!hasFlow, { check: "negativeFlow", lacks: "flow" });
-  lacking(!hasFlow, { check: "swappedSides", lacks: "flow" });
-  lacking(hasFlow && context.boreMm === null, { check: "spikes", lacks: "boreMm" });
-  lacking(hasFlow && context.boreMm === null, { check: "flowUnit", lacks: "boreMm" });
-  lacking(hasFlow && context.boreMm === null, { check: "noFlowNoise", lacks: "boreMm" });
-  lacking(!hasTemperatures, { check: "swappedSides", lacks: "temperatures" });
-  lacking(context.service === "changeover", { check: "swappedSides", lacks: "oneService" });
-  lacking(context.clockNotes.length === 0, { check: "clockOff", lacks: "clockNotes" });
-  return { findings, notChecked };
+  const hasTemperatures = supplyC !== null && returnC !== null;
+  const channels = [flowM3PerHour, supplyC, returnC, powerKw ?? null];
+  const isAlone = channels.filter((channel) => channel !== null).length < 2;
+  return {
+    findings,
+    notChecked: listed([
+      [!hasFlow, { check: "negativeFlow", lacks: "flow" }],
+      [!hasFlow, { check: "swappedSides", lacks: "flow" }],
+      [!hasTemperatures, { check: "swappedSides", lacks: "temperatures" }],
+      [context.service === "changeover", { check: "swappedSides", lacks: "oneService" }],
+      [hasFlow && context.boreMm === null, { check: "noFlowNoise", lacks: "boreMm" }],
+      [isAlone, { check: "stuckChannel", lacks: "companion" }],
+      [isAlone, { check: "stepChange", lacks: "companion" }],
+    ]),
+  };
+}
+
+function listed(candidates: readonly (readonly [boolean, NotChecked])[]): NotChecked[] {
+  return candidates.flatMap(([isLacking, missing]) => (isLacking ? [missing] : []));
 }

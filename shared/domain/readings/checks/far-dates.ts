@@ -92,9 +92,10 @@ function groupsOf(instantMs: Float64Array, latestMs: number): RowRange[] {
     if (row < instantMs.length) {
       const before = instantMs[row - 1]!;
       const here = instantMs[row]!;
-      const crosses = (edge: number) => before < edge && here >= edge;
       const isNewGroup =
-        here - before > APART_MS || crosses(EARLIEST_MS) || (before <= latestMs && here > latestMs);
+        here - before > APART_MS ||
+        (before < EARLIEST_MS && here >= EARLIEST_MS) ||
+        (before <= latestMs && here > latestMs);
       if (!isNewGroup) continue;
     }
     groups.push({ from, to: row });

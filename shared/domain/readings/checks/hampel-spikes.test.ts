@@ -69,3 +69,11 @@ it("proves nothing with fewer than fifteen readings", () => {
   const series = shortSeries({ supply: put(steady(7, 14), { 7: 60 }) });
   expect(hampelSpikes(series, { boreMm: null })).toEqual([]);
 });
+
+it("finds a spike among readings that hardly scatter, where any other would stand out", () => {
+  const readings = Array.from({ length: 40 }, (_, row) => (row % 3 === 0 ? 6.48 : 6.51));
+  const series = shortSeries({ supply: readings.map((c, row) => (row === 20 ? c + 47 : c)) });
+  expect(hampelSpikes(series, { boreMm: null }).map(({ rows }) => rows)).toEqual([
+    [{ from: 20, to: 21 }],
+  ]);
+});

@@ -14,7 +14,7 @@ import { placeOf, rangesOfRows } from "./row-spans";
  * normal noise). At the ends of the series the 15 nearest readings are taken; fewer than 15 prove
  * nothing. Physically: for flow a water speed over 5 m/s in this bore; for a temperature a jump there
  * and a jump back, each faster than `maxKPerMinute` from one reading to the next. Such a spike is at
- * most 7 readings long, since 8 of 15 would be the median themselves, and not at an end of the series.
+ * at least half the jump at the limit away, at most 7 readings long, since 8 of 15 would be the median themselves, and not at an end of the series.
  *
  * Without a bore flow is not checked. Linear in the number of rows: the physical limit is looked at
  * first, and the window only round what breaks it.
@@ -110,10 +110,13 @@ function temperatureSpikes(
       : Math.abs(values[rows[to]!]! - values[rows[from]!]!) /
         (instantMs[rows[to]!]! - instantMs[rows[from]!]!);
   for (let at = 0; at < rows.length; at++) {
-    if (jump(at - 1, at) <= maxKPerMs || !window.standsOut(at)) continue;
+    if (jump(at - 1, at) <= maxKPerMs) continue;
+    // Where most readings are equal to the hundredth, MAD is 0 and any other one stands out.
+    const least = (maxKPerMs * (instantMs[rows[at]!]! - instantMs[rows[at - 1]!]!)) / 2;
+    if (!window.standsOut(at, least)) continue;
     let end = at;
     const run: Spike[] = [];
-    while (end < rows.length && run.length <= LONGEST_SPIKE && window.standsOut(end)) {
+    while (end < rows.length && run.length <= LONGEST_SPIKE && window.standsOut(end, least)) {
       run.push({
         row: rows[end]!,
         value: values[rows[end]!]!,
@@ -167,14 +170,15 @@ class NeighbourWindow {
     private readonly rows: Uint32Array,
   ) {}
 
-  standsOut(at: number): boolean {
+  /** `least`: a distance that at least is needed, however little the readings scatter. */
+  standsOut(at: number, least = 0): boolean {
     const { values, rows, sorted } = this;
     const start = Math.min(Math.max(0, at - LONGEST_SPIKE), rows.length - SPIKE_WINDOW);
     for (let i = 0; i < SPIKE_WINDOW; i++) insert(sorted, i, values[rows[start + i]!]!);
     this.median = sorted[LONGEST_SPIKE]!;
     for (let i = 0; i < SPIKE_WINDOW; i++) insert(sorted, i, Math.abs(sorted[i]! - this.median));
     const mad = sorted[LONGEST_SPIKE]!;
-    return Math.abs(values[rows[at]!]! - this.median) > SPIKE_DISTANCE * mad;
+    return Math.abs(values[rows[at]!]! - this.median) > Math.max(least, SPIKE_DISTANCE * mad);
   }
 }
 

@@ -90,3 +90,18 @@ it("judges a temperature in a short visit, and no flow, which jumps with the loa
   ]);
   expect(stepChanges(series(12, 0), limits)).toEqual([]);
 });
+
+it("takes no clean visit of under two days for one with a step, whatever its weather", () => {
+  const found = Array.from({ length: 200 }, (_, seed) => {
+    const isMinutes = seed % 2 === 0;
+    const series = cleanSeries({
+      seed: 7919 * seed + 1,
+      stepMs: (isMinutes ? 1 : 5) * MINUTE_MS,
+      rows: (isMinutes ? 5 : 1) * (300 + ((seed * 37) % 276)),
+      service: seed % 3 === 0 ? "heating" : "cooling",
+      runsAllNight: seed % 4 < 2,
+    });
+    return stepChanges(series, limits).length;
+  });
+  expect(found.filter((count) => count > 0)).toEqual([]);
+});

@@ -1,10 +1,12 @@
-import { DAY_MS, HOUR_MS } from "../../time/interval";
-import { firstFrom } from "../corrections/correction-span";
+import { HOUR_MS } from "../../time/interval";
 import type { ReadingSegment } from "../reading-columns";
 import { KEEP, type Finding } from "./finding";
 import { noFlowBelowM3PerHour, type NoFlowLimits } from "./no-flow";
 import { medianOf, readRows } from "./read-rows";
 import { placeOf } from "./row-spans";
+import { answers, type StepChannel } from "./step-answers";
+import { Jumps, SIDE } from "./step-jumps";
+import { lasting, LEAST_PAIRS, type Series, type Step } from "./step-residuals";
 
 /**
  * A step that the water did not make: from one reading to the next a channel sits higher or lower for
@@ -38,24 +40,8 @@ export interface StepLimits extends NoFlowLimits {
   readonly leastFlowRatio?: number;
 }
 
-const SIDE = 5;
-const MIDDLE = 2;
 const LEAST_K = 0.3;
 const LEAST_FLOW_RATIO = 0.05;
-const LEAST_PAIRS = 30;
-/** Residuals on each side of where two days' residuals meet. */
-const EDGE_PAIRS = 12;
-const AGREEING_SHARE = 0.75;
-/** Flow must stay so for a day, less what a coarse logger leaves off at the end. */
-const WHOLE_DAY_MS = 0.9 * DAY_MS;
-const ANSWER_SHARE = 0.3;
-const FLOW_ANSWER = 0.05;
-const LEAST_ANSWER_K = 0.15;
-/** Enough to see that most residuals say something else. */
-const QUICK_PAIRS = 32;
-const QUICK_SHARE = 0.65;
-
-type Channel = "flowM3PerHour" | "supplyC" | "returnC";
 
 export type StepChangeFinding = Finding<
   "stepChange",
@@ -79,23 +65,9 @@ export function stepChanges(segment: ReadingSegment, limits: StepLimits): StepCh
   );
 }
 
-/** A channel's readings with the rows they stand in; flow as a logarithm. */
-interface Series {
-  readonly rows: Uint32Array;
-  readonly instantMs: Float64Array;
-  readonly values: Float64Array;
-}
-
-interface Step {
-  readonly at: number;
-  readonly size: number;
-  readonly agreeing: number;
-  readonly lagMs: number;
-}
-
 function stepsOf(
   segment: ReadingSegment,
-  channel: Channel,
+  channel: StepChannel,
   limits: StepLimits,
 ): StepChangeFinding[] {
   const held = segment.columns[channel];
@@ -128,7 +100,11 @@ function stepsOf(
   });
 }
 
-function seriesOf(segment: ReadingSegment, channel: Channel, limits: StepLimits): Series | null {
+function seriesOf(
+  segment: ReadingSegment,
+  channel: StepChannel,
+  limits: StepLimits,
+): Series | null {
   const held = segment.columns[channel];
   let rows = readRows(segment, held);
   if (!held || !rows) return null;
@@ -149,7 +125,7 @@ function seriesOf(segment: ReadingSegment, channel: Channel, limits: StepLimits)
 
 function findSteps(
   segment: ReadingSegment,
-  channel: Channel,
+  channel: StepChannel,
   series: Series,
   least: number,
 ): Step[] {
@@ -181,237 +157,4 @@ function findSteps(
     if (step !== null) steps.push(step);
   }
   return steps;
-}
-
-/** How a series jumps at its rows, from medians of 5 and beyond what it drifts on both sides. */
-class Jumps {
-  private readonly medians: Float64Array;
-
-  constructor(
-    private readonly instantMs: Float64Array,
-    private readonly values: Float64Array,
-  ) {
-    this.medians = mediansOfFive(values);
-  }
-
-  at(row: number): number {
-    const [before, after] = this.drifts(row, row);
-    return this.plain(row) - ((before + after) / 2) * this.betweenMs(row);
-  }
-
-  /** Nearly every row leaves here, without a look at the drift. */
-  isCalm(row: number, least: number): boolean {
-    return Math.abs(this.medians[row]! - this.medians[row - SIDE]!) < least;
-  }
-
-  /** Mean distance of the 5 before a row and the 5 from it on from their medians. */
-  scatterAt(row: number): number {
-    let distance = 0;
-    for (let i = row - SIDE; i < row + SIDE; i++)
-      distance += Math.abs(this.values[i]! - this.medians[i < row ? row - SIDE : row]!);
-    return distance / (2 * SIDE);
-  }
-
-  /** How much the drift changes at a row: a bend as large as the jump is no step. */
-  bendAt(row: number): number {
-    const [before, after] = this.drifts(row, row);
-    return Math.abs(after - before) * this.betweenMs(row);
-  }
-
-  /** The row from `from` to `to` that best parts the rows round it into two levels, drift apart. */
-  sharpest(from: number, to: number): number {
-    const [before, after] = this.drifts(from, to);
-    const startMs = this.instantMs[from]!;
-    const level = new Float64Array(SIDE);
-    let best = from;
-    let bestDistance = Infinity;
-    for (let at = from; at <= to; at++) {
-      let distance = 0;
-      for (const start of [at - SIDE, at]) {
-        for (let i = 0; i < SIDE; i++) {
-          const sinceMs = this.instantMs[start + i]! - startMs;
-          level[i] = this.values[start + i]! - ((before + after) / 2) * sinceMs;
-        }
-        level.sort();
-        distance += level[4]! + level[3]! - level[1]! - level[0]!;
-      }
-      if (distance < bestDistance) [best, bestDistance] = [at, distance];
-    }
-    return best;
-  }
-
-  private plain(row: number): number {
-    return this.medians[row]! - this.medians[row - SIDE]!;
-  }
-
-  /** Between the middle reading of the 5 before a row and that of the 5 from it on. */
-  private betweenMs(row: number): number {
-    return this.instantMs[row + MIDDLE]! - this.instantMs[row - SIDE + MIDDLE]!;
-  }
-
-  /** Drift a millisecond before one row and from another on; at an end, that of the other side. */
-  private drifts(before: number, after: number): readonly [number, number] {
-    const hasBefore = before >= 2 * SIDE;
-    const hasAfter = after + 2 * SIDE <= this.values.length;
-    const rate = (row: number) => this.plain(row) / this.betweenMs(row);
-    const one = hasBefore ? rate(before - SIDE) : null;
-    const other = hasAfter ? rate(after + SIDE) : null;
-    return [one ?? other ?? 0, other ?? one ?? 0];
-  }
-}
-
-/** Whether another channel moved as water would make it move. */
-function answers(segment: ReadingSegment, channel: Channel, row: number, jump: number): boolean {
-  const { flowM3PerHour, supplyC, returnC } = segment.columns;
-  if (channel !== "flowM3PerHour") {
-    const other = moveAt(segment, channel === "supplyC" ? returnC : supplyC, row);
-    if (other && other.moved > ANSWER_SHARE * Math.abs(jump)) return true;
-    const flow = moveAt(segment, flowM3PerHour, row);
-    return (
-      flow !== null &&
-      flow.moved > FLOW_ANSWER * Math.max(Math.abs(flow.before), Math.abs(flow.after))
-    );
-  }
-  const supply = moveAt(segment, supplyC, row);
-  const returned = moveAt(segment, returnC, row);
-  const deltaTK = supply && returned ? Math.abs(supply.before - returned.before) : 0;
-  const expectedK = Math.abs(Math.expm1(-jump)) * deltaTK;
-  const answerK = Math.max(LEAST_ANSWER_K, ANSWER_SHARE * expectedK);
-  return [supply, returned].some((move) => move !== null && move.moved > answerK);
-}
-
-/**
- * Medians of a channel's 5 rows before a row and of the 5 from it on, and how far apart they are beyond
- * the drift on both sides; null where too little is read.
- */
-function moveAt({ columns }: ReadingSegment, values: Float64Array | null, row: number) {
-  if (!values) return null;
-  const level = (from: number) => {
-    const known = values
-      .slice(Math.max(0, from), Math.max(0, from + SIDE))
-      .filter((value) => !Number.isNaN(value));
-    return known.length < 3 ? null : medianOf(known)!;
-  };
-  const before = level(row - SIDE);
-  const after = level(row);
-  if (before === null || after === null) return null;
-  const { instantMs } = columns;
-  const last = instantMs.length - 1;
-  const middleMs = (from: number) => instantMs[Math.min(last, Math.max(0, from) + MIDDLE)]!;
-  const rate = (from: number, change: number) =>
-    change === 0 ? 0 : change / (middleMs(from + SIDE) - middleMs(from));
-  const earlier = level(row - 2 * SIDE) ?? before;
-  const later = level(row + SIDE) ?? after;
-  const drift = (rate(row - 2 * SIDE, before - earlier) + rate(row, later - after)) / 2;
-  const betweenMs = middleMs(row) - middleMs(row - SIDE);
-  return { before, after, moved: Math.abs(after - before - drift * betweenMs) };
-}
-
-/** The step that the residuals across a change agree on; null where they do not. */
-function lasting(
-  series: Series,
-  change: number,
-  jump: number,
-  least: number,
-  mayBeShort: boolean,
-): Step | null {
-  const { instantMs } = series;
-  const atMs = instantMs[change]!;
-  if (!mayLast(series, change, jump)) return null;
-  const day = residuals(series, atMs, DAY_MS);
-  const isDay = day.length >= LEAST_PAIRS;
-  if (!mayBeShort && (!isDay || instantMs.at(-1)! - atMs < WHOLE_DAY_MS)) return null;
-  const lagMs = isDay ? DAY_MS : Math.min(atMs - instantMs[0]!, instantMs.at(-1)! - atMs, DAY_MS);
-  const across = isDay ? day : residuals(series, atMs, lagMs);
-  if (across.length < LEAST_PAIRS) return null;
-  const { usual, edge } = isDay ? neighbourDays(series, atMs, across) : NO_NEIGHBOURS;
-  const size = medianOf(across.slice())! - usual;
-  const ratio = size / jump;
-  if (!(ratio >= 0.5 && ratio <= 2) || Math.abs(size) < least) return null;
-  // A Monday's rise, taken off, would make a fall of its evening.
-  if (Math.abs(usual) > Math.abs(size) / 2) return null;
-  // Weather that changes within a day moves residuals too, but not from one to the next.
-  if (edge !== null && !(edge / size >= 0.5 && edge / size <= 1.5)) return null;
-  const agrees = (value: number) => (value - usual) / size >= 0.5 && (value - usual) / size <= 1.5;
-  const share = across.filter(agrees).length / across.length;
-  // Where two days' residuals meet, the weather has moved least.
-  return share >= AGREEING_SHARE
-    ? { at: change, size: edge ?? size, agreeing: share, lagMs }
-    : null;
-}
-
-/** A quick look at some residuals across a change: whether most of them go its way. */
-function mayLast({ instantMs, values }: Series, change: number, jump: number): boolean {
-  const end = firstFrom(instantMs, instantMs[change]! + DAY_MS);
-  const stride = Math.max(1, Math.floor((end - change) / QUICK_PAIRS));
-  let along = 0;
-  let looked = 0;
-  for (let late = change; late < end; late += stride) {
-    const early = firstFrom(instantMs, instantMs[late]! - DAY_MS);
-    if (early >= change || instantMs[early]! > instantMs[late]! - DAY_MS + HOUR_MS) continue;
-    looked++;
-    if ((values[late]! - values[early]!) / jump > 0.25) along++;
-  }
-  return along >= QUICK_SHARE * looked;
-}
-
-const NO_NEIGHBOURS = { usual: 0, edge: null };
-
-/**
- * The residuals of the day before a change, or else of the day after the first one: their median, which
- * is the weather's part, and how far they lie from the residuals across the change where they meet.
- */
-function neighbourDays(series: Series, atMs: number, across: Float64Array) {
-  const before = residuals(series, atMs - DAY_MS, DAY_MS);
-  if (before.length >= LEAST_PAIRS) {
-    const edge = medianOf(across.slice(0, EDGE_PAIRS))! - medianOf(before.slice(-EDGE_PAIRS))!;
-    return { usual: medianOf(before)!, edge };
-  }
-  const after = residuals(series, atMs + DAY_MS, DAY_MS);
-  if (after.length >= LEAST_PAIRS) {
-    const edge = medianOf(across.slice(-EDGE_PAIRS))! - medianOf(after.slice(0, EDGE_PAIRS))!;
-    return { usual: medianOf(after)!, edge };
-  }
-  return NO_NEIGHBOURS;
-}
-
-/** Readings of the `lagMs` from an instant on, less those `lagMs` earlier. */
-function residuals({ instantMs, values }: Series, fromMs: number, lagMs: number): Float64Array {
-  const found: number[] = [];
-  let early = firstFrom(instantMs, fromMs - lagMs);
-  for (let late = firstFrom(instantMs, fromMs); late < instantMs.length; late++) {
-    const wanted = instantMs[late]! - lagMs;
-    if (wanted >= fromMs) break;
-    while (early < late && instantMs[early]! < wanted) early++;
-    // A reading that is not there a day before, within half a step, has no residual.
-    const before = late > 0 ? instantMs[late]! - instantMs[late - 1]! : Infinity;
-    const after = late + 1 < instantMs.length ? instantMs[late + 1]! - instantMs[late]! : Infinity;
-    const half = Math.min(before, after) / 2;
-    const isNear = (row: number) =>
-      row >= 0 && instantMs[row]! < fromMs && Math.abs(instantMs[row]! - wanted) <= half;
-    if (isNear(early)) found.push(values[late]! - values[early]!);
-    else if (isNear(early - 1)) found.push(values[late]! - values[early - 1]!);
-  }
-  return Float64Array.from(found);
-}
-
-/** Median of each value and the four after it. */
-function mediansOfFive(values: Float64Array): Float64Array {
-  const medians = new Float64Array(Math.max(0, values.length - SIDE + 1));
-  for (let i = 0; i < medians.length; i++)
-    medians[i] = medianOfFive(
-      values[i]!,
-      values[i + 1]!,
-      values[i + 2]!,
-      values[i + 3]!,
-      values[i + 4]!,
-    );
-  return medians;
-}
-
-/** By leaving out what cannot be the middle: the lower of two pairs' lows, the higher of their highs. */
-function medianOfFive(a: number, b: number, c: number, d: number, e: number): number {
-  const low = Math.max(Math.min(a, b), Math.min(c, d));
-  const high = Math.min(Math.max(a, b), Math.max(c, d));
-  return Math.max(Math.min(low, high), Math.min(Math.max(low, high), e));
 }

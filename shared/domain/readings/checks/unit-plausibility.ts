@@ -116,10 +116,10 @@ export interface UnitLimits {
   readonly boreMm: number | null;
   readonly designFlowM3PerHour: number | null;
   readonly service: LoopService;
-  /** The unit the flow was read in; m³/h unless given. */
-  readonly flowUnit?: FlowUnit;
-  /** The unit both temperatures were read in; °C unless given. */
-  readonly temperatureUnit?: TemperatureUnit;
+  /** The unit the flow was read in; m³/h unless given, null where it comes from no such column. */
+  readonly flowUnit?: FlowUnit | null;
+  /** The unit both temperatures were read in; °C unless given, null where they differ. */
+  readonly temperatureUnit?: TemperatureUnit | null;
   /** Instead of the service's own window. */
   readonly windowC?: TemperatureWindow;
 }
@@ -158,7 +158,7 @@ export function unitPlausibility(segment: ReadingSegment, limits: UnitLimits): U
 function flowUnitFinding(segment: ReadingSegment, limits: UnitLimits): UnitFinding | null {
   const flow = segment.columns.flowM3PerHour;
   const rows = readRows(segment, flow);
-  if (!flow || !rows || limits.boreMm === null) return null;
+  if (!flow || !rows || limits.boreMm === null || limits.flowUnit === null) return null;
   const unit = limits.flowUnit ?? "m3/h";
   const written = Float64Array.from(sampleOf(rows, MOST_SAMPLES), (row) =>
     fromM3PerHour(flow[row]!, unit),
@@ -192,6 +192,7 @@ function flowUnitFinding(segment: ReadingSegment, limits: UnitLimits): UnitFindi
 }
 
 function temperatureUnitFinding(segment: ReadingSegment, limits: UnitLimits): UnitFinding | null {
+  if (limits.temperatureUnit === null) return null;
   const unit = limits.temperatureUnit ?? "degC";
   const { supplyC, returnC } = segment.columns;
   const written = [supplyC, returnC].flatMap((values) => {

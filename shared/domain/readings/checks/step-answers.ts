@@ -1,0 +1,61 @@
+import type { ReadingSegment } from "../reading-columns";
+import { medianOf } from "./read-rows";
+import { MIDDLE, SIDE } from "./step-jumps";
+
+export type StepChannel = "flowM3PerHour" | "supplyC" | "returnC";
+
+const ANSWER_SHARE = 0.3;
+const FLOW_ANSWER = 0.05;
+const LEAST_ANSWER_K = 0.15;
+
+/** Whether another channel moved as water would make it move. */
+export function answers(
+  segment: ReadingSegment,
+  channel: StepChannel,
+  row: number,
+  jump: number,
+): boolean {
+  const { flowM3PerHour, supplyC, returnC } = segment.columns;
+  if (channel !== "flowM3PerHour") {
+    const other = moveAt(segment, channel === "supplyC" ? returnC : supplyC, row);
+    if (other && other.moved > ANSWER_SHARE * Math.abs(jump)) return true;
+    const flow = moveAt(segment, flowM3PerHour, row);
+    return (
+      flow !== null &&
+      flow.moved > FLOW_ANSWER * Math.max(Math.abs(flow.before), Math.abs(flow.after))
+    );
+  }
+  const supply = moveAt(segment, supplyC, row);
+  const returned = moveAt(segment, returnC, row);
+  const deltaTK = supply && returned ? Math.abs(supply.before - returned.before) : 0;
+  const expectedK = Math.abs(Math.expm1(-jump)) * deltaTK;
+  const answerK = Math.max(LEAST_ANSWER_K, ANSWER_SHARE * expectedK);
+  return [supply, returned].some((move) => move !== null && move.moved > answerK);
+}
+
+/**
+ * Medians of a channel's 5 rows before a row and of the 5 from it on, and how far apart they are beyond
+ * the drift on both sides; null where too little is read.
+ */
+function moveAt({ columns }: ReadingSegment, values: Float64Array | null, row: number) {
+  if (!values) return null;
+  const level = (from: number) => {
+    const known = values
+      .slice(Math.max(0, from), Math.max(0, from + SIDE))
+      .filter((value) => !Number.isNaN(value));
+    return known.length < 3 ? null : medianOf(known)!;
+  };
+  const before = level(row - SIDE);
+  const after = level(row);
+  if (before === null || after === null) return null;
+  const { instantMs } = columns;
+  const last = instantMs.length - 1;
+  const middleMs = (from: number) => instantMs[Math.min(last, Math.max(0, from) + MIDDLE)]!;
+  const rate = (from: number, change: number) =>
+    change === 0 ? 0 : change / (middleMs(from + SIDE) - middleMs(from));
+  const earlier = level(row - 2 * SIDE) ?? before;
+  const later = level(row + SIDE) ?? after;
+  const drift = (rate(row - 2 * SIDE, before - earlier) + rate(row, later - after)) / 2;
+  const betweenMs = middleMs(row) - middleMs(row - SIDE);
+  return { before, after, moved: Math.abs(after - before - drift * betweenMs) };
+}
