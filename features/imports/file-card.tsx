@@ -179,7 +179,10 @@ export function withRecipe(recipe: ReturnType<typeof withHeaderLine>) {
   const { meter, ...rest } = recipe;
   return {
     ...rest,
-    columns: [...recipe.columns],
+    columns: recipe.columns.map(({ badWords, ...column }) => ({
+      ...column,
+      ...(badWords && { badWords: [...badWords] }),
+    })),
     ...(meter && { meter: { ...meter, exchangedAt: [...meter.exchangedAt] } }),
   };
 }

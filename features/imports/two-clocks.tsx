@@ -4,6 +4,7 @@ import { useFormat, useWords } from "@features/i18n";
 import { font, Text, useMeasuredWidth, useTheme } from "@features/ui";
 import type { LoggerClock } from "@shared/domain/log-files/recipe";
 import { HOUR_MS } from "@shared/domain/time/interval";
+import { standardOffsetMs } from "@shared/domain/time/standard-offset";
 import { zoneOffsets } from "@shared/domain/time/zone-offsets";
 import { placeOf } from "./clock-choice";
 
@@ -16,6 +17,8 @@ function offsetOf(clock: LoggerClock, siteZone: string, utcMs: number): number {
       return 0;
     case "fixedOffset":
       return clock.offsetMinutes * 60_000;
+    case "siteStandard":
+      return standardOffsetMs(siteZone, utcMs);
     case "site":
       return zoneOffsets(siteZone).offsetAt(utcMs);
     case "zone":

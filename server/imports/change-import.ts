@@ -20,6 +20,7 @@ import { can } from "@server/policies/can";
 import { loadEnergySettings } from "@server/readings/energy-settings";
 import { isCancellable, isEditable, isReopenable } from "./import-states";
 import { questionsLeftBy } from "./open-questions";
+import { boresOf } from "./point-bores";
 import type { ReceivedFile } from "./receive-log-file";
 import { recipeProblems } from "./recipe-problems";
 import { enqueueReading, filesOf, move, settleImport, stopChecks } from "./settle-import";
@@ -192,7 +193,8 @@ export async function giveRecipe(
     if (problems.length > 0) throw new Invalid(problems);
     await stopChecks(context.database, transaction, row);
     const { service } = await loadEnergySettings(context.database, row.pointId, transaction);
-    const questions = questionsLeftBy(recipe, recognition, service);
+    const hasBore = (await boresOf(row.pointId, transaction)).length > 0;
+    const questions = questionsLeftBy(recipe, recognition, { service, hasBore });
     await file.update({ recipe: withMeter(recipe), questions }, { transaction });
     await settleImport(context.database, transaction, row);
     await audit(context, "recipe-chosen", row, { file: file.name, recipe }, transaction);
@@ -206,11 +208,11 @@ function withMeter(recipe: FileRecipe): FileRecipe {
   return { ...recipe, meter: { positivePower: null, exchangedAt: [] } };
 }
 
-/** Another encoding, separator or header line: what the columns are must be found out again. */
+/** Another encoding, separator, column boundary or header line: what the columns are must be found out again. */
 function isReadAnew({ dialect: before }: FileRecipe, { dialect: after }: FileRecipe): boolean {
-  return (["encoding", "separator", "headerLine"] as const).some(
-    (name) => before[name] !== after[name],
-  );
+  const sameColumns = String(before.columnStarts) === String(after.columnStarts);
+  const names = ["encoding", "separator", "headerLine"] as const;
+  return !sameColumns || names.some((name) => before[name] !== after[name]);
 }
 
 async function recogniseAnew(
@@ -295,19 +297,22 @@ export async function confirm(context: Importing, importId: string): Promise<Log
   });
 }
 
-/** Files whose bytes are stored for the same point already, each with the earlier file. */
+/**
+ * Files whose bytes are stored for the same point already, each with the earlier file. What came from
+ * the same place in the same upload is the same, even if it was turned into text another way.
+ */
 export async function sameFiles(
   row: LogImport,
   files: readonly LogFile[],
   transaction?: Transaction,
 ): Promise<{ file: LogFile; earlier: LogFile }[]> {
   if (files.length === 0) return [];
+  const sources = files.flatMap(({ sourceSha256 }) => sourceSha256 ?? []);
   const earlier = await LogFile.findAll({
     where: {
       organisationId: row.organisationId,
       pointId: row.pointId,
       [Op.or]: [{ sha256: files.map(({ sha256 }) => sha256) }, { sourceSha256: sources }],
-  const sources = files.flatMap(({ sourceSha256 }) => sourceSha256 ?? []);
       importId: { [Op.ne]: row.id },
       precedence: { [Op.ne]: null },
     },

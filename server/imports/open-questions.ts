@@ -4,14 +4,24 @@ import {
   isChannelMeaning,
   unitsOfMeaning,
 } from "@shared/domain/log-files/column-units";
+import { statusWordsOf } from "@shared/domain/log-files/status-words";
 import { saysMean } from "@shared/domain/log-files/header-words";
 import type { ColumnRecipe, FileRecipe } from "@shared/domain/log-files/recipe";
 import type { LoopService } from "@shared/contracts/places";
-import type { Question, SampleRow } from "@shared/domain/log-files/recognition";
+import type { Question, Recognition, SampleRow } from "@shared/domain/log-files/recognition";
 
 interface Findings {
   readonly asked: readonly Question[];
   readonly sampleRows: readonly SampleRow[];
+  /** Words of columns that hold words; left out by findings of older files. */
+  readonly words?: Recognition["words"];
+}
+
+/** What is known of the point beside its files. */
+export interface AskedOfPoint {
+  readonly service: LoopService;
+  /** A pipe is entered, so that water speed gives flow. */
+  readonly hasBore: boolean;
 }
 
 /**
@@ -22,11 +32,13 @@ interface Findings {
 export function questionsLeftBy(
   recipe: FileRecipe,
   findings: Findings,
-  service: LoopService,
+  { service, hasBore }: AskedOfPoint,
 ): Question[] {
   const left = findings.asked.filter(
     (question) =>
-      isOpen(question, recipe) && (question.code !== "positivePower" || service === "changeover"),
+      isOpen(question, recipe) &&
+      (question.code !== "positivePower" || service === "changeover") &&
+      question.code !== "pointBore",
   );
   const has = (code: Question["code"], columnIndex?: number) =>
     left.some(
@@ -40,7 +52,12 @@ export function questionsLeftBy(
       return has("columnMeaning") ? [] : [{ code: "columnMeaning", meaning: "time" }];
     if (open.code === "dateOrder") return has("dateOrder") ? [] : [dateOrderOf(recipe, findings)];
     if (has(open.code, open.columnIndex)) return [];
+    if (open.code === "statusWords") {
+      const words = wordsOf(findings, open.columnIndex);
+      return [{ code: "statusWords", columnIndex: open.columnIndex, words }];
+    }
     const range = rangeOf(recipe, open.columnIndex, findings.sampleRows);
+    if (open.code === "pulseValue") return [{ ...open, code: "pulseValue", ...range }];
     if (open.code === "flowUnit")
       return [{ ...open, code: "flowUnit", ...range, choices: FLOW_UNITS }];
     if (open.code === "temperatureUnit") return [{ ...open, code: "temperatureUnit", ...range }];
@@ -53,7 +70,21 @@ export function questionsLeftBy(
     const range = rangeOf(recipe, power.index, findings.sampleRows);
     raised.push({ code: "positivePower", columnIndex: power.index, ...range });
   }
+  const velocity = recipe.columns.find(({ meaning }) => meaning === "velocity");
+  if (velocity && !hasBore) raised.push({ code: "pointBore", columnIndex: velocity.index });
   return [...left, ...raised];
+}
+
+/** The words of a column over the whole file, or over the rows shown where it was not taken for words. */
+function wordsOf({ words, sampleRows }: Findings, columnIndex: number) {
+  const found = words?.find((column) => column.columnIndex === columnIndex)?.counts;
+  if (found) return statusWordsOf(found);
+  const counts: Record<string, number> = {};
+  for (const { cells } of sampleRows) {
+    const word = (cells[columnIndex] ?? "").trim();
+    counts[word] = (counts[word] ?? 0) + 1;
+  }
+  return statusWordsOf(counts);
 }
 
 function isOpen(question: Question, recipe: FileRecipe): boolean {
@@ -65,6 +96,23 @@ function isOpen(question: Question, recipe: FileRecipe): boolean {
     case "decimalMark":
     case "columnMeaning":
       return false;
+    case "pointBore":
+      return recipe.columns.some(({ meaning }) => meaning === "velocity");
+    case "pulseValue":
+    case "statusWords": {
+      const wanted = question.code === "pulseValue" ? "pulses" : "status";
+      const column = recipe.columns.find(({ index }) => index === question.columnIndex);
+      if (column?.meaning !== wanted) return false;
+      if (wanted === "status") return column.badWords === undefined;
+      return column.unit === null || (column.pulseValue ?? null) === null;
+    }
+    case "alikeColumns":
+      // Answered by reading one of them, or by leaving all of them out on purpose.
+      return recipe.alikeChosen !== true && question.columnIndexes.every(isSkipped(recipe));
+    case "whichSet":
+      return question.sets.every(({ columns }) =>
+        columns.map(({ index }) => index).every(isSkipped(recipe)),
+      );
     case "seriesKind": {
       // Answered by any kind of mean, or by saying that moments are meant all the same.
       const column = recipe.columns.find(({ index }) => index === question.columnIndex);
@@ -84,6 +132,11 @@ function isOpen(question: Question, recipe: FileRecipe): boolean {
       return unitQuestionOf(column.meaning) === question.code;
     }
   }
+}
+
+function isSkipped(recipe: FileRecipe) {
+  return (columnIndex: number) =>
+    recipe.columns.find(({ index }) => index === columnIndex)?.meaning === "skip";
 }
 
 function dateOrderOf(recipe: FileRecipe, { sampleRows }: Findings): Question {

@@ -1,5 +1,9 @@
 import type { RepairStep, RowExample } from "@shared/domain/log-files/repair-step";
-import type { ReadingChannel, ReadingColumns } from "@shared/domain/readings/reading-columns";
+import type {
+  CompanionChannel,
+  ReadingChannel,
+  ReadingColumns,
+} from "@shared/domain/readings/reading-columns";
 import { indexFrom } from "@server/readings/load-segments";
 
 /** Rows of a file at instants that another file of the point holds as well. */
@@ -16,7 +20,10 @@ const channels = [
   "volumeCounterM3",
   "heatingCounterKwh",
   "coolingCounterKwh",
-] as const satisfies readonly ReadingChannel[];
+  "outdoorC",
+  "electricKw",
+  "pressureKpa",
+] as const satisfies readonly (ReadingChannel | CompanionChannel)[];
 const mostExamples = 20;
 /** The same reading exported in another unit differs by rounding only; a real one by far more. */
 const closeEnough = 1e-9;

@@ -9,6 +9,7 @@ import type { LogImport } from "@server/models/log-import";
 import type { Actor } from "@server/policies/actor";
 import { can } from "@server/policies/can";
 import type { ImportFacts, ImportPlace } from "./import-facts";
+import { presentPointSet, presentQuestion } from "./present-question";
 import { isCancellable, isEditable, isReopenable } from "./import-states";
 
 function placeOf(row: LogImport, facts: ImportFacts): ImportPlace {
@@ -63,18 +64,22 @@ export interface Twin {
   readonly importedAt: Date;
 }
 
+function presentDialect({ columnStarts, ...dialect }: FileRecipe["dialect"]) {
+  return { ...dialect, ...(columnStarts && { columnStarts: [...columnStarts] }) };
+}
+
 export function presentRecipe({ meter, ...recipe }: FileRecipe): NonNullable<ImportFile["recipe"]> {
   return {
     ...recipe,
-    columns: [...recipe.columns],
+    dialect: presentDialect(recipe.dialect),
+    columns: recipe.columns.map(({ badWords, ...column }) => ({
+      ...column,
+      ...(badWords && { badWords: [...badWords] }),
+    })),
     ...(meter && { meter: { ...meter, exchangedAt: [...meter.exchangedAt] } }),
   };
 }
 
-function presentFile(file: LogFile, twins: readonly Twin[]): ImportFile {
-  const twin = twins.find((other) => other.file.id === file.id);
-  const { recognition } = file;
-  return {
 function presentSource(file: LogFile): ImportFile["source"] {
   const { sourceKind, sourceName, sourceSha256, sourceByteLength, unpackNotes: notes } = file;
   if (sourceKind === null || sourceName === null || sourceSha256 === null) return null;
@@ -91,19 +96,28 @@ function presentSource(file: LogFile): ImportFile["source"] {
   };
 }
 
+function presentFile(
+  file: LogFile,
+  twins: readonly Twin[],
+  alsoFor: ImportFile["alsoFor"],
+): ImportFile {
+  const twin = twins.find((other) => other.file.id === file.id);
+  const { recognition } = file;
+  return {
     id: file.id,
     name: file.name,
     bytes: file.byteLength,
     sha256: file.sha256,
+    source: presentSource(file),
     uploadedAt: instantText(file.uploadedAt),
     sameAs: twin
       ? {
           importId: twin.earlier.importId,
-    source: presentSource(file),
           name: twin.earlier.name,
           importedAt: instantText(twin.importedAt),
         }
       : null,
+    alsoFor,
     unreadable: file.unreadable,
     recognition: recognition && {
       proofs: recognition.proofs.map((proof) => ({ ...proof })),
@@ -111,27 +125,23 @@ function presentSource(file: LogFile): ImportFile["source"] {
       sampleRows: recognition.sampleRows.map(({ line, cells }) => ({ line, cells: [...cells] })),
       dataRowCount: recognition.dataRowCount,
       columnCount: recognition.columnCount,
+      pointSets: (recognition.pointSets ?? []).map(presentPointSet),
       preamble: recognition.preamble.map((entry) => ({ ...entry })),
     },
     recipe: file.recipe && presentRecipe(file.recipe),
-    questions: (file.questions ?? []).map((question) => {
-      if (question.code === "dateOrder")
-        return {
-          ...question,
-          choices: [...question.choices],
-          stepSeconds: [...question.stepSeconds],
-        };
-      if (question.code === "flowUnit") return { ...question, choices: [...question.choices] };
-      if (question.code === "columnUnit") return { ...question, choices: [...question.choices] };
-      return { ...question };
-    }),
+    questions: (file.questions ?? []).map(presentQuestion),
   };
 }
 
 export function presentImportDetail(
   row: LogImport,
   facts: ImportFacts,
-  more: { files: readonly LogFile[]; twins: readonly Twin[]; bore: BoreVersion | null },
+  more: {
+    readonly files: readonly LogFile[];
+    readonly twins: readonly Twin[];
+    readonly alsoFor: ReadonlyMap<string, ImportFile["alsoFor"]>;
+    readonly bore: BoreVersion | null;
+  },
   actor: Actor,
 ): ImportDetail {
   const place = placeOf(row, facts);
@@ -142,7 +152,7 @@ export function presentImportDetail(
     ...summary,
     // Bytes that are stored already must not count twice: confirming would be refused.
     can: { ...summary.can, confirm: summary.can.confirm && more.twins.length === 0 },
-    files: more.files.map((file) => presentFile(file, more.twins)),
+    files: more.files.map((file) => presentFile(file, more.twins, more.alsoFor.get(file.id) ?? [])),
     repair: row.repair,
     checks: row.checks,
     pipe: bore && {

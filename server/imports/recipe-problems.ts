@@ -1,4 +1,4 @@
-import { isChannelMeaning, isCounter, unitsOfMeaning } from "@shared/domain/log-files/column-units";
+import { isCounter, needsUnit, unitsOfMeaning } from "@shared/domain/log-files/column-units";
 import type { DateOrder, FileRecipe } from "@shared/domain/log-files/recipe";
 import type { FieldError } from "@server/http/errors";
 import type { RecognitionFindings } from "@server/models/log-file";
@@ -25,15 +25,31 @@ export function recipeProblems(recipe: FileRecipe, recognition: RecognitionFindi
   if (seen.has("time") && (seen.has("date") || seen.has("timeOfDay")))
     add("columns", "two-times", "Give either one time column or a date and a time of day.");
   const named = recipe.columns.map(({ meaning }) => meaning);
-  if (!named.some((meaning) => isChannelMeaning(meaning) && meaning !== "signal"))
+  if (!named.some(needsUnit))
     add("columns", "no-quantity", "Name at least a flow, a temperature, a power or a counter.");
-  if (seen.has("flow") && seen.has("volumeCounter"))
-    add("columns", "two-flows", "Give either a flow rate or a volume counter. Skip one.");
+  if (FLOWS.filter((meaning) => seen.has(meaning)).length > 1)
+    add(
+      "columns",
+      "two-flows",
+      "Give one of flow rate, water speed, pulses and volume counter. Skip the others.",
+    );
+  if (seen.has("pulses") && recipe.seriesKind === "instantaneous")
+    add(
+      "seriesKind",
+      "pulses-have-a-step",
+      "Pulses are counted over a step: say whether it ends or starts at the row's time.",
+    );
   if (seen.has("power") && (seen.has("heatingCounter") || seen.has("coolingCounter")))
     add("columns", "two-powers", "Give either a power or energy counters. Skip one.");
   recipe.columns.forEach((column, i) => {
     if ((column.capacity ?? null) !== null && !isCounter(column.meaning))
       add(`columns/${i}/capacity`, "no-counter", "Only a counter starts from zero again.");
+  });
+  recipe.columns.forEach((column, i) => {
+    if ((column.pulseValue ?? null) !== null && column.meaning !== "pulses")
+      add(`columns/${i}/pulseValue`, "no-pulses", "Only a column of pulses has a pulse's worth.");
+    if (column.badWords !== undefined && column.meaning !== "status")
+      add(`columns/${i}/badWords`, "no-status", "Only a status column has words.");
   });
   const disproof = dateOrderDisproof(recipe, recognition);
   if (disproof) add("time/format/order", "disproved", disproof);
@@ -46,6 +62,9 @@ export function recipeProblems(recipe: FileRecipe, recognition: RecognitionFindi
       add(`dialect/${name}`, "after-data", "This line must stand before the first row of data.");
   return problems;
 }
+
+/** Ways to say how much water moved, of which a file is read by one. */
+const FLOWS = ["flow", "volumeCounter", "velocity", "pulses"];
 
 const MONTH_PLACE: Readonly<Record<DateOrder, number>> = {
   dayMonthYear: 1,

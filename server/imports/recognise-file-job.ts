@@ -17,6 +17,7 @@ import { loadEnergySettings } from "@server/readings/energy-settings";
 import { SERVICE_OF_ENERGY } from "@server/readings/meter-facts";
 import { applyBatchRecipe } from "./batch-recipe";
 import { importOfJob } from "./load-files";
+import { boresOf } from "./point-bores";
 import { readChunks } from "./read-log-file";
 import { settleImport } from "./settle-import";
 
@@ -27,6 +28,7 @@ export async function recogniseFileJob(context: JobContext): Promise<void> {
   if (file === null) throw new JobDropped();
   const { service } = await loadEnergySettings(database, file.pointId);
   const found = await recognise(context, file, SERVICE_OF_ENERGY[service]);
+  const hasBore = (await boresOf(file.pointId)).length > 0;
   await inTransaction(database, async (transaction) => {
     const row = await importOfJob(context, transaction);
     const fresh = await LogFile.findOne({ where: { id: file.id }, transaction });
@@ -39,7 +41,7 @@ export async function recogniseFileJob(context: JobContext): Promise<void> {
         {
           recognition: { ...findings, asked: questions, proposed: recipe },
           recipe,
-          questions,
+          questions: questions.filter(({ code }) => code !== "pointBore" || !hasBore),
           unreadable: null,
         },
         { transaction },
@@ -63,6 +65,7 @@ async function recognise(
     ? {
         encoding: file.recipe.dialect.encoding,
         separator: file.recipe.dialect.separator,
+        columnStarts: file.recipe.dialect.columnStarts,
         headerLine: file.recipe.dialect.headerLine,
       }
     : {};

@@ -1,9 +1,12 @@
 import type {
   CountedEnergyUnit,
   CountedVolumeUnit,
+  ElectricPowerUnit,
   FileRecipe,
   FlowUnit,
+  LoopPressureUnit,
   MeterPowerUnit,
+  OutdoorUnit,
   RepairChoices,
   TemperatureUnit,
 } from "@shared/domain/log-files/recipe";
@@ -11,20 +14,14 @@ import type { RawRows } from "@shared/domain/log-files/raw-rows";
 import type { RepairStep } from "@shared/domain/log-files/repair-step";
 import {
   resolveRows,
+  type InPlace,
   type OriginalChannel,
+  type PointFacts,
   type ResolvedRows,
+  type WrittenRows,
 } from "@shared/domain/log-files/resolve-rows";
 import type { ReadingColumns, SeriesKind } from "@shared/domain/readings/reading-columns";
 import type { StoredChannel, StoredRows } from "@server/readings/stored-rows";
-
-/** Choices with a stand-in where somebody has still to choose, so that a check can show a picture. */
-export function provisional(choices: RepairChoices): RepairChoices {
-  return {
-    ...choices,
-    conflictingRepeats: choices.conflictingRepeats ?? "keepFirst",
-    weakSignal: choices.weakSignal ?? "keep",
-  };
-}
 
 /** One file of an import, read and brought to UTC and SI units. */
 export interface ResolvedFile {
@@ -33,35 +30,28 @@ export interface ResolvedFile {
   readonly resolved: ResolvedRows;
   /** The rows with provisional choices where `resolved` is still undecided; null without a clock. */
   readonly columns: ReadingColumns | null;
+  /** Of counters alone. */
   readonly original: readonly OriginalChannel[];
   readonly line: Uint32Array;
 }
 
+/** Resolves the rows of a file where they lie: five million of them leave no room for copies. */
 export function resolveFile(
   fileId: string,
   raw: RawRows,
   recipe: FileRecipe,
   choices: RepairChoices,
   zone: string,
+  facts: PointFacts,
+  inPlace: InPlace,
 ): ResolvedFile {
-  const resolved = resolveRows(raw, recipe, choices, zone);
-  const shown =
-    resolved.columns === null ? resolveRows(raw, recipe, provisional(choices), zone) : resolved;
-  return {
-    fileId,
-    kind: recipe.seriesKind,
-    resolved,
-    columns: shown.columns,
-    original: shown.original,
-    line: shown.line,
-  };
+  const resolved = resolveRows(raw, recipe, choices, zone, facts, inPlace);
+  const { shown: columns, original, line } = resolved;
+  return { fileId, kind: recipe.seriesKind, resolved, columns, original, line };
 }
 
 /** The rows as they are stored: the numbers the logger wrote in its own units, and their quality. */
-export function storedRowsOf(
-  columns: ReadingColumns,
-  original: readonly OriginalChannel[],
-): StoredRows {
+export function storedRowsOf({ instantMs, quality, original }: WrittenRows): StoredRows {
   const channel = <Unit extends string>(
     meaning: OriginalChannel["meaning"],
   ): StoredChannel<Unit> | null => {
@@ -69,7 +59,7 @@ export function storedRowsOf(
     return found ? { unit: found.unit as string as Unit, values: found.values } : null;
   };
   return {
-    instantMs: columns.instantMs,
+    instantMs,
     flow: channel<FlowUnit>("flow"),
     supply: channel<TemperatureUnit>("supply"),
     return: channel<TemperatureUnit>("return"),
@@ -78,7 +68,10 @@ export function storedRowsOf(
     volumeCounter: channel<CountedVolumeUnit>("volumeCounter"),
     heatingCounter: channel<CountedEnergyUnit>("heatingCounter"),
     coolingCounter: channel<CountedEnergyUnit>("coolingCounter"),
-    quality: columns.quality,
+    outdoor: channel<OutdoorUnit>("outdoor"),
+    electricPower: channel<ElectricPowerUnit>("electricPower"),
+    pressure: channel<LoopPressureUnit>("pressure"),
+    quality,
   };
 }
 

@@ -5,6 +5,7 @@ import { pageOf, readCursor } from "@server/http/cursor";
 import { defineEndpoint } from "@server/http/define-endpoint";
 import { Conflict } from "@server/http/errors";
 import { FileAnswer } from "@server/http/file-answer";
+import { importAlsoFor } from "@server/imports/also-for-point";
 import * as commands from "@server/imports/change-import";
 import { importFacts } from "@server/imports/import-facts";
 import { presentImport } from "@server/imports/present-import";
@@ -86,6 +87,13 @@ export const importRoutes = [
     async handle(context, { params }) {
       const { importId, fileId } = params;
       return present(context, await commands.removeFile(context, importId, fileId));
+    },
+  }),
+  defineEndpoint(contracts.alsoForPoint, {
+    policy: may("importLogs"),
+    status: 201,
+    async handle(context, { params, body }) {
+      return present(context, await importAlsoFor(context, { ...params, ...body }));
     },
   }),
   defineEndpoint(contracts.chooseRecipe, {

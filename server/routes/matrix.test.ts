@@ -63,6 +63,7 @@ const matrix = `
   createImport             ✓   ✓   ✓   –   –   –
   addImportFile            ✓   ✓   ✓   –   –   –
   removeImportFile         ✓   ✓   ✓   –   –   –
+  alsoForPoint             ✓   ✓   ✓   –   –   –
   chooseRecipe             ✓   ✓   ✓   –   –   –
   chooseRepairs            ✓   ✓   ✓   –   –   –
   checkImport              ✓   ✓   ✓   –   –   –
@@ -77,6 +78,14 @@ const matrix = `
   updateRecipe             ✓   ✓   ✓   –   –   –
   deleteRecipe             ✓   ✓   ✓   –   –   –
   applyRecipe              ✓   ✓   ✓   –   –   –
+  listImportBatches        ✓   ✓   ✓   ✓   –   –
+  getImportBatch           ✓   ✓   ✓   ✓   –   –
+  downloadBatchReport      ✓   ✓   ✓   ✓   –   –
+  createImportBatch        ✓   ✓   ✓   –   –   –
+  addBatchFile             ✓   ✓   ✓   –   –   –
+  chooseBatchPoint         ✓   ✓   ✓   –   –   –
+  removeBatchFile          ✓   ✓   ✓   –   –   –
+  confirmImportBatch       ✓   ✓   ✓   –   –   –
   getEnergy                ✓   ✓   ✓   ✓   –   –
   getPointSummary          ✓   ✓   ✓   ✓   –   –
   getSeries                ✓   ✓   ✓   ✓   –   –

@@ -4,6 +4,7 @@ import { NotFound } from "@server/http/errors";
 import { sameFiles } from "@server/imports/change-import";
 import { importFacts } from "@server/imports/import-facts";
 import { presentImportDetail } from "@server/imports/present-import";
+import { sharedFiles } from "@server/imports/shared-files";
 import { filesOf } from "@server/imports/settle-import";
 import { LogFile } from "@server/models/log-file";
 import { LogImport } from "@server/models/log-import";
@@ -17,6 +18,7 @@ export async function presentWholeImport(context: Context, row: LogImport): Prom
     filesOf(row),
     currentBores(scope, [row.pointId]),
   ]);
+  const alsoFor = await sharedFiles(context, row, files);
   const same = await sameFiles(row, files);
   const earlier = await scope.list(LogImport, {
     where: { id: same.map((twin) => twin.earlier.importId) },
@@ -28,7 +30,7 @@ export async function presentWholeImport(context: Context, row: LogImport): Prom
   return presentImportDetail(
     row,
     facts,
-    { files, twins, bore: bores.get(row.pointId) ?? null },
+    { files, twins, alsoFor, bore: bores.get(row.pointId) ?? null },
     actor,
   );
 }

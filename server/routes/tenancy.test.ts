@@ -20,11 +20,20 @@ function addressOf({ contract }: Endpoint, ids: Readonly<Record<string, string>>
   return query === "" ? path : `${path}?${query}`;
 }
 
-function call(agent: Agent, endpoint: Endpoint, address: string): Test {
+type Ids = Readonly<Record<string, string>>;
+
+function filledIn(body: object | undefined, ids: Ids): object {
+  const text = JSON.stringify(body ?? {});
+  return JSON.parse(
+    text.replace(/":(\w+)"/g, (_, name: string) => JSON.stringify(ids[name])),
+  ) as object;
+}
+
+function call(agent: Agent, endpoint: Endpoint, address: string, ids: Ids): Test {
   const { method, operationId } = endpoint.contract;
   const { body, file } = sampleInputs[operationId] ?? {};
   if (method === "get" || method === "delete") return agent[method](address);
-  const request = agent[method](address, file === undefined ? (body ?? {}) : undefined);
+  const request = agent[method](address, file === undefined ? filledIn(body, ids) : undefined);
   return file === undefined ? request : request.attach("file", Buffer.from(file), "log.csv");
 }
 
@@ -33,11 +42,12 @@ it.each(withIds.map((endpoint) => [endpoint.contract.operationId, endpoint] as c
   async (_, endpoint) => {
     const owner = await signedIn(app, { role: "administrator" });
     const stranger = await signedIn(app, { role: "administrator" });
-    const address = addressOf(endpoint, await ownedIds(app, owner));
-    const foreign = await call(stranger, endpoint, address);
+    const ids = await ownedIds(app, owner);
+    const address = addressOf(endpoint, ids);
+    const foreign = await call(stranger, endpoint, address, ids);
     expect([foreign.status, foreign.body.code]).toEqual([404, "not-found"]);
     // Were the input wrong, the answer above would prove nothing. A state may forbid it (409).
-    const own = await call(owner, endpoint, address);
+    const own = await call(owner, endpoint, address, ids);
     expect([200, 201, 202, 409]).toContain(own.status);
   },
 );

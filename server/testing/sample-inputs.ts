@@ -4,6 +4,7 @@ import { plainRecipe } from "./import-factories";
 /** What an endpoint takes beside its ids, filled in so that validation lets it through. */
 export interface SampleInput {
   readonly query?: Readonly<Record<string, string>>;
+  /** A text ":name" stands for the id of that name. */
   readonly body?: object;
   /** Text of a file in the multipart field `file`. */
   readonly file?: string;
@@ -50,6 +51,8 @@ export const sampleInputs: Readonly<Record<string, SampleInput>> = {
   withdrawCorrection: { body: { reason: "Right after all" } },
   proposeFill: { body: { ...instants, method: "likeDays", reason: "Flat battery" } },
   addImportFile: { file: "time,flow\n2026-02-02 00:00,1.0\n" },
+  alsoForPoint: { body: { pointId: ":pointId" } },
+  addBatchFile: { file: "time,flow\n2026-02-02 00:00,2.0\n" },
   chooseRecipe: { body: plainRecipe },
   saveRecipe: { body: { name: "Plant room logger", shared: true } },
   updateRecipe: { body: { version: 1, shared: true } },

@@ -46,11 +46,18 @@ const proof = z.object({
     "columnMeaning",
     "columnUnit",
     "seriesKind",
+    "century",
   ]),
   columnIndex: z.number().nullable(),
   line: z.number().nullable(),
   cell: z.string().nullable(),
   certainty: z.enum(["proved", "likely"]),
+});
+const pointSet = z.object({
+  name: z.string().describe("what the headers of the set have in common"),
+  columns: z.array(
+    z.object({ index: z.number().int(), meaning: columnMeaning, unit: columnUnit.nullable() }),
+  ),
 });
 export const question = z.discriminatedUnion("code", [
   z.object({
@@ -98,6 +105,30 @@ export const question = z.discriminatedUnion("code", [
     minValue: z.number(),
     maxValue: z.number(),
   }),
+  z.object({
+    code: z.literal("pulseValue"),
+    columnIndex: z.number(),
+    minValue: z.number(),
+    maxValue: z.number(),
+  }),
+  z.object({
+    code: z.literal("statusWords"),
+    columnIndex: z.number(),
+    words: z.array(
+      z.object({
+        word: z.string(),
+        count: z.number().int(),
+        likely: z.enum(["bad", "good"]).nullable(),
+      }),
+    ),
+  }),
+  z.object({
+    code: z.literal("alikeColumns"),
+    columnIndexes: z.array(z.number()),
+    meanings: z.array(columnMeaning),
+  }),
+  z.object({ code: z.literal("whichSet"), sets: z.array(pointSet) }),
+  z.object({ code: z.literal("pointBore"), columnIndex: z.number() }),
   z.object({ code: z.literal("loggerClock") }),
 ]);
 export type QuestionView = z.infer<typeof question>;
@@ -116,9 +147,32 @@ export const fileSource = z.object({
   name: z.string(),
   bytes: z.number(),
   sha256: z.string(),
+  member: z.string().nullable().describe("the sheet or the path in the archive"),
+  leftOut: z.array(leftOut),
+  formulasWithoutValue: z.number().int(),
+  nameMisleads: z.boolean().describe("the ending promises another kind of file"),
+  countsFrom1904: z.boolean(),
+});
+
+export const importFile = z.object({
+  id,
+  name: z.string(),
+  bytes: z.number().describe("of the text that is read"),
+  sha256: z.string().describe("of the text that is read"),
+  source: fileSource.nullable().describe("null where the upload was the text itself"),
   uploadedAt: instant,
   /** The same bytes were imported before for this point (and not undone). */
   sameAs: z.object({ importId: id, name: z.string(), importedAt: instant }).nullable(),
+  alsoFor: z
+    .array(
+      z.object({
+        importId: id,
+        point: z.object({ id, code: z.string(), name: z.string() }),
+        loopTag: z.string(),
+        sameColumns: z.array(z.number().int()).describe("columns that both points read"),
+      }),
+    )
+    .describe("imports of the same text for other points"),
   unreadable: z
     .object({ code: z.string(), line: z.number().nullable(), cell: z.string().nullable() })
     .nullable(),
@@ -129,6 +183,7 @@ export const fileSource = z.object({
       sampleRows: z.array(z.object({ line: z.number(), cells: z.array(z.string()) })),
       dataRowCount: z.number(),
       columnCount: z.number(),
+      pointSets: z.array(pointSet).describe("two sets of columns or more, each of another point"),
       preamble: z.array(z.object({ line: z.number(), label: z.string(), value: z.string() })),
     })
     .nullable(),
@@ -147,19 +202,6 @@ export const importProgress = z.object({
 export const importSummary = z.object({
   id,
   state: importState,
-  member: z.string().nullable().describe("the sheet or the path in the archive"),
-  leftOut: z.array(leftOut),
-  formulasWithoutValue: z.number().int(),
-  nameMisleads: z.boolean().describe("the ending promises another kind of file"),
-  countsFrom1904: z.boolean(),
-});
-
-export const importFile = z.object({
-  id,
-  name: z.string(),
-  bytes: z.number().describe("of the text that is read"),
-  sha256: z.string().describe("of the text that is read"),
-  source: fileSource.nullable().describe("null where the upload was the text itself"),
   point: z.object({ id, code: z.string(), name: z.string() }),
   loop: z.object({
     id,
@@ -251,6 +293,16 @@ export const removeImportFile = contract({
   params: fileId,
   answer: importDetail,
 });
+export const alsoForPoint = contract({
+  operationId: "alsoForPoint",
+  summary: "Open an import of the same file for another point of the site, without another upload",
+  tag: "Import",
+  method: "post",
+  path: "/imports/:importId/files/:fileId/also",
+  params: fileId,
+  body: z.object({ pointId: id }),
+  answer: importDetail,
+});
 export const chooseRecipe = contract({
   operationId: "chooseRecipe",
   summary:
@@ -328,6 +380,16 @@ export const downloadLogFile = contract({
   answer: nothing,
   answerKind: "file",
 });
+export const downloadLogText = contract({
+  operationId: "downloadLogText",
+  summary: "The text that is read: of an uploaded workbook or archive, the member's",
+  tag: "Import",
+  method: "get",
+  path: "/imports/:importId/files/:fileId/text",
+  params: fileId,
+  answer: nothing,
+  answerKind: "file",
+});
 export const previewLogRows = contract({
   operationId: "previewLogRows",
   summary: "Rows of a file as written, from a line on",
@@ -340,14 +402,4 @@ export const previewLogRows = contract({
     limit: z.coerce.number().int().min(1).max(100).default(20),
   }),
   answer: z.object({ rows: z.array(z.object({ line: z.number(), cells: z.array(z.string()) })) }),
-});
-export const downloadLogText = contract({
-  operationId: "downloadLogText",
-  summary: "The text that is read: of an uploaded workbook or archive, the member's",
-  tag: "Import",
-  method: "get",
-  path: "/imports/:importId/files/:fileId/text",
-  params: fileId,
-  answer: nothing,
-  answerKind: "file",
 });

@@ -12,6 +12,18 @@ export const dialect = z.object({
   headerLine: z.number().int().min(1).nullable(),
   unitsLine: z.number().int().min(1).nullable(),
   firstDataLine: z.number().int().min(1),
+  columnStarts: z
+    .array(z.number().int().min(0).max(1000))
+    .max(200)
+    .refine(
+      (starts) =>
+        starts.every((start, i) => (i === 0 ? start === 0 : start > (starts[i - 1] ?? 0))),
+      "must begin with 0 and ascend",
+    )
+    .optional()
+    .describe(
+      "columns of fixed width: the 0-based character at which each begins, the first 0; the separator is then a tab. Left out where a separator parts the columns; empty: find them",
+    ),
 });
 export const columnMeaning = z.enum([
   "time",

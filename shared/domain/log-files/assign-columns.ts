@@ -100,7 +100,10 @@ export function assignColumns(
   const open = withRole("unknown").length > 0 || withRole("someTemperature").length > 0;
   const temperaturesFound = withRole("supply").length + withRole("return").length;
   const flowLacks = !saysHowMuch;
-  if (flows.length > 1 || (flowLacks && (open || temperaturesFound === 0))) asked.push("flow");
+  const isBesideOnly =
+    temperaturesFound === 0 && candidates.some(({ role }) => BESIDE_ROLES.has(role));
+  if (flows.length > 1 || (flowLacks && (open || (temperaturesFound === 0 && !isBesideOnly))))
+    asked.push("flow");
   for (const role of ["supply", "return"] as const) {
     const found = withRole(role).length;
     if (alike.length > 0 || pointSets.length > 0) continue;
@@ -161,6 +164,9 @@ function findAlikeProbes(candidates: readonly Candidate[]): readonly number[] {
   const isAlike = probes.length > 1 && probes.every(({ name }) => name === first?.name);
   return isAlike && !named ? probes.map(({ index }) => index) : [];
 }
+
+/** Companion series, which may come in a file of their own. */
+const BESIDE_ROLES: ReadonlySet<Role> = new Set<Role>(["outdoor", "electricPower", "pressure"]);
 
 const OWN_ROLES: ReadonlySet<Role> = new Set<Role>([
   "velocity",
@@ -265,11 +271,10 @@ function besideRole(
 ): Role | null {
   if (unit === null) return null;
   const ours = unit.unit;
+  if (ours === null && unit.other === "pulses") return "pulses";
   switch (meaning) {
     case "velocity":
       return ours === "m/s" || ours === "ft/s" ? "velocity" : "skip";
-    case "pulses":
-      return ours === null && unit.other === "other" ? "pulses" : null;
     case "outdoor":
       return ours === "degC" || ours === "degF" ? "outdoor" : "skip";
     case "electricPower":

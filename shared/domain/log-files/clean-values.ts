@@ -29,23 +29,27 @@ function possibleRange(unit: ColumnUnit | null): { readonly min: number; readonl
 }
 
 export interface CleanChannels {
-  /** In the order of the raw channels, file order; the raw array itself where nothing had to change. */
+  /** In the order of the raw channels, file order; the raw array itself where nothing had to change, or in place. */
   readonly values: readonly Float64Array[];
   readonly sentinels: Tally;
 }
 
-/** Blanks the numbers that mean "no reading" and counts them with the words that do. Nothing becomes zero. */
+/**
+ * Blanks the numbers that mean "no reading" and counts them with the words that do. Nothing becomes zero.
+ * @param inPlace whether the raw arrays may be written to
+ */
 export function blankSentinels(
   raw: RawRows,
   instantMs: Float64Array,
   choice: RepairChoices["sentinels"],
+  inPlace = false,
 ): CleanChannels {
   const sentinels = newTally();
   sentinels.count = raw.tokens.count;
   sentinels.examples.push(...raw.tokens.examples);
   Object.assign(sentinels.countByKind, raw.tokens.countByKind);
   const values = raw.channels.map((channel) =>
-    blankChannel(raw, channel, instantMs, choice, sentinels),
+    blankChannel(raw, channel, instantMs, choice, sentinels, inPlace),
   );
   return { values, sentinels };
 }
@@ -56,6 +60,7 @@ function blankChannel(
   instantMs: Float64Array,
   choice: RepairChoices["sentinels"],
   sentinels: Tally,
+  inPlace: boolean,
 ): Float64Array {
   // Places of words are no readings.
   if (channel.meaning === "status") return channel.values;
@@ -79,16 +84,29 @@ function blankChannel(
       instantMs: Number.isNaN(instantMs[i]) ? null : (instantMs[i] as number),
     }));
     if (choice === "asWritten") continue;
-    blanked ??= channel.values.slice();
+    blanked ??= inPlace ? channel.values : channel.values.slice();
     blanked[i] = NaN;
   }
   return blanked ?? channel.values;
 }
 
-/** The rows of `order` taken out of a column; the column itself where all rows stay as they are. */
-export function gather(values: Float64Array, order: Uint32Array | null): Float64Array {
-  if (order === null) return values;
-  const out = new Float64Array(order.length);
-  for (let i = 0; i < order.length; i++) out[i] = values[order[i] as number] as number;
-  return out;
+/** Takes the rows of an order out of column after column; null keeps all rows as they stand. */
+export class Gathering {
+  private spare: Float64Array | null = null;
+
+  /** @param inPlace whether a column that was gathered may be written over with the next one's rows */
+  constructor(
+    private readonly order: Uint32Array | null,
+    private readonly inPlace: boolean,
+  ) {}
+
+  /** The column itself where all rows stay. @param isKept whether the column must stay as it is */
+  gather(values: Float64Array, isKept = false): Float64Array {
+    const { order } = this;
+    if (order === null) return values;
+    const room = this.spare ?? new Float64Array(this.inPlace ? values.length : order.length);
+    for (let i = 0; i < order.length; i++) room[i] = values[order[i] as number] as number;
+    if (this.inPlace) this.spare = isKept ? null : values;
+    return room.subarray(0, order.length);
+  }
 }

@@ -75,7 +75,9 @@ export function isCompanion(meaning: ColumnMeaning): meaning is CompanionMeaning
 }
 
 /** Whether a column of this meaning must have a unit; signals are percent, words have none. */
-export function needsUnit(meaning: ColumnMeaning): meaning is ChannelMeaning {
+export function needsUnit(
+  meaning: ColumnMeaning,
+): meaning is Exclude<ChannelMeaning, "signal" | "status"> {
   return isChannelMeaning(meaning) && meaning !== "signal" && meaning !== "status";
 }
 

@@ -1,6 +1,6 @@
 import { RowQuality, type ReadingColumns } from "../readings/reading-columns";
-import { blankSentinels, gather } from "./clean-values";
-import { columnToStoredUnit, storedUnitOf } from "./column-units";
+import { blankSentinels, Gathering } from "./clean-values";
+import { columnToStoredUnit, convertInPlace, isCounter, storedUnitOf } from "./column-units";
 import { findGaps, nominalStepMs } from "./find-gaps";
 import { orderRows } from "./order-rows";
 import {
@@ -64,6 +64,12 @@ export interface RowCounts {
 export interface ResolvedRows {
   /** Null while a question is open: nothing may be stored then. */
   readonly columns: ReadingColumns | null;
+  /**
+   * The same, with the first reading of each open conflict and weak signals kept, for a picture of
+   * what is asked; null while another question is open.
+   */
+  readonly shown: ReadingColumns | null;
+  /** Resolved in place, those of counters alone: the others have been converted where they lay. */
   readonly original: readonly OriginalChannel[];
   /** Line in the file of each kept row. */
   readonly line: Uint32Array;
@@ -74,6 +80,21 @@ export interface ResolvedRows {
   readonly firstInstantMs: number | null;
   readonly lastInstantMs: number | null;
   readonly counts: RowCounts;
+}
+
+/** The rows kept, as the file has them. */
+export interface WrittenRows {
+  readonly instantMs: Float64Array;
+  readonly quality: Uint8Array;
+  readonly original: readonly OriginalChannel[];
+}
+
+/** How a file is resolved whose copies would not fit: in the memory of `raw`, which is used up. */
+export interface InPlace {
+  /** Called after each step; may throw to stop the work. */
+  onStep(): void;
+  /** Given the rows before their units are converted; nothing of them may be kept. */
+  onWritten(rows: WrittenRows): void;
 }
 
 /** What is known of the metering point a file is read for. */
@@ -90,7 +111,8 @@ export const NO_POINT_FACTS: PointFacts = { bores: [] };
  * Order: times by file order → out-of-order rows → repeats → sentinels → flow from speed or pulses →
  * weak signal and bad status → units.
  * With an open question `columns` is null; steps, gaps and counts are then provisional.
- * Columns may share memory with `raw` and each other: do not write to them.
+ * Columns may share memory with `raw` and each other: do not write to them. Given `inPlace`, the
+ * result is the same but for `original`, and `raw` cannot be used again.
  */
 export function resolveRows(
   raw: RawRows,
@@ -98,9 +120,11 @@ export function resolveRows(
   choices: RepairChoices,
   siteZone: string,
   facts: PointFacts = NO_POINT_FACTS,
+  inPlace: InPlace | null = null,
 ): ResolvedRows {
   const questions: RepairQuestion[] = columnQuestions(raw, recipe, facts);
-  const times = resolveTimes(raw, recipe.time.clock, choices.missingHour, siteZone);
+  const { clock } = recipe.time;
+  const times = resolveTimes(raw, clock, choices.missingHour, siteZone, inPlace && raw.timeMs);
   if (times === null) {
     return {
       ...nothing(raw),
@@ -108,9 +132,13 @@ export function resolveRows(
       questions: [{ code: "loggerClock" }, ...questions],
     };
   }
+  inPlace?.onStep();
   const ordered = orderRows(raw, times.instantMs, choices);
-  const cleaned = blankSentinels(raw, times.instantMs, choices.sentinels);
-  const instantMs = gather(times.instantMs, ordered.order);
+  inPlace?.onStep();
+  const cleaned = blankSentinels(raw, times.instantMs, choices.sentinels, inPlace !== null);
+  inPlace?.onStep();
+  const gathering = new Gathering(ordered.order, inPlace !== null);
+  const instantMs = gathering.gather(times.instantMs);
   const line =
     ordered.order === null ? raw.line : ordered.order.map((row) => raw.line[row] as number);
   const stepMs = nominalStepMs(instantMs);
@@ -118,20 +146,42 @@ export function resolveRows(
     meaning: channel.meaning,
     unit: channel.unit ?? storedUnitOf(channel.meaning),
     decimals: channel.decimals,
-    values: gather(cleaned.values[i] as Float64Array, ordered.order),
+    // Words are looked up by their places in the file once more.
+    values: gathering.gather(cleaned.values[i] as Float64Array, channel.meaning === "status"),
   }));
+  inPlace?.onStep();
   const rows = { instantMs, line };
   const derived = deriveFlow(written, recipe, rows, stepMs, facts);
   const original = written.flatMap((channel) => {
     if (channel.meaning === "status") return [];
     return isDerived(channel.meaning) ? flowChannel(derived) : [channel];
   });
+  const channelOf = (meaning: ChannelMeaning) =>
+    original.find((other) => other.meaning === meaning);
+  const asWritten = (meaning: ChannelMeaning) => channelOf(meaning)?.values ?? null;
+  const { quality, weakSignal } = judgeRows(
+    instantMs,
+    line,
+    noReadings(
+      instantMs.length,
+      [asWritten("volumeCounter") ?? asWritten("flow"), asWritten("supply"), asWritten("return")],
+      [asWritten("power"), asWritten("heatingCounter"), asWritten("coolingCounter")],
+    ),
+    asWritten("signal"),
+    choices,
+  );
+  const badStatus = excludeBadStatus(raw, recipe, ordered.order, rows, quality);
+  inPlace?.onWritten({ instantMs, quality, original });
+
   const conversion = newTally();
   const stored = (meaning: ChannelMeaning): Float64Array | null => {
-    const channel = original.find((other) => other.meaning === meaning);
+    const channel = channelOf(meaning);
     if (channel === undefined) return null;
     countConversion(conversion, channel);
-    return columnToStoredUnit(channel.values, channel.unit);
+    inPlace?.onStep();
+    return inPlace !== null && !isCounter(meaning)
+      ? convertInPlace(channel.values, channel.unit)
+      : columnToStoredUnit(channel.values, channel.unit);
   };
   const flowM3PerHour = stored("flow");
   const supplyC = stored("supply");
@@ -141,23 +191,13 @@ export function resolveRows(
   const volumeCounterM3 = stored("volumeCounter");
   const heatingCounterKwh = stored("heatingCounter");
   const coolingCounterKwh = stored("coolingCounter");
-  const metered = [powerKw, heatingCounterKwh, coolingCounterKwh].filter(
-    (channel) => channel !== null,
-  );
   const companions = {
     outdoorC: stored("outdoor"),
     electricKw: stored("electricPower"),
     pressureKpa: stored("pressure"),
   };
-  const { quality, weakSignal } = judgeRows(
-    instantMs,
-    line,
-    noReadings(instantMs.length, [volumeCounterM3 ?? flowM3PerHour, supplyC, returnC], metered),
-    signalPercent,
-    choices,
-  );
-  const badStatus = excludeBadStatus(raw, recipe, ordered.order, rows, quality);
-
+  // Only these two have an answer to go on with meanwhile.
+  const isShown = questions.length === 0;
   if (choices.conflictingRepeats === null && ordered.conflictingRepeats.count > 0) {
     questions.push(asQuestion("conflictingRepeats", ordered.conflictingRepeats));
   }
@@ -165,26 +205,25 @@ export function resolveRows(
     questions.push(asQuestion("weakSignal", weakSignal));
 
   const gaps = stepMs === null ? [] : findGaps(instantMs, flowM3PerHour, stepMs);
+  const columns: ReadingColumns = {
+    instantMs,
+    flowM3PerHour,
+    supplyC,
+    returnC,
+    signalPercent,
+    ...(powerKw && { powerKw }),
+    ...(volumeCounterM3 && { volumeCounterM3 }),
+    ...(heatingCounterKwh && { heatingCounterKwh }),
+    ...(coolingCounterKwh && { coolingCounterKwh }),
+    ...(companions.outdoorC && { outdoorC: companions.outdoorC }),
+    ...(companions.electricKw && { electricKw: companions.electricKw }),
+    ...(companions.pressureKpa && { pressureKpa: companions.pressureKpa }),
+    quality,
+  };
   return {
-    columns:
-      questions.length > 0
-        ? null
-        : {
-            instantMs,
-            flowM3PerHour,
-            supplyC,
-            returnC,
-            signalPercent,
-            ...(powerKw && { powerKw }),
-            ...(volumeCounterM3 && { volumeCounterM3 }),
-            ...(heatingCounterKwh && { heatingCounterKwh }),
-            ...(coolingCounterKwh && { coolingCounterKwh }),
-            ...(companions.outdoorC && { outdoorC: companions.outdoorC }),
-            ...(companions.electricKw && { electricKw: companions.electricKw }),
-            ...(companions.pressureKpa && { pressureKpa: companions.pressureKpa }),
-            quality,
-          },
-    original,
+    columns: questions.length > 0 ? null : columns,
+    shown: isShown ? columns : null,
+    original: inPlace ? original.filter(({ meaning }) => isCounter(meaning)) : original,
     line,
     steps: [
       ...rawSteps(raw),
@@ -292,6 +331,7 @@ function excludeBadStatus(
 function nothing(raw: RawRows): Omit<ResolvedRows, "steps" | "questions"> {
   return {
     columns: null,
+    shown: null,
     original: [],
     line: new Uint32Array(0),
     gaps: [],
@@ -336,7 +376,7 @@ function countConversion(into: Tally, { unit, values, meaning }: OriginalChannel
   const target = storedUnitOf(meaning);
   if (unit === target) return;
   let cells = 0;
-  for (let i = 0; i < values.length; i++) if (!Number.isNaN(values[i])) cells++;
+  for (let i = 0; i < values.length; i++) if (values[i] === values[i]) cells++;
   into.count += cells;
   into.countByKind[`${meaning}: ${unit} → ${target}`] = cells;
 }
@@ -349,19 +389,21 @@ function countConversion(into: Tally, { unit, values, meaning }: OriginalChannel
 function noReadings(
   count: number,
   water: readonly (Float64Array | null)[],
-  metered: readonly Float64Array[],
+  meters: readonly (Float64Array | null)[],
 ): Uint8Array {
   const quality = new Uint8Array(count);
-  const noReading = RowQuality.noReading;
+  const { noReading, measured } = RowQuality;
+  const metered = meters.filter((channel) => channel !== null);
   for (const channel of water) {
     if (channel === null) {
       if (metered.length > 0) quality.fill(noReading);
       continue;
     }
-    for (let i = 0; i < count; i++) if (Number.isNaN(channel[i])) quality[i] = noReading;
+    // NaN is the one value that differs from itself; asking Number costs four times as much.
+    for (let i = 0; i < count; i++) if (channel[i] !== channel[i]) quality[i] = noReading;
   }
   for (const channel of metered)
-    for (let i = 0; i < count; i++) if (!Number.isNaN(channel[i])) quality[i] = RowQuality.measured;
+    for (let i = 0; i < count; i++) if (channel[i] === channel[i]) quality[i] = measured;
   return quality;
 }
 
@@ -396,11 +438,12 @@ function countRows(
   stepMs: number | null,
 ): RowCounts {
   const kept = instantMs.length;
+  const codes = RowQuality;
   let excluded = 0;
   let noReading = 0;
   for (let i = 0; i < kept; i++) {
-    if (quality[i] === RowQuality.excluded) excluded++;
-    else if (quality[i] === RowQuality.noReading) noReading++;
+    if (quality[i] === codes.excluded) excluded++;
+    else if (quality[i] === codes.noReading) noReading++;
   }
   const span = kept < 2 ? null : (instantMs[kept - 1] as number) - (instantMs[0] as number);
   const expected = span === null || stepMs === null ? null : Math.round(span / stepMs) + 1;

@@ -28,20 +28,27 @@ export interface ResolvedTimes {
 /**
  * Turns the times of a file into UTC, in file order: the repeated hour can only be told apart by the rows
  * round it. Null if some row needs a clock and none is chosen.
+ * @param into room for the instants, `raw.timeMs` itself where it is of no more use; else new
  */
 export function resolveTimes(
   raw: RawRows,
   clock: LoggerClock | null,
   choice: RepairChoices["missingHour"],
   siteZone: string,
+  into: Float64Array | null = null,
 ): ResolvedTimes | null {
   const needsClock = raw.isUtc.includes(0);
   if (!needsClock || clock?.kind === "utc") return withoutChanges(raw.timeMs);
   if (clock === null) return null;
   if (clock.kind === "site" || clock.kind === "zone")
-    return new WallClockReading(raw, clock.kind === "site" ? siteZone : clock.zone, choice).read();
+    return new WallClockReading(
+      raw,
+      clock.kind === "site" ? siteZone : clock.zone,
+      choice,
+      into ?? new Float64Array(raw.rowCount),
+    ).read();
   const { rowCount, timeMs, isUtc } = raw;
-  const instantMs = new Float64Array(rowCount);
+  const instantMs = into ?? new Float64Array(rowCount);
   const offsetMs =
     clock.kind === "siteStandard"
       ? standardOffsetMs(siteZone, timeMs[0] ?? 0)
@@ -56,13 +63,14 @@ function withoutChanges(instantMs: Float64Array): ResolvedTimes {
 }
 
 class WallClockReading {
-  private readonly instantMs: Float64Array;
   private readonly repeatedHour = newTally();
   private readonly missingHour = newTally();
   private readonly clock: LocalClock;
   private readonly stepMs: number;
   /** Rows of a repeated hour and right after it, waiting to be judged together. */
   private chain: number[] = [];
+  /** What the clock showed in them; the rows' own times may be written over by then. */
+  private chainTimeMs: number[] = [];
   private chainIsRepeated: boolean[] = [];
   private sinceRepeated = 0;
   /** Rows of repeated hours by label, kept only where the rows are shuffled; else null. */
@@ -72,8 +80,8 @@ class WallClockReading {
     private readonly raw: RawRows,
     private readonly zone: string,
     private readonly choice: RepairChoices["missingHour"],
+    private readonly instantMs: Float64Array,
   ) {
-    this.instantMs = new Float64Array(raw.rowCount);
     this.clock = createLocalClock(zone);
     this.stepMs = nominalStepMs(raw.timeMs) ?? 0;
     this.rowsByLabel = isShuffled(raw.timeMs) ? new Map() : null;
@@ -92,8 +100,8 @@ class WallClockReading {
       if (clock.lastKind !== "unique") {
         if (clock.lastKind === "missing") this.readMissing(i, ms);
         else if (this.rowsByLabel !== null) this.rememberLabel(this.rowsByLabel, i, ms);
-        else this.link(i, true);
-      } else if (this.chain.length > 0) this.link(i, false);
+        else this.link(i, ms, true);
+      } else if (this.chain.length > 0) this.link(i, ms, false);
     }
     this.judgeChain();
     if (this.rowsByLabel !== null) this.judgeLabels(this.rowsByLabel);
@@ -140,20 +148,18 @@ class WallClockReading {
     tally(this.repeatedHour, kind, () => ({ line, column: null, cell: null, instantMs: at }));
   }
 
-  private link(row: number, isRepeated: boolean): void {
+  private link(row: number, timeMs: number, isRepeated: boolean): void {
     this.chain.push(row);
+    this.chainTimeMs.push(timeMs);
     this.chainIsRepeated.push(isRepeated);
     this.sinceRepeated = isRepeated ? 0 : this.sinceRepeated + 1;
     if (this.sinceRepeated >= ROWS_AFTER) this.judgeChain();
   }
 
-  private isWrittenTwice(row: number, before: number): boolean {
-    return this.raw.timeMs[row] === this.raw.timeMs[before] && sameReadings(this.raw, row, before);
-  }
-
   private judgeChain(): void {
-    const { chain, chainIsRepeated, raw, instantMs } = this;
+    const { chain, chainTimeMs, chainIsRepeated, raw, instantMs } = this;
     this.chain = [];
+    this.chainTimeMs = [];
     this.chainIsRepeated = [];
     this.sinceRepeated = 0;
     const [first] = chain;
@@ -165,14 +171,15 @@ class WallClockReading {
     const place: number[] = [];
     for (let k = 0; k < chain.length; k++) {
       const row = chain[k] as number;
-      const meaning =
-        chainIsRepeated[k] === true ? offsets.fromLocal(raw.timeMs[row] as number) : null;
+      const timeMs = chainTimeMs[k] as number;
+      const meaning = chainIsRepeated[k] === true ? offsets.fromLocal(timeMs) : null;
       const isRepeated = meaning?.kind === "repeated";
       const shiftMs = isRepeated ? meaning.laterMs - meaning.earlierMs : 0;
       if (
         k > 0 &&
         Math.abs(this.stepMs) < shiftMs &&
-        this.isWrittenTwice(row, chain[k - 1] as number)
+        timeMs === chainTimeMs[k - 1] &&
+        sameReadings(raw, row, chain[k - 1] as number)
       ) {
         place.push(earlier.length - 1);
         continue;
@@ -188,7 +195,7 @@ class WallClockReading {
       const row = chain[k] as number;
       const at = chosen[place[k] as number] as number;
       instantMs[row] = at;
-      this.count(row, isUnclear ? "unclear" : offsetName((raw.timeMs[row] as number) - at), at);
+      this.count(row, isUnclear ? "unclear" : offsetName((chainTimeMs[k] as number) - at), at);
     }
   }
 }

@@ -6,7 +6,7 @@ export type UnitWord =
 
 /** Quantities beside ours; the word tells that a column is none of flow, temperature or signal. */
 export type OtherQuantity =
-  "otherFlow" | "volume" | "power" | "energy" | "speed" | "difference" | "other";
+  "otherFlow" | "volume" | "power" | "energy" | "speed" | "difference" | "pulses" | "other";
 
 const OURS: Readonly<Record<string, ColumnUnit>> = {
   "m3/h": "m3/h",
@@ -132,6 +132,18 @@ const LETTERS: Readonly<Record<string, ColumnUnit>> = {
   l: "L",
 };
 
+/** In the place of a unit these say that pulses are counted; as a header they are its name. */
+const PULSES: ReadonlySet<string> = new Set([
+  "imp",
+  "imps",
+  "impulse",
+  "impulses",
+  "impulsions",
+  "pulse",
+  "pulses",
+  "counts",
+]);
+
 const OTHERS: Readonly<Record<string, OtherQuantity>> = {
   "m3/s": "otherFlow",
   "m3/min": "otherFlow",
@@ -166,11 +178,6 @@ const OTHERS: Readonly<Record<string, OtherQuantity>> = {
   ma: "other",
   mbar: "other",
   pa: "other",
-  imp: "other",
-  impulse: "other",
-  pulse: "other",
-  pulses: "other",
-  counts: "other",
   hz: "other",
   rpm: "other",
   s: "other",
@@ -195,6 +202,7 @@ export function unitWord(text: string, expected: boolean): UnitWord | null {
   const letters = expected ? LETTERS : {};
   const ours = own(OURS, key) ?? own(letters, key);
   if (ours !== undefined) return { unit: ours };
+  if (expected && PULSES.has(key)) return { unit: null, other: "pulses" };
   const other = own(OTHERS, key);
   return other === undefined ? null : { unit: null, other };
 }
