@@ -39,6 +39,7 @@ export function Headline(props: FiguresWithWorkings) {
           <CoveredWords {...props} />
         </Text>
         <OtherRegister {...props} shown={registers} />
+        <RegisterTimes {...props} />
         <Suppressed {...props} />
         <Filled {...props} />
         {summary.basis.rowsAgainstRegister > 0 ? (
@@ -143,6 +144,23 @@ function OtherRegister(props: LoopFigures & { shown: readonly RegisterName[] }) 
   return (
     <Text variant="small" tone="ink2">
       {t(`headline.other.${other}`, { energy: format.withUnit(energy, energyQuantity[other]) })}
+    </Text>
+  );
+}
+
+/** On a changeover loop: how long each register ran, and for how long neither did. */
+function RegisterTimes({ summary, loop, format }: LoopFigures) {
+  const t = useWords("loops");
+  const { heating, cooling, coveredS } = summary.totals;
+  if (loop.service !== "changeover" || coveredS === 0) return null;
+  const neitherS = Math.max(0, coveredS - heating.runningS - cooling.runningS);
+  return (
+    <Text variant="small" tone="ink2">
+      {t("headline.registerTimes", {
+        heating: format.duration(heating.runningS),
+        cooling: format.duration(cooling.runningS),
+        neither: format.duration(neitherS),
+      })}
     </Text>
   );
 }

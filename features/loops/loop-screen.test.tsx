@@ -325,6 +325,21 @@ it("never nets a changeover loop's registers", async () => {
   expect(screen.queryByText(/77/)).toBeNull();
 });
 
+it("says how long each register of a changeover loop ran, and how long neither did", async () => {
+  serverAnswers("GET /loops/7", loopOf({ service: "changeover" }));
+  const totals = {
+    ...summaryOf().totals,
+    coveredS: 86_400,
+    heating: { ...register(1646.25, 5), runningS: 36_000 },
+    cooling: { ...register(1569.19, 5), runningS: 34_200 },
+  };
+  serverAnswers(summaryCall, summaryOf({ totals }));
+  show(<LoopScreen />);
+  expect(
+    await screen.findByText(/^Heating ran 10.h, cooling 9.h 30.min, neither 4.h 30.min\.$/),
+  ).toBeVisible();
+});
+
 it("says that a permanent meter's class is not recorded, and leads to where it can be", async () => {
   const none = { energy: null, deltaT: null };
   const plusMinus = { heating: none, cooling: none, volume: null, lacks: "meterClass" } as const;

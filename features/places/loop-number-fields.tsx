@@ -138,6 +138,7 @@ function CutOffFields(props: LoopFormProps) {
   return (
     <>
       <Text tone="ink2">{t("loop.cutOffWhy")}</Text>
+      {values.service === "changeover" ? <Text tone="ink2">{t("loop.cutOffBand")}</Text> : null}
       <FieldRow>
         <View style={{ gap: 6 }}>
           <NumberField

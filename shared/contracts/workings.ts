@@ -168,6 +168,15 @@ export const workings = z.object({
     absoluteMPa: z.number(),
     pressureAssumed: z.boolean(),
     fluid,
+    /** The loop's cut-offs: what falls below either counts in no register. Null: not set. */
+    cutOffs: z.object({
+      flowM3PerHour: z.number().nullable(),
+      deltaTK: z.number().nullable(),
+      suppressedKwh: z.number().describe("held back in the range"),
+      suppressedS: z.number(),
+      /** With two registers the cut-offs are also the band in which neither runs. */
+      separatesRegisters: z.boolean(),
+    }),
     meansOnly: z.boolean(),
     recalculating: z.boolean(),
   }),

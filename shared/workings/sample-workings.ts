@@ -163,6 +163,13 @@ export const SAMPLE_WORKINGS: Workings = {
     absoluteMPa: 1.6,
     pressureAssumed: true,
     fluid: { kind: "water" },
+    cutOffs: {
+      flowM3PerHour: 0.5,
+      deltaTK: null,
+      suppressedKwh: 0,
+      suppressedS: 0,
+      separatesRegisters: false,
+    },
     meansOnly: false,
     recalculating: false,
   },

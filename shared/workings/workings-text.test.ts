@@ -52,6 +52,22 @@ describe("the workings of a figure in words", () => {
     expect(textOf("en").rows.sentence).toBe("9,937 measured, 37 excluded, 106 missing");
   });
 
+  it("name the band in which neither register of a changeover loop runs, and what it held back", () => {
+    const cutOffs = {
+      flowM3PerHour: 0.5,
+      deltaTK: 0.5,
+      suppressedKwh: 8.369,
+      suppressedS: 15_300,
+      separatesRegisters: true,
+    };
+    const model = { ...SAMPLE_WORKINGS, basis: { ...SAMPLE_WORKINGS.basis, cutOffs } };
+    const words: Words = (key, values) => String(instance.getFixedT("en")(key, values ?? {}));
+    const { basis } = workingsText(model, words, makeFormat("en", "si", "Europe/London"));
+    const shown = basis.rows.map(({ label, value }) => `${label}: ${plain(value)}`);
+    expect(shown).toContain("Changeover band: no register under 0.50 m³/h or 0.50 K");
+    expect(shown).toContain("Held back: 8.37 kWh over 4 h 15 min");
+  });
+
   it("read in German with German numbers", () => {
     const text = textOf("de");
     expect(text.subject).toBe(

@@ -318,6 +318,41 @@ function fillLine(
   };
 }
 
+/** Cut-offs and what they held back; on a changeover loop they are the band between its registers. */
+function cutOffRows(
+  { basis, figure }: Workings,
+  t: Words,
+  format: Format,
+): readonly { readonly label: string; readonly value: string }[] {
+  const { flowM3PerHour, deltaTK, suppressedKwh, suppressedS, separatesRegisters } = basis.cutOffs;
+  if (figure === "volume" || figure === "completeness") return [];
+  if (flowM3PerHour === null && deltaTK === null && !separatesRegisters) return [];
+  const limits = [
+    ...(flowM3PerHour === null ? [] : [format.withUnit(flowM3PerHour, "flow")]),
+    ...(deltaTK === null ? [] : [format.withUnit(deltaTK, "temperatureDifference")]),
+  ];
+  return [
+    {
+      label: t(separatesRegisters ? "basis.band" : "basis.cutOffs"),
+      value:
+        limits.length === 0
+          ? t("basis.noBand")
+          : t("basis.under", { limits: limits.join(t("basis.or")) }),
+    },
+    ...(suppressedS === 0
+      ? []
+      : [
+          {
+            label: t("basis.heldBack"),
+            value: t("basis.heldBackSize", {
+              energy: format.withUnit(suppressedKwh, "heatingEnergy"),
+              time: format.duration(suppressedS),
+            }),
+          },
+        ]),
+  ];
+}
+
 function basisRows(
   model: Workings,
   t: Words,
@@ -343,6 +378,7 @@ function basisRows(
       }),
     },
     { label: t("basis.meter"), value: t(`basis.meterSide.${meterSide}`) },
+    ...cutOffRows(model, t, format),
     {
       label: t("basis.engine"),
       value:

@@ -3,7 +3,7 @@ import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import type { Database } from "@server/database/connect";
 import { instantText } from "@server/database/conversions";
 import type { Scope } from "@server/database/scoped";
-import { presentBasis } from "@server/presenters/present-energy";
+import { presentBasis, rounded } from "@server/presenters/present-energy";
 import { combineTotals } from "@server/queries/energy/combine-totals";
 import type { EnergyPoint } from "@server/queries/energy/energy-point";
 import {
@@ -153,6 +153,13 @@ export async function workingsOf(
       absoluteMPa: settings.pressure.pressureMPa,
       pressureAssumed: settings.pressure.assumed,
       fluid: basis.fluid,
+      cutOffs: {
+        flowM3PerHour: loop.flowCutOffM3PerHour,
+        deltaTK: loop.deltaTCutOffK,
+        suppressedKwh: rounded(totals.suppressedKwh, 6),
+        suppressedS: rounded(totals.suppressedS, 3),
+        separatesRegisters: loop.service === "changeover",
+      },
       meansOnly: readings.meansOnly,
       recalculating: readings.recalculating,
     },
