@@ -9,7 +9,13 @@ export {
   sensiblePlaces,
   uncertaintyPlaces,
 } from "@shared/formats/numbers";
-export { dayInstant, formatDate, formatTime, type DateStyle } from "@shared/formats/dates";
+export {
+  dayInstant,
+  formatDate,
+  formatTime,
+  needsYear,
+  type DateStyle,
+} from "@shared/formats/dates";
 export { PreferencesProvider, usePreferences } from "./preferences";
 export { words, type Namespace } from "./resources";
 export { makeFormat, type Format } from "@shared/formats/format";

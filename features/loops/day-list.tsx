@@ -1,7 +1,7 @@
 import { Link } from "expo-router";
 import { Pressable, View } from "react-native";
 
-import { useWords } from "@features/i18n";
+import { needsYear, useWords } from "@features/i18n";
 import { Card, Figure, Icon, Inline, Row, Text, useTheme } from "@features/ui";
 
 import { dayKey } from "./day-key";
@@ -14,7 +14,7 @@ import { shownFigure } from "./shown-figure";
 const mostDays = 31;
 
 /** Each day with its energy; a day opens by itself. */
-export function DayList({ summary, loop, point, format, workings }: FiguresWithWorkings) {
+export function DayList({ summary, loop, point, format, workings, today }: FiguresWithWorkings) {
   const t = useWords("loops");
   const { colour } = useTheme();
   const { days } = summary;
@@ -63,7 +63,9 @@ export function DayList({ summary, loop, point, format, workings }: FiguresWithW
                           <Inline variant="subhead" tone="ink">
                             {format.day(day.date, "weekdayShort")}
                           </Inline>{" "}
-                          {String(Number(day.date.slice(8)))}
+                          {needsYear(day.date, today)
+                            ? format.day(day.date, "dayMonthYear")
+                            : String(Number(day.date.slice(8)))}
                         </Text>
                         <Icon name="right" size={18} />
                       </View>

@@ -127,6 +127,7 @@ function view(loop = loopOf({ tag: "CHW-1B" }), params = {}, blocked: React.Reac
       points={[pointOf()]}
       range={daysOf("2025-06-09", "2025-06-15")}
       rangeName="week 24"
+      today="2026-06-15"
       format={makeFormat("en", "si", "Europe/London")}
       params={params}
       blocked={blocked}

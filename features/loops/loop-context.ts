@@ -13,6 +13,8 @@ export interface LoopView {
   readonly point: Point;
   readonly points: readonly Point[];
   readonly range: ShownRange;
+  /** The site's day. */
+  readonly today: string;
   readonly format: Format;
   /** "week 20" or "9 May to 18 May". */
   readonly rangeName: string;

@@ -5,7 +5,7 @@ import { View } from "react-native";
 
 import type { Loop, Point, Site } from "@shared/contracts/places";
 import { FailedAnswer } from "@features/api";
-import { useFormat, useWords } from "@features/i18n";
+import { needsYear, useFormat, useWords } from "@features/i18n";
 import { useWorkings } from "@features/workings/use-workings";
 import { WorkingsAside } from "@features/workings/workings-panel";
 import {
@@ -34,7 +34,14 @@ import { loopsQueries } from "./loops-queries";
 import { RangeBar, rangeWords } from "./range-bar";
 import { tagService } from "./register-words";
 import { askedFigure } from "./asked-figure";
-import { askedRange, defaultRange, rangeParams, weekOf, type ShownRange } from "./shown-range";
+import {
+  lastDayOf,
+  askedRange,
+  defaultRange,
+  rangeParams,
+  weekOf,
+  type ShownRange,
+} from "./shown-range";
 import { SupportingFigures } from "./supporting-figures";
 import { ViewTabs } from "./view-tabs";
 
@@ -111,24 +118,27 @@ function Ranged(props: RangedProps) {
   const { loop, site, point, range, params } = props;
   const t = useWords("loops");
   const router = useRouter();
-  const format = useFormat(site.zone, site.unitSystem);
+  const format = useFormat(site.zone, site.unitSystem, props.today);
   const wide = useBreakpoint() === "wide";
   const [details, setDetails] = useState(false);
   const summary = useQuery({
     ...loopsQueries.summary(point.id, range),
     placeholderData: keepPreviousData,
   });
-  const days = rangeWords(range, format);
+  const days = rangeWords(range, format, props.today);
   const view: LoopView = {
     site,
     loop,
     point,
     points: props.points,
     range,
+    today: props.today,
     format,
     rangeName:
       range.week !== null
-        ? t("range.inWeek", { week: isoWeek(range.week) })
+        ? needsYear(lastDayOf(range), props.today)
+          ? t("range.inWeekOf", { week: isoWeek(range.week), year: lastDayOf(range).slice(0, 4) })
+          : t("range.inWeek", { week: isoWeek(range.week) })
         : days.one
           ? days.from
           : t("range.days", days),

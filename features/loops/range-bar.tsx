@@ -3,7 +3,7 @@ import { useState } from "react";
 import { Pressable, View } from "react-native";
 
 import { addDays } from "@shared/domain/time/local-calendar";
-import { useFormat, useWords, type Format } from "@features/i18n";
+import { needsYear, useFormat, useWords, type Format } from "@features/i18n";
 import {
   Button,
   DateRange,
@@ -39,11 +39,19 @@ export interface RangeBarProps {
 }
 
 /** "Week 20" and its days, or the days alone. */
-export function rangeWords(range: ShownRange, format: Format) {
-  const sameYear = range.from.slice(0, 4) === lastDayOf(range).slice(0, 4);
-  const day = (date: string) =>
-    sameYear ? format.day(date, "dayMonth") : `${format.day(date, "dayMonth")} ${date.slice(0, 4)}`;
-  return { from: day(range.from), to: day(lastDayOf(range)), one: range.from === lastDayOf(range) };
+export function rangeWords(range: ShownRange, format: Format, today: string) {
+  const last = lastDayOf(range);
+  const one = range.from === last;
+  const day = (date: string, named: boolean) =>
+    format.day(date, named ? "dayMonthYear" : "dayMonth");
+  // One year for both stands at the end.
+  const ofTwoYears = needsYear(range.from, last);
+  const past = needsYear(last, today);
+  return {
+    from: day(range.from, ofTwoYears || (one && past)),
+    to: day(last, ofTwoYears || past),
+    one,
+  };
 }
 
 /** The range shown, its neighbours to each side, and weeks or own dates behind its name. */
@@ -54,7 +62,7 @@ export function RangeBar(props: RangeBarProps) {
   const format = useFormat(props.zone);
   const phone = useBreakpoint() === "phone";
   const [open, setOpen] = useState(false);
-  const words = rangeWords(range, format);
+  const words = rangeWords(range, format, props.today);
   const days = words.one ? words.from : t("range.days", words);
   const before = neighbour(range, -1);
   const after = neighbour(range, 1);

@@ -1,6 +1,13 @@
 import { useState } from "react";
 import { Pressable, View } from "react-native";
-import { dayInstant, localeOf, useFormat, useWords, type Language } from "@features/i18n";
+import {
+  dayInstant,
+  localeOf,
+  needsYear,
+  useFormat,
+  useWords,
+  type Language,
+} from "@features/i18n";
 import {
   addDays,
   Button,
@@ -17,13 +24,15 @@ import {
 } from "@features/ui";
 
 /** “11–17 May”, “27 Apr–3 May”: as short as the language writes a range of days. */
-function weekDays(monday: string, language: Language): string {
+function weekDays(monday: string, language: Language, today: string): string {
+  const sunday = addDays(monday, 6);
   const format = new Intl.DateTimeFormat(localeOf(language), {
     day: "numeric",
     month: "short",
+    ...(needsYear(sunday, today) ? { year: "numeric" } : {}),
     timeZone: "UTC",
   });
-  const range = format.formatRange(dayInstant(monday), dayInstant(addDays(monday, 6)));
+  const range = format.formatRange(dayInstant(monday), dayInstant(sunday));
   // Some browsers put thin spaces around the dash, some do not.
   return range.replace(/\s*–\s*/, "–");
 }
@@ -46,7 +55,7 @@ export function WeekBar(props: {
   const { monday, min, max, today } = props;
   const latest = max !== undefined && max > today ? max : today;
   const phone = useBreakpoint() === "phone";
-  const days = weekDays(monday, format.language);
+  const days = weekDays(monday, format.language, today);
   const step = (label: string, icon: "left" | "right", to: string, off: boolean) => (
     <Pressable
       role="button"

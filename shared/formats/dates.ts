@@ -2,10 +2,17 @@ import type { Language } from "./language";
 import { localeOf } from "./numbers";
 
 export type DateStyle =
-  "weekdayDay" | "dayMonth" | "dayMonthYear" | "full" | "monthYear" | "weekdayShort";
+  | "weekdayDay"
+  | "weekdayDayYear"
+  | "dayMonth"
+  | "dayMonthYear"
+  | "full"
+  | "monthYear"
+  | "weekdayShort";
 
 const fields: Readonly<Record<DateStyle, Intl.DateTimeFormatOptions>> = {
   weekdayDay: { weekday: "short", day: "numeric", month: "short" },
+  weekdayDayYear: { weekday: "short", day: "numeric", month: "short", year: "numeric" },
   dayMonthYear: { day: "numeric", month: "short", year: "numeric" },
   dayMonth: { day: "numeric", month: "short" },
   full: { weekday: "long", day: "numeric", month: "long", year: "numeric" },
@@ -41,6 +48,15 @@ export function formatDate(
     .join("")
     .replace(/\s+/g, " ")
     .trim();
+}
+
+/**
+ * Whether a day must be written with its year: it lies in another than today's at the site.
+ * @param isoDay, today YYYY-MM-DD; without a today nothing is known to be of this year, and none is
+ *   written.
+ */
+export function needsYear(isoDay: string, today: string | null): boolean {
+  return today !== null && isoDay.slice(0, 4) !== today.slice(0, 4);
 }
 
 /** Local time of day, “15:30”, seconds only where asked. */

@@ -6,7 +6,8 @@ import {
   type Quantity,
   type UnitSystem,
 } from "../domain/units/display-units";
-import { dayInstant, formatDate, formatTime, type DateStyle } from "./dates";
+import { localDateOf } from "../domain/time/local-calendar";
+import { dayInstant, formatDate, formatTime, needsYear, type DateStyle } from "./dates";
 import type { Language } from "./language";
 import { formatFigure, formatNumber, NO_BREAK_SPACE, sensiblePlaces } from "./numbers";
 
@@ -27,6 +28,7 @@ export interface Format {
     quantity: Quantity,
     places?: number,
   ) => string;
+  /** A weekday's date carries its year where that is not this year at the site. */
   readonly date: (ms: number, style?: DateStyle) => string;
   readonly time: (ms: number, seconds?: boolean) => string;
   readonly dateTime: (ms: number) => string;
@@ -40,13 +42,29 @@ export interface Format {
 /**
  * How values are written in a language, a unit system and a zone: on screens and on the pages the
  * server prints.
+ * @param today the site's day, YYYY-MM-DD: dates of another year are then written with it.
  */
-export function makeFormat(language: Language, unitSystem: UnitSystem, zone: string): Format {
+export function makeFormat(
+  language: Language,
+  unitSystem: UnitSystem,
+  zone: string,
+  today: string | null = null,
+): Format {
   const units = displayUnits(unitSystem);
   const number = (value: number | null, places?: number) =>
     formatNumber(value, places ?? sensiblePlaces(value ?? 0), language);
   const join = (text: string, unit: string) => `${text}${NO_BREAK_SPACE}${unit}`;
-  const date = (ms: number, style?: DateStyle) => formatDate(ms, zone, language, style);
+  const styleOf = (style: DateStyle, isoDay: () => string): DateStyle =>
+    style === "weekdayDay" && today !== null && needsYear(isoDay(), today)
+      ? "weekdayDayYear"
+      : style;
+  const date = (ms: number, style: DateStyle = "weekdayDay") =>
+    formatDate(
+      ms,
+      zone,
+      language,
+      styleOf(style, () => localDateOf(ms, zone)),
+    );
   const time = (ms: number, seconds?: boolean) => formatTime(ms, zone, language, seconds);
   return {
     language,
@@ -73,7 +91,13 @@ export function makeFormat(language: Language, unitSystem: UnitSystem, zone: str
     date,
     time,
     dateTime: (ms) => `${date(ms)}, ${time(ms)}`,
-    day: (isoDay, style) => formatDate(dayInstant(isoDay), "UTC", language, style),
+    day: (isoDay, style = "weekdayDay") =>
+      formatDate(
+        dayInstant(isoDay),
+        "UTC",
+        language,
+        styleOf(style, () => isoDay),
+      ),
     duration: (seconds) => duration(seconds, (value) => number(value, 0)),
     bytes: (count) => bytes(count, number),
   };
