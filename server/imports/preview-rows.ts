@@ -1,7 +1,7 @@
 import type { Readable } from "node:stream";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import { MAX_CELLS, RowTokeniser } from "@shared/domain/log-files/row-tokeniser";
-import { createUtf8Stream } from "@shared/domain/log-files/text-encoding";
+import { createRowStream } from "@shared/domain/log-files/row-stream";
 
 /** Time a preview may hold the event loop at a stretch is that of one chunk: about a millisecond. */
 export interface PreviewRow {
@@ -12,13 +12,13 @@ export interface PreviewRow {
 /** Up to `limit` rows from line `fromLine` on, cells as written. Reads no further than it must. */
 export async function previewRows(
   content: Readable,
-  { encoding, separator, quote }: FileRecipe["dialect"],
+  dialect: FileRecipe["dialect"],
   fromLine: number,
   limit: number,
 ): Promise<PreviewRow[]> {
   const rows: PreviewRow[] = [];
-  const stream = createUtf8Stream(encoding);
-  const tokeniser = new RowTokeniser({ separator, quote }, (row) => {
+  const stream = createRowStream(dialect);
+  const tokeniser = new RowTokeniser(dialect, (row) => {
     if (row.line < fromLine || rows.length >= limit) return;
     const count = Math.min(row.cellCount, MAX_CELLS);
     rows.push({

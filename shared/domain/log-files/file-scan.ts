@@ -6,7 +6,8 @@ import { PlainScan, type PlainScanRows } from "./plain-scan";
 import type { HeadRecognition } from "./recognise-head";
 import type { SampleRow } from "./recognition";
 import { MAX_CELLS, RowTokeniser } from "./row-tokeniser";
-import { createUtf8Stream, utf8Validity } from "./text-encoding";
+import { createRowStream } from "./row-stream";
+import { utf8Validity } from "./text-encoding";
 import { TimeEvidence } from "./time-evidence";
 import { splitHeader } from "./unit-words";
 
@@ -83,15 +84,16 @@ class Scan implements FileScan, PlainScanRows {
       return column;
     });
     // Quotes may first appear far below the head, so they are always looked for.
-    const quote = head.dialect.quote ?? '"';
-    this.quote = quote.charCodeAt(0);
+    // In columns of fixed width a quote is a character like any other.
+    const quote = head.dialect.columnStarts ? null : (head.dialect.quote ?? '"');
+    this.quote = quote === null ? -1 : quote.charCodeAt(0);
     this.plain = new PlainScan(head, this.columns, this.time, this);
     this.tokeniser = new RowTokeniser(
       { separator: head.dialect.separator, quote },
       (row) => this.readRow(row),
       this.plain,
     );
-    this.stream = createUtf8Stream(head.dialect.encoding);
+    this.stream = createRowStream(head.dialect);
     this.watchUtf8 = head.dialect.encoding === "utf-8" && head.encoding.certainty === "likely";
     const { times } = head;
     this.needed =

@@ -170,7 +170,9 @@ function isKnownHeader(cell: string): boolean {
 }
 
 /** `Serial: 50417`, `Serial,50417`, `# Period = 60 s`. */
-function labelAndValue(row: KindRow): readonly { line: number; label: string; value: string }[] {
+export function labelAndValue(
+  row: Pick<KindRow, "line" | "cells">,
+): readonly { line: number; label: string; value: string }[] {
   const cells = row.cells.filter((cell) => cell !== "");
   const [first = "", ...rest] = cells;
   const label = first.replace(/^[#;*"' ]{1,10}/, "");

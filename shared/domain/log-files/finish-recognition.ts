@@ -177,8 +177,15 @@ function powerQuestion(
 function headProofs(head: HeadRecognition): Proof[] {
   const whole = { columnIndex: null, line: null, cell: null };
   const proofs: Proof[] = [
-    { about: "encoding", ...whole, certainty: head.encoding.certainty },
-    { about: "separator", ...whole, cell: head.dialect.separator, certainty: "proved" },
+    { about: "encoding", ...whole, ...head.encodingProof, certainty: head.encoding.certainty },
+    {
+      about: "separator",
+      ...whole,
+      line: head.dialect.firstDataLine,
+      cell: head.dialect.separator,
+      // Boundaries are where the head was blank; a row further down may not keep to them.
+      certainty: head.dialect.columnStarts ? "likely" : "proved",
+    },
   ];
   const { headerLine, unitsLine } = head.header;
   if (headerLine !== null)

@@ -6,8 +6,8 @@ import { PlainRows } from "./plain-rows";
 import type { ColumnRecipe, FileRecipe } from "./recipe";
 import type { RowExample } from "./repair-step";
 import { RowStore, type StoredChannel } from "./row-store";
+import { createRowStream } from "./row-stream";
 import { MAX_CELLS, RowTokeniser } from "./row-tokeniser";
-import { createUtf8Stream } from "./text-encoding";
 import { createTimeReader } from "./time-reader";
 
 export interface LogReaderContext {
@@ -71,7 +71,7 @@ class Reader implements LogReader {
     this.columnCount = recipe.columns.reduce((most, column) => Math.max(most, column.index + 1), 0);
     this.plainRows = PlainRows.suits(recipe) ? new PlainRows(recipe, this.store) : null;
     this.tokeniser = new RowTokeniser(recipe.dialect, (row) => this.readRow(row), this.plainRows);
-    this.stream = createUtf8Stream(recipe.dialect.encoding);
+    this.stream = createRowStream(recipe.dialect);
   }
 
   get rowsRead(): number {

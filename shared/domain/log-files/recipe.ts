@@ -36,6 +36,12 @@ export interface Dialect {
   readonly headerLine: number | null;
   readonly unitsLine: number | null;
   readonly firstDataLine: number;
+  /**
+   * Columns of fixed width begin at these 0-based characters (code points), the first at 0; `separator`
+   * is then a tab, which takes the place of the boundaries before rows are split, and `quote` is null.
+   * Left out where a separator parts the columns. Empty: to be found.
+   */
+  readonly columnStarts?: readonly number[];
 }
 
 export type ColumnMeaning =

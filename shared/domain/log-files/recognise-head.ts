@@ -1,6 +1,6 @@
 import { isArchive, isOldOffice } from "./containers";
 import { findDialect, type KindRow } from "./find-dialect";
-import { findHeader, type HeaderFinding } from "./find-header";
+import { findHeader, labelAndValue, type HeaderFinding } from "./find-header";
 import { findTimeColumns, hasTime, type TimeColumns } from "./find-times";
 import { firstLinesOf } from "./read-lines";
 import type { Dialect } from "./recipe";
@@ -27,6 +27,8 @@ export interface HeadRecognition {
   readonly header: HeaderFinding;
   readonly times: TimeColumns;
   readonly firstLines: readonly string[];
+  /** The first line with a character that tells encodings apart, and the word it stands in. */
+  readonly encodingProof: { readonly line: number; readonly cell: string } | null;
 }
 
 export function isUnreadable(value: HeadRecognition | Unreadable | object): value is Unreadable {
@@ -34,7 +36,9 @@ export function isUnreadable(value: HeadRecognition | Unreadable | object): valu
 }
 
 /** What somebody has said about how a file is written; the rest is recognised. */
-export type GivenDialect = Partial<Pick<Dialect, "encoding" | "separator" | "headerLine">>;
+export type GivenDialect = Partial<
+  Pick<Dialect, "encoding" | "separator" | "headerLine" | "columnStarts">
+>;
 
 /**
  * Recognises encoding, separator, quotes, header and the place of the times from the first bytes.
@@ -60,7 +64,7 @@ export function recogniseHead(
   if (bytes.every((byte) => byte <= 32)) return unreadable("empty");
 
   const firstLines = firstLinesOf(bytes, FIRST_LINES);
-  const found = findDialect(bytes, isWholeFile, given.separator);
+  const found = findDialect(bytes, isWholeFile, given);
   if (found === null)
     return unreadable(looksLikeWords(firstLines) ? "noTimes" : "noRows", 1, firstLines[0]);
   if (found.columnCount > Math.min(MAX_COLUMNS, MAX_CELLS))
@@ -100,11 +104,14 @@ export function recogniseHead(
       headerLine: header.headerLine,
       unitsLine: header.unitsLine,
       firstDataLine: firstRow.line,
+      ...(found.columnStarts && { columnStarts: found.columnStarts }),
     },
     columnCount: found.columnCount,
-    header,
+    header:
+      found.columnStarts || found.separator === " " ? withWholeLines(header, firstLines) : header,
     times,
     firstLines,
+    encodingProof: encodingProof(firstLines),
   };
 }
 
@@ -114,6 +121,25 @@ function unreadable(code: Unreadable["code"], line?: number, cell?: string | nul
     line: line ?? null,
     cell: cell === undefined || cell === null ? null : cell.slice(0, 200),
   };
+}
+
+/** Lines above the header are sentences there, not cells: they are read from the line as written. */
+function withWholeLines(header: HeaderFinding, lines: readonly string[]): HeaderFinding {
+  const preamble = header.preamble.flatMap((entry) => {
+    const text = lines[entry.line - 1];
+    if (text === undefined) return [entry];
+    const cells = text.trim().split(/\s{2,}/);
+    return labelAndValue({ line: entry.line, cells });
+  });
+  return { ...header, preamble };
+}
+
+function encodingProof(lines: readonly string[]): HeadRecognition["encodingProof"] {
+  for (const [index, line] of lines.entries()) {
+    const word = /[^\s;,|]*[^\u0000-\u007f][^\s;,|]*/.exec(line)?.[0];
+    if (word !== undefined) return { line: index + 1, cell: word.slice(0, 60) };
+  }
+  return null;
 }
 
 function rowsBefore(rows: readonly KindRow[], first: KindRow | undefined): readonly KindRow[] {
