@@ -64,14 +64,9 @@ export interface Twin {
   readonly importedAt: Date;
 }
 
-function presentDialect({ columnStarts, ...dialect }: FileRecipe["dialect"]) {
-  return { ...dialect, ...(columnStarts && { columnStarts: [...columnStarts] }) };
-}
-
 export function presentRecipe({ meter, ...recipe }: FileRecipe): NonNullable<ImportFile["recipe"]> {
   return {
     ...recipe,
-    dialect: presentDialect(recipe.dialect),
     columns: recipe.columns.map(({ badWords, ...column }) => ({
       ...column,
       ...(badWords && { badWords: [...badWords] }),

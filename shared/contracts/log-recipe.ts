@@ -20,6 +20,7 @@ export const dialect = z.object({
         starts.every((start, i) => (i === 0 ? start === 0 : start > (starts[i - 1] ?? 0))),
       "must begin with 0 and ascend",
     )
+    .readonly()
     .optional()
     .describe(
       "columns of fixed width: the 0-based character at which each begins, the first 0; the separator is then a tab. Left out where a separator parts the columns; empty: find them",
