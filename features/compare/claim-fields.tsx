@@ -47,6 +47,7 @@ function ClassFields({ value, onChange, errorOf }: ClaimProps) {
         <NumberField
           label={t("claim.flowRatio")}
           hint={t("claim.flowRatioHint")}
+          unit="× qp"
           value={value.flowRatio}
           onChange={(flowRatio) => onChange({ flowRatio })}
           min={0}

@@ -5,7 +5,11 @@ export interface FieldError {
   readonly pointer: string;
   readonly code: string;
   readonly message: string;
+  /** The bound that was crossed, of the contract's own checks. */
+  readonly bound?: Bound | undefined;
 }
+
+export type Bound = NonNullable<NonNullable<Problem["errors"]>[number]["bound"]>;
 
 interface ProblemParts {
   status: number;

@@ -1,7 +1,7 @@
 import type { z } from "zod";
 import type { Contract } from "@shared/contracts/contract";
 import type { Input } from "./define-endpoint";
-import { Invalid, type FieldError } from "./errors";
+import { Invalid, type Bound, type FieldError } from "./errors";
 
 export interface RawInput {
   readonly params: unknown;
@@ -12,6 +12,23 @@ export interface RawInput {
 function pointer(part: string, path: readonly PropertyKey[]): string {
   const steps = path.map((step) => String(step).replace(/~/g, "~0").replace(/\//g, "~1"));
   return ["", part, ...steps].join("/");
+}
+
+const KINDS: Readonly<Record<string, Bound["of"]>> = {
+  number: "number",
+  int: "number",
+  string: "text",
+  array: "list",
+  set: "list",
+};
+
+/** The bound an issue is about; nothing for issues of another kind, and for dates. */
+function boundOf(issue: z.core.$ZodIssue): { bound?: Bound } {
+  if (issue.code !== "too_big" && issue.code !== "too_small") return {};
+  const of = KINDS[issue.origin];
+  const limit = issue.code === "too_big" ? issue.maximum : issue.minimum;
+  if (of === undefined) return {};
+  return { bound: { of, limit: Number(limit), included: issue.inclusive ?? true } };
 }
 
 function fieldErrors(part: string, issues: readonly z.core.$ZodIssue[]): FieldError[] {
@@ -27,6 +44,7 @@ function fieldErrors(part: string, issues: readonly z.core.$ZodIssue[]): FieldEr
             pointer: pointer(part, issue.path),
             code: issue.code.replace(/_/g, "-"),
             message: issue.message,
+            ...boundOf(issue),
           },
         ],
   );

@@ -136,7 +136,16 @@ describe("the plate of a meter", () => {
     const found: WorkedOutInstallation = (await tryIt({ accuracyClass: 1 }).expect(200)).body;
     expect(found.plateTerm?.expandedPercent).toBeCloseTo(7.043673, 5);
     await tryIt({ accuracyClass: 4 }).expect(422);
-    await tryIt({ accuracyClass: 2, minimumDeltaTK: 0 }).expect(422);
+    const refused = await tryIt({ accuracyClass: 2, minimumDeltaTK: 0 }).expect(422);
+    // For people in their own words, for scripts in English.
+    expect(refused.body.errors).toEqual([
+      {
+        pointer: "/body/meterPlate/minimumDeltaTK",
+        code: "too-small",
+        message: expect.stringMatching(/0/),
+        bound: { of: "number", limit: 0, included: false },
+      },
+    ]);
   });
 
   it("is unknown in a record from before it could be kept", async () => {

@@ -89,7 +89,21 @@ export const problem = z.object({
   detail: z.string(),
   remedy: z.string(),
   errors: z
-    .array(z.object({ pointer: z.string(), code: z.string(), message: z.string() }))
+    .array(
+      z.object({
+        pointer: z.string(),
+        code: z.string().describe("stable"),
+        message: z.string().describe("in English, for scripts"),
+        /** With `too-big` and `too-small`: the bound, so that a client can say it in its own words. */
+        bound: z
+          .object({
+            of: z.enum(["number", "text", "list"]),
+            limit: z.number(),
+            included: z.boolean().describe("whether the limit itself is allowed"),
+          })
+          .optional(),
+      }),
+    )
     .optional(),
 });
 export type Problem = z.infer<typeof problem>;
