@@ -1,4 +1,5 @@
 import { FolderFileStore } from "./files/folder-file-store";
+import { createLogThreads } from "./imports/log-threads";
 import { JobRunner } from "./jobs/job-runner";
 import { createJobThreads } from "./jobs/job-threads";
 import { createPrinter } from "./print/printer";
@@ -16,6 +17,7 @@ export async function createServices(given: Given): Promise<Services> {
     passwords: createPasswords(config.passwordCost),
     printer: createPrinter(),
     files: new FolderFileStore(config.dataDir),
+    logs: createLogThreads(),
     jobs: new JobRunner(database, threads, clock, log),
   };
 }
@@ -23,6 +25,7 @@ export async function createServices(given: Given): Promise<Services> {
 /** Lets go of everything in the reverse order; the database last. */
 export async function closeServices(services: Services): Promise<void> {
   await services.jobs.stop();
+  await services.logs.close();
   await services.printer.close();
   await services.passwords.close();
   await services.database.close();

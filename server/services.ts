@@ -3,6 +3,7 @@ import type { Clock } from "./clock";
 import type { Config } from "./config";
 import type { Database } from "./database/connect";
 import type { FileStore } from "./files/file-store";
+import type { LogThreads } from "./imports/log-threads";
 import type { JobRunner } from "./jobs/job-runner";
 import type { Printer } from "./print/printer";
 import type { Passwords } from "./security/passwords";
@@ -16,6 +17,7 @@ export interface Services {
   readonly passwords: Passwords;
   readonly printer: Printer;
   readonly files: FileStore;
+  readonly logs: LogThreads;
   /** Poke it after queueing a job; it runs once the server has started it. */
   readonly jobs: JobRunner;
 }

@@ -13,6 +13,17 @@ export interface ReceivedFile extends StoredFile {
 }
 
 const HEAD_BYTES = 16;
+
+/** The same of a file that came in before. */
+export async function containerOfStored(
+  files: FileStore,
+  sha256: string,
+): Promise<ReceivedFile["container"]> {
+  const stream = files.read(sha256);
+  for await (const chunk of stream) return containerOf(chunk as Buffer);
+  return null;
+}
+
 const mebibyte = 1024 * 1024;
 
 /**

@@ -6,6 +6,7 @@ import { developmentRoutes } from "./development-routes";
 import { energyRoutes } from "./energy-routes";
 import { evidenceRoutes } from "./evidence-routes";
 import { fillRoutes } from "./fill-routes";
+import { importBatchRoutes } from "./import-batch-routes";
 import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
 import { meterComparisonRoutes } from "./meter-comparison-routes";
@@ -27,6 +28,7 @@ const productEndpoints: readonly Endpoint[] = [
   ...placesRoutes,
   ...importRoutes,
   ...recipeRoutes,
+  ...importBatchRoutes,
   ...evidenceRoutes,
   ...energyRoutes,
   ...correctionRoutes,

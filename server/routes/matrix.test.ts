@@ -86,6 +86,14 @@ const matrix = `
   chooseBatchPoint         ✓   ✓   ✓   –   –   –
   removeBatchFile          ✓   ✓   ✓   –   –   –
   confirmImportBatch       ✓   ✓   ✓   –   –   –
+  listImportBatches        ✓   ✓   ✓   ✓   –   –
+  getImportBatch           ✓   ✓   ✓   ✓   –   –
+  downloadBatchReport      ✓   ✓   ✓   ✓   –   –
+  createImportBatch        ✓   ✓   ✓   –   –   –
+  addBatchFile             ✓   ✓   ✓   –   –   –
+  chooseBatchPoint         ✓   ✓   ✓   –   –   –
+  removeBatchFile          ✓   ✓   ✓   –   –   –
+  confirmImportBatch       ✓   ✓   ✓   –   –   –
   getEnergy                ✓   ✓   ✓   ✓   –   –
   getPointSummary          ✓   ✓   ✓   ✓   –   –
   getSeries                ✓   ✓   ✓   ✓   –   –

@@ -1,6 +1,8 @@
 import { Readable } from "node:stream";
 import { recipeRepair } from "@shared/contracts/recipes";
 import { DEFAULT_REPAIR_CHOICES, type FileRecipe } from "@shared/domain/log-files/recipe";
+import { ImportBatch } from "@server/models/import-batch";
+import { ImportBatchFile } from "@server/models/import-batch-file";
 import { LogFile } from "@server/models/log-file";
 import { LogImport } from "@server/models/log-import";
 import { Recipe } from "@server/models/recipe";
@@ -77,4 +79,28 @@ export function savedRecipe(app: TestApp, { organisationId, account }: Person): 
     createdByName: account.name,
     createdAt: app.clock.date(),
   });
+}
+
+/** A batch of a site with one file whose point nobody has said yet. */
+export async function batchOfSite(app: TestApp, recipe: Recipe, siteId: string) {
+  const { organisationId } = recipe;
+  const now = app.clock.date();
+  const stored = await app.services.files.put(Readable.from([Buffer.from("time,flow\n")]));
+  const batch = await ImportBatch.create({
+    organisationId,
+    siteId,
+    recipeId: recipe.id,
+    recipeName: recipe.name,
+    createdByAccountId: recipe.createdByAccountId,
+    createdByName: recipe.createdByName,
+    createdAt: now,
+  });
+  const file = await ImportBatchFile.create({
+    organisationId,
+    batchId: batch.id,
+    name: "log.csv",
+    ...stored,
+    uploadedAt: now,
+  });
+  return { batchId: batch.id, batchFileId: file.id };
 }

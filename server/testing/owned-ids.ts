@@ -5,7 +5,7 @@ import { savedComparison } from "./comparison-factories";
 import { evidenceOfPoint } from "./evidence-factories";
 import { correctedPoint } from "./correction-factories";
 import { person, type Person } from "./factories";
-import { recognisedImport, savedRecipe } from "./import-factories";
+import { batchOfSite, recognisedImport, savedRecipe } from "./import-factories";
 import { pointToMeter } from "./place-factories";
 import type { TestApp } from "./test-app";
 
@@ -26,7 +26,8 @@ const people: MakeIds = async (app, owner) => {
   return { memberId: member.membership.id, tokenId: token.id };
 };
 
-const places: MakeIds = async (app, { organisationId }) => {
+const places: MakeIds = async (app, owner) => {
+  const { organisationId } = owner;
   const { site, loop, point } = await pointToMeter(app, organisationId);
   const building = await Building.create({
     organisationId,
@@ -34,15 +35,22 @@ const places: MakeIds = async (app, { organisationId }) => {
     name: "Engine house",
     createdAt: app.clock.date(),
   });
-  return { siteId: site.id, loopId: loop.id, pointId: point.id, buildingId: building.id };
+  const recipe = await savedRecipe(app, owner);
+  return {
+    siteId: site.id,
+    loopId: loop.id,
+    pointId: point.id,
+    buildingId: building.id,
+    recipeId: recipe.id,
+    ...(await batchOfSite(app, recipe, site.id)),
+  };
 };
 
-const logs: MakeIds = async (app, owner) => {
-  const { organisationId } = owner;
+const logs: MakeIds = async (app, { organisationId }) => {
   const { point } = await pointToMeter(app, organisationId);
   const { row, file } = await recognisedImport(app, { organisationId, pointId: point.id });
-  const recipe = await savedRecipe(app, owner);
-  return { importId: row.id, fileId: file.id, recipeId: recipe.id };
+  return { importId: row.id, fileId: file.id };
+};
 };
 
 const evidence: MakeIds = async (app, { organisationId }) => {

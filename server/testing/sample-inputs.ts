@@ -53,6 +53,7 @@ export const sampleInputs: Readonly<Record<string, SampleInput>> = {
   addImportFile: { file: "time,flow\n2026-02-02 00:00,1.0\n" },
   alsoForPoint: { body: { pointId: ":pointId" } },
   addBatchFile: { file: "time,flow\n2026-02-02 00:00,2.0\n" },
+  addBatchFile: { file: "time,flow\n2026-02-02 00:00,2.0\n" },
   chooseRecipe: { body: plainRecipe },
   saveRecipe: { body: { name: "Plant room logger", shared: true } },
   updateRecipe: { body: { version: 1, shared: true } },

@@ -43,6 +43,7 @@ export const batchFile = z.object({
       code: z.enum([
         "pointUnknown",
         "pointAmbiguous",
+        "pointDoubtful",
         "unreadable",
         "recipeDiffers",
         "questionsOpen",
@@ -71,6 +72,9 @@ export type BatchSummary = z.infer<typeof batchSummary>;
 
 export const batchDetail = batchSummary.extend({
   files: z.array(batchFile),
+  points: z
+    .array(z.object({ id, code: z.string(), name: z.string(), loopTag: z.string() }))
+    .describe("points in use of the site, to choose from"),
   ready: z.number().int().describe("files that would be imported now"),
   refused: z
     .array(z.object({ batchFileId: id, detail: z.string(), remedy: z.string() }))
