@@ -51,7 +51,6 @@ const logs: MakeIds = async (app, { organisationId }) => {
   const { row, file } = await recognisedImport(app, { organisationId, pointId: point.id });
   return { importId: row.id, fileId: file.id };
 };
-};
 
 const evidence: MakeIds = async (app, { organisationId }) => {
   const { point } = await pointToMeter(app, organisationId);
