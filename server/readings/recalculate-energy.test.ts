@@ -16,7 +16,7 @@ import { loadIntervals } from "./interval-rows";
 import { loadSegments } from "./load-segments";
 import { loadOnePointReadings } from "./point-readings";
 import { lockPoint, recalculateEnergy } from "./recalculate-energy";
-import { storeBlocks } from "./store-blocks";
+import { packBlocks, storeBlocks } from "./store-blocks";
 import type { StoredRows } from "./stored-rows";
 
 const app = testApp();
@@ -64,7 +64,11 @@ async function store(pointId: string, organisationId: string, rows: StoredRows, 
   const file = await fileOf(organisationId, pointId, precedence);
   await inTransaction(app.database, async (transaction) => {
     await lockPoint(app.database, transaction, pointId);
-    await storeBlocks(transaction, { organisationId, pointId, logFileId: file.id }, rows);
+    await storeBlocks(
+      transaction,
+      { organisationId, pointId, logFileId: file.id },
+      packBlocks(rows),
+    );
     await recalculateEnergy(app.database, transaction, pointId, {
       startMs: rows.instantMs[0] as number,
       endMs: rows.instantMs[rows.instantMs.length - 1] as number,

@@ -20,38 +20,59 @@ const insert = `INSERT INTO reading_block
 /** A day of seconds packs into a quarter of a megabyte. */
 const blocksAtOnce = 16;
 
-function* blocksOf(owner: BlockOwner, rows: StoredRows): Generator<SqlValue[]> {
+/** The rows of one UTC day, packed. */
+export interface PackedBlock {
+  /** UTC ms. */
+  readonly dayMs: number;
+  readonly channelSet: number;
+  readonly rowCount: number;
+  readonly firstMs: number;
+  readonly lastMs: number;
+  readonly data: Buffer;
+}
+
+/** Packs the rows of one file, a block per UTC day. Instants must ascend strictly. */
+export function* packBlocks(rows: StoredRows): Generator<PackedBlock> {
   const { instantMs } = rows;
   const channelSet = channelSetOf(rows);
   for (let from = 0; from < instantMs.length;) {
-    const day = Math.floor((instantMs[from] as number) / DAY_MS);
-    const dayEnd = (day + 1) * DAY_MS;
+    const firstMs = instantMs[from] as number;
+    const dayMs = Math.floor(firstMs / DAY_MS) * DAY_MS;
     let to = from + 1;
-    while (to < instantMs.length && (instantMs[to] as number) < dayEnd) to++;
-    yield [
-      owner.pointId,
-      new Date(day * DAY_MS).toISOString().slice(0, 10),
+    while (to < instantMs.length && (instantMs[to] as number) < dayMs + DAY_MS) to++;
+    yield {
+      dayMs,
       channelSet,
-      owner.logFileId,
-      owner.organisationId,
-      to - from,
-      instantMs[from] as number,
-      instantMs[to - 1] as number,
-      BLOCK_FORMAT,
-      encodeBlock(sliceRows(rows, from, to)),
-    ];
+      rowCount: to - from,
+      firstMs,
+      lastMs: instantMs[to - 1] as number,
+      data: encodeBlock(sliceRows(rows, from, to)),
+    };
     from = to;
   }
 }
 
-/**
- * Stores the rows of one file, a block per UTC day. Instants must ascend strictly. Storing the same
- * file again leaves the same blocks.
- */
+/** Stores the blocks of one file. Storing the same file again leaves the same blocks. */
 export async function storeBlocks(
   transaction: Transaction,
   owner: BlockOwner,
-  rows: StoredRows,
+  blocks: Iterable<PackedBlock>,
 ): Promise<void> {
-  await insertMany(transaction, insert, blocksOf(owner, rows), blocksAtOnce);
+  await insertMany(transaction, insert, valuesOf(owner, blocks), blocksAtOnce);
+}
+
+function* valuesOf(owner: BlockOwner, blocks: Iterable<PackedBlock>): Generator<SqlValue[]> {
+  for (const { dayMs, channelSet, rowCount, firstMs, lastMs, data } of blocks)
+    yield [
+      owner.pointId,
+      new Date(dayMs).toISOString().slice(0, 10),
+      channelSet,
+      owner.logFileId,
+      owner.organisationId,
+      rowCount,
+      firstMs,
+      lastMs,
+      BLOCK_FORMAT,
+      data,
+    ];
 }

@@ -4,7 +4,7 @@ import { inTransaction } from "@server/database/transaction";
 import { LogFile } from "@server/models/log-file";
 import { LogImport } from "@server/models/log-import";
 import { lockPoint, recalculateEnergy } from "@server/readings/recalculate-energy";
-import { storeBlocks } from "@server/readings/store-blocks";
+import { packBlocks, storeBlocks } from "@server/readings/store-blocks";
 import type { StoredRows } from "@server/readings/stored-rows";
 import type { TestApp } from "./test-app";
 
@@ -74,7 +74,11 @@ export async function storedReadings(
   });
   await inTransaction(app.database, async (transaction) => {
     await lockPoint(app.database, transaction, pointId);
-    await storeBlocks(transaction, { organisationId, pointId, logFileId: file.id }, rows);
+    await storeBlocks(
+      transaction,
+      { organisationId, pointId, logFileId: file.id },
+      packBlocks(rows),
+    );
     await recalculateEnergy(app.database, transaction, pointId, {
       startMs: rows.instantMs[0] ?? 0,
       endMs: rows.instantMs.at(-1) ?? 0,

@@ -122,7 +122,8 @@ function settleRepeats(
   identical: Tally,
   conflicting: Tally,
 ): Uint32Array {
-  const kept = new Uint32Array(sorted.length);
+  // Of several rows at most one stays, so the list is never written ahead of where it is read.
+  const kept = sorted;
   let count = 0;
   for (let from = 0; from < sorted.length;) {
     const at = instantMs[sorted[from] as number] as number;
