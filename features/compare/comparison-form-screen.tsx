@@ -26,7 +26,7 @@ import {
 import { comparePaths } from "./compare-paths";
 import { compareQueries } from "./compare-queries";
 import {
-  emptyComparison,
+  comparisonFrom,
   readComparison,
   valuesOf,
   type ComparisonValues,
@@ -39,7 +39,14 @@ import { StandInFields } from "./stand-in-fields";
 /** A new comparison, or with `supersedes` one that stands in the place of another. */
 export function ComparisonFormScreen() {
   const t = useWords("compare");
-  const asked = useLocalSearchParams<{ site?: string; supersedes?: string }>();
+  const asked = useLocalSearchParams<{
+    site?: string;
+    supersedes?: string;
+    point?: string;
+    register?: string;
+    from?: string;
+    until?: string;
+  }>();
   const sites = useQuery(compareQueries.sites);
   const list = useQuery(compareQueries.meters(false));
   const before = useQuery({
@@ -75,7 +82,9 @@ export function ComparisonFormScreen() {
       </Screen>
     );
   const mayKeep = list.data.can.create;
-  const key = `${site.id}.${before.data?.id ?? "new"}`;
+  // A point of another site is no meter of this one.
+  const opened = site.id === asked.site ? asked : {};
+  const key = `${site.id}.${before.data?.id ?? opened.point ?? "new"}`;
   return (
     <Editor
       key={key}
@@ -83,6 +92,7 @@ export function ComparisonFormScreen() {
       site={site}
       sites={items}
       before={before.data ?? null}
+      opened={comparisonFrom(opened)}
       mayKeep={mayKeep}
       crumbs={crumbs}
     />
@@ -94,6 +104,8 @@ interface EditorProps {
   readonly site: Site;
   readonly sites: readonly Site[];
   readonly before: MeterComparison | null;
+  /** What the form starts with: the point it was opened from. */
+  readonly opened: ComparisonValues;
   /** Who may not keep one may still work it out. */
   readonly mayKeep: boolean;
   readonly crumbs: readonly { label: string; href: string }[];
@@ -103,7 +115,7 @@ function Editor(props: EditorProps) {
   const t = useWords("compare");
   const { site, before, mayKeep } = props;
   const wide = useBreakpoint() === "wide";
-  const initial = before ? valuesOf(before.input, before, site.zone) : emptyComparison;
+  const initial = before ? valuesOf(before.input, before, site.zone) : props.opened;
   const draft = useDraft<ComparisonValues>(`meter-comparison.${props.draftKey}`, initial);
   const { values } = draft;
   const points = useQuery(compareQueries.points(site.id));
@@ -149,7 +161,15 @@ function Editor(props: EditorProps) {
                   label={t("form.site")}
                   value={site.id}
                   options={props.sites.map(({ id, name }) => ({ value: id, label: name }))}
-                  onChange={(chosen) => router.setParams({ site: chosen })}
+                  onChange={(chosen) =>
+                    router.setParams({
+                      site: chosen,
+                      point: undefined,
+                      register: undefined,
+                      from: undefined,
+                      until: undefined,
+                    })
+                  }
                   disabled={before !== null}
                 />
                 <TextField

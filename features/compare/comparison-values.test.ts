@@ -1,5 +1,6 @@
 import { createMeterComparison } from "@shared/contracts/meter-comparisons";
 import {
+  comparisonFrom,
   emptyComparison,
   readComparison,
   valuesOf,
@@ -67,4 +68,18 @@ test("a saved comparison comes back into the form as it was asked", () => {
   const input = createMeterComparison.body.parse(sent);
   const period = { from: "2026-03-27T23:00:00.000Z", to: "2026-03-30T22:00:00.000Z" };
   expect(bodyOf(valuesOf(input, period, zone))).toEqual(sent);
+});
+
+it("starts with the point and the days it was opened from, and asks for what they leave open", () => {
+  const values = comparisonFrom({
+    point: "9",
+    register: "cooling",
+    from: "2026-05-11",
+    until: "2026-05-18",
+  });
+  expect(values.first).toMatchObject({ kind: "point", pointId: "9", register: "cooling" });
+  expect([values.from.day, values.to.day]).toEqual(["2026-05-11", "2026-05-18"]);
+  const odd = comparisonFrom({ point: "9", register: "both", from: "soon" });
+  expect([odd.first.register, odd.from.day]).toEqual([null, null]);
+  expect(comparisonFrom({})).toEqual(emptyComparison);
 });

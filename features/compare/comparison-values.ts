@@ -4,6 +4,7 @@ import type {
   MeterComparisonInput,
   MeterSide,
 } from "@shared/contracts/meter-comparisons";
+import { isLocalDate } from "@shared/domain/time/local-calendar";
 import { instantOf, wallTimeOf, type WallTime } from "@shared/domain/time/wall-time";
 
 /** A register's two reads as they are typed; null while empty. */
@@ -125,6 +126,28 @@ export const emptyComparison: ComparisonValues = {
   standIn: noStandIn,
   notes: "",
 };
+
+/** The form opened from a point: it is the first meter, and the days shown there are the period. */
+export function comparisonFrom(asked: {
+  readonly point?: string | undefined;
+  readonly register?: string | undefined;
+  readonly from?: string | undefined;
+  readonly until?: string | undefined;
+}): ComparisonValues {
+  const { point, register, from, until } = asked;
+  const day = (date: string | undefined) =>
+    date !== undefined && isLocalDate(date) ? { day: date, time: "00:00" } : emptyComparison.from;
+  return {
+    ...emptyComparison,
+    from: day(from),
+    to: day(until),
+    first: {
+      ...emptyComparison.first,
+      pointId: point ?? null,
+      register: register === "heating" || register === "cooling" ? register : null,
+    },
+  };
+}
 
 /** What is still missing before anything can be worked out, as keys of the words. */
 export type MissingPart = "period" | "first" | "second" | "standIn";

@@ -30,6 +30,8 @@ import { VersionList } from "./version-list";
 import { whenOf } from "./when-of";
 import { WithdrawSheet } from "./withdraw-sheet";
 
+const registerOf = { chilled: "cooling", hot: "heating", changeover: undefined } as const;
+
 type Params = {
   siteId: string;
   loopId: string;
@@ -84,7 +86,13 @@ export function EvidenceScreen() {
                 add={answer.can.create ? add : undefined}
               />
               {/* Whoever reads evidence may compare; not everybody's navigation lists it. */}
-              <TextLink label={t("compare")} href={comparePaths.newMeters(siteId)} />
+              <TextLink
+                label={t("compare")}
+                href={comparePaths.newMeters(siteId, {
+                  pointId,
+                  register: registerOf[loop.data.service],
+                })}
+              />
             </View>
           ) : null
         }

@@ -2,6 +2,7 @@ import { View } from "react-native";
 
 import type { MeasuredBy } from "@shared/contracts/energy";
 import { useWords } from "@features/i18n";
+import { comparePaths } from "@features/compare/compare-paths";
 import { evidencePaths } from "@features/evidence/evidence-paths";
 import { MarkedText, Text, TextLink, useTheme } from "@features/ui";
 
@@ -10,7 +11,7 @@ import { leading } from "./supporting-figures";
 
 /** Kit that speaks for the range, how its certificates stood, and what the ± of the energy stands on. */
 export function MeasuredBySection(props: LoopFigures) {
-  const { summary, site, loop, point } = props;
+  const { summary, site, loop, point, range } = props;
   const t = useWords("loops");
   const { evidence } = summary;
   if (evidence === null) return null;
@@ -44,6 +45,14 @@ export function MeasuredBySection(props: LoopFigures) {
         ) : evidence.can.record ? (
           <TextLink label={t("measuredBy.record")} href={evidencePaths.newInstallation(...at)} />
         ) : null}
+        <TextLink
+          label={t("measuredBy.compare")}
+          href={comparePaths.newMeters(site.id, {
+            pointId: point.id,
+            register: loop.service === "changeover" ? undefined : leading(props),
+            range,
+          })}
+        />
       </View>
     </View>
   );

@@ -24,6 +24,11 @@ describe("navigation", () => {
     }
   });
 
+  it("leads surveyors to Compare, where they may work one out", () => {
+    expect(navFor("surveyor").more).toContain("compare");
+    expect(navFor("billingClerk").rail).not.toContain("compare");
+  });
+
   it("shows a tenant contact nothing of the sites", () => {
     expect(navFor("tenantContact").rail).toEqual(["settings"]);
   });

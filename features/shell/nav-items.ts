@@ -31,8 +31,8 @@ interface RoleNav {
 const byRole: Readonly<Record<Role, RoleNav>> = {
   surveyor: {
     bar: ["today", "logs", "kit"],
-    more: ["sites", "settings"],
-    rail: ["today", "sites", "logs", "kit", "settings"],
+    more: ["sites", "compare", "settings"],
+    rail: ["today", "sites", "logs", "compare", "kit", "settings"],
   },
   engineer: {
     bar: ["today", "sites", "compare", "logs"],
