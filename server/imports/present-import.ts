@@ -95,6 +95,7 @@ function presentFile(
   file: LogFile,
   twins: readonly Twin[],
   alsoFor: ImportFile["alsoFor"],
+  said: ImportFile["facts"],
 ): ImportFile {
   const twin = twins.find((other) => other.file.id === file.id);
   const { recognition } = file;
@@ -125,6 +126,7 @@ function presentFile(
     },
     recipe: file.recipe && presentRecipe(file.recipe),
     questions: (file.questions ?? []).map(presentQuestion),
+    facts: said,
   };
 }
 
@@ -135,6 +137,8 @@ export function presentImportDetail(
     readonly files: readonly LogFile[];
     readonly twins: readonly Twin[];
     readonly alsoFor: ReadonlyMap<string, ImportFile["alsoFor"]>;
+    /** What each file says of pipe and kit, held against the record. */
+    readonly said: ReadonlyMap<string, ImportFile["facts"]>;
     readonly bore: BoreVersion | null;
   },
   actor: Actor,
@@ -147,7 +151,9 @@ export function presentImportDetail(
     ...summary,
     // Bytes that are stored already must not count twice: confirming would be refused.
     can: { ...summary.can, confirm: summary.can.confirm && more.twins.length === 0 },
-    files: more.files.map((file) => presentFile(file, more.twins, more.alsoFor.get(file.id) ?? [])),
+    files: more.files.map((file) =>
+      presentFile(file, more.twins, more.alsoFor.get(file.id) ?? [], more.said.get(file.id) ?? []),
+    ),
     repair: row.repair,
     checks: row.checks,
     pipe: bore && {

@@ -2,6 +2,7 @@ import type { ImportDetail } from "@shared/contracts/imports";
 import type { Context } from "@server/http/context";
 import { NotFound } from "@server/http/errors";
 import { sameFiles } from "@server/imports/change-import";
+import { factsOfFiles } from "@server/imports/file-facts";
 import { importFacts } from "@server/imports/import-facts";
 import { presentImportDetail } from "@server/imports/present-import";
 import { sharedFiles } from "@server/imports/shared-files";
@@ -19,6 +20,7 @@ export async function presentWholeImport(context: Context, row: LogImport): Prom
     currentBores(scope, [row.pointId]),
   ]);
   const alsoFor = await sharedFiles(context, row, files);
+  const said = await factsOfFiles(scope, row, files);
   const same = await sameFiles(row, files);
   const earlier = await scope.list(LogImport, {
     where: { id: same.map((twin) => twin.earlier.importId) },
@@ -30,7 +32,7 @@ export async function presentWholeImport(context: Context, row: LogImport): Prom
   return presentImportDetail(
     row,
     facts,
-    { files, twins, alsoFor, bore: bores.get(row.pointId) ?? null },
+    { files, twins, alsoFor, said, bore: bores.get(row.pointId) ?? null },
     actor,
   );
 }

@@ -154,6 +154,37 @@ export const fileSource = z.object({
   countsFrom1904: z.boolean(),
 });
 
+/** What lines above the header say, held against the record of the point. */
+export const fileFact = z.object({
+  kind: z.enum([
+    "serial",
+    "loggerSerial",
+    "meterSerial",
+    "supplyProbeSerial",
+    "returnProbeSerial",
+    "probeSerial",
+    "boreMm",
+    "outsideDiameterMm",
+    "wallMm",
+    "pipeMaterial",
+    "fluid",
+    "soundSpeedMPerS",
+    "intervalS",
+    "unitSetting",
+    "clock",
+    "siteName",
+    "pointName",
+  ]),
+  line: z.number().int(),
+  label: z.string(),
+  cell: z.string().describe("as written"),
+  value: z.number().nullable().describe("in the unit the kind names; null where it is unclear"),
+  verdict: z.enum(["matches", "differs", "notRecorded", "unclear", "shown"]),
+  recorded: z.union([z.string(), z.number()]).nullable(),
+  weight: z.enum(["stop", "look"]).nullable().describe("how much it matters that it differs"),
+});
+export type FileFact = z.infer<typeof fileFact>;
+
 export const importFile = z.object({
   id,
   name: z.string(),
@@ -189,6 +220,7 @@ export const importFile = z.object({
     .nullable(),
   recipe: fileRecipe.nullable().describe("the proposed recipe with every answer given so far"),
   questions: z.array(question).describe("what is still to be answered for this file"),
+  facts: z.array(fileFact).describe("what the file says about pipe, kit and settings"),
 });
 export type ImportFile = z.infer<typeof importFile>;
 
