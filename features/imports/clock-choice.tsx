@@ -45,6 +45,15 @@ export function ClockChoice({ label, zone, clock, locked, onChange }: ClockChoic
             label: t("time.clock.site", { place }),
             detail: t(movesWithSummer(zone) ? "time.clock.siteHint" : "time.clock.siteFixedHint"),
           },
+          ...(movesWithSummer(zone)
+            ? [
+                {
+                  value: "siteStandard" as const,
+                  label: t("time.clock.siteStandard", { place }),
+                  detail: t("time.clock.siteStandardHint"),
+                },
+              ]
+            : []),
           { value: "utc", label: t("time.clock.utc"), detail: t("time.clock.utcHint") },
           {
             value: "fixedOffset",
@@ -55,7 +64,7 @@ export function ClockChoice({ label, zone, clock, locked, onChange }: ClockChoic
         ]}
         onChange={(kind) => {
           if (locked) return;
-          if (kind === "site" || kind === "utc") {
+          if (kind === "site" || kind === "siteStandard" || kind === "utc") {
             setOpened(null);
             onChange({ kind });
           } else {

@@ -5,6 +5,7 @@ import type { ImportDetail, ImportFile } from "@shared/contracts/imports";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import { ColumnCards } from "./column-cards";
 import { ColumnTable } from "./column-table";
+import { AlsoForPoint } from "./also-for-point";
 import { CounterFields } from "./counter-fields";
 import { withRecipe } from "./file-card";
 import type { ImportActions } from "./imports-queries";
@@ -13,6 +14,7 @@ import { Questions } from "./questions";
 import { withKind } from "./recipe-edits";
 import { SideColumn } from "./side-column";
 import { SideRows } from "./side-rows";
+import { StatusChosen } from "./status-question";
 
 /** Step 2: what each column means and in which unit, and what one row stands for. */
 export function ColumnsStep({ detail, actions }: { detail: ImportDetail; actions: ImportActions }) {
@@ -67,6 +69,8 @@ function FileColumns(props: { file: ImportFile; detail: ImportDetail; actions: I
         locked={!detail.can.edit}
         onChange={change}
       />
+      <StatusChosen recipe={file.recipe} locked={!detail.can.edit} onChange={change} />
+      <AlsoForPoint file={file} detail={detail} />
       {file.recipe.columns.some(({ meaning }) => isRate(meaning)) && !isKindAsked ? (
         <Card pad={5}>
           <View style={{ gap: 12 }}>
@@ -89,7 +93,14 @@ function FileColumns(props: { file: ImportFile; detail: ImportDetail; actions: I
 }
 
 function isRate(meaning: FileRecipe["columns"][number]["meaning"]): boolean {
-  return meaning === "flow" || meaning === "supply" || meaning === "return" || meaning === "power";
+  return (
+    meaning === "flow" ||
+    meaning === "velocity" ||
+    meaning === "pulses" ||
+    meaning === "supply" ||
+    meaning === "return" ||
+    meaning === "power"
+  );
 }
 
 /** Means of flow and temperatures, from which the product's mean cannot be had any more. */
@@ -97,7 +108,9 @@ function losesCovariance({ columns, seriesKind }: FileRecipe): boolean {
   const has = (...wanted: readonly string[]) =>
     columns.some(({ meaning }) => wanted.includes(meaning));
   if (has("power", "heatingCounter", "coolingCounter")) return false;
-  return has("volumeCounter") || (has("flow") && seriesKind !== "instantaneous");
+  return (
+    has("volumeCounter", "pulses") || (has("flow", "velocity") && seriesKind !== "instantaneous")
+  );
 }
 
 function PointFacts({ detail }: { detail: ImportDetail }) {

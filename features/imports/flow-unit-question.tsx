@@ -5,7 +5,7 @@ import { useFormat, useWords } from "@features/i18n";
 import { Button, Row, Segments, Text, useMeasuredWidth, useTheme } from "@features/ui";
 import type { ImportDetail, QuestionView } from "@shared/contracts/imports";
 import type { FlowUnit } from "@shared/domain/log-files/recipe";
-import { QuestionCard } from "./questions";
+import { QuestionCard } from "./question-card";
 import { speedsByUnit, USUAL_SPEED_M_PER_S, type SpeedUnderUnit } from "./water-speed";
 
 interface FlowUnitQuestionProps {

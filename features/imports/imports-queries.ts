@@ -7,6 +7,7 @@ import {
 } from "@tanstack/react-query";
 import {
   addImportFile,
+  alsoForPoint,
   cancelImport,
   checkImport,
   chooseRecipe,
@@ -98,6 +99,19 @@ export function useStartImport() {
   return useMutation({
     mutationFn: (pointId: string) => call(createImport, { params: { pointId } }),
     onSuccess: (detail) => take(client, detail),
+  });
+}
+
+/** Opens an import of a file's bytes for another point. */
+export function useImportAlso(importId: string, fileId: string) {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (pointId: string) =>
+      call(alsoForPoint, { params: { importId, fileId }, body: { pointId } }),
+    onSuccess: (detail) => {
+      take(client, detail);
+      void client.invalidateQueries({ queryKey: keys.detail(importId) });
+    },
   });
 }
 

@@ -1,15 +1,19 @@
-import type { ReactNode } from "react";
 import { View } from "react-native";
 import { useFormat, useWords } from "@features/i18n";
-import { Button, Card, Mark, Row, Text } from "@features/ui";
+import { Button, Row, Text } from "@features/ui";
 import type { ImportDetail, ImportFile, QuestionView } from "@shared/contracts/imports";
 import { TEMPERATURE_UNITS } from "@shared/domain/log-files/column-units";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
+import type { SampleRow } from "@shared/domain/log-files/recognition";
+import { AlikeQuestion } from "./alike-question";
+import { BoreQuestion } from "./bore-question";
 import { useColumnName } from "./column-controls";
 import { withRecipe } from "./file-card";
 import { FlowUnitQuestion } from "./flow-unit-question";
 import type { ImportActions } from "./imports-queries";
 import { KindTiles } from "./kind-tiles";
+import { PulseQuestion } from "./pulse-question";
+import { QuestionCard } from "./question-card";
 import {
   withDateOrder,
   withDecimalMark,
@@ -17,6 +21,8 @@ import {
   withPositivePower,
   withUnit,
 } from "./recipe-edits";
+import { SetQuestion } from "./set-question";
+import { StatusQuestion } from "./status-question";
 
 interface QuestionsProps {
   readonly file: ImportFile;
@@ -38,6 +44,7 @@ export function Questions({ file, detail, actions }: QuestionsProps) {
           question={question}
           recipe={recipe}
           detail={detail}
+          sampleRows={file.recognition?.sampleRows ?? []}
           onChange={change}
         />
       ))}
@@ -45,30 +52,11 @@ export function Questions({ file, detail, actions }: QuestionsProps) {
   );
 }
 
-/** Frame of a question: brass mark, what is not known, what was seen, the answers. */
-export function QuestionCard(props: { title: string; text: string; children?: ReactNode }) {
-  return (
-    <Card pad={5} label={props.title}>
-      <Row gap={3} align="flex-start">
-        <Mark kind="look" size={22} />
-        <View style={{ flex: 1, minWidth: 0, gap: 4 }}>
-          <Text variant="subhead" level={2}>
-            {props.title}
-          </Text>
-          <Text variant="bodyWide" tone="ink2">
-            {props.text}
-          </Text>
-        </View>
-      </Row>
-      {props.children ? <View style={{ marginTop: 14, gap: 12 }}>{props.children}</View> : null}
-    </Card>
-  );
-}
-
 function OneQuestion(props: {
   question: QuestionView;
   recipe: FileRecipe;
   detail: ImportDetail;
+  sampleRows: readonly SampleRow[];
   onChange: (recipe: FileRecipe) => void;
 }) {
   const { question, recipe, onChange } = props;
@@ -220,6 +208,30 @@ function OneQuestion(props: {
           </Row>
         </QuestionCard>
       );
+    case "pulseValue":
+      return <PulseQuestion question={question} recipe={recipe} onChange={onChange} />;
+    case "statusWords":
+      return <StatusQuestion question={question} recipe={recipe} onChange={onChange} />;
+    case "alikeColumns":
+      return (
+        <AlikeQuestion
+          question={question}
+          recipe={recipe}
+          rows={props.sampleRows}
+          onChange={onChange}
+        />
+      );
+    case "whichSet":
+      return (
+        <SetQuestion
+          question={question}
+          recipe={recipe}
+          pointName={props.detail.point.name}
+          onChange={onChange}
+        />
+      );
+    case "pointBore":
+      return <BoreQuestion recipe={recipe} detail={props.detail} onChange={onChange} />;
     case "loggerClock":
       return null;
   }

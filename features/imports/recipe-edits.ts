@@ -1,6 +1,7 @@
 import { isCounter, unitsOfMeaning } from "@shared/domain/log-files/column-units";
 import type { PositivePower } from "@shared/domain/readings/orient-power";
 import type { SeriesKind } from "@shared/domain/readings/reading-columns";
+import type { PointSet } from "@shared/domain/log-files/recognition";
 import type {
   ColumnMeaning,
   ColumnRecipe,
@@ -23,6 +24,12 @@ export const COLUMN_MEANINGS: readonly ColumnMeaning[] = [
   "volumeCounter",
   "heatingCounter",
   "coolingCounter",
+  "velocity",
+  "pulses",
+  "status",
+  "outdoor",
+  "electricPower",
+  "pressure",
   "skip",
 ];
 
@@ -33,10 +40,12 @@ function edit(recipe: FileRecipe, change: (column: ColumnRecipe) => ColumnRecipe
   return { ...recipe, columns: recipe.columns.map(change) };
 }
 
-/** What a file may hold only one of: rate or counter of the water, power or counters of the heat. */
+/** What a file may hold only one of: ways to say how much water moved, power or counters of the heat. */
 const RIVALS: Partial<Record<ColumnMeaning, readonly ColumnMeaning[]>> = {
-  flow: ["volumeCounter"],
-  volumeCounter: ["flow"],
+  flow: ["volumeCounter", "velocity", "pulses"],
+  volumeCounter: ["flow", "velocity", "pulses"],
+  velocity: ["flow", "volumeCounter", "pulses"],
+  pulses: ["flow", "volumeCounter", "velocity"],
   power: ["heatingCounter", "coolingCounter"],
   heatingCounter: ["power"],
   coolingCounter: ["power"],
@@ -48,9 +57,13 @@ const RIVALS: Partial<Record<ColumnMeaning, readonly ColumnMeaning[]>> = {
  */
 export function withMeaning(recipe: FileRecipe, index: number, meaning: ColumnMeaning): FileRecipe {
   const units = unitsOfMeaning(meaning);
-  return edit(recipe, (column) => {
+  // Pulses are counted over a step: to its end, unless somebody says otherwise.
+  const counts = meaning === "pulses" && recipe.seriesKind === "instantaneous";
+  const kind: SeriesKind = counts ? "meanToLabel" : recipe.seriesKind;
+  return edit({ ...recipe, seriesKind: kind }, (column) => {
+    if (column.index === index && column.meaning === meaning) return column;
     if (column.index === index) {
-      const { capacity, ...rest } = column;
+      const { capacity, pulseValue: _, badWords: __, ...rest } = column;
       const kept = units.find((unit) => unit === column.unit) ?? null;
       const unit = kept ?? (units.length === 1 ? (units[0] ?? null) : null);
       const counts = isCounter(meaning) && capacity !== undefined;
@@ -62,8 +75,48 @@ export function withMeaning(recipe: FileRecipe, index: number, meaning: ColumnMe
     const clash =
       (meaning === "time" && isTime(column.meaning)) ||
       (isTime(meaning) && column.meaning === "time");
-    return taken || clash ? { ...column, meaning: "skip", unit: null } : column;
+    return taken || clash ? skipped(column) : column;
   });
+}
+
+/** A skipped column keeps nothing that only its meaning had. */
+function skipped({ index, header, decimalMark }: ColumnRecipe): ColumnRecipe {
+  return { index, header, decimalMark, meaning: "skip", unit: null };
+}
+
+/** What one pulse stands for. */
+export function withPulseWorth(
+  recipe: FileRecipe,
+  index: number,
+  worth: { readonly pulseValue: number; readonly unit: ColumnUnit },
+): FileRecipe {
+  return edit(recipe, (column) => (column.index === index ? { ...column, ...worth } : column));
+}
+
+/** Which words of a status column mean a bad reading; none is an answer, null asks again. */
+export function withBadWords(
+  recipe: FileRecipe,
+  index: number,
+  badWords: readonly string[] | null,
+): FileRecipe {
+  return edit(recipe, (column) => {
+    if (column.index !== index) return column;
+    const { badWords: _, ...rest } = column;
+    return badWords === null ? rest : { ...rest, badWords };
+  });
+}
+
+/** Reads the columns of one of several metering points. */
+export function withSet(recipe: FileRecipe, set: PointSet): FileRecipe {
+  return edit(recipe, (column) => {
+    const given = set.columns.find(({ index }) => index === column.index);
+    return given ? { ...column, meaning: given.meaning, unit: given.unit } : column;
+  });
+}
+
+/** Leaves out all columns that nothing tells apart. */
+export function withoutAlike(recipe: FileRecipe): FileRecipe {
+  return { ...recipe, alikeChosen: true };
 }
 
 export function withUnit(recipe: FileRecipe, index: number, unit: ColumnUnit): FileRecipe {

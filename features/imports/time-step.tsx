@@ -142,5 +142,12 @@ function Dates({ file, named }: { file: ImportFile; named: boolean }) {
   } else if (format.kind === "calendar" && format.order !== null && !proof) {
     rows.push({ label: t("time.dates.proof"), value: t("time.dates.chosen") });
   }
+  const century = file.recognition.proofs.find((entry) => entry.about === "century");
+  if (century) {
+    rows.push({
+      label: t("time.dates.years"),
+      value: t("time.dates.yearsShort", { cell: century.cell }),
+    });
+  }
   return <SideRows title={named ? file.name : t("time.dates.title")} rows={rows} />;
 }
