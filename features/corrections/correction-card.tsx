@@ -71,7 +71,9 @@ export function CorrectionCard({ correction, format, onWithdraw }: CorrectionCar
               {t("effect.working")}
             </Text>
           ) : null}
-          {effect && state !== "working" ? <Effect effect={effect} format={format} /> : null}
+          {effect && state !== "working" ? (
+            <Effect correction={correction} format={format} />
+          ) : null}
           {failure ? (
             <Banner kind="wrong" lead={failure.message}>
               {failure.remedy}
@@ -125,36 +127,57 @@ function history(
   return rows.flatMap(({ label, value }) => (value === null ? [] : [{ label, value }]));
 }
 
-/** What the energy was and becomes, of each register that moves. */
-function Effect(props: { effect: NonNullable<Correction["effect"]>; format: Format }) {
-  const { effect, format } = props;
+/** What the energy and the volume were and become; that no energy moves is said in words. */
+function Effect({ correction, format }: Pick<CorrectionCardProps, "correction" | "format">) {
+  const { effect, volumePercent } = correction;
   const t = useWords("corrections");
-  const { before, after, rowsChanged } = effect;
+  if (effect === null) return null;
+  const { before, after, volume, rowsChanged } = effect;
   const registers = (["heating", "cooling"] as const).filter((name) => {
     const key = `${name}Kwh` as const;
     return before[key] !== 0 || after[key] !== 0;
   });
-  const rows = registers.map((name) => {
-    const key = `${name}Kwh` as const;
-    const change = after[key] - before[key];
-    const energy = (kwh: number) => format.withUnit(kwh, `${name}Energy`);
-    const sign = change > 0 ? "+" : "−";
-    return {
-      label: t(`register.${name}`),
-      value: t("effect.change", {
-        // “±0” would read as an uncertainty.
-        change: change === 0 ? t("results.unchanged") : `${sign}${energy(Math.abs(change))}`,
-        before: energy(before[key]),
-        after: energy(after[key]),
-      }),
-    };
+  const moves = registers.some((name) => before[`${name}Kwh`] !== after[`${name}Kwh`]);
+  const row = (label: string, was: number, becomes: number, write: (value: number) => string) => ({
+    label,
+    value: t("effect.change", {
+      // “±0” would read as an uncertainty.
+      change:
+        was === becomes
+          ? t("results.unchanged")
+          : `${becomes > was ? "+" : "−"}${write(Math.abs(becomes - was))}`,
+      before: write(was),
+      after: write(becomes),
+    }),
   });
+  const energies = registers.map((name) =>
+    row(t(`register.${name}`), before[`${name}Kwh`], after[`${name}Kwh`], (kwh) =>
+      format.withUnit(kwh, `${name}Energy`),
+    ),
+  );
+  const volumes =
+    volume === null || volume.beforeM3 === volume.afterM3
+      ? []
+      : [
+          row(t("effect.volume"), volume.beforeM3, volume.afterM3, (m3) =>
+            format.withUnit(m3, "volume"),
+          ),
+          {
+            label: t("effect.volumeKnown"),
+            value:
+              volumePercent === null
+                ? t("effect.volumeUnknown")
+                : format.figure(volume.afterM3, (volume.afterM3 * volumePercent) / 100, "volume"),
+          },
+        ];
+  const count = { count: rowsChanged, rows: format.number(rowsChanged, 0) };
   return (
     <Stack gap={1}>
-      <DefinitionRows title={t("effect.title")} rows={rows} />
-      <Text tone="ink2">
-        {t("effect.rows", { count: rowsChanged, rows: format.number(rowsChanged, 0) })}
-      </Text>
+      <DefinitionRows
+        title={t("effect.title")}
+        rows={moves ? [...energies, ...volumes] : volumes}
+      />
+      <Text tone="ink2">{t(moves ? "effect.rows" : "effect.noEnergy", count)}</Text>
     </Stack>
   );
 }

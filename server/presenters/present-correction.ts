@@ -11,11 +11,15 @@ export interface NamedPoint {
   readonly loopTag: string;
 }
 
-/** `points` are those it touches. */
+/**
+ * `points` are those it touches.
+ * @param volumePercent how well the volume of the effect's days is known; null where it is not.
+ */
 export function presentCorrection(
   row: Correction,
   points: readonly NamedPoint[],
   actor: Actor,
+  volumePercent: number | null,
 ): z.input<typeof answer> {
   const { correctReadings } = can(actor);
   return {
@@ -27,6 +31,7 @@ export function presentCorrection(
     reason: row.reason,
     state: row.state,
     effect: row.state === "working" ? null : row.effect,
+    volumePercent: row.state === "working" ? null : volumePercent,
     failure: row.failure && {
       code: row.failure.code,
       message: row.failure.detail,

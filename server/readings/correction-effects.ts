@@ -53,14 +53,24 @@ export async function correctionEffect(
       heatingKwh: sum(({ after }) => after.heatingKwh),
       coolingKwh: sum(({ after }) => after.coolingKwh),
     },
+    volume: {
+      beforeM3: sum(({ before }) => before.volumeM3),
+      afterM3: sum(({ after }) => after.volumeM3),
+    },
     rowsChanged: sum(({ rowsChanged }) => rowsChanged),
   };
 }
 
+interface EffectSums {
+  heatingKwh: number;
+  coolingKwh: number;
+  volumeM3: number;
+}
+
 interface PointEffect {
   readonly range: Interval;
-  readonly before: CorrectionEffect["before"];
-  readonly after: CorrectionEffect["after"];
+  readonly before: EffectSums;
+  readonly after: EffectSums;
   readonly rowsChanged: number;
 }
 
@@ -93,8 +103,8 @@ async function effectOnPoint(
     { startMs: range.startMs - reach, endMs: range.endMs + reach },
     settings.zone,
   );
-  const before = { heatingKwh: 0, coolingKwh: 0 };
-  const after = { heatingKwh: 0, coolingKwh: 0 };
+  const before = { heatingKwh: 0, coolingKwh: 0, volumeM3: 0 };
+  const after = { heatingKwh: 0, coolingKwh: 0, volumeM3: 0 };
   let rowsChanged = await rowsOfFile(database, change);
   for (let from = 0; from < days.length; from += daysAtOnce) {
     onStretch();
@@ -129,7 +139,7 @@ function inside(segments: readonly ReadingSegment[], fromMs: number, toMs: numbe
 }
 
 function add(
-  sums: { heatingKwh: number; coolingKwh: number },
+  sums: EffectSums,
   segments: readonly ReadingSegment[],
   settings: EnergySettings,
   days: readonly LocalDay[],
@@ -137,6 +147,7 @@ function add(
   for (const { totals } of calculateEnergy(segments, settings, days)?.days ?? []) {
     sums.heatingKwh += totals.heating.energyKwh;
     sums.coolingKwh += totals.cooling.energyKwh;
+    sums.volumeM3 += totals.volumeM3;
   }
 }
 

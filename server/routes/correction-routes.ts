@@ -16,11 +16,17 @@ import {
   correctionsOfPoint,
   pointsOfCorrections,
 } from "@server/queries/corrections/list-corrections";
+import { volumePercents } from "@server/queries/corrections/volume-percents";
 import { loadResult, loadResults } from "@server/readings/energy-results";
 
 async function presentAll(context: Context, rows: readonly Correction[]) {
-  const points = await pointsOfCorrections(context, rows);
-  return rows.map((row) => presentCorrection(row, points.get(row.id) ?? [], context.actor));
+  const [points, percents] = await Promise.all([
+    pointsOfCorrections(context, rows),
+    volumePercents(context, rows),
+  ]);
+  return rows.map((row) =>
+    presentCorrection(row, points.get(row.id) ?? [], context.actor, percents.get(row.id) ?? null),
+  );
 }
 
 async function present(context: Context, row: Correction) {

@@ -72,6 +72,11 @@ test("a nominal bore put right scales the energy by (102.9651/102.26)², its eff
   // (102.9651 / 102.26)² = 1.0138378
   expect(proposed.effect.after.coolingKwh / before.cooling).toBeCloseTo(1.0138378, 6);
   expect(proposed.effect.rowsChanged).toBe(49);
+  // 4 h of 28.8 m³/h, and its ± beside it.
+  const { volume } = proposed.effect;
+  expect(volume.beforeM3).toBeCloseTo(115.2, 6);
+  expect(volume.afterM3 / volume.beforeM3).toBeCloseTo(1.0138378, 6);
+  expect(proposed.volumePercent).toBeGreaterThan(0);
   // Known, and not yet done.
   expect(await energyOf(agent, point.id)).toEqual(before);
   await agent.post(`/corrections/${id}/application`, {}).expect(202);

@@ -88,6 +88,8 @@ export const correctionEffect = z.object({
   to: instant,
   before: registers,
   after: registers,
+  /** Null in effects worked out before volume was part of them. */
+  volume: z.object({ beforeM3: z.number(), afterM3: z.number() }).nullable().default(null),
   rowsChanged: z.number().int(),
 });
 export type CorrectionEffect = z.infer<typeof correctionEffect>;
@@ -104,6 +106,12 @@ export const correction = z.object({
   /** `working`: its effect is being worked out; `proposed`: known, not applied. */
   state: z.enum(["working", "proposed", "applied", "withdrawn", "failed"]),
   effect: correctionEffect.nullable(),
+  volumePercent: z
+    .number()
+    .nullable()
+    .describe(
+      "expanded (k = 2): how well the volume of the effect's days is known; null where unknown or unchanged",
+    ),
   failure: z.object({ code: z.string(), message: z.string(), remedy: z.string() }).nullable(),
   createdAt: instant,
   createdBy: z.string(),
