@@ -19,6 +19,7 @@ import { MeteringPoint } from "@server/models/metering-point";
 import { can } from "@server/policies/can";
 import { loadEnergySettings } from "@server/readings/energy-settings";
 import { isCancellable, isEditable, isReopenable } from "./import-states";
+import { settleFindings } from "./findings/settle-findings";
 import { questionsLeftBy } from "./open-questions";
 import { boresOf } from "./point-bores";
 import type { ReceivedFile } from "./receive-log-file";
@@ -237,8 +238,11 @@ export async function giveRepairs(
 ): Promise<LogImport> {
   return change(context, importId, async (row, transaction) => {
     requireEditable(row);
+    const files = await filesOf(row, transaction);
+    const settled = settleFindings(row, files, choices);
     await stopChecks(context.database, transaction, row);
-    row.repair = { ...row.repair, ...choices };
+    row.repair = settled.repair;
+    for (const [file, recipe] of settled.recipes) await file.update({ recipe }, { transaction });
     await settleImport(context.database, transaction, row);
     await audit(context, "repairs-chosen", row, { choices }, transaction);
   });
@@ -289,6 +293,8 @@ export async function confirm(context: Importing, importId: string): Promise<Log
       );
     move(row, "confirmed");
     row.failure = null;
+    row.confirmedByAccountId = context.actor.accountId;
+    row.confirmedByName = context.actor.accountName;
     await row.save({ transaction });
     const { organisationId, pointId } = row;
     const job = { organisationId, pointId, importId: row.id, kind: "import" as const };
@@ -360,6 +366,7 @@ export async function startUndo(context: Importing, importId: string): Promise<L
     const state = ["queued", "running"];
     const where = { organisationId, importId: row.id, kind: job.kind, state };
     if ((await Job.count({ where, transaction })) > 0) return;
+    await row.update({ undoneByName: context.actor.accountName }, { transaction });
     await enqueueJob(context.database, transaction, job);
     await audit(context, "import-undone", row, {}, transaction);
   });

@@ -6,8 +6,10 @@ import { LogFile } from "@server/models/log-file";
 import { loadEnergySettings } from "@server/readings/energy-settings";
 import { loadSources } from "@server/readings/load-segments";
 import { loadPointCorrections } from "@server/readings/point-corrections";
-import { checkImport, spanOf } from "./check-import";
+import { checkImport } from "./check-import";
 import type { CheckedFile } from "./file-checks";
+import { loadCheckContext } from "./findings/check-context";
+import { spanOf } from "./import-sources";
 import { importOfJob, loadFile, openFiles } from "./load-files";
 import { move } from "./settle-import";
 
@@ -26,7 +28,14 @@ export async function checkImportJob(context: JobContext): Promise<void> {
   const stored = span ? await loadSources(database, row.pointId, span.startMs, span.endMs + 1) : [];
   context.checkpoint();
   const { segments: corrections } = await loadPointCorrections(database, row.pointId);
-  const checks = checkImport({ files: loaded, stored, settings, choices: row.repair, corrections });
+  const checks = checkImport({
+    files: loaded,
+    stored,
+    settings,
+    choices: row.repair,
+    corrections,
+    context: await loadCheckContext(row, files, settings, span),
+  });
   const unclear = unclearFiles(loaded);
 
   await inTransaction(database, async (transaction) => {

@@ -18,10 +18,16 @@ import { localDaysBetween } from "@shared/domain/time/local-calendar";
 import { calculateSpan } from "@server/readings/calculate-energy";
 import type { EnergySettings } from "@server/readings/energy-settings";
 import { liquidC } from "@server/readings/fluid-block";
-import { meterFacts, type MeterPlace } from "@server/readings/meter-facts";
 import { energyBlock } from "@server/readings/point-readings";
 import { ChannelBit } from "@server/readings/stored-rows";
 import { counterEventSteps } from "./counter-events";
+import type { ImportCheckContext } from "./findings/check-context";
+import { chosenChanges } from "./findings/choices";
+import { ChoiceEnergy } from "./findings/choice-energy";
+import { onSegments, withClocks } from "./findings/chosen-readings";
+import { findFindings } from "./findings/find-findings";
+import { isUndecided, shownFindings } from "./findings/import-findings";
+import { sourcesOf, spanOf } from "./import-sources";
 import { findOverlap, type Overlap } from "./overlap";
 import { fileChecks, type CheckedFile } from "./file-checks";
 import { pictureOf } from "./picture";
@@ -43,6 +49,20 @@ const lookedFor: readonly (RepairStepCode | "gaps")[] = [
   "gaps",
 ];
 
+/** Names of what is looked for in the readings themselves, where it can be. */
+const lookedForInReadings = [
+  "farDates",
+  "flowUnit",
+  "temperatureUnit",
+  "swappedSides",
+  "negativeFlow",
+  "stuckChannel",
+  "spikes",
+  "stepChange",
+  "noFlowNoise",
+  "clockOff",
+] as const;
+
 /** What a check works with: the import's files read by their recipes, and what the point holds. */
 export interface CheckInput {
   readonly files: readonly CheckedFile[];
@@ -51,38 +71,11 @@ export interface CheckInput {
   readonly choices: RepairChoices;
   /** What corrects stretches of the point, the files' own included. */
   readonly corrections: readonly SegmentCorrection[];
+  readonly context: ImportCheckContext;
 }
 
 /** Above or below whatever is stored, as the choice says. */
 const farAbove = 1e9;
-
-export function sourcesOf(
-  files: readonly CheckedFile[],
-  precedence: number,
-  place: MeterPlace,
-): ReadingSource[] {
-  return files.flatMap(({ kind, resolved, columns, recipe }) => {
-    if (columns === null) return [];
-    const meter = meterFacts(recipe, place);
-    const { nominalStepMs } = resolved;
-    return [{ precedence, kind, nominalStepMs, columns, ...(meter && { meter }) }];
-  });
-}
-
-/** From the first to the last moment the files speak for; null where no row is left. */
-export function spanOf(files: readonly CheckedFile[]): Interval | null {
-  let startMs = Infinity;
-  let endMs = -Infinity;
-  for (const { columns, kind, resolved } of files) {
-    if (columns === null || columns.instantMs.length === 0) continue;
-    const stepMs = resolved.nominalStepMs ?? 0;
-    const first = columns.instantMs[0] as number;
-    const last = columns.instantMs[columns.instantMs.length - 1] as number;
-    startMs = Math.min(startMs, kind === "meanToLabel" ? first - stepMs : first);
-    endMs = Math.max(endMs, kind === "meanFromLabel" ? last + stepMs : last);
-  }
-  return startMs <= endMs ? { startMs, endMs } : null;
-}
 
 /** How each file meets what is stored and the files before it in the same import. */
 export function overlapsOf(
@@ -104,7 +97,7 @@ export function overlapsOf(
  * figures take the first reading of a conflict, keep weak signals and keep what is stored.
  */
 export function checkImport(input: CheckInput): ImportChecks {
-  const { files, stored, settings, choices, corrections } = input;
+  const { files, stored, settings, choices, corrections, context } = input;
   const overlaps = overlapsOf(files, stored);
   const checked = files.map((file, i) =>
     fileChecks(
@@ -123,28 +116,47 @@ export function checkImport(input: CheckInput): ImportChecks {
   if (asked.has("weakSignal")) undecided.push("weakSignal");
   if (isDifferent && choices.overlap === null) undecided.push("overlap");
 
-  const span = spanOf(files);
   const own = resolveSegments(sourcesOf(files, 1, settings.meterPlace));
+  const inReadings = findFindings(files, own, corrections, context);
+  if (isUndecided(inReadings, choices)) undecided.push("findings");
+  const changes = chosenChanges(inReadings.findings, choices).map(({ change }) => change);
+
+  // A clock that is put right moves a file's rows: both times are looked at.
+  const moved = withClocks(files, changes);
+  const span = spanOf([...files, ...moved]);
   const precedence = choices.overlap === "useThis" || !isDifferent ? farAbove : -farAbove;
-  const together = resolveSegments([
-    ...stored,
-    ...sourcesOf(files, precedence, settings.meterPlace),
-  ]);
-  const found = new Set<string>(
-    checked.flatMap((file) => [
+  const energy =
+    span && new ChoiceEnergy({ files, stored, precedence, settings, standing: corrections, span });
+  const together = energy?.segmentsWith(changes) ?? [];
+  const result = energyOf(together, settings, span);
+  energy?.remember(changes, result.energy);
+  const found = new Set<string>([
+    ...checked.flatMap((file) => [
       ...file.steps.map(({ code }) => code),
       ...(file.gapCount > 0 ? ["gaps"] : []),
     ]),
-  );
+    ...inReadings.findings.map(({ finding }) => checkOf(finding.code)),
+    ...inReadings.notChecked.map(({ check }) => check),
+  ]);
+  const placed = moved === files ? own : resolveSegments(sourcesOf(moved, 1, settings.meterPlace));
+  const chosen = correctSegments(placed, onSegments(changes));
   return {
     undecided,
     files: checked,
-    rows: rowsOf(own),
+    rows: rowsOf(chosen),
     rowsWithoutTemperature: rowsWithoutTemperature(files, together, span),
-    ...energyOf(correctSegments(together, corrections), settings, span),
-    picture: span && pictureOf(own, span),
-    clean: [...lookedFor, ...lookedForInCounters(files)].filter((name) => !found.has(name)),
+    ...result,
+    picture: span && pictureOf(chosen, span),
+    ...shownFindings(inReadings, energy, { files, choices, context, settings }),
+    clean: [...lookedFor, ...lookedForInCounters(files), ...lookedForInReadings].filter(
+      (name) => !found.has(name),
+    ),
   };
+}
+
+/** The check that a finding comes from, as the list of those that found nothing names it. */
+function checkOf(code: string): string {
+  return ["reversedFlow", "backflow", "flowTurns"].includes(code) ? "negativeFlow" : code;
 }
 
 function lookedForInCounters(files: readonly CheckedFile[]): RepairStepCode[] {

@@ -12,8 +12,10 @@ import { loadEnergySettings } from "@server/readings/energy-settings";
 import { loadSources, trimSegments } from "@server/readings/load-segments";
 import { lockPoint, recalculateEnergy } from "@server/readings/recalculate-energy";
 import { packBlocks, storeBlocks, type PackedBlock } from "@server/readings/store-blocks";
-import { overlapsOf, sourcesOf, spanOf } from "./check-import";
+import { overlapsOf } from "./check-import";
 import type { CheckedFile } from "./file-checks";
+import { storeChosen } from "./findings/store-chosen";
+import { sourcesOf, spanOf } from "./import-sources";
 import { importOfJob, loadFile, openFiles } from "./load-files";
 import { storedRowsOf } from "./resolved-file";
 import { move } from "./settle-import";
@@ -48,7 +50,7 @@ export async function storeImportJob(context: JobContext): Promise<void> {
 
   await inTransaction(database, async (transaction) => {
     await lockPoint(database, transaction, job.pointId);
-    const outcome = await storeAll(context, transaction, row, loaded, rows.total);
+    const outcome = await storeAll(context, transaction, row, files, loaded, rows.total);
     // Locked only now, so that somebody who cancels meanwhile need not wait; then this rolls back.
     const fresh = await importOfJob(context, transaction);
     if (fresh.state !== "importing") throw new JobDropped();
@@ -71,6 +73,7 @@ async function storeAll(
   context: JobContext,
   transaction: Transaction,
   row: LogImport,
+  logFiles: readonly LogFile[],
   files: readonly PackedFile[],
   rowsTotal: number,
 ): Promise<"stored" | "metAnother"> {
@@ -79,6 +82,12 @@ async function storeAll(
   const already = span ? await storedAround(context, transaction, row.pointId, span) : [];
   const precedence = await precedenceOf(context, transaction, row, files, already);
   if (precedence === null) return "metAnother";
+  const settings = await loadEnergySettings(database, row.pointId, transaction);
+  if (span !== null) {
+    const finding = { database, transaction, row, logFiles, files, stored: already, precedence };
+    const chosen = await storeChosen({ ...finding, settings, span });
+    if (chosen === "undecided") return "metAnother";
+  }
   let stored = 0;
   function* watched(blocks: readonly PackedBlock[]): Generator<PackedBlock> {
     for (const block of blocks) {
@@ -98,7 +107,7 @@ async function storeAll(
   }
   context.report({ stage: "energy", rowsRead: 0, rowsTotal });
   if (span !== null) {
-    const { meterPlace } = await loadEnergySettings(database, row.pointId, transaction);
+    const { meterPlace } = settings;
     const segments = resolveSegments([...already, ...sourcesOf(files, precedence, meterPlace)]);
     await recalculateEnergy(database, transaction, row.pointId, span, {
       segmentsOf: (fromMs, toMs) => trimSegments(segments, fromMs, toMs),

@@ -1,10 +1,12 @@
 import { QueryTypes } from "sequelize";
+import { databaseNow } from "@server/database/database-now";
 import { inTransaction } from "@server/database/transaction";
 import type { JobContext } from "@server/jobs/job-context";
 import { LogFile } from "@server/models/log-file";
 import { lockPoint, recalculateEnergy } from "@server/readings/recalculate-energy";
+import { withdrawChosenCorrections } from "./findings/keep-corrections";
 import { importOfJob } from "./load-files";
-import { move } from "./settle-import";
+import { filesOf, move, settleImport } from "./settle-import";
 
 /** Takes the readings of an import out again and works the energy of their time out anew. */
 export async function undoImportJob(context: JobContext): Promise<void> {
@@ -23,11 +25,17 @@ export async function undoImportJob(context: JobContext): Promise<void> {
          AND log_file_id IN (SELECT id FROM log_file WHERE import_id = :importId)`,
       { replacements: { pointId: row.pointId, importId: row.id }, transaction },
     );
+    const files = await filesOf(row, transaction);
+    const { movedRows } = await withdrawChosenCorrections(transaction, row, {
+      fileNames: files.map(({ name }) => name),
+      now: await databaseNow(database, transaction),
+    });
     if (span?.firstMs != null && span.lastMs !== null) {
       // A last mean reaches a step beyond its label; the recalculation's own reach covers that
       // while the file's step is still on its row.
       const range = { startMs: Number(span.firstMs), endMs: Number(span.lastMs) + 1 };
-      await recalculateEnergy(database, transaction, row.pointId, range, {
+      // Rows whose clock was put right gave their energy elsewhere.
+      await recalculateEnergy(database, transaction, row.pointId, movedRows ? null : range, {
         onProgress(share) {
           context.checkpoint();
           context.report({ stage: "energy", rowsRead: Math.round(share * 100), rowsTotal: 100 });
@@ -39,8 +47,10 @@ export async function undoImportJob(context: JobContext): Promise<void> {
       { where: { importId: row.id }, transaction },
     );
     move(row, "undone");
-    row.set({ rowsStored: null, failure: null });
+    const { reopenWhenUndone } = row;
+    row.set({ rowsStored: null, failure: null, reopenWhenUndone: false });
     await row.save({ transaction });
+    if (reopenWhenUndone) await settleImport(database, transaction, row);
     await context.finish(transaction);
   });
 }
