@@ -1,17 +1,15 @@
-import { randomBytes } from "node:crypto";
 import { mkdtempSync, rmSync } from "node:fs";
 import os from "node:os";
 import path from "node:path";
 import type { Express } from "express";
 import { pino } from "pino";
-import { Sequelize } from "sequelize";
 import supertest from "supertest";
 import { createApp } from "@server/app";
 import { loadConfig, type Config } from "@server/config";
 import { connectDatabase, type Database } from "@server/database/connect";
-import { migrate } from "@server/database/migrate";
 import type { Services } from "@server/services";
 import { closeServices, createServices } from "@server/create-services";
+import { freshDatabase } from "./fresh-database";
 import { TestClock } from "./test-clock";
 
 /** The application of one test file, on a fresh database of its own. Usable inside hooks and tests. */
@@ -80,14 +78,12 @@ export function testApp(overrides: Partial<Config> = {}): TestApp {
 async function start(overrides: Partial<Config>): Promise<Running> {
   const port = process.env.LOOPWRIGHT_TEST_DB_PORT;
   if (!port) throw new Error("LOOPWRIGHT_TEST_DB_PORT is not set: run through jest's set-up.");
-  const name = `test_${randomBytes(6).toString("hex")}`;
-  const server = `mariadb://root@127.0.0.1:${port}/`;
-  await administer(server, `CREATE DATABASE ${name} CHARACTER SET utf8mb4`);
+  const fresh = await freshDatabase(port, "test");
   const dataDir = mkdtempSync(path.join(os.tmpdir(), "loopwright-test-"));
   const config: Config = {
     ...loadConfig({
       LOOPWRIGHT_MODE: "test",
-      LOOPWRIGHT_DATABASE_URL: `${server}${name}`,
+      LOOPWRIGHT_DATABASE_URL: fresh.url,
       LOOPWRIGHT_DATA_DIR: dataDir,
       LOOPWRIGHT_SESSION_SECRET: "a secret for tests that is long enough",
     }),
@@ -96,7 +92,6 @@ async function start(overrides: Partial<Config>): Promise<Running> {
   const clock = new TestClock();
   const log = pino({ level: config.logLevel });
   const database = connectDatabase(config.databaseUrl);
-  await migrate(database);
   const services = await createServices({ config, database, clock, log });
   return {
     services,
@@ -104,17 +99,8 @@ async function start(overrides: Partial<Config>): Promise<Running> {
     express: createApp(services),
     async stop() {
       await closeServices(services);
-      await administer(server, `DROP DATABASE ${name}`);
+      await fresh.drop();
       rmSync(dataDir, { recursive: true, force: true });
     },
   };
-}
-
-async function administer(url: string, sql: string): Promise<void> {
-  const connection = new Sequelize(url, { dialect: "mariadb", logging: false, pool: { max: 1 } });
-  try {
-    await connection.query(sql);
-  } finally {
-    await connection.close();
-  }
 }

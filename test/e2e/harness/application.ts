@@ -1,12 +1,11 @@
 import { spawn, type ChildProcess } from "node:child_process";
-import { randomBytes } from "node:crypto";
 import { mkdtempSync } from "node:fs";
 import { rm } from "node:fs/promises";
 import net from "node:net";
 import os from "node:os";
 import path from "node:path";
 import { setTimeout as sleep } from "node:timers/promises";
-import { Sequelize } from "sequelize";
+import { freshDatabase } from "@server/testing/fresh-database";
 
 const projectRoot = path.join(__dirname, "..", "..", "..");
 
@@ -33,9 +32,7 @@ export interface Application {
 export async function bootApplication(options: { demo?: boolean } = {}): Promise<Application> {
   const databasePort = process.env.LOOPWRIGHT_TEST_DB_PORT;
   if (!databasePort) throw new Error("LOOPWRIGHT_TEST_DB_PORT is not set: run through Jest.");
-  const name = `browser_${randomBytes(6).toString("hex")}`;
-  const root = `mariadb://root@127.0.0.1:${databasePort}/`;
-  await administer(root, `CREATE DATABASE ${name} CHARACTER SET utf8mb4`);
+  const database = await freshDatabase(databasePort, "browser");
   const dataFolder = mkdtempSync(path.join(os.tmpdir(), "loopwright-e2e-"));
   const [port, mailPort] = await freePorts(2);
   const address = `http://localhost:${port}`;
@@ -53,7 +50,7 @@ export async function bootApplication(options: { demo?: boolean } = {}): Promise
         LOOPWRIGHT_PORT: String(port),
         LOOPWRIGHT_MAIL_PORT: String(mailPort),
         LOOPWRIGHT_DATA_DIR: dataFolder,
-        LOOPWRIGHT_DATABASE_URL: `${root}${name}`,
+        LOOPWRIGHT_DATABASE_URL: database.url,
         LOOPWRIGHT_PUBLIC_URL: address,
         LOOPWRIGHT_LOG_LEVEL: "warn",
       },
@@ -75,14 +72,14 @@ export async function bootApplication(options: { demo?: boolean } = {}): Promise
 
   const application: Application = {
     address,
-    databaseUrl: `${root}${name}`,
+    databaseUrl: database.url,
     dataFolder,
     output: () => output,
     kill: () => end("SIGKILL"),
     start,
     async stop() {
       await end("SIGTERM");
-      await administer(root, `DROP DATABASE ${name}`);
+      await database.drop();
       await rm(dataFolder, { recursive: true, force: true });
     },
   };
@@ -116,15 +113,6 @@ async function isHealthy(address: string): Promise<boolean> {
       if (error.name === "TypeError") return false;
     }
     throw error;
-  }
-}
-
-async function administer(url: string, sql: string): Promise<void> {
-  const connection = new Sequelize(url, { dialect: "mariadb", logging: false, pool: { max: 1 } });
-  try {
-    await connection.query(sql);
-  } finally {
-    await connection.close();
   }
 }
 
