@@ -1,5 +1,6 @@
 import type { ImportDetail } from "@shared/contracts/imports";
 import type { FileRecipe } from "@shared/domain/log-files/recipe";
+import { unpackNumbers } from "@shared/domain/readings/packed-numbers";
 import { BoreVersion } from "@server/models/bore-version";
 import { MeteringPoint } from "@server/models/metering-point";
 import { loadSegments, loadSources } from "@server/readings/load-segments";
@@ -248,6 +249,32 @@ describe("companion series", () => {
     ]);
     expect(electricKw?.[2]).toBeCloseTo(0.7, 12);
     expect([...pressureKpa!]).toEqual([250, NaN, 250]);
+
+    const csv = await agent
+      .get(`/points/${point.id}/readings.csv?from=2025-05-18&to=2025-05-19`)
+      .expect(200);
+    const [header, first, second] = csv.text.trim().split(/\r?\n/);
+    expect(header).toMatch(/Quality,Outdoor \(degC\),Electric power \(kW\),Pressure \(kPa\)$/);
+    expect(first).toMatch(/measured,15(\.0+)?,0\.70*,250(\.0+)?$/);
+    // Between two readings no more than two steps apart the line is taken, as for temperatures.
+    expect(second).toMatch(/measured,15\.5556,0\.70*,250(\.0+)?$/);
+    const listed = await agent.get(`/points/${point.id}/companions`).expect(200);
+    expect(listed.body.items).toEqual(
+      ["outdoor", "electricPower", "pressure"].map((channel) => ({
+        channel,
+        firstAt: new Date(startMs).toISOString(),
+        lastAt: new Date(startMs + 2 * quarterMs).toISOString(),
+        rows: 3,
+        files: 1,
+      })),
+    );
+    const series = await agent
+      .get(
+        `/points/${point.id}/companions/pressure/series?from=2025-05-18&to=2025-05-19&pixels=400`,
+      )
+      .expect(200);
+    expect(series.body).toMatchObject({ rows: 2, averagedOverS: null, least: 250, greatest: 250 });
+    expect(unpackNumbers(series.body.values)).toEqual(Float64Array.of(250, NaN, 250));
   });
 
   test("may come alone, and then say nothing of the point's flow or span", async () => {

@@ -1,12 +1,14 @@
 import type { Endpoint } from "@server/http/define-endpoint";
 import { accessTokenRoutes } from "./access-token-routes";
 import { accountRoutes } from "./account-routes";
+import { companionRoutes } from "./companion-routes";
 import { correctionRoutes } from "./correction-routes";
 import { developmentRoutes } from "./development-routes";
 import { energyRoutes } from "./energy-routes";
 import { evidenceRoutes } from "./evidence-routes";
 import { fillRoutes } from "./fill-routes";
 import { importBatchRoutes } from "./import-batch-routes";
+import { importResultRoutes } from "./import-result-routes";
 import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
 import { meterComparisonRoutes } from "./meter-comparison-routes";
@@ -27,10 +29,12 @@ const productEndpoints: readonly Endpoint[] = [
   ...developmentRoutes,
   ...placesRoutes,
   ...importRoutes,
+  ...importResultRoutes,
   ...recipeRoutes,
   ...importBatchRoutes,
   ...evidenceRoutes,
   ...energyRoutes,
+  ...companionRoutes,
   ...correctionRoutes,
   ...fillRoutes,
   ...meterComparisonRoutes,

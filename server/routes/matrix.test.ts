@@ -78,14 +78,10 @@ const matrix = `
   updateRecipe             ✓   ✓   ✓   –   –   –
   deleteRecipe             ✓   ✓   ✓   –   –   –
   applyRecipe              ✓   ✓   ✓   –   –   –
-  listImportBatches        ✓   ✓   ✓   ✓   –   –
-  getImportBatch           ✓   ✓   ✓   ✓   –   –
-  downloadBatchReport      ✓   ✓   ✓   ✓   –   –
-  createImportBatch        ✓   ✓   ✓   –   –   –
-  addBatchFile             ✓   ✓   ✓   –   –   –
-  chooseBatchPoint         ✓   ✓   ✓   –   –   –
-  removeBatchFile          ✓   ✓   ✓   –   –   –
-  confirmImportBatch       ✓   ✓   ✓   –   –   –
+  downloadProblemRows      ✓   ✓   ✓   ✓   –   –
+  getImportHistory         ✓   ✓   ✓   ✓   –   –
+  listImportPeople         ✓   ✓   ✓   ✓   –   –
+  changeImportChoices      ✓   ✓   ✓   –   –   –
   listImportBatches        ✓   ✓   ✓   ✓   –   –
   getImportBatch           ✓   ✓   ✓   ✓   –   –
   downloadBatchReport      ✓   ✓   ✓   ✓   –   –
@@ -100,6 +96,8 @@ const matrix = `
   getReadings              ✓   ✓   ✓   ✓   –   –
   downloadIntervals        ✓   ✓   ✓   ✓   –   –
   downloadReadings         ✓   ✓   ✓   ✓   –   –
+  listCompanions           ✓   ✓   ✓   ✓   –   –
+  getCompanionSeries       ✓   ✓   ✓   ✓   –   –
   getWorkings              ✓   ✓   ✓   ✓   –   –
   downloadWorkingsCsv      ✓   ✓   ✓   ✓   –   –
   downloadWorkingsPdf      ✓   ✓   ✓   ✓   –   –

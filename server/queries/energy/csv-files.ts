@@ -45,6 +45,9 @@ const readingHeader = [
   "Signal (%)",
   "Power (kW)",
   "Quality",
+  "Outdoor (degC)",
+  "Electric power (kW)",
+  "Pressure (kPa)",
 ];
 
 function nameOf({ loop, point, site }: EnergyPoint, range: EnergyRange, what: string): string {
@@ -137,7 +140,10 @@ function* partsOf(range: EnergyRange, zone: string, days: number): Generator<Ene
   }
 }
 
-/** Cleaned readings of a range as CSV: what energy is worked out from, with what became of each. */
+/**
+ * Cleaned readings of a range as CSV: what energy is worked out from, with what became of each, and
+ * the companion series at the same instants.
+ */
 export function readingsCsv(
   database: Database,
   energyPoint: EnergyPoint,
@@ -176,6 +182,9 @@ async function* readingRecords(
           numberCell(row.signalPercent, 3),
           numberCell(row.powerKw, 4),
           qualityWords[row.quality],
+          numberCell(row.outdoorC, 4),
+          numberCell(row.electricKw, 6),
+          numberCell(row.pressureKpa, 4),
         ]),
       )
       .join("");

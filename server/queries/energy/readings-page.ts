@@ -1,8 +1,11 @@
+import type { CompanionName } from "@shared/contracts/companions";
 import { segmentPower } from "@shared/domain/energy/segment-power";
 import { RowQuality, type ReadingSegment } from "@shared/domain/readings/reading-columns";
 import { DAY_MS, type Interval } from "@shared/domain/time/interval";
 import type { Database } from "@server/database/connect";
 import { powerOptionsOf } from "@server/readings/energy-settings";
+import { companionAt } from "@shared/domain/readings/companion-series";
+import { companionSpans, loadCompanions, type Companions } from "@server/readings/load-companions";
 import { loadSegments } from "@server/readings/load-segments";
 import { breathe } from "./breathe";
 import type { EnergyPoint } from "./energy-point";
@@ -17,6 +20,10 @@ export interface ReadingRow {
   /** Signed, heating positive; null where the row carries no energy. */
   readonly powerKw: number | null;
   readonly quality: "measured" | "excluded" | "noReading";
+  /** Companion series at the instant; null where none has a reading near it. */
+  readonly outdoorC: number | null;
+  readonly electricKw: number | null;
+  readonly pressureKpa: number | null;
 }
 
 const qualityNames = {
@@ -42,12 +49,16 @@ export async function* readingRows(
   const usualMs =
     DAY_MS * Math.max(1, Math.min(30, ((readings.nominalStepMs ?? 0) * 2000) / DAY_MS));
   let strideMs = usualMs;
+  const channels = (await companionSpans(database, point.id)).map(({ channel }) => channel);
   for (let fromMs = Math.max(range.startMs, firstMs); fromMs < endMs;) {
     const toMs = Math.min(fromMs + strideMs, endMs);
-    const segments = await loadSegments(database, point.id, fromMs, toMs);
+    const [segments, companions] = await Promise.all([
+      loadSegments(database, point.id, fromMs, toMs),
+      loadCompanions(database, point.id, channels, { startMs: fromMs, endMs: toMs }),
+    ]);
     const rows = segments
       .flatMap((segment) =>
-        rowsOf(segment, options ? segmentPower(segment, options).powerKw : null, {
+        rowsOf(segment, options ? segmentPower(segment, options).powerKw : null, companions, {
           startMs: fromMs,
           endMs: toMs,
         }),
@@ -63,6 +74,7 @@ export async function* readingRows(
 function rowsOf(
   { columns }: ReadingSegment,
   powerKw: Float64Array | null,
+  companions: Companions,
   { startMs, endMs }: Interval,
 ): ReadingRow[] {
   const { instantMs, quality, flowM3PerHour, supplyC, returnC, signalPercent } = columns;
@@ -70,6 +82,15 @@ function rowsOf(
     const read = channel?.[row];
     return read === undefined || Number.isNaN(read) ? null : read;
   };
+  const beside = (channel: CompanionName) => {
+    const series = companions[channel];
+    return series ? companionAt(instantMs, series) : null;
+  };
+  const [outdoorC, electricKw, pressureKpa] = [
+    beside("outdoor"),
+    beside("electricPower"),
+    beside("pressure"),
+  ];
   const rows: ReadingRow[] = [];
   for (let row = 0; row < instantMs.length; row++) {
     const atMs = instantMs[row] as number;
@@ -82,6 +103,9 @@ function rowsOf(
       signalPercent: value(signalPercent, row),
       powerKw: value(powerKw, row),
       quality: qualityNames[quality[row] as keyof typeof qualityNames],
+      outdoorC: value(outdoorC, row),
+      electricKw: value(electricKw, row),
+      pressureKpa: value(pressureKpa, row),
     });
   }
   return rows;
