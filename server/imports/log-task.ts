@@ -1,14 +1,16 @@
 import { closeSync, openSync, readSync } from "node:fs";
 import { loggerSerial } from "@shared/domain/log-files/logger-serial";
 import { HEAD_BYTES, isUnreadable, recogniseHead } from "@shared/domain/log-files/recognise-head";
+import { writeProblemRows, type ProblemTask } from "./problem-rows-csv";
 
 /** What the thread is asked; everything in it can cross threads. */
-export interface LogTask {
-  readonly kind: "serial";
-  readonly path: string;
-}
+export type LogTask = { readonly kind: "serial"; readonly path: string } | ProblemTask;
 
-export function runLogTask(task: LogTask): string | null {
+export async function runLogTask(task: LogTask): Promise<string | null> {
+  if (task.kind === "problems") {
+    await writeProblemRows(task);
+    return null;
+  }
   const head = recogniseHead(...headOf(task.path));
   return isUnreadable(head) ? null : loggerSerial(head.header.preamble);
 }

@@ -46,6 +46,7 @@ export const importRoutes = [
         where: {
           ...(pointIds === null ? {} : { pointId: pointIds }),
           ...(query.state ? { state: query.state } : {}),
+          ...(query.personId ? { createdByAccountId: query.personId } : {}),
           ...(before === null ? {} : { id: { [Op.lt]: before } }),
         },
         attributes: { exclude: ["checks"] },

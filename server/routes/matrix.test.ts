@@ -79,6 +79,10 @@ const matrix = `
   deleteRecipe             ✓   ✓   ✓   –   –   –
   applyRecipe              ✓   ✓   ✓   –   –   –
   downloadProblemRows      ✓   ✓   ✓   ✓   –   –
+  downloadProblemRows      ✓   ✓   ✓   ✓   –   –
+  getImportHistory         ✓   ✓   ✓   ✓   –   –
+  listImportPeople         ✓   ✓   ✓   ✓   –   –
+  changeImportChoices      ✓   ✓   ✓   –   –   –
   getImportHistory         ✓   ✓   ✓   ✓   –   –
   listImportPeople         ✓   ✓   ✓   ✓   –   –
   changeImportChoices      ✓   ✓   ✓   –   –   –

@@ -17,6 +17,9 @@ export const importEventKind = z.enum([
   "reopened",
 ]);
 
+export const importHistoryEvent = z.object({ kind: importEventKind, by: z.string(), at: instant });
+export type ImportHistoryEvent = z.infer<typeof importHistoryEvent>;
+
 export const downloadProblemRows = contract({
   operationId: "downloadProblemRows",
   summary:
@@ -25,7 +28,7 @@ export const downloadProblemRows = contract({
   method: "get",
   path: "/imports/:importId/problem-rows.csv",
   params: importId,
-  query: z.object({ language: z.enum(["en", "de"]).optional() }),
+  query: z.object({ language: z.enum(["en", "de"]).default("en") }),
   answer: nothing,
   answerKind: "csv",
 });
@@ -36,11 +39,8 @@ export const getImportHistory = contract({
   method: "get",
   path: "/imports/:importId/history",
   params: importId,
-  answer: z.object({
-    items: z.array(z.object({ kind: importEventKind, by: z.string(), at: instant })),
-  }),
+  answer: z.object({ items: z.array(importHistoryEvent) }),
 });
-export type ImportHistory = z.infer<(typeof getImportHistory)["answer"]>;
 export const changeImportChoices = contract({
   operationId: "changeImportChoices",
   summary:

@@ -285,6 +285,7 @@ export const listImports = contract({
     pointId: id.optional(),
     siteId: id.optional(),
     state: importState.optional(),
+    personId: id.optional().describe("account of who opened the import"),
   }),
   answer: page(importSummary),
 });

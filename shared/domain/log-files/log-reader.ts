@@ -1,7 +1,14 @@
 import { isChannelMeaning } from "./column-units";
 import { CellStatus, NumberCell } from "./number-cell";
 import { MAX_PROBLEMS, newTally, tally } from "./raw-rows";
-import type { ChannelMeaning, RawRows, RemedyCode, RowProblem, RowProblemCode } from "./raw-rows";
+import type {
+  ChannelMeaning,
+  RawRows,
+  ReadProblem,
+  RemedyCode,
+  RowProblem,
+  RowProblemCode,
+} from "./raw-rows";
 import { PlainRows } from "./plain-rows";
 import type { ColumnRecipe, FileRecipe } from "./recipe";
 import type { RowExample } from "./repair-step";
@@ -13,6 +20,8 @@ import { createTimeReader } from "./time-reader";
 export interface LogReaderContext {
   /** Rows the file is known to have, from recognition: memory is then taken once. */
   readonly expectedRows?: number;
+  /** Told of every problem, where the rows keep the first thousand. */
+  readonly onProblem?: (problem: ReadProblem) => void;
 }
 
 /** Takes the bytes of a file in order, in chunks of any size. */
@@ -28,7 +37,7 @@ export interface LogReader {
  * @throws Error for a recipe whose date order or time column is not settled: ask {@link openQuestions} first.
  */
 export function createLogReader(recipe: FileRecipe, context: LogReaderContext = {}): LogReader {
-  return new Reader(recipe, context.expectedRows ?? 4096);
+  return new Reader(recipe, context.expectedRows ?? 4096, context.onProblem ?? null);
 }
 
 /** Lines after the last reading up to this many are a footer; more are rows that cannot be read. */
@@ -61,6 +70,7 @@ class Reader implements LogReader {
   constructor(
     private readonly recipe: FileRecipe,
     expectedRows: number,
+    private readonly onProblem: ((problem: ReadProblem) => void) | null,
   ) {
     this.firstDataLine = recipe.dialect.firstDataLine;
     this.time = createTimeReader(recipe);
@@ -92,7 +102,9 @@ class Reader implements LogReader {
     this.pending = last.filter(({ cell }) => startsWithDigit(cell));
     this.flushPending();
     for (const { line, cell } of last) {
-      if (!startsWithDigit(cell)) tally(footer, "", () => example(line, null, cell));
+      if (startsWithDigit(cell)) continue;
+      tally(footer, "", () => example(line, null, cell));
+      this.onProblem?.({ code: "footer", line, columnIndex: null, column: null, cell });
     }
     return {
       rowCount,
@@ -185,6 +197,9 @@ class Reader implements LogReader {
     const show = (): RowExample => example(line, channel.column.header, text);
     if (status !== CellStatus.unreadable) {
       tally(this.tokens, text, show);
+      const { index: columnIndex, header: column } = channel.column;
+      const code = text === "" ? "emptyCell" : "noReadingWord";
+      this.onProblem?.({ code, line, columnIndex, column, cell: text });
       return;
     }
     tally(this.unreadableCells, channel.column.header, show);
@@ -238,12 +253,13 @@ class Reader implements LogReader {
     remedy: RemedyCode,
   ): void {
     this.problemCount++;
+    const place = { columnIndex: column?.index ?? null, column: column?.header ?? null };
+    this.onProblem?.({ code, line, ...place, cell });
     if (this.problems.length >= MAX_PROBLEMS) return;
     this.problems.push({
       code,
       line,
-      columnIndex: column?.index ?? null,
-      column: column?.header ?? null,
+      ...place,
       cell,
       remedy,
     });

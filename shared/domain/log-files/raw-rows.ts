@@ -59,6 +59,15 @@ export interface RowProblem {
   readonly remedy: RemedyCode;
 }
 
+/** A problem as it is met, and besides: cells with a word for "no reading", and lines of a footer. */
+export interface ReadProblem {
+  readonly code: RowProblemCode | "noReadingWord" | "emptyCell" | "footer";
+  readonly line: number;
+  readonly columnIndex: number | null;
+  readonly column: string | null;
+  readonly cell: string | null;
+}
+
 /** The rows of one file in file order, nothing repaired yet. Rows whose time cannot be read are in the tallies only. */
 export interface RawRows {
   readonly rowCount: number;
