@@ -1,6 +1,8 @@
 import { useQuery } from "@tanstack/react-query";
 import { useState } from "react";
 
+import type { PlusMinus } from "@shared/contracts/plus-minus";
+import { localDateOf } from "@shared/domain/time/local-calendar";
 import { FailedAnswer } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Button, LoadingBlocks, Stack, Table, type Column } from "@features/ui";
@@ -8,7 +10,7 @@ import { Button, LoadingBlocks, Stack, Table, type Column } from "@features/ui";
 import { energyTableRows, totalRow, type EnergyTableRow } from "./energy-table-rows";
 import type { LoopFigures } from "./loop-context";
 import { loopsQueries } from "./loops-queries";
-import { energyQuantity, registersOf } from "./register-words";
+import { energyQuantity, registersOf, type RegisterName } from "./register-words";
 
 const rowsAtOnce = 100;
 
@@ -55,7 +57,21 @@ export function EnergyTable(props: LoopFigures & { step: "day" | "hour" }) {
   );
 }
 
-function useEnergyColumns({ loop, format }: LoopFigures, step: "day" | "hour") {
+/** The ± of a row's energy: of days and of their sum; an hour has none of its own here. */
+function plusMinusOf(
+  { summary }: LoopFigures,
+  row: EnergyTableRow,
+  step: "day" | "hour",
+  register: RegisterName,
+): PlusMinus | null {
+  if (row.startMs === null) return summary.plusMinus[register].energy;
+  if (step === "hour") return null;
+  const date = localDateOf(row.startMs, summary.zone);
+  return summary.days.find((day) => day.date === date)?.plusMinus[register] ?? null;
+}
+
+function useEnergyColumns(props: LoopFigures, step: "day" | "hour") {
+  const { loop, format } = props;
   const t = useWords("loops");
   const registers = registersOf(loop.service);
   const name = (row: EnergyTableRow) => {
@@ -116,14 +132,24 @@ function useEnergyColumns({ loop, format }: LoopFigures, step: "day" | "hour") {
       unit: format.unit(energyQuantity[register]).unit,
       figure: (row) => {
         const kwh = row.kwh[register];
-        return { value: kwh === null ? null : format.toDisplay(kwh, energyQuantity[register]) };
+        const known = plusMinusOf(props, row, step, register);
+        return {
+          value: kwh === null ? null : format.toDisplay(kwh, energyQuantity[register]),
+          uncertainty: known && known.expanded * format.unit(energyQuantity[register]).factor,
+        };
       },
     })),
     { key: "leftOut", header: t("table.leftOut"), render: leftOut },
   ];
   const energies = (row: EnergyTableRow) =>
     registers
-      .map((register) => format.withUnit(row.kwh[register], energyQuantity[register]))
+      .map((register) =>
+        format.figure(
+          row.kwh[register],
+          plusMinusOf(props, row, step, register)?.expanded ?? null,
+          energyQuantity[register],
+        ),
+      )
       .join(" · ");
   const card = {
     title: name,

@@ -22,6 +22,7 @@ import {
 
 import { BusiestCard } from "./busiest-card";
 import { ChartCard, type TableStep } from "./chart-card";
+import { CompanionsCard } from "./companions-card";
 import { DayList } from "./day-list";
 import { DownloadsMenu } from "./downloads-menu";
 import { Headline } from "./headline";
@@ -234,6 +235,7 @@ function Figures(props: FiguresWithWorkings & { stale: boolean; params: Params }
           {headline}
           <BusiestCard {...props} />
           {chart}
+          <CompanionsCard {...props} />
           {supporting}
           <DayList {...props} />
         </>
@@ -247,6 +249,7 @@ function Figures(props: FiguresWithWorkings & { stale: boolean; params: Params }
             </View>
           </View>
           {chart}
+          <CompanionsCard {...props} />
         </>
       )}
     </View>

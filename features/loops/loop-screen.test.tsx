@@ -536,7 +536,9 @@ it("shows the table's days with their sum", async () => {
   const rows = within(table).getAllByRole("row");
   expect(rows).toHaveLength(9);
   expect(rows[2]).toHaveTextContent(/^Tue 12 May.*2,134.*55 min$/);
-  expect(rows[8]).toHaveTextContent(/^Total.*14,940/);
+  // Each day and their sum carry their ±.
+  expect(rows[2]).toHaveTextContent(/2,134\s*± \d+/);
+  expect(rows[8]).toHaveTextContent(/^Total.*14,940\s*± 500/);
 });
 
 it("says what to do where a loop has no point, and where a point has no readings", async () => {

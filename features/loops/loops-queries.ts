@@ -7,6 +7,11 @@ import {
   getReadings,
   getSeries,
 } from "@shared/contracts/energy";
+import {
+  getCompanionSeries,
+  listCompanions,
+  type CompanionName,
+} from "@shared/contracts/companions";
 import { listImports } from "@shared/contracts/imports";
 import { getLoop, getSite, listPoints } from "@shared/contracts/places";
 import { getPointShape } from "@shared/contracts/shape";
@@ -89,6 +94,28 @@ export const loopsQueries = {
         }),
       initialPageParam: null as string | null,
       getNextPageParam: (page) => page.nextCursor,
+    }),
+  companions: (pointId: string) =>
+    queryOptions({
+      ...fresh,
+      queryKey: ["loops", "companions", pointId],
+      queryFn: ({ signal }) => call(listCompanions, { params: { pointId }, signal }),
+    }),
+  companionSeries: (
+    pointId: string,
+    channel: CompanionName,
+    window: { readonly from: string; readonly to: string },
+    pixels: number,
+  ) =>
+    queryOptions({
+      ...fresh,
+      queryKey: ["loops", "companion", pointId, channel, window.from, window.to, pixels],
+      queryFn: ({ signal }) =>
+        call(getCompanionSeries, {
+          params: { pointId, channel },
+          query: { ...window, pixels: String(pixels) },
+          signal,
+        }),
     }),
   /** Files whose rows are stored for the point. */
   imports: (pointId: string) =>

@@ -95,6 +95,7 @@ function useSaidRow({ shown, format }: RowProps): string {
     );
   if (shown.coverage !== null)
     parts.push(t("overview.said.coverage", { part: percent(shown.coverage, format) }));
+  if (isFilled(shown)) parts.push(t("overview.said.filled", { part: filledPart(shown, format) }));
   return `${head}: ${parts.join(", ")}`;
 }
 
@@ -102,6 +103,26 @@ function useSaidRow({ shown, format }: RowProps): string {
 function percent(coverage: number, format: Format): string {
   const tenths = coverage >= 1 ? 1000 : Math.min(999, Math.floor(coverage * 1000 + 1e-6));
   return `${format.number(tenths / 10, 1)}\u00A0%`;
+}
+
+/** Under this share nothing would be left of it in writing. */
+const LEAST_FILLED = 0.0005;
+
+const isFilled = ({ filledShare }: OverviewLoop) => (filledShare ?? 0) >= LEAST_FILLED;
+
+function filledPart({ filledShare }: OverviewLoop, format: Format): string {
+  return `${format.number(100 * (filledShare ?? 0), 1)}\u00A0%`;
+}
+
+/** What the strip's estimated part comes to; nothing where nothing is filled. */
+function Filled({ shown, format }: RowProps) {
+  const t = useWords("places");
+  if (!isFilled(shown)) return null;
+  return (
+    <Text variant="small" tone="ink3">
+      {t("overview.said.filled", { part: filledPart(shown, format) })}
+    </Text>
+  );
 }
 
 function Energies({ shown, format, monday, size }: RowProps & { size: "m" | "s" }) {
@@ -254,9 +275,12 @@ function WideRow(props: RowProps) {
         }}
       >
         {weak ? <Mark kind="look" size={16} /> : null}
-        {shown.coverage === null ? null : (
-          <Text variant="table">{percent(shown.coverage, format)}</Text>
-        )}
+        <View style={{ alignItems: "flex-end" }}>
+          {shown.coverage === null ? null : (
+            <Text variant="table">{percent(shown.coverage, format)}</Text>
+          )}
+          <Filled {...props} />
+        </View>
       </View>
       <View style={{ flexGrow: 1, alignItems: "flex-end" }}>
         <Icon name="right" size={20} />
@@ -290,6 +314,7 @@ function PhoneRow(props: RowProps) {
             <Strip {...props} height={12} />
           </View>
         ) : null}
+        <Filled {...props} />
       </View>
       {reason === null ? (
         <View style={{ alignItems: "flex-end", gap: 2 }}>

@@ -209,7 +209,13 @@ function SiteContent(props: { site: Site; monday: string; now: number; data: Ove
         }}
       >
         <PipeKey supply={t("leg.supply")} return={t("leg.return")} />
-        <QualityKey only={["measured", "excluded", "missing"]} />
+        <QualityKey
+          only={
+            data.loops.some(({ quality }) => quality.some(({ kind }) => kind === "filled"))
+              ? ["measured", "estimated", "excluded", "missing"]
+              : ["measured", "excluded", "missing"]
+          }
+        />
       </View>
     </>
   );

@@ -109,7 +109,11 @@ describe("the page of a site", () => {
       },
       flowWeightedDeltaTK: 4.5,
       coverage: 0.9996,
-      quality: [],
+      filledShare: 0.0125,
+      quality: [
+        { from: "2026-05-10T23:00:00Z", to: "2026-05-17T20:54:00Z", kind: "measured" },
+        { from: "2026-05-17T20:54:00Z", to: "2026-05-17T23:00:00Z", kind: "filled" },
+      ],
     },
     {
       loop: { ...loopOf({ id: "8", tag: "CHW-1A", name: "Chandlery", parentLoopId: "7" }) },
@@ -121,6 +125,7 @@ describe("the page of a site", () => {
       plusMinus: null,
       flowWeightedDeltaTK: null,
       coverage: null,
+      filledShare: null,
       quality: [],
     },
   ];
@@ -147,9 +152,10 @@ describe("the page of a site", () => {
     show(<SiteScreen />);
     // 99.96 % is not rounded up to a whole week.
     const said =
-      "CHW-1, Chilled mains: cooling 27,170\u00A0kWh, ΔT 4.5\u00A0K, 99.9\u00A0% covered";
+      "CHW-1, Chilled mains: cooling 27,170\u00A0kWh, ΔT 4.5\u00A0K, 99.9\u00A0% covered, 1.3\u00A0% filled";
     const link = await screen.findByRole("link", { name: said });
     expect(link).toHaveAttribute("href", "/loops/7?week=2026-05-11");
+    expect(screen.getByText("Estimated")).toBeVisible();
     const other = "CHW-1A, Chandlery: No metering point yet";
     expect(screen.getByRole("link", { name: other })).toBeVisible();
     expect(screen.getByText("Invented data")).toBeVisible();

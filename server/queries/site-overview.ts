@@ -3,6 +3,7 @@ import type { z } from "zod";
 import type { siteOverviewLoop } from "@shared/contracts/places";
 import type { RangePlusMinus } from "@shared/contracts/plus-minus";
 import { nearestNominalSizeDn } from "@shared/domain/pipes/resolve-pipe";
+import type { QualityRun } from "@shared/domain/readings/quality-runs";
 import type { Interval } from "@shared/domain/time/interval";
 import { DAY_MS } from "@shared/domain/time/interval";
 import { rangeOfDates } from "@shared/domain/time/local-calendar";
@@ -15,7 +16,9 @@ import { Loop } from "@server/models/loop";
 import type { Site } from "@server/models/site";
 import { energyBlockedBy } from "@server/presenters/present-loop";
 import { loadDaysOf, type DayEnergy } from "@server/readings/day-rows";
+import { filledStretchesOf, type FilledStretch } from "@server/readings/energy-fills";
 import { currentBores } from "./current-bores";
+import { withFills } from "./energy/filled-runs";
 import { mainPoints } from "./main-points";
 import { qualityStrips, type QualitySegment } from "./quality-strip";
 import { loadFigureEvidences, type FigureEvidence } from "./workings/figure-evidence";
@@ -73,7 +76,7 @@ export async function siteOverview(
   const range = rangeOfDates(dates.from, dates.to, site.zone);
   // What has not happened yet is not missing.
   const soFar = { startMs: range.startMs, endMs: Math.min(range.endMs, nowMs) };
-  const [bores, energies, readings, days, strips] = await Promise.all([
+  const [bores, energies, readings, days, strips, fills] = await Promise.all([
     currentBores(scope, pointIds),
     energyOfPoints(database, scope, pointIds, dates),
     readingsOfPoints(database, scope, pointIds),
@@ -81,6 +84,7 @@ export async function siteOverview(
     soFar.endMs - soFar.startMs > LONGEST_STRIP_MS
       ? new Map<string, QualitySegment[]>()
       : qualityStrips(database, pointIds, soFar),
+    filledStretchesOf(database, pointIds, soFar),
   ]);
   const known = [...readings.values()];
   const evidence = await loadFigureEvidences(
@@ -102,6 +106,7 @@ export async function siteOverview(
         energy: energies.get(id),
         readings: readings.get(id),
         strip: strips.get(id),
+        filled: fills.get(id) ?? [],
         plusMinus: plusMinusFor(evidence.get(id), days.get(id)),
       });
     }),
@@ -124,6 +129,7 @@ interface LoopRows {
   readonly energy: EnergyRow | undefined;
   readonly readings: ReadingsRow | undefined;
   readonly strip: readonly QualitySegment[] | undefined;
+  readonly filled: readonly FilledStretch[];
   readonly plusMinus: RangePlusMinus | null;
 }
 
@@ -134,11 +140,15 @@ function plusMinusFor(
   return evidence ? rangePlusMinus(evidence, days ?? []) : null;
 }
 
+/** Quarter-hours tell no rows and no reasons; a strip shows neither. */
+const asRuns = (strip: readonly QualitySegment[]): QualityRun[] =>
+  strip.map((segment) => ({ ...segment, rows: 0, reason: null }));
+
 function overviewOf(
   loop: Loop,
   mainPointId: string | null,
   soFar: Interval,
-  { bore, energy, readings, strip, plusMinus }: LoopRows,
+  { bore, energy, readings, strip, filled, plusMinus }: LoopRows,
 ): OverviewLoop {
   const { id, tag, name, service, buildingId, parentLoopId } = loop;
   const covered = energy !== undefined && Number(energy.coveredS) > 0;
@@ -175,8 +185,12 @@ function overviewOf(
         : null,
     coverage:
       isJudged && expectedS > 0 ? Math.min(1, Number(energy?.coveredS ?? 0) / expectedS) : null,
+    filledShare:
+      isJudged && expectedS > 0
+        ? filled.reduce((sum, { filledS }) => sum + filledS, 0) / expectedS
+        : null,
     quality: isJudged
-      ? (strip ?? []).map(({ startMs, endMs, kind }) => ({
+      ? withFills(asRuns(strip ?? []), filled).map(({ startMs, endMs, kind }) => ({
           from: new Date(startMs).toISOString(),
           to: new Date(endMs).toISOString(),
           kind,

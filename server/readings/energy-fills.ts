@@ -48,11 +48,12 @@ export async function storeFillQuarters(
 }
 
 /** Standing fills' quarter-hours with the share of each that readings still leave open. */
-const standing = `
+const standingOf = (points: number) => `
   FROM energy_fill_interval q
   JOIN energy_fill f ON f.id = q.fill_id
   LEFT JOIN interval_energy i ON i.point_id = f.point_id AND i.start_s = q.start_s
- WHERE f.point_id = ? AND f.state <> 'withdrawn' AND q.start_s >= ? AND q.start_s < ?`;
+ WHERE f.point_id IN (${Array<string>(points).fill("?").join(", ")}) AND f.state <> 'withdrawn' AND q.start_s >= ? AND q.start_s < ?`;
+const standing = standingOf(1);
 // A stored quarter-hour without covered seconds is covered whole; half a second short is whole.
 const coveredS = "IF(i.start_s IS NULL, 0, COALESCE(i.covered_s, 900))";
 const openS = `IF(${coveredS} >= 899.5, 0, 900 - ${coveredS})`;
@@ -95,17 +96,30 @@ export interface FilledStretch extends Interval {
 export async function filledStretches(
   database: Database,
   pointId: string,
-  { startMs, endMs }: Interval,
+  range: Interval,
 ): Promise<FilledStretch[]> {
+  return (await filledStretchesOf(database, [pointId], range)).get(pointId) ?? [];
+}
+
+/** The same for several points, by point; a point without fills is left out. */
+export async function filledStretchesOf(
+  database: Database,
+  pointIds: readonly string[],
+  { startMs, endMs }: Interval,
+): Promise<Map<string, FilledStretch[]>> {
+  const byPoint = new Map<string, FilledStretch[]>();
+  if (pointIds.length === 0) return byPoint;
   const rows = await selectMany(
     database,
-    `SELECT q.start_s, q.filled_s * ${share} ${standing} ORDER BY q.start_s`,
-    [pointId, Math.floor(startMs / INTERVAL_MS) * (INTERVAL_MS / 1000), endMs / 1000],
+    `SELECT f.point_id, q.start_s, q.filled_s * ${share} ${standingOf(pointIds.length)}
+      ORDER BY f.point_id, q.start_s`,
+    [...pointIds, Math.floor(startMs / INTERVAL_MS) * (INTERVAL_MS / 1000), endMs / 1000],
   );
-  const stretches: FilledStretch[] = [];
-  for (const [startS, filled] of rows) {
+  for (const [pointId, startS, filled] of rows) {
     const filledS = Number(filled);
     if (filledS <= 0) continue;
+    const stretches = byPoint.get(String(pointId)) ?? [];
+    byPoint.set(String(pointId), stretches);
     const at = Number(startS) * 1000;
     const last = stretches.at(-1);
     if (last?.endMs === at)
@@ -116,7 +130,7 @@ export async function filledStretches(
       };
     else stretches.push({ startMs: at, endMs: at + INTERVAL_MS, filledS });
   }
-  return stretches;
+  return byPoint;
 }
 
 /** Whether a standing fill of the point reaches into [start, end). */

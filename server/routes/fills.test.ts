@@ -1,7 +1,12 @@
+import type { z } from "zod";
+import type { getSiteOverview } from "@shared/contracts/places";
+import { Loop } from "@server/models/loop";
 import { signedIn, type Agent } from "@server/testing/factories";
 import { pointToMeter } from "@server/testing/place-factories";
 import { loggedRows, storedReadings } from "@server/testing/reading-factories";
 import { testApp } from "@server/testing/test-app";
+
+type SiteOverviewAnswer = z.output<(typeof getSiteOverview)["answer"]>;
 
 const app = testApp();
 const minute = 60_000;
@@ -97,6 +102,13 @@ test("a filled gap is named filled on the strip, among what was left out and in 
   expect(summary.leftOut).toMatchObject([{ kind: "filled", from: at(gap[0]), to: at(gap[1]) }]);
   const { body: marks } = await agent.get(`/points/${point.id}/days?${range}`).expect(200);
   expect(marks.days).toMatchObject([{ date: "2026-02-06", kind: "filled" }]);
+  const loop = await Loop.findByPk(point.loopId, { rejectOnEmpty: true });
+  const { body: site } = await agent.get(`/sites/${loop.siteId}/overview?${range}`).expect(200);
+  const [row] = (site as SiteOverviewAnswer).loops;
+  expect(row?.quality.map(({ kind }) => kind)).toEqual(["measured", "filled", "measured"]);
+  // 4 of 24 hours.
+  expect(row?.filledShare).toBeCloseTo(4 / 24, 6);
+  expect(row?.coverage).toBeCloseTo(20 / 24, 3);
 });
 
 test("half an hour is joined by a line, and an hour and more is not", async () => {

@@ -453,6 +453,10 @@ export const siteOverviewLoop = z.object({
   plusMinus: rangePlusMinus.nullable().describe("of the energies and of ΔT; null without a point"),
   flowWeightedDeltaTK: z.number().nullable(),
   coverage: z.number().nullable().describe("covered share of the period so far, 0 to 1"),
+  filledShare: z
+    .number()
+    .nullable()
+    .describe("share of the period so far that a fill stands for, beside what is covered"),
   quality: z.array(
     z.object({
       from: instant,
