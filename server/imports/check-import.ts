@@ -22,7 +22,7 @@ import { energyBlock } from "@server/readings/point-readings";
 import { ChannelBit } from "@server/readings/stored-rows";
 import { counterEventSteps } from "./counter-events";
 import type { ImportCheckContext } from "./findings/check-context";
-import { chosenChanges } from "./findings/choices";
+import { chosenChanges, offeredClocks } from "./findings/choices";
 import { ChoiceEnergy } from "./findings/choice-energy";
 import { onSegments, withClocks } from "./findings/chosen-readings";
 import { findFindings } from "./findings/find-findings";
@@ -125,11 +125,14 @@ export function checkImport(input: CheckInput): ImportChecks {
   const moved = withClocks(files, changes);
   const span = spanOf([...files, ...moved]);
   const precedence = choices.overlap === "useThis" || !isDifferent ? farAbove : -farAbove;
+  const reach = spanOf([...files, ...withClocks(files, offeredClocks(inReadings.findings))]);
   const energy =
-    span && new ChoiceEnergy({ files, stored, precedence, settings, standing: corrections, span });
+    reach &&
+    new ChoiceEnergy({ files, stored, precedence, settings, standing: corrections, span: reach });
   const together = energy?.segmentsWith(changes) ?? [];
   const result = energyOf(together, settings, span);
-  energy?.remember(changes, result.energy);
+  const isWhole = span?.startMs === reach?.startMs && span?.endMs === reach?.endMs;
+  if (isWhole) energy?.remember(changes, result.energy);
   const found = new Set<string>([
     ...checked.flatMap((file) => [
       ...file.steps.map(({ code }) => code),

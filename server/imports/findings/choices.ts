@@ -50,6 +50,26 @@ export function chosenChanges(
   });
 }
 
+/** What the choices would come to with another one for a single finding. */
+export function changesIf(
+  findings: readonly FoundFinding[],
+  choices: FindingChoices,
+  found: FoundFinding,
+  key: string,
+): CorrectionChange[] {
+  const asked = { ...choices, findings: { ...choices.findings, [found.key]: key } };
+  return chosenChanges(findings, asked).map(({ change }) => change);
+}
+
+/** Every clock that could be put right, chosen or not. */
+export function offeredClocks(findings: readonly FoundFinding[]): CorrectionChange[] {
+  return findings.flatMap(({ fileId, finding }) =>
+    finding.choices.flatMap((choice) =>
+      choice.change === "clock" && fileId !== null ? [clockChange(fileId, choice.error)] : [],
+    ),
+  );
+}
+
 /** What one choice of a finding would change, beside the clock that is chosen; null for nothing. */
 export function changeOf(
   found: FoundFinding,

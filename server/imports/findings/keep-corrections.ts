@@ -1,5 +1,6 @@
 import type { Transaction } from "sequelize";
 import type { CorrectionEffect } from "@shared/contracts/corrections";
+import type { RepairChoices } from "@shared/domain/log-files/recipe";
 import { rowsInSpan } from "@shared/domain/readings/corrections/correction-span";
 import type { ReadingSegment } from "@shared/domain/readings/reading-columns";
 import { Correction } from "@server/models/correction";
@@ -10,7 +11,8 @@ import { instantText } from "@server/database/conversions";
 import { Account } from "@server/models/account";
 import { chosenReason, undoneReason } from "@server/words/finding-reasons";
 import { spanOf, spanOfChange } from "@server/readings/point-corrections";
-import type { ChosenChange } from "./choices";
+import { changesIf, chosenChanges, type ChosenChange } from "./choices";
+import type { FoundFinding } from "./find-findings";
 import type { ChoiceEnergy } from "./choice-energy";
 
 /**
@@ -23,10 +25,16 @@ export async function keepChosenCorrections(
   row: LogImport,
   chosen: readonly ChosenChange[],
   {
+    findings,
     energy,
     fileNames,
     now,
-  }: { readonly energy: ChoiceEnergy; readonly fileNames: readonly string[]; readonly now: Date },
+  }: {
+    readonly findings: readonly FoundFinding[];
+    readonly energy: ChoiceEnergy;
+    readonly fileNames: readonly string[];
+    readonly now: Date;
+  },
 ): Promise<void> {
   if (chosen.length === 0) return;
   const language = await languageOf(row, transaction);
@@ -45,7 +53,7 @@ export async function keepChosenCorrections(
         document: change,
         reason: chosenReason(language, found.finding, fileNames),
         state: "applied",
-        effect: effectOf(one, chosen, energy),
+        effect: effectOf(one, findings, row.repair, energy),
         createdAt: now,
         createdByAccountId: byAccountId,
         createdByName: byName,
@@ -69,11 +77,12 @@ async function languageOf(row: LogImport, transaction: Transaction): Promise<Lan
 /** Null where the loop's fluid gives no energy to compare. */
 function effectOf(
   one: ChosenChange,
-  chosen: readonly ChosenChange[],
+  findings: readonly FoundFinding[],
+  choices: RepairChoices,
   energy: ChoiceEnergy,
 ): CorrectionEffect | null {
-  const all = chosen.map(({ change }) => change);
-  const others = chosen.filter((other) => other !== one).map(({ change }) => change);
+  const all = chosenChanges(findings, choices).map(({ change }) => change);
+  const others = changesIf(findings, choices, one.found, "keep");
   const weight = energy.weigh(others, all, [one.change]);
   if (weight === null) return null;
   return {

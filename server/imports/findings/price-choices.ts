@@ -1,7 +1,7 @@
 import type { ImportFindingChoice } from "@shared/contracts/import-findings";
 import type { RepairChoices } from "@shared/domain/log-files/recipe";
 import type { FindingChoice } from "@shared/domain/readings/checks/finding";
-import { changeOf, choiceKey, chosenChanges, type ChosenChange } from "./choices";
+import { changeOf, changesIf, choiceKey } from "./choices";
 import type { ChoiceEnergy, Registers } from "./choice-energy";
 import type { FoundFinding } from "./find-findings";
 import { withUnit } from "./other-unit";
@@ -30,12 +30,10 @@ export function priceChoices(
     settings,
   }: { readonly files: readonly CheckedFile[]; readonly settings: EnergySettings },
 ): Map<string, Map<string, ChoicePrice>> {
-  const chosen = chosenChanges(findings, choices);
   const rows = files.reduce((sum, { columns }) => sum + (columns?.instantMs.length ?? 0), 0);
   const prices = new Map<string, Map<string, ChoicePrice>>();
   for (const found of findings.slice(0, MOST_FINDINGS)) {
-    const others = chosen.filter((other) => other.found !== found);
-    const kept = others.map(({ change }) => change);
+    const kept = changesIf(findings, choices, found, "keep");
     const ofFinding = new Map<string, ChoicePrice>();
     prices.set(found.key, ofFinding);
     for (const choice of found.finding.choices) {
@@ -57,7 +55,8 @@ export function priceChoices(
       }
       const change = changeOf(found, choiceKey(choice), findings, choices);
       if (change === null) return { change: { heating: 0, cooling: 0 }, suppressedKwh: null };
-      const weight = energy.weigh(kept, inOrder(others, { found, change }, findings), [change]);
+      const made = changesIf(findings, choices, found, choiceKey(choice));
+      const weight = energy.weigh(kept, made, [change]);
       return weight && { change: difference(weight.before, weight.after), suppressedKwh: null };
     }
 
@@ -78,17 +77,6 @@ export function priceChoices(
 
 /** Room for what is local, however few rows there are. */
 const LITTLE_ROWS = 200_000;
-
-/** Changes in the order in which they are made when all are chosen. */
-function inOrder(
-  others: readonly ChosenChange[],
-  one: ChosenChange,
-  findings: readonly FoundFinding[],
-) {
-  return findings.flatMap((found) =>
-    [...others, one].filter((each) => each.found === found).map(({ change }) => change),
-  );
-}
 
 function difference(before: Registers, after: Registers) {
   return {

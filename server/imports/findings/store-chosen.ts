@@ -58,6 +58,7 @@ export async function storeChosen(storing: StoringFindings): Promise<"kept" | "u
     span: wholeSpan,
   });
   await keepChosenCorrections(transaction, row, chosen, {
+    findings: found.findings,
     energy,
     fileNames: logFiles.map(({ name }) => name),
     now: await databaseNow(database, transaction),
