@@ -17,6 +17,7 @@ import {
   Screen,
   Text,
   TextField,
+  TextLink,
   useBreakpoint,
   useDraft,
   useToast,
@@ -43,20 +44,26 @@ import {
 } from "./record-sections";
 import type { SectionProps } from "./section";
 import { tagService } from "./tag-service";
+import { prefillOf, type TakenOverParams } from "./taken-over";
 import { usePointCrumbs } from "./use-point-crumbs";
 
 type Ids = { siteId: string; loopId: string; pointId: string };
 
 export function NewInstallationScreen() {
-  return <InstallationLoader ids={useLocalSearchParams<Ids>()} installationId={null} />;
+  const params = useLocalSearchParams<Ids>();
+  return <InstallationLoader ids={params} installationId={null} given={params} />;
 }
 
 export function CorrectInstallationScreen() {
   const { installationId, ...ids } = useLocalSearchParams<Ids & { installationId: string }>();
-  return <InstallationLoader ids={ids} installationId={installationId} />;
+  return <InstallationLoader ids={ids} installationId={installationId} given={ids} />;
 }
 
-function InstallationLoader(props: { ids: Ids; installationId: string | null }) {
+function InstallationLoader(props: {
+  ids: Ids;
+  installationId: string | null;
+  given: TakenOverParams;
+}) {
   const t = useWords("installation");
   const { ids, installationId } = props;
   const site = useQuery(evidenceQueries.site(ids.siteId));
@@ -74,6 +81,7 @@ function InstallationLoader(props: { ids: Ids; installationId: string | null }) 
         point={point.data}
         kit={kit.data.items}
         before={before}
+        given={props.given}
       />
     );
   const waiting = [site, loop, point, kit, known].find(({ data }) => data === undefined) ?? known;
@@ -114,6 +122,7 @@ function InstallationEditor(props: {
   point: Point;
   kit: readonly Instrument[];
   before: Installation | null;
+  given: TakenOverParams;
 }) {
   const { site, loop, point, kit, before } = props;
   const t = useWords("installation");
@@ -121,10 +130,14 @@ function InstallationEditor(props: {
   const client = useQueryClient();
   const format = useFormat(site.zone, site.unitSystem);
   const wide = useBreakpoint() === "wide";
-  const draft = useDraft(
-    `installation.${before?.id ?? `new-${point.id}`}`,
-    installationValues(before, site.zone),
-  );
+  const stored = installationValues(before, site.zone);
+  const prefill = prefillOf(props.given, kit, site.zone, stored);
+  // What came from a file has a draft of its own: one that waits is neither lost nor mixed in.
+  const fromFile = prefill ? `.${JSON.stringify(prefill.changes)}` : "";
+  const draft = useDraft(`installation.${before?.id ?? `new-${point.id}`}${fromFile}`, {
+    ...stored,
+    ...prefill?.changes,
+  });
   const { values } = draft;
   const unreadable = useRef(new Set<string>());
   const [tried, setTried] = useState(false);
@@ -209,6 +222,7 @@ function InstallationEditor(props: {
     >
       <View style={{ flexDirection: wide ? "row" : "column", gap: 20, alignItems: "flex-start" }}>
         <View style={{ flex: wide ? 1 : undefined, width: wide ? undefined : "100%", gap: 16 }}>
+          {prefill ? <FromFile unknownSerials={prefill.unknownSerials} /> : null}
           <DraftNotice draft={draft} />
           <Form
             label={title}
@@ -268,6 +282,20 @@ function InstallationEditor(props: {
         <View style={{ width: wide ? 372 : "100%" }}>{result}</View>
       </View>
     </Screen>
+  );
+}
+
+function FromFile({ unknownSerials }: { unknownSerials: readonly string[] }) {
+  const t = useWords("installation");
+  return (
+    <>
+      <Banner kind="note">{t("fromFile")}</Banner>
+      {unknownSerials.length > 0 ? (
+        <Banner kind="look" action={<TextLink href="/kit" label={t("openKit")} />}>
+          {t("unknownSerials", { serials: unknownSerials.join(", ") })}
+        </Banner>
+      ) : null}
+    </>
   );
 }
 

@@ -4,6 +4,7 @@ import { Card, LoadingBlocks, Mark, QualityStrip, Text, useTheme } from "@featur
 import { FailedAnswer } from "@features/api";
 import type { ImportChecks } from "@shared/contracts/import-checks";
 import type { ImportDetail } from "@shared/contracts/imports";
+import { DifferingFacts } from "./file-facts";
 import { FindingRow } from "./finding-row";
 import { findingsOf, type Finding } from "./findings";
 import type { ImportActions } from "./imports-queries";
@@ -27,7 +28,12 @@ export function ChecksStep({ detail, actions }: { detail: ImportDetail; actions:
   const findings = findingsOf(checks, detail.repair);
   return (
     <SideColumn
-      main={<Findings findings={findings} detail={detail} checks={checks} actions={actions} />}
+      main={
+        <>
+          <DifferingFacts detail={detail} />
+          <Findings findings={findings} detail={detail} checks={checks} actions={actions} />
+        </>
+      }
       side={<Sides detail={detail} checks={checks} />}
     />
   );

@@ -6,7 +6,6 @@ import {
   Banner,
   Button,
   Card,
-  ErrorState,
   Icon,
   LoadingBlocks,
   Mark,
@@ -20,6 +19,9 @@ import {
 import { downloadLogFile, type ImportDetail, type ImportFile } from "@shared/contracts/imports";
 import { importPaths } from "./import-paths";
 import type { ImportActions } from "./imports-queries";
+import { DialectFields } from "./read-from-file";
+import { SourceOfFile } from "./source-of-file";
+import { Unreadable } from "./unreadable-file";
 import { withHeaderLine } from "./recipe-edits";
 
 const NO_HEADER = "none";
@@ -61,6 +63,7 @@ export function FileCard(props: {
             />
           ) : null}
         </Row>
+        {file.source ? <SourceOfFile file={file} source={file.source} /> : null}
         {file.sameAs ? (
           <Banner
             kind="wrong"
@@ -78,6 +81,9 @@ export function FileCard(props: {
           </Banner>
         ) : null}
         {file.unreadable ? <Unreadable file={file} unreadable={file.unreadable} /> : null}
+        {file.unreadable && file.recipe && detail.can.edit ? (
+          <DialectFields file={file} actions={actions} recipe={file.recipe} />
+        ) : null}
         {!file.unreadable && !file.recognition ? (
           <LoadingBlocks
             label={t("file.readingUnknown")}
@@ -176,50 +182,17 @@ function HeaderLine({ file, detail, actions }: Parameters<typeof FileCard>[0]) {
 
 /** The contract's arrays are mutable, the domain's are not. */
 export function withRecipe(recipe: ReturnType<typeof withHeaderLine>) {
-  const { meter, ...rest } = recipe;
+  const { meter, time, ...rest } = recipe;
+  const { notes, ...times } = time;
   return {
     ...rest,
+    time: { ...times, ...(notes && { notes: notes.map((note) => ({ ...note })) }) },
     columns: recipe.columns.map(({ badWords, ...column }) => ({
       ...column,
       ...(badWords && { badWords: [...badWords] }),
     })),
     ...(meter && { meter: { ...meter, exchangedAt: [...meter.exchangedAt] } }),
   };
-}
-
-function Unreadable(props: {
-  file: ImportFile;
-  unreadable: NonNullable<ImportFile["unreadable"]>;
-}) {
-  const t = useWords("imports");
-  const known = [
-    "empty",
-    "notText",
-    "noTimes",
-    "noRows",
-    "tooManyColumns",
-    "columnsDoNotMatchHeader",
-    "halfDayUnknown",
-  ] as const;
-  const code = known.find((name) => name === props.unreadable.code) ?? "other";
-  const seen = props.unreadable.cell?.slice(0, 200);
-  return (
-    <ErrorState
-      title={t(`file.unreadable.${code}.title`)}
-      problem={{
-        type: "about:blank",
-        title: t(`file.unreadable.${code}.title`),
-        status: 422,
-        code: props.unreadable.code,
-        detail: t(`file.unreadable.${code}.text`),
-        remedy:
-          props.unreadable.line === null
-            ? ""
-            : t("file.unreadable.at", { line: props.unreadable.line }),
-      }}
-      seen={seen}
-    />
-  );
 }
 
 /** Address of the untouched bytes. */

@@ -1,13 +1,14 @@
 import { useState } from "react";
 import { View } from "react-native";
 import { ApiError } from "@features/api";
-import { useFormat, useWords } from "@features/i18n";
-import { Banner, DropZone, ErrorState, LoadingBlocks, useBreakpoint } from "@features/ui";
-import type { ImportDetail, ImportFile } from "@shared/contracts/imports";
+import { useWords } from "@features/i18n";
+import { Banner, DropZone, ErrorState, useBreakpoint } from "@features/ui";
+import type { ImportDetail } from "@shared/contracts/imports";
+import { UPLOAD_ENDINGS } from "@shared/domain/log-files/containers";
 import { FileCard } from "./file-card";
 import type { ImportActions } from "./imports-queries";
+import { ReadFromFile } from "./read-from-file";
 import { SideColumn } from "./side-column";
-import { SideRows, type SideRow } from "./side-rows";
 
 interface Sending {
   readonly name: string;
@@ -48,7 +49,7 @@ export function FileStep({ detail, actions }: { detail: ImportDetail; actions: I
             <DropZone
               label={phone ? t("file.drop.titlePhone") : t("file.drop.title")}
               hint={t("file.drop.text")}
-              accept={[".csv", ".tsv", ".txt"]}
+              accept={UPLOAD_ENDINGS}
               multiple
               disabled={sending !== null}
               onFiles={(files) => void send(files)}
@@ -83,7 +84,7 @@ export function FileStep({ detail, actions }: { detail: ImportDetail; actions: I
         </>
       }
       side={detail.files.map((file) => (
-        <ReadFromFile key={file.id} file={file} named={several} />
+        <ReadFromFile key={file.id} file={file} detail={detail} actions={actions} named={several} />
       ))}
     />
   );
@@ -91,65 +92,4 @@ export function FileStep({ detail, actions }: { detail: ImportDetail; actions: I
 
 function Refused({ error }: { error: Error }) {
   return <ErrorState problem={error instanceof ApiError ? error.problem : null} />;
-}
-
-const SEPARATOR_NAMES = {
-  ",": "comma",
-  ";": "semicolon",
-  "\t": "tab",
-  "|": "bar",
-  " ": "space",
-} as const;
-
-function ReadFromFile({ file, named }: { file: ImportFile; named: boolean }) {
-  const t = useWords("imports");
-  const format = useFormat();
-  if (file.unreadable) return null;
-  const { recognition, recipe } = file;
-  if (!recognition || !recipe) return <LoadingBlocks label={t("file.readingUnknown")} />;
-
-  const marks = new Set(
-    recipe.columns
-      .filter((column) => column.meaning !== "skip" && column.unit !== null)
-      .map((column) => column.decimalMark),
-  );
-  const mark = marks.size > 1 ? "mixed" : marks.has(",") ? "comma" : "point";
-  const rows: SideRow[] = [
-    {
-      label: t("file.read.header"),
-      value:
-        recipe.dialect.headerLine === null
-          ? t("file.read.none")
-          : String(recipe.dialect.headerLine),
-      asRead: true,
-    },
-    {
-      label: t("file.read.separator"),
-      value: t(`file.separatorName.${SEPARATOR_NAMES[recipe.dialect.separator]}`),
-      asRead: true,
-    },
-    { label: t("file.read.decimal"), value: t(`file.decimalName.${mark}`), asRead: true },
-    { label: t("file.read.rows"), value: format.number(recognition.dataRowCount, 0), asRead: true },
-    { label: t("file.read.columns"), value: String(recognition.columnCount), asRead: true },
-    {
-      label: t("file.read.encoding"),
-      value: t(`file.encodingName.${recipe.dialect.encoding}`),
-      asRead: true,
-    },
-  ];
-  return (
-    <View style={{ gap: 20 }}>
-      <SideRows title={named ? file.name : t("file.read.title")} rows={rows} />
-      {recognition.preamble.length > 0 ? (
-        <SideRows
-          title={t("file.above")}
-          rows={recognition.preamble.slice(0, 8).map((entry) => ({
-            label: entry.label,
-            value: entry.value,
-            asRead: true,
-          }))}
-        />
-      ) : null}
-    </View>
-  );
 }

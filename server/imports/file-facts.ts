@@ -13,12 +13,18 @@ import {
   type StandingInstallation,
 } from "@server/queries/evidence/point-evidence";
 
+export interface SaidByFile {
+  readonly facts: FileFact[];
+  /** The installation they were held against; null where none speaks for that time. */
+  readonly installationId: string | null;
+}
+
 /** What each file of an import says above its header, held against the point's record of that time. */
 export async function factsOfFiles(
   scope: Scope,
   row: LogImport,
   files: readonly LogFile[],
-): Promise<Map<string, FileFact[]>> {
+): Promise<Map<string, SaidByFile>> {
   const said = files.flatMap((file) => {
     const facts = preambleFacts(file.recognition?.preamble ?? []);
     return facts.length > 0 ? [{ file, facts }] : [];
@@ -37,7 +43,8 @@ export async function factsOfFiles(
       const atMs = checked?.firstInstant ? Date.parse(checked.firstInstant) : null;
       const spoke = installationAt(found.installations, atMs);
       const recorded = recordedFacts(found, spoke, serialOf, checked?.nominalStepS ?? null);
-      return [file.id, compareFacts(facts, recorded).map((fact) => ({ ...fact }))];
+      const compared = compareFacts(facts, recorded).map((fact) => ({ ...fact }));
+      return [file.id, { facts: compared, installationId: spoke?.id ?? null }];
     }),
   );
 }

@@ -8,6 +8,7 @@ import type { LogFile } from "@server/models/log-file";
 import type { LogImport } from "@server/models/log-import";
 import type { Actor } from "@server/policies/actor";
 import { can } from "@server/policies/can";
+import type { SaidByFile } from "./file-facts";
 import type { ImportFacts, ImportPlace } from "./import-facts";
 import { presentPointSet, presentQuestion } from "./present-question";
 import { isCancellable, isEditable, isReopenable } from "./import-states";
@@ -95,7 +96,7 @@ function presentFile(
   file: LogFile,
   twins: readonly Twin[],
   alsoFor: ImportFile["alsoFor"],
-  said: ImportFile["facts"],
+  said: SaidByFile | undefined,
 ): ImportFile {
   const twin = twins.find((other) => other.file.id === file.id);
   const { recognition } = file;
@@ -126,7 +127,8 @@ function presentFile(
     },
     recipe: file.recipe && presentRecipe(file.recipe),
     questions: (file.questions ?? []).map(presentQuestion),
-    facts: said,
+    facts: said?.facts ?? [],
+    heldAgainst: said?.installationId ?? null,
   };
 }
 
@@ -138,7 +140,7 @@ export function presentImportDetail(
     readonly twins: readonly Twin[];
     readonly alsoFor: ReadonlyMap<string, ImportFile["alsoFor"]>;
     /** What each file says of pipe and kit, held against the record. */
-    readonly said: ReadonlyMap<string, ImportFile["facts"]>;
+    readonly said: ReadonlyMap<string, SaidByFile>;
     readonly bore: BoreVersion | null;
   },
   actor: Actor,
@@ -152,7 +154,7 @@ export function presentImportDetail(
     // Bytes that are stored already must not count twice: confirming would be refused.
     can: { ...summary.can, confirm: summary.can.confirm && more.twins.length === 0 },
     files: more.files.map((file) =>
-      presentFile(file, more.twins, more.alsoFor.get(file.id) ?? [], more.said.get(file.id) ?? []),
+      presentFile(file, more.twins, more.alsoFor.get(file.id) ?? [], more.said.get(file.id)),
     ),
     repair: row.repair,
     checks: row.checks,

@@ -221,6 +221,7 @@ export const importFile = z.object({
   recipe: fileRecipe.nullable().describe("the proposed recipe with every answer given so far"),
   questions: z.array(question).describe("what is still to be answered for this file"),
   facts: z.array(fileFact).describe("what the file says about pipe, kit and settings"),
+  heldAgainst: id.nullable().describe("the installation its facts were held against"),
 });
 export type ImportFile = z.infer<typeof importFile>;
 

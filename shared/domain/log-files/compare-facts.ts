@@ -1,5 +1,6 @@
 import type { FactKind, PreambleFact } from "./preamble-facts";
-import { isSerial, plainSerial } from "./preamble-facts";
+import { plainSerial } from "./plain-serial";
+import { isSerial } from "./preamble-facts";
 
 /** What the record of a point says, by the kind of fact it can be held against; null where it is silent. */
 export interface RecordedFacts {

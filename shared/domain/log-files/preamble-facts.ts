@@ -114,14 +114,6 @@ export function isSerial(kind: FactKind): boolean {
 /** With a digit, and in at most three words: more are another label and its value on the same line. */
 const SERIAL_TEXT = /^(?=.*\d)(?!.* .* .* )[\p{L}\p{N}][\p{L}\p{N}./_ -]{0,59}$/u;
 
-/** The text of a serial that two writings of it share: `s/n 50 417` and `50417`. */
-export function plainSerial(text: string): string {
-  return text
-    .toUpperCase()
-    .replace(/^(S ?\/ ?N|SN|SERIAL)[ :#.]+/, "")
-    .replace(/[^\p{L}\p{N}]/gu, "");
-}
-
 /** Words of a label in lower case, apart by single spaces; its unit in brackets left out. */
 function plainLabel(label: string): string {
   return label
