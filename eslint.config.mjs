@@ -143,6 +143,7 @@ export default defineConfig([
     ignores: [
       "node_modules/**",
       "dist/**",
+      "dist.new/**",
       "var/**",
       ".expo/**",
       "public/canvaskit*",

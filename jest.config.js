@@ -45,6 +45,7 @@ const nodeProject = {
 
 /** @type {import("jest").Config} */
 module.exports = {
+  testSequencer: "<rootDir>/scripts/jest-order.cjs",
   // Real databases and real files on two busy cores: the usual five seconds is too tight.
   testTimeout: 30000,
   projects: [

@@ -19,12 +19,23 @@ const count = ({ passed, failed }) => {
   total.failed += failed;
 };
 
-/** Format, lint and types: two of them at a time, one for each core of a small machine. */
-async function staticChecks() {
-  const types = wholeCheck(session, "types", ["tsc", "--noEmit"], bare);
-  count(await wholeCheck(session, "format", ["prettier", "--check", "."], bare));
-  count(await wholeCheck(session, "lint", ["eslint", ".", "--max-warnings", "0"], bare));
-  count(await types);
+/** Runs one after the other: a lane for each core of a small machine. */
+async function lane(...steps) {
+  for (const step of steps) await step();
+}
+
+/** Format, lint and types, and the client that the browser tests need: in two lanes much of a length. */
+async function checksAndBuild() {
+  const check = (name, command) => async () =>
+    count(await wholeCheck(session, name, command, bare));
+  const lanes = await Promise.allSettled([
+    lane(
+      check("lint", ["eslint", ".", "--max-warnings", "0"]),
+      check("format", ["prettier", "--check", "."]),
+    ),
+    lane(check("types", ["tsc", "--noEmit"]), () => ensureWebBuild(session)),
+  ]);
+  for (const { reason } of lanes) if (reason) throw reason;
 }
 
 try {
@@ -32,14 +43,13 @@ try {
   await ensureMariadb(session);
   await ensureChromium(session);
   await ensureCurl(session);
-  await staticChecks();
+  await checksAndBuild();
   const database = await startThrowAwayDatabase();
   session.atEnd(database.stop);
   const env = { ...bare, LOOPWRIGHT_TEST_DB_PORT: String(database.port) };
-  // On two cores Jest alone would use one; the kill test mostly waits for servers to boot.
+  // One for each core of a small machine, and one for the kill test, which mostly waits.
   const projects = ["--selectProjects", "client", "domain", "server"];
-  count(await jestCheck(session, [...projects, "--maxWorkers=2"], env));
-  await ensureWebBuild(session);
+  count(await jestCheck(session, [...projects, "--maxWorkers=3"], env));
   // One browser at a time: two on two cores make each other's waits run out.
   count(await jestCheck(session, ["--selectProjects", "browser", "--runInBand"], env));
 } catch (error) {
