@@ -63,7 +63,9 @@ export function FileCard(props: {
             />
           ) : null}
         </Row>
-        {file.source ? <SourceOfFile file={file} source={file.source} /> : null}
+        {file.source ? (
+          <SourceOfFile importId={detail.id} file={file} source={file.source} />
+        ) : null}
         {file.sameAs ? (
           <Banner
             kind="wrong"

@@ -1,12 +1,14 @@
 import { View } from "react-native";
 import { useFormat, useWords } from "@features/i18n";
-import { Banner, Text } from "@features/ui";
-import type { ImportFile } from "@shared/contracts/imports";
+import { addressOf } from "@features/api";
+import { Banner, Row, Text, TextLink } from "@features/ui";
+import { downloadLogFile, downloadLogText, type ImportFile } from "@shared/contracts/imports";
 
 type Source = NonNullable<ImportFile["source"]>;
 
 /** The workbook or archive a log came in, and what of it a person should know. */
-export function SourceOfFile({ file, source }: { file: ImportFile; source: Source }) {
+export function SourceOfFile(props: { importId: string; file: ImportFile; source: Source }) {
+  const { importId, file, source } = props;
   const t = useWords("imports");
   const format = useFormat();
   const { kind, name, bytes, member, leftOut } = source;
@@ -28,6 +30,22 @@ export function SourceOfFile({ file, source }: { file: ImportFile; source: Sourc
           {t(`file.source.in.${kind}`, { name, member, size: format.bytes(bytes) })}
         </Text>
       )}
+      <Row gap={4} wrap>
+        <TextLink
+          variant="small"
+          label={t("file.download")}
+          said={t("file.downloadOf", { name })}
+          href={addressOf(downloadLogFile, { params: { importId, fileId: file.id } })}
+        />
+        {member === null ? null : (
+          <TextLink
+            variant="small"
+            label={t("file.downloadText")}
+            said={t("file.downloadTextOf", { name: file.name })}
+            href={addressOf(downloadLogText, { params: { importId, fileId: file.id } })}
+          />
+        )}
+      </Row>
       {leftOut.length > 0 ? (
         <Text variant="small" tone="ink2">
           {t("file.source.leftOut")}{" "}

@@ -85,7 +85,7 @@ test("a workbook's dates and numbers become energy, and a cell that cannot be re
   const { files, checks, state } = await read(agent, id);
   expect({ state, questions: files[0]?.questions }).toEqual({ state: "ready", questions: [] });
   expect(files[0]).toMatchObject({
-    name: "July.xlsx",
+    name: "July.xlsx – Log",
     source: { kind: "xlsx", member: "Log" },
     recognition: { dataRowCount: 25 },
   });

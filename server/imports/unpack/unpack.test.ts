@@ -87,7 +87,7 @@ describe("a workbook", () => {
     const { texts: found, notes, kind } = await texts(bytes, "July.xlsx");
     expect(kind).toBe("xlsx");
     expect(found).toEqual({
-      "July.xlsx": [
+      "July.xlsx – Readings": [
         "Time\tFlow m³/h\tSupply °C\tOK\tNote",
         '2026-05-18T10:00:00\t6.7\t0.1234567890123456\tTRUE\t"said ""low"" and later"',
         "2026-05-18T10:01:00\t#N/A\t12.8",
@@ -100,6 +100,23 @@ describe("a workbook", () => {
       nameMisleads: false,
       countsFrom1904: false,
     });
+  });
+
+  it("keeps a formula written as text the text it is, and no formula's source reaches the log", async () => {
+    const bytes = await workbookOf({
+      sheets: {
+        A: {
+          rows: [
+            ["Time", "Flow", "Note"],
+            ["2026-05-18 10:00", 6.7, '=HYPERLINK("http://example.org";"x")'],
+            ["2026-05-18 10:01", 6.8, { raw: "7", formula: 'HYPERLINK("http://example.org")' }],
+          ],
+        },
+      },
+    });
+    const text = Object.values((await texts(bytes, "a.xlsx")).texts)[0];
+    expect(text).toContain('\t"=HYPERLINK(""http://example.org"";""x"")"\n');
+    expect(text).toContain("10:01\t6.8\t7\n");
   });
 
   it("keeps row and column numbers where rows and cells are missing", async () => {
@@ -135,7 +152,7 @@ describe("a workbook", () => {
       },
     });
     const { texts: found, notes } = await texts(bytes, "mac.xlsx");
-    expect(found["mac.xlsx"]).toContain("2025-07-15T12:00:00\t6.7");
+    expect(found["mac.xlsx – A"]).toContain("2025-07-15T12:00:00\t6.7");
     expect(notes.countsFrom1904).toBe(true);
   });
 
@@ -162,7 +179,7 @@ describe("a workbook", () => {
     const { texts: found, notes } = await texts(bytes, "visit.xlsx");
     expect(Object.keys(found)).toEqual(["visit.xlsx – Flow", "visit.xlsx – Temperature"]);
     expect(notes.leftOut).toEqual([
-      { name: "Old", because: "hiddenSheet" },
+      { name: "visit.xlsx – Old", because: "hiddenSheet" },
       { name: "visit.xlsx – Info", because: "noLog" },
     ]);
   });
@@ -211,10 +228,17 @@ describe("an archive", () => {
       "visit/photo.jpg": Buffer.from([0xff, 0xd8, 0xff]),
       "__MACOSX/visit/._flow.csv": "x",
       "visit/second.csv": LOG.replace("6,71", "6,72"),
+      "visit/a/log.csv": LOG.replace("6,71", "6,73"),
+      "visit/b/log.csv": LOG.replace("6,71", "6,74"),
     });
     const { texts: found, notes, kind } = await texts(bytes, "all.csv");
     expect(kind).toBe("zip");
-    expect(found).toEqual({ "flow.csv": LOG, "second.csv": LOG.replace("6,71", "6,72") });
+    expect(found).toEqual({
+      "flow.csv": LOG,
+      "second.csv": LOG.replace("6,71", "6,72"),
+      "visit/a/log.csv": LOG.replace("6,71", "6,73"),
+      "visit/b/log.csv": LOG.replace("6,71", "6,74"),
+    });
     expect(notes).toMatchObject({
       nameMisleads: true,
       leftOut: [

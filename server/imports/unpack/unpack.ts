@@ -120,10 +120,15 @@ async function readContainer(
     if (isWorkbook(archive)) return await readSheets(upload, archive, budget, take, leftOut);
     if (archive.entries.length > UNPACK_LIMITS.archiveEntries)
       throw new UnpackRefused("archiveTooManyEntries", String(archive.entries.length));
+    const names = archive.entries.map(({ fileName }) => baseName(fileName));
     for (const entry of archive.entries) {
       const { fileName } = entry;
       if (isSystemClutter(fileName)) continue;
-      if (mayHoldLog(fileName)) await take(baseName(fileName), fileName, archive.read(entry));
+      const name = baseName(fileName);
+      // Loggers call every file the same and tell them apart by folders.
+      const isAlone = names.filter((other) => other === name).length === 1;
+      if (mayHoldLog(fileName))
+        await take(isAlone ? name : fileName, fileName, archive.read(entry));
       else leftOut.push({ name: fileName, because: "notText" });
     }
     return { kind: "zip", ...plain };
@@ -142,14 +147,14 @@ async function readSheets(
   const workbook = await readWorkbook(archive);
   const shown = workbook.sheets.filter(({ isHidden }) => !isHidden);
   for (const { name } of workbook.sheets.filter(({ isHidden }) => isHidden))
-    leftOut.push({ name, because: "hiddenSheet" });
+    leftOut.push({ name: `${upload.name} – ${name}`, because: "hiddenSheet" });
   if (shown.length > UNPACK_LIMITS.archiveEntries)
     throw new UnpackRefused("archiveTooManyEntries", String(shown.length));
   let formulasWithoutValue = 0;
   for (const { name, entry } of shown) {
     const sheet = new SheetText(name, workbook, budget.textBounds(name));
-    const label = shown.length === 1 ? upload.name : `${upload.name} – ${name}`;
-    await take(label, name, sheet.read(archive.read(entry)));
+    // With the sheet, so that a problem names the file, the sheet and the row.
+    await take(`${upload.name} – ${name}`, name, sheet.read(archive.read(entry)));
     formulasWithoutValue += sheet.formulasWithoutValue;
   }
   return { kind: "xlsx", formulasWithoutValue, countsFrom1904: workbook.system === 1904 };
