@@ -1,6 +1,9 @@
 import { Random } from "@test/generators/random";
+import { readLogFixture } from "@test/fixtures/log-files/read-fixture";
 import { createFileScan } from "./file-scan";
+import { findFixedWidth } from "./find-fixed-width";
 import { createLogReader } from "./log-reader";
+import { preambleFacts } from "./preamble-facts";
 import type { FileRecipe } from "./recipe";
 import { isUnreadable, recogniseHead } from "./recognise-head";
 import { recogniseLogFile } from "./recognise-log-file";
@@ -49,9 +52,51 @@ describe("hostile bytes", () => {
     }
   });
 
+  it("columns of fixed width, cut, damaged or torn apart at random, end in a plain answer", () => {
+    const random = new Random(11);
+    const good = readLogFixture("ok/fixed-width-blank-cells.txt");
+    const whole = recogniseLogFile(good);
+    if ("code" in whole) throw new Error(whole.code);
+    const recipe: FileRecipe = {
+      ...whole.recipe,
+      time: { ...whole.recipe.time, clock: { kind: "utc" } },
+    };
+    for (let i = 0; i < 150; i++) {
+      const bytes = good.slice(0, random.whole(1, good.length));
+      for (let k = 0; k < 6; k++) bytes[random.whole(0, bytes.length - 1)] = random.whole(0, 255);
+      expect(survive(bytes)).toMatch(/^[a-zA-Z]+$/);
+      // By a recipe made for the whole file, in pieces of any size: every row is read or reported.
+      const reader = createLogReader(recipe);
+      for (let at = 0; at < bytes.length; at += 13) reader.push(bytes.subarray(at, at + 13));
+      const { rowCount, line } = reader.end();
+      expect(line).toHaveLength(rowCount);
+    }
+  });
+
+  it("lines of a million characters are no columns of fixed width, nor is a table of tabs", () => {
+    const wide = `2026-05-18 10:00 ${"1 ".repeat(500_000)}\n`;
+    expect(recogniseLogFile(encode(wide.repeat(3)))).toHaveProperty("code");
+    expect(findFixedWidth(wide.repeat(5))).toBeNull();
+    expect(findFixedWidth("10:00\t1\n".repeat(9))).toBeNull();
+    expect(findFixedWidth("")).toBeNull();
+  });
+
+  it("labels and values without end give one fact at most, and soon", () => {
+    const started = performance.now();
+    const label = `${"serial ".repeat(20_000)}x`;
+    const values = ["9".repeat(100_000), "1,".repeat(50_000), "- ".repeat(50_000), "("];
+    for (const value of values)
+      for (const name of ["Serial", "Bore (mm)", label, `Bore ${"(".repeat(50_000)}`])
+        expect(preambleFacts([{ line: 1, label: name, value }]).length).toBeLessThan(2);
+    expect(performance.now() - started).toBeLessThan(4000);
+  });
+
   it("names other kinds of file and binary data as no text", () => {
     expect(recogniseLogFile(Uint8Array.of(0x50, 0x4b, 3, 4, 0, 0))).toMatchObject({
       code: "notText",
+    });
+    expect(recogniseLogFile(Uint8Array.of(0xd0, 0xcf, 0x11, 0xe0, 0, 0))).toMatchObject({
+      code: "oldSpreadsheet",
     });
     expect(
       recogniseLogFile(Uint8Array.from({ length: 999 }, (_, i) => (i * 37) % 256)),
