@@ -36,8 +36,6 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
   declare sha256: string;
   declare byteLength: number;
   declare uploadedAt: Date;
-  declare recognition: CreationOptional<RecognitionFindings | null>;
-  declare unreadable: CreationOptional<Unreadable | null>;
   /** Null where the upload was the text itself. */
   declare sourceKind: CreationOptional<ContainerKind | null>;
   declare sourceSha256: CreationOptional<string | null>;
@@ -46,6 +44,8 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
   /** The sheet or the path in the archive; null until it is unpacked. */
   declare member: CreationOptional<string | null>;
   declare unpackNotes: CreationOptional<UnpackNotes | null>;
+  declare recognition: CreationOptional<RecognitionFindings | null>;
+  declare unreadable: CreationOptional<Unreadable | null>;
   declare recipe: CreationOptional<FileRecipe | null>;
   declare questions: CreationOptional<readonly Question[] | null>;
   /** The saved recipe it is read by, with what was different; null where none was applied. */
@@ -73,8 +73,6 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
           },
         },
         uploadedAt: instantColumn,
-        recognition: optionalJson("recognition"),
-        unreadable: optionalJson("unreadable"),
         sourceKind: { type: DataTypes.ENUM("xlsx", "zip", "gzip"), allowNull: true },
         sourceSha256: { type: DataTypes.CHAR(64), allowNull: true },
         sourceName: { type: DataTypes.STRING(255), allowNull: true },
@@ -88,6 +86,8 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
         },
         member: { type: DataTypes.STRING(255), allowNull: true },
         unpackNotes: optionalJson("unpackNotes"),
+        recognition: optionalJson("recognition"),
+        unreadable: optionalJson("unreadable"),
         recipe: optionalJson("recipe"),
         questions: optionalJson("questions"),
         appliedRecipe: optionalJson("appliedRecipe"),
@@ -101,9 +101,9 @@ export class LogFile extends Model<InferAttributes<LogFile>, InferCreationAttrib
       { sequelize, tableName: "log_file", timestamps: false },
     );
   }
-}
 
   /** It came inside something that is still to be unpacked. */
   get isPacked(): NonAttribute<boolean> {
     return this.sourceKind !== null && this.sourceKind !== undefined && this.member === null;
   }
+}
