@@ -104,7 +104,7 @@ function WithoutPlusMinus({ summary, site, loop, point }: LoopFigures) {
       </Text>
     );
   return (
-    <Row gap={8} wrap>
+    <Row gap={3} wrap>
       <Text variant="small" tone="ink2">
         {t("headline.noMeterClass")}
       </Text>

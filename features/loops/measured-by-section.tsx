@@ -39,7 +39,9 @@ export function MeasuredBySection(props: LoopFigures) {
           )}
         </>
       )}
-      <View style={{ flexDirection: "row", flexWrap: "wrap", columnGap: 16 }}>
+      <View
+        style={{ flexDirection: "row", flexWrap: "wrap", columnGap: 16, rowGap: 12, marginTop: 8 }}
+      >
         {installations.length > 0 ? (
           <TextLink label={t("measuredBy.evidence")} href={evidencePaths.evidence(...at)} />
         ) : evidence.can.record ? (
@@ -78,19 +80,32 @@ function Kit({ kit, dated, format }: LoopFigures & { kit: MeasuredBy; dated: boo
           </Text>
         </View>
       ) : null}
-      <Part
-        serial={flowMeter?.serial ?? null}
-        what={t("measuredBy.flowMeter")}
-        none={t("measuredBy.noFlowMeter")}
-        {...certificateWords()}
-      />
-      <Part
-        serial={probes && `${probes.supplySerial}, ${probes.returnSerial}`}
-        what={t("measuredBy.probes")}
-        none={t("measuredBy.noProbes")}
-        state={checked ?? t("measuredBy.notChecked")}
-        look={checked === null}
-      />
+      {kit.meterClass === null ? null : (
+        <Part
+          serial={t("measuredBy.meterClass", { meterClass: kit.meterClass })}
+          what={t("measuredBy.plate")}
+          none=""
+          state={t("measuredBy.ownPower")}
+          look={false}
+        />
+      )}
+      {kit.meterClass !== null && flowMeter === null ? null : (
+        <Part
+          serial={flowMeter?.serial ?? null}
+          what={t("measuredBy.flowMeter")}
+          none={t("measuredBy.noFlowMeter")}
+          {...certificateWords()}
+        />
+      )}
+      {kit.meterClass !== null && probes === null ? null : (
+        <Part
+          serial={probes && `${probes.supplySerial}, ${probes.returnSerial}`}
+          what={t("measuredBy.probes")}
+          none={t("measuredBy.noProbes")}
+          state={checked ?? t("measuredBy.notChecked")}
+          look={checked === null}
+        />
+      )}
     </>
   );
 

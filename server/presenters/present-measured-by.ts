@@ -28,6 +28,7 @@ export function presentMeasuredBy(
         state: certificateState(certificate.dueOn, lastDay),
       },
     },
+    meterClass: evidence.meterPlate?.accuracyClass ?? null,
     probes: probes && {
       supplySerial: probes.supply.serial,
       returnSerial: probes.return.serial,

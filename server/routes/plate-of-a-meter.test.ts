@@ -65,7 +65,8 @@ describe("energy that a permanent meter gave", () => {
   it("carries the limits of the class, which a day of readings does not shrink", async () => {
     const { summary, workings, install } = await meteredDay();
     await install({ meterPlate: { accuracyClass: 2 } });
-    const { plusMinus, days } = await summary();
+    const { plusMinus, days, evidence } = await summary();
+    expect(evidence?.installations).toMatchObject([{ meterClass: 2, flowMeter: null }]);
     expect(plusMinus.lacks).toBeNull();
     expect(plusMinus.heating.energy).toMatchObject({ expanded: 299.298, basis: "partlyDefaults" });
     expect(plusMinus.volume).toBeNull();
@@ -83,7 +84,14 @@ describe("energy that a permanent meter gave", () => {
         },
       },
     ]);
-    expect(shown.cautions).not.toContain("noUncertaintyForMeter");
+    expect(shown.cautions).toContain("billingHeldUp");
+    for (const foreign of [
+      "noUncertaintyForMeter",
+      "boreUnknown",
+      "pressureAssumed",
+      "stopVerdict",
+    ])
+      expect(shown.cautions).not.toContain(foreign);
     expect(shown.formulasFrom.map(({ name }) => name)).toContain("EN 1434-1");
     // Its limits hold flow and temperatures: nobody is told to compare probes it never showed.
     const checks = shown.installations[0]?.verdicts.map(({ check }) => check);

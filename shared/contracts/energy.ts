@@ -159,6 +159,8 @@ const measuredBy = z.object({
         .describe("as it stood on the last day of the range that the installation speaks for"),
     })
     .nullable(),
+  /** A permanent heat meter that gives power or energy by itself. */
+  meterClass: z.union([z.literal(1), z.literal(2), z.literal(3)]).nullable(),
   probes: z
     .object({
       supplySerial: z.string(),

@@ -68,7 +68,8 @@ function notesOf(budget: Budget, t: Words, format: Format): string[] {
   const notes = [
     t("budget.percentMore", { systematic: format.number(budget.systematicPercent, 2) }),
   ];
-  if (budget.samples > 1)
+  // Where nothing shrinks, the number of rows says nothing.
+  if (budget.samples > 1 && budget.randomPercent > 0)
     notes.push(
       t("budget.samples", {
         samples: format.number(budget.samples, 0),

@@ -18,13 +18,16 @@ export function cautionsOf(energyPoint: EnergyPoint, found: Found): string[] {
   const { uncertainty, coverage, installations } = found;
   const isWorked = uncertainty !== null && typeof uncertainty !== "string";
   const parts = isWorked ? uncertainty.parts : [];
-  const stops = installations.some(({ verdicts }) =>
-    verdicts.some(({ weight, adds }) => weight === "stop" && adds?.kind === "block"),
-  );
+  const ofWater = parts.length === 0 || parts.some(({ measuredBy }) => measuredBy === "water");
+  const blocks = (what: "use" | "billing") =>
+    installations.some(({ verdicts }) =>
+      verdicts.some(({ adds }) => adds?.kind === "block" && adds.blocks === what),
+    );
   const cautions: readonly (readonly [code: string, holds: boolean])[] = [
     ["energyBlocked", presentBasis(energyPoint).blockedBy !== null],
     ["nothingCovered", !found.covered],
-    ["stopVerdict", stops],
+    ["stopVerdict", blocks("use")],
+    ["billingHeldUp", blocks("billing")],
     ["indicativeOnly", parts.some(({ part }) => part.installation?.indicativeOnly === true)],
     ["noUncertaintyForMeter", uncertainty === "noUncertaintyForMeter"],
     ["noUncertaintyWithoutFlow", uncertainty === "noUncertaintyWithoutFlow"],
@@ -33,11 +36,15 @@ export function cautionsOf(energyPoint: EnergyPoint, found: Found): string[] {
     ["coverageBelow99", coverage !== null && coverage >= 0.95 && coverage < 0.99],
     ["defaultsOnly", isWorked && uncertainty.basis === "defaults"],
     ["partlyDefaults", isWorked && uncertainty.basis === "partlyDefaults"],
-    ["boreUnknown", parts.some(({ budget }) => budget.boreMm === null)],
+    ["boreUnknown", parts.some(isWaterWithoutBore)],
     ["meansOnly", readings.meansOnly],
     ["glycolInterpolated", fluidFacts(loop.fluid, loop.gaugePressureMPa)?.interpolated === true],
-    ["pressureAssumed", settings.pressure.assumed],
+    // A meter's own power does not ask for the loop's pressure.
+    ["pressureAssumed", ofWater && settings.pressure.assumed],
     ["recalculating", readings.recalculating],
   ];
   return cautions.flatMap(([code, holds]) => (holds ? [code] : []));
 }
+
+const isWaterWithoutBore = ({ measuredBy, budget }: FigureUncertainty["parts"][number]) =>
+  measuredBy === "water" && budget.boreMm === null;
