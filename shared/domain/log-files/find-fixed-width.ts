@@ -38,7 +38,7 @@ export function findFixedWidth(text: string): FixedWidthFinding | null {
   const [first] = body;
   if (body.length < MIN_LINES || first === undefined) return null;
   const rows = body.map((index) => lines[index] as string[]);
-  const fields = joinUnderHeader(fieldsOf(rows), lines.slice(Math.max(0, first - 2), first), rows);
+  const fields = joinWords(fieldsOf(rows), lines.slice(Math.max(0, first - 2), first), rows);
   if (fields.length < 2) return null;
   return {
     columnStarts: fields.map((field, i) =>
@@ -81,10 +81,10 @@ function fieldsOf(rows: readonly (readonly string[])[]): Field[] {
 }
 
 /**
- * Words of one column may happen to have their blank at the same place (`LOW SIGNAL`, `NO  FLOW`). One
- * blank under the middle of a header word does not part columns, unless what follows are numbers.
+ * Words of one column may happen to have their one blank at the same place (`LOW SIGNAL`, `NO  FLOW`), and
+ * so does the AM or PM of a time. Such a blank parts no columns, unless a header begins right after it.
  */
-function joinUnderHeader(
+function joinWords(
   fields: readonly Field[],
   above: readonly (readonly string[])[],
   rows: readonly (readonly string[])[],
@@ -92,19 +92,32 @@ function joinUnderHeader(
   const joined: Field[] = [];
   for (const field of fields) {
     const before = joined[joined.length - 1];
-    const isOneWord =
+    const isJoined =
       before !== undefined &&
       field.start - before.end === 1 &&
-      above.some((line) => isWithinWord(line, before.end)) &&
-      cellsOf(field, rows).every((cell) => cellKind(cell) === "text");
-    if (isOneWord) joined[joined.length - 1] = { start: before.start, end: field.end };
+      (isHalfDay(field, rows) ||
+        (areWords(before, rows) &&
+          areWords(field, rows) &&
+          !above.some((line) => beginsAt(line, field.start))));
+    if (isJoined) joined[joined.length - 1] = { start: before.start, end: field.end };
     else joined.push(field);
   }
   return joined;
 }
 
-function isWithinWord(line: readonly string[], at: number): boolean {
-  return [at - 1, at, at + 1].every((i) => (line[i] ?? " ") !== " ");
+function isHalfDay(field: Field, rows: readonly (readonly string[])[]): boolean {
+  const cells = cellsOf(field, rows);
+  return cells.length > 0 && cells.every((cell) => /^[ap]\.?m\.?$/i.test(cell));
+}
+
+/** Words and tokens such as OK, and no number or time among them. */
+function areWords(field: Field, rows: readonly (readonly string[])[]): boolean {
+  const kinds = cellsOf(field, rows).map(cellKind);
+  return kinds.includes("text") && kinds.every((kind) => kind === "text" || kind === "token");
+}
+
+function beginsAt(line: readonly string[], at: number): boolean {
+  return (line[at] ?? " ") !== " " && (line[at - 1] ?? " ") === " ";
 }
 
 function cellsOf({ start, end }: Field, rows: readonly (readonly string[])[]): string[] {

@@ -97,6 +97,31 @@ describe("columns of fixed width", () => {
     expect(findFixedWidth(growing.join("\n"))?.columnStarts).toEqual([0, 6]);
   });
 
+  it("keep AM and PM with their time, and words of one column together", () => {
+    const head = "Date       Time        Flow  Supply Remark\n";
+    const rows = [
+      "07/15/2026 12:05:00 AM  6.70  6.90   ok",
+      "07/15/2026 12:06:00 AM        6.90   signal too low",
+      "07/15/2026  1:07:00 PM  6.70         ok",
+      "07/15/2026  1:08:00 PM  6.70  6.90   ok",
+    ];
+    const found = recogniseLogFile(encode(head + rows.join("\n")));
+    if ("code" in found) throw new Error(found.code);
+    expect(found.recipe.dialect.columnStarts).toEqual([0, 11, 24, 30, 37]);
+    expect(found.sampleRows[1]?.cells).toEqual([
+      "07/15/2026",
+      "12:06:00 AM",
+      "",
+      "6.90",
+      "signal too low",
+    ]);
+    // A header that begins behind the blank has a column of its own.
+    const two = findFixedWidth(
+      `Time  A  B  T\n${["ab cd", "ef gh", "ij kl", "mn op"].map((w, i) => `10:0${i} ${w} 6.7`).join("\n")}`,
+    );
+    expect(two?.columnStarts).toEqual([0, 6, 9, 12]);
+  });
+
   it("never cut a value in two: a row that crosses a boundary is reported, not read", () => {
     const recipe = recipeOf("ok/fixed-width-blank-cells.txt");
     const reader = createLogReader(recipe);
