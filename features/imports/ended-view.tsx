@@ -2,6 +2,7 @@ import { View } from "react-native";
 import { useWords } from "@features/i18n";
 import { Banner, Button, Row } from "@features/ui";
 import type { ImportDetail } from "@shared/contracts/imports";
+import { ImportHistory } from "./import-history";
 import { importPaths } from "./import-paths";
 import type { ImportActions } from "./imports-queries";
 
@@ -25,6 +26,7 @@ export function EndedView({ detail, actions }: { detail: ImportDetail; actions: 
         ) : null}
         <Button kind="second" href={importPaths.logs} label={t("ended.logs")} />
       </Row>
+      <ImportHistory detail={detail} />
     </View>
   );
 }

@@ -8,6 +8,7 @@ import { UPLOAD_ENDINGS } from "@shared/domain/log-files/containers";
 import { FileCard } from "./file-card";
 import type { ImportActions } from "./imports-queries";
 import { ReadFromFile } from "./read-from-file";
+import { RecipeOffer } from "./recipes/recipe-offer";
 import { SideColumn } from "./side-column";
 
 interface Sending {
@@ -77,6 +78,7 @@ export function FileStep({ detail, actions }: { detail: ImportDetail; actions: I
                 key={file.id}
                 style={{ flexGrow: 1, flexBasis: abreast ? 320 : "auto", minWidth: 0 }}
               >
+                <RecipeOffer file={file} detail={detail} />
                 <FileCard file={file} detail={detail} actions={actions} />
               </View>
             ))}

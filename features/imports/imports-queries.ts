@@ -21,6 +21,7 @@ import {
   reopenImport,
   undoImport,
   type ImportDetail,
+  type ImportState,
 } from "@shared/contracts/imports";
 import type { fileRecipe, repairChoices } from "@shared/contracts/log-recipe";
 import { getEnergy } from "@shared/contracts/energy";
@@ -32,18 +33,26 @@ import { isWorking } from "./wizard-steps";
 /** Often enough for a progress loop to move, seldom enough not to load the server. */
 const POLL_MS = 700;
 
+/** What a list of imports is narrowed to. */
+export interface ImportFilters {
+  readonly siteId?: string;
+  readonly pointId?: string;
+  readonly state?: ImportState;
+  readonly personId?: string;
+}
+
 const keys = {
   all: ["imports"] as const,
-  list: (siteId: string | undefined) => ["imports", "list", siteId ?? "all"] as const,
+  list: (filters: ImportFilters) => ["imports", "list", filters] as const,
   detail: (importId: string) => ["imports", "detail", importId] as const,
 };
 
-export const importsQuery = (siteId?: string) =>
+export const importsQuery = (filters: ImportFilters = {}) =>
   infiniteQueryOptions({
-    queryKey: keys.list(siteId),
+    queryKey: keys.list(filters),
     initialPageParam: undefined as string | undefined,
     queryFn: ({ pageParam, signal }) =>
-      call(listImports, { query: { cursor: pageParam, siteId, limit: 25 }, signal }),
+      call(listImports, { query: { cursor: pageParam, ...filters, limit: 25 }, signal }),
     getNextPageParam: (page) => page.nextCursor ?? undefined,
     refetchInterval: (query) =>
       query.state.data?.pages.some((page) => page.items.some(isWorking)) ? 2 * POLL_MS : false,

@@ -1,5 +1,4 @@
-import { useInfiniteQuery, useQuery } from "@tanstack/react-query";
-import { router, useLocalSearchParams } from "expo-router";
+import { useInfiniteQuery } from "@tanstack/react-query";
 import { View } from "react-native";
 import { FailedAnswer, useSession } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
@@ -11,50 +10,54 @@ import {
   LoopTag,
   Row,
   Screen,
-  SelectField,
   Table,
   Text,
 } from "@features/ui";
 import type { ImportState, ImportSummary } from "@shared/contracts/imports";
 import { importPaths } from "./import-paths";
-import { importsQuery, placesToImportQuery } from "./imports-queries";
+import { importsQuery } from "./imports-queries";
+import { LogFilters, useLogFilters } from "./log-filters";
 import { serviceOfLoop } from "./loop-service";
-
-const ALL = "all";
 
 /** Every import of the organisation, newest first; also where one that was left is found again. */
 export function LogsScreen() {
   const t = useWords("imports");
   const { data: session } = useSession();
-  const { site } = useLocalSearchParams<{ site?: string }>();
-  const query = useInfiniteQuery(importsQuery(site));
-  const sites = useQuery(placesToImportQuery.sites);
+  const ofLogs = useWords("logs");
+  const filters = useLogFilters();
+  const isNarrowed = Object.values(filters).some((value) => value !== undefined);
+  const query = useInfiniteQuery(importsQuery(filters));
   const imports = query.data?.pages.flatMap((page) => page.items) ?? [];
   const mayImport = session?.can.importLogs ?? false;
-  const start = mayImport ? (
-    <Button icon="download" label={t("logs.import")} href={importPaths.start()} />
-  ) : null;
+  const start = (
+    <>
+      <Button kind="second" label={ofLogs("recipes")} href={importPaths.recipes} />
+      {mayImport ? (
+        <>
+          <Button kind="second" label={ofLogs("many")} href={importPaths.batches} />
+          <Button icon="download" label={t("logs.import")} href={importPaths.start()} />
+        </>
+      ) : null}
+    </>
+  );
   return (
     <Screen title={t("logs.title")} actions={start}>
       <View style={{ gap: 20 }}>
-        {(sites.data?.items.length ?? 0) > 1 ? (
-          <View style={{ maxWidth: 320 }}>
-            <SelectField
-              label={t("logs.site")}
-              value={site ?? ALL}
-              options={[
-                { value: ALL, label: t("logs.allSites") },
-                ...(sites.data?.items ?? []).map(({ id, name }) => ({ value: id, label: name })),
-              ]}
-              onChange={(value) => router.setParams({ site: value === ALL ? undefined : value })}
-            />
-          </View>
-        ) : null}
+        {imports.length > 0 || isNarrowed ? <LogFilters imports={imports} /> : null}
         {query.isPending ? <LoadingBlocks blocks={[{ width: "100%", height: 260 }]} /> : null}
         {query.error && imports.length === 0 ? (
           <FailedAnswer error={query.error} onRetry={() => void query.refetch()} />
         ) : null}
-        {query.isSuccess && imports.length === 0 ? (
+        {query.isSuccess && imports.length === 0 && isNarrowed ? (
+          <EmptyState
+            title={ofLogs("filter.none.title")}
+            detail={ofLogs("filter.none.text")}
+            action={
+              <Button kind="second" label={ofLogs("filter.none.clear")} href={importPaths.logs} />
+            }
+          />
+        ) : null}
+        {query.isSuccess && imports.length === 0 && !isNarrowed ? (
           <EmptyState
             title={t("logs.empty.title")}
             detail={t("logs.empty.text")}

@@ -19,14 +19,17 @@ import type { Quantity } from "@shared/domain/units/display-units";
 import { useWorkings } from "@features/workings/use-workings";
 import type { WorkingsKey } from "@features/workings/workings-key";
 import { WorkingsOverPage } from "@features/workings/workings-over-page";
+import { ChangeChoices } from "./change-choices";
 import { DailyEnergy } from "./daily-bars";
 import { rawFileAddress } from "./file-card";
 import { FindingRow } from "./finding-row";
 import { findingsOf } from "./findings";
+import { ImportHistory } from "./import-history";
 import { importPaths } from "./import-paths";
 import type { ImportActions } from "./imports-queries";
 import { resultRange, useResultPlusMinus } from "./result-plus-minus";
-import { RowCounts } from "./row-counts";
+import { SaveRecipe } from "./recipes/save-recipe";
+import { ResultRows } from "./result-rows";
 import { SideColumn } from "./side-column";
 import { SideRows } from "./side-rows";
 
@@ -69,12 +72,7 @@ export function ResultStep({ detail, actions }: { detail: ImportDetail; actions:
       side={
         <>
           {checks ? (
-            <View>
-              <Text variant="subhead" level={2}>
-                {t("result.rows")}
-              </Text>
-              <RowCounts rows={checks.rows} withoutTemperature={checks.rowsWithoutTemperature} />
-            </View>
+            <ResultRows detail={detail} checks={checks} />
           ) : null}
           <NextAndRecord detail={detail} />
         </>
@@ -234,7 +232,14 @@ function NextAndRecord({ detail }: { detail: ImportDetail }) {
           detail={t("result.anotherHint")}
           href={importPaths.start(detail.point.id)}
         />
+        <ChangeChoices detail={detail} />
       </View>
+      <View style={{ gap: 8, alignItems: "flex-start" }}>
+        {detail.files.map((file) => (
+          <SaveRecipe key={file.id} file={file} detail={detail} />
+        ))}
+      </View>
+      <ImportHistory detail={detail} />
       <SideRows
         title={t("result.record")}
         rows={[

@@ -40,5 +40,6 @@ export function currentStep(detail: ImportDetail, asked: string | undefined): Wi
   return furthest;
 }
 
-export const isWorking = (detail: Pick<ImportDetail, "state">): boolean =>
-  detail.state === "reading" || detail.state === "checking" || detail.state === "importing";
+/** A job is under way or waits; also one that takes the readings of an imported log out again. */
+export const isWorking = ({ state, progress }: Pick<ImportDetail, "state" | "progress">): boolean =>
+  state === "reading" || state === "checking" || state === "importing" || progress !== null;

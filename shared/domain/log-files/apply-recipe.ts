@@ -78,6 +78,7 @@ export function applyRecipe(saved: FileRecipe, file: FileEvidence): RecipeApplic
       columns,
       time,
       ...kind,
+      ...(saved.alikeChosen === true && { alikeChosen: true }),
       ...(isMetered && { meter: { positivePower, exchangedAt: [] } }),
     },
     differences,

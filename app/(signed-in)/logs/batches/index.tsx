@@ -1,0 +1,1 @@
+export { BatchesScreen as default } from "@features/imports/batches/batches-screen";

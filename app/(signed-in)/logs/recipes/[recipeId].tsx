@@ -1,0 +1,1 @@
+export { RecipeScreen as default } from "@features/imports/recipes/recipe-screen";

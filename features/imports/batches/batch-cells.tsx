@@ -1,0 +1,101 @@
+import { View } from "react-native";
+import type { BatchDetail, BatchFile } from "@shared/contracts/import-batches";
+import { useFormat, useWords } from "@features/i18n";
+import { Button, Chip, Mark, Row, SelectField, Text } from "@features/ui";
+import type { BatchActions } from "./batch-queries";
+
+interface CellProps {
+  readonly file: BatchFile;
+  readonly batch: BatchDetail;
+  readonly actions: BatchActions;
+}
+
+/** The point of a file: found, chosen, or to be chosen. */
+export function PointCell({ file, batch, actions }: CellProps) {
+  const t = useWords("batches");
+  const found = file.pointBy
+    ? t(`foundBy.${file.pointBy}`, { serial: file.loggerSerial ?? "" })
+    : null;
+  const doubtful = file.problems.some(({ code }) => code === "pointDoubtful");
+  const { point } = file;
+  return (
+    <View style={{ gap: 4 }}>
+      {file.can.choosePoint ? (
+        <SelectField
+          label={t("one.choosePoint", { name: file.name })}
+          labelHidden
+          attention={point === null || doubtful}
+          value={point?.id ?? null}
+          emptyLabel={t("one.pointEmpty")}
+          options={batch.points.map(({ id, code, name, loopTag }) => ({
+            value: id,
+            label: `${loopTag} ${code} ${name}`,
+          }))}
+          onChange={(pointId) => actions.choosePoint.send({ batchFileId: file.id, pointId })}
+          disabled={actions.choosePoint.busy}
+        />
+      ) : (
+        <Text>{point ? `${point.loopTag} ${point.code}` : "—"}</Text>
+      )}
+      {found ? (
+        <Text variant="small" tone="ink2">
+          {found}
+        </Text>
+      ) : null}
+      {doubtful && point && file.can.choosePoint ? (
+        <Row>
+          <Button
+            kind="second"
+            size="dense"
+            label={t("one.rightPoint")}
+            busy={actions.choosePoint.busy}
+            onPress={() => actions.choosePoint.send({ batchFileId: file.id, pointId: point.id })}
+          />
+        </Row>
+      ) : null}
+    </View>
+  );
+}
+
+export function StateCell({ file }: { file: BatchFile }) {
+  const t = useWords("batches");
+  const ofImports = useWords("imports");
+  const { state } = file;
+  const isAsking = state === "asking" || state === "askingPoint";
+  return (
+    <Chip
+      tone={state === "failed" ? "wrong" : isAsking ? "look" : "plain"}
+      label={state === "askingPoint" ? t("askingPoint") : ofImports(`state.${state}`)}
+    />
+  );
+}
+
+export function ProblemsCell({ file }: { file: BatchFile }) {
+  const t = useWords("batches");
+  if (file.problems.length === 0) return <Text tone="ink2">—</Text>;
+  return (
+    <View role="list" style={{ gap: 4 }}>
+      {file.problems.map(({ code, count, detail }) => (
+        <View key={code} role="listitem" style={{ flexDirection: "row", gap: 6 }}>
+          <Mark
+            kind={code === "failed" || code === "unreadable" ? "wrong" : "look"}
+            size={18}
+            silent
+          />
+          <View style={{ flex: 1, minWidth: 0 }}>
+            <Text variant="small">{t(`problem.${code}`, { count: count ?? 0, detail })}</Text>
+          </View>
+        </View>
+      ))}
+    </View>
+  );
+}
+
+/** From the first to the last day of a file's rows, in the site's zone. */
+export function useSpanWords(zone: string): (file: BatchFile) => string {
+  const format = useFormat(zone);
+  return ({ firstInstant, lastInstant }) =>
+    firstInstant && lastInstant
+      ? `${format.date(Date.parse(firstInstant), "dayMonthYear")} – ${format.date(Date.parse(lastInstant), "dayMonthYear")}`
+      : "—";
+}
