@@ -8,6 +8,7 @@ import deCharts from "./locales/de/charts.json";
 import deCompare from "./locales/de/compare.json";
 import deCorrections from "./locales/de/corrections.json";
 import deEnergy from "./locales/de/energy.json";
+import deFindings from "./locales/de/findings.json";
 import deImports from "./locales/de/imports.json";
 import deInstallation from "./locales/de/installation.json";
 import deKit from "./locales/de/kit.json";
@@ -26,6 +27,7 @@ import enCharts from "./locales/en/charts.json";
 import enCompare from "./locales/en/compare.json";
 import enCorrections from "./locales/en/corrections.json";
 import enEnergy from "./locales/en/energy.json";
+import enFindings from "./locales/en/findings.json";
 import enImports from "./locales/en/imports.json";
 import enInstallation from "./locales/en/installation.json";
 import enKit from "./locales/en/kit.json";
@@ -51,6 +53,7 @@ export const words = {
   corrections: { en: enCorrections, de: deCorrections },
   energy: { en: enEnergy, de: deEnergy },
   evidence: { en: enEvidence, de: deEvidence },
+  findings: { en: enFindings, de: deFindings },
   imports: { en: enImports, de: deImports },
   installation: { en: enInstallation, de: deInstallation },
   kit: { en: enKit, de: deKit },

@@ -1,3 +1,4 @@
+import { useState } from "react";
 import { View } from "react-native";
 import { useFormat, useWords } from "@features/i18n";
 import { Card, LoadingBlocks, Mark, QualityStrip, Text, useTheme } from "@features/ui";
@@ -6,8 +7,10 @@ import type { ImportChecks } from "@shared/contracts/import-checks";
 import type { ImportDetail } from "@shared/contracts/imports";
 import { DifferingFacts } from "./file-facts";
 import { FindingRow } from "./finding-row";
-import { findingsOf, type Finding } from "./findings";
+import { itemsOf, stopsOf } from "./check-items";
 import type { ImportActions } from "./imports-queries";
+import { ProgressView } from "./progress-view";
+import { ReadingFinding } from "./reading-finding";
 import { RowCounts } from "./row-counts";
 import { SideColumn } from "./side-column";
 import { SideRows, type SideRow } from "./side-rows";
@@ -17,21 +20,19 @@ import { useChecksWhenAnswered } from "./time-step";
 export function ChecksStep({ detail, actions }: { detail: ImportDetail; actions: ImportActions }) {
   const t = useWords("imports");
   useChecksWhenAnswered(detail, actions);
-  const { checks } = detail;
+  const checks = useLastChecks(detail);
   if (!checks) {
+    if (detail.state === "checking") return <ProgressView detail={detail} actions={actions} />;
     const { error } = actions.check;
-    if (error && detail.state !== "checking") {
-      return <FailedAnswer error={error} onRetry={() => actions.check.mutate()} />;
-    }
+    if (error) return <FailedAnswer error={error} onRetry={() => actions.check.mutate()} />;
     return <LoadingBlocks label={t("checks.working")} blocks={[{ width: "100%", height: 320 }]} />;
   }
-  const findings = findingsOf(checks, detail.repair);
   return (
     <SideColumn
       main={
         <>
           <DifferingFacts detail={detail} />
-          <Findings findings={findings} detail={detail} checks={checks} actions={actions} />
+          <Findings detail={detail} checks={checks} actions={actions} />
         </>
       }
       side={<Sides detail={detail} checks={checks} />}
@@ -39,18 +40,29 @@ export function ChecksStep({ detail, actions }: { detail: ImportDetail; actions:
   );
 }
 
-function Findings(props: {
-  findings: readonly Finding[];
-  detail: ImportDetail;
-  checks: ImportChecks;
-  actions: ImportActions;
-}) {
-  const { findings, detail, checks, actions } = props;
+/** What the last check found stays on the screen while the next one runs. */
+function useLastChecks({ id, checks }: ImportDetail): ImportChecks | null {
+  const [last, setLast] = useState({ id, checks });
+  if (checks !== null && checks !== last.checks) setLast({ id, checks });
+  else if (last.id !== id) setLast({ id, checks });
+  return checks ?? (last.id === id ? last.checks : null);
+}
+
+interface FindingsProps {
+  readonly detail: ImportDetail;
+  readonly checks: ImportChecks;
+  readonly actions: ImportActions;
+}
+
+function Findings({ detail, checks, actions }: FindingsProps) {
   const t = useWords("imports");
+  const words = useWords("findings");
   const { colour } = useTheme();
-  const stops = checks.undecided.length;
+  const items = itemsOf(checks, detail.repair);
+  const stops = stopsOf(checks, detail.repair);
+  const more = checks.moreFindings ?? 0;
   return (
-    <Card pad={0} label={t("checks.found", { count: findings.length })}>
+    <Card pad={0} label={t("checks.found", { count: items.length })}>
       <View
         style={{
           flexDirection: "row",
@@ -61,33 +73,45 @@ function Findings(props: {
         }}
       >
         <Text variant="heading" level={2}>
-          {findings.length === 0 || stops > 0
+          {items.length === 0 || stops > 0
             ? t("checks.title", { count: stops })
-            : t("checks.found", { count: findings.length })}
+            : t("checks.found", { count: items.length })}
         </Text>
-        <Text variant="bodyWide" tone="ink2">
-          {t("checks.stops", { count: stops })}
-        </Text>
+        <View role="status">
+          <Text variant="bodyWide" tone="ink2">
+            {detail.checks === null ? words("again") : t("checks.stops", { count: stops })}
+          </Text>
+        </View>
       </View>
-      {findings.map((finding) => (
+      {items.map((item) => (
         <View
-          key={finding.key}
+          key={item.key}
           style={{
             padding: 20,
             borderTopWidth: 1,
             borderTopColor: colour.rule,
-            backgroundColor: finding.weight === "stop" ? colour.madderFaint : undefined,
+            backgroundColor: item.weight === "stop" ? colour.madderFaint : undefined,
           }}
         >
-          <FindingRow finding={finding} detail={detail} checks={checks} actions={actions} />
+          {item.kind === "reading" ? (
+            <ReadingFinding finding={item.finding} detail={detail} actions={actions} />
+          ) : (
+            <FindingRow finding={item.finding} detail={detail} checks={checks} actions={actions} />
+          )}
         </View>
       ))}
+      {more > 0 ? (
+        <View style={{ padding: 20 }}>
+          <Text tone="ink2">{words("more", { count: more })}</Text>
+        </View>
+      ) : null}
     </Card>
   );
 }
 
 function Sides({ detail, checks }: { detail: ImportDetail; checks: ImportChecks }) {
   const t = useWords("imports");
+  const words = useWords("findings");
   const format = useFormat(detail.site.zone);
   const energy: SideRow[] = [];
   if (checks.energy) {
@@ -157,16 +181,42 @@ function Sides({ detail, checks }: { detail: ImportDetail; checks: ImportChecks 
       {(checks.rowsAgainstRegister ?? 0) > 0 ? (
         <Text tone="ink2">{t("checks.against", { count: checks.rowsAgainstRegister })}</Text>
       ) : null}
+      <NotChecked detail={detail} checks={checks} />
       {checks.clean.length > 0 ? (
         <SideRows
           title={t("checks.clean", { count: checks.clean.length })}
           rows={checks.clean.map((name) => ({
-            label: t(`checks.cleanName.${name}`, { defaultValue: name }),
+            label: words(`clean.${name}`, {
+              defaultValue: t(`checks.cleanName.${name}`, { defaultValue: name }),
+            }),
             value: "",
             lead: <Mark kind="fine" size={18} silent />,
           }))}
         />
       ) : null}
     </>
+  );
+}
+
+/** Silence is never soundness: what could not be looked at, and why. */
+function NotChecked({ detail, checks }: { detail: ImportDetail; checks: ImportChecks }) {
+  const t = useWords("findings");
+  const missing = checks.notChecked ?? [];
+  if (missing.length === 0) return null;
+  const several = detail.files.length > 1;
+  const nameOf = (fileId: string | null) =>
+    several ? (detail.files.find(({ id }) => id === fileId)?.name ?? "") : "";
+  return (
+    <SideRows
+      title={t("notChecked.title", { count: missing.length })}
+      rows={missing.map(({ check, lacks, fileId }) => ({
+        label: t("notChecked.because", {
+          check: t(`notChecked.check.${check}`),
+          lacks: t(`notChecked.lacks.${lacks}`),
+        }),
+        value: nameOf(fileId),
+        lead: <Mark kind="note" size={18} silent />,
+      }))}
+    />
   );
 }

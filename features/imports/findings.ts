@@ -3,7 +3,7 @@ import type { ImportDetail } from "@shared/contracts/imports";
 
 type Repair = ImportDetail["repair"];
 /** Names of the choices a person has about defects. */
-export type ChoiceName = Exclude<keyof Repair, "weakSignalBelowPercent">;
+export type ChoiceName = Exclude<keyof Repair, "weakSignalBelowPercent" | "findings" | "keptSpans">;
 
 /** One thing on the Checks step. A stopping one has no choice made for it. */
 export interface Finding {

@@ -97,7 +97,7 @@ function StepBody(props: {
   actions: ReturnType<typeof useImportActions>;
 }) {
   const { step, detail } = props;
-  if (detail.state === "importing" || (detail.state === "checking" && step === "checks")) {
+  if (detail.state === "importing") {
     return <ProgressView {...props} />;
   }
   switch (step) {

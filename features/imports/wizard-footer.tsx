@@ -3,6 +3,7 @@ import { useWords } from "@features/i18n";
 import { Button, Mark, Row, Text, useBreakpoint } from "@features/ui";
 import { ApiError } from "@features/api";
 import type { ImportDetail } from "@shared/contracts/imports";
+import { stopsOf } from "./check-items";
 import { importPaths } from "./import-paths";
 import type { ImportActions } from "./imports-queries";
 import { useUndoDialog } from "./result-step";
@@ -84,7 +85,7 @@ function ConfirmButton({ detail, actions }: WizardFooterProps) {
   const t = useWords("imports");
   const phone = useBreakpoint() === "phone";
   const { checks } = detail;
-  const stops = checks?.undecided.length ?? 0;
+  const stops = checks ? stopsOf(checks, detail.repair) : 0;
   const rows = checks?.files.reduce((sum, file) => sum + file.rowsKept, 0) ?? 0;
   const twice = detail.files.some((file) => file.sameAs !== null);
   const why = !checks

@@ -73,7 +73,7 @@ export { SelectField, type SelectFieldProps } from "./select-field";
 export { ReasonSheet } from "./reason-sheet";
 export { Inspector, Sheet, type SheetProps } from "./sheet";
 export { squaredPaper } from "./squared-paper";
-export { Spark, sparkPath, type SparkProps } from "./spark";
+export { Spark, sparkPath, sparkRange, type SparkProps, type SparkRange } from "./spark";
 export { Row, Stack } from "./stack";
 export {
   DeniedState,

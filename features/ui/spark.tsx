@@ -56,8 +56,8 @@ export function Spark({ label, values, highlight, height = 48 }: SparkProps) {
   );
 }
 
-/** Line through the values, scaled to the box with 3 px to spare; gaps lift the pen. */
-export function sparkPath(values: ArrayLike<number>, width: number, height: number): string {
+/** The least and the greatest of values; null where all are NaN. */
+export function sparkRange(values: ArrayLike<number>): SparkRange | null {
   let least = Infinity;
   let greatest = -Infinity;
   for (let i = 0; i < values.length; i++) {
@@ -65,6 +65,25 @@ export function sparkPath(values: ArrayLike<number>, width: number, height: numb
     if (value < least) least = value;
     if (value > greatest) greatest = value;
   }
+  return least <= greatest ? { least, greatest } : null;
+}
+
+export interface SparkRange {
+  readonly least: number;
+  readonly greatest: number;
+}
+
+/**
+ * Line through the values, scaled to the box with 3 px to spare; gaps lift the pen. Two lines share a
+ * scale where both are given the same range.
+ */
+export function sparkPath(
+  values: ArrayLike<number>,
+  width: number,
+  height: number,
+  range = sparkRange(values),
+): string {
+  const { least, greatest } = range ?? { least: 0, greatest: 0 };
   const span = greatest > least ? greatest - least : 1;
   const step = width / Math.max(1, values.length - 1);
   let path = "";

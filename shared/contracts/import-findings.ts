@@ -67,8 +67,6 @@ export const importFinding = z.object({
     "stepChange",
     "stuckChannel",
     "noFlowNoise",
-    "serialDiffers",
-    "boreDiffers",
   ]),
   weight: findingWeight,
   channel: findingChannel.nullable(),
@@ -114,4 +112,4 @@ export type NotCheckedView = z.infer<typeof notChecked>;
 /** What was chosen for findings: the key of a finding to the key of one of its choices. */
 export const findingChoices = z.record(z.string().max(120), z.string().max(60));
 /** Spans of a chosen exclusion that stay in, by finding; named by their first instant. */
-export const keptSpans = z.record(z.string().max(120), z.array(instant).max(50));
+export const keptSpans = z.record(z.string().max(120), z.array(instant).max(50).readonly());

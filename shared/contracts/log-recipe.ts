@@ -125,6 +125,7 @@ export const fileRecipe = z.object({
     notes: z
       .array(clockNote)
       .max(2)
+      .readonly()
       .optional()
       .describe(
         "what the logger's clock and a right one showed at start and end; of this file only",

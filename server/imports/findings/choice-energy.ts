@@ -1,4 +1,4 @@
-import type { CorrectionChange, CorrectionEffect } from "@shared/contracts/corrections";
+import type { CorrectionChange } from "@shared/contracts/corrections";
 import {
   correctSegments,
   type SegmentCorrection,
@@ -15,8 +15,12 @@ import type { CheckedFile } from "../file-checks";
 import { sourcesOf } from "../import-sources";
 import { onSegments, withClocks } from "./chosen-readings";
 
-/** Both registers, kWh. */
-export type Registers = CorrectionEffect["before"];
+/** Both registers, and the water that moved. */
+export interface Registers {
+  readonly heatingKwh: number;
+  readonly coolingKwh: number;
+  readonly volumeM3: number;
+}
 
 /** What the energy of changed readings is worked out from. */
 export interface WeighingInput {
@@ -153,8 +157,13 @@ export class ChoiceEnergy {
     const days = localDaysBetween(window, settings.zone);
     const totals = calculateSpan(segments, settings, days, window)?.totals;
     if (!totals) return null;
-    const { heating, cooling, suppressedKwh } = totals;
-    return { heatingKwh: heating.energyKwh, coolingKwh: cooling.energyKwh, suppressedKwh };
+    const { heating, cooling, suppressedKwh, volumeM3 } = totals;
+    return {
+      heatingKwh: heating.energyKwh,
+      coolingKwh: cooling.energyKwh,
+      volumeM3,
+      suppressedKwh,
+    };
   }
 
   private uncorrected(changes: readonly CorrectionChange[]): readonly ReadingSegment[] {
@@ -204,15 +213,20 @@ export class ChoiceEnergy {
   }
 }
 
-const registersOf = ({ heatingKwh, coolingKwh }: Registers): Registers => ({
+const registersOf = ({ heatingKwh, coolingKwh, volumeM3 }: Registers): Registers => ({
   heatingKwh,
   coolingKwh,
+  volumeM3,
 });
-const nothing: Registers = { heatingKwh: 0, coolingKwh: 0 };
+const nothing: Registers = { heatingKwh: 0, coolingKwh: 0, volumeM3: 0 };
 
 const isWithin = (ms: number, { startMs, endMs }: Interval) => startMs <= ms && ms < endMs;
 
-function add(sums: { heatingKwh: number; coolingKwh: number }, more: Registers): void {
+function add(
+  sums: { -readonly [Name in keyof Registers]: Registers[Name] },
+  more: Registers,
+): void {
   sums.heatingKwh += more.heatingKwh;
   sums.coolingKwh += more.coolingKwh;
+  sums.volumeM3 += more.volumeM3;
 }

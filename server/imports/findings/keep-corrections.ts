@@ -88,8 +88,9 @@ function effectOf(
   return {
     from: instantText(new Date(weight.startMs)),
     to: instantText(new Date(weight.endMs)),
-    before: weight.before,
-    after: weight.after,
+    before: { heatingKwh: weight.before.heatingKwh, coolingKwh: weight.before.coolingKwh },
+    after: { heatingKwh: weight.after.heatingKwh, coolingKwh: weight.after.coolingKwh },
+    volume: { beforeM3: weight.before.volumeM3, afterM3: weight.after.volumeM3 },
     rowsChanged: rowsChangedBy(one, energy.segmentsWith([])),
   };
 }

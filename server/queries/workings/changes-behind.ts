@@ -1,12 +1,14 @@
 import { Op } from "sequelize";
 import type { Workings } from "@shared/contracts/workings";
 import type { CorrectionChange } from "@shared/contracts/corrections";
+import { spansOverlap } from "@shared/domain/readings/corrections/correction-span";
 import type { Interval } from "@shared/domain/time/interval";
 import type { Database } from "@server/database/connect";
 import { instantText, instantTextOrNull } from "@server/database/conversions";
 import type { Scope } from "@server/database/scoped";
 import type { Correction } from "@server/models/correction";
 import { EnergyFill } from "@server/models/energy-fill";
+import { spanOfChange } from "@server/readings/point-corrections";
 import { correctionsOfPoint } from "@server/queries/corrections/list-corrections";
 
 /** Applied corrections that reach into a range, newest first. */
@@ -26,9 +28,8 @@ function reachesInto(
   fileIds: readonly string[],
 ): boolean {
   if ("logFileId" in change) return fileIds.includes(change.logFileId);
-  const startMs = Date.parse(change.from);
-  const endMs = change.to === null ? Infinity : Date.parse(change.to);
-  return startMs < range.endMs && endMs > range.startMs;
+  const span = spanOfChange(change);
+  return span !== null && spansOverlap(span, range);
 }
 
 export function presentCorrections(rows: readonly Correction[]): Workings["corrections"] {
