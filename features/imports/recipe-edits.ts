@@ -3,6 +3,7 @@ import type { PositivePower } from "@shared/domain/readings/orient-power";
 import type { SeriesKind } from "@shared/domain/readings/reading-columns";
 import type { PointSet } from "@shared/domain/log-files/recognition";
 import type {
+  ClockReading,
   ColumnMeaning,
   ColumnRecipe,
   ColumnUnit,
@@ -162,6 +163,12 @@ export function withDateOrder(recipe: FileRecipe, order: DateOrder): FileRecipe 
 
 export function withClock(recipe: FileRecipe, clock: LoggerClock): FileRecipe {
   return { ...recipe, time: { ...recipe.time, clock } };
+}
+
+/** What clocks showed at start and end; none at all where none is given. */
+export function withNotes(recipe: FileRecipe, notes: readonly ClockReading[]): FileRecipe {
+  const { notes: _before, ...time } = recipe.time;
+  return { ...recipe, time: notes.length === 0 ? time : { ...time, notes } };
 }
 
 /** Another header line moves the start of the data below it; the server then reads the file anew. */

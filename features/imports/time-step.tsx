@@ -3,10 +3,11 @@ import { useWords } from "@features/i18n";
 import { Banner, Card, LoadingBlocks, Text } from "@features/ui";
 import type { ImportDetail, ImportFile } from "@shared/contracts/imports";
 import { ClockChoice } from "./clock-choice";
+import { ClockNotes } from "./clock-notes";
 import { withRecipe } from "./file-card";
 import { FileCoverage } from "./file-coverage";
 import type { ImportActions } from "./imports-queries";
-import { withClock } from "./recipe-edits";
+import { withClock, withNotes } from "./recipe-edits";
 import { SideColumn } from "./side-column";
 import { SideRows, type SideRow } from "./side-rows";
 import { TwoClocks } from "./two-clocks";
@@ -54,6 +55,9 @@ export function useChecksWhenAnswered(detail: ImportDetail, actions: ImportActio
     if (due && !isPending && !isError) mutate();
   }, [due, isPending, isError, mutate]);
 }
+
+/** Rows that carry their own offset: their logger's face shows the site's time, as far as is known. */
+const SITE_CLOCK = { kind: "site" } as const;
 
 function FileTime(props: {
   file: ImportFile;
@@ -105,6 +109,19 @@ function FileTime(props: {
           />
         ) : null}
       </Card>
+      <ClockNotes
+        key={`${file.id} ${JSON.stringify(recipe.time)}`}
+        notes={recipe.time.notes ?? []}
+        clock={recipe.time.clock ?? SITE_CLOCK}
+        zone={detail.site.zone}
+        locked={!detail.can.edit}
+        onUse={(notes) =>
+          actions.chooseRecipe.mutate({
+            fileId: file.id,
+            recipe: withRecipe(withNotes(recipe, notes)),
+          })
+        }
+      />
       {checks ? (
         <FileCoverage
           name={file.name}

@@ -4,27 +4,12 @@ import { useFormat, useWords } from "@features/i18n";
 import { font, Text, useMeasuredWidth, useTheme } from "@features/ui";
 import type { LoggerClock } from "@shared/domain/log-files/recipe";
 import { HOUR_MS } from "@shared/domain/time/interval";
-import { standardOffsetMs } from "@shared/domain/time/standard-offset";
 import { zoneOffsets } from "@shared/domain/time/zone-offsets";
 import { placeOf } from "./clock-choice";
+import { loggerOffsetMs } from "./logger-offset";
 
 const HEIGHT = 104;
 const TICKS = 5;
-
-function offsetOf(clock: LoggerClock, siteZone: string, utcMs: number): number {
-  switch (clock.kind) {
-    case "utc":
-      return 0;
-    case "fixedOffset":
-      return clock.offsetMinutes * 60_000;
-    case "siteStandard":
-      return standardOffsetMs(siteZone, utcMs);
-    case "site":
-      return zoneOffsets(siteZone).offsetAt(utcMs);
-    case "zone":
-      return zoneOffsets(clock.zone).offsetAt(utcMs);
-  }
-}
 
 const clockText = (localMs: number): string => new Date(localMs).toISOString().slice(11, 16);
 
@@ -39,7 +24,7 @@ export function TwoClocks(props: {
   const { colour } = useTheme();
   const [width, onLayout] = useMeasuredWidth();
   const utcMs = Date.parse(props.firstRow.instant);
-  const loggerMs = utcMs + offsetOf(props.clock, props.siteZone, utcMs);
+  const loggerMs = utcMs + loggerOffsetMs(props.clock, props.siteZone, utcMs);
   const localMs = utcMs + zoneOffsets(props.siteZone).offsetAt(utcMs);
   const moved = localMs - loggerMs;
   const place = placeOf(props.siteZone);
