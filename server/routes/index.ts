@@ -9,7 +9,6 @@ import { evidenceRoutes } from "./evidence-routes";
 import { fillRoutes } from "./fill-routes";
 import { importBatchRoutes } from "./import-batch-routes";
 import { importResultRoutes } from "./import-result-routes";
-import { importResultRoutes } from "./import-result-routes";
 import { importRoutes } from "./import-routes";
 import { memberRoutes } from "./member-routes";
 import { meterComparisonRoutes } from "./meter-comparison-routes";
@@ -30,7 +29,6 @@ const productEndpoints: readonly Endpoint[] = [
   ...developmentRoutes,
   ...placesRoutes,
   ...importRoutes,
-  ...importResultRoutes,
   ...importResultRoutes,
   ...recipeRoutes,
   ...importBatchRoutes,

@@ -79,10 +79,6 @@ const matrix = `
   deleteRecipe             ✓   ✓   ✓   –   –   –
   applyRecipe              ✓   ✓   ✓   –   –   –
   downloadProblemRows      ✓   ✓   ✓   ✓   –   –
-  downloadProblemRows      ✓   ✓   ✓   ✓   –   –
-  getImportHistory         ✓   ✓   ✓   ✓   –   –
-  listImportPeople         ✓   ✓   ✓   ✓   –   –
-  changeImportChoices      ✓   ✓   ✓   –   –   –
   getImportHistory         ✓   ✓   ✓   ✓   –   –
   listImportPeople         ✓   ✓   ✓   ✓   –   –
   changeImportChoices      ✓   ✓   ✓   –   –   –
