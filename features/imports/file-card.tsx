@@ -15,6 +15,7 @@ import {
   Text,
   TextLink,
   useTheme,
+  webStyle,
 } from "@features/ui";
 import { downloadLogFile, type ImportDetail, type ImportFile } from "@shared/contracts/imports";
 import { importPaths } from "./import-paths";
@@ -130,7 +131,7 @@ function RawLine({ number, text, header }: { number: number; text: string; heade
         </Text>
       </View>
       <View style={header ? { backgroundColor: colour.markTint } : null}>
-        <Text variant="asReadS" noWrap>
+        <Text variant="asReadS" noWrap style={webStyle({ whiteSpace: "pre" })}>
           {text === "" ? " " : text}
         </Text>
       </View>

@@ -90,7 +90,9 @@ function FactRow({ fact, fileName }: { fact: FileFact; fileName?: string }) {
   const kind = fact.weight === "stop" ? "wrong" : MARKS[fact.verdict];
   const recorded =
     typeof fact.recorded === "number"
-      ? t(`facts.unit.${fact.kind}`, { value: format.number(fact.recorded, 4) })
+      ? t(`facts.unit.${fact.kind}`, {
+          value: format.number(fact.recorded, decimalsOf(fact.recorded)),
+        })
       : fact.kind === "fluid" && fact.recorded
         ? t(`facts.fluid.${fact.recorded}`)
         : fact.recorded;
@@ -132,6 +134,11 @@ function FactRow({ fact, fileName }: { fact: FileFact; fileName?: string }) {
       </View>
     </View>
   );
+}
+
+/** As many decimals as the value has, up to the tenth of a micrometre. */
+function decimalsOf(value: number): number {
+  return (String(Number(value.toFixed(4))).split(".")[1] ?? "").length;
 }
 
 /** Facts the record does not know yet, as the evidence form takes them; null where there are none. */

@@ -1,7 +1,7 @@
 import { useState } from "react";
 import { View } from "react-native";
 import { ApiError } from "@features/api";
-import { useWords } from "@features/i18n";
+import { useFieldWords, useWords } from "@features/i18n";
 import { Banner, DropZone, ErrorState, useBreakpoint } from "@features/ui";
 import type { ImportDetail } from "@shared/contracts/imports";
 import { UPLOAD_ENDINGS } from "@shared/domain/log-files/containers";
@@ -93,5 +93,16 @@ export function FileStep({ detail, actions }: { detail: ImportDetail; actions: I
 }
 
 function Refused({ error }: { error: Error }) {
-  return <ErrorState problem={error instanceof ApiError ? error.problem : null} />;
+  const t = useWords("imports");
+  const fieldWords = useFieldWords();
+  const problem = error instanceof ApiError ? error.problem : null;
+  // What is wrong with the file itself says more than that a field was refused.
+  const [first] = problem?.errors ?? [];
+  if (!problem || !first) return <ErrorState problem={problem} />;
+  return (
+    <ErrorState
+      title={t("file.refused")}
+      problem={{ ...problem, code: first.code, detail: fieldWords(first), remedy: "" }}
+    />
+  );
 }

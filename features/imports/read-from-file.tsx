@@ -38,6 +38,9 @@ interface ReadRow {
 
 const ENCODINGS = ["utf-8", "windows-1252", "utf-16le", "utf-16be"] as const;
 
+/** What only text files have. */
+const TEXT_ROWS = ["separator", "encoding"];
+
 /** What was read from a file: each guess with how sure it is, and the line that says so. */
 export function ReadFromFile(props: {
   file: ImportFile;
@@ -48,7 +51,9 @@ export function ReadFromFile(props: {
   const { file, detail, named } = props;
   const t = useWords("imports");
   const { recognition, recipe } = file;
-  const rows = useRows(file);
+  // A sheet has cells: how they are written down as text is nobody's choice.
+  const isSheet = file.source?.kind === "xlsx";
+  const rows = useRows(file).filter(({ key }) => !isSheet || !TEXT_ROWS.includes(key));
   if (file.unreadable) return null;
   if (!recognition || !recipe) return <LoadingBlocks label={t("file.readingUnknown")} />;
   return (
@@ -66,7 +71,7 @@ export function ReadFromFile(props: {
             <ProvedRow key={row.key} row={row} />
           ))}
         </View>
-        {detail.can.edit ? <HowItIsWritten {...props} recipe={recipe} /> : null}
+        {detail.can.edit && !isSheet ? <HowItIsWritten {...props} recipe={recipe} /> : null}
       </View>
       <FactsOfFile file={file} detail={detail} />
     </View>

@@ -108,13 +108,13 @@ function notALog(name: string): Invalid {
   if (spreadsheets.includes(ending))
     return Invalid.field(
       "file",
-      "not-a-log",
+      "other-spreadsheet",
       `${name} is a spreadsheet of a kind that is not read here. Save it as .xlsx or as CSV and send that.`,
     );
   if (archives.includes(ending))
     return Invalid.field(
       "file",
-      "not-a-log",
+      "other-archive",
       `${name} is an archive of a kind that is not opened here. Pack the logs as .zip, or send them one by one.`,
     );
   return Invalid.field(

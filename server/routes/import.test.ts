@@ -304,7 +304,7 @@ test("what is no text log is refused with the reason, and one that cannot be rea
   const { id } = await open(agent, point.id);
   const wrong = await agent.post(`/imports/${id}/files`).attach("file", Buffer.from("x"), "a.xls");
   expect(wrong.status).toBe(422);
-  expect(wrong.body.errors[0]).toMatchObject({ pointer: "/body/file", code: "not-a-log" });
+  expect(wrong.body.errors[0]).toMatchObject({ pointer: "/body/file", code: "other-spreadsheet" });
   await upload(agent, id, Buffer.from([0xd0, 0xcf, 0x11, 0xe0, 0, 0, 0, 0]), "renamed.csv");
   expect(await read(agent, id)).toMatchObject({
     state: "asking",
