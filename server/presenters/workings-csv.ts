@@ -1,4 +1,5 @@
 import type { Workings } from "@shared/contracts/workings";
+import { localDateOf } from "@shared/domain/time/local-calendar";
 import { makeFormat } from "@shared/formats/format";
 import { workingsText } from "@shared/workings/workings-text";
 import { FileAnswer } from "@server/http/file-answer";
@@ -22,7 +23,7 @@ export function workingsCsv(model: Workings): FileAnswer {
     subject.pointCode,
     "workings",
     model.figure,
-    model.from.slice(0, 10),
+    localDateOf(Date.parse(model.from), subject.zone),
   ]);
   return new FileAnswer({
     name,

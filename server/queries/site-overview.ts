@@ -91,8 +91,12 @@ export async function siteOverview(
     scope,
     loops.flatMap((loop) => {
       const point = points.get(loop.id);
-      const stepMs = point && readings.get(point.id)?.nominalStepMs;
-      return point ? [{ point, loop, site, nominalStepMs: stepMs ?? null }] : [];
+      if (!point) return [];
+      const row = readings.get(point.id);
+      const ms = (value: string | number | null | undefined) =>
+        value == null ? null : wholeNumber(value);
+      const held = { firstMs: ms(row?.firstMs), lastMs: ms(row?.lastMs) };
+      return [{ point, loop, site, nominalStepMs: row?.nominalStepMs ?? null, held }];
     }),
     range,
   );

@@ -4,6 +4,7 @@ import {
   getWorkings,
   type Workings,
 } from "@shared/contracts/workings";
+import { localDateOf } from "@shared/domain/time/local-calendar";
 import type { Context } from "@server/http/context";
 import { FileAnswer } from "@server/http/file-answer";
 import { defineEndpoint, type Endpoint, type Input } from "@server/http/define-endpoint";
@@ -33,7 +34,9 @@ export const workingsRoutes: readonly Endpoint[] = [
       const { unitSystem } = energyPoint.site;
       const nowMs = context.clock.now();
       const body = await context.services.printer.workings(model, { language, unitSystem, nowMs });
-      const name = `${model.subject.loopTag}_${model.figure}_${model.from.slice(0, 10)}.pdf`;
+      const { loopTag, zone } = model.subject;
+      const day = localDateOf(Date.parse(model.from), zone);
+      const name = `${loopTag}_${model.figure}_${day}.pdf`;
       const byteLength = body.length;
       return new FileAnswer({ name, contentType: "application/pdf", body, byteLength });
     },

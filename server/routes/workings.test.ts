@@ -7,6 +7,7 @@ import type { Loop } from "@server/models/loop";
 import { signedIn, type Agent } from "@server/testing/factories";
 import { pointToMeter } from "@server/testing/place-factories";
 import { loggedRows, storedReadings } from "@server/testing/reading-factories";
+import { runJobs } from "@server/testing/run-jobs";
 import { testApp } from "@server/testing/test-app";
 
 const app = testApp();
@@ -282,6 +283,40 @@ describe("the summary of a range", () => {
     const before = `/points/${point.id}/summary?from=2026-01-10&to=2026-01-11`;
     const nobody: PointSummary = (await measured.agent.get(before).expect(200)).body;
     expect(nobody.evidence).toEqual({ installations: [], can: { record: true } });
+  });
+});
+
+describe("an offset from the first reading on", () => {
+  it("counts as taken off every reading, though the range asked for begins before them", async () => {
+    const { agent, point, check } = await measuredDay();
+    await make(agent, "/bath-checks", {
+      firstProbeId: check.firstProbeId,
+      secondProbeId: check.secondProbeId,
+      checkedOn: "2026-02-01",
+      replaces: check.id,
+      bathUncertaintyK: 0.03,
+      readings: Array.from({ length: 10 }, () => ({ firstC: 8.1, secondC: 8 })),
+    });
+    const wider = `figure=energy&from=2026-02-09&to=${NEXT}`;
+    const pairOf = ({ budget }: Workings) =>
+      budget?.terms.find(({ term }) => term.kind === "probePair")?.term.origin.code;
+    expect(pairOf(await workingsOf(agent, point.id, wider))).toBe("pairNotCorrected");
+    const { id } = await make<{ id: string }>(agent, `/points/${point.id}/corrections`, {
+      change: {
+        kind: "probeOffset",
+        probeId: check.firstProbeId,
+        addK: -0.1,
+        bathCheckId: null,
+        from: new Date(startMs).toISOString(),
+        to: null,
+      },
+      reason: "both probes in one bath",
+    });
+    await runJobs(app);
+    await agent.post(`/corrections/${id}/application`, {}).expect(202);
+    await runJobs(app);
+    expect(pairOf(await workingsOf(agent, point.id, wider))).toBe("pairFromBath");
+    expect(pairOf(await workingsOf(agent, point.id, `figure=energy&${day}`))).toBe("pairFromBath");
   });
 });
 

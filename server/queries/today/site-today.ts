@@ -83,7 +83,17 @@ async function evidenceOfDay(
 ): Promise<Map<string, FigureEvidence>> {
   if (day === null) return new Map();
   const points = loops.flatMap(({ point, loop, readings }) =>
-    point ? [{ point, loop, site, nominalStepMs: readings?.nominalStepMs ?? null }] : [],
+    point
+      ? [
+          {
+            point,
+            loop,
+            site,
+            nominalStepMs: readings?.nominalStepMs ?? null,
+            held: { firstMs: readings?.firstMs ?? null, lastMs: readings?.lastMs ?? null },
+          },
+        ]
+      : [],
   );
   return loadFigureEvidences(scope, points, localDay(day, site.zone));
 }

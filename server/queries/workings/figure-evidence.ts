@@ -19,13 +19,21 @@ export interface FigureEvidence extends PointInstallations {
   /** IANA zone of the site: certificates and checks are judged by its days. */
   readonly zone: string;
   readonly intervalS: number | null;
+  /** First and last reading of the point, ms: what lies outside needs no correction. */
+  readonly held: HeldReadings;
   /** Applied offsets of probes: a pair's known difference is taken off the readings. */
   readonly offsets: readonly ProbeOffset[];
+}
+
+export interface HeldReadings {
+  readonly firstMs: number | null;
+  readonly lastMs: number | null;
 }
 
 /** A point with what its background is made from, all loaded. */
 export interface EvidencePoint extends Pick<PointBackground, "point" | "loop" | "site"> {
   readonly nominalStepMs: number | null;
+  readonly held: HeldReadings;
 }
 
 /** The evidence of one point over a range. */
@@ -34,7 +42,8 @@ export async function loadFigureEvidence(
   { point, loop, site, readings }: Pick<EnergyPoint, "point" | "loop" | "site" | "readings">,
   range: Interval,
 ): Promise<FigureEvidence> {
-  const asked = { point, loop, site, nominalStepMs: readings.nominalStepMs };
+  const { nominalStepMs, firstMs, lastMs } = readings;
+  const asked = { point, loop, site, nominalStepMs, held: { firstMs, lastMs } };
   const found = (await loadFigureEvidences(scope, [asked], range)).get(point.id);
   if (!found) throw new Error(`no evidence was made for point ${point.id}`);
   return found;
@@ -62,13 +71,14 @@ export async function loadFigureEvidences(
   }));
   const installations = await loadInstallationsOfPoints(scope, backgrounds, range);
   return new Map(
-    points.map(({ point, site, nominalStepMs }, at) => [
+    points.map(({ point, site, nominalStepMs, held }, at) => [
       point.id,
       {
         background: backgrounds[at] as PointBackground,
         installations: installations.get(point.id) ?? [],
         zone: site.zone,
         intervalS: nominalStepMs === null ? null : nominalStepMs / 1000,
+        held,
         offsets,
       },
     ]),
@@ -112,19 +122,22 @@ export function evidenceParts(
 
 /**
  * Whether the pair's known difference has been taken off the readings of a stretch: by an offset that
- * reaches over all of it, or because there was none to take off.
+ * reaches over all of them, or because there was none to take off. A range asked for may begin before
+ * the first reading and end after the last.
  */
 export function isPairCorrected(
   { installation, startMs, endMs }: EvidencePart,
-  offsets: readonly ProbeOffset[],
+  { offsets, held: { firstMs, lastMs } }: Pick<FigureEvidence, "offsets" | "held">,
 ): boolean {
   if (!installation?.evidence.bathCheck?.meanDifferenceK) return true;
   const { probes } = installation.fields;
   const ids = probes ? [probes.supply.probeId, probes.return.probeId] : [];
+  const fromMs = Math.max(startMs, firstMs ?? startMs);
+  const untilMs = Math.min(endMs, lastMs ?? endMs);
   return offsets.some(
     ({ probeId, from, to }) =>
       ids.includes(probeId) &&
-      Date.parse(from) <= startMs &&
-      (to === null || Date.parse(to) >= endMs),
+      Date.parse(from) <= fromMs &&
+      (to === null || Date.parse(to) >= untilMs),
   );
 }

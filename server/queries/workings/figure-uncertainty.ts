@@ -172,7 +172,7 @@ function waterPart(evidence: FigureEvidence, part: EvidencePart, sums: PartSums)
     budgetOf(background, recorded, {
       onDate,
       intervalS,
-      pairDifferenceCorrected: isPairCorrected(part, evidence.offsets),
+      pairDifferenceCorrected: isPairCorrected(part, evidence),
       state:
         supplyC === null || returnC === null ? null : { supplyC, returnC, velocityMPerS: speed },
     });

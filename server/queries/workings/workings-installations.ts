@@ -56,7 +56,7 @@ const OF_A_METER: ReadonlySet<string> = new Set(["certificate", "clock", "fluid"
 
 function verdictsOf(
   energyPoint: EnergyPoint,
-  { zone, intervalS, offsets, background }: FigureEvidence,
+  { zone, intervalS, offsets, held, background }: FigureEvidence,
   { part, sums, budget, velocityMPerS, measuredBy }: FigurePart,
   about: { readonly coverage: number | null; readonly boreCorrected: boolean },
 ): Shown["verdicts"] {
@@ -75,7 +75,7 @@ function verdictsOf(
     enteredBoreCorrected: about.boreCorrected,
     onDate: localDateOf(sums.lastCoveredMs ?? part.startMs, zone),
     intervalS,
-    pairDifferenceCorrected: isPairCorrected(part, offsets),
+    pairDifferenceCorrected: isPairCorrected(part, { offsets, held }),
     completeness: about.coverage,
   });
   return verdicts
