@@ -215,6 +215,7 @@ it("names the kit that measured, with its certificate in words, and what the ± 
     from: "2026-02-01T09:00:00.000Z",
     to: null,
     flowMeter: { serial: "F-1", certificate: { dueOn: "2026-05-31", state: "dueSoon" } },
+    meterClass: null,
     probes: { supplySerial: "T-1", returnSerial: "T-2", checkedOn: "2026-02-01" },
   } as const;
   const lapsed = {

@@ -11,9 +11,14 @@ interface LinkBase {
 export type TextLinkProps = LinkBase &
   ({ href: string; onPress?: undefined } | { onPress: () => void; href?: undefined });
 
+/** Smallest height a finger or a pointer is given, px; WCAG 2.2, 2.5.8. */
+const LEAST_TARGET = 24;
+
 /** Words that go somewhere, underlined in marking blue. */
 export function TextLink(props: TextLinkProps) {
   const { colour } = useTheme();
+  const { lineHeight } = typeScale[props.variant ?? "subhead"];
+  const target = { paddingVertical: Math.max(0, (LEAST_TARGET - lineHeight) / 2) };
   const face = [
     typeScale[props.variant ?? "subhead"],
     {
@@ -26,13 +31,19 @@ export function TextLink(props: TextLinkProps) {
   ];
   if (props.href !== undefined) {
     return (
-      <Link href={props.href} style={face} aria-label={props.said}>
+      <Link href={props.href} style={[...face, target]} aria-label={props.said}>
         {props.label}
       </Link>
     );
   }
   return (
-    <Pressable role="button" aria-label={props.said} onPress={props.onPress} hitSlop={12}>
+    <Pressable
+      role="button"
+      aria-label={props.said}
+      onPress={props.onPress}
+      hitSlop={12}
+      style={target}
+    >
       <NativeText style={face}>{props.label}</NativeText>
     </Pressable>
   );
