@@ -21,7 +21,7 @@ import { liquidC } from "@server/readings/fluid-block";
 import { energyBlock } from "@server/readings/point-readings";
 import { ChannelBit } from "@server/readings/stored-rows";
 import { counterEventSteps } from "./counter-events";
-import type { ImportCheckContext } from "./findings/check-context";
+import { findingsBasis, type ImportCheckContext } from "./findings/check-context";
 import { chosenChanges, offeredClocks } from "./findings/choices";
 import { ChoiceEnergy } from "./findings/choice-energy";
 import { onSegments, withClocks } from "./findings/chosen-readings";
@@ -132,7 +132,8 @@ export function checkImport(input: CheckInput): ImportChecks {
   const together = energy?.segmentsWith(changes) ?? [];
   const result = energyOf(together, settings, span);
   const isWhole = span?.startMs === reach?.startMs && span?.endMs === reach?.endMs;
-  if (isWhole) energy?.remember(changes, result.energy);
+  if (isWhole && result.energy)
+    energy?.remember(changes, { ...result.energy, volumeM3: result.energy.volumeM3 ?? 0 });
   const found = new Set<string>([
     ...checked.flatMap((file) => [
       ...file.steps.map(({ code }) => code),
@@ -144,6 +145,7 @@ export function checkImport(input: CheckInput): ImportChecks {
   const placed = moved === files ? own : resolveSegments(sourcesOf(moved, 1, settings.meterPlace));
   const chosen = correctSegments(placed, onSegments(changes));
   return {
+    findingsBasis: findingsBasis(context, corrections, settings),
     undecided,
     files: checked,
     rows: rowsOf(chosen),

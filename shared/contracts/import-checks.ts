@@ -42,6 +42,8 @@ export type RepairStepView = z.infer<typeof repairStep>;
 
 /** What the checking job found over all files, with the choices so far. */
 export const importChecks = z.object({
+  /** Hash of what the findings rest on besides the files and choices; older checks lack it. */
+  findingsBasis: z.string().optional(),
   /**
    * Choices that must be made because the defect occurs: names of repairChoices that are null, and
    * "findings" where one that stops has no choice.

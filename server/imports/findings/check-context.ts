@@ -1,6 +1,8 @@
+import { createHash } from "node:crypto";
 import type { Transaction } from "sequelize";
 import type { PlaceContext } from "@shared/domain/readings/checks/check-readings";
 import type { ClockNote } from "@shared/domain/readings/checks/clock-notes";
+import type { SegmentCorrection } from "@shared/domain/readings/corrections/correct-segments";
 import type { Interval } from "@shared/domain/time/interval";
 import { HOUR_MS } from "@shared/domain/time/interval";
 import { zeroLeft } from "@shared/domain/uncertainty/zero-term";
@@ -58,6 +60,19 @@ export async function loadCheckContext(
     clockNotes: installation ? notesOf(installation) : [],
     latestMs: uploads.length === 0 ? null : Math.max(...uploads) + ZONES_APART_MS,
   };
+}
+
+/**
+ * What findings rest on besides the files and the choices, as a hash: where it is that of the check,
+ * looking again finds the same.
+ */
+export function findingsBasis(
+  context: ImportCheckContext,
+  standing: readonly SegmentCorrection[],
+  { meterPlace, cutOffs }: EnergySettings,
+): string {
+  const basis = JSON.stringify([context, standing, meterPlace, cutOffs]);
+  return createHash("sha256").update(basis).digest("hex").slice(0, 32);
 }
 
 /** Notes of the only logger an installation names; of several nobody can tell which wrote the file. */

@@ -9,7 +9,7 @@ import type { EnergySettings } from "@server/readings/energy-settings";
 import { loadPointCorrections } from "@server/readings/point-corrections";
 import type { CheckedFile } from "../file-checks";
 import { sourcesOf, spanOf } from "../import-sources";
-import { loadCheckContext } from "./check-context";
+import { findingsBasis, loadCheckContext } from "./check-context";
 import { chosenChanges } from "./choices";
 import { ChoiceEnergy } from "./choice-energy";
 import { withClocks } from "./chosen-readings";
@@ -29,9 +29,14 @@ export interface StoringFindings {
   readonly span: Interval;
 }
 
+/** Whether nothing but keeping the readings was chosen. */
+const keepsAll = ({ repair }: LogImport) =>
+  Object.values(repair.findings ?? {}).every((choice) => choice === "keep");
+
 /**
  * Finds once more what the check found, by the same functions, and keeps what was chosen as
- * corrections. `undecided`: something stops that was not there at the check, because the point's
+ * corrections; where nothing was chosen and nothing has changed since the check, there is nothing to
+ * find. `undecided`: something stops that was not there at the check, because the point's
  * corrections or its records changed since; then nothing is kept.
  */
 export async function storeChosen(storing: StoringFindings): Promise<"kept" | "undecided"> {
@@ -39,6 +44,8 @@ export async function storeChosen(storing: StoringFindings): Promise<"kept" | "u
   const { stored, precedence } = storing;
   const { segments: standing } = await loadPointCorrections(database, row.pointId, transaction);
   const context = await loadCheckContext(row, logFiles, settings, span, transaction);
+  if (keepsAll(row) && row.checks?.findingsBasis === findingsBasis(context, standing, settings))
+    return "kept";
   const own = resolveSegments(sourcesOf(files, 1, settings.meterPlace));
   const found = findFindings(files, own, standing, context);
   if (isUndecided(found, row.repair)) return "undecided";

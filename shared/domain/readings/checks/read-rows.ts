@@ -1,18 +1,28 @@
+import type { RowRange } from "../corrections/correction-span";
 import { RowQuality, type ReadingSegment } from "../reading-columns";
+
+// Taken out of its module once: it is compared with in every row.
+const MEASURED = RowQuality.measured;
 
 /**
  * The rows of a channel that a check may believe: measured, and holding a value. Null where the
  * segment has no such channel.
+ * @param range looks at the rows from ≤ row < to alone
  */
-export function readRows(segment: ReadingSegment, values: Float64Array | null | undefined) {
+export function readRows(
+  segment: ReadingSegment,
+  values: Float64Array | null | undefined,
+  range?: RowRange,
+) {
   if (!values) return null;
   const { quality } = segment.columns;
-  const rows = new Uint32Array(values.length);
+  const { from, to } = range ?? { from: 0, to: values.length };
+  const rows = new Uint32Array(to - from);
   let count = 0;
-  for (let row = 0; row < values.length; row++) {
+  for (let row = from; row < to; row++) {
     const value = values[row]!;
     // NaN is the one value that differs from itself.
-    if (value === value && quality[row] === RowQuality.measured) rows[count++] = row;
+    if (value === value && quality[row] === MEASURED) rows[count++] = row;
   }
   return rows.subarray(0, count);
 }

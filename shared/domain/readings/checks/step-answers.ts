@@ -39,23 +39,30 @@ export function answers(
  */
 function moveAt({ columns }: ReadingSegment, values: Float64Array | null, row: number) {
   if (!values) return null;
-  const level = (from: number) => {
-    const known = values
-      .slice(Math.max(0, from), Math.max(0, from + SIDE))
-      .filter((value) => !Number.isNaN(value));
-    return known.length < 3 ? null : medianOf(known)!;
-  };
-  const before = level(row - SIDE);
-  const after = level(row);
+  const before = levelFrom(values, row - SIDE);
+  const after = levelFrom(values, row);
   if (before === null || after === null) return null;
   const { instantMs } = columns;
-  const last = instantMs.length - 1;
-  const middleMs = (from: number) => instantMs[Math.min(last, Math.max(0, from) + MIDDLE)]!;
-  const rate = (from: number, change: number) =>
-    change === 0 ? 0 : change / (middleMs(from + SIDE) - middleMs(from));
-  const earlier = level(row - 2 * SIDE) ?? before;
-  const later = level(row + SIDE) ?? after;
-  const drift = (rate(row - 2 * SIDE, before - earlier) + rate(row, later - after)) / 2;
-  const betweenMs = middleMs(row) - middleMs(row - SIDE);
-  return { before, after, moved: Math.abs(after - before - drift * betweenMs) };
+  const earlier = levelFrom(values, row - 2 * SIDE) ?? before;
+  const later = levelFrom(values, row + SIDE) ?? after;
+  const rates =
+    rateFrom(instantMs, row - 2 * SIDE, before - earlier) + rateFrom(instantMs, row, later - after);
+  const betweenMs = middleMs(instantMs, row) - middleMs(instantMs, row - SIDE);
+  return { before, after, moved: Math.abs(after - before - (rates / 2) * betweenMs) };
+}
+
+// Functions of their own: made anew for every jump, they took more time than what they do.
+function levelFrom(values: Float64Array, from: number): number | null {
+  const known = values
+    .slice(Math.max(0, from), Math.max(0, from + SIDE))
+    .filter((value) => !Number.isNaN(value));
+  return known.length < 3 ? null : medianOf(known)!;
+}
+
+function middleMs(instantMs: Float64Array, from: number): number {
+  return instantMs[Math.min(instantMs.length - 1, Math.max(0, from) + MIDDLE)]!;
+}
+
+function rateFrom(instantMs: Float64Array, from: number, change: number): number {
+  return change === 0 ? 0 : change / (middleMs(instantMs, from + SIDE) - middleMs(instantMs, from));
 }

@@ -1,4 +1,5 @@
-import { HOUR_MS } from "../../time/interval";
+import { DAY_MS, HOUR_MS } from "../../time/interval";
+import { firstFrom, type RowRange } from "../corrections/correction-span";
 import type { ReadingSegment } from "../reading-columns";
 import { KEEP, type Finding } from "./finding";
 import { noFlowBelowM3PerHour, type NoFlowLimits } from "./no-flow";
@@ -42,6 +43,11 @@ export interface StepLimits extends NoFlowLimits {
 
 const LEAST_K = 0.3;
 const LEAST_FLOW_RATIO = 0.05;
+/** Rows looked through at a time, so that memory stays flat; what is found does not depend on it. */
+const ROWS_AT_ONCE = 400_000;
+/** Residuals are taken from as far as two days on either side of a change, drift from 15 readings. */
+const MARGIN_MS = 2 * DAY_MS + HOUR_MS;
+const MARGIN_READINGS = 4 * SIDE;
 
 export type StepChangeFinding = Finding<
   "stepChange",
@@ -58,26 +64,47 @@ export type StepChangeFinding = Finding<
   }
 >;
 
-/** One finding a change point; its row is the first one after the change. */
-export function stepChanges(segment: ReadingSegment, limits: StepLimits): StepChangeFinding[] {
-  return (["flowM3PerHour", "supplyC", "returnC"] as const).flatMap((channel) =>
-    stepsOf(segment, channel, limits),
-  );
+/**
+ * One finding a change point; its row is the first one after the change.
+ * @param rowsAtOnce how many rows are looked through at a time
+ */
+export function stepChanges(
+  segment: ReadingSegment,
+  limits: StepLimits,
+  rowsAtOnce = ROWS_AT_ONCE,
+): StepChangeFinding[] {
+  const { instantMs } = segment.columns;
+  return (["flowM3PerHour", "supplyC", "returnC"] as const).flatMap((channel) => {
+    const found: StepChangeFinding[] = [];
+    const window = { from: 0, to: 0, lookFrom: 0 };
+    while (window.to < instantMs.length) {
+      window.from = window.to;
+      window.to = Math.min(instantMs.length, window.from + rowsAtOnce);
+      found.push(...stepsOf(segment, channel, limits, window));
+    }
+    return found;
+  });
+}
+
+/** Rows in which changes are looked for, and the first one that the window before has not settled. */
+interface Window extends RowRange {
+  lookFrom: number;
 }
 
 function stepsOf(
   segment: ReadingSegment,
   channel: StepChannel,
   limits: StepLimits,
+  window: Window,
 ): StepChangeFinding[] {
   const held = segment.columns[channel];
-  const series = seriesOf(segment, channel, limits);
+  const series = seriesOf(segment, channel, limits, window);
   if (!held || !series || series.rows.length < 2 * LEAST_PAIRS) return [];
   const isFlow = channel === "flowM3PerHour";
   const least = isFlow
     ? Math.log1p(limits.leastFlowRatio ?? LEAST_FLOW_RATIO)
     : (limits.leastK ?? LEAST_K);
-  return findSteps(segment, channel, series, least).map(({ at, size, agreeing, lagMs }) => {
+  return findSteps(segment, channel, series, least, window).map(({ at, size, agreeing, lagMs }) => {
     const row = series.rows[at]!;
     const atMs = series.instantMs[at]!;
     const median = (from: number) =>
@@ -104,15 +131,16 @@ function seriesOf(
   segment: ReadingSegment,
   channel: StepChannel,
   limits: StepLimits,
+  window: RowRange,
 ): Series | null {
   const held = segment.columns[channel];
-  let rows = readRows(segment, held);
-  if (!held || !rows) return null;
+  if (!held) return null;
   const isFlow = channel === "flowM3PerHour";
-  if (isFlow) {
-    const noFlow = noFlowBelowM3PerHour(limits);
-    rows = rows.filter((row) => Math.abs(held[row]!) > noFlow);
-  }
+  const noFlow = noFlowBelowM3PerHour(limits);
+  const rows = rowsRound(segment.columns.instantMs, window, (range) => {
+    const readable = readRows(segment, held, range) ?? new Uint32Array(0);
+    return isFlow ? readable.filter((row) => Math.abs(held[row]!) > noFlow) : readable;
+  });
   const instantMs = new Float64Array(rows.length);
   const values = new Float64Array(rows.length);
   for (let at = 0; at < rows.length; at++) {
@@ -123,18 +151,42 @@ function seriesOf(
   return { rows, instantMs, values };
 }
 
+/** The readable rows of a window and of what a change inside it is judged by on either side. */
+function rowsRound(
+  instantMs: Float64Array,
+  { from, to }: RowRange,
+  readable: (range: RowRange) => Uint32Array,
+): Uint32Array {
+  const last = instantMs.length - 1;
+  let before = from - firstFrom(instantMs, instantMs[from]! - MARGIN_MS) + MARGIN_READINGS;
+  let after =
+    firstFrom(instantMs, instantMs[Math.min(to, last)]! + MARGIN_MS) - to + MARGIN_READINGS;
+  for (;;) {
+    const range = { from: Math.max(0, from - before), to: Math.min(last + 1, to + after) };
+    const rows = readable(range);
+    // A pump that stood still leaves stretches without any reading.
+    const lacksBefore = range.from > 0 && firstFrom(rows, from) < MARGIN_READINGS;
+    const lacksAfter = range.to <= last && rows.length - firstFrom(rows, to) < MARGIN_READINGS;
+    if (!lacksBefore && !lacksAfter) return rows;
+    if (lacksBefore) before *= 4;
+    if (lacksAfter) after *= 4;
+  }
+}
+
 function findSteps(
   segment: ReadingSegment,
   channel: StepChannel,
   series: Series,
   least: number,
+  window: Window,
 ): Step[] {
   const { values, instantMs, rows } = series;
   const count = values.length;
   const widestMs = Math.max(HOUR_MS, 4 * SIDE * segment.nominalStepMs);
   const jumps = new Jumps(instantMs, values);
   const steps: Step[] = [];
-  for (let at = SIDE; at <= count - SIDE; at++) {
+  let at = Math.max(SIDE, firstFrom(rows, Math.max(window.from, window.lookFrom)));
+  for (; at <= count - SIDE && rows[at]! < window.to; at++) {
     if (jumps.isCalm(at, least / 2)) continue;
     const first = jumps.at(at);
     if (Math.abs(first) < least) continue;
@@ -156,5 +208,7 @@ function findSteps(
     const step = lasting(series, change, jump, least, channel !== "flowM3PerHour");
     if (step !== null) steps.push(step);
   }
+  // A change near the end was looked at whole, so the next window begins after it.
+  window.lookFrom = rows[at] ?? window.to;
   return steps;
 }

@@ -72,10 +72,13 @@ export class Jumps {
   private drifts(before: number, after: number): readonly [number, number] {
     const hasBefore = before >= 2 * SIDE;
     const hasAfter = after + 2 * SIDE <= this.values.length;
-    const rate = (row: number) => this.plain(row) / this.betweenMs(row);
-    const one = hasBefore ? rate(before - SIDE) : null;
-    const other = hasAfter ? rate(after + SIDE) : null;
+    const one = hasBefore ? this.rate(before - SIDE) : null;
+    const other = hasAfter ? this.rate(after + SIDE) : null;
     return [one ?? other ?? 0, other ?? one ?? 0];
+  }
+
+  private rate(row: number): number {
+    return this.plain(row) / this.betweenMs(row);
   }
 }
 

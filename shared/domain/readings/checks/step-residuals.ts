@@ -106,10 +106,12 @@ function residuals({ instantMs, values }: Series, fromMs: number, lagMs: number)
     const before = late > 0 ? instantMs[late]! - instantMs[late - 1]! : Infinity;
     const after = late + 1 < instantMs.length ? instantMs[late + 1]! - instantMs[late]! : Infinity;
     const half = Math.min(before, after) / 2;
-    const isNear = (row: number) =>
-      row >= 0 && instantMs[row]! < fromMs && Math.abs(instantMs[row]! - wanted) <= half;
-    if (isNear(early)) found.push(values[late]! - values[early]!);
-    else if (isNear(early - 1)) found.push(values[late]! - values[early - 1]!);
+    for (const row of [early, early - 1]) {
+      if (row < 0 || !(instantMs[row]! < fromMs)) continue;
+      if (Math.abs(instantMs[row]! - wanted) > half) continue;
+      found.push(values[late]! - values[row]!);
+      break;
+    }
   }
   return Float64Array.from(found);
 }

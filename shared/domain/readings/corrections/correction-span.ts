@@ -38,7 +38,7 @@ export function sharedSpan(a: CorrectionSpan, b: CorrectionSpan): CorrectionSpan
 }
 
 /** The first row at or after an instant; as many as there are rows where none is. */
-export function firstFrom(instantMs: Float64Array, ms: number): number {
+export function firstFrom(instantMs: Float64Array | Uint32Array, ms: number): number {
   let low = 0;
   let high = instantMs.length;
   while (low < high) {
