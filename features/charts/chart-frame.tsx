@@ -3,7 +3,7 @@ import Svg, { G, Line, Rect, Text as SvgText, TSpan } from "react-native-svg";
 
 import type { SeriesAnswer } from "@shared/contracts/energy";
 import type { Interval } from "@shared/domain/time/interval";
-import { formatNumber, type Format } from "@features/i18n";
+import { formatFigure, type Format } from "@features/i18n";
 import {
   QualityPatterns,
   QualityRect,
@@ -264,6 +264,8 @@ function ColumnNames({ labels, layout, names, format, xOf }: Placed) {
             {energyBaselines.map((y, row) => {
               const value = label.energies[row];
               if (value === undefined) return null;
+              const known = label.uncertainties[row] ?? null;
+              const text = formatFigure(value, known, format.language, label.energyPlaces);
               return (
                 <SvgText
                   key={y}
@@ -276,7 +278,14 @@ function ColumnNames({ labels, layout, names, format, xOf }: Placed) {
                   fontFamily={typeScale.figureS.fontFamily}
                   fontSize={typeScale.figureS.fontSize}
                 >
-                  {formatNumber(value, label.energyPlaces, format.language)}
+                  {text.value}
+                  {text.uncertainty === null ? null : (
+                    <TSpan
+                      fill={colour.ink3}
+                      fontFamily={typeScale.chip.fontFamily}
+                      fontSize={typeScale.chip.fontSize}
+                    >{` ±${text.uncertainty}`}</TSpan>
+                  )}
                 </SvgText>
               );
             })}

@@ -122,6 +122,22 @@ describe("the labels under the plot", () => {
     ]);
   });
 
+  it("carry each day's ± where there is room for it, and only of single days", () => {
+    const known = {
+      heating: null,
+      cooling: { expanded: 75, percent: 3, basis: "evidence" },
+    } as const;
+    const withPlusMinus = days.map((day) => ({ ...day, plusMinus: known }));
+    const of = (width: number, view = week) =>
+      columnLabels({ ...options, days: withPlusMinus, view, layout: chartLayout(width, 1) });
+    expect(of(806).map((label) => label.uncertainties[0])).toEqual(Array(7).fill(75));
+    // 60 px a day hold 2,000 but not 2,000 ±75.
+    expect(of(530 + 38).every((label) => label.uncertainties.length === 0)).toBe(true);
+    expect(of(568)[0]?.energies).toEqual([2000]);
+    const weeks = { startMs: week.startMs, endMs: week.startMs + 60 * DAY_MS };
+    expect(of(806, weeks)[0]).toMatchObject({ uncertainties: [null] });
+  });
+
   it("keep to the weekdays' names on a phone", () => {
     const labels = columnLabels({ ...options, view: week, layout: chartLayout(334, 1) });
     expect(labels.map((label) => label.name)).toContain("Wed");

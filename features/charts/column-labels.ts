@@ -1,8 +1,8 @@
 import { localDateOf } from "@shared/domain/time/local-calendar";
 import type { Interval } from "@shared/domain/time/interval";
-import { formatNumber, type Format } from "@features/i18n";
+import { formatFigure, formatNumber, type Format } from "@features/i18n";
 
-import { columnEnergy, type ChartDay } from "./chart-days";
+import { columnEnergy, columnExpandedKwh, type ChartDay } from "./chart-days";
 import { plotWidth, type ChartLayout } from "./chart-layout";
 import { timeAxis, weekOf, type TimeColumn } from "./time-columns";
 
@@ -18,6 +18,8 @@ export interface ColumnLabel {
   /** In the unit shown, one a register; empty where there is no room. */
   readonly energies: readonly (number | null)[];
   readonly energyPlaces: number;
+  /** The ± of each energy in the unit shown; null where there is none or no room for it. */
+  readonly uncertainties: readonly (number | null)[];
 }
 
 export interface LabelOptions {
@@ -46,13 +48,16 @@ export function columnLabels(options: LabelOptions): ColumnLabel[] {
   const values = axis.columns.map((column) => energiesOf(column, options));
   const greatest = Math.max(0, ...values.flat().map((value) => value ?? 0));
   const places = greatest >= 100 ? 0 : greatest >= 10 ? 1 : 2;
+  const written = axis.columns.map((column, index) => withRoom(column, values[index] ?? []));
+  // All of them or none: a row of figures reads as one.
+  const hasRoom = written.every(({ fits }) => fits);
   const columns = axis.columns.map((column, index): ColumnLabel => {
     const fromMs = Math.max(column.startMs, view.startMs);
     const toMs = Math.min(column.endMs, view.endMs);
     const room = pxOf(fromMs, toMs);
     const fits = (text: string) => text.length * digitPx < room;
     const energies = values[index] ?? [];
-    const written = energies.map((value) => formatNumber(value, places, format.language));
+    const plain = energies.map((value) => formatNumber(value, places, format.language));
     return {
       kind: "column",
       lineMs: fromMs,
@@ -60,8 +65,9 @@ export function columnLabels(options: LabelOptions): ColumnLabel[] {
       toMs,
       ...nameOf(column, room, options),
       energies:
-        layout.energyBaselines.length > 0 && days.length > 0 && written.every(fits) ? energies : [],
+        layout.energyBaselines.length > 0 && days.length > 0 && plain.every(fits) ? energies : [],
       energyPlaces: places,
+      uncertainties: hasRoom ? (written[index]?.known ?? []) : [],
     };
   });
   const hours = axis.hours.map((atMs): ColumnLabel => ({
@@ -73,8 +79,24 @@ export function columnLabels(options: LabelOptions): ColumnLabel[] {
     faint: "",
     energies: [],
     energyPlaces: 0,
+    uncertainties: [],
   }));
   return [...columns, ...hours];
+  /** The ± of a column's energies, and whether both stand side by side in a whole column. */
+  function withRoom(column: TimeColumn, energies: readonly (number | null)[]) {
+    const known = registers.map((register) => {
+      const kwh = columnExpandedKwh(column, days, register);
+      const quantity = register === "heating" ? "heatingEnergy" : "coolingEnergy";
+      return kwh === null ? null : kwh * format.unit(quantity).factor;
+    });
+    const room = pxOf(column.startMs, column.endMs);
+    const fits = energies.every((value, row) => {
+      const text = formatFigure(value, known[row] ?? null, format.language);
+      const both = text.uncertainty === null ? text.value : `${text.value} ±${text.uncertainty}`;
+      return both.length * digitPx < room;
+    });
+    return { known, fits };
+  }
   function energiesOf(column: TimeColumn, { format: as }: LabelOptions) {
     const endDate = localDateOf(column.endMs, zone);
     return registers.map((register) => {

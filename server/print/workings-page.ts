@@ -216,7 +216,7 @@ function budget({ budget: found }: WorkingsText, t: Words): Content[] {
     total(found.times.label, found.times.value),
   );
   return [
-    ...section(found.title, ruled(["*", barWidth, 40], body)),
+    ...section(found.title, ruled(["*", barWidth, 56], body)),
     ...found.notes.map((note) => ({ text: note, color: PAPER.soft })),
   ];
 }
