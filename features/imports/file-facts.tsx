@@ -17,7 +17,7 @@ export function FactsOfFile({ file, detail }: { file: ImportFile; detail: Import
       </Text>
       <View role="list" aria-label={t("facts.of", { name: file.name })} style={{ marginTop: 6 }}>
         {file.facts.map((fact) => (
-          <FactRow key={`${fact.line} ${fact.kind}`} fact={fact} />
+          <FactRow key={`${fact.line} ${fact.kind} ${fact.cell}`} fact={fact} />
         ))}
       </View>
       {taken ? (
@@ -59,7 +59,7 @@ export function DifferingFacts({ detail }: { detail: ImportDetail }) {
       <View role="list" aria-label={t("facts.differ")} style={{ marginTop: 6 }}>
         {differing.map(({ file, fact }) => (
           <FactRow
-            key={`${file.id} ${fact.line} ${fact.kind}`}
+            key={`${file.id} ${fact.line} ${fact.kind} ${fact.cell}`}
             fact={fact}
             fileName={detail.files.length > 1 ? file.name : undefined}
           />
