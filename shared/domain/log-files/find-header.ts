@@ -169,12 +169,33 @@ function isKnownHeader(cell: string): boolean {
   return unit !== null || headerMeaning(name) !== null;
 }
 
-/** `Serial: 50417`, `Serial,50417`, `# Period = 60 s`. */
-export function labelAndValue(
-  row: Pick<KindRow, "line" | "cells">,
-): readonly { line: number; label: string; value: string }[] {
+interface LabelledValue {
+  readonly line: number;
+  readonly label: string;
+  readonly value: string;
+}
+
+/** `Serial: 50417`, `Serial,50417`, `# Period = 60 s`, and several on a line: `Serial,50417,Bore,82.5 mm`. */
+export function labelAndValue(row: Pick<KindRow, "line" | "cells">): readonly LabelledValue[] {
   const cells = row.cells.filter((cell) => cell !== "");
-  const [first = "", ...rest] = cells;
+  return groupsOf(cells).flatMap((group) => labelled(row.line, group));
+}
+
+/** Cells that belong together: each alone where all are `label: value`, pairs where words and values take turns. */
+function groupsOf(cells: readonly string[]): readonly (readonly string[])[] {
+  if (cells.length >= 2 && cells.every((cell) => LABEL_AND_VALUE.test(cell)))
+    return cells.map((cell) => [cell]);
+  const takeTurns =
+    cells.length >= 4 &&
+    cells.length % 2 === 0 &&
+    cells.every((cell, i) => /\d/.test(cell) === (i % 2 === 1));
+  if (!takeTurns) return [cells];
+  return Array.from({ length: cells.length / 2 }, (_, i) => cells.slice(2 * i, 2 * i + 2));
+}
+
+const LABEL_AND_VALUE = /^[#;*"' ]{0,10}\p{L}[^:=]{0,60}[:=]\s*\S/u;
+
+function labelled(line: number, [first = "", ...rest]: readonly string[]): LabelledValue[] {
   const label = first.replace(/^[#;*"' ]{1,10}/, "");
   const mark = [":", "="]
     .map((c) => label.indexOf(c))
@@ -183,8 +204,8 @@ export function labelAndValue(
   // A colon within the first cell splits it, unless that cell ends with it and the value follows.
   if (mark !== undefined && label.slice(mark + 1).trim() !== "") {
     const value = [label.slice(mark + 1).trim(), ...rest].join(" ");
-    return [{ line: row.line, label: label.slice(0, mark).trim(), value }];
+    return [{ line, label: label.slice(0, mark).trim(), value }];
   }
   const bare = mark === undefined ? label.trim() : label.slice(0, mark).trim();
-  return bare === "" ? [] : [{ line: row.line, label: bare, value: rest.join(" ") }];
+  return bare === "" ? [] : [{ line, label: bare, value: rest.join(" ") }];
 }

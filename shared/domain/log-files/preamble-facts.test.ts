@@ -1,4 +1,5 @@
 import { compareFacts, type RecordedFacts } from "./compare-facts";
+import { labelAndValue } from "./find-header";
 import { preambleFacts, type PreambleEntry } from "./preamble-facts";
 
 const entry = (label: string, value: string, line = 1): PreambleEntry => ({ label, value, line });
@@ -72,6 +73,19 @@ describe("facts above the header", () => {
       ["x".repeat(80) + " serial", "1"],
     ] as const)
       expect(found(label, value)).toEqual([]);
+  });
+
+  it("are found where a line holds several of them", () => {
+    const factsOf = (...cells: string[]) =>
+      preambleFacts(labelAndValue({ line: 1, cells })).map(({ kind, cell }) => `${kind} ${cell}`);
+    const both = ["serial 50417", "boreMm 82.5 mm"];
+    expect(factsOf("Serial", "50417", "Bore", "82.5 mm")).toEqual(both);
+    expect(factsOf("# Serial: 50417", "Bore: 82.5 mm")).toEqual(both);
+    // A value in two cells, as a decimal comma leaves it, is no pair.
+    expect(factsOf("Site", "North Hall", "Building B", "2nd floor")).toEqual([
+      "siteName North Hall Building B 2nd floor",
+    ]);
+    expect(factsOf("Bore: 82", "5 mm")).toEqual(["boreMm 82 5 mm"]);
   });
 
   it("name their line and their cell", () => {
