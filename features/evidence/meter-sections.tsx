@@ -106,22 +106,22 @@ export function PlateSection(props: SectionProps) {
           error={error("meterPlate/accuracyClass")}
         />
         {values.meterClass === NONE ? null : (
-          <>
-            <NumberField
-              label={t("plate.flow")}
-              unit="m³/h"
-              min={0}
-              max={10000}
-              {...numberOf(props, "permanentFlowM3PerHour", "meterPlate/permanentFlowM3PerHour")}
-            />
-            <NumberField
-              label={t("plate.deltaT")}
-              unit="K"
-              min={0}
-              max={20}
-              {...numberOf(props, "minimumDeltaTK", "meterPlate/minimumDeltaTK")}
-            />
-          </>
+          <NumberField
+            label={t("plate.flow")}
+            unit="m³/h"
+            min={0}
+            max={10000}
+            {...numberOf(props, "permanentFlowM3PerHour", "meterPlate/permanentFlowM3PerHour")}
+          />
+        )}
+        {values.meterClass === NONE ? null : (
+          <NumberField
+            label={t("plate.deltaT")}
+            unit="K"
+            min={0}
+            max={20}
+            {...numberOf(props, "minimumDeltaTK", "meterPlate/minimumDeltaTK")}
+          />
         )}
       </FieldRow>
       {values.meterClass === NONE ? null : (

@@ -73,6 +73,13 @@ it("names the day, and says so where nothing needs a look", async () => {
   expect(screen.getByRole("link", { name: /^Open CHW-1B/ })).toHaveAttribute("href", "/loops/7");
 });
 
+it("names the year of a day that lies in another than the site's own", async () => {
+  serverAnswers(todayCall, todayOf({ today: "2027-01-04" }));
+  show(<TodayScreen />);
+  expect(await screen.findByRole("heading", { name: "Loops, Mon 18 May 2026" })).toBeVisible();
+  expect(screen.getByRole("heading", { level: 1 })).toHaveTextContent(/^Monday 4 January$/);
+});
+
 it("makes sentences of what the server found, each leading to its place", async () => {
   const loop = { id: "7", tag: "CHW-1", service: "chilled" } as const;
   serverAnswers(

@@ -68,10 +68,10 @@ function SiteToday({ site, sites }: { site: Site; sites: readonly Site[] }) {
   const t = useWords("today");
   const router = useRouter();
   const size = useBreakpoint();
-  const format = useFormat(site.zone, site.unitSystem);
   const [now] = useState(() => Date.now());
   const today = useQuery(todayQueries.today(site.id));
   const date = today.data?.today ?? dayInZone(now, site.zone);
+  const format = useFormat(site.zone, site.unitSystem, date);
   const phone = size === "phone";
   const title = phone ? t("title") : withoutYear(format.day(date, "full"));
   const chooser =
