@@ -29,6 +29,7 @@ export async function checkImportJob(context: JobContext): Promise<void> {
   context.checkpoint();
   const { segments: corrections } = await loadPointCorrections(database, row.pointId);
   const checks = checkImport({
+    onStep: context.checkpoint,
     files: loaded,
     stored,
     settings,

@@ -65,6 +65,8 @@ const lookedForInReadings = [
 
 /** What a check works with: the import's files read by their recipes, and what the point holds. */
 export interface CheckInput {
+  /** Called between parts of the work; may throw to stop it. */
+  readonly onStep: () => void;
   readonly files: readonly CheckedFile[];
   readonly stored: readonly ReadingSource[];
   readonly settings: EnergySettings;
@@ -97,7 +99,7 @@ export function overlapsOf(
  * figures take the first reading of a conflict, keep weak signals and keep what is stored.
  */
 export function checkImport(input: CheckInput): ImportChecks {
-  const { files, stored, settings, choices, corrections, context } = input;
+  const { files, stored, settings, choices, corrections, context, onStep } = input;
   const overlaps = overlapsOf(files, stored);
   const checked = files.map((file, i) =>
     fileChecks(
@@ -117,7 +119,7 @@ export function checkImport(input: CheckInput): ImportChecks {
   if (isDifferent && choices.overlap === null) undecided.push("overlap");
 
   const own = resolveSegments(sourcesOf(files, 1, settings.meterPlace));
-  const inReadings = findFindings(files, own, corrections, context);
+  const inReadings = findFindings(files, own, corrections, context, onStep);
   if (isUndecided(inReadings, choices)) undecided.push("findings");
   const changes = chosenChanges(inReadings.findings, choices).map(({ change }) => change);
 
@@ -128,9 +130,17 @@ export function checkImport(input: CheckInput): ImportChecks {
   const reach = spanOf([...files, ...withClocks(files, offeredClocks(inReadings.findings))]);
   const energy =
     reach &&
-    new ChoiceEnergy({ files, stored, precedence, settings, standing: corrections, span: reach });
+    new ChoiceEnergy({
+      files,
+      stored,
+      precedence,
+      settings,
+      standing: corrections,
+      span: reach,
+      onStep,
+    });
   const together = energy?.segmentsWith(changes) ?? [];
-  const result = energyOf(together, settings, span);
+  const result = energyOf(together, settings, span, onStep);
   const isWhole = span?.startMs === reach?.startMs && span?.endMs === reach?.endMs;
   if (isWhole && result.energy)
     energy?.remember(changes, { ...result.energy, volumeM3: result.energy.volumeM3 ?? 0 });
@@ -216,6 +226,7 @@ function energyOf(
   segments: readonly ReadingSegment[],
   settings: EnergySettings,
   span: Interval | null,
+  onStep: () => void,
 ): Pick<
   ImportChecks,
   | "energy"
@@ -231,7 +242,7 @@ function energyOf(
     : [];
   // A stretch leaves out its end, but the last row counts as a row.
   const window = span && { ...span, endMs: span.endMs + 1 };
-  const result = window && calculateSpan(segments, settings, days, window);
+  const result = window && calculateSpan(segments, settings, days, window, onStep);
   const totals = result && result.totals;
   const blockedBy = energyBlock(settings, {
     channels: span ? channelsOf(segments) : null,

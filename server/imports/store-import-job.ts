@@ -85,7 +85,12 @@ async function storeAll(
   const settings = await loadEnergySettings(database, row.pointId, transaction);
   if (span !== null) {
     const finding = { database, transaction, row, logFiles, files, stored: already, precedence };
-    const chosen = await storeChosen({ ...finding, settings, span });
+    const chosen = await storeChosen({
+      ...finding,
+      settings,
+      span,
+      onStep: context.checkpoint,
+    });
     if (chosen === "undecided") return "metAnother";
   }
   let stored = 0;

@@ -61,17 +61,32 @@ test("two servers never hold one job, and both find work", async () => {
   expect(ids.length).toBeGreaterThanOrEqual(1);
 });
 
-test("an organisation with fifty files waiting does not keep another's one waiting", async () => {
+test("an organisation with fifty imports waiting does not keep another's one waiting", async () => {
   const many = await somewhere();
   const one = await somewhere();
-  for (let i = 0; i < 5; i++) await queue(many);
-  await queue(one);
+  for (let i = 0; i < 50; i++) await queue(many, i % 2 === 0 ? "import" : "check");
+  await queue(one, "import");
   const order = [await claim(), await claim(), await claim()];
   expect(order.map((job) => job?.organisationId)).toEqual([
     many.organisationId,
     one.organisationId,
     many.organisationId,
   ]);
+});
+
+test("with one worker, organisations with imports waiting take turns", async () => {
+  const many = await somewhere();
+  const few = await somewhere();
+  for (let i = 0; i < 50; i++) await queue(many, "import");
+  for (let i = 0; i < 2; i++) await queue(few, "import");
+  const order: (string | undefined)[] = [];
+  for (let i = 0; i < 5; i++) {
+    const job = await claim();
+    order.push(job?.organisationId);
+    expect(await finish(String(job?.id), "a")).toBe(true);
+  }
+  const [a, b] = [many.organisationId, few.organisationId];
+  expect(order).toEqual([a, b, a, b, a]);
 });
 
 test("two jobs that store never work on one point at a time", async () => {

@@ -32,6 +32,8 @@ export interface WeighingInput {
   readonly standing: readonly SegmentCorrection[];
   /** The time the files speak for. */
   readonly span: Interval;
+  /** Called after each stretch of days that was integrated; may throw to stop the work. */
+  readonly onStep: () => void;
 }
 
 export interface WholeEnergy extends Registers {
@@ -155,7 +157,8 @@ export class ChoiceEnergy {
   ): WholeEnergy | null {
     this.rowsIntegrated += segments.reduce((sum, s) => sum + s.columns.instantMs.length, 0);
     const days = localDaysBetween(window, settings.zone);
-    const totals = calculateSpan(segments, settings, days, window)?.totals;
+    const { onStep } = this.input;
+    const totals = calculateSpan(segments, settings, days, window, onStep)?.totals;
     if (!totals) return null;
     const { heating, cooling, suppressedKwh, volumeM3 } = totals;
     return {

@@ -40,6 +40,7 @@ const MOST_SPANS = 5000;
  * All that the files' readings show, with what already corrects the point on them: a stretch that was
  * swapped before is not found swapped again. What is chosen in this import is not on them, so that a
  * finding stays in the list when it is settled.
+ * @param onStep called between the checks; may throw to stop the work
  * @param own the files' rows as segments, nothing else of the point among them
  */
 export function findFindings(
@@ -47,6 +48,7 @@ export function findFindings(
   own: readonly ReadingSegment[],
   standing: readonly SegmentCorrection[],
   context: ImportCheckContext,
+  onStep: () => void,
 ): FoundFindings {
   const found: Omit<FoundFinding, "key">[] = [];
   const notChecked: NotCheckedView[] = [];
@@ -60,6 +62,7 @@ export function findFindings(
       ...unitsOf(file.recipe),
       latestMs: context.latestMs,
       clockNotes: notesOf(file.recipe, context),
+      onStep,
     });
     const { fileId } = file;
     const reachMs = files.length > 1 && !leads(file) ? corrected.nominalStepMs : 0;
@@ -70,7 +73,7 @@ export function findFindings(
   const hasTwoClocks = clocksOf(files) > 1;
   for (const segment of correctSegments(own, standing)) {
     if (segment.columns.instantMs.length === 0) continue;
-    const result = checkSeries(segment, { ...context.place, hasTwoClocks });
+    const result = checkSeries(segment, { ...context.place, hasTwoClocks, onStep });
     for (const finding of result.findings)
       found.push({ fileId: fileOf(files, finding), finding, segment });
     for (const missing of result.notChecked)

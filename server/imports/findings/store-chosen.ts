@@ -27,6 +27,8 @@ export interface StoringFindings {
   readonly precedence: number;
   readonly settings: EnergySettings;
   readonly span: Interval;
+  /** Called between parts of the work; may throw to stop it. */
+  readonly onStep: () => void;
 }
 
 /** Whether nothing but keeping the readings was chosen. */
@@ -41,13 +43,13 @@ const keepsAll = ({ repair }: LogImport) =>
  */
 export async function storeChosen(storing: StoringFindings): Promise<"kept" | "undecided"> {
   const { database, transaction, row, logFiles, files, settings, span } = storing;
-  const { stored, precedence } = storing;
+  const { stored, precedence, onStep } = storing;
   const { segments: standing } = await loadPointCorrections(database, row.pointId, transaction);
   const context = await loadCheckContext(row, logFiles, settings, span, transaction);
   if (keepsAll(row) && row.checks?.findingsBasis === findingsBasis(context, standing, settings))
     return "kept";
   const own = resolveSegments(sourcesOf(files, 1, settings.meterPlace));
-  const found = findFindings(files, own, standing, context);
+  const found = findFindings(files, own, standing, context, onStep);
   if (isUndecided(found, row.repair)) return "undecided";
   const chosen = chosenChanges(found.findings, row.repair);
   if (chosen.length === 0) return "kept";
@@ -63,6 +65,7 @@ export async function storeChosen(storing: StoringFindings): Promise<"kept" | "u
     settings,
     standing,
     span: wholeSpan,
+    onStep,
   });
   await keepChosenCorrections(transaction, row, chosen, {
     findings: found.findings,

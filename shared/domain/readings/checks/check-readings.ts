@@ -36,8 +36,14 @@ export interface PlaceContext {
   readonly zeroUncertaintyMPerS: number | null;
 }
 
+/** Checks of millions of rows take seconds: somebody who cancels is heard between them. */
+interface Stoppable {
+  /** Called before each check; may throw to stop the work. */
+  readonly onStep?: () => void;
+}
+
 /** What the checks of one logger's rows need to know besides. */
-export interface FileContext extends PlaceContext {
+export interface FileContext extends PlaceContext, Stoppable {
   /** Units the columns were converted from; null where they come from no such column. */
   readonly flowUnit: FlowUnit | null;
   readonly temperatureUnit: TemperatureUnit | null;
@@ -46,7 +52,7 @@ export interface FileContext extends PlaceContext {
 }
 
 /** What the checks of a point's readings, put together, need to know besides. */
-export interface SeriesContext extends PlaceContext {
+export interface SeriesContext extends PlaceContext, Stoppable {
   /** Flow and temperatures come from loggers with a clock each. */
   readonly hasTwoClocks: boolean;
 }
@@ -79,12 +85,12 @@ export interface CheckResult {
 export function checkFile(segment: ReadingSegment, context: FileContext): CheckResult {
   const { flowUnit, temperatureUnit } = context;
   const hasFlow = segment.columns.flowM3PerHour !== null;
-  const findings = [
-    farDates(segment, context),
-    ...unitPlausibility(segment, { ...context, flowUnit, temperatureUnit }),
-    ...hampelSpikes(segment, context),
-    clockOff(segment, context.clockNotes),
-  ].filter((finding) => finding !== null);
+  const findings = inTurn(context, [
+    () => [farDates(segment, context)],
+    () => unitPlausibility(segment, { ...context, flowUnit, temperatureUnit }),
+    () => hampelSpikes(segment, context),
+    () => [clockOff(segment, context.clockNotes)],
+  ]);
   const lacksBore = hasFlow && context.boreMm === null;
   return {
     findings,
@@ -105,14 +111,15 @@ export function checkSeries(segment: ReadingSegment, context: SeriesContext): Ch
       ? {}
       : { zeroUncertaintyMPerS: context.zeroUncertaintyMPerS }),
   };
-  const findings = [
-    swappedSides(segment, { ...noFlow, service: context.service }),
-    ...reversedFlow(segment, noFlow),
-    ...stepChanges(segment, noFlow),
-    ...stuckChannels(segment, context),
-    context.hasTwoClocks ? clockHint(segment) : null,
-    noFlowNoise(segment, { ...noFlow, flowCutOffM3PerHour: context.flowCutOffM3PerHour }),
-  ].filter((finding) => finding !== null);
+  const { onStep, flowCutOffM3PerHour } = context;
+  const findings = inTurn(context, [
+    () => [swappedSides(segment, { ...noFlow, service: context.service })],
+    () => reversedFlow(segment, noFlow),
+    () => stepChanges(segment, { ...noFlow, ...(onStep && { onStep }) }),
+    () => stuckChannels(segment, context),
+    () => [context.hasTwoClocks ? clockHint(segment) : null],
+    () => [noFlowNoise(segment, { ...noFlow, flowCutOffM3PerHour })],
+  ]);
   const hasFlow = flowM3PerHour !== null;
   const hasTemperatures = supplyC !== null && returnC !== null;
   const channels = [flowM3PerHour, supplyC, returnC, powerKw ?? null];
@@ -129,6 +136,16 @@ export function checkSeries(segment: ReadingSegment, context: SeriesContext): Ch
       [isAlone, { check: "stepChange", lacks: "companion" }],
     ]),
   };
+}
+
+function inTurn(
+  { onStep }: Stoppable,
+  checks: readonly (() => readonly (ReadingFinding | null)[])[],
+): ReadingFinding[] {
+  return checks.flatMap((check) => {
+    onStep?.();
+    return check().filter((finding) => finding !== null);
+  });
 }
 
 function listed(candidates: readonly (readonly [boolean, NotChecked])[]): NotChecked[] {

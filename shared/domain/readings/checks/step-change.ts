@@ -39,12 +39,17 @@ export interface StepLimits extends NoFlowLimits {
   readonly leastK?: number;
   /** Ratio less 1; 0.05 unless given. */
   readonly leastFlowRatio?: number;
+  /** Called before each stretch of rows; may throw to stop the work. */
+  readonly onStep?: () => void;
 }
 
 const LEAST_K = 0.3;
 const LEAST_FLOW_RATIO = 0.05;
-/** Rows looked through at a time, so that memory stays flat; what is found does not depend on it. */
-const ROWS_AT_ONCE = 400_000;
+/**
+ * Rows looked through at a time, so that memory stays flat and somebody who cancels is heard; more where
+ * the margins would be most of the work. What is found does not depend on it.
+ */
+const ROWS_AT_ONCE = 100_000;
 /** Residuals are taken from as far as two days on either side of a change, drift from 15 readings. */
 const MARGIN_MS = 2 * DAY_MS + HOUR_MS;
 const MARGIN_READINGS = 4 * SIDE;
@@ -78,8 +83,11 @@ export function stepChanges(
     const found: StepChangeFinding[] = [];
     const window = { from: 0, to: 0, lookFrom: 0 };
     while (window.to < instantMs.length) {
+      limits.onStep?.();
       window.from = window.to;
-      window.to = Math.min(instantMs.length, window.from + rowsAtOnce);
+      const wideMs = instantMs[window.from]! + 2 * MARGIN_MS;
+      const wide = Math.max(window.from + rowsAtOnce, firstFrom(instantMs, wideMs));
+      window.to = Math.min(instantMs.length, wide);
       found.push(...stepsOf(segment, channel, limits, window));
     }
     return found;
