@@ -78,7 +78,7 @@ const roles: { role: Role; navigation: string[]; may: string[] }[] = [
   },
   {
     role: "surveyor",
-    navigation: ["Today", "Sites", "Logs", "Kit", "Settings"],
+    navigation: ["Today", "Sites", "Logs", "Compare", "Kit", "Settings"],
     may: ["add points", "import", "add instruments"],
   },
   { role: "billingClerk", navigation: ["Today", "Sites", "Settings"], may: [] },
