@@ -7,15 +7,22 @@ import type {
   LoggerClock,
   Separator,
 } from "@shared/domain/log-files/recipe";
+import { flowAtVelocityM3PerHour } from "@shared/domain/pipes/bore";
+import { standardOffsetMs } from "@shared/domain/time/standard-offset";
+import { M3_PER, M_PER_S_PER } from "@shared/domain/units/size-and-pressure";
 import {
+  BAD_WORDS,
   makeSeries,
   ORDER_OF,
   pickClock,
   pickDate,
   pickGroup,
   planChannels,
+  planTimePlace,
+  STATUS_WORDS,
   writeHeader,
   writePreamble,
+  type ChannelPlan,
   type TimeStyle,
 } from "./log-plan";
 import {
@@ -24,6 +31,7 @@ import {
   encodeText,
   numberText,
   numberValue,
+  writtenMidnight,
   type ByteStyle,
 } from "./log-text";
 import { Random } from "./random";
@@ -47,11 +55,16 @@ export interface GeneratedLog {
     readonly meanings: readonly ColumnMeaning[];
     readonly units: readonly (ColumnUnit | null)[];
     readonly marks: readonly DecimalMark[];
+    readonly pulseValue: number;
+    readonly badWords: readonly string[];
   };
+  readonly boreMm: number;
   readonly written: {
     readonly repeats: number;
     readonly moved: number;
     readonly sentinels: number;
+    /** Rows with a bad status, each counted once. */
+    readonly badStatus: number;
   };
 }
 
@@ -97,8 +110,11 @@ export function writeLogFile(seed: number): GeneratedLog {
     "windows-1252",
   ]);
   const group = pickGroup(random, separator, quoted, mark, bytesAs);
-  const channels = planChannels(random);
   const withUnits = random.pick(["header", "header", "row", "none"] as const);
+  const channels = planChannels(random, withUnits !== "none");
+  const timePlace = planTimePlace(random, channels);
+  const boreMm = random.pick([50, 102.26, 202.74]);
+  const pulseValue = random.pick([1, 2.5, 10, 100]);
 
   const timeStyle = random.pick<TimeStyle>([
     "calendar",
@@ -123,9 +139,11 @@ export function writeLogFile(seed: number): GeneratedLog {
     { kind: "site" },
     { kind: "utc" },
     { kind: "fixedOffset", offsetMinutes: random.pick([60, -300, 330]) },
+    { kind: "siteStandard" },
   ]);
+  const hasHour24 = clockStyle !== "halfDay" && random.chance(0.2);
 
-  const rows = random.whole(12, 160);
+  const rows = random.whole(12, 90);
   const start = random.chance(0.3)
     ? Date.parse(random.pick(STARTS))
     : Date.UTC(2024, random.whole(0, 23), random.whole(1, 28), random.whole(0, 23));
@@ -139,6 +157,7 @@ export function writeLogFile(seed: number): GeneratedLog {
 
   const toLocal = (utc: number): number => {
     if (clock.kind === "fixedOffset") return utc + clock.offsetMinutes * MINUTE;
+    if (clock.kind === "siteStandard") return utc + standardOffsetMs(siteZone, start);
     return clock.kind === "utc" ? utc : zoneOffsets(siteZone).toLocal(utc);
   };
   const writeTime = (utc: number): string[] => {
@@ -161,14 +180,19 @@ export function writeLogFile(seed: number): GeneratedLog {
         ];
       }
       default: {
-        const date = dateText(local, dateStyle, dateSeparator);
-        const time = clockText(local, clockStyle, ".");
+        const { dateMs, is24 } = hasHour24
+          ? writtenMidnight(local)
+          : { dateMs: local, is24: false };
+        const date = dateText(dateMs, dateStyle, dateSeparator);
+        const time = clockText(local, clockStyle, ".").replace(/^00/, is24 ? "24" : "00");
         return timeStyle === "split" || separator === " " ? [date, time] : [`${date} ${time}`];
       }
     }
   };
   const timeCells = writeTime(start).length;
   const series = channels.map((channel) => makeSeries(random, channel, rows));
+  // Every word stands in the file, so that a person is asked about each.
+  const words = instantMs.map((_, row) => STATUS_WORDS[row] ?? random.pick(STATUS_WORDS));
 
   let sentinels = 0;
   const sentinelKinds = SENTINELS.filter(
@@ -177,16 +201,18 @@ export function writeLogFile(seed: number): GeneratedLog {
   const usedSentinels = [random.pick(sentinelKinds), random.pick(sentinelKinds)];
   const cells = instantMs.map((utc, row) => {
     const values = channels.map((channel, k) => {
+      if (channel.meaning === "status") return words[row] as string;
       const scaled = (series[k] as number[])[row] as number;
       if (!random.chance(0.015)) return numberText(scaled, channel.decimals, { mark, group });
       sentinels++;
       (series[k] as number[])[row] = NaN;
       return random.pick(usedSentinels);
     });
-    return [...writeTime(utc), ...values];
+    return [...values.slice(0, timePlace), ...writeTime(utc), ...values.slice(timePlace)];
   });
 
-  const stamp = (row: number): string => (cells[row] as string[]).slice(0, timeCells).join(" ");
+  const stamp = (row: number): string =>
+    (cells[row] as string[]).slice(timePlace, timePlace + timeCells).join(" ");
   const order = cells.map((_, i) => i);
   let moved = 0;
   let repeats = 0;
@@ -208,8 +234,20 @@ export function writeLogFile(seed: number): GeneratedLog {
     }
   }
 
-  const header = writeHeader(random, channels, timeStyle, timeCells, withUnits, separator);
-  const lines: string[] = [...writePreamble(random, separator)];
+  const plain = writeHeader(random, channels, timeStyle, timeCells, withUnits, separator);
+  const header = {
+    names: timeBehind(plain.names, timeCells, timePlace),
+    units: timeBehind(plain.units, timeCells, timePlace),
+  };
+  const isLocal = timeStyle === "calendar" || timeStyle === "split";
+  const namesZone = isLocal && separator !== " " && random.chance(0.15);
+  const zone =
+    clock.kind === "utc"
+      ? "UTC"
+      : clock.kind === "fixedOffset"
+        ? offsetText(clock.offsetMinutes)
+        : null;
+  const lines: string[] = [...writePreamble(random, separator, namesZone ? zone : null)];
   const join = (row: readonly string[], all: boolean): string =>
     row.map((cell) => quoteCell(cell, separator, all && quoted, quoted)).join(separator);
   lines.push(join(header.names, true));
@@ -227,26 +265,86 @@ export function writeLogFile(seed: number): GeneratedLog {
     siteZone,
     instantMs,
     values: Object.fromEntries(
-      channels.map(({ meaning, decimals }, k) => [
-        meaning,
-        (series[k] as number[]).map((v) => (Number.isNaN(v) ? NaN : numberValue(v, decimals))),
-      ]),
+      channels
+        .filter(({ meaning }) => meaning !== "status")
+        .map((channel) => {
+          const written = (series[channels.indexOf(channel)] as number[]).map((v) =>
+            Number.isNaN(v) ? NaN : numberValue(v, channel.decimals),
+          );
+          return readAs(channel, written, { instantMs, stepMs, boreMm, pulseValue });
+        }),
     ),
+    boreMm,
     answers: {
       clock:
         timeStyle === "spreadsheetDays" || timeStyle === "calendar" || timeStyle === "split"
           ? clock
           : { kind: "utc" },
       order: ORDER_OF[dateStyle],
-      meanings: [
-        ...(isSplit ? (["date", "timeOfDay"] as const) : (["time"] as const)),
-        ...channels.map(({ meaning }) => meaning),
-      ],
-      units: [...(isSplit ? [null, null] : [null]), ...channels.map(({ unit }) => unit)],
+      meanings: timeBehind<ColumnMeaning>(
+        [
+          ...(isSplit ? (["date", "timeOfDay"] as const) : (["time"] as const)),
+          ...channels.map(({ meaning }) => meaning),
+        ],
+        timeCells,
+        timePlace,
+      ),
+      units: timeBehind<ColumnUnit | null>(
+        [...(isSplit ? [null, null] : [null]), ...channels.map(({ unit }) => unit)],
+        timeCells,
+        timePlace,
+      ),
       marks: [...(isSplit ? [mark, mark] : [mark]), ...channels.map(() => mark)],
+      pulseValue,
+      badWords: BAD_WORDS,
     },
-    written: { repeats, moved, sentinels },
+    written: {
+      repeats,
+      moved,
+      sentinels,
+      badStatus: channels.some(({ meaning }) => meaning === "status")
+        ? words.filter((word) => BAD_WORDS.includes(word)).length
+        : 0,
+    },
   };
+}
+
+/** The times of a row moved behind its first readings. */
+function timeBehind<T>(row: readonly T[], timeCells: number, place: number): T[] {
+  const times = row.slice(0, timeCells);
+  const others = row.slice(timeCells);
+  return [...others.slice(0, place), ...times, ...others.slice(place)];
+}
+
+function offsetText(minutes: number): string {
+  const size = Math.abs(minutes);
+  const two = (n: number) => String(n).padStart(2, "0");
+  return `UTC${minutes < 0 ? "-" : "+"}${two(Math.floor(size / 60))}:${two(size % 60)}`;
+}
+
+/** What an import makes of a channel: speed and pulses become flow, everything else stays as written. */
+function readAs(
+  { meaning, unit }: ChannelPlan,
+  written: readonly number[],
+  of: {
+    readonly instantMs: readonly number[];
+    readonly stepMs: number;
+    readonly boreMm: number;
+    readonly pulseValue: number;
+  },
+): [ColumnMeaning, readonly number[]] {
+  if (meaning === "velocity") {
+    const factor = M_PER_S_PER[unit as "m/s" | "ft/s"];
+    return ["flow", written.map((v) => flowAtVelocityM3PerHour(v * factor, of.boreMm))];
+  }
+  if (meaning !== "pulses") return [meaning, written];
+  const m3 = M3_PER[unit as "L" | "m3" | "US gal"];
+  const flow = written.map((count, i) => {
+    const stepMs = (of.instantMs[i] as number) - (of.instantMs[i - 1] ?? NaN);
+    // The first row, and one after a gap, speak for a time that nobody knows.
+    return stepMs <= 1.5 * of.stepMs ? (count * of.pulseValue * m3) / (stepMs / 3_600_000) : NaN;
+  });
+  return ["flow", flow];
 }
 
 function quoteCell(cell: string, separator: Separator, always: boolean, allowed: boolean): string {

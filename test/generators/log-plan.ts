@@ -10,9 +10,20 @@ import type { Random } from "./random";
 const MINUTE = 60_000;
 
 export interface ChannelPlan {
-  readonly meaning: "flow" | "supply" | "return" | "signal";
+  readonly meaning:
+    | "flow"
+    | "velocity"
+    | "pulses"
+    | "power"
+    | "supply"
+    | "return"
+    | "signal"
+    | "outdoor"
+    | "electricPower"
+    | "pressure"
+    | "status";
   readonly names: readonly string[];
-  readonly unit: ColumnUnit;
+  readonly unit: ColumnUnit | null;
   readonly unitNames: readonly string[];
   readonly decimals: number;
   readonly low: number;
@@ -24,7 +35,18 @@ const FLOW_UNITS: readonly { unit: ColumnUnit; names: readonly string[]; scale: 
   { unit: "L/s", names: ["L/s", "l/s", "lps"], scale: 0.28 },
   { unit: "L/min", names: ["l/min", "LPM", "L/min"], scale: 16.7 },
   { unit: "US gpm", names: ["gpm", "GPM", "US gpm"], scale: 4.4 },
+  { unit: "L/h", names: ["l/h", "L/h", "lph"], scale: 1000 },
 ];
+const VELOCITY_UNITS = [
+  { unit: "m/s", names: ["m/s", "m/sec"], high: 2.5 },
+  { unit: "ft/s", names: ["ft/s", "fps"], high: 8 },
+] as const;
+const POWER_UNITS = [
+  { unit: "kW", names: ["kW", "kWth"], high: 900 },
+  { unit: "MW", names: ["MW"], high: 3 },
+  { unit: "MBH", names: ["MBH", "kBtu/h"], high: 3000 },
+  { unit: "ton", names: ["tons"], high: 250 },
+] as const;
 const TEMPERATURE_UNITS: readonly {
   unit: ColumnUnit;
   names: readonly string[];
@@ -49,6 +71,11 @@ export const ORDER_OF: Readonly<Record<DateStyle, DateOrder>> = {
   ymdShort: "yearMonthDay",
   compact: "yearMonthDay",
 };
+
+/** Whether the dates of the log stand before its readings or behind the first of them. */
+export function planTimePlace(random: Random, channels: readonly ChannelPlan[]): number {
+  return random.chance(0.15) ? Math.min(1, channels.length) : 0;
+}
 
 export type TimeStyle =
   | "calendar"
@@ -101,20 +128,116 @@ export function pickDate(random: Random, separator: Separator): DateStyle {
   return random.pick(styles);
 }
 
-export function planChannels(random: Random): readonly ChannelPlan[] {
+/** Words of a status column, the bad ones last. */
+export const STATUS_WORDS = ["OK", "Good", "E07", "LOW"] as const;
+export const BAD_WORDS: readonly string[] = ["E07", "LOW"];
+
+/** What says how much moved: a rate, a speed, pulses, or a meter's power. */
+function planMovement(random: Random, withUnits: boolean): ChannelPlan {
   const flow = random.pick(FLOW_UNITS);
+  const rate: ChannelPlan = {
+    meaning: "flow",
+    names: ["Flow", "Flow rate", "Durchfluss", "Volumenstrom", "Débit"],
+    unit: flow.unit,
+    unitNames: flow.names,
+    decimals: random.whole(0, 3),
+    low: 0,
+    high: random.pick([40, 400, 4000]) * flow.scale,
+  };
+  const kind = random.pick(["flow", "flow", "flow", "velocity", "pulses", "power"] as const);
+  if (kind === "velocity") {
+    const speed = random.pick(VELOCITY_UNITS);
+    return {
+      meaning: "velocity",
+      names: ["Velocity", "Geschwindigkeit", "Vitesse"],
+      unit: speed.unit,
+      unitNames: speed.names,
+      decimals: random.whole(2, 3),
+      low: 0,
+      high: speed.high,
+    };
+  }
+  if (kind === "pulses")
+    return {
+      meaning: "pulses",
+      names: ["Pulses", "Impulse", "Impulsions"],
+      unit: random.pick(["L", "m3", "US gal"] as const),
+      unitNames: ["imp", "pulses"],
+      decimals: 0,
+      low: 0,
+      high: 400,
+    };
+  if (kind === "power" && withUnits) {
+    const power = random.pick(POWER_UNITS);
+    return {
+      meaning: "power",
+      names: ["Heat power", "Wärmeleistung", "Puissance"],
+      unit: power.unit,
+      unitNames: power.names,
+      decimals: random.whole(1, 3),
+      low: 0,
+      high: power.high,
+    };
+  }
+  return rate;
+}
+
+/** Companions, which only a file that writes units has, and a status. */
+function planBeside(random: Random, withUnits: boolean): readonly ChannelPlan[] {
+  const beside: readonly ChannelPlan[] = [
+    {
+      meaning: "outdoor",
+      names: ["Outdoor temp", "Außentemperatur", "Temp extérieure"],
+      unit: random.pick(["degC", "degF"] as const),
+      unitNames: [],
+      decimals: 1,
+      low: -8,
+      high: 31,
+    },
+    {
+      meaning: "electricPower",
+      names: ["Pump power", "Pumpe Leistung", "Puissance pompe"],
+      unit: "kW",
+      unitNames: ["kW"],
+      decimals: 2,
+      low: 0,
+      high: 7,
+    },
+    {
+      meaning: "pressure",
+      names: ["Pressure", "Druck", "Pression"],
+      unit: "bar",
+      unitNames: ["bar"],
+      decimals: 2,
+      low: 1,
+      high: 4,
+    },
+  ];
+  const named = beside.map((plan) =>
+    plan.meaning === "outdoor"
+      ? { ...plan, unitNames: plan.unit === "degC" ? ["°C", "degC"] : ["°F", "degF"] }
+      : plan,
+  );
+  const status: ChannelPlan = {
+    meaning: "status",
+    names: ["Status", "Zustand", "Etat"],
+    unit: null,
+    unitNames: ["-"],
+    decimals: 0,
+    low: 0,
+    high: 0,
+  };
+  return [
+    ...(withUnits ? named.filter(() => random.chance(0.12)) : []),
+    ...(random.chance(0.15) ? [status] : []),
+  ];
+}
+
+export function planChannels(random: Random, withUnits: boolean): readonly ChannelPlan[] {
   const temperature = random.pick(TEMPERATURE_UNITS);
   const decimals = random.whole(1, 3);
   const all: ChannelPlan[] = [
-    {
-      meaning: "flow",
-      names: ["Flow", "Flow rate", "Durchfluss", "Volumenstrom", "Débit"],
-      unit: flow.unit,
-      unitNames: flow.names,
-      decimals: random.whole(0, 3),
-      low: 0,
-      high: random.pick([40, 400, 4000]) * flow.scale,
-    },
+    planMovement(random, withUnits),
     {
       meaning: "supply",
       names: ["Supply", "Vorlauf", "Départ", "T supply"],
@@ -150,7 +273,8 @@ export function planChannels(random: Random): readonly ChannelPlan[] {
     all.slice(1, 3),
     all.slice(0, 3),
   ]);
-  return random.chance(0.3) ? [...used].reverse() : used;
+  const columns = [...used, ...planBeside(random, withUnits)];
+  return random.chance(0.3) ? columns.reverse() : columns;
 }
 
 export function makeSeries(
@@ -196,14 +320,20 @@ export function writeHeader(
       ["[", "]"],
       ["(", ")"],
     ] as const);
-    names.push(withUnits === "header" ? plain(`${name} ${open}${unit}${close}`) : name);
+    const hasUnit = withUnits === "header" && channel.unit !== null;
+    names.push(hasUnit ? plain(`${name} ${open}${unit}${close}`) : name);
     units.push(plain(unit));
   }
   if (separator === " ") units.forEach((unit, i) => (units[i] = unit === "" ? "-" : unit));
   return { names, units };
 }
 
-export function writePreamble(random: Random, separator: Separator): readonly string[] {
+/** @param zone what a line names as the logger's time zone; null for none */
+export function writePreamble(
+  random: Random,
+  separator: Separator,
+  zone: string | null = null,
+): readonly string[] {
   const lines = [
     `Logger${separator}HCW-7`,
     `Serial:${separator === "," ? " " : separator}50417`,
@@ -211,5 +341,8 @@ export function writePreamble(random: Random, separator: Separator): readonly st
     "# written by the flow logger",
     "",
   ];
-  return lines.slice(0, random.pick([0, 0, 2, 3, 5]));
+  const shown = lines.slice(0, random.pick([0, 0, 2, 3, 5]));
+  return zone === null
+    ? shown
+    : [`Time zone:${separator === "," ? " " : separator}${zone}`, ...shown];
 }

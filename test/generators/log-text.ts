@@ -45,6 +45,15 @@ export type DateStyle =
   | "compact";
 export type ClockStyle = "minutes" | "seconds" | "fraction" | "halfDay";
 
+/** Midnight as some loggers write it: hour 24 of the day before. */
+export function writtenMidnight(localMs: number): {
+  readonly dateMs: number;
+  readonly is24: boolean;
+} {
+  const is24 = localMs % 86_400_000 === 0;
+  return { dateMs: is24 ? localMs - 86_400_000 : localMs, is24 };
+}
+
 const ENGLISH = [
   "Jan",
   "Feb",

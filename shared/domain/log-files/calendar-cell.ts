@@ -298,6 +298,7 @@ export class CalendarCell {
     const { bytes } = this;
     const byte = bytes[this.at] as number;
     if (byte === 43 || byte === 45) {
+      const stands = bytes[this.at - 1] === 32;
       this.at++;
       const hours = this.readDigits();
       const digits = this.digits;
@@ -311,6 +312,9 @@ export class CalendarCell {
           this.at++;
           minutes = this.readDigits();
           if (this.digits !== 2) return false;
+        } else if (stands || digits === 1) {
+          // After a space, −5 is a reading whose decimal comma was taken for a separator.
+          return false;
         }
       } else return false;
       if (total > 18 || minutes > 59) return false;

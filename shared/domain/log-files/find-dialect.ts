@@ -10,6 +10,8 @@ const SEPARATORS: readonly Separator[] = [",", ";", "\t", "|", " "];
 const HEAD_ROWS = 400;
 /** A row of readings may hold a status text or two, not more. */
 const MIN_VALUE_SHARE = 0.6;
+/** Less than half a cell for all rows of the head together. */
+const EVENNESS = 0.4 / HEAD_ROWS;
 const NOTHING = new Uint8Array(0);
 
 export interface KindRow extends TextRow {
@@ -67,7 +69,10 @@ function separatedDialect(
   for (const separator of given === undefined ? SEPARATORS : [given]) {
     for (const quote of quotes) {
       const rows = readTextRows(bytes, { separator, quote }, isWholeFile, HEAD_ROWS).map(withKinds);
-      const score = scoreOfRows(rows);
+      const columnCount = usualCount(rows);
+      // Where two separators do as well, the one that also parts the header has it.
+      const even = rows.filter(({ cellCount }) => cellCount === columnCount).length;
+      const score = scoreOfRows(rows) + even * EVENNESS;
       const stamps = rows.filter(
         ({ kinds }) => kinds.length > 1 && kinds.includes("dateTime"),
       ).length;
@@ -77,7 +82,7 @@ function separatedDialect(
       if (beats) {
         bestScore = score;
         bestStamps = stamps;
-        best = { separator, quote, rows, columnCount: usualCount(rows), columnStarts: null };
+        best = { separator, quote, rows, columnCount, columnStarts: null };
       }
     }
   }

@@ -80,8 +80,22 @@ function mostlyRises(values: readonly number[]): boolean {
   return values.length > 2 && rises >= (values.length - 1) * 0.8;
 }
 
-/** Whether a row has a time where the file's times stand. */
-export function hasTime(row: KindRow, times: TimeColumns): boolean {
+/** Columns in which most rows of data have no word. */
+export function wordlessColumns(rows: readonly KindRow[], columnCount: number): readonly number[] {
+  return Array.from({ length: columnCount }, (_, index) => index).filter(
+    (index) => rows.filter(({ kinds }) => kinds[index] === "text").length < rows.length / 2,
+  );
+}
+
+/**
+ * Whether a row has a time where the file's times stand. A number proves no time by itself: a serial
+ * number above the header may look like a day, so its row must have no word where data has none.
+ */
+export function hasTime(
+  row: KindRow,
+  times: TimeColumns,
+  wordless: readonly number[] = [],
+): boolean {
   if (times.kind === "calendar") {
     const kind = row.kinds[times.index];
     return kind === "dateTime" || kind === "date";
@@ -90,6 +104,7 @@ export function hasTime(row: KindRow, times: TimeColumns): boolean {
     const date = row.kinds[times.dateIndex];
     return (date === "date" || date === "dateTime") && row.kinds[times.timeIndex] === "timeOfDay";
   }
+  if (wordless.some((index) => row.kinds[index] === "text")) return false;
   const range = NUMERIC_RANGES.find(({ kind }) => kind === times.kind);
   const value = roughNumber(row.cells[times.index] ?? "");
   return range !== undefined && value >= range.min && value <= range.max;

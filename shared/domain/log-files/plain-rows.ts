@@ -44,6 +44,8 @@ export class PlainRows implements RowsAhead {
   /** By column: the channel, or one of the codes above. */
   private readonly plan: Int8Array;
   private readonly marks: Uint8Array;
+  /** Of the row being read, by channel. */
+  private readonly rowDecimals: Uint8Array;
   private readonly firstDataLine: number;
   private readonly prefix = new Uint8Array(MAX_PREFIX_BYTES);
   private prefixLength = 0;
@@ -66,6 +68,7 @@ export class PlainRows implements RowsAhead {
       else if (meaning === "timeOfDay") this.plan[index] = TIME_OF_DAY;
     }
     store.channels.forEach(({ index }, k) => (this.plan[index] = k));
+    this.rowDecimals = new Uint8Array(store.channels.length);
     this.marks = Uint8Array.from(store.channels, ({ mark }) => mark.charCodeAt(0));
   }
 
@@ -161,7 +164,8 @@ export class PlainRows implements RowsAhead {
         const value = decimals === 0 ? mantissa : mantissa / (POWERS_OF_TEN[decimals] as number);
         const channel = channels[role] as (typeof channels)[number];
         channel.values[rowCount] = negative ? -value : value;
-        if (decimals > channel.decimals) channel.decimals = decimals;
+        // A row that turns out not to be plain must leave no trace.
+        this.rowDecimals[role] = decimals;
       } else if (role === SKIP) {
         let byte = bytes[at];
         while (byte !== separator && byte !== 10 && byte !== 13) byte = bytes[++at];
@@ -201,6 +205,11 @@ export class PlainRows implements RowsAhead {
     }
     if (bytes[at] === 13 && bytes[at + 1] === 10) at++;
     if (bytes[at] !== 10) return -1;
+    for (let k = 0; k < channels.length; k++) {
+      const channel = channels[k] as (typeof channels)[number];
+      const decimals = this.rowDecimals[k] as number;
+      if (decimals > channel.decimals) channel.decimals = decimals;
+    }
     store.timeMs[rowCount] = this.dayMs + timeOfDayMs;
     store.isUtc[rowCount] = isUtc;
     store.lines[rowCount] = line;

@@ -1,7 +1,7 @@
 import { isArchive, isOldOffice } from "./containers";
 import { findDialect, type KindRow } from "./find-dialect";
 import { findHeader, labelAndValue, type HeaderFinding } from "./find-header";
-import { findTimeColumns, hasTime, type TimeColumns } from "./find-times";
+import { findTimeColumns, hasTime, wordlessColumns, type TimeColumns } from "./find-times";
 import { firstLinesOf } from "./read-lines";
 import type { Dialect } from "./recipe";
 import type { Unreadable } from "./recognition";
@@ -81,8 +81,10 @@ export function recogniseHead(
   ).headers;
   const times = findTimeColumns(data, found.columnCount, roughHeaders);
   if (times === null) return unreadable("noTimes", data[0]?.line, data[0]?.cells[0]);
+  const wordless = wordlessColumns(data, found.columnCount);
   const firstRow = found.rows.find(
-    (row) => row.cellCount === found.columnCount && isBelowHeader(row) && hasTime(row, times),
+    (row) =>
+      row.cellCount === found.columnCount && isBelowHeader(row) && hasTime(row, times, wordless),
   );
   if (firstRow === undefined) return unreadable("noRows");
 
