@@ -1,6 +1,7 @@
 import { View } from "react-native";
 import type { ImportChecks } from "@shared/contracts/import-checks";
 import type { ImportDetail } from "@shared/contracts/imports";
+import { saveFile } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import { ListRow, Text, useTheme } from "@features/ui";
 import { problemRowsAddress } from "./result-queries";
@@ -33,7 +34,7 @@ export function ResultRows({ detail, checks }: { detail: ImportDetail; checks: I
           icon="download"
           title={t("rows.download")}
           detail={t("rows.downloadHint")}
-          href={problemRowsAddress(detail.id, language)}
+          onPress={() => saveFile(problemRowsAddress(detail.id, language))}
         />
       </View>
     </View>

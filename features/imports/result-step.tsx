@@ -1,5 +1,6 @@
 import { useState } from "react";
 import { View } from "react-native";
+import { saveFile } from "@features/api";
 import { useFormat, useWords } from "@features/i18n";
 import {
   Card,
@@ -255,7 +256,7 @@ function NextAndRecord({ detail }: { detail: ImportDetail }) {
         {detail.files.map((file) => (
           <View key={file.id} style={{ gap: 2 }}>
             <TextLink
-              href={rawFileAddress(detail.id, file.id)}
+              onPress={() => saveFile(rawFileAddress(detail.id, file.id))}
               label={t("result.download", { name: file.name })}
             />
             <Text variant="asReadS" tone="ink3">

@@ -4,7 +4,7 @@ import { useState } from "react";
 import { View } from "react-native";
 import { MAX_FILES_PER_BATCH, type BatchDetail } from "@shared/contracts/import-batches";
 import { UPLOAD_ENDINGS } from "@shared/domain/log-files/containers";
-import { Answer, useErrorWords } from "@features/api";
+import { Answer, saveFile, useErrorWords } from "@features/api";
 import { useWords } from "@features/i18n";
 import { Banner, Button, DropZone, Screen, Text, TextLink, useBreakpoint } from "@features/ui";
 import { importPaths } from "../import-paths";
@@ -66,7 +66,10 @@ function Batch({ batch }: { batch: BatchDetail }) {
               <Text variant="bodyWide">
                 {t("one.summary", { imported, ready: batch.ready, open })}
               </Text>
-              <TextLink href={batchReportAddress(batch.id)} label={t("one.report")} />
+              <TextLink
+                onPress={() => saveFile(batchReportAddress(batch.id))}
+                label={t("one.report")}
+              />
             </View>
             {phone ? (
               <BatchCards batch={batch} actions={actions} />
