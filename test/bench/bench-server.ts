@@ -1,6 +1,6 @@
 import { spawn, type ChildProcess } from "node:child_process";
 import { randomBytes } from "node:crypto";
-import { readFileSync } from "node:fs";
+import { readFileSync, writeFileSync } from "node:fs";
 import net from "node:net";
 import path from "node:path";
 import { setTimeout as sleep } from "node:timers/promises";
@@ -20,8 +20,9 @@ export interface BenchServer {
   upload<T>(path: string, name: string, bytes: Buffer): Promise<T>;
   /** Where and with what somebody signed in asks for a path of the API, for calls made elsewhere. */
   request(path: string): { readonly url: string; readonly headers: Record<string, string> };
-  /** Greatest memory the process has held since it started, MB. */
+  /** Greatest memory the process has held since it started or was asked to forget it, MB. */
   peakMb(): number;
+  forgetPeak(): void;
   /** What it holds now, MB. */
   residentMb(): number;
   stop(): Promise<void>;
@@ -93,6 +94,7 @@ export async function startBenchServer(
       return call("POST", url, { body: form });
     },
     peakMb: () => memory("VmHWM"),
+    forgetPeak: () => writeFileSync(`/proc/${child.pid}/clear_refs`, "5"),
     residentMb: () => memory("VmRSS"),
     async stop() {
       const gone = new Promise((resolve) => child.once("exit", resolve));

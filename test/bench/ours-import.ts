@@ -50,17 +50,23 @@ export interface ImportTimes {
   readonly rowsStored: number;
 }
 
+/** Where an import has come to. */
+export type Milestone = "uploaded" | "recognised" | "checked" | "stored";
+
 /** The whole way of one file through the API, as a script goes it. */
 export async function importFile(
   server: BenchServer,
   pointId: string,
   name: string,
   bytes: Buffer,
+  onMilestone: (milestone: Milestone) => void = () => undefined,
 ): Promise<ImportTimes> {
   const started = performance.now();
   const { id } = await server.send<ImportDetail>("POST", `/points/${pointId}/imports`);
   await server.upload<ImportDetail>(`/imports/${id}/files`, name, bytes);
+  onMilestone("uploaded");
   const { files } = await until(server, id, ["asking"]);
+  onMilestone("recognised");
   const file = files[0];
   if (!file?.recipe) throw new Error("the bench's file was not recognised");
   await server.send("PUT", `/imports/${id}/files/${file.id}/recipe`, {
@@ -68,10 +74,12 @@ export async function importFile(
     time: { ...file.recipe.time, clock: { kind: "utc" } },
   });
   await until(server, id, ["ready"]);
+  onMilestone("checked");
   const confirmed = performance.now();
   await server.send("POST", `/imports/${id}/confirm`);
   const done = await until(server, id, ["imported"]);
   const ended = performance.now();
+  onMilestone("stored");
   return {
     storeS: (ended - confirmed) / 1000,
     wholeS: (ended - started) / 1000,
