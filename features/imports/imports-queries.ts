@@ -24,6 +24,7 @@ import {
   type ImportState,
 } from "@shared/contracts/imports";
 import type { fileRecipe, repairChoices } from "@shared/contracts/log-recipe";
+import { listCorrections } from "@shared/contracts/corrections";
 import { getEnergy } from "@shared/contracts/energy";
 import { listLoops, listPoints, listSites } from "@shared/contracts/places";
 import type { z } from "zod";
@@ -78,6 +79,13 @@ export const energyOfQuery = (pointId: string, range: { from: string; to: string
     queryKey: ["imports", "energy", pointId, range] as const,
     queryFn: ({ signal }) =>
       call(getEnergy, { params: { pointId }, query: { ...range, step: "total" }, signal }),
+  });
+
+/** Corrections of a point, those that an import's checks became among them. */
+export const correctionsOfPointQuery = (pointId: string) =>
+  queryOptions({
+    queryKey: ["imports", "corrections", pointId] as const,
+    queryFn: ({ signal }) => call(listCorrections, { params: { pointId }, signal }),
   });
 
 export const placesToImportQuery = {

@@ -21,6 +21,7 @@ import { useWorkings } from "@features/workings/use-workings";
 import type { WorkingsKey } from "@features/workings/workings-key";
 import { WorkingsOverPage } from "@features/workings/workings-over-page";
 import { ChangeChoices } from "./change-choices";
+import { CorrectionsMade } from "./corrections-made";
 import { DailyEnergy } from "./daily-bars";
 import { rawFileAddress } from "./file-card";
 import { FindingRow } from "./finding-row";
@@ -72,9 +73,8 @@ export function ResultStep({ detail, actions }: { detail: ImportDetail; actions:
       }
       side={
         <>
-          {checks ? (
-            <ResultRows detail={detail} checks={checks} />
-          ) : null}
+          {checks ? <ResultRows detail={detail} checks={checks} /> : null}
+          <CorrectionsMade detail={detail} />
           <NextAndRecord detail={detail} />
         </>
       }

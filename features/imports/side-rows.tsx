@@ -4,6 +4,8 @@ import { Text, useTheme } from "@features/ui";
 
 export interface SideRow {
   readonly label: string;
+  /** Where several rows carry the same label. */
+  readonly key?: string;
   readonly value: string;
   /** Came off the file: set in mono. */
   readonly asRead?: boolean;
@@ -22,7 +24,7 @@ export function SideRows({ title, rows }: { title: string; rows: readonly SideRo
       <View role="list" aria-label={title} style={{ marginTop: 6 }}>
         {rows.map((row) => (
           <View
-            key={row.label}
+            key={row.key ?? row.label}
             role="listitem"
             style={{
               flexDirection: "row",
