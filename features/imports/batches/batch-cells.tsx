@@ -1,3 +1,4 @@
+import { useState } from "react";
 import { View } from "react-native";
 import type { BatchDetail, BatchFile } from "@shared/contracts/import-batches";
 import { useFormat, useWords } from "@features/i18n";
@@ -10,7 +11,10 @@ interface CellProps {
   readonly actions: BatchActions;
 }
 
-/** The point of a file: found, chosen, or to be chosen. */
+/**
+ * The point of a file: found, chosen, or to be chosen. A choice is sent by its button: the keys that
+ * move through a list would otherwise send every point they pass.
+ */
 export function PointCell({ file, batch, actions }: CellProps) {
   const t = useWords("batches");
   const found = file.pointBy
@@ -18,6 +22,11 @@ export function PointCell({ file, batch, actions }: CellProps) {
     : null;
   const doubtful = file.problems.some(({ code }) => code === "pointDoubtful");
   const { point } = file;
+  const [picked, setPicked] = useState<string | null>(null);
+  const chosen = picked ?? point?.id ?? null;
+  const isOther = chosen !== null && chosen !== point?.id;
+  const send = () =>
+    chosen !== null && actions.choosePoint.send({ batchFileId: file.id, pointId: chosen });
   return (
     <View style={{ gap: 4 }}>
       {file.can.choosePoint ? (
@@ -25,31 +34,30 @@ export function PointCell({ file, batch, actions }: CellProps) {
           label={t("one.choosePoint", { name: file.name })}
           labelHidden
           attention={point === null || doubtful}
-          value={point?.id ?? null}
+          value={chosen}
           emptyLabel={t("one.pointEmpty")}
           options={batch.points.map(({ id, code, name, loopTag }) => ({
             value: id,
             label: `${loopTag} ${code} ${name}`,
           }))}
-          onChange={(pointId) => actions.choosePoint.send({ batchFileId: file.id, pointId })}
-          disabled={actions.choosePoint.busy}
+          onChange={setPicked}
         />
       ) : (
         <Text>{point ? `${point.loopTag} ${point.code}` : "—"}</Text>
       )}
-      {found ? (
+      {found && !isOther ? (
         <Text variant="small" tone="ink2">
           {found}
         </Text>
       ) : null}
-      {doubtful && point && file.can.choosePoint ? (
+      {file.can.choosePoint && (isOther || (doubtful && point !== null)) ? (
         <Row>
           <Button
             kind="second"
             size="dense"
-            label={t("one.rightPoint")}
+            label={t(isOther ? "one.usePoint" : "one.rightPoint")}
             busy={actions.choosePoint.busy}
-            onPress={() => actions.choosePoint.send({ batchFileId: file.id, pointId: point.id })}
+            onPress={send}
           />
         </Row>
       ) : null}
