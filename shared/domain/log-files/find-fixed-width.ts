@@ -38,11 +38,12 @@ export function findFixedWidth(text: string): FixedWidthFinding | null {
   const [first] = body;
   if (body.length < MIN_LINES || first === undefined) return null;
   const rows = body.map((index) => lines[index] as string[]);
-  const fields = joinWords(fieldsOf(rows), lines.slice(Math.max(0, first - 2), first), rows);
+  const above = lines.slice(Math.max(0, first - 2), first);
+  const fields = joinWords(fieldsOf(rows), above, rows);
   if (fields.length < 2) return null;
   return {
     columnStarts: fields.map((field, i) =>
-      i === 0 ? 0 : boundary(fields[i - 1] as Field, field, rows),
+      i === 0 ? 0 : boundary(fields[i - 1] as Field, field, rows, above),
     ),
     firstBodyLine: first + 1,
   };
@@ -120,17 +121,29 @@ function beginsAt(line: readonly string[], at: number): boolean {
   return (line[at] ?? " ") !== " " && (line[at - 1] ?? " ") === " ";
 }
 
+/** A single blank may stand within a header, such as `FLOW GPM`; two part it from the one before. */
+function beginsApart(line: readonly string[], at: number): boolean {
+  return beginsAt(line, at) && (line[at - 2] ?? " ") === " ";
+}
+
 function cellsOf({ start, end }: Field, rows: readonly (readonly string[])[]): string[] {
   return rows.map((row) => row.slice(start, end).join("").trim()).filter((cell) => cell !== "");
 }
 
 /**
- * Where the column on the right begins, in the gap between two: a column flush right may grow to the
- * left further down, one flush left to the right, so the room goes to the side that needs it.
+ * Where the column on the right begins, in the gap between two: where a header begins there, for its
+ * words say which column they head. Else a column flush right may grow to the left further down, one
+ * flush left to the right, so the room goes to the side that needs it.
  */
-function boundary(left: Field, right: Field, rows: readonly (readonly string[])[]): number {
+function boundary(
+  left: Field,
+  right: Field,
+  rows: readonly (readonly string[])[],
+  above: readonly (readonly string[])[],
+): number {
   const from = left.end + 1;
   const to = right.start;
+  for (const line of above) for (let at = from; at < to; at++) if (beginsApart(line, at)) return at;
   const growsLeft = !isFlush(right, rows, "start");
   const growsRight = !isFlush(left, rows, "end");
   if (growsLeft && growsRight) return from + ((to - from) >> 1);

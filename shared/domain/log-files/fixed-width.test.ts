@@ -56,6 +56,30 @@ describe("columns of fixed width", () => {
     expect(raw.problemCount).toBe(0);
   });
 
+  it("begin where their headers do, though their numbers are flush right further on", () => {
+    const rows = Array.from({ length: 8 }, (_, i) => {
+      const flow = i === 3 ? "" : (35 + i / 10).toFixed(1);
+      return `14.03.24 09:0${i}  ${flow.padStart(10)}  ${(157 + i / 10).toFixed(1).padStart(11)}  ${(140 + i / 10).toFixed(1).padStart(13)}`;
+    });
+    const header = "DATE     TIME      FLOW GPM  FLOW T DEGF  RETURN T DEGF";
+    const found = recogniseLogFile(encode(["UNIT 5531", "", header, ...rows, ""].join("\r\n")));
+    if ("code" in found) throw new Error(found.code);
+    expect(found.recipe.columns.map((column) => [column.header, column.meaning])).toEqual([
+      ["DATE", "date"],
+      ["TIME", "timeOfDay"],
+      ["FLOW GPM", "flow"],
+      ["FLOW T DEGF", "supply"],
+      ["RETURN T DEGF", "return"],
+    ]);
+    expect(found.recipe.columns.map(({ unit }) => unit)).toEqual([
+      null,
+      null,
+      "US gpm",
+      "degF",
+      "degF",
+    ]);
+  });
+
   it("leave lines above the header whole, so that a serial number stays one", () => {
     const found = recogniseLogFile(readLogFixture("ok/fixed-width-blank-cells.txt"));
     if ("code" in found) throw new Error(found.code);
@@ -107,7 +131,7 @@ describe("columns of fixed width", () => {
     ];
     const found = recogniseLogFile(encode(head + rows.join("\n")));
     if ("code" in found) throw new Error(found.code);
-    expect(found.recipe.dialect.columnStarts).toEqual([0, 11, 24, 30, 37]);
+    expect(found.recipe.dialect.columnStarts).toEqual([0, 11, 23, 29, 37]);
     expect(found.sampleRows[1]?.cells).toEqual([
       "07/15/2026",
       "12:06:00 AM",

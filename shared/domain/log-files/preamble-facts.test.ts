@@ -35,6 +35,8 @@ describe("facts above the header", () => {
     ["Return sensor serial number", "4712", "returnProbeSerial", null],
     ["Pipe inside diameter", "82.5 mm", "boreMm", 82.5],
     ["Innendurchmesser [mm]", "82,5", "boreMm", 82.5],
+    ["Pipe inside diameter mm", "82.5", "boreMm", 82.5],
+    ["Rohr innen mm", "82,5", "boreMm", 82.5],
     ["Pipe OD", "3.5 in", "outsideDiameterMm", 88.9],
     ["Außendurchmesser", "88,9 mm", "outsideDiameterMm", 88.9],
     ["Wandstärke (mm)", "3,2", "wallMm", 3.2],

@@ -59,7 +59,7 @@ const OF_SOMETHING_ELSE =
 const LABELS: readonly (readonly [FactKind, RegExp])[] = [
   [
     "boreMm",
-    /(^| )(inside|inner|internal) (pipe )?(diameter|dia)( |$)|(^| )pipe (id|bore)( |$)|^(id|bore|pipe bore)( |$)|innen ?(durchmesser|ø)|lichte weite|^di( |$)/,
+    /(^| )(inside|inner|internal) (pipe )?(diameter|dia)( |$)|(^| )pipe (id|bore)( |$)|^(id|bore|pipe bore)( |$)|innen ?(durchmesser|ø)|^rohr ?innen|lichte weite|^di( |$)/,
   ],
   [
     "outsideDiameterMm",
@@ -184,7 +184,7 @@ function valueOf(kind: FactKind, cell: string, label: string): number | null {
   }
 }
 
-/** A number with its unit beside it, or in the brackets of its label. */
+/** A number with its unit beside it, or in the brackets or the last word of its label. */
 function quantity(
   cell: string,
   label: string,
@@ -192,7 +192,8 @@ function quantity(
 ): number | null {
   const match = /^([-+\d][\d.,'\u00a0\u202f ]*)\s*(\S*)$/.exec(cell);
   const number = sureNumber((match?.[1] ?? "").trim());
-  const inLabel = /[([]\s*([^)\]]+?)\s*[)\]]/.exec(label)?.[1] ?? "";
+  const inLabel =
+    /[([]\s*([^)\]]+?)\s*[)\]]/.exec(label)?.[1] ?? /\s(\S+)$/.exec(label.trim())?.[1] ?? "";
   const unit = (match?.[2] || inLabel).toLowerCase().replace(/\.$/, "");
   const factor = Object.prototype.hasOwnProperty.call(units, unit) ? units[unit] : undefined;
   if (number === null || factor === undefined) return null;
