@@ -10,6 +10,8 @@ import { runJobs } from "@server/testing/run-jobs";
 import { testApp } from "@server/testing/test-app";
 
 const app = testApp();
+// The files are of spring 2026: none of their rows may lie ahead of the day they come in.
+beforeAll(() => app.clock.advance({ days: 60 }));
 
 const fixtures = path.join(__dirname, "../../test/fixtures/scenarios/S06");
 const expected = JSON.parse(readFileSync(path.join(fixtures, "expected.json"), "utf8")) as Record<
