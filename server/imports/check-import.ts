@@ -158,7 +158,7 @@ export function checkImport(input: CheckInput): ImportChecks {
     findingsBasis: findingsBasis(context, corrections, settings),
     undecided,
     files: checked,
-    rows: rowsOf(chosen),
+    rows: rowsOf(chosen.length > 0 ? chosen : companionsAlone(files)),
     rowsWithoutTemperature: rowsWithoutTemperature(files, together, span),
     ...result,
     picture: span && pictureOf(chosen, span),
@@ -177,6 +177,15 @@ function checkOf(code: string): string {
 function lookedForInCounters(files: readonly CheckedFile[]): RepairStepCode[] {
   const counts = files.some(({ columns }) => columns !== null && hasCounters(columns));
   return counts ? ["counterReset", "counterJump"] : [];
+}
+
+/** Files that hold companion series alone give no segment, and yet they have rows. */
+function companionsAlone(files: readonly CheckedFile[]): ReadingSegment[] {
+  return files.flatMap(({ columns, kind, resolved: { nominalStepMs } }) =>
+    columns === null || columns.instantMs.length === 0
+      ? []
+      : [{ kind, nominalStepMs: nominalStepMs ?? 0, columns }],
+  );
 }
 
 function rowsOf(segments: readonly ReadingSegment[]): ImportChecks["rows"] {

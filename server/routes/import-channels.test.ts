@@ -287,6 +287,7 @@ describe("companion series", () => {
     );
     expect(codes(detail)).toEqual([]);
     expect(detail.state).toBe("ready");
+    expect(detail.checks).toMatchObject({ rows: { measured: 3, missing: 0 }, energy: null });
     const done = await stored(agent, detail);
     expect(done).toMatchObject({ state: "imported", rowsStored: 3 });
     expect(await readingsOf(point.id)).toEqual([]);

@@ -40,6 +40,8 @@ const places: MakeIds = async (app, owner) => {
     siteId: site.id,
     loopId: loop.id,
     pointId: point.id,
+    // No id, but a part of the path all the same.
+    channel: "outdoor",
     buildingId: building.id,
     recipeId: recipe.id,
     ...(await batchOfSite(app, recipe, site.id)),
