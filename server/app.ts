@@ -23,7 +23,7 @@ export function createApp(services: Services, options: { clientFolder?: string }
   app.set("trust proxy", "loopback");
   app.use(requestLog(log));
   app.use(securityHeaders(config));
-  app.use(compression({ level: 4, threshold: 1024 }));
+  app.use(compression({ level: 1, threshold: 1024 }));
   app.use("/api/v1", cookieParser(), requestGuard(config), mountEndpoints(endpoints, services));
   app.use("/api", unknownAddress);
   app.use(clientFiles(options.clientFolder ?? clientFolder));

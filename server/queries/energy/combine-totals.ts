@@ -1,52 +1,85 @@
 import { waterSeconds, type EnergyTotals, type RegisterTotals } from "@shared/domain/energy/totals";
 
-const noRegister: RegisterTotals = {
+type Sums<Totals> = { -readonly [Name in keyof Totals]: Totals[Name] };
+
+const noRegister = (): Sums<RegisterTotals> => ({
   energyKwh: 0,
   volumeM3: 0,
   flowDeltaTM3K: 0,
   powerDeltaTKwhK: 0,
   deltaTKs: 0,
   runningS: 0,
-};
+});
 
 /** The totals of stretches that do not overlap, as one. Means are weighted by the time of their water. */
 export function combineTotals(parts: readonly EnergyTotals[]): EnergyTotals {
-  const sum = (of: (part: EnergyTotals) => number) =>
-    parts.reduce((total, part) => total + of(part), 0);
-  const coveredS = sum((part) => part.coveredS);
-  const waterS = sum(waterSeconds);
-  const mean = (of: (part: EnergyTotals) => number | null) =>
-    waterS === 0 ? null : sum((part) => (of(part) ?? 0) * waterSeconds(part)) / waterS;
-  const extreme = (of: (part: EnergyTotals) => number | null, better: typeof Math.min) =>
-    parts.reduce<number | null>((best, part) => {
-      const value = of(part);
-      if (value === null) return best;
-      return best === null ? value : better(best, value);
-    }, null);
-  const register = (name: "heating" | "cooling"): RegisterTotals => {
-    const keys = Object.keys(noRegister) as (keyof RegisterTotals)[];
-    return Object.fromEntries(
-      keys.map((key) => [key, sum((part) => part[name][key])]),
-    ) as unknown as RegisterTotals;
+  const heating = noRegister();
+  const cooling = noRegister();
+  const sums: Sums<EnergyTotals> = {
+    coveredS: 0,
+    volumeM3: 0,
+    suppressedKwh: 0,
+    suppressedS: 0,
+    heating,
+    cooling,
+    minPowerKw: null,
+    maxPowerKw: null,
+    minFlowM3PerHour: null,
+    maxFlowM3PerHour: null,
+    meanSupplyC: null,
+    meanReturnC: null,
+    measuredRows: 0,
+    excludedRows: 0,
+    noReadingRows: 0,
+    apportioned: false,
+    meterOnlyS: 0,
+    againstRows: 0,
   };
-  return {
-    coveredS,
-    volumeM3: sum((part) => part.volumeM3),
-    suppressedKwh: sum((part) => part.suppressedKwh),
-    suppressedS: sum((part) => part.suppressedS),
-    heating: register("heating"),
-    cooling: register("cooling"),
-    minPowerKw: extreme((part) => part.minPowerKw, Math.min),
-    maxPowerKw: extreme((part) => part.maxPowerKw, Math.max),
-    minFlowM3PerHour: extreme((part) => part.minFlowM3PerHour, Math.min),
-    maxFlowM3PerHour: extreme((part) => part.maxFlowM3PerHour, Math.max),
-    meanSupplyC: mean((part) => part.meanSupplyC),
-    meanReturnC: mean((part) => part.meanReturnC),
-    measuredRows: sum((part) => part.measuredRows),
-    excludedRows: sum((part) => part.excludedRows),
-    noReadingRows: sum((part) => part.noReadingRows),
-    apportioned: parts.some((part) => part.apportioned),
-    meterOnlyS: sum((part) => part.meterOnlyS),
-    againstRows: sum((part) => part.againstRows),
-  };
+  let waterS = 0;
+  let supplyCs = 0;
+  let returnCs = 0;
+  // One pass without a function made in it: a year of hours is 8,760 parts.
+  for (const part of parts) {
+    const partWaterS = waterSeconds(part);
+    waterS += partWaterS;
+    supplyCs += (part.meanSupplyC ?? 0) * partWaterS;
+    returnCs += (part.meanReturnC ?? 0) * partWaterS;
+    sums.coveredS += part.coveredS;
+    sums.volumeM3 += part.volumeM3;
+    sums.suppressedKwh += part.suppressedKwh;
+    sums.suppressedS += part.suppressedS;
+    addRegister(heating, part.heating);
+    addRegister(cooling, part.cooling);
+    sums.minPowerKw = lesser(sums.minPowerKw, part.minPowerKw);
+    sums.maxPowerKw = greater(sums.maxPowerKw, part.maxPowerKw);
+    sums.minFlowM3PerHour = lesser(sums.minFlowM3PerHour, part.minFlowM3PerHour);
+    sums.maxFlowM3PerHour = greater(sums.maxFlowM3PerHour, part.maxFlowM3PerHour);
+    sums.measuredRows += part.measuredRows;
+    sums.excludedRows += part.excludedRows;
+    sums.noReadingRows += part.noReadingRows;
+    sums.apportioned ||= part.apportioned;
+    sums.meterOnlyS += part.meterOnlyS;
+    sums.againstRows += part.againstRows;
+  }
+  if (waterS === 0) return sums;
+  return { ...sums, meanSupplyC: supplyCs / waterS, meanReturnC: returnCs / waterS };
+}
+
+function addRegister(sums: Sums<RegisterTotals>, part: RegisterTotals): void {
+  sums.energyKwh += part.energyKwh;
+  sums.volumeM3 += part.volumeM3;
+  sums.flowDeltaTM3K += part.flowDeltaTM3K;
+  sums.powerDeltaTKwhK += part.powerDeltaTKwhK;
+  sums.deltaTKs += part.deltaTKs;
+  sums.runningS += part.runningS;
+}
+
+function lesser(a: number | null, b: number | null): number | null {
+  if (a === null || b === null) return a ?? b;
+  return b < a ? b : a;
+}
+
+function greater(a: number | null, b: number | null): number | null {
+  if (a === null || b === null) return a ?? b;
+  return b > a ? b : a;
 }

@@ -111,7 +111,6 @@ function sumRange(columns: IntervalEnergyColumns, from: number, to: number): Ene
   const coveredS = sum(columns.coveredS, from, to);
   const meterOnlyS = sum(columns.meterOnlyS, from, to);
   const waterS = waterSeconds({ coveredS, meterOnlyS });
-  const mean = (integral: Float64Array) => quotient(sum(integral, from, to), waterS);
   let apportioned = false;
   for (let i = from; i < to; i++) apportioned ||= columns.apportioned[i] === 1;
   return {
@@ -125,8 +124,8 @@ function sumRange(columns: IntervalEnergyColumns, from: number, to: number): Ene
     maxPowerKw: extreme(columns.maxPowerKw, from, to, Math.max),
     minFlowM3PerHour: extreme(columns.minFlowM3PerHour, from, to, Math.min),
     maxFlowM3PerHour: extreme(columns.maxFlowM3PerHour, from, to, Math.max),
-    meanSupplyC: mean(columns.supplyCs),
-    meanReturnC: mean(columns.returnCs),
+    meanSupplyC: quotient(sum(columns.supplyCs, from, to), waterS),
+    meanReturnC: quotient(sum(columns.returnCs, from, to), waterS),
     measuredRows: sum(columns.measuredRows, from, to),
     excludedRows: sum(columns.excludedRows, from, to),
     noReadingRows: sum(columns.noReadingRows, from, to),
