@@ -102,8 +102,11 @@ export function ProblemsCell({ file }: { file: BatchFile }) {
 /** From the first to the last day of a file's rows, in the site's zone. */
 export function useSpanWords(zone: string): (file: BatchFile) => string {
   const format = useFormat(zone);
-  return ({ firstInstant, lastInstant }) =>
-    firstInstant && lastInstant
-      ? `${format.date(Date.parse(firstInstant), "dayMonthYear")} – ${format.date(Date.parse(lastInstant), "dayMonthYear")}`
-      : "—";
+  return ({ firstInstant, lastInstant }) => {
+    if (!firstInstant || !lastInstant) return "—";
+    const [first, last] = [firstInstant, lastInstant].map((instant) =>
+      format.date(Date.parse(instant), "dayMonthYear"),
+    );
+    return first === last ? `${first}` : `${first} – ${last}`;
+  };
 }

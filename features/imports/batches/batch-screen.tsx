@@ -53,7 +53,11 @@ function Batch({ batch }: { batch: BatchDetail }) {
       title={t("one.title", { site: batch.site.name })}
       subtitle={t("one.subtitle", { recipe: batch.recipe.name })}
       crumbs={useCrumbs()}
-      footer={batch.can.edit ? <Confirm batch={batch} actions={actions} /> : undefined}
+      footer={
+        batch.can.edit && imported < batch.files.length ? (
+          <Confirm batch={batch} actions={actions} />
+        ) : undefined
+      }
     >
       <View style={{ gap: 20 }}>
         {batch.can.edit ? <Upload actions={actions} /> : null}
