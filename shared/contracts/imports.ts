@@ -310,7 +310,8 @@ export const getImport = contract({
 });
 export const addImportFile = contract({
   operationId: "addImportFile",
-  summary: "Upload one logger file as text, .xlsx, .zip or .gz (multipart, field `file`); it is read at once",
+  summary:
+    "Upload one logger file as text, .xlsx, .zip or .gz (multipart, field `file`); it is read at once",
   tag: "Import",
   method: "post",
   path: "/imports/:importId/files",
