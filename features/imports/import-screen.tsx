@@ -12,6 +12,7 @@ import {
   Steps,
   Text,
   useBreakpoint,
+  useScrollTop,
 } from "@features/ui";
 import type { ImportDetail } from "@shared/contracts/imports";
 import { ChecksStep } from "./checks-step";
@@ -49,6 +50,8 @@ function Wizard({ detail }: { detail: ImportDetail }) {
   const { step: asked } = useLocalSearchParams<{ step?: string }>();
   const actions = useImportActions(detail.id);
   const step = currentStep(detail, asked);
+  // A step's questions stand first; it would open where the one before was scrolled to.
+  useScrollTop(step);
   const go = (to: WizardStep) => router.setParams({ step: to });
   const furthest = WIZARD_STEPS.indexOf(furthestStep(detail));
   const ended =

@@ -29,8 +29,8 @@ export function PulseQuestion({ question, recipe, onChange }: PulseQuestionProps
     <QuestionCard
       title={t("columns.pulseValue.title", { column: column ? name(column) : "" })}
       text={t("columns.pulseValue.text", {
-        min: format.number(question.minValue),
-        max: format.number(question.maxValue),
+        min: format.number(question.minValue, 0),
+        max: format.number(question.maxValue, 0),
       })}
     >
       <FieldRow>

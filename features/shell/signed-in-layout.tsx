@@ -7,14 +7,20 @@ import { NoAnswer, useSession } from "@features/api";
 import { peoplePaths } from "@features/people/people-paths";
 import { usePrefetchCharts } from "@features/charts/use-prefetch-charts";
 import { usePreferences } from "@features/i18n";
-import { ErrorState, LoadingBlocks, OfflineState, useBreakpoint, useTheme } from "@features/ui";
+import {
+  ErrorState,
+  LoadingBlocks,
+  OfflineState,
+  useBreakpoint,
+  useScrollTop,
+  useTheme,
+} from "@features/ui";
 
 import { BottomBar } from "./bottom-bar";
 import { destinationOf, navFor } from "./nav-items";
 import { OfflineBanner } from "./offline-banner";
 import { Rail } from "./rail";
 import { SkipLink } from "./skip-link";
-import { useScrollTop } from "./use-scroll-top";
 
 /** Guard and frame of every page that needs somebody signed in. */
 export function SignedInLayout() {

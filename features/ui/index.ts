@@ -95,6 +95,7 @@ export { TextLink, type TextLinkProps } from "./text-link";
 export * from "./theme";
 export { ToastProvider, useToast, type ToastMessage } from "./toast";
 export { useDraft, type Draft } from "./use-draft";
+export { useScrollTop } from "./use-scroll-top";
 export { useSpans } from "./use-spans";
 export { VisuallyHidden } from "./visually-hidden";
 export { WeekPicker, type WeekPickerProps } from "./week-picker";

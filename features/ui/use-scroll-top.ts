@@ -1,7 +1,11 @@
 import { useEffect, useRef } from "react";
 
-/** A new page starts at its top; going back or forward keeps the place the browser restores. */
-export function useScrollTop(path: string): void {
+/**
+ * A new page, or step of one, starts at its top; going back or forward keeps the place the browser
+ * restores, and so does opening it.
+ */
+export function useScrollTop(place: string): void {
+  const before = useRef(place);
   const wentBack = useRef(false);
   useEffect(() => {
     const note = () => {
@@ -11,7 +15,9 @@ export function useScrollTop(path: string): void {
     return () => window.removeEventListener("popstate", note);
   }, []);
   useEffect(() => {
+    if (place === before.current) return;
+    before.current = place;
     if (!wentBack.current) window.scrollTo(0, 0);
     wentBack.current = false;
-  }, [path]);
+  }, [place]);
 }
