@@ -265,7 +265,7 @@ describe("downloads", () => {
       .get(`/points/${pointId}/readings.csv?from=2026-06-01&to=2026-06-02`)
       .expect(200);
     const [, first, second] = answer.text.split("\r\n");
-    expect(first).toMatch(/,28\.8,6\.9,12\.8,,-197\.79\d+,measured$/);
-    expect(second).toMatch(/,,6\.9,12\.8,,,no reading$/);
+    expect(first).toMatch(/,28\.8,6\.9,12\.8,,-197\.79\d+,measured,,,$/);
+    expect(second).toMatch(/,,6\.9,12\.8,,,no reading,,,$/);
   });
 });
