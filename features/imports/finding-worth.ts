@@ -27,24 +27,27 @@ export function useChoiceWords(detail: ImportDetail) {
   const energy = (choice: ImportFindingChoice): string => {
     const change = choice.energyChangeKwh;
     if (change === null) return t("worth.unknown");
-    const parts = (["cooling", "heating"] as const).flatMap((register) => {
+    const changed = (["cooling", "heating"] as const).filter(
+      (register) => Math.abs(change[register]) >= LEAST_KWH,
+    );
+    const parts = changed.map((register) => {
       const kwh = change[register];
-      if (Math.abs(kwh) < LEAST_KWH) return [];
       const quantity = register === "cooling" ? "coolingEnergy" : "heatingEnergy";
       const size = format.withUnit(Math.abs(kwh), quantity);
-      const isOwn =
-        detail.loop.service === "changeover"
-          ? false
-          : (detail.loop.service === "hot") === (register === "heating");
+      // The loop's own energy goes without saying, unless the other kind changes beside it.
+      const goesWithoutSaying =
+        changed.length === 1 &&
+        detail.loop.service !== "changeover" &&
+        (detail.loop.service === "hot") === (register === "heating");
       const says =
         kwh > 0
           ? t("worth.more", { energy: size })
           : choice.change === "exclude"
             ? t("worth.leavesOut", { energy: size })
             : t("worth.less", { energy: size });
-      return isOwn
-        ? [says]
-        : [t("worth.named", { change: says, register: t(`worth.${register}`) })];
+      return goesWithoutSaying
+        ? says
+        : t("worth.named", { change: says, register: t(`worth.${register}`) });
     });
     return parts.length === 0 ? t("worth.none") : parts.join(" · ");
   };
