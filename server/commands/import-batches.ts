@@ -9,22 +9,20 @@ import { containerOfStored, type ReceivedFile } from "@server/imports/receive-lo
 import { ImportBatch } from "@server/models/import-batch";
 import { ImportBatchFile } from "@server/models/import-batch-file";
 import { LogImport } from "@server/models/log-import";
-import { Site } from "@server/models/site";
 import { batchPoints } from "@server/queries/batches/batch-points";
 import { installedSerials } from "@server/queries/batches/installed-serials";
 import { visibleRecipe } from "@server/queries/recipes";
 import { recordAudit } from "./record-audit";
+import { siteInUse } from "./site-in-use";
 
 export async function openBatch(
   context: Context,
   { recipeId, siteId }: { readonly recipeId: string; readonly siteId: string },
 ): Promise<ImportBatch> {
   const { scope, actor, clock, database } = context;
-  const [recipe, site] = [
-    await visibleRecipe(context, recipeId),
-    await scope.get(Site, siteId, "site"),
-  ];
+  const recipe = await visibleRecipe(context, recipeId);
   return inTransaction(database, async (transaction) => {
+    const site = await siteInUse(context, siteId, transaction);
     const row = await scope.create(
       ImportBatch,
       {

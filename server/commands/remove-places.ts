@@ -3,6 +3,7 @@ import { inTransaction } from "@server/database/transaction";
 import { Conflict } from "@server/http/errors";
 import { BoreVersion } from "@server/models/bore-version";
 import { Building } from "@server/models/building";
+import { ImportBatch } from "@server/models/import-batch";
 import { Loop } from "@server/models/loop";
 import { MeterComparison } from "@server/models/meter-comparison";
 import { MeteringPoint } from "@server/models/metering-point";
@@ -28,18 +29,25 @@ async function requireEmpty(
   );
 }
 
-/** A saved comparison is evidence too. */
-async function requireNoComparisons(
+/** Saved comparisons and batches of files are evidence too, even where no reading is stored. */
+async function requireNoRecords(
   { scope }: Acting,
   { id: siteId, name }: Site,
   transaction: Transaction,
 ): Promise<void> {
-  if ((await scope.count(MeterComparison, { where: { siteId }, transaction })) === 0) return;
-  throw new Conflict(
-    "holds-comparisons",
-    `${name} holds comparisons of meters, so it cannot be removed.`,
-    "Archive it instead: it leaves the lists, its comparisons stay, and it can be restored.",
-  );
+  const of = { where: { siteId }, transaction };
+  if ((await scope.count(MeterComparison, of)) > 0)
+    throw new Conflict(
+      "holds-comparisons",
+      `${name} holds comparisons of meters, so it cannot be removed.`,
+      "Archive it instead: it leaves the lists, its comparisons stay, and it can be restored.",
+    );
+  if ((await scope.count(ImportBatch, of)) > 0)
+    throw new Conflict(
+      "holds-batches",
+      `${name} holds files that were brought in together, so it cannot be removed.`,
+      "Archive it instead: it leaves the lists, its files stay, and it can be restored.",
+    );
 }
 
 async function removePoints(
@@ -82,7 +90,7 @@ export async function removeSite(acting: Acting, siteId: string): Promise<void> 
     const lock = transaction.LOCK.UPDATE;
     const site = await acting.scope.get(Site, siteId, "site", { transaction, lock });
     await requireEmpty(acting, "site", siteId, site.name, transaction);
-    await requireNoComparisons(acting, site, transaction);
+    await requireNoRecords(acting, site, transaction);
     const loops = await acting.scope.list(Loop, { where: { siteId }, transaction });
     await removeLoops(acting, loops, transaction);
     const { organisationId } = acting.scope;

@@ -225,3 +225,20 @@ test("recipes and sites of others open no batch", async () => {
     await stranger.post("/import-batches", body).expect(404);
   expect(await Loop.count({ where: { organisationId: stranger.organisationId } })).toBe(1);
 });
+
+test("a site that holds a batch is archived, not removed, and then takes no other", async () => {
+  const { agent, recipe } = await twoPoints();
+  const engineer = await signedIn(app, {
+    role: "engineer",
+    organisationId: agent.organisationId,
+  });
+  const fields = { name: "Bare", zone: "UTC", currency: "EUR" };
+  const site = (await engineer.post("/sites", fields).expect(201)).body;
+  const body = { recipeId: recipe.id, siteId: site.id };
+  await agent.post("/import-batches", body).expect(201);
+  const refusal = await engineer.delete(`/sites/${site.id}`).expect(409);
+  expect(refusal.body.code).toBe("holds-batches");
+  await engineer.patch(`/sites/${site.id}`, { archived: true }).expect(200);
+  const archived = await agent.post("/import-batches", body).expect(409);
+  expect(archived.body.code).toBe("site-archived");
+});
