@@ -49,7 +49,7 @@ const LEAST_FLOW_RATIO = 0.05;
  * Rows looked through at a time, so that memory stays flat and somebody who cancels is heard; more where
  * the margins would be most of the work. What is found does not depend on it.
  */
-const ROWS_AT_ONCE = 100_000;
+const ROWS_AT_ONCE = 50_000;
 /** Residuals are taken from as far as two days on either side of a change, drift from 15 readings. */
 const MARGIN_MS = 2 * DAY_MS + HOUR_MS;
 const MARGIN_READINGS = 4 * SIDE;
