@@ -1,3 +1,4 @@
+import { columnMeaning } from "@shared/contracts/log-recipe";
 import { isCounter, unitsOfMeaning } from "@shared/domain/log-files/column-units";
 import type { PositivePower } from "@shared/domain/readings/orient-power";
 import type { SeriesKind } from "@shared/domain/readings/reading-columns";
@@ -13,26 +14,7 @@ import type {
   LoggerClock,
 } from "@shared/domain/log-files/recipe";
 
-export const COLUMN_MEANINGS: readonly ColumnMeaning[] = [
-  "time",
-  "date",
-  "timeOfDay",
-  "flow",
-  "supply",
-  "return",
-  "signal",
-  "power",
-  "volumeCounter",
-  "heatingCounter",
-  "coolingCounter",
-  "velocity",
-  "pulses",
-  "status",
-  "outdoor",
-  "electricPower",
-  "pressure",
-  "skip",
-];
+export const COLUMN_MEANINGS: readonly ColumnMeaning[] = columnMeaning.options;
 
 export const isTime = (meaning: ColumnMeaning): boolean =>
   meaning === "time" || meaning === "date" || meaning === "timeOfDay";

@@ -351,23 +351,37 @@ export async function cancel(context: Importing, importId: string): Promise<LogI
   return changed;
 }
 
+/**
+ * Queues the job that takes the readings of an import out again; false where one is on its way.
+ * @throws Denied, or Conflict with `remedy` where none of its readings are stored.
+ */
+export async function queueUndo(
+  context: Importing,
+  row: LogImport,
+  remedy: string,
+  transaction: Transaction,
+): Promise<boolean> {
+  if (!can(context.actor).undoImport({ importedByAccountId: row.createdByAccountId }))
+    throw new Denied("Only who made this import, an engineer or an administrator undoes it.");
+  if (row.state !== "imported")
+    throw new Conflict(
+      "import-not-stored",
+      `This import is ${row.state}: none of its readings are stored.`,
+      remedy,
+    );
+  const { organisationId, pointId } = row;
+  const job = { organisationId, pointId, importId: row.id, kind: "undo" as const };
+  const state = ["queued", "running"];
+  const where = { organisationId, importId: row.id, kind: job.kind, state };
+  if ((await Job.count({ where, transaction })) > 0) return false;
+  await enqueueJob(context.database, transaction, job);
+  return true;
+}
+
 export async function startUndo(context: Importing, importId: string): Promise<LogImport> {
   return change(context, importId, async (row, transaction) => {
-    if (!can(context.actor).undoImport({ importedByAccountId: row.createdByAccountId }))
-      throw new Denied("Only who made this import, an engineer or an administrator undoes it.");
-    if (row.state !== "imported")
-      throw new Conflict(
-        "import-not-stored",
-        `This import is ${row.state}: none of its readings are stored.`,
-        "There is nothing to undo.",
-      );
-    const { organisationId, pointId } = row;
-    const job = { organisationId, pointId, importId: row.id, kind: "undo" as const };
-    const state = ["queued", "running"];
-    const where = { organisationId, importId: row.id, kind: job.kind, state };
-    if ((await Job.count({ where, transaction })) > 0) return;
+    if (!(await queueUndo(context, row, "There is nothing to undo.", transaction))) return;
     await row.update({ undoneByName: context.actor.accountName }, { transaction });
-    await enqueueJob(context.database, transaction, job);
     await audit(context, "import-undone", row, {}, transaction);
   });
 }
