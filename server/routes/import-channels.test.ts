@@ -4,48 +4,17 @@ import { unpackNumbers } from "@shared/domain/readings/packed-numbers";
 import { BoreVersion } from "@server/models/bore-version";
 import { MeteringPoint } from "@server/models/metering-point";
 import { loadSegments, loadSources } from "@server/readings/load-segments";
-import { signedIn, type Agent } from "@server/testing/factories";
+import { signedIn } from "@server/testing/factories";
+import { importSteps } from "@server/testing/import-steps";
 import { pointToMeter } from "@server/testing/place-factories";
 import { runJobs } from "@server/testing/run-jobs";
 import { testApp } from "@server/testing/test-app";
 
 const app = testApp();
+const { read, uploaded, answered, stored } = importSteps(app);
 
 const startMs = Date.UTC(2025, 4, 18);
 const quarterMs = 900_000;
-
-async function read(agent: Agent, importId: string): Promise<ImportDetail> {
-  return (await agent.get(`/imports/${importId}`).expect(200)).body as ImportDetail;
-}
-
-async function uploaded(agent: Agent, pointId: string, text: string): Promise<ImportDetail> {
-  const opened = await agent.post(`/points/${pointId}/imports`).expect(201);
-  const { id } = opened.body as ImportDetail;
-  await agent.post(`/imports/${id}/files`).attach("file", Buffer.from(text), "log.csv").expect(201);
-  await runJobs(app);
-  return read(agent, id);
-}
-
-async function answered(
-  agent: Agent,
-  detail: ImportDetail,
-  change: (recipe: FileRecipe) => FileRecipe = (recipe) => recipe,
-): Promise<ImportDetail> {
-  const [file] = detail.files;
-  if (!file?.recipe) throw new Error("the file has no recipe");
-  await agent
-    .put(`/imports/${detail.id}/files/${file.id}/recipe`)
-    .send(change(file.recipe))
-    .expect(200);
-  await runJobs(app);
-  return read(agent, detail.id);
-}
-
-async function stored(agent: Agent, { id }: ImportDetail): Promise<ImportDetail> {
-  await agent.post(`/imports/${id}/confirm`).expect(202);
-  await runJobs(app);
-  return read(agent, id);
-}
 
 const codes = (detail: ImportDetail) => detail.files[0]?.questions.map(({ code }) => code);
 const stepOf = (detail: ImportDetail, code: string) =>

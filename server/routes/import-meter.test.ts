@@ -2,14 +2,15 @@ import { readFileSync } from "node:fs";
 import path from "node:path";
 import type { EnergyAnswer, PointSummary } from "@shared/contracts/energy";
 import type { ImportDetail } from "@shared/contracts/imports";
-import type { FileRecipe } from "@shared/domain/log-files/recipe";
 import { loadIntervals } from "@server/readings/interval-rows";
 import { signedIn, type Agent } from "@server/testing/factories";
+import { importSteps } from "@server/testing/import-steps";
 import { pointToMeter } from "@server/testing/place-factories";
 import { runJobs } from "@server/testing/run-jobs";
 import { testApp } from "@server/testing/test-app";
 
 const app = testApp();
+const { uploaded, answered, stored } = importSteps(app);
 // The files are of spring 2026: none of their rows may lie ahead of the day they come in.
 beforeAll(() => app.clock.advance({ days: 60 }));
 
@@ -20,42 +21,6 @@ const expected = JSON.parse(readFileSync(path.join(fixtures, "expected.json"), "
 > & { naive_error_kWh: number };
 
 const quarter = 900_000;
-
-async function read(agent: Agent, importId: string): Promise<ImportDetail> {
-  return (await agent.get(`/imports/${importId}`).expect(200)).body as ImportDetail;
-}
-
-async function uploaded(agent: Agent, pointId: string, text: string): Promise<ImportDetail> {
-  const opened = await agent.post(`/points/${pointId}/imports`).expect(201);
-  const { id } = opened.body as ImportDetail;
-  await agent
-    .post(`/imports/${id}/files`)
-    .attach("file", Buffer.from(text), "meter.csv")
-    .expect(201);
-  await runJobs(app);
-  return read(agent, id);
-}
-
-async function answered(
-  agent: Agent,
-  detail: ImportDetail,
-  change: (recipe: FileRecipe) => FileRecipe,
-): Promise<ImportDetail> {
-  const [file] = detail.files;
-  if (!file?.recipe) throw new Error("the file has no recipe");
-  await agent
-    .put(`/imports/${detail.id}/files/${file.id}/recipe`)
-    .send(change(file.recipe))
-    .expect(200);
-  await runJobs(app);
-  return read(agent, detail.id);
-}
-
-async function stored(agent: Agent, { id }: ImportDetail): Promise<ImportDetail> {
-  await agent.post(`/imports/${id}/confirm`).expect(202);
-  await runJobs(app);
-  return read(agent, id);
-}
 
 const codes = (detail: ImportDetail) => detail.files[0]?.questions.map(({ code }) => code);
 
